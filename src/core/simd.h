@@ -1,0 +1,11 @@
+/* simd.h - the one macro that asks for several builds of a hot loop, chosen at start by the processor.
+ * The loops stay plain C; contraction is off everywhere, so every build gives the same digits.
+ * Only gcc without ThreadSanitizer links such functions reliably; elsewhere the macro means nothing. ANT_NO_SIMD turns it
+ * off, for the test that the digits do not change. */
+#pragma once
+
+#if defined(__GNUC__) && !defined(__clang__) && defined(__x86_64__) && !defined(__SANITIZE_THREAD__) && !defined(ANT_NO_SIMD)
+#define ANT_SIMD __attribute__ ((target_clones ("arch=x86-64-v4", "arch=x86-64-v3", "default")))
+#else
+#define ANT_SIMD
+#endif

@@ -1,0 +1,19 @@
+/* stages.h - long work as a list of stages, each cut into slices that may run in any order and on any thread.
+ *
+ * Whoever drives it (jobs/) calls, for stage = 0 .. n_stages-1: count (work, stage); then run_slice for each
+ * i < count, on any threads; then finish (work, stage) alone. Results land in slot i and are merged in index order by
+ * finish, so the digits do not depend on the number of threads. Numeric rooms provide such tables and know no thread.
+ * A stage may find at count() time that it has nothing to do and return 0. */
+#pragma once
+
+#include <stddef.h>
+#include "core/status.h"
+
+typedef struct
+{
+  size_t n_stages;
+  const char *(*title) (void *work, size_t stage); /* untranslated, static: "fitting the noise" */
+  size_t (*count) (void *work, size_t stage);
+  AntStatus (*run_slice) (void *work, size_t stage, size_t slice);
+  AntStatus (*finish) (void *work, size_t stage);
+} AntStages;

@@ -1,0 +1,55 @@
+/* template-bank.h - the shapes looked for: limb-darkened crossings of all durations, smeared by the exposure.
+ *
+ * A family shares its edge and its step in epoch; its members differ in duration (and, at coarse cadence, in sub-sample
+ * phase). All members of a family that begin at one place are evaluated together, ANT_LANES at a time. Impact 0.3. */
+#pragma once
+
+#include <stddef.h>
+#include "core/status.h"
+#include "core/transit-curve.h"
+#include "noise/whitener.h"
+
+typedef struct
+{
+  double duration_min_h, duration_max_h, duration_step_h; /* 0.5, 13, 0.5 */
+  double edge_h;             /* wide edge, 20 min; members with a shorter half duration use 0.4 T14 */
+  double sharp_edge_h;       /* sharp members, 5 min; 0 leaves them out */
+  double exposure_d;         /* boxcar each sample averages over; <= 0 = the cadence */
+  AntLimbDarkening limb_darkening;
+} AntBankOptions;
+#define ANT_BANK_OPTIONS_INIT { .duration_min_h = 0.5, .duration_max_h = 13, .duration_step_h = 0.5, .edge_h = 1.0 / 3, \
+                                .sharp_edge_h = 1.0 / 12, .exposure_d = 0, .limb_darkening = ANT_LIMB_DARKENING_SUN }
+
+typedef struct
+{
+  double duration_d, edge_d;
+  double centre; /* middle of the shape, in places after the first sample of the window (fractional) */
+  size_t length; /* samples from the first of the window to its last nonzero */
+} AntMember;
+
+typedef struct
+{
+  size_t stride;    /* places between trial starts */
+  size_t n_members; /* multiple of ANT_LANES; unused lanes have length 0 */
+  AntMember *member;
+  double **shape;   /* [n_members/ANT_LANES] blocks, each block_length[b]*ANT_LANES interleaved doubles */
+  size_t *block_length;
+} AntFamily;
+
+typedef struct
+{
+  size_t n_families;
+  AntFamily family[2];
+  double step_d;
+} AntTemplateBank;
+
+/* Shapes are negative (a dip), greatest depth 1 before smearing. Members shorter than the cadence resolves are left out;
+ * at a cadence above 30 min the edge is the cadence and each duration comes in four phases. */
+AntTemplateBank *ant_template_bank_new (const AntBankOptions *options, double step_d, AntStatus *status);
+void ant_template_bank_free (AntTemplateBank *bank);
+
+/* One shape at continuous parameters: the loss (positive, greatest 1 before smearing) of a crossing of impact `impact`, T14 duration_d,
+ * ingress edge_d, centred at place `centre`, at integer places, averaged over the exposure. Writes shape[0..] for places
+ * *first .. *first + return-1; at most `room` samples (return 0 if more would be needed). */
+size_t ant_crossing_shape (double duration_d, double edge_d, double impact, AntLimbDarkening ld, double centre,
+                           double step_d, double exposure_d, ptrdiff_t *first, size_t room, double *shape);
