@@ -30,8 +30,8 @@ double ant_whitener_log_det (const AntWhitener *whitener);    /* ln det C */
 
 /* innovation[i] = (L^-1 v)[i] for values given on the grid [n] (places not observed are not read); [observed]. */
 void ant_whitener_innovations (const AntWhitener *whitener, const float *value, double *innovation);
-/* z = C^-1 v on the grid: z [n], 0 at places not observed. z may not overlap value. */
-void ant_whitener_solve (const AntWhitener *whitener, const float *value, double *z);
+/* z = C^-1 v on the grid: z [n], 0 at places not observed. */
+AntStatus ant_whitener_solve (const AntWhitener *whitener, const float *value, double *z);
 
 /* Shapes are limited in time: s[j] at places first+j, j < n_shape, else 0. Parts outside the grid are ignored. */
 /* s' C^-1 s, exact, in (n_shape + a checkpoint interval) J operations. */
