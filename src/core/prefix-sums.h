@@ -6,5 +6,5 @@
 /* sum [n+1]: sum[0] = 0, sum[i+1] = sum[i] + value[i] (0 where NaN). */
 void ant_prefix_sums (size_t n, const float *value, double *sum);
 void ant_prefix_sums_double (size_t n, const double *value, double *sum);
-/* The sum of value[first] .. value[last-1]; indices are clipped to 0..n. */
+/* The sum of value[first] .. value[last-1]; indices are clipped to 0..n; 0 if last <= first. */
 double ant_window_sum (size_t n, const double *sum, ptrdiff_t first, ptrdiff_t last);

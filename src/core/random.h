@@ -1,4 +1,5 @@
-/* random.h - reproducible random numbers: the same seed gives the same digits on every machine.
+/* random.h - reproducible random numbers: the same seed gives the same integers and uniforms on every machine, and the
+ * same normals up to the last digit of the C library's logarithm.
  * xoshiro256** (Blackman & Vigna 2018), seeded by splitmix64; normals by the polar method (Marsaglia & Bray 1964).
  * Each generator is its own state: one per thread or slice, never shared. */
 #pragma once
