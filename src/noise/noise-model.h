@@ -46,11 +46,17 @@ typedef struct
   int harmonics;
 } AntNoiseLine;
 
-/* The default bank for a cadence (method page "noise"): slow oscillator about 20 d, one about 2 d, one about 3 h, two
- * exponentials about 8 h and 25 min, white; below a 5-min cadence also granulation (about 4.5 min time scale) and the
- * 3.1 mHz oscillations. Parts that the cadence cannot resolve are left out. Starting values are scaled to `rms_ppm`,
- * the scatter of the record, and `white_ppm`, the scatter of its neighbouring differences.
- * lines [n_lines] are added with quality 30, their periods held. */
+/* ANT_BAD_ARGUMENT if a number of the model has no meaning: a quality of 1/2 or less, a time that is not positive, a
+ * negative or infinite amplitude, too many parts. Spectra and covariances of such a part are NaN. */
+AntStatus ant_noise_model_check (const AntNoiseModel *model);
+
+/* The default bank for a cadence (method page "noise"): slow oscillator with a period about 20 d, one about 2 d, one
+ * with a time scale (period / 2 pi) about 3 h, two exponentials about 8 h and 25 min, white; below a 5-min cadence also
+ * granulation (about 4.5 min time scale) and the 3.1 mHz oscillations. Parts that the cadence cannot resolve are left
+ * out, save the three slowest, which are stretched to a few cadences. Starting values are scaled to `rms_ppm`, the
+ * scatter of the record, and `white_ppm`, the scatter of its neighbouring differences (over sqrt2).
+ * lines [n_lines] are added with quality 30, their periods held; harmonics beyond the Nyquist frequency or
+ * ANT_MAX_PARTS are dropped. */
 void ant_noise_model_default (AntNoiseModel *model, double step_d, double rms_ppm, double white_ppm, int has_errors,
                               size_t n_lines, const AntNoiseLine *lines);
 
@@ -78,5 +84,5 @@ void ant_noise_model_set (AntNoiseModel *model, const double *theta_ln);
 double ant_noise_model_penalty (const AntNoiseModel *model);
 /* Centre every prior on the present value with width `width_ln` (free parameters only). */
 void ant_noise_model_centre_priors (AntNoiseModel *model, double width_ln);
-/* A name for free parameter i: writes like "hours.rms" into text[size]. */
+/* A name for free parameter i: writes like "hours.rms", "days-2.time", "white" or "error-scale" into text[size]. */
 void ant_noise_model_parameter_name (const AntNoiseModel *model, size_t i, size_t size, char *text);
