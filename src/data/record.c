@@ -1,0 +1,106 @@
+/* record.c - an irradiance record's life, what was said of it, and the names of its flags. */
+#include "data/record.h"
+#include <glib/gi18n.h>
+#include "core/units.h"
+
+static const struct
+{
+  const char *name;
+  const char *description;
+} flag_table[ANT_N_FLAGS] = {
+  { "fill", N_("A fill value, an empty cell or not a number.") },
+  { "quality", N_("The record's own quality column says bad.") },
+  { "duplicate", N_("A second row at the time of an earlier one.") },
+  { "hand", N_("Masked by the analyst.") },
+  { "excluded", N_("Inside an excluded span, or outside the limits of the scan.") },
+  { "dark", N_("Dark or covered: far from the running 5-day median, as in an eclipse or at night.") },
+  { "spike", N_("An isolated outlier: left out of the noise fit, still searched.") },
+  { "no-time", N_("Its time cannot be read.") },
+  { "off-grid", N_("Shares its place on the grid with another row and could not be averaged with it.") },
+};
+
+const char *
+ant_flag_name (unsigned bit_index)
+{
+  g_return_val_if_fail (bit_index < ANT_N_FLAGS, "");
+  return flag_table[bit_index].name;
+}
+
+const char *
+ant_flag_description (unsigned bit_index)
+{
+  g_return_val_if_fail (bit_index < ANT_N_FLAGS, "");
+  return _(flag_table[bit_index].description);
+}
+
+AntRecord *
+ant_record_new (void)
+{
+  AntRecord *record = g_new0 (AntRecord, 1);
+  record->said = g_ptr_array_new_with_free_func (g_free);
+  record->dark_spans = g_array_new (FALSE, FALSE, sizeof (AntSpan));
+  record->gaps = g_array_new (FALSE, FALSE, sizeof (AntSpan));
+  record->time.own_unit_d = 1.0;
+  record->ref_count = 1;
+  return record;
+}
+
+AntRecord *
+ant_record_ref (AntRecord *record)
+{
+  g_atomic_int_inc (&record->ref_count);
+  return record;
+}
+
+/* The series is a view that promises not to write; here, at the end of its owner, that promise ends. */
+static void
+free_view (const void *view)
+{
+  g_free ((gpointer) (guintptr) view);
+}
+
+void
+ant_record_unref (AntRecord *record)
+{
+  if (!record || !g_atomic_int_dec_and_test (&record->ref_count))
+    return;
+  g_free (record->time_d);
+  g_free (record->value);
+  g_free (record->error);
+  g_free (record->quality);
+  g_free (record->line);
+  g_free (record->flags);
+  g_free (record->path);
+  g_free (record->sha256);
+  g_free (record->format);
+  g_free (record->time_name);
+  g_free (record->value_name);
+  g_free (record->error_name);
+  g_free (record->quality_name);
+  g_free (record->value_unit);
+  ant_time_reference_clear (&record->time);
+  g_ptr_array_unref (record->said);
+  free_view (record->series.value_ppm);
+  free_view (record->series.error_ppm);
+  free_view (record->series.bin_count);
+  free_view (record->series.spike);
+  g_free (record->place);
+  g_array_unref (record->dark_spans);
+  g_array_unref (record->gaps);
+  g_free (record);
+}
+
+void
+ant_record_say (AntRecord *record, const char *format, ...)
+{
+  va_list arguments;
+  va_start (arguments, format);
+  g_ptr_array_add (record->said, g_strdup_vprintf (format, arguments));
+  va_end (arguments);
+}
+
+double
+ant_record_value (const AntRecord *record, double ppm)
+{
+  return record->median * (1.0 + ppm * ANT_PPM);
+}
