@@ -18,7 +18,7 @@ value_at (Search *search, const double *x)
 {
   double value = search->f (search->data, x);
   search->evaluations++;
-  return isfinite (value) ? value : INFINITY;
+  return isfinite (value) ? value : HUGE_VAL;
 }
 
 static void

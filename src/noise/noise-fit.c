@@ -20,7 +20,7 @@ minus_log_posterior (void *data, const double *theta)
   double log_likelihood;
   ant_noise_model_set (&problem->model, theta);
   if (ant_noise_log_likelihood (&problem->model, problem->series, &log_likelihood))
-    return INFINITY;
+    return HUGE_VAL;
   return ant_noise_model_penalty (&problem->model) - log_likelihood;
 }
 
