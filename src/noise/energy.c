@@ -5,41 +5,36 @@
 #include "noise/whitener-private.h"
 #include "core/simd.h"
 
-#define L ANT_LANES
-
 typedef struct
 {
-  double memory[ANT_MAX_TERMS][L];
-  double energy[L], moment[L], weight[L];
+  AntEight memory[ANT_MAX_TERMS];
+  AntEight innovation; /* of the last sample, not yet in memory */
+  AntEight energy, moment, weight;
 } Lanes;
 
-/* Innovations of all lanes at sample i, given what they left in memory; adds them to the energy and to the memory. */
+/* Bring the memory from sample i-1 to sample i and add up what it predicts there. One pass over the memory, and four sums
+ * so that one addition need not wait for another. */
 static inline __attribute__ ((always_inline)) void
-lanes_sample (const AntWhitener *whitener, size_t width, size_t i, const double *shape, Lanes *lanes)
+lanes_predict (const AntWhitener *whitener, size_t width, size_t i, Lanes *lanes, AntEight *predicted)
 {
-  const double *u = whitener->u + i * width, *w = whitener->w + i * width;
-  double part[4][L] = { 0 }, innovation[L];
-  for (size_t j = 0; j < width; j += 4) /* four sums, so that one addition need not wait for another */
+  double scratch[ANT_MAX_TERMS];
+  const double *u = whitener->u + i * width, *w = whitener->w + (i - 1) * width;
+  const double *decay = ant_decay_before (whitener, i, scratch);
+  AntEight part[4] = { { 0 } };
+  for (size_t j = 0; j < width; j += 4)
     for (size_t q = 0; q < 4; q++)
-      for (size_t l = 0; l < L; l++)
-        part[q][l] += u[j + q] * lanes->memory[j + q][l];
-  double scale = 1.0 / whitener->d[i];
-  for (size_t l = 0; l < L; l++)
-    {
-      innovation[l] = (shape ? shape[l] : 0) - ((part[0][l] + part[1][l]) + (part[2][l] + part[3][l]));
-      lanes->energy[l] += innovation[l] * innovation[l] * scale;
-    }
-  for (size_t j = 0; j < width; j++)
-    for (size_t l = 0; l < L; l++)
-      lanes->memory[j][l] += w[j] * innovation[l];
+      {
+        lanes->memory[j + q] = decay[j + q] * (lanes->memory[j + q] + w[j + q] * lanes->innovation);
+        part[q] += u[j + q] * lanes->memory[j + q];
+      }
+  *predicted = (part[0] + part[1]) + (part[2] + part[3]);
 }
 
 static inline __attribute__ ((always_inline)) void
-lanes_decay (size_t width, const double *decay, Lanes *lanes)
+lanes_learn (const AntWhitener *whitener, size_t i, const AntEight *shape, const AntEight *predicted, Lanes *lanes)
 {
-  for (size_t j = 0; j < width; j++)
-    for (size_t l = 0; l < L; l++)
-      lanes->memory[j][l] *= decay[j];
+  lanes->innovation = *shape - *predicted;
+  lanes->energy += lanes->innovation * lanes->innovation * (1.0 / whitener->d[i]);
 }
 
 /* The energy that the memory entering checkpoint sample i still leaves in all later samples. */
@@ -49,12 +44,10 @@ lanes_tail (const AntWhitener *whitener, size_t width, size_t i, Lanes *lanes)
   const double *o = whitener->tail + i / whitener->every * width * width;
   for (size_t j = 0; j < width; j++)
     {
-      double sum[L] = { 0 };
+      AntEight sum = { 0 };
       for (size_t k = 0; k < width; k++)
-        for (size_t l = 0; l < L; l++)
-          sum[l] += o[j * width + k] * lanes->memory[k][l];
-      for (size_t l = 0; l < L; l++)
-        lanes->energy[l] += sum[l] * lanes->memory[j][l];
+        sum += o[j * width + k] * lanes->memory[k];
+      lanes->energy += sum * lanes->memory[j];
     }
 }
 
@@ -62,35 +55,33 @@ static inline __attribute__ ((always_inline)) void
 lanes_run (const AntWhitener *whitener, size_t width, const double *z, ptrdiff_t first, size_t n_shape,
            const double *shape, Lanes *lanes)
 {
-  double scratch[ANT_MAX_TERMS];
+  static const AntEight nothing;
   size_t from = first < 0 ? 0 : (size_t) first, m = whitener->observed;
   ptrdiff_t end = first + (ptrdiff_t) n_shape;
   size_t start = from < whitener->n ? whitener->next[from] : m, i;
   memset (lanes, 0, sizeof *lanes);
   for (i = start; i < m && (ptrdiff_t) whitener->place[i] < end; i++)
     {
-      const double *s = shape + ((ptrdiff_t) whitener->place[i] - first) * L;
+      AntEight s, predicted = nothing;
       if (i > start)
-        lanes_decay (width, ant_decay_before (whitener, i, scratch), lanes);
-      lanes_sample (whitener, width, i, s, lanes);
-      double value = z ? z[whitener->place[i]] : 0;
-      for (size_t l = 0; l < L; l++)
-        {
-          lanes->moment[l] += s[l] * value;
-          lanes->weight[l] += fabs (s[l]);
-        }
+        lanes_predict (whitener, width, i, lanes, &predicted);
+      memcpy (&s, shape + ((ptrdiff_t) whitener->place[i] - first) * ANT_LANES, sizeof s);
+      lanes_learn (whitener, i, &s, &predicted, lanes);
+      lanes->moment += s * (z ? z[whitener->place[i]] : 0);
+      lanes->weight += s;
     }
   if (i == start)
     return; /* nothing of the window is observed */
   for (; i < m; i++)
     {
-      lanes_decay (width, ant_decay_before (whitener, i, scratch), lanes);
+      AntEight predicted;
+      lanes_predict (whitener, width, i, lanes, &predicted);
       if (i % whitener->every == 0)
         {
           lanes_tail (whitener, width, i, lanes);
           return;
         }
-      lanes_sample (whitener, width, i, NULL, lanes);
+      lanes_learn (whitener, i, &nothing, &predicted, lanes);
     }
 }
 
@@ -101,12 +92,13 @@ ant_whitener_energies (const AntWhitener *whitener, const double *z, ptrdiff_t f
   Lanes lanes;
   switch (whitener->terms.terms)
     {
+    case 4: lanes_run (whitener, 4, z, first, n_shape, shape, &lanes); break;
     case 8: lanes_run (whitener, 8, z, first, n_shape, shape, &lanes); break;
     case 12: lanes_run (whitener, 12, z, first, n_shape, shape, &lanes); break;
     case 16: lanes_run (whitener, 16, z, first, n_shape, shape, &lanes); break;
     default: lanes_run (whitener, whitener->terms.terms, z, first, n_shape, shape, &lanes); break;
     }
-  memcpy (energy, lanes.energy, sizeof lanes.energy);
-  memcpy (moment, lanes.moment, sizeof lanes.moment);
-  memcpy (weight, lanes.weight, sizeof lanes.weight);
+  memcpy (energy, &lanes.energy, sizeof lanes.energy);
+  memcpy (moment, &lanes.moment, sizeof lanes.moment);
+  memcpy (weight, &lanes.weight, sizeof lanes.weight);
 }

@@ -28,11 +28,12 @@ tally_add (Tally *tally, double innovation, double d)
 }
 
 static inline __attribute__ ((always_inline)) AntStatus
-run (const AntTerms *terms, size_t width, const AntNoiseModel *model, const AntSeries *series, Tally *tally)
+run (const AntTerms *terms, size_t fours, const AntNoiseModel *model, const AntSeries *series, Tally *tally)
 {
   AntFactorState state;
   AntWalk walk;
-  double memory[ANT_MAX_TERMS] = { 0 }, innovation = 0;
+  AntFour memory[ANT_MAX_TERMS / 4] = { { 0 } };
+  double innovation = 0;
   memset (&state, 0, sizeof state);
   for (size_t i = 0; i < series->n; i++)
     {
@@ -43,18 +44,19 @@ run (const AntTerms *terms, size_t width, const AntNoiseModel *model, const AntS
         ant_walk_start (&walk, terms, i);
       else
         ant_walk_to (&walk, terms, i);
-      ant_walk_vectors (&walk, terms, state.u, state.v);
-      for (size_t j = 0; j < width; j++)
-        memory[j] = walk.decay[j] * (memory[j] + state.w[j] * innovation);
+      ant_walk_vectors (&walk, terms, (double *) state.u, (double *) state.v);
+      memcpy (state.decay, walk.decay, sizeof state.decay);
+      for (size_t k = 0; k < fours; k++)
+        memory[k] = state.decay[k] * (memory[k] + state.w[k] * innovation);
       double r = ant_noise_model_variance (model, series->error_ppm ? (double) series->error_ppm[i] : 0,
                                            series->bin_count ? (double) series->bin_count[i] : 1);
-      ant_factor_step (&state, width, walk.decay, terms->total + r);
+      ant_factor_step (&state, fours, terms->total + r);
       if (!(state.d > 0))
         return ANT_NOT_POSITIVE;
-      double predicted = 0;
-      for (size_t j = 0; j < width; j++)
-        predicted += state.u[j] * memory[j];
-      innovation = y - predicted;
+      AntFour predicted = { 0 };
+      for (size_t k = 0; k < fours; k++)
+        predicted += state.u[k] * memory[k];
+      innovation = y - ((predicted[0] + predicted[1]) + (predicted[2] + predicted[3]));
       tally_add (tally, innovation, state.d);
     }
   return tally->n ? ANT_OK : ANT_NO_DATA;
@@ -64,14 +66,14 @@ run (const AntTerms *terms, size_t width, const AntNoiseModel *model, const AntS
 ANT_SIMD static AntStatus
 run_any_width (const AntTerms *terms, const AntNoiseModel *model, const AntSeries *series, Tally *tally)
 {
-  switch (terms->terms)
+  switch (terms->terms / 4)
     {
+    case 1: return run (terms, 1, model, series, tally);
+    case 2: return run (terms, 2, model, series, tally);
+    case 3: return run (terms, 3, model, series, tally);
     case 4: return run (terms, 4, model, series, tally);
-    case 8: return run (terms, 8, model, series, tally);
-    case 12: return run (terms, 12, model, series, tally);
-    case 16: return run (terms, 16, model, series, tally);
-    case 20: return run (terms, 20, model, series, tally);
-    default: return run (terms, terms->terms, model, series, tally);
+    case 5: return run (terms, 5, model, series, tally);
+    default: return run (terms, terms->terms / 4, model, series, tally);
     }
 }
 

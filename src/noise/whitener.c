@@ -65,10 +65,11 @@ factor (AntWhitener *whitener, size_t width, const AntNoiseModel *model, const A
       size_t place = whitener->place[i];
       if (i)
         ant_walk_to (&walk, terms, place);
-      ant_walk_vectors (&walk, terms, state.u, state.v);
+      ant_walk_vectors (&walk, terms, (double *) state.u, (double *) state.v);
+      memcpy (state.decay, walk.decay, sizeof state.decay);
       double r = ant_noise_model_variance (model, series->error_ppm ? (double) series->error_ppm[place] : 0,
                                            series->bin_count ? (double) series->bin_count[place] : 1);
-      ant_factor_step (&state, width, walk.decay, terms->total + r);
+      ant_factor_step (&state, width / 4, terms->total + r);
       if (!(state.d > 0) || !isfinite (state.d))
         return ANT_NOT_POSITIVE;
       whitener->d[i] = state.d;
@@ -84,30 +85,32 @@ factor (AntWhitener *whitener, size_t width, const AntNoiseModel *model, const A
 static inline __attribute__ ((always_inline)) void
 tails (AntWhitener *whitener, size_t width)
 {
-  static const double nothing[ANT_MAX_TERMS];
-  double o[ANT_MAX_TERMS * ANT_MAX_TERMS] = { 0 }, scratch[ANT_MAX_TERMS], q[ANT_MAX_TERMS];
-  size_t m = whitener->observed;
+  AntFour o[ANT_MAX_TERMS * ANT_MAX_TERMS / 4] = { { 0 } }, u[ANT_MAX_TERMS / 4], q[ANT_MAX_TERMS / 4];
+  double decay[ANT_MAX_TERMS] __attribute__ ((aligned (32))) = { 0 };
+  size_t m = whitener->observed, fours = width / 4, bytes = width * width * sizeof (double);
   if (m % whitener->every == 0)
-    memset (whitener->tail + m / whitener->every * width * width, 0, width * width * sizeof (double));
+    memset (whitener->tail + m / whitener->every * width * width, 0, bytes);
   for (size_t i = m; i-- > 0;)
     {
-      const double *decay = i + 1 < m ? ant_decay_before (whitener, i + 1, scratch) : nothing;
-      const double *u = whitener->u + i * width, *w = whitener->w + i * width;
+      if (i + 1 < m)
+        ant_terms_decay (&whitener->terms, whitener->place[i + 1] - whitener->place[i], decay);
+      const double *uj = whitener->u + i * width, *w = whitener->w + i * width, *qj = (const double *) q;
       double own = 1.0 / whitener->d[i];
+      memcpy (u, uj, width * sizeof (double));
       memset (q, 0, sizeof q);
       for (size_t j = 0; j < width; j++)
-        for (size_t k = 0; k < width; k++)
+        for (size_t k = 0; k < fours; k++)
           {
-            o[j * width + k] = decay[j] * o[j * width + k] * decay[k];
-            q[k] += o[j * width + k] * w[j];
+            o[j * fours + k] = decay[j] * o[j * fours + k] * ((const AntFour *) decay)[k];
+            q[k] += o[j * fours + k] * w[j];
           }
       for (size_t k = 0; k < width; k++)
-        own += q[k] * w[k];
+        own += qj[k] * w[k];
       for (size_t j = 0; j < width; j++)
-        for (size_t k = 0; k < width; k++)
-          o[j * width + k] += (own * u[j] - q[j]) * u[k] - u[j] * q[k];
+        for (size_t k = 0; k < fours; k++)
+          o[j * fours + k] += (own * uj[j] - qj[j]) * u[k] - uj[j] * q[k];
       if (i % whitener->every == 0)
-        memcpy (whitener->tail + i / whitener->every * width * width, o, width * width * sizeof (double));
+        memcpy (whitener->tail + i / whitener->every * width * width, o, bytes);
     }
 }
 

@@ -41,7 +41,7 @@ double ant_whitener_energy (const AntWhitener *whitener, ptrdiff_t first, size_t
 /* The same for ANT_LANES shapes that begin at one place, stored interleaved shape[j*ANT_LANES + lane], j < n_shape;
  * a lane that is shorter is padded with zeros (length[lane] <= n_shape says where it ends).
  * energy [ANT_LANES] out: s'C^-1 s. moment [ANT_LANES] out: s'z with z from ant_whitener_solve.
- * weight [ANT_LANES] out: sum over observed places of |s|, coverage's numerator. */
+ * weight [ANT_LANES] out: the sum of s over observed places, for the coverage. */
 void ant_whitener_energies (const AntWhitener *whitener, const double *z, ptrdiff_t first, size_t n_shape,
                             const double *shape, double energy[ANT_LANES], double moment[ANT_LANES],
                             double weight[ANT_LANES]);
