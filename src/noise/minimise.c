@@ -130,8 +130,8 @@ rescale (Search *search, const double *step, const double *change)
 }
 
 AntStatus
-ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step, double h, size_t max_steps,
-              double settled, AntFitReport *report)
+ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step, double h, const AntFitOptions *options,
+              AntFitReport *report)
 {
   Search search = { .n = n, .f = f, .data = data, .h = h };
   double g[ANT_MAX_FREE], g_new[ANT_MAX_FREE], p[ANT_MAX_FREE], moved[ANT_MAX_FREE], f_new = 0;
@@ -141,11 +141,17 @@ ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step
   if (!isfinite (fx))
     return ANT_BAD_ARGUMENT;
   AntStatus status = ANT_NOT_CONVERGED;
-  int fresh = 1, small = 0;
+  int fresh = 1, small = options->warm ? 1 : 0;
   size_t steps = 0;
   gradient (&search, x, fx, g);
-  reset (&search, g, first_step);
-  for (; steps < max_steps; steps++)
+  if (options->curvature && options->warm)
+    {
+      memcpy (search.inverse, options->curvature, n * n * sizeof *search.inverse);
+      fresh = 0;
+    }
+  else
+    reset (&search, g, first_step);
+  for (; steps < options->max_steps; steps++)
     {
       double slope = direction (&search, g, p);
       double length = slope < 0 ? backtrack (&search, x, p, fx, slope, moved, &f_new) : 0;
@@ -173,7 +179,7 @@ ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step
         rescale (&search, p, g_new);
       fresh = 0;
       update (&search, p, g_new);
-      small = fx - f_new < settled ? small + 1 : 0;
+      small = fx - f_new < options->settled_lnl ? small + 1 : 0;
       fx = f_new;
       if (small >= 2)
         {
@@ -181,6 +187,8 @@ ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step
           break;
         }
     }
+  if (options->curvature)
+    memcpy (options->curvature, search.inverse, n * n * sizeof *search.inverse);
   if (report)
     *report = (AntFitReport){ .log_posterior = -fx, .steps = steps, .evaluations = search.evaluations };
   return status;

@@ -34,7 +34,7 @@ ant_noise_fit (AntNoiseModel *model, const AntSeries *series, const AntFitOption
   if (ant_series_observed (series, 1) < 10)
     return ANT_NO_DATA;
   AntStatus status = ant_minimise (n, theta, minus_log_posterior, &problem, FIRST_STEP_LN, DIFFERENCE_LN,
-                                   options->max_steps, options->settled_lnl, &own);
+                                   options, &own);
   if (status != ANT_OK && status != ANT_NOT_CONVERGED)
     return status;
   ant_noise_model_set (model, theta);

@@ -13,6 +13,8 @@ typedef struct
 {
   size_t max_steps;       /* BFGS steps at most */
   double settled_lnl;     /* stop when a step gains less ln posterior than this */
+  double *curvature;      /* [ANT_MAX_FREE^2] inverse Hessian, or NULL: read if warm, written on return */
+  int warm;               /* curvature holds that of a fit to much the same data */
 } AntFitOptions;
 #define ANT_FIT_OPTIONS_INIT { .max_steps = 40, .settled_lnl = 0.01 }
 
@@ -37,5 +39,5 @@ AntStatus ant_noise_fit_unconstrained (const AntNoiseModel *model, const AntSeri
  * x [n] in/out; step_ln: size of the first trial step; h: forward-difference step. Own code because a library's line
  * search pays a gradient (n+1 likelihoods) per trial point where this one pays a single value. */
 typedef double (*AntObjective) (void *data, const double *x);
-AntStatus ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step, double h, size_t max_steps,
-                        double settled, AntFitReport *report);
+AntStatus ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step, double h,
+                        const AntFitOptions *options, AntFitReport *report);

@@ -12,6 +12,7 @@ struct _AntWhitener
   unsigned *place;  /* [observed] */
   unsigned *next;   /* [n+1] index of the first observed sample at or after a place */
   double *d;        /* [observed] */
+  double *precision; /* [observed] diagonal of C^-1 */
   double *u, *w;    /* [observed][terms] */
   double *tail;     /* [observed/every + 1][terms*terms]: energy that a state entering the checkpoint leaves behind */
   double log_det;

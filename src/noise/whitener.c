@@ -11,6 +11,7 @@ size_t ant_whitener_n (const AntWhitener *whitener) { return whitener->n; }
 size_t ant_whitener_observed (const AntWhitener *whitener) { return whitener->observed; }
 const unsigned *ant_whitener_places (const AntWhitener *whitener) { return whitener->place; }
 const double *ant_whitener_variance (const AntWhitener *whitener) { return whitener->d; }
+const double *ant_whitener_precision (const AntWhitener *whitener) { return whitener->precision; }
 double ant_whitener_log_det (const AntWhitener *whitener) { return whitener->log_det; }
 
 void
@@ -21,6 +22,7 @@ ant_whitener_free (AntWhitener *whitener)
   free (whitener->place);
   free (whitener->next);
   free (whitener->d);
+  free (whitener->precision);
   free (whitener->u);
   free (whitener->w);
   free (whitener->tail);
@@ -36,10 +38,12 @@ reserve (AntWhitener *whitener, const AntSeries *series)
   whitener->place = malloc (m * sizeof *whitener->place);
   whitener->next = malloc ((series->n + 1) * sizeof *whitener->next);
   whitener->d = malloc (m * sizeof *whitener->d);
+  whitener->precision = malloc (m * sizeof *whitener->precision);
   whitener->u = malloc (m * terms * sizeof *whitener->u);
   whitener->w = malloc (m * terms * sizeof *whitener->w);
   whitener->tail = malloc (checkpoints * terms * terms * sizeof *whitener->tail);
-  if (!whitener->place || !whitener->next || !whitener->d || !whitener->u || !whitener->w || !whitener->tail)
+  if (!whitener->place || !whitener->next || !whitener->d || !whitener->precision || !whitener->u || !whitener->w
+      || !whitener->tail)
     return ANT_NO_MEMORY;
   size_t at = 0;
   for (size_t i = 0; i < series->n; i++)
@@ -106,6 +110,7 @@ tails (AntWhitener *whitener, size_t width)
           }
       for (size_t k = 0; k < width; k++)
         own += qj[k] * w[k];
+      whitener->precision[i] = own;
       for (size_t j = 0; j < width; j++)
         for (size_t k = 0; k < fours; k++)
           o[j * fours + k] += (own * uj[j] - qj[j]) * u[k] - uj[j] * q[k];

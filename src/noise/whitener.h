@@ -26,6 +26,9 @@ size_t ant_whitener_n (const AntWhitener *whitener);          /* grid places */
 size_t ant_whitener_observed (const AntWhitener *whitener);   /* observed places */
 const unsigned *ant_whitener_places (const AntWhitener *whitener); /* [observed] their grid places, rising */
 const double *ant_whitener_variance (const AntWhitener *whitener); /* [observed] innovation variances D, ppm^2 */
+/* [observed] diagonal of C^-1: z/precision is what a sample departs from the forecast of all others, with variance
+ * 1/precision. */
+const double *ant_whitener_precision (const AntWhitener *whitener);
 double ant_whitener_log_det (const AntWhitener *whitener);    /* ln det C */
 
 /* innovation[i] = (L^-1 v)[i] for values given on the grid [n] (places not observed are not read); [observed]. */

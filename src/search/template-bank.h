@@ -6,8 +6,8 @@
 
 #include <stddef.h>
 #include "core/status.h"
-#include "core/transit-curve.h"
 #include "noise/whitener.h"
+#include "search/crossing-shape.h"
 
 typedef struct
 {
@@ -30,7 +30,8 @@ typedef struct
 typedef struct
 {
   size_t stride;    /* places between trial starts */
-  size_t n_members; /* multiple of ANT_LANES; unused lanes have length 0 */
+  size_t n_members; /* multiple of ANT_LANES; unused lanes at the end have length 0 */
+  double edge_d;
   AntMember *member;
   double **shape;   /* [n_members/ANT_LANES] blocks, each block_length[b]*ANT_LANES interleaved doubles */
   size_t *block_length;
@@ -43,13 +44,8 @@ typedef struct
   double step_d;
 } AntTemplateBank;
 
-/* Shapes are negative (a dip), greatest depth 1 before smearing. Members shorter than the cadence resolves are left out;
- * at a cadence above 30 min the edge is the cadence and each duration comes in four phases. */
+/* Shapes are negative (a dip), greatest depth 1 before smearing. Durations below half the cadence are left out (the
+ * longest is always kept). The edge is at least the cadence; each duration comes in two sub-sample phases where the
+ * cadence exceeds half the edge, in four where it equals it. The sharp family needs a cadence below half its edge. */
 AntTemplateBank *ant_template_bank_new (const AntBankOptions *options, double step_d, AntStatus *status);
 void ant_template_bank_free (AntTemplateBank *bank);
-
-/* One shape at continuous parameters: the loss (positive, greatest 1 before smearing) of a crossing of impact `impact`, T14 duration_d,
- * ingress edge_d, centred at place `centre`, at integer places, averaged over the exposure. Writes shape[0..] for places
- * *first .. *first + return-1; at most `room` samples (return 0 if more would be needed). */
-size_t ant_crossing_shape (double duration_d, double edge_d, double impact, AntLimbDarkening ld, double centre,
-                           double step_d, double exposure_d, ptrdiff_t *first, size_t room, double *shape);
