@@ -1,0 +1,156 @@
+/* chunk-fit.c - the noise of one chunk: fit, set isolated spikes aside, fit again, and say how well it went. */
+#include <math.h>
+#include <stdlib.h>
+#include "core/robust.h"
+#include "noise/whitener.h"
+#include "search/chunk.h"
+
+#define SPIKE_SIGMAS 5.5
+#define SPIKE_ROUNDS 3
+#define WARM_STEPS 4
+#define WINDOW_D 4.0
+
+/* A sample that departs from both its neighbours on the side of its own forecast error is a spike; the first sample of a
+ * dip departs from one neighbour only. */
+static int
+stands_alone (const AntSeries *part, const unsigned *place, size_t observed, size_t i, double departure)
+{
+  double y = (double) part->value_ppm[place[i]];
+  for (int side = -1; side <= 1; side += 2)
+    {
+      if ((side < 0 && i == 0) || (side > 0 && i + 1 == observed))
+        return 0;
+      double rise = y - (double) part->value_ppm[place[side < 0 ? i - 1 : i + 1]];
+      if (rise * departure <= 0 || fabs (rise) < 0.5 * fabs (departure))
+        return 0;
+    }
+  return 1;
+}
+
+static AntStatus
+find_spikes (const AntWhitener *whitener, const AntSeries *part, uint8_t *spike, size_t *found)
+{
+  size_t m = ant_whitener_observed (whitener);
+  const unsigned *place = ant_whitener_places (whitener);
+  const double *precision = ant_whitener_precision (whitener);
+  double *z = malloc ((part->n + m) * sizeof *z), *pull = z + part->n;
+  *found = 0;
+  if (!z)
+    return ANT_NO_MEMORY;
+  AntStatus status = ant_whitener_solve (whitener, part->value_ppm, z);
+  for (size_t i = 0; i < m && !status; i++)
+    pull[i] = z[place[i]] / sqrt (precision[i]);
+  double sigma = status ? 0 : ant_mad_sigma (m, pull, pull);
+  for (size_t i = 0; i < m && !status; i++)
+    {
+      double departure = z[place[i]] / precision[i];
+      if (fabs (departure) * sqrt (precision[i]) > SPIKE_SIGMAS * fmax (sigma, 1) && !spike[place[i]]
+          && stands_alone (part, place, m, i, departure))
+        {
+          spike[place[i]] = ANT_SPIKE_FOUND;
+          ++*found;
+        }
+    }
+  free (z);
+  return status;
+}
+
+static void
+window_rms (const AntWhitener *whitener, const AntSeries *part, const double *pull, AntChunkHealth *health)
+{
+  const unsigned *place = ant_whitener_places (whitener);
+  size_t m = ant_whitener_observed (whitener), windows = 0, least = (size_t) (0.2 * WINDOW_D / part->step_d) + 20;
+  double low = HUGE_VAL, high = 0;
+  for (size_t i = 0; i < m;)
+    {
+      double end = (floor ((double) place[i] * part->step_d / WINDOW_D) + 1) * WINDOW_D, sum = 0;
+      size_t n = 0;
+      for (; i < m && (double) place[i] * part->step_d < end; i++)
+        if (!part->spike[place[i]])
+          {
+            sum += pull[i] * pull[i];
+            n++;
+          }
+      if (n < least)
+        continue;
+      windows++;
+      low = fmin (low, sqrt (sum / (double) n));
+      high = fmax (high, sqrt (sum / (double) n));
+    }
+  health->quietest = windows >= 3 ? low : NAN;
+  health->loudest = windows >= 3 ? high : NAN;
+}
+
+/* Innovations over their stated sigma: rms and correlation of neighbours, over the samples the fit used. */
+static AntStatus
+judge (const AntWhitener *whitener, const AntSeries *part, AntChunkHealth *health)
+{
+  size_t m = ant_whitener_observed (whitener), n = 0, pairs = 0;
+  const unsigned *place = ant_whitener_places (whitener);
+  double *pull = malloc (m * sizeof *pull), squares = 0, products = 0;
+  if (!pull)
+    return ANT_NO_MEMORY;
+  ant_whitener_innovations (whitener, part->value_ppm, pull);
+  for (size_t i = 0; i < m; i++)
+    {
+      pull[i] /= sqrt (ant_whitener_variance (whitener)[i]);
+      if (part->spike[place[i]])
+        continue;
+      squares += pull[i] * pull[i];
+      n++;
+      if (i && !part->spike[place[i - 1]])
+        {
+          products += pull[i] * pull[i - 1];
+          pairs++;
+        }
+    }
+  health->observed = m;
+  health->innovation_rms = n ? sqrt (squares / (double) n) : NAN;
+  health->lag1 = pairs ? products / (double) pairs / (squares / (double) n) : NAN;
+  window_rms (whitener, part, pull, health);
+  free (pull);
+  return ANT_OK;
+}
+
+AntStatus
+ant_chunk_fit (AntChunk *chunk, const AntSeries *part, uint8_t *spike, size_t max_steps)
+{
+  AntFitOptions options = { .max_steps = max_steps, .settled_lnl = 0.02, .curvature = chunk->curvature };
+  AntSeries own = *part;
+  own.spike = spike;
+  AntStatus status = ANT_OK;
+  for (int round = 0; round < SPIKE_ROUNDS; round++)
+    {
+      status = ant_noise_fit (&chunk->model, &own, &options, &chunk->fit);
+      if (status && status != ANT_NOT_CONVERGED)
+        return status;
+      AntWhitener *whitener = ant_whitener_new (&chunk->model, &own, &status);
+      size_t found = 0;
+      if (whitener)
+        status = find_spikes (whitener, &own, spike, &found);
+      if (whitener && !status)
+        status = judge (whitener, &own, &chunk->health);
+      ant_whitener_free (whitener);
+      if (status || !found)
+        break;
+      options.warm = 1;
+      options.max_steps = 8;
+    }
+  chunk->health.spikes = 0;
+  for (size_t i = 0; i < part->n; i++)
+    chunk->health.spikes += spike[i] == ANT_SPIKE_FOUND;
+  return status;
+}
+
+AntStatus
+ant_chunk_refit (const AntChunk *chunk, const AntSeries *part, AntNoiseModel *model)
+{
+  double curvature[ANT_MAX_FREE * ANT_MAX_FREE];
+  size_t free_parameters = ant_noise_model_get (&chunk->model, NULL);
+  for (size_t i = 0; i < free_parameters * free_parameters; i++)
+    curvature[i] = chunk->curvature[i];
+  AntFitOptions options = { .max_steps = WARM_STEPS, .settled_lnl = 0.02, .curvature = curvature, .warm = 1 };
+  *model = chunk->model;
+  AntStatus status = ant_noise_fit (model, part, &options, NULL);
+  return status == ANT_NOT_CONVERGED ? ANT_OK : status;
+}

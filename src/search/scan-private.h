@@ -1,0 +1,62 @@
+/* scan-private.h - what the stages of a scan share. */
+#pragma once
+
+#include "search/false-alarm.h"
+#include "search/scan.h"
+
+#define ANT_STRONG_SNR 8.0   /* masked and subtracted before weaker ones are looked for */
+#define ANT_KEEP_SNR 3.5     /* weakest first-pass peak that is ever weighed */
+#define ANT_PER_CHUNK 400    /* most events of one sign kept for a chunk */
+
+/* One dip or brightening on its way; places are those of the record. */
+typedef struct
+{
+  AntPeak peak;      /* of the first pass */
+  AntShapeFit fit;
+  int sign;          /* +1 dip, -1 brightening */
+  int strong;        /* subtracted from scan->residual */
+  size_t chunk;
+} AntEvent;
+
+/* What one chunk's slice leaves for finish to merge. */
+typedef struct
+{
+  uint8_t *spike;    /* [chunk n] */
+  size_t n_events;
+  AntEvent *event;   /* strong ones and candidates */
+  AntChanceField chance;
+} AntChunkHarvest;
+
+struct _AntScan
+{
+  AntSeries series;
+  AntScanOptions options;
+  AntRefineOptions refine;
+  AntTemplateBank *bank;
+  AntNoiseModel start; /* fitted to a representative stretch; its priors are centred on it */
+  size_t n_chunks;
+  AntChunk *chunk;
+  AntChunkHarvest *harvest; /* [n_chunks] */
+  float *residual;     /* [n] the record less its strong events */
+  uint8_t *spike;      /* [n] ANT_SPIKE_FOUND or ANT_SPIKE_DIP (strong) */
+  size_t n_events, n_kept;
+  AntEvent *event;     /* strong first, then candidates to weigh */
+  AntChanceLaw chance;
+  double threshold_snr;
+  size_t n_dips, n_brightenings;
+  AntDip *dip, *brightening;
+};
+
+/* The start: one slice. */
+AntStatus ant_scan_learn_noise (AntScan *scan);
+/* One chunk: fit, strong events, candidates, floor, spectrum. */
+AntStatus ant_scan_search_chunk (AntScan *scan, size_t i);
+/* One candidate: mask, refit, weigh. */
+AntStatus ant_scan_weigh (AntScan *scan, size_t event);
+/* All accepted events of one chunk fitted together. */
+AntStatus ant_scan_fit_together (AntScan *scan, size_t i);
+
+/* value[p] += factor * (the fit's loss) for places p of a stretch that begins at place `first` of the record. */
+void ant_scan_add_shape (const AntScan *scan, const AntShapeFit *fit, double factor, size_t first, size_t n, float *value);
+/* Mark the places inside a fit's contacts, and a margin of a tenth of its duration. */
+void ant_scan_mask (const AntScan *scan, double centre, double duration_d, size_t first, size_t n, uint8_t *spike);

@@ -1,0 +1,343 @@
+/* scan.c - the stages of a scan and the merging of what their slices found. */
+#include "search/scan.h"
+#include <math.h>
+#include <stdlib.h>
+#include <string.h>
+#include "core/robust.h"
+#include "noise/spectrum.h"
+#include "search/scan-private.h"
+
+enum { LEARN, SEARCH, WEIGH, TOGETHER, N_STAGES };
+
+#define WHITTLE_BINS 6
+#define START_STEPS 40
+#define CHUNK_PRIOR_LN 0.7
+#define WEIGH_MARGIN 0.7   /* below the threshold, in 30 d of data and more */
+#define SHORT_RECORD_D 30
+#define LEAST_WEIGHED 3    /* per chunk and sign */
+
+static AntRefineOptions
+refine_options (const AntScanOptions *options, const AntTemplateBank *bank)
+{
+  double step_d = bank->step_d, sharp_d = options->bank.sharp_edge_h / 24;
+  double least = bank->n_families > 1 ? fmax (0.4 * sharp_d, step_d) : fmax (bank->family[0].member[0].edge_d * 0.75, step_d);
+  return (AntRefineOptions){ .step_d = step_d, .exposure_d = options->bank.exposure_d > 0 ? options->bank.exposure_d : step_d,
+                             .limb_darkening = options->bank.limb_darkening,
+                             .shortest_d = bank->family[0].member[0].duration_d,
+                             .longest_d = options->bank.duration_max_h / 24 * 1.15, .least_edge_d = least };
+}
+
+AntScan *
+ant_scan_new (const AntSeries *series, const AntScanOptions *options, AntStatus *status)
+{
+  AntScan *scan = calloc (1, sizeof *scan);
+  *status = ANT_NO_MEMORY;
+  if (!scan)
+    return NULL;
+  scan->series = *series;
+  scan->options = *options;
+  scan->bank = ant_template_bank_new (&options->bank, series->step_d, status);
+  if (scan->bank)
+    {
+      size_t room = ant_chunks_room (series, &options->chunk);
+      scan->refine = refine_options (options, scan->bank);
+      scan->chunk = calloc (room, sizeof *scan->chunk);
+      scan->harvest = calloc (room, sizeof *scan->harvest);
+      scan->residual = malloc (series->n * sizeof *scan->residual);
+      scan->spike = calloc (series->n, 1);
+      *status = scan->chunk && scan->harvest && scan->residual && scan->spike ? ANT_OK : ANT_NO_MEMORY;
+      if (!*status)
+        scan->n_chunks = ant_chunks_plan (series, &options->chunk, room, scan->chunk);
+    }
+  if (*status)
+    {
+      ant_scan_free (scan);
+      return NULL;
+    }
+  memcpy (scan->residual, series->value_ppm, series->n * sizeof *scan->residual);
+  if (series->spike)
+    memcpy (scan->spike, series->spike, series->n);
+  return scan;
+}
+
+static void
+forget_harvest (AntScan *scan)
+{
+  for (size_t i = 0; scan->harvest && i < scan->n_chunks; i++)
+    {
+      free (scan->harvest[i].spike);
+      free (scan->harvest[i].event);
+      scan->harvest[i] = (AntChunkHarvest){ 0 };
+    }
+}
+
+void
+ant_scan_free (AntScan *scan)
+{
+  if (!scan)
+    return;
+  forget_harvest (scan);
+  for (size_t i = 0; scan->chunk && i < scan->n_chunks; i++)
+    free (scan->chunk[i].frequency_cd);
+  ant_template_bank_free (scan->bank);
+  free (scan->chunk);
+  free (scan->harvest);
+  free (scan->residual);
+  free (scan->spike);
+  free (scan->event);
+  free (scan->dip);
+  free (scan->brightening);
+  free (scan);
+}
+
+/* rms of the record and of its neighbouring differences over sqrt2, robustly: where the fit starts. */
+static AntStatus
+scatter (const AntSeries *part, double *rms_ppm, double *white_ppm)
+{
+  double *value = malloc (2 * part->n * sizeof *value), *difference = value + part->n;
+  size_t n = 0, pairs = 0;
+  if (!value)
+    return ANT_NO_MEMORY;
+  for (size_t i = 0; i < part->n; i++)
+    if (!isnan (part->value_ppm[i]))
+      {
+        value[n++] = (double) part->value_ppm[i];
+        if (i && !isnan (part->value_ppm[i - 1]))
+          difference[pairs++] = (double) part->value_ppm[i] - (double) part->value_ppm[i - 1];
+      }
+  *rms_ppm = ant_mad_sigma (n, value, value);
+  *white_ppm = pairs > 5 ? ant_mad_sigma (pairs, difference, difference) / sqrt (2) : 0.3 * *rms_ppm;
+  free (value);
+  return n < 20 || !(*rms_ppm > 0) ? ANT_NO_DATA : ANT_OK;
+}
+
+AntStatus
+ant_scan_learn_noise (AntScan *scan)
+{
+  size_t best = 0, most = 0;
+  for (size_t i = 0; i < scan->n_chunks; i++)
+    {
+      AntSeries part = ant_series_part (&scan->series, scan->chunk[i].first, scan->chunk[i].n);
+      size_t observed = ant_series_observed (&part, 1);
+      if (observed > most)
+        {
+          most = observed;
+          best = i;
+        }
+    }
+  AntSeries part = ant_series_part (&scan->series, scan->chunk[best].first, scan->chunk[best].n);
+  AntChunk chunk = scan->chunk[best];
+  double rms_ppm, white_ppm;
+  AntStatus status = scatter (&part, &rms_ppm, &white_ppm);
+  if (status)
+    return status;
+  ant_noise_model_default (&chunk.model, part.step_d, rms_ppm, fmax (white_ppm, 1e-3 * rms_ppm), part.error_ppm != NULL,
+                           scan->options.n_lines, scan->options.line);
+  AntSpectrum *spectrum = ant_spectrum_new (&part, WHITTLE_BINS, &status);
+  if (spectrum)
+    status = ant_spectrum_whittle_fit (spectrum, &chunk.model);
+  ant_spectrum_free (spectrum);
+  if (status && status != ANT_NOT_CONVERGED)
+    return status;
+  uint8_t *spike = calloc (part.n, 1);
+  if (!spike)
+    return ANT_NO_MEMORY;
+  status = ant_chunk_fit (&chunk, &part, spike, START_STEPS);
+  free (spike);
+  scan->start = chunk.model;
+  if (scan->n_chunks > 1)
+    ant_noise_model_centre_priors (&scan->start, CHUNK_PRIOR_LN);
+  return status == ANT_NOT_CONVERGED ? ANT_OK : status;
+}
+
+static int
+by_strength (const void *a, const void *b)
+{
+  double left = fabs (((const AntEvent *) a)->peak.snr), right = fabs (((const AntEvent *) b)->peak.snr);
+  return left > right ? -1 : left < right;
+}
+
+/* From one chunk's harvest: strong events, and of each sign the candidates that a refit could lift to the threshold. */
+static void
+choose_candidates (AntScan *scan, AntChunkHarvest *harvest, double observed_d)
+{
+  double cut = observed_d < SHORT_RECORD_D ? ANT_KEEP_SNR : scan->threshold_snr - WEIGH_MARGIN;
+  size_t weighed[2] = { 0, 0 };
+  qsort (harvest->event, harvest->n_events, sizeof *harvest->event, by_strength);
+  for (size_t i = 0; i < harvest->n_events; i++)
+    {
+      const AntEvent *event = &harvest->event[i];
+      size_t *count = &weighed[event->sign > 0];
+      if (event->strong || fabs (event->peak.snr) >= cut || *count < LEAST_WEIGHED)
+        {
+          *count += !event->strong;
+          scan->event[scan->n_events++] = *event;
+        }
+    }
+}
+
+/* Merge the chunks: spikes and masks of each chunk's own stretch, strong events out of the residual, candidates listed. */
+static AntStatus
+merge_chunks (AntScan *scan)
+{
+  AntChanceField field = { 0 };
+  size_t room = 0;
+  for (size_t i = 0; i < scan->n_chunks; i++)
+    {
+      AntChunk *chunk = &scan->chunk[i];
+      AntChunkHarvest *harvest = &scan->harvest[i];
+      ant_chance_field_add (&field, &harvest->chance);
+      room += harvest->n_events;
+      for (size_t p = 0; p < chunk->n; p++)
+        if ((double) (chunk->first + p) >= chunk->own_from && (double) (chunk->first + p) < chunk->own_to)
+          scan->spike[chunk->first + p] = harvest->spike[p];
+    }
+  ant_chance_law_init (&scan->chance, &field);
+  scan->threshold_snr = scan->options.threshold_snr > 0
+                          ? scan->options.threshold_snr
+                          : ant_chance_law_threshold (&scan->chance,
+                                                      scan->options.false_alarms_per_year * field.observed_d / 365.25);
+  scan->event = malloc ((room + 1) * sizeof *scan->event);
+  if (!scan->event)
+    return ANT_NO_MEMORY;
+  for (size_t i = 0; i < scan->n_chunks; i++)
+    choose_candidates (scan, &scan->harvest[i], scan->harvest[i].chance.observed_d);
+  for (size_t i = 0; i < scan->n_events; i++)
+    if (scan->event[i].strong)
+      {
+        const AntShapeFit *fit = &scan->event[i].fit;
+        ant_scan_add_shape (scan, fit, fit->depth_ppm, 0, scan->series.n, scan->residual);
+        ant_scan_mask (scan, fit->centre, fit->duration_d, 0, scan->series.n, scan->spike);
+      }
+  forget_harvest (scan);
+  return ANT_OK;
+}
+
+static int
+by_time (const void *a, const void *b)
+{
+  double left = ((const AntDip *) a)->mid_d, right = ((const AntDip *) b)->mid_d;
+  return (left > right) - (left < right);
+}
+
+/* Two candidates may have climbed to one dip: keep the stronger. */
+static int
+seen_before (const AntScan *scan, const AntEvent *event)
+{
+  for (size_t i = 0; i < scan->n_events; i++)
+    {
+      const AntEvent *other = &scan->event[i];
+      if (other == event || other->sign != event->sign || fabs (other->fit.snr) < fabs (event->fit.snr)
+          || (fabs (other->fit.snr) == fabs (event->fit.snr) && other > event))
+        continue;
+      double apart_d = fabs (other->fit.centre - event->fit.centre) * scan->series.step_d;
+      if (apart_d < 0.5 * (other->fit.duration_d + event->fit.duration_d))
+        return 1;
+    }
+  return 0;
+}
+
+static AntStatus
+list_dips (AntScan *scan)
+{
+  scan->dip = malloc ((scan->n_events + 1) * sizeof *scan->dip);
+  scan->brightening = malloc ((scan->n_events + 1) * sizeof *scan->brightening);
+  if (!scan->dip || !scan->brightening)
+    return ANT_NO_MEMORY;
+  for (size_t i = 0; i < scan->n_events; i++)
+    {
+      const AntEvent *event = &scan->event[i];
+      if (!(event->sign * event->fit.snr >= scan->threshold_snr) || seen_before (scan, event))
+        continue;
+      AntDip *dip = event->sign > 0 ? &scan->dip[scan->n_dips++] : &scan->brightening[scan->n_brightenings++];
+      ant_shape_fit_to_dip (&event->fit, &scan->refine, scan->series.start_d, dip);
+      dip->first_snr = event->peak.snr;
+      dip->chunk = event->chunk;
+      dip->expected_false = ant_chance_law_expected (&scan->chance, fabs (dip->snr));
+    }
+  qsort (scan->dip, scan->n_dips, sizeof *scan->dip, by_time);
+  qsort (scan->brightening, scan->n_brightenings, sizeof *scan->brightening, by_time);
+  return ANT_OK;
+}
+
+static const char *
+stage_title (void *work, size_t stage)
+{
+  static const char *const title[N_STAGES] = { "learning the noise", "searching for dips", "weighing candidates",
+                                               "fitting dips together" };
+  return title[stage];
+}
+
+static size_t
+stage_count (void *work, size_t stage)
+{
+  AntScan *scan = work;
+  size_t count[N_STAGES] = { 1, scan->n_chunks, scan->n_events, scan->n_chunks };
+  return count[stage];
+}
+
+static AntStatus
+run_slice (void *work, size_t stage, size_t slice)
+{
+  AntScan *scan = work;
+  switch (stage)
+    {
+    case LEARN: return ant_scan_learn_noise (scan);
+    case SEARCH: return ant_scan_search_chunk (scan, slice);
+    case WEIGH: return scan->event[slice].strong ? ANT_OK : ant_scan_weigh (scan, slice);
+    default: return ant_scan_fit_together (scan, slice);
+    }
+}
+
+static AntStatus
+finish (void *work, size_t stage)
+{
+  return stage == SEARCH ? merge_chunks (work) : stage == TOGETHER ? list_dips (work) : ANT_OK;
+}
+
+const AntStages *
+ant_scan_stages (void)
+{
+  static const AntStages stages = { N_STAGES, stage_title, stage_count, run_slice, finish };
+  return &stages;
+}
+
+size_t
+ant_scan_chunks (const AntScan *scan, const AntChunk **chunk)
+{
+  *chunk = scan->chunk;
+  return scan->n_chunks;
+}
+
+size_t
+ant_scan_dips (const AntScan *scan, const AntDip **dip)
+{
+  *dip = scan->dip;
+  return scan->n_dips;
+}
+
+size_t
+ant_scan_brightenings (const AntScan *scan, const AntDip **dip)
+{
+  *dip = scan->brightening;
+  return scan->n_brightenings;
+}
+
+double ant_scan_threshold (const AntScan *scan) { return scan->threshold_snr; }
+
+double
+ant_scan_expected_false (const AntScan *scan, double snr)
+{
+  return ant_chance_law_expected (&scan->chance, snr);
+}
+
+size_t
+ant_scan_refits (const AntScan *scan)
+{
+  size_t n = 0;
+  for (size_t i = 0; i < scan->n_events; i++)
+    n += !scan->event[i].strong;
+  return n;
+}
+
+const uint8_t *ant_scan_spikes (const AntScan *scan) { return scan->spike; }

@@ -1,0 +1,54 @@
+/* scan.h - the whole search for single dips in one record: noise, first pass, mask and refit, joint fit, threshold.
+ *
+ * A dip left in the noise fit hides itself, so every candidate that a refit could lift to the threshold is masked, the
+ * noise refitted, and the candidate weighed anew; dips above 8 are masked and subtracted before anything weaker is
+ * looked for. Brightenings go through exactly the same steps: they are the mirror that shows what noise alone does.
+ *
+ * Run by driving ant_scan_stages () (core/stages.h) with the scan as work. Results are valid after the last finish;
+ * after a stop they are those of the stages that finished. The series' arrays must outlive the scan. */
+#pragma once
+
+#include <stdint.h>
+#include "core/stages.h"
+#include "noise/noise-model.h"
+#include "search/chunk.h"
+#include "search/dip.h"
+#include "search/refine.h"
+
+#define ANT_MAX_LINES 4
+
+typedef struct
+{
+  AntBankOptions bank;
+  AntChunkOptions chunk;
+  double threshold_snr;         /* 0: from false_alarms_per_year */
+  double false_alarms_per_year; /* of observed time */
+  double least_coverage;
+  size_t n_lines;
+  AntNoiseLine line[ANT_MAX_LINES];
+} AntScanOptions;
+#define ANT_SCAN_OPTIONS_INIT { .bank = ANT_BANK_OPTIONS_INIT, .chunk = { 0, 20 }, .false_alarms_per_year = 0.1, \
+                                .least_coverage = 0.3 }
+
+typedef struct _AntScan AntScan;
+
+AntScan *ant_scan_new (const AntSeries *series, const AntScanOptions *options, AntStatus *status);
+void ant_scan_free (AntScan *scan);
+const AntStages *ant_scan_stages (void);
+
+size_t ant_scan_chunks (const AntScan *scan, const AntChunk **chunk);
+/* Dips at or above the threshold by time, and brightenings likewise. */
+size_t ant_scan_dips (const AntScan *scan, const AntDip **dip);
+size_t ant_scan_brightenings (const AntScan *scan, const AntDip **dip);
+double ant_scan_threshold (const AntScan *scan);
+/* Dips of one sign expected from noise alone in this record with a final SNR of at least `snr`. */
+double ant_scan_expected_false (const AntScan *scan, double snr);
+/* Candidates that were masked and refitted. */
+size_t ant_scan_refits (const AntScan *scan);
+/* [series->n] ANT_SPIKE_FOUND where an isolated outlier was left out of the fits. */
+const uint8_t *ant_scan_spikes (const AntScan *scan);
+
+/* Measure one asked dip (middle, T14) under the noise of a chunk centred on it, the dip masked while fitting; no search.
+ * dip->snr etc. are filled; expected_false is NaN. ANT_NO_DATA if less than `least_coverage` of it is observed. */
+AntStatus ant_scan_asked (const AntSeries *series, const AntScanOptions *options, double mid_d, double duration_d,
+                          AntDip *dip);
