@@ -14,8 +14,10 @@ typedef struct
 /* Bolometric default: quadratic 0.40, 0.19 (Neckel 2005 integrated over a Planck spectrum; common practice). */
 #define ANT_LIMB_DARKENING_SUN ((AntLimbDarkening){ 0.40, 0.19 })
 
+/* All functions: dimensionless radii in solar (stellar) radii, times in days; no allocation; safe from any thread. */
+
 /* Fraction of light lost (0..1) for a dark disc of radius k at centre distance z, both in stellar radii; k, z >= 0.
- * Accurate to 1e-10 of the flux, and relative to the depth for small k (no cancellation of 1 - F). */
+ * Within 1e-12 of k^2 (k <= 1) for laws with |u1|, |u2| of order 1: no cancellation of 1 - F. NaN for a NaN argument. */
 double ant_transit_loss (double k, double z, AntLimbDarkening ld);
 
 /* A crossing along a straight chord at uniform speed. */
@@ -32,8 +34,8 @@ double ant_crossing_separation (const AntCrossing *crossing, double time_d);
 double ant_crossing_loss (const AntCrossing *crossing, AntLimbDarkening ld, double time_d);
 /* Ingress time, contact I to II (= III to IV); T14/2 if the body never lies wholly on the disc. */
 double ant_crossing_ingress_d (const AntCrossing *crossing);
-/* Radius ratio at which a crossing of impact `impact` and length t14_d has ingress time ingress_d
- * (0 < ingress_d <= t14_d/2). */
+/* Least radius ratio at which a crossing of impact `impact` and length t14_d has ingress time ingress_d.
+ * 0 <= impact < 1 (a body with b >= 1 never has a contact II), 0 < ingress_d <= t14_d/2; NaN outside. */
 double ant_crossing_radius_for_ingress (double impact, double t14_d, double ingress_d);
-/* Radius ratio at which the greatest loss of a crossing with this impact is `depth` (0 < depth < 1). */
+/* Radius ratio at which the greatest loss of a crossing with this impact is `depth` (impact >= 0, 0 < depth < 1; NaN outside). */
 double ant_crossing_radius_for_depth (double impact, AntLimbDarkening ld, double depth);
