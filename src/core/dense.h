@@ -1,5 +1,5 @@
-/* dense.h - small dense symmetric positive algebra, row-major n x n, in place. For joint fits of a few shapes and for the
- * slow twins of the tests; O(n^3), no blocking. */
+/* dense.h - small dense symmetric positive algebra, row-major n x n, in place. For joint fits of a few shapes
+ * and for the slow twins of the tests; O(n^3), no blocking. */
 #pragma once
 
 #include <stddef.h>

@@ -1,4 +1,5 @@
-/* prefix-sums.h - running totals in double, so that the sum over any window is one subtraction. Gaps (NaN) count as 0. */
+/* prefix-sums.h - running totals in double, so that the sum over any window is one subtraction.
+ * Gaps (NaN) count as 0. */
 #pragma once
 
 #include <stddef.h>

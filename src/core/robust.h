@@ -10,7 +10,8 @@
 double ant_median (size_t n, const double *value, double *work);
 /* 1.4826 times the median absolute deviation from the median. `work` as for ant_median. */
 double ant_mad_sigma (size_t n, const double *value, double *work);
-/* The q-quantile, 0 <= q <= 1, linear between order statistics (Hyndman & Fan 1996, type 7). `work` as for ant_median. */
+/* The q-quantile, 0 <= q <= 1, linear between order statistics (Hyndman & Fan 1996, type 7). NaN for another q.
+ * `work` as for ant_median. */
 double ant_quantile (size_t n, const double *value, double q, double *work);
 /* Biweight location with cut c (usual: 6) and scale (usual: 9) in units of the raw MAD; one step from the median.
  * `work` is scratch of n doubles, not the same array as `value`. If the MAD is 0: the median, and 0 for the scales. */

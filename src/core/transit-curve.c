@@ -1,7 +1,7 @@
 /* transit-curve.c - the loss of light of transit-curve.h, as one line integral round the dark disc.
  *
- * With m^2 = 1 - r^2 the law is I = c0 + c1 m + c2 m^2. By Green's theorem (as Pal 2012, MNRAS 420, 1630) the integral of
- * I over the covered region is a line integral along its edge; on the solar limb m = 0, so that part is an area, and
+ * With m^2 = 1 - r^2 the law is I = c0 + c1 m + c2 m^2. By Green's theorem (as Pal 2012, MNRAS 420, 1630) the integral
+ * of I over the covered region is a line integral along its edge; on the solar limb m = 0, so that part is an area, and
  *
  *   pi loss = A + (1/N) int m^2 (c1 / (3 (1 + m)) + c2 / 4) (k^2 - z k cos psi) d psi
  *

@@ -17,7 +17,8 @@ typedef struct
 /* All functions: dimensionless radii in solar (stellar) radii, times in days; no allocation; safe from any thread. */
 
 /* Fraction of light lost (0..1) for a dark disc of radius k at centre distance z, both in stellar radii; k, z >= 0.
- * Within 1e-12 of k^2 (k <= 1) for laws with |u1|, |u2| of order 1: no cancellation of 1 - F. NaN for a NaN argument. */
+ * Within 1e-11 of k^2 down to k = 1e-4 for laws with |u1|, |u2| of order 1: no cancellation of 1 - F. NaN for a NaN
+ * argument. */
 double ant_transit_loss (double k, double z, AntLimbDarkening ld);
 
 /* A crossing along a straight chord at uniform speed. */
@@ -37,5 +38,6 @@ double ant_crossing_ingress_d (const AntCrossing *crossing);
 /* Least radius ratio at which a crossing of impact `impact` and length t14_d has ingress time ingress_d.
  * 0 <= impact < 1 (a body with b >= 1 never has a contact II), 0 < ingress_d <= t14_d/2; NaN outside. */
 double ant_crossing_radius_for_ingress (double impact, double t14_d, double ingress_d);
-/* Radius ratio at which the greatest loss of a crossing with this impact is `depth` (impact >= 0, 0 < depth < 1; NaN outside). */
+/* Radius ratio at which the greatest loss of a crossing with this impact is `depth` (impact >= 0, 0 < depth < 1;
+ * NaN outside). */
 double ant_crossing_radius_for_depth (double impact, AntLimbDarkening ld, double depth);

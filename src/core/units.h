@@ -14,6 +14,7 @@
 #define ANT_SUN_RADIUS_KM 695700.0       /* nominal: IAU 2015 resolution B3 */
 #define ANT_TSI_W_M2 1361.0              /* nominal total solar irradiance at 1 au: IAU 2015 resolution B3 */
 #define ANT_EARTH_RADIUS_KM 6378.1       /* nominal equatorial: IAU 2015 resolution B3 */
-#define ANT_SYNODIC_ROTATION_D 27.275232 /* 1/(1/25.38 - 1/365.256363): Carrington's sidereal 25.38 d seen from the Earth */
+/* 1/(1/25.38 - 1/365.256363): Carrington's sidereal 25.38 d seen from the Earth */
+#define ANT_SYNODIC_ROTATION_D 27.275232
 
 #define ANT_MAD_TO_SIGMA 1.482602218505602 /* 1/Phi^-1(3/4): a median absolute deviation as a Gaussian sigma */

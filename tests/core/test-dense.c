@@ -5,7 +5,10 @@
 #include "core/dense.h"
 #include "core/random.h"
 
-enum { MOST = 40 };
+enum
+{
+  MOST = 40
+};
 
 /* A random symmetric positive matrix: B B' + I. */
 static void

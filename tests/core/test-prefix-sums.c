@@ -4,7 +4,10 @@
 #include "core/prefix-sums.h"
 #include "core/random.h"
 
-enum { N = 300 };
+enum
+{
+  N = 300
+};
 
 /* Whole numbers below 2^24 in float: every sum is exact, so the twin must agree to the last bit. */
 static void

@@ -3,13 +3,17 @@
 #include <math.h>
 #include "core/random.h"
 
-/* The first outputs of xoshiro256** from state {1, 2, 3, 4}; source: the rand_xoshiro library's test vector, itself made
- * with the authors' C code [from memory]. The first four are easy by hand: 2*5 = 10, rotl 7, times 9 = 11520; then 0. */
+/* The first outputs of xoshiro256** from state {1, 2, 3, 4}; source: the rand_xoshiro library's test vector, itself
+ * made with the authors' C code (from memory). The first is easy by hand: 2*5 = 10, rotated by 7 = 1280, times 9. */
 static void
 state_one_two_three_four_gives_the_published_digits (void)
 {
-  static const guint64 expected[] = { 11520, 0, 1509978240, G_GUINT64_CONSTANT (1215971899390074240),
-                                      G_GUINT64_CONSTANT (1216172134540287360), G_GUINT64_CONSTANT (607988272756665600),
+  static const guint64 expected[] = { 11520,
+                                      0,
+                                      1509978240,
+                                      G_GUINT64_CONSTANT (1215971899390074240),
+                                      G_GUINT64_CONSTANT (1216172134540287360),
+                                      G_GUINT64_CONSTANT (607988272756665600),
                                       G_GUINT64_CONSTANT (16172922978634559625),
                                       G_GUINT64_CONSTANT (8476171486693032832) };
   AntRandom random = { { 1, 2, 3, 4 }, 0, 0 };
@@ -56,8 +60,12 @@ neighbouring_seeds_and_streams_start_apart (void)
 static void
 streams_are_uncorrelated (void)
 {
-  enum { STREAMS = 200, N = 400 };
-  g_autofree double *value = g_new (double, STREAMS *N);
+  enum
+  {
+    STREAMS = 200,
+    N = 400
+  };
+  g_autofree double *value = g_new (double, STREAMS * N);
   double total = 0;
   const double pairs = STREAMS * (STREAMS - 1) / 2;
 
@@ -84,7 +92,11 @@ streams_are_uncorrelated (void)
 static void
 uniforms_fill_zero_to_one_evenly (void)
 {
-  enum { BINS = 64, N = 640000 };
+  enum
+  {
+    BINS = 64,
+    N = 640000
+  };
   int count[BINS] = { 0 };
   double chi2 = 0;
   AntRandom random;
@@ -102,11 +114,14 @@ uniforms_fill_zero_to_one_evenly (void)
   g_assert_cmpfloat (fabs (chi2 - (BINS - 1)), <, 4 * sqrt (2.0 * (BINS - 1)));
 }
 
-/* Mean, variance, fourth moment and the fraction beyond 3 sigma (0.0026998), each within 4.5 of its own standard error. */
+/* Mean, variance, fourth moment and the fraction beyond 3 sigma, each within 4.5 of its own standard error. */
 static void
 normals_have_the_moments_and_tails_of_a_gaussian (void)
 {
-  enum { N = 1000000 };
+  enum
+  {
+    N = 1000000
+  };
   double sum = 0, sum2 = 0, sum4 = 0;
   int beyond = 0;
   const double tail = erfc (3 / sqrt (2));
