@@ -178,12 +178,12 @@ an_assignment_needs_an_equals_sign (void)
 static gboolean
 load_text (AntSettings *settings, const char *text, char **path, GError **error)
 {
-  int fd = g_file_open_tmp ("settings-XXXXXX", path, NULL);
-  g_assert_cmpint (fd, >=, 0);
-  g_close (fd, NULL);
+  g_autofree char *folder = g_dir_make_tmp (NULL, NULL);
+  *path = g_build_filename (folder, "settings.ini", NULL);
   g_assert_true (g_file_set_contents (*path, text, -1, NULL));
   gboolean loaded = ant_settings_load (settings, *path, error);
   g_remove (*path);
+  g_rmdir (folder);
   return loaded;
 }
 
