@@ -35,6 +35,8 @@ run (const AntTerms *terms, size_t fours, const AntNoiseModel *model, const AntS
   AntFour memory[ANT_MAX_TERMS / 4] = { { 0 } };
   double innovation = 0;
   memset (&state, 0, sizeof state);
+  int plain = !series->error_ppm && !series->bin_count;
+  double r = ant_noise_model_variance (model, 0, 1);
   for (size_t i = 0; i < series->n; i++)
     {
       double y = (double) series->value_ppm[i];
@@ -48,8 +50,9 @@ run (const AntTerms *terms, size_t fours, const AntNoiseModel *model, const AntS
       memcpy (state.decay, walk.decay, sizeof state.decay);
       for (size_t k = 0; k < fours; k++)
         memory[k] = state.decay[k] * (memory[k] + state.w[k] * innovation);
-      double r = ant_noise_model_variance (model, series->error_ppm ? (double) series->error_ppm[i] : 0,
-                                           series->bin_count ? (double) series->bin_count[i] : 1);
+      if (!plain)
+        r = ant_noise_model_variance (model, series->error_ppm ? (double) series->error_ppm[i] : 0,
+                                      series->bin_count ? (double) series->bin_count[i] : 1);
       ant_factor_step (&state, fours, terms->total + r);
       if (!(state.d > 0))
         return ANT_NOT_POSITIVE;

@@ -166,6 +166,14 @@ ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step
           fresh = 1;
           continue;
         }
+      if (steps + 1 == options->max_steps) /* nothing more will be asked of the gradient */
+        {
+          memcpy (x, moved, n * sizeof *x);
+          status = fx - f_new < options->settled_lnl ? ANT_OK : ANT_NOT_CONVERGED;
+          fx = f_new;
+          steps++;
+          break;
+        }
       gradient (&search, moved, f_new, g_new);
       for (size_t i = 0; i < n; i++)
         {

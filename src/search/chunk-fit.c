@@ -7,7 +7,6 @@
 
 #define SPIKE_SIGMAS 5.5
 #define SPIKE_ROUNDS 3
-#define WARM_STEPS 4
 #define WINDOW_D 4.0
 
 /* A sample that departs from both its neighbours on the side of its own forecast error is a spike; the first sample of a
@@ -149,7 +148,9 @@ ant_chunk_refit (const AntChunk *chunk, const AntSeries *part, AntNoiseModel *mo
   size_t free_parameters = ant_noise_model_get (&chunk->model, NULL);
   for (size_t i = 0; i < free_parameters * free_parameters; i++)
     curvature[i] = chunk->curvature[i];
-  AntFitOptions options = { .max_steps = WARM_STEPS, .settled_lnl = 0.02, .curvature = curvature, .warm = 1 };
+  /* Masking a few hours moves a fit to months of data by less than one Newton step finds; a fit to days needs more. */
+  double days = (double) chunk->health.observed * part->step_d;
+  AntFitOptions options = { .max_steps = days > 60 ? 1 : days > 15 ? 2 : 6, .settled_lnl = 0.02, .curvature = curvature, .warm = 1 };
   *model = chunk->model;
   AntStatus status = ant_noise_fit (model, part, &options, NULL);
   return status == ANT_NOT_CONVERGED ? ANT_OK : status;

@@ -1,14 +1,13 @@
 /* false-alarm.h - how many dips of a given final SNR noise alone would show in a record.
  *
- * Under the noise the SNR is a Gaussian field over epoch, duration and edge. The expected number of its peaks above a high
- * level T is that of its excursion set's Euler characteristic (Adler & Taylor 2007, Random Fields and Geometry, ch. 12):
- *   N(T) = sum over j of L_j rho_j(T),  rho_1 = e/(2 pi), rho_2 = T e/(2 pi)^(3/2), rho_3 = (T^2-1) e/(2 pi)^2, e = exp(-T^2/2),
- * where L_j are the lengths, areas and volumes of the searched range, measured in units in which neighbouring shapes decorrelate:
- * the metric is the covariance of the field's derivatives, computed here from the fitted model through the record's own mask.
- *
- * The search is not quite that field: its templates are a grid (it misses a little), and masking and refitting lifts
- * noise peaks, the more the shorter the record. Both are one constant and one exponent, calibrated on surrogates sent through the whole
- * pipeline (docs/search.md gives the study and its command). */
+ * Under the noise the SNR of one template is a Gaussian process in time with unit variance, which crosses a high level T
+ * upwards crossings * exp(-T^2/2) times (Rice 1945); `crossings` is computed here from the fitted model through the
+ * record's own mask and summed over the templates. Neighbouring templates share their peaks, the fit of the shape then
+ * climbs two more dimensions (a factor T each: Adler & Taylor 2007, Random Fields and Geometry, ch. 12), and mask and
+ * refit lifts noise peaks, the more the shorter the record:
+ *   N(T) = yield * crossings * t^2 exp(-t^2/2),  t^2 = T^2 / (1 + softness).
+ * yield and softness are calibrated on surrogates sent through the whole pipeline (docs/search.md has the study).
+ */
 #pragma once
 
 #include "core/status.h"
@@ -16,18 +15,17 @@
 #include "search/refine.h"
 #include "search/template-bank.h"
 
-/* Contents of the searched range, summed over chunks. */
 typedef struct
 {
-  double length, area, volume; /* L_1, L_2, L_3 */
+  double crossings;            /* of zero, upwards, summed over all templates */
   double observed_d;           /* observed time */
 } AntChanceField;
 
 typedef struct
 {
   AntChanceField field;
-  double yield;    /* fraction of the field's peaks that the search finds and lists */
-  double softness; /* SNR^2 is divided by 1 + softness: the lift of mask and refit */
+  double yield;
+  double softness;
 } AntChanceLaw;
 
 /* Measure a chunk's field over epochs [from, to) (places of the whitener) on a fixed sample of epochs, durations and edges. */

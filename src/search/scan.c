@@ -20,7 +20,7 @@ static AntRefineOptions
 refine_options (const AntScanOptions *options, const AntTemplateBank *bank)
 {
   double step_d = bank->step_d, sharp_d = options->bank.sharp_edge_h / 24;
-  double least = bank->n_families > 1 ? fmax (0.4 * sharp_d, step_d) : fmax (bank->family[0].member[0].edge_d * 0.75, step_d);
+  double least = bank->n_families > 1 ? fmax (0.8 * sharp_d, step_d) : fmax (bank->family[0].member[0].edge_d * 0.75, step_d);
   return (AntRefineOptions){ .step_d = step_d, .exposure_d = options->bank.exposure_d > 0 ? options->bank.exposure_d : step_d,
                              .limb_darkening = options->bank.limb_darkening,
                              .shortest_d = bank->family[0].member[0].duration_d,
