@@ -15,7 +15,7 @@
 /* Where a window holds too little (a short record, a long gap) the data do not tell harmonics apart. A penalty on the
  * k-th harmonic of this times k^4, in units of a full window's weight, then keeps the curve from swinging; a full window
  * hardly feels it. */
-#define STIFFNESS 1e-5
+#define STIFFNESS 3e-7
 
 typedef struct
 {
@@ -218,6 +218,8 @@ ant_rotation_curve (const AntSeries *series, const uint8_t *masked, const AntRot
   curve.work = memory + 5 * most;
   curve.basis = memory + 7 * most;
   fill_bins (&curve, series, masked, per_bin);
+  for (size_t i = 0; i < series->n; i++)
+    curve_ppm[i] = NAN;
   if (curve.bins)
     slide (&curve, series, memory + 6 * most, curve_ppm);
   free (memory);

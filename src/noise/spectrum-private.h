@@ -1,4 +1,4 @@
-/* spectrum-private.h - what spectrum.c and whittle.c share. */
+/* spectrum-private.h - what spectrum.c, expectation.c and whittle.c share. */
 #pragma once
 
 #include <fftw3.h>
@@ -18,6 +18,7 @@ struct _AntSpectrum
   double sum_squares; /* of the taper */
   double mean_error_ppm, mean_count; /* what stands for the measurements in ant_noise_model_variance */
   fftw_plan forward, backward;       /* of 2 length */
+  AntSpectrum *steps; /* the same of the differences of neighbours, with the same bins; NULL where too few */
 };
 
 /* Room for the transforms of one thread. */
@@ -27,6 +28,17 @@ typedef struct
   double *real;                 /* [2 length] */
   fftw_complex *complex, *cross; /* [length+1] */
 } AntSpectrumWork;
+
+static inline double
+ant_squared (const fftw_complex z)
+{
+  return z[0] * z[0] + z[1] * z[1];
+}
+
+/* value [n] times factor [n] (NULL: 1) into real [2 length], zero beyond. */
+void ant_spectrum_pad (const AntSpectrum *spectrum, const double *value, const double *factor, double *real);
+/* Of real [2 length], into complex [length+1]. */
+void ant_spectrum_transform (const AntSpectrum *spectrum, double *real, fftw_complex *complex);
 
 AntStatus ant_spectrum_work_init (AntSpectrumWork *work, const AntSpectrum *spectrum);
 void ant_spectrum_work_clear (AntSpectrumWork *work);

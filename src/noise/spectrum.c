@@ -1,8 +1,7 @@
-/* spectrum.c - tapered periodogram of a gappy series in logarithmic bins, and its exact expectation under a model. */
+/* spectrum.c - tapered periodogram of a gappy series in logarithmic bins. */
 #include "noise/spectrum-private.h"
 #include <math.h>
 #include <stdlib.h>
-#include <string.h>
 #include "core/units.h"
 
 #define FEWEST_SAMPLES 4
@@ -83,68 +82,15 @@ cut_bins (AntSpectrum *spectrum, int bins_per_octave)
   return spectrum->frequency_cd && spectrum->power && spectrum->ordinates ? ANT_OK : ANT_NO_MEMORY;
 }
 
-AntStatus
-ant_spectrum_work_init (AntSpectrumWork *work, const AntSpectrum *spectrum)
-{
-  work->covariance = fftw_malloc (spectrum->n * sizeof (double));
-  work->real = fftw_malloc (2 * spectrum->length * sizeof (double));
-  work->complex = fftw_malloc ((spectrum->length + 1) * sizeof (fftw_complex));
-  work->cross = fftw_malloc ((spectrum->length + 1) * sizeof (fftw_complex));
-  if (work->covariance && work->real && work->complex && work->cross)
-    return ANT_OK;
-  ant_spectrum_work_clear (work);
-  return ANT_NO_MEMORY;
-}
-
-void
-ant_spectrum_work_clear (AntSpectrumWork *work)
-{
-  fftw_free (work->covariance);
-  fftw_free (work->real);
-  fftw_free (work->complex);
-  fftw_free (work->cross);
-  *work = (AntSpectrumWork){ NULL };
-}
-
-static double
-squared (const fftw_complex z)
-{
-  return z[0] * z[0] + z[1] * z[1];
-}
-
-static void
-transform (const AntSpectrum *spectrum, double *real, fftw_complex *complex)
-{
-  fftw_execute_dft_r2c (spectrum->forward, real, complex);
-}
-
-/* value [n] times factor [n] (NULL: 1) into real [2 length], zero beyond. */
-static void
-pad (const AntSpectrum *spectrum, const double *value, const double *factor, double *real)
-{
-  for (size_t i = 0; i < spectrum->n; i++)
-    real[i] = factor ? value[i] * factor[i] : value[i];
-  memset (real + spectrum->n, 0, (2 * spectrum->length - spectrum->n) * sizeof *real);
-}
-
-/* The same for a function of lag, mirrored to negative lags. */
-static void
-pad_even (const AntSpectrum *spectrum, const double *value, const double *factor, double *real)
-{
-  pad (spectrum, value, factor, real);
-  for (size_t i = 1; i < spectrum->n; i++)
-    real[2 * spectrum->length - i] = real[i];
-}
-
 /* The taper's own transform and autocorrelation, and how many independent ordinates a bin holds: ordinates d apart are
  * correlated by the transform of the squared taper, |U_d|^2 / U_0^2, so that K of them count as
  * K^2 / sum over |d| < K of (K - |d|) |U_d|^2 / U_0^2. */
 static void
 study_taper (AntSpectrum *spectrum, AntSpectrumWork *work)
 {
-  pad (spectrum, spectrum->taper, spectrum->taper, work->real);
-  transform (spectrum, work->real, work->complex);
-  double top = squared (work->complex[0]);
+  ant_spectrum_pad (spectrum, spectrum->taper, spectrum->taper, work->real);
+  ant_spectrum_transform (spectrum, work->real, work->complex);
+  double top = ant_squared (work->complex[0]);
   size_t widest = 0;
   for (size_t b = 0; b < spectrum->bins; b++)
     {
@@ -156,7 +102,7 @@ study_taper (AntSpectrum *spectrum, AntSpectrumWork *work)
   sum[0] = moment[0] = 0;
   for (size_t d = 1; d < widest; d++)
     {
-      double c = squared (work->complex[2 * d]) / top;
+      double c = ant_squared (work->complex[2 * d]) / top;
       sum[d] = sum[d - 1] + c;
       moment[d] = moment[d - 1] + (double) d * c;
     }
@@ -167,11 +113,11 @@ study_taper (AntSpectrum *spectrum, AntSpectrumWork *work)
       spectrum->ordinates[b] = k * k / (k + 2 * (k * sum[count - 1] - moment[count - 1]));
     }
 
-  pad (spectrum, spectrum->taper, NULL, work->real);
-  transform (spectrum, work->real, spectrum->taper_transform);
+  ant_spectrum_pad (spectrum, spectrum->taper, NULL, work->real);
+  ant_spectrum_transform (spectrum, work->real, spectrum->taper_transform);
   for (size_t k = 0; k <= spectrum->length; k++)
     {
-      work->complex[k][0] = squared (spectrum->taper_transform[k]);
+      work->complex[k][0] = ant_squared (spectrum->taper_transform[k]);
       work->complex[k][1] = 0;
     }
   fftw_execute_dft_c2r (spectrum->backward, work->complex, work->real);
@@ -192,15 +138,15 @@ measure (AntSpectrum *spectrum, const AntSeries *series, AntSpectrumWork *work)
   double mean = sum / weights;
   for (size_t i = 0; i < series->n; i++)
     work->covariance[i] = spectrum->taper[i] > 0 ? (double) series->value_ppm[i] - mean : 0;
-  pad (spectrum, work->covariance, spectrum->taper, work->real);
-  transform (spectrum, work->real, work->complex);
+  ant_spectrum_pad (spectrum, work->covariance, spectrum->taper, work->real);
+  ant_spectrum_transform (spectrum, work->real, work->complex);
   double scale = 2 * spectrum->step_d / spectrum->sum_squares;
   for (size_t b = 0; b < spectrum->bins; b++)
     {
       double power = 0, log_sum = 0;
       for (size_t k = spectrum->first[b]; k < spectrum->first[b + 1]; k++)
         {
-          power += squared (work->complex[2 * k]);
+          power += ant_squared (work->complex[2 * k]);
           log_sum += log ((double) k);
         }
       double count = (double) (spectrum->first[b + 1] - spectrum->first[b]);
@@ -226,14 +172,9 @@ allocate (AntSpectrum *spectrum, AntSpectrumWork *work)
   return spectrum->forward && spectrum->backward ? ANT_OK : ANT_NO_MEMORY;
 }
 
-AntSpectrum *
-ant_spectrum_new (const AntSeries *series, int bins_per_octave, AntStatus *status)
+static AntSpectrum *
+study (const AntSeries *series, int bins_per_octave, AntStatus *status)
 {
-  AntStatus ignored;
-  status = status ? status : &ignored;
-  *status = ANT_BAD_ARGUMENT;
-  if (bins_per_octave < 1 || !(series->step_d > 0) || series->n > (size_t) 1 << 29)
-    return NULL;
   *status = ANT_NO_DATA;
   if (ant_series_observed (series, 1) < FEWEST_SAMPLES)
     return NULL;
@@ -261,11 +202,51 @@ ant_spectrum_new (const AntSeries *series, int bins_per_octave, AntStatus *statu
   return NULL;
 }
 
+/* The differences of neighbours, each at the place of the later one, so that both spectra have the same bins. */
+static AntSpectrum *
+study_steps (const AntSeries *series, int bins_per_octave, AntStatus *status)
+{
+  float *step = malloc (series->n * sizeof *step);
+  *status = ANT_NO_MEMORY;
+  if (!step)
+    return NULL;
+  for (size_t i = 0; i < series->n; i++)
+    {
+      int both = i > 0 && is_fit_worthy (series, i) && is_fit_worthy (series, i - 1);
+      step[i] = both ? series->value_ppm[i] - series->value_ppm[i - 1] : NAN;
+    }
+  AntSeries steps = { .n = series->n, .step_d = series->step_d, .start_d = series->start_d, .value_ppm = step };
+  AntSpectrum *spectrum = study (&steps, bins_per_octave, status);
+  free (step);
+  return spectrum;
+}
+
+AntSpectrum *
+ant_spectrum_new (const AntSeries *series, int bins_per_octave, AntStatus *status)
+{
+  AntStatus ignored;
+  status = status ? status : &ignored;
+  *status = ANT_BAD_ARGUMENT;
+  if (bins_per_octave < 1 || !(series->step_d > 0) || series->n > (size_t) 1 << 29)
+    return NULL;
+  AntSpectrum *spectrum = study (series, bins_per_octave, status);
+  if (!spectrum)
+    return NULL;
+  spectrum->steps = study_steps (series, bins_per_octave, status);
+  if (*status == ANT_NO_DATA) /* no neighbours: the values have to do */
+    *status = ANT_OK;
+  if (*status == ANT_OK)
+    return spectrum;
+  ant_spectrum_free (spectrum);
+  return NULL;
+}
+
 void
 ant_spectrum_free (AntSpectrum *spectrum)
 {
   if (!spectrum)
     return;
+  ant_spectrum_free (spectrum->steps);
   free (spectrum->first);
   free (spectrum->frequency_cd);
   free (spectrum->power);
@@ -302,82 +283,4 @@ const double *
 ant_spectrum_ordinates (const AntSpectrum *spectrum)
 {
   return spectrum->ordinates;
-}
-
-/* With Z_k the transform of taper times noise and W_k that of the taper, removing the tapered mean leaves
- * X_k = Z_k - Z_0 W_k/W_0. So E|X_k|^2 = E|Z_k|^2 - 2 Re (W_k* C_k)/W_0 + |W_k|^2 C_0/W_0^2 where
- * C_k = E (Z_k Z_0) is the transform of taper * (covariance convolved with taper), put into work->cross. */
-static void
-cross_with_mean (const AntSpectrum *spectrum, AntSpectrumWork *work)
-{
-  pad_even (spectrum, work->covariance, NULL, work->real);
-  transform (spectrum, work->real, work->complex);
-  for (size_t k = 0; k <= spectrum->length; k++)
-    {
-      double gain = work->complex[k][0] / (2 * (double) spectrum->length); /* of an even function: real */
-      work->complex[k][0] = gain * spectrum->taper_transform[k][0];
-      work->complex[k][1] = gain * spectrum->taper_transform[k][1];
-    }
-  fftw_execute_dft_c2r (spectrum->backward, work->complex, work->real);
-  pad (spectrum, work->real, spectrum->taper, work->real);
-  transform (spectrum, work->real, work->cross);
-}
-
-void
-ant_spectrum_expect (const AntSpectrum *spectrum, AntSpectrumWork *work, int mean, double *out)
-{
-  if (mean)
-    cross_with_mean (spectrum, work);
-  pad_even (spectrum, work->covariance, spectrum->overlap, work->real);
-  transform (spectrum, work->real, work->complex);
-  const fftw_complex *taper = (const fftw_complex *) spectrum->taper_transform;
-  double total = taper[0][0];
-  for (size_t b = 0; b < spectrum->bins; b++)
-    {
-      double sum = 0, removed = 0;
-      for (size_t k = 2 * spectrum->first[b]; k < 2 * spectrum->first[b + 1]; k += 2)
-        {
-          sum += work->complex[k][0];
-          if (mean)
-            removed += 2 * (taper[k][0] * work->cross[k][0] + taper[k][1] * work->cross[k][1])
-                       - squared (taper[k]) * work->cross[0][0] / total;
-        }
-      double count = (double) (spectrum->first[b + 1] - spectrum->first[b]);
-      out[b] = 2 * spectrum->step_d * (sum - removed / (total * spectrum->sum_squares)) / count;
-    }
-}
-
-double
-ant_spectrum_white (const AntSpectrum *spectrum, const AntNoiseModel *model)
-{
-  return ant_noise_model_variance (model, spectrum->mean_error_ppm, spectrum->mean_count);
-}
-
-AntStatus
-ant_spectrum_expected (const AntSpectrum *spectrum, const AntNoiseModel *model, double *out)
-{
-  AntSpectrumWork work;
-  if (ant_noise_model_check (model) != ANT_OK)
-    return ANT_BAD_ARGUMENT;
-  AntStatus status = ant_spectrum_work_init (&work, spectrum);
-  if (status != ANT_OK)
-    return status;
-  for (size_t i = 0; i < spectrum->n; i++)
-    work.covariance[i] = ant_noise_model_covariance (model, (double) i * spectrum->step_d);
-  work.covariance[0] += ant_spectrum_white (spectrum, model);
-  ant_spectrum_expect (spectrum, &work, 1, out);
-  ant_spectrum_work_clear (&work);
-  return ANT_OK;
-}
-
-AntStatus
-ant_spectrum_unmasked (const AntSpectrum *spectrum, const AntNoiseModel *model, double *out)
-{
-  AntStatus status = ant_spectrum_expected (spectrum, model, out);
-  if (status != ANT_OK)
-    return status;
-  double white = ant_noise_white_psd (ant_spectrum_white (spectrum, model), spectrum->step_d);
-  for (size_t b = 0; b < spectrum->bins; b++)
-    out[b] = spectrum->power[b] * (ant_noise_model_psd (model, spectrum->frequency_cd[b]) + white) / out[b];
-  return ANT_OK;
 }

@@ -1,30 +1,38 @@
 /* whittle.c - fit a noise model to the binned spectrum: the debiased Whittle likelihood by a matrix of hats.
  *
- * Between knots, 6 to the octave, the model's spectrum is taken as piecewise linear: a sum of hats whose values are the
+ * Between knots, 8 to the octave, the model's spectrum is taken as piecewise linear: a sum of hats whose values are the
  * spectrum at the knots. What each hat puts into each bin through this mask is computed once; then a likelihood costs
  * one small matrix product. Narrow parts (and all whose time is held) would fall between the knots: each of them gets a
- * column of its own from its exact covariance, with its time as it stands. */
+ * column of its own from its exact covariance, with its time as it stands.
+ *
+ * Each bin is taken from the values or from the differences of neighbours, whichever the gaps spoil less: steep slow
+ * noise leaks through gaps into all of the fast bins of the values (as f^-2, from the edges), white noise leaks into
+ * the slow bins of the differences. The differences of stationary noise are stationary, so both are predicted exactly
+ * (differencing before a Whittle fit: Sykulski et al. 2019, section 6). */
 #include <math.h>
 #include <stdlib.h>
 #include "core/units.h"
 #include "noise/noise-fit.h"
 #include "noise/spectrum-private.h"
 
-#define KNOTS_PER_OCTAVE 6
+#define KNOTS_PER_OCTAVE 8
 #define LOWEST_KNOT 0.25        /* in units of 1/length of the record */
 #define HIGHEST_KNOT 8.0        /* in units of Nyquist's frequency */
 #define MEAN_MATTERS_BELOW 16.0 /* in units of 1/length: the removed mean took nothing from faster hats */
 #define BROAD_QUALITY 2.0
+#define CLEARLY_LESS 0.5        /* the start is rough: in doubt the values themselves */
 #define BLOCK 128
 #define FIRST_STEP_LN 0.3
 #define DIFFERENCE_LN 1e-4
 #define MAX_STEPS 200
-#define SETTLED 1e-3
+#define SETTLED 1e-5
 
 typedef struct
 {
   const AntSpectrum *spectrum;
   AntNoiseModel model;
+  unsigned char *stepwise; /* [bins] nonzero: the bin is taken from the differences */
+  double *power, *ordinates; /* [bins] of the kind taken */
   size_t knots;
   double *knot_cd;   /* [knots] */
   double *hat;       /* [knots][bins] */
@@ -74,6 +82,61 @@ fill_ramp (double low_cd, double high_cd, double step_d, size_t n, double *work,
   out[0] = middle;
 }
 
+/* The covariance of the differences of neighbours from that of the values, in place; the last lag, beyond the reach of
+ * n-1 differences, is left at 0. */
+static void
+difference_covariance (size_t n, double *covariance)
+{
+  double before = covariance[1];
+  for (size_t i = 0; i + 1 < n; i++)
+    {
+      double here = covariance[i];
+      covariance[i] = 2 * here - before - covariance[i + 1];
+      before = here;
+    }
+  covariance[n - 1] = 0;
+}
+
+/* Expected power of noise with work->covariance (which is lost) in the bins as taken. */
+static void
+expect_as_taken (Whittle *whittle, AntSpectrumWork *work, int mean, double *out)
+{
+  const AntSpectrum *spectrum = whittle->spectrum;
+  ant_spectrum_expect (spectrum, work, mean, out);
+  if (!spectrum->steps)
+    return;
+  difference_covariance (spectrum->n, work->covariance);
+  ant_spectrum_expect (spectrum->steps, work, mean, whittle->expected);
+  for (size_t b = 0; b < spectrum->bins; b++)
+    if (whittle->stepwise[b])
+      out[b] = whittle->expected[b];
+}
+
+/* Judged by the model at the start: where the differences' expected power, over the gain of differencing, is less than
+ * that of the values, less of it has leaked in from elsewhere. */
+static void
+take_bins (Whittle *whittle, AntSpectrumWork *work)
+{
+  const AntSpectrum *spectrum = whittle->spectrum, *steps = spectrum->steps;
+  for (size_t i = 0; steps && i < spectrum->n; i++)
+    work->covariance[i] = ant_noise_model_covariance (&whittle->model, (double) i * spectrum->step_d);
+  work->covariance[0] += ant_spectrum_white (spectrum, &whittle->model);
+  if (steps)
+    {
+      ant_spectrum_expect (spectrum, work, 1, whittle->flat);
+      difference_covariance (spectrum->n, work->covariance);
+      ant_spectrum_expect (steps, work, 1, whittle->expected);
+    }
+  for (size_t b = 0; b < spectrum->bins; b++)
+    {
+      double s = 2 * sin (ANT_PI * spectrum->frequency_cd[b] * spectrum->step_d);
+      whittle->stepwise[b] = steps && whittle->expected[b] < CLEARLY_LESS * s * s * whittle->flat[b];
+      const AntSpectrum *taken = whittle->stepwise[b] ? steps : spectrum;
+      whittle->power[b] = taken->power[b];
+      whittle->ordinates[b] = taken->ordinates[b];
+    }
+}
+
 /* A hat is the difference of two ramps; the first reaches down to f = 0, the last ends at its knot (what the model has
  * beyond is folded in as white noise). */
 static AntStatus
@@ -98,7 +161,7 @@ build_hats (Whittle *whittle, AntSpectrumWork *work)
         }
       for (size_t i = 0; i < n; i++)
         work->covariance[i] = g ? above[i] - below[i] : above[i];
-      ant_spectrum_expect (spectrum, work, knot < mean_matters, whittle->hat + g * spectrum->bins);
+      expect_as_taken (whittle, work, knot < mean_matters, whittle->hat + g * spectrum->bins);
       double *swap = below;
       below = above;
       above = swap;
@@ -114,7 +177,7 @@ build_columns (Whittle *whittle, AntSpectrumWork *work)
   const AntSpectrum *spectrum = whittle->spectrum;
   for (size_t i = 0; i < spectrum->n; i++)
     work->covariance[i] = i == 0;
-  ant_spectrum_expect (spectrum, work, 1, whittle->flat);
+  expect_as_taken (whittle, work, 1, whittle->flat);
   for (size_t p = 0; p < whittle->model.n_parts; p++)
     {
       AntNoisePart part = whittle->model.part[p];
@@ -123,7 +186,7 @@ build_columns (Whittle *whittle, AntSpectrumWork *work)
       part.rms_ppm = 1;
       for (size_t i = 0; i < spectrum->n; i++)
         work->covariance[i] = ant_noise_part_covariance (&part, (double) i * spectrum->step_d);
-      ant_spectrum_expect (spectrum, work, 1, whittle->column + p * spectrum->bins);
+      expect_as_taken (whittle, work, 1, whittle->column + p * spectrum->bins);
     }
 }
 
@@ -165,15 +228,14 @@ static double
 objective (void *data, const double *theta_ln)
 {
   Whittle *whittle = data;
-  const AntSpectrum *spectrum = whittle->spectrum;
   AntNoiseModel model = whittle->model;
   ant_noise_model_set (&model, theta_ln);
   if (ant_noise_model_check (&model) != ANT_OK)
     return INFINITY;
   expect_by_hats (whittle, &model);
   double sum = ant_noise_model_penalty (&model);
-  for (size_t b = 0; b < spectrum->bins; b++)
-    sum += spectrum->ordinates[b] * (log (whittle->expected[b]) + spectrum->power[b] / whittle->expected[b]);
+  for (size_t b = 0; b < whittle->spectrum->bins; b++)
+    sum += whittle->ordinates[b] * (log (whittle->expected[b]) + whittle->power[b] / whittle->expected[b]);
   return isfinite (sum) ? sum : HUGE_VAL;
 }
 
@@ -184,19 +246,24 @@ prepare (Whittle *whittle)
   double lowest = LOWEST_KNOT / ((double) spectrum->n * spectrum->step_d);
   double highest = HIGHEST_KNOT * 0.5 / spectrum->step_d;
   whittle->knots = 2 + (size_t) (KNOTS_PER_OCTAVE * log2 (highest / lowest));
-  whittle->knot_cd = malloc (whittle->knots * sizeof (double));
-  whittle->hat = malloc (whittle->knots * spectrum->bins * sizeof (double));
-  whittle->column = malloc ((whittle->model.n_parts + 1) * spectrum->bins * sizeof (double));
-  whittle->flat = malloc (spectrum->bins * sizeof (double));
-  whittle->expected = malloc (spectrum->bins * sizeof (double));
-  if (!whittle->knot_cd || !whittle->hat || !whittle->column || !whittle->flat || !whittle->expected)
+  size_t bins = spectrum->bins;
+  whittle->knot_cd = malloc ((whittle->knots + (whittle->knots + whittle->model.n_parts + 4) * bins) * sizeof (double));
+  whittle->stepwise = malloc (bins);
+  if (!whittle->knot_cd || !whittle->stepwise)
     return ANT_NO_MEMORY;
+  whittle->hat = whittle->knot_cd + whittle->knots;
+  whittle->column = whittle->hat + whittle->knots * bins;
+  whittle->flat = whittle->column + whittle->model.n_parts * bins;
+  whittle->expected = whittle->flat + bins;
+  whittle->power = whittle->expected + bins;
+  whittle->ordinates = whittle->power + bins;
   for (size_t g = 0; g < whittle->knots; g++)
     whittle->knot_cd[g] = lowest * pow (highest / lowest, (double) g / (double) (whittle->knots - 1));
   AntSpectrumWork work;
   AntStatus status = ant_spectrum_work_init (&work, spectrum);
   if (status != ANT_OK)
     return status;
+  take_bins (whittle, &work);
   build_columns (whittle, &work);
   status = build_hats (whittle, &work);
   ant_spectrum_work_clear (&work);
@@ -229,9 +296,6 @@ ant_spectrum_whittle_fit (const AntSpectrum *spectrum, AntNoiseModel *model)
       model->error_scale = whittle.model.error_scale;
     }
   free (whittle.knot_cd);
-  free (whittle.hat);
-  free (whittle.column);
-  free (whittle.flat);
-  free (whittle.expected);
+  free (whittle.stepwise);
   return status;
 }

@@ -92,21 +92,16 @@ spectrum_of (const AntSeries *series)
 }
 
 static void
-fit_drawn (AntMask mask, guint64 seed)
+fit_drawn (const AntNoiseModel *truth, AntMask mask, guint64 seed, double low_hz)
 {
   enum { n = 43200 };
   g_autofree float *value = g_new (float, n);
-  AntNoiseModel truth = true_model ();
-  AntSeries series = draw (&truth, mask, n, seed, value);
+  AntSeries series = draw (truth, mask, n, seed, value);
   AntNoiseModel fit = default_model (&series, 0, NULL);
   AntSpectrum *spectrum = spectrum_of (&series);
-  g_test_timer_start ();
   g_assert_cmpint (ant_spectrum_whittle_fit (spectrum, &fit), ==, ANT_OK);
-  double worst = worst_error (&fit, &truth, 1e-5, 8e-3);
-  g_test_message ("30 d: %.2f s, worst %.3f", g_test_timer_elapsed (), worst);
-  for (size_t p = 0; p < fit.n_parts; p++)
-    g_test_message ("%s: %.2f ppm, %.5f d", ant_noise_part_role (&fit.part[p]), fit.part[p].rms_ppm, fit.part[p].time_d);
-  g_test_message ("white: %.2f ppm", fit.white_ppm);
+  double worst = worst_error (&fit, truth, low_hz, 8e-3);
+  g_test_message ("worst %.3f, white %.2f ppm", worst, fit.white_ppm);
   g_assert_cmpfloat (worst, <, 0.25);
   ant_spectrum_free (spectrum);
 }
@@ -114,13 +109,25 @@ fit_drawn (AntMask mask, guint64 seed)
 static void
 test_low_orbit_record_gives_back_its_spectrum (void)
 {
-  fit_drawn (ANT_MASK_LOW_ORBIT, 101);
+  AntNoiseModel truth = true_model ();
+  fit_drawn (&truth, ANT_MASK_LOW_ORBIT, 101, 1e-5);
 }
 
 static void
 test_nearly_whole_record_gives_back_its_spectrum (void)
 {
-  fit_drawn (ANT_MASK_L1, 102);
+  AntNoiseModel truth = true_model ();
+  fit_drawn (&truth, ANT_MASK_L1, 102, 1e-5);
+}
+
+/* Rotation of 1000 ppm leaks through the gaps into every bin of the values; the differences keep it out. */
+static void
+test_rotation_does_not_drown_the_fast_end (void)
+{
+  AntNoiseModel truth = true_model ();
+  truth.part[truth.n_parts++] = (AntNoisePart){ ANT_OSCILLATOR, 1000, 27, HARVEY };
+  fit_drawn (&truth, ANT_MASK_LOW_ORBIT, 107, 1e-4);
+  fit_drawn (&truth, ANT_MASK_L1, 108, 1e-4);
 }
 
 /* Data that are exactly the expectation leave only the error of the hats, which interpolate f^-4 by straight lines. */
@@ -150,7 +157,7 @@ test_exact_expectation_gives_back_the_model (void)
   g_assert_cmpint (ant_spectrum_whittle_fit (spectrum, &fit), ==, ANT_OK);
   double worst = worst_error (&fit, &truth, 3e-6, 8e-3);
   g_test_message ("worst %.4f", worst);
-  g_assert_cmpfloat (worst, <, 0.06);
+  g_assert_cmpfloat (worst, <, 0.05);
   ant_spectrum_free (spectrum);
 }
 
@@ -223,6 +230,7 @@ main (int argc, char **argv)
                    test_low_orbit_record_gives_back_its_spectrum);
   g_test_add_func ("/noise/whittle/nearly-whole-record-gives-back-its-spectrum",
                    test_nearly_whole_record_gives_back_its_spectrum);
+  g_test_add_func ("/noise/whittle/rotation-does-not-drown-the-fast-end", test_rotation_does_not_drown_the_fast_end);
   g_test_add_func ("/noise/whittle/exact-expectation-gives-back-the-model",
                    test_exact_expectation_gives_back_the_model);
   g_test_add_func ("/noise/whittle/line-gets-its-amplitude", test_line_gets_its_amplitude);
