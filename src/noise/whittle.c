@@ -285,7 +285,8 @@ ant_spectrum_whittle_fit (const AntSpectrum *spectrum, AntNoiseModel *model)
   AntStatus status = n ? prepare (&whittle) : ANT_OK;
   if (n && status == ANT_OK)
     {
-      status = ant_minimise (n, theta, objective, &whittle, FIRST_STEP_LN, DIFFERENCE_LN, MAX_STEPS, SETTLED, NULL);
+      AntFitOptions options = { .max_steps = MAX_STEPS, .settled_lnl = SETTLED };
+      status = ant_minimise (n, theta, objective, &whittle, FIRST_STEP_LN, DIFFERENCE_LN, &options, NULL);
       ant_noise_model_set (&whittle.model, theta);
       for (size_t p = 0; p < model->n_parts; p++)
         {
