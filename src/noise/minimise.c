@@ -16,7 +16,8 @@ typedef struct
 static double
 value_at (Search *search, const double *x)
 {
-  double value = search->f (search->data, x);
+  double value;
+  search->f (search->data, 1, x, &value);
   search->evaluations++;
   return isfinite (value) ? value : HUGE_VAL;
 }
@@ -24,19 +25,23 @@ value_at (Search *search, const double *x)
 static void
 gradient (Search *search, const double *x, double fx, double *g)
 {
-  double moved[ANT_MAX_FREE];
-  memcpy (moved, x, search->n * sizeof *x);
-  for (size_t i = 0; i < search->n; i++)
+  size_t n = search->n;
+  double moved[ANT_MAX_FREE * ANT_MAX_FREE] = { 0 };
+  for (size_t i = 0; i < n; i++)
     {
-      moved[i] = x[i] + search->h;
-      double there = value_at (search, moved);
-      if (!isfinite (there)) /* a wall ahead: look the other way */
+      memcpy (moved + i * n, x, n * sizeof *x);
+      moved[i * n + i] += search->h;
+    }
+  search->f (search->data, n, moved, g);
+  search->evaluations += n;
+  for (size_t i = 0; i < n; i++)
+    {
+      if (!isfinite (g[i])) /* a wall ahead: look the other way */
         {
-          moved[i] = x[i] - search->h;
-          there = 2 * fx - value_at (search, moved);
+          moved[i * n + i] = x[i] - search->h;
+          g[i] = 2 * fx - value_at (search, moved + i * n);
         }
-      g[i] = (there - fx) / search->h;
-      moved[i] = x[i];
+      g[i] = (g[i] - fx) / search->h;
     }
 }
 

@@ -13,15 +13,27 @@ typedef struct
   const AntSeries *series;
 } Problem;
 
-static double
-minus_log_posterior (void *data, const double *theta)
+/* One point by the single likelihood, several by lanes. */
+static void
+minus_log_posterior (void *data, size_t n_points, const double *theta, double *value)
 {
   Problem *problem = data;
-  double log_likelihood;
-  ant_noise_model_set (&problem->model, theta);
-  if (ant_noise_log_likelihood (&problem->model, problem->series, &log_likelihood))
-    return HUGE_VAL;
-  return ant_noise_model_penalty (&problem->model) - log_likelihood;
+  size_t n = ant_noise_model_get (&problem->model, NULL);
+  for (size_t done = 0; done < n_points; done += ANT_LANES)
+    {
+      AntNoiseModel model[ANT_LANES];
+      double log_likelihood[ANT_LANES];
+      size_t lanes = n_points - done < ANT_LANES ? n_points - done : ANT_LANES;
+      for (size_t l = 0; l < lanes; l++)
+        {
+          model[l] = problem->model;
+          ant_noise_model_set (&model[l], theta + (done + l) * n);
+        }
+      AntStatus status = lanes == 1 ? ant_noise_log_likelihood (model, problem->series, log_likelihood)
+                                    : ant_noise_log_likelihoods (lanes, model, problem->series, log_likelihood);
+      for (size_t l = 0; l < lanes; l++)
+        value[done + l] = status ? HUGE_VAL : ant_noise_model_penalty (&model[l]) - log_likelihood[l];
+    }
 }
 
 AntStatus
@@ -48,21 +60,27 @@ AntStatus
 ant_noise_fit_unconstrained (const AntNoiseModel *model, const AntSeries *series, unsigned char *unconstrained)
 {
   Problem problem = { *model, series };
-  double theta[ANT_MAX_FREE], h = 0.1;
-  size_t n = ant_noise_model_get (model, theta);
-  double here = minus_log_posterior (&problem, theta), penalty_here = ant_noise_model_penalty (&problem.model);
-  if (!isfinite (here))
+  double here[ANT_MAX_FREE], theta[(2 * ANT_MAX_FREE + 1) * ANT_MAX_FREE], value[2 * ANT_MAX_FREE + 1], h = 0.1;
+  size_t n = ant_noise_model_get (model, here);
+  for (size_t p = 0; p <= 2 * n; p++)
+    {
+      for (size_t i = 0; i < n; i++)
+        theta[p * n + i] = here[i];
+      if (p < 2 * n)
+        theta[p * n + p / 2] += p % 2 ? h : -h;
+    }
+  minus_log_posterior (&problem, 2 * n + 1, theta, value);
+  if (!isfinite (value[2 * n]))
     return ANT_BAD_ARGUMENT;
+  double centre = ant_noise_model_penalty (model);
   for (size_t i = 0; i < n; i++)
     {
-      double centre = theta[i], curvature = -2 * here, prior = -2 * penalty_here;
-      for (int side = -1; side <= 1; side += 2)
+      double curvature = value[2 * i] + value[2 * i + 1] - 2 * value[2 * n], prior = -2 * centre;
+      for (size_t side = 0; side < 2; side++)
         {
-          theta[i] = centre + side * h;
-          curvature += minus_log_posterior (&problem, theta);
+          ant_noise_model_set (&problem.model, theta + (2 * i + side) * n);
           prior += ant_noise_model_penalty (&problem.model);
         }
-      theta[i] = centre;
       unconstrained[i] = curvature - prior < prior; /* both over h^2 */
     }
   return ANT_OK;

@@ -35,9 +35,9 @@ AntStatus ant_noise_fit (AntNoiseModel *model, const AntSeries *series, const An
  * that of the prior. [count of ant_noise_model_get]. */
 AntStatus ant_noise_fit_unconstrained (const AntNoiseModel *model, const AntSeries *series, unsigned char *unconstrained);
 
-/* Generic BFGS minimiser used by both fits: f returns the value (inf where not defined).
- * x [n] in/out; step_ln: size of the first trial step; h: forward-difference step. Own code because a library's line
- * search pays a gradient (n+1 likelihoods) per trial point where this one pays a single value. */
-typedef double (*AntObjective) (void *data, const double *x);
+/* Generic BFGS minimiser used by both fits: f writes the values (inf where not defined) at n_points points, each of n
+ * numbers, one after another. x [n] in/out; first_step: length of the first trial step; h: forward-difference step. Own code
+ * because a gradient is one call of f for n points here, which f does for little more than the price of one. */
+typedef void (*AntObjective) (void *data, size_t n_points, const double *x, double *value);
 AntStatus ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step, double h,
                         const AntFitOptions *options, AntFitReport *report);

@@ -22,6 +22,12 @@ void ant_whitener_free (AntWhitener *whitener);
 /* ln likelihood of the series' values, with no storage: for fits. Spikes are left out. Same value as through a factor. */
 AntStatus ant_noise_log_likelihood (const AntNoiseModel *model, const AntSeries *series, double *log_likelihood);
 
+/* The same for up to ANT_LANES models at once, which must have the same parts and differ in their numbers only: a gradient's points
+ * for little more than the price of one. log_likelihood [n] out; -HUGE_VAL where a model is not positive or has a bad
+ * parameter. Digits differ from the single one's in the last few. */
+#define ANT_LANES 8
+AntStatus ant_noise_log_likelihoods (size_t n, const AntNoiseModel *model, const AntSeries *series, double *log_likelihood);
+
 size_t ant_whitener_n (const AntWhitener *whitener);          /* grid places */
 size_t ant_whitener_observed (const AntWhitener *whitener);   /* observed places */
 const unsigned *ant_whitener_places (const AntWhitener *whitener); /* [observed] their grid places, rising */
@@ -40,7 +46,6 @@ AntStatus ant_whitener_solve (const AntWhitener *whitener, const float *value, d
 /* s' C^-1 s, exact, in (n_shape + a checkpoint interval) J operations. */
 double ant_whitener_energy (const AntWhitener *whitener, ptrdiff_t first, size_t n_shape, const double *shape);
 
-#define ANT_LANES 8
 /* The same for ANT_LANES shapes that begin at one place, stored interleaved shape[j*ANT_LANES + lane], j < n_shape;
  * a lane that is shorter is padded with zeros (length[lane] <= n_shape says where it ends).
  * energy [ANT_LANES] out: s'C^-1 s. moment [ANT_LANES] out: s'z with z from ant_whitener_solve.

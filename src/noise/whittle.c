@@ -225,18 +225,26 @@ expect_by_hats (Whittle *whittle, const AntNoiseModel *model)
 }
 
 static double
-objective (void *data, const double *theta_ln)
+objective_at (Whittle *whittle, const double *theta_ln)
 {
-  Whittle *whittle = data;
   AntNoiseModel model = whittle->model;
   ant_noise_model_set (&model, theta_ln);
   if (ant_noise_model_check (&model) != ANT_OK)
-    return INFINITY;
+    return HUGE_VAL;
   expect_by_hats (whittle, &model);
   double sum = ant_noise_model_penalty (&model);
   for (size_t b = 0; b < whittle->spectrum->bins; b++)
     sum += whittle->ordinates[b] * (log (whittle->expected[b]) + whittle->power[b] / whittle->expected[b]);
   return isfinite (sum) ? sum : HUGE_VAL;
+}
+
+static void
+objective (void *data, size_t n_points, const double *theta_ln, double *value)
+{
+  Whittle *whittle = data;
+  size_t n = ant_noise_model_get (&whittle->model, NULL);
+  for (size_t p = 0; p < n_points; p++)
+    value[p] = objective_at (whittle, theta_ln + p * n);
 }
 
 static AntStatus

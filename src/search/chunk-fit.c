@@ -112,9 +112,10 @@ judge (const AntWhitener *whitener, const AntSeries *part, AntChunkHealth *healt
 }
 
 AntStatus
-ant_chunk_fit (AntChunk *chunk, const AntSeries *part, uint8_t *spike, size_t max_steps)
+ant_chunk_fit (AntChunk *chunk, const AntSeries *part, uint8_t *spike, size_t max_steps, int warm)
 {
-  AntFitOptions options = { .max_steps = max_steps, .settled_lnl = 0.02, .curvature = chunk->curvature };
+  AntFitOptions options = { .max_steps = max_steps, .settled_lnl = 0.02, .curvature = chunk->curvature,
+                            .warm = warm };
   AntSeries own = *part;
   own.spike = spike;
   AntStatus status = ANT_OK;

@@ -45,11 +45,12 @@ size_t ant_chunks_plan (const AntSeries *series, const AntChunkOptions *options,
 /* Upper bound of the count, for room. */
 size_t ant_chunks_room (const AntSeries *series, const AntChunkOptions *options);
 
-/* Fit the noise of a part in place, starting from and held near `model`'s priors; spike [part->n] in/out: isolated
+/* Fit the noise of a part in place, starting from chunk->model under its priors (and, if warm, from chunk->curvature);
+ * spike [part->n] in/out: isolated
  * outliers (beyond 5.5 robust sigma of the forecast from all other samples, and from both neighbours on the same side)
  * are added with value ANT_SPIKE_FOUND and the fit repeated. Health's rms, lag and counts are filled. */
 #define ANT_SPIKE_FOUND 1
 #define ANT_SPIKE_DIP 2 /* inside a strong dip: out of the fit as long as the dip is being weighed */
-AntStatus ant_chunk_fit (AntChunk *chunk, const AntSeries *part, uint8_t *spike, size_t max_steps);
+AntStatus ant_chunk_fit (AntChunk *chunk, const AntSeries *part, uint8_t *spike, size_t max_steps, int warm);
 /* Refit with more samples masked, from the chunk's model and curvature: a few warm steps. */
 AntStatus ant_chunk_refit (const AntChunk *chunk, const AntSeries *part, AntNoiseModel *model);

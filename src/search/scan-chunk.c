@@ -123,8 +123,7 @@ set_strong_aside (Work *work)
 {
   for (size_t i = 0; i < work->n_strong; i++)
     ant_scan_mask (work->scan, work->strong[i].peak.centre, work->strong[i].peak.duration_d, 0, work->part.n, work->spike);
-  work->chunk->model = work->scan->start;
-  AntStatus status = ant_chunk_fit (work->chunk, &work->part, work->spike, FIT_STEPS);
+  AntStatus status = ant_chunk_fit (work->chunk, &work->part, work->spike, FIT_STEPS, 1);
   if (!status || status == ANT_NOT_CONVERGED)
     status = whiten (work);
   return status ? status : fit_strong (work);
@@ -194,7 +193,8 @@ static AntStatus
 run (Work *work, AntChunkHarvest *harvest)
 {
   work->chunk->model = work->scan->start;
-  AntStatus status = ant_chunk_fit (work->chunk, &work->part, work->spike, FIT_STEPS);
+  memcpy (work->chunk->curvature, work->scan->start_curvature, sizeof work->chunk->curvature);
+  AntStatus status = ant_chunk_fit (work->chunk, &work->part, work->spike, FIT_STEPS, 1);
   if (!status || status == ANT_NOT_CONVERGED)
     status = whiten (work);
   if (!status)

@@ -33,6 +33,7 @@ struct _AntScan
   AntScanOptions options;
   AntRefineOptions refine;
   AntTemplateBank *bank;
+  double start_curvature[ANT_MAX_FREE * ANT_MAX_FREE]; /* inverse Hessian of that fit */
   AntNoiseModel start; /* fitted to a representative stretch; its priors are centred on it */
   size_t n_chunks;
   AntChunk *chunk;

@@ -142,9 +142,10 @@ ant_scan_learn_noise (AntScan *scan)
   uint8_t *spike = calloc (part.n, 1);
   if (!spike)
     return ANT_NO_MEMORY;
-  status = ant_chunk_fit (&chunk, &part, spike, START_STEPS);
+  status = ant_chunk_fit (&chunk, &part, spike, START_STEPS, 0);
   free (spike);
   scan->start = chunk.model;
+  memcpy (scan->start_curvature, chunk.curvature, sizeof scan->start_curvature);
   if (scan->n_chunks > 1)
     ant_noise_model_centre_priors (&scan->start, CHUNK_PRIOR_LN);
   return status == ANT_NOT_CONVERGED ? ANT_OK : status;
@@ -330,6 +331,8 @@ ant_scan_expected_false (const AntScan *scan, double snr)
 {
   return ant_chance_law_expected (&scan->chance, snr);
 }
+
+AntChanceField ant_scan_chance_field (const AntScan *scan) { return scan->chance.field; }
 
 size_t
 ant_scan_refits (const AntScan *scan)

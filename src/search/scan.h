@@ -13,6 +13,7 @@
 #include "noise/noise-model.h"
 #include "search/chunk.h"
 #include "search/dip.h"
+#include "search/false-alarm.h"
 #include "search/refine.h"
 
 #define ANT_MAX_LINES 4
@@ -43,6 +44,8 @@ size_t ant_scan_brightenings (const AntScan *scan, const AntDip **dip);
 double ant_scan_threshold (const AntScan *scan);
 /* Dips of one sign expected from noise alone in this record with a final SNR of at least `snr`. */
 double ant_scan_expected_false (const AntScan *scan, double snr);
+/* What the chance law is computed from. */
+AntChanceField ant_scan_chance_field (const AntScan *scan);
 /* Candidates that were masked and refitted. */
 size_t ant_scan_refits (const AntScan *scan);
 /* [series->n] ANT_SPIKE_FOUND where an isolated outlier was left out of the fits. */

@@ -102,6 +102,33 @@ likelihood_equals_dense (Fixture *f, gconstpointer data)
   g_free (z);
 }
 
+static void
+likelihoods_of_many_models_equal_those_of_each (Fixture *f, gconstpointer data)
+{
+  AntNoiseModel model[5];
+  double together[5], alone;
+  for (int l = 0; l < 5; l++)
+    {
+      model[l] = f->model;
+      model[l].part[l].rms_ppm *= 1 + 0.2 * l;
+      model[l].part[1].time_d *= 1 + 0.1 * l;
+      model[l].white_ppm *= 1 + 0.05 * l;
+    }
+  model[3].part[0].time_d = -1;
+  g_assert_cmpint (ant_noise_log_likelihoods (5, model, &f->series, together), ==, ANT_OK);
+  for (int l = 0; l < 5; l++)
+    if (l == 3)
+      {
+        g_assert_true (together[l] == -HUGE_VAL);
+        g_assert_cmpint (ant_noise_log_likelihood (&model[l], &f->series, &alone), ==, ANT_BAD_ARGUMENT);
+      }
+    else
+      {
+        g_assert_cmpint (ant_noise_log_likelihood (&model[l], &f->series, &alone), ==, ANT_OK);
+        g_assert_cmpfloat (fabs (together[l] / alone - 1), <, 1e-12);
+      }
+}
+
 /* Shapes over gaps, over both ends of the series and across checkpoints. */
 static void
 energies_equal_dense (Fixture *f, gconstpointer data)
@@ -204,6 +231,7 @@ main (int argc, char **argv)
 #define TEST(path, function) g_test_add ("/noise/whitener/" path, Fixture, NULL, set_up, function, tear_down)
   TEST ("solution-equals-dense-algebra", solution_equals_dense);
   TEST ("likelihood-equals-dense-algebra", likelihood_equals_dense);
+  TEST ("likelihoods-of-many-models-equal-those-of-each", likelihoods_of_many_models_equal_those_of_each);
   TEST ("energies-equal-dense-algebra", energies_equal_dense);
   TEST ("innovations-have-the-stated-variance", innovations_have_the_stated_variance);
   g_test_add_func ("/noise/whitener/worked-example-of-a-box-in-correlated-noise", worked_example_of_a_box_in_correlated_noise);

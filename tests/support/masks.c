@@ -33,6 +33,6 @@ ant_mask_make (AntMask mask, size_t n, double step_d, AntRandom *random, unsigne
     }
   for (int d = 0; d < days; d++)
     lose (n, seen, (d + ant_random_uniform (random)) * 1440 * per_min, (60 + 120 * ant_random_uniform (random)) * per_min);
-  for (int i = 0; i < days / 30; i++)
+  for (int i = 0; i < (int) (days / 30 + 0.5); i++)
     lose (n, seen, ant_random_uniform (random) * (double) n, (1 + 3 * ant_random_uniform (random)) * 1440 * per_min);
 }
