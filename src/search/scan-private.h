@@ -15,6 +15,7 @@ typedef struct
   AntShapeFit fit;
   int sign;          /* +1 dip, -1 brightening */
   int strong;        /* subtracted from scan->residual */
+  int dropped;       /* the side lobe of a stronger event, or the same event found twice */
   size_t chunk;
 } AntEvent;
 

@@ -162,7 +162,7 @@ standing (AntScan *scan, size_t chunk, AntEvent ***list)
   size_t n = 0;
   *list = malloc ((scan->n_events + 1) * sizeof **list);
   for (size_t i = 0; *list && i < scan->n_events; i++)
-    if (scan->event[i].chunk == chunk
+    if (scan->event[i].chunk == chunk && !scan->event[i].dropped
         && (scan->event[i].strong || scan->event[i].sign * scan->event[i].fit.snr >= scan->threshold_snr))
       (*list)[n++] = &scan->event[i];
   return n;

@@ -221,21 +221,27 @@ by_time (const void *a, const void *b)
   return (left > right) - (left < right);
 }
 
-/* Two candidates may have climbed to one dip: keep the stronger. */
-static int
-seen_before (const AntScan *scan, const AntEvent *event)
+static AntPeak
+as_peak (const AntEvent *event)
+{
+  return (AntPeak){ .centre = event->fit.centre, .duration_d = event->fit.duration_d };
+}
+
+/* A dip pulls up its surroundings, and two candidates may have climbed to one dip: within one duration of a stronger
+ * event of either sign nothing else stands. */
+static void
+drop_side_lobes (AntScan *scan)
 {
   for (size_t i = 0; i < scan->n_events; i++)
-    {
-      const AntEvent *other = &scan->event[i];
-      if (other == event || other->sign != event->sign || fabs (other->fit.snr) < fabs (event->fit.snr)
-          || (fabs (other->fit.snr) == fabs (event->fit.snr) && other > event))
-        continue;
-      double apart_d = fabs (other->fit.centre - event->fit.centre) * scan->series.step_d;
-      if (apart_d < 0.5 * (other->fit.duration_d + event->fit.duration_d))
-        return 1;
-    }
-  return 0;
+    for (size_t j = 0; j < scan->n_events && !scan->event[i].dropped; j++)
+      {
+        const AntEvent *weak = &scan->event[i], *strong = &scan->event[j];
+        double weak_snr = fabs (weak->fit.snr), strong_snr = fabs (strong->fit.snr);
+        AntPeak at_weak = as_peak (weak), at_strong = as_peak (strong);
+        if (i == j || !(strong_snr >= scan->threshold_snr) || weak_snr > strong_snr || (weak_snr == strong_snr && i < j))
+          continue;
+        scan->event[i].dropped = ant_peaks_clash (&at_strong, &at_weak, scan->series.step_d);
+      }
 }
 
 static AntStatus
@@ -248,7 +254,7 @@ list_dips (AntScan *scan)
   for (size_t i = 0; i < scan->n_events; i++)
     {
       const AntEvent *event = &scan->event[i];
-      if (!(event->sign * event->fit.snr >= scan->threshold_snr) || seen_before (scan, event))
+      if (event->dropped || !(event->sign * event->fit.snr >= scan->threshold_snr))
         continue;
       AntDip *dip = event->sign > 0 ? &scan->dip[scan->n_dips++] : &scan->brightening[scan->n_brightenings++];
       ant_shape_fit_to_dip (&event->fit, &scan->refine, scan->series.start_d, dip);
@@ -293,7 +299,13 @@ run_slice (void *work, size_t stage, size_t slice)
 static AntStatus
 finish (void *work, size_t stage)
 {
-  return stage == SEARCH ? merge_chunks (work) : stage == TOGETHER ? list_dips (work) : ANT_OK;
+  switch (stage)
+    {
+    case SEARCH: return merge_chunks (work);
+    case WEIGH: drop_side_lobes (work); return ANT_OK;
+    case TOGETHER: drop_side_lobes (work); return list_dips (work);
+    default: return ANT_OK;
+    }
 }
 
 const AntStages *
