@@ -142,6 +142,8 @@ ant_scan_learn_noise (AntScan *scan)
   uint8_t *spike = calloc (part.n, 1);
   if (!spike)
     return ANT_NO_MEMORY;
+  if (part.spike)
+    memcpy (spike, part.spike, part.n);
   status = ant_chunk_fit (&chunk, &part, spike, START_STEPS, 0);
   free (spike);
   scan->start = chunk.model;
