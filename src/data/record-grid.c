@@ -170,7 +170,7 @@ lay_grid (AntRecord *record, AntRowOrder *order, const AntGridOptions *options, 
                               order->n);
   record->cadence_d = cadence.step_d;
   double shift_d = settle_exposure (record, options);
-  ant_row_order_judge_spans (order, record, options, shift_d);
+  ant_row_order_judge_spans (order, record, options);
   if (!ant_row_order_require_good (order, record, error) || !place_rows (record, order, &cadence, error))
     return FALSE;
   record->series.step_d = cadence.step_d;

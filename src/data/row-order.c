@@ -174,7 +174,7 @@ compare_spans (gconstpointer a, gconstpointer b)
 }
 
 void
-ant_row_order_judge_spans (const AntRowOrder *order, AntRecord *record, const AntGridOptions *options, double shift_d)
+ant_row_order_judge_spans (const AntRowOrder *order, AntRecord *record, const AntGridOptions *options)
 {
   g_autoptr (GArray) spans = g_array_new (FALSE, FALSE, sizeof (AntSpan));
   if (options->excluded)
@@ -186,11 +186,11 @@ ant_row_order_judge_spans (const AntRowOrder *order, AntRecord *record, const An
   double covered_to_d = -HUGE_VAL; /* the farthest end of the spans begun so far */
   for (gsize k = 0; k < order->n; k++)
     {
-      double middle_d = order->time_d[k] + shift_d;
-      for (; next < spans->len && g_array_index (spans, AntSpan, next).start_d <= middle_d; next++)
+      double time_d = order->time_d[k];
+      for (; next < spans->len && g_array_index (spans, AntSpan, next).start_d <= time_d; next++)
         covered_to_d = fmax (covered_to_d, g_array_index (spans, AntSpan, next).end_d);
-      gboolean outside = middle_d < options->from_d || middle_d > options->to_d; /* NaN limits compare false */
-      gboolean inside = middle_d <= covered_to_d;
+      gboolean outside = time_d < options->from_d || time_d > options->to_d; /* NaN limits compare false */
+      gboolean inside = time_d <= covered_to_d;
       if (outside || inside)
         record->flags[order->row[k]] |= ANT_FLAG_EXCLUDED;
       n_outside += outside;

@@ -16,9 +16,8 @@ typedef struct
 void ant_row_order_clear (AntRowOrder *order);
 /* Flags values and quality, sorts, flags duplicates. FALSE with one sentence if the times run backwards. */
 gboolean ant_row_order_make (AntRowOrder *order, AntRecord *record, const AntGridOptions *options, GError **error);
-/* Flags what lies outside from/to or inside an excluded span; shift_d goes from a stamp to the middle of its exposure. */
-void ant_row_order_judge_spans (const AntRowOrder *order, AntRecord *record, const AntGridOptions *options,
-                                double shift_d);
+/* Flags the rows whose stamps lie outside from/to or inside an excluded span: people name times as the record does. */
+void ant_row_order_judge_spans (const AntRowOrder *order, AntRecord *record, const AntGridOptions *options);
 /* A row that the search may use: no flag but a spike. */
 static inline gboolean
 ant_row_used (const AntRecord *record, guint32 row)
