@@ -17,5 +17,5 @@ typedef struct
  * three times, or a step lost in the rounding of the times. */
 gboolean ant_cadence_find (gsize n, const double *time_d, double given_d, AntCadence *cadence);
 /* place [n] of each time, never decreasing: the nearest place, except that a run which lies near half a step keeps
- * counting by one (up to 0.6 of a step away) rather than stumble between two places. The caller has bounded the span. */
+ * counting by one (to 0.6 of a step away) rather than stumble between two places. The caller has bounded the span. */
 void ant_cadence_place (const AntCadence *cadence, gsize n, const double *time_d, gint64 *place);

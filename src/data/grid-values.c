@@ -254,8 +254,8 @@ refuse_constant (const AntRecord *record, const float *value_ppm, GError **error
 
 /* The grid of values, twice: once to tell what is dark, then about the median of what is not. */
 gboolean
-ant_grid_values_make (AntRecord *record, const AntRowOrder *order, const AntGridOptions *options, double shift_d,
-                      GError **error)
+ant_grid_values_make (AntRecord *record, const AntRowOrder *order, const AntGridOptions *options,
+                      double shift_d, GError **error)
 {
   if (!find_median (record, order, error))
     return FALSE;

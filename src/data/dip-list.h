@@ -1,0 +1,19 @@
+/* dip-list.h - the dips (or brightenings) of one record with what was asked of the search: all that a table tells.
+ * A view, it owns nothing. */
+#pragma once
+
+#include <glib.h>
+#include "search/dip.h"
+
+typedef struct
+{
+  gboolean brightenings;         /* this list is of the other sign: negative depths and SNRs */
+  gsize n;
+  const AntDip *dip;             /* [n] in the order in which they are numbered */
+  double limb_u1, limb_u2;       /* quadratic limb darkening of the templates */
+  double threshold_snr;          /* NaN for an asked dip: there was no search */
+  double false_alarms;           /* dips of this sign expected by chance at that threshold in the record; NaN unknown */
+  gboolean mirror_known;         /* the mirrored search was run: */
+  gsize n_found, n_mirrored;     /*   dips at or above the threshold, and brightenings, of the durations it checks */
+  const double *upper_limit_ppm; /* [n] 95 % upper limits of asked dips, or NULL if found by a search */
+} AntDipList;
