@@ -162,8 +162,8 @@ ant_exclusions_read (const char *path, const AntTimeReference *reference, GError
     }
   if (text->len >= LARGEST_FILE || !g_utf8_validate_len (text->str, text->len, NULL))
     {
-      g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: not a list of spans; expected text of less than %d MB"), path,
-                   LARGEST_FILE >> 20);
+      g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: not a list of spans; expected text of less than %d MB"),
+                   path, LARGEST_FILE >> 20);
       return NULL;
     }
   return ant_exclusions_parse (path, text->str, reference, error);

@@ -17,9 +17,9 @@ ant_length_text (double length_d)
   double seconds = fabs (length_d) * ANT_SECONDS_PER_DAY;
   if (seconds < 120.0)
     return g_strdup_printf (_("%s s"), ant_number_text (text, "%.6g", length_d * ANT_SECONDS_PER_DAY));
-  if (seconds < 7200.0)
+  if (seconds < 3599.0)
     return g_strdup_printf (_("%s min"), ant_number_text (text, "%.6g", length_d * ANT_MINUTES_PER_DAY));
-  if (seconds < 2.0 * ANT_SECONDS_PER_DAY)
+  if (seconds < 0.999 * ANT_SECONDS_PER_DAY)
     return g_strdup_printf (_("%s h"), ant_number_text (text, "%.6g", length_d * ANT_HOURS_PER_DAY));
   return g_strdup_printf (_("%s d"), ant_number_text (text, "%.6g", length_d));
 }

@@ -1,6 +1,7 @@
 /* record-grid.c - from judged rows to the uniform grid in ppm of the median. docs/data.md gives the rules. */
 #include <glib/gi18n.h>
 #include <math.h>
+#include "core/units.h"
 #include "data/cadence.h"
 #include "data/error.h"
 #include "data/grid-values.h"
@@ -8,6 +9,7 @@
 
 #define MOST_PLACES 2e8
 #define SNAP_STEPS 0.25
+#define UNSAID_JITTER_D (1e-3 / ANT_SECONDS_PER_DAY)
 
 static gboolean
 check_options (const AntGridOptions *options, GError **error)
@@ -78,15 +80,16 @@ say_jitter (AntRecord *record, const AntRowOrder *order, const AntCadence *caden
   g_autofree char *step = ant_length_text (cadence->step_d);
   g_autofree char *rms = ant_length_text (cadence->step_d * sqrt (square / (double) n));
   g_autofree char *most = ant_length_text (cadence->step_d * largest);
-  if (n_coarse == 0)
+  if (cadence->step_d * largest < UNSAID_JITTER_D)
+    ant_record_say (record, _("Cadence %s; the times lie on an even grid to a millisecond."), step);
+  else if (n_coarse == 0)
     ant_record_say (record,
                     _("Cadence %s; the times lie within %s rms (%s at most) of an even grid and were snapped to it."),
                     step, rms, most);
   else
     ant_record_say (record,
-                    _("Cadence %s; %zu of %zu"
-                       " times lie a quarter step or more from an "
-                       "even grid (%s rms, %s at most): each sample went into the nearest bin of that width."),
+                    _("Cadence %s; %zu of %zu times lie a quarter step or more from an even grid (%s rms, %s at most): "
+                      "each sample went into the nearest bin of that width."),
                     step, n_coarse, n, rms, most);
 }
 
@@ -150,12 +153,11 @@ list_gaps (AntRecord *record)
     }
   char percent[ANT_N_NUMBER_TEXT];
   g_autofree char *span = ant_length_text ((double) series->n * series->step_d), *longest = ant_length_text (longest_d);
-  ant_record_say (record,
-                  _("Observed: %zu of %zu places of the grid over %s, a duty cycle of %s %%; "
-                     "gaps longer than one sample: %u, the longest %s."),
-                  n_observed, series->n, span,
-                  ant_number_text (percent, "%.1f", 100.0 * (double) n_observed / (double) series->n), record->gaps->len,
-                  longest);
+  ant_number_text (percent, "%.1f", 100.0 * (double) n_observed / (double) series->n);
+  ant_record_say (record, _("Observed: %zu of %zu places of the grid over %s, a duty cycle of %s %%."), n_observed,
+                  series->n, span, percent);
+  if (record->gaps->len > 0)
+    ant_record_say (record, _("Gaps longer than one sample: %u, the longest %s."), record->gaps->len, longest);
 }
 
 static gboolean
