@@ -29,7 +29,7 @@ find_median (AntRecord *record, const AntRowOrder *order, GError **error)
   char median[ANT_N_NUMBER_TEXT];
   return ant_record_refuse (record, error,
                             _("the median of the good values is %s: expected irradiance or flux with a level above 0 "
-                               "(is the right column read, and are fill values known?)"),
+                              "(is the right column read, and are fill values known?)"),
                             ant_number_text (median, "%.6g", record->median));
 }
 
@@ -116,9 +116,9 @@ refuse_level (const AntRecord *record, gsize n_off, gsize n_good, double dark_fr
   char percent[ANT_N_NUMBER_TEXT], fraction[ANT_N_NUMBER_TEXT];
   return ant_record_refuse (record, error,
                             _("%s %% of the good values are far from the running 5-day median (dark fraction %s): the "
-                               "median is not the usual level "
-                               "of this record (half of it night?); expected a quarter at most: use a quality column, "
-                               "exclude spans, or raise the dark fraction"),
+                              "median is not the usual level "
+                              "of this record (half of it night?); expected a quarter at most: use a quality column, "
+                              "exclude spans, or raise the dark fraction"),
                             ant_number_text (percent, "%.0f", 100.0 * (double) n_off / (double) n_good),
                             ant_number_text (fraction, "%g", dark_fraction));
 }
@@ -160,7 +160,7 @@ set_dark_aside (AntRecord *record, const AntRowOrder *order, const AntGridOption
                   *length = ant_length_text (first.end_d - first.start_d);
   ant_record_say (record,
                   _("Dark or covered (more than %s %% from the running 5-day median): %zu"
-                     " rows in %u spans set aside; the first begins at %s and lasts %s."),
+                    " rows in %u spans set aside; the first begins at %s and lasts %s."),
                   ant_number_text (percent, "%g", 100.0 * options->dark_fraction), n_dark, record->dark_spans->len,
                   when, length);
   return TRUE;
@@ -187,7 +187,7 @@ fill_errors (AntRecord *record, const AntRowOrder *order)
     {
       ant_record_say (record,
                       _("The error column is not used: %zu of %zu"
-                         " good rows state an error above 0 and below the median value."),
+                        " good rows state an error above 0 and below the median value."),
                       n_stated, n_used);
       return NULL;
     }

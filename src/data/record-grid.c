@@ -113,7 +113,7 @@ place_rows (AntRecord *record, const AntRowOrder *order, AntCadence *cadence, GE
       g_autofree char *step = ant_length_text (cadence->step_d), *span = ant_length_text (n_steps * cadence->step_d);
       return ant_record_refuse (record, error,
                                 _("lines %u to %u: the good rows span %s, which is %s steps of the cadence %s for %zu"
-                                   " rows: expected times and a cadence that belong together"),
+                                  " rows: expected times and a cadence that belong together"),
                                 record->line[order->row[first]], record->line[order->row[last]], span,
                                 ant_number_text (count, "%.3g", n_steps), step, record->n_rows);
     }
