@@ -73,7 +73,7 @@ static char *
 write_temporary (const char *path, const char *text, gsize length, int *code)
 {
   g_autofree char *folder = g_path_get_dirname (path), *name = g_path_get_basename (path);
-  g_autofree char *hidden = g_strdup_printf (".%s.XXXXXX", name);
+  g_autofree char *hidden = g_strdup_printf (".%s-XXXXXX_new", name);
   g_autofree char *temporary = g_build_filename (folder, hidden, NULL);
   int fd = g_mkstemp_full (temporary, O_WRONLY | O_CLOEXEC, 0666);
   if (fd < 0)

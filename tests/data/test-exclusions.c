@@ -89,8 +89,8 @@ static void
 test_binary_file (void)
 {
   g_autoptr (GError) error = NULL;
-  g_autofree char *path = g_build_filename (g_get_tmp_dir (), "ant-exclusions-XXXXXX", NULL);
-  int fd = g_mkstemp (path);
+  g_autofree char *path = NULL;
+  int fd = g_file_open_tmp (NULL, &path, NULL);
   g_assert_cmpint (fd, >=, 0);
   g_assert_true (g_close (fd, NULL));
   g_assert_true (g_file_set_contents (path, "1,2\0,3", 6, NULL));
