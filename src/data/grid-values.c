@@ -71,7 +71,7 @@ fill_values (const AntRecord *record, const AntRowOrder *order, float *value_ppm
     {
       guint32 row = order->row[k];
       gint64 place = record->place[row];
-      if (place < 0 || !ant_row_used (record, row))
+      if (!ant_row_used (record, row))
         continue;
       if (place != current)
         sum = count = 0.0;
@@ -137,7 +137,7 @@ set_dark_aside (AntRecord *record, const AntRowOrder *order, const AntGridOption
   for (gsize k = 0; k < order->n; k++)
     {
       guint32 row = order->row[k];
-      if (record->place[row] < 0 || !ant_row_used (record, row))
+      if (!ant_row_used (record, row))
         continue;
       double level_ppm = (double) median[record->place[row]], level = 1.0 + level_ppm * ANT_PPM;
       n_flipped += level < 0.5 || level > 2.0;
@@ -205,7 +205,7 @@ fill_errors (AntRecord *record, const AntRowOrder *order)
     {
       guint32 row = order->row[k];
       gint64 place = record->place[row];
-      if (place < 0 || !ant_row_used (record, row))
+      if (!ant_row_used (record, row))
         continue;
       double stated = record->error[row];
       double error = (stated > 0.0 && stated <= record->median ? stated : usual) / record->median / ANT_PPM;
@@ -226,7 +226,7 @@ fill_spikes (const AntRecord *record, const AntRowOrder *order)
   for (gsize k = 0; k < order->n; k++)
     {
       guint32 row = order->row[k];
-      if (record->place[row] < 0 || record->flags[row] != ANT_FLAG_SPIKE)
+      if (record->flags[row] != ANT_FLAG_SPIKE)
         continue;
       if (!spike)
         spike = g_new0 (guint8, record->series.n);

@@ -65,20 +65,17 @@ static void
 say_jitter (AntRecord *record, const AntRowOrder *order, const AntCadence *cadence)
 {
   double square = 0.0, largest = 0.0;
-  gsize n = 0, n_coarse = 0;
+  gsize n_coarse = 0;
   for (gsize k = 0; k < order->n; k++)
     {
-      gint64 place = record->place[order->row[k]];
-      if (place < 0)
-        continue;
-      double off = (order->time_d[k] - cadence->start_d) / cadence->step_d - (double) place;
+      double place = (double) record->place[order->row[k]];
+      double off = (order->time_d[k] - cadence->start_d) / cadence->step_d - place;
       square += off * off;
       largest = fmax (largest, fabs (off));
       n_coarse += fabs (off) >= SNAP_STEPS;
-      n++;
     }
   g_autofree char *step = ant_length_text (cadence->step_d);
-  g_autofree char *rms = ant_length_text (cadence->step_d * sqrt (square / (double) n));
+  g_autofree char *rms = ant_length_text (cadence->step_d * sqrt (square / (double) order->n));
   g_autofree char *most = ant_length_text (cadence->step_d * largest);
   if (cadence->step_d * largest < UNSAID_JITTER_D)
     ant_record_say (record, _("Cadence %s; the times lie on an even grid to a millisecond."), step);
@@ -90,41 +87,33 @@ say_jitter (AntRecord *record, const AntRowOrder *order, const AntCadence *caden
     ant_record_say (record,
                     _("Cadence %s; %zu of %zu times lie a quarter step or more from an even grid (%s rms, %s at most): "
                       "each sample went into the nearest bin of that width."),
-                    step, n_coarse, n, rms, most);
+                    step, n_coarse, order->n, rms, most);
 }
 
 /* The grid runs from the first good row to the last; rows between them get a place, the others none. */
 static gboolean
 place_rows (AntRecord *record, const AntRowOrder *order, AntCadence *cadence, GError **error)
 {
-  record->place = g_new (gint64, record->n_rows);
-  for (gsize i = 0; i < record->n_rows; i++)
-    record->place[i] = -1;
-  gsize first = 0, last = order->n - 1;
-  while (!ant_row_used (record, order->row[first]))
-    first++;
-  while (!ant_row_used (record, order->row[last]))
-    last--;
-
-  double n_steps = (order->time_d[last] - order->time_d[first]) / cadence->step_d;
+  double span_d = order->time_d[order->n - 1] - order->time_d[0], n_steps = span_d / cadence->step_d;
   if (!(n_steps < MIN (MOST_PLACES, 1000.0 * (double) record->n_rows + 1e6)))
     {
       char count[ANT_N_NUMBER_TEXT];
-      g_autofree char *step = ant_length_text (cadence->step_d), *span = ant_length_text (n_steps * cadence->step_d);
+      g_autofree char *step = ant_length_text (cadence->step_d), *span = ant_length_text (span_d);
       return ant_record_refuse (record, error,
-                                _("lines %u to %u: the good rows span %s, which is %s steps of the cadence %s for %zu"
-                                  " rows: expected times and a cadence that belong together"),
-                                record->line[order->row[first]], record->line[order->row[last]], span,
+                                _("lines %u to %u: the good rows span %s, %s steps of the cadence %s for %zu rows: expected "
+                                  "times and a cadence that belong together"),
+                                record->line[order->row[0]], record->line[order->row[order->n - 1]], span,
                                 ant_number_text (count, "%.3g", n_steps), step, record->n_rows);
     }
-
-  g_autofree gint64 *place = g_new (gint64, last - first + 1);
-  ant_cadence_place (cadence, last - first + 1, order->time_d + first, place);
-  gint64 origin = place[0];
-  for (gsize k = first; k <= last; k++)
-    record->place[order->row[k]] = place[k - first] - origin;
-  cadence->start_d += (double) origin * cadence->step_d;
-  record->series.n = (size_t) (place[last - first] - origin) + 1;
+  record->place = g_new (gint64, record->n_rows);
+  for (gsize i = 0; i < record->n_rows; i++)
+    record->place[i] = -1;
+  g_autofree gint64 *place = g_new (gint64, order->n);
+  ant_cadence_place (cadence, order->n, order->time_d, place);
+  for (gsize k = 0; k < order->n; k++)
+    record->place[order->row[k]] = place[k] - place[0];
+  cadence->start_d += (double) place[0] * cadence->step_d;
+  record->series.n = (size_t) (place[order->n - 1] - place[0]) + 1;
   say_jitter (record, order, cadence);
   return TRUE;
 }
@@ -164,16 +153,20 @@ static gboolean
 lay_grid (AntRecord *record, AntRowOrder *order, const AntGridOptions *options, GError **error)
 {
   AntCadence cadence;
-  if (!ant_row_order_make (order, record, options, error) || !ant_row_order_require_good (order, record, error))
+  if (!ant_row_order_make (order, record, options, error))
     return FALSE;
+  ant_row_order_judge_spans (order, record, options);
+  if (!ant_row_order_require_good (order, record, error))
+    return FALSE;
+  ant_row_order_trim (order, record);
   if (!ant_cadence_find (order->n, order->time_d, options->cadence_d, &cadence))
     return ant_record_refuse (record, error,
-                              _("no cadence can be found in %zu different times: expected times that grow in steps"),
-                              order->n);
+                              _("lines %u to %u: no cadence can be found in %zu different times: expected times that grow in "
+                                "steps"),
+                              record->line[order->row[0]], record->line[order->row[order->n - 1]], order->n);
   record->cadence_d = cadence.step_d;
   double shift_d = settle_exposure (record, options);
-  ant_row_order_judge_spans (order, record, options);
-  if (!ant_row_order_require_good (order, record, error) || !place_rows (record, order, &cadence, error))
+  if (!place_rows (record, order, &cadence, error))
     return FALSE;
   record->series.step_d = cadence.step_d;
   record->series.start_d = cadence.start_d + shift_d;

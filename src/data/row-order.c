@@ -2,6 +2,7 @@
 #include "data/row-order.h"
 #include <glib/gi18n.h>
 #include <math.h>
+#include <string.h>
 #include "data/error.h"
 
 #define FEWEST_GOOD 50
@@ -200,6 +201,19 @@ ant_row_order_judge_spans (const AntRowOrder *order, AntRecord *record, const An
     ant_record_say (record, _("Rows outside the limits of the scan: %zu."), n_outside);
   if (n_inside > 0)
     ant_record_say (record, _("Rows inside excluded spans: %zu."), n_inside);
+}
+
+void
+ant_row_order_trim (AntRowOrder *order, const AntRecord *record)
+{
+  gsize first = 0;
+  while (!ant_row_used (record, order->row[first]))
+    first++;
+  while (!ant_row_used (record, order->row[order->n - 1]))
+    order->n--;
+  order->n -= first;
+  memmove (order->row, order->row + first, order->n * sizeof *order->row);
+  memmove (order->time_d, order->time_d + first, order->n * sizeof *order->time_d);
 }
 
 gsize

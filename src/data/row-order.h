@@ -24,6 +24,8 @@ ant_row_used (const AntRecord *record, guint32 row)
 {
   return (record->flags[row] & ~ANT_FLAG_SPIKE) == 0;
 }
+/* Drop the rows before the first good one and after the last; there must be one. */
+void ant_row_order_trim (AntRowOrder *order, const AntRecord *record);
 gsize ant_row_order_count_good (const AntRowOrder *order, const AntRecord *record);
 /* FALSE with one sentence, which counts the reasons, if fewer than 50 rows are good. */
 gboolean ant_row_order_require_good (const AntRowOrder *order, const AntRecord *record, GError **error);

@@ -155,6 +155,25 @@ test_rogue_time (void)
   test_refused (record, &plain, "lines 1 to 200");
 }
 
+/* The same row does no harm if it is not used, or cut off by the limits of the scan. */
+static void
+test_rogue_time_left_out (void)
+{
+  AntGridOptions options = ANT_GRID_OPTIONS_INIT;
+  for (int way = 0; way < 2; way++)
+    {
+      g_autoptr (AntRecord) record = test_rows (200, 0.0, 10.0 * MINUTE);
+      record->time_d[199] = 1e200;
+      if (way == 0)
+        record->value[199] = NAN;
+      else
+        options.to_d = 100.0;
+      test_grid (record, &options);
+      g_assert_cmpuint (record->series.n, ==, 199);
+      g_assert_cmpint (record->place[199], ==, -1);
+    }
+}
+
 static void
 test_eclipse (void)
 {
@@ -346,6 +365,46 @@ test_spikes_stay (void)
   g_assert_true (isnan (record->series.value_ppm[43]));
 }
 
+/* Whatever the rows hold, they are refused in a sentence or laid so that used rows and places agree. */
+static void
+test_any_rows (void)
+{
+  static const double odd[] = { NAN, INFINITY, -INFINITY, 1e300, -1e300, 1e-300, 0.0, -0.0, 4.9e-324, -99.0, 1e17 };
+  g_autoptr (GRand) random = g_rand_new_with_seed (7);
+  int n_made = 0;
+  for (int trial = 0; trial < 400; trial++)
+    {
+      g_autoptr (AntRecord) record = test_rows (60 + (gsize) g_rand_int_range (random, 0, 200), 0.0, 1.0);
+      g_autoptr (GError) error = NULL;
+      for (int k = g_rand_int_range (random, 0, 1 << g_rand_int_range (random, 1, 7)); k > 0; k--)
+        {
+          gsize i = (gsize) g_rand_int_range (random, 0, (gint32) record->n_rows);
+          double *array = g_rand_boolean (random) ? record->value : record->time_d;
+          array[i] = g_rand_boolean (random) ? odd[g_rand_int_range (random, 0, G_N_ELEMENTS (odd))]
+                                             : array[(gsize) g_rand_int_range (random, 0, (gint32) record->n_rows)];
+        }
+      if (!ant_record_make_grid (record, &plain, &error))
+        {
+          g_assert_nonnull (error);
+          continue;
+        }
+      n_made++;
+      gsize n_used = 0;
+      for (gsize i = 0; i < record->n_rows; i++)
+        {
+          g_assert_cmpint (record->place[i], <, (gint64) record->series.n);
+          if (record->flags[i] != 0)
+            continue;
+          n_used++;
+          g_assert_cmpint (record->place[i], >=, 0);
+          g_assert_true (isfinite (record->series.value_ppm[record->place[i]]));
+        }
+      g_assert_cmpuint (n_used, >=, 50);
+      g_assert_cmpuint (ant_series_observed (&record->series, FALSE), <=, n_used);
+    }
+  g_assert_cmpint (n_made, >, 50);
+}
+
 static void
 test_bad_options (void)
 {
@@ -371,6 +430,7 @@ main (int argc, char **argv)
   g_test_add_func ("/data/record-grid/unknown-exposure-and-stamp-are-said", test_unknowns_are_said);
   g_test_add_func ("/data/record-grid/limits-trim-the-grid", test_limits_trim_the_grid);
   g_test_add_func ("/data/record-grid/a-rogue-time-is-refused", test_rogue_time);
+  g_test_add_func ("/data/record-grid/a-rogue-time-left-out-does-no-harm", test_rogue_time_left_out);
   g_test_add_func ("/data/record-grid/an-eclipse-is-set-aside-as-a-span", test_eclipse);
   g_test_add_func ("/data/record-grid/a-shallow-dip-is-not-dark", test_dip_is_not_dark);
   g_test_add_func ("/data/record-grid/nights-are-refused", test_night_is_refused);
@@ -385,6 +445,7 @@ main (int argc, char **argv)
   g_test_add_func ("/data/record-grid/bins-hold-mean-count-and-error-of-the-mean", test_bins);
   g_test_add_func ("/data/record-grid/coarse-jitter-is-binned-near-its-times", test_coarse_jitter);
   g_test_add_func ("/data/record-grid/spikes-stay-and-hand-masks-do-not", test_spikes_stay);
+  g_test_add_func ("/data/record-grid/any-rows-are-laid-or-refused", test_any_rows);
   g_test_add_func ("/data/record-grid/limits-in-the-wrong-order-are-a-usage-error", test_bad_options);
   return g_test_run ();
 }
