@@ -159,8 +159,8 @@ set_dark_aside (AntRecord *record, const AntRowOrder *order, const AntGridOption
   g_autofree char *when = ant_time_reference_own_text (&record->time, first.start_d),
                   *length = ant_length_text (first.end_d - first.start_d);
   ant_record_say (record,
-                  _("Dark or covered (more than %s %% from the running 5-day median): %zu"
-                    " rows in %u spans set aside; the first begins at %s and lasts %s."),
+                  _("Dark or covered (more than %s %% from the running 5-day median): %zu "
+                    "rows in %u spans set aside; the first begins at %s and lasts %s."),
                   ant_number_text (percent, "%g", 100.0 * options->dark_fraction), n_dark, record->dark_spans->len,
                   when, length);
   return TRUE;
@@ -186,8 +186,8 @@ fill_errors (AntRecord *record, const AntRowOrder *order)
   if (2 * n_stated <= n_used)
     {
       ant_record_say (record,
-                      _("The error column is not used: %zu of %zu"
-                        " good rows state an error above 0 and below the median value."),
+                      _("The error column is not used: %zu of %zu "
+                        "good rows state an error above 0 and below the median value."),
                       n_stated, n_used);
       return NULL;
     }

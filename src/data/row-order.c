@@ -108,8 +108,8 @@ sort_rows (AntRowOrder *order, AntRecord *record, GError **error)
     }
   if (n_back * 2 > order->n)
     return ant_record_refuse (record, error,
-                              _("line %u: the time goes back, and so do %zu of %zu"
-                                " rows: expected times that grow"),
+                              _("line %u: the time goes back, and so do %zu of %zu "
+                                "rows: expected times that grow"),
                               record->line[first_back], n_back, order->n);
   if (n_back > 0)
     {
@@ -146,8 +146,7 @@ drop_duplicates (AntRowOrder *order, AntRecord *record)
   order->n = n_kept;
   if (n_dropped > 0)
     ant_record_say (record,
-                    _("Rows that repeat the time of another, left out: %zu"
-                      ", first at line %u; the first "
+                    _("Rows that repeat the time of another, left out: %zu, first at line %u; the first "
                       "good row of each time is kept."),
                     n_dropped, record->line[first_dropped]);
 }

@@ -68,7 +68,7 @@ write_all (int fd, const char *text, gsize length)
   return fsync (fd) == 0 || errno == EINVAL; /* EINVAL: a special file has nothing to sync */
 }
 
-/* Write text to a new file beside `path`; returns its name, or NULL with the reason in *code and nothing left behind. */
+/* Write text to a new file beside `path`; returns its name, or NULL, *code and nothing left behind. */
 static char *
 write_temporary (const char *path, const char *text, gsize length, int *code)
 {

@@ -71,7 +71,8 @@ test_shuffled (void)
 static void
 test_scale_free (void)
 {
-  g_autoptr (AntRecord) usual = test_rows (200, 0.0, 0.1), tiny = test_rows (200, 0.0, 0.1), huge = test_rows (200, 0.0, 0.1);
+  g_autoptr (AntRecord) usual = test_rows (200, 0.0, 0.1);
+  g_autoptr (AntRecord) tiny = test_rows (200, 0.0, 0.1), huge = test_rows (200, 0.0, 0.1);
   for (gsize i = 0; i < 200; i++)
     {
       tiny->value[i] *= 1e-300;
@@ -286,7 +287,8 @@ test_errors_kept (void)
   test_grid (record, &plain);
   for (gsize i = 0; i < 100; i++)
     if (i != 7 && i != 8)
-      g_assert_cmpfloat_with_epsilon ((double) record->series.error_ppm[i], record->error[i] / record->median * 1e6, 1e-3);
+      g_assert_cmpfloat_with_epsilon ((double) record->series.error_ppm[i], record->error[i] / record->median * 1e6,
+                                      1e-3);
   g_assert_cmpfloat_with_epsilon ((double) record->series.error_ppm[7], 0.0604 / record->median * 1e6, 0.5);
   g_assert_cmpfloat (record->series.error_ppm[7], ==, record->series.error_ppm[8]);
   g_assert_true (test_said (record, "median of the others: 2"));

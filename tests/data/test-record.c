@@ -53,7 +53,8 @@ test_value_undoes_ppm (void)
   g_autoptr (AntRecord) record = test_rows (200, 0.0, 0.01);
   test_grid (record, &(AntGridOptions) ANT_GRID_OPTIONS_INIT);
   for (gsize i = 0; i < 200; i++)
-    g_assert_cmpfloat_with_epsilon (ant_record_value (record, (double) record->series.value_ppm[i]), record->value[i], 1e-6);
+    g_assert_cmpfloat_with_epsilon (ant_record_value (record, (double) record->series.value_ppm[i]), record->value[i],
+                                    1e-6);
 }
 
 int

@@ -66,7 +66,8 @@ test_preamble (void)
   g_autoptr (GString) table = ant_dip_table_text (record, &list);
   static const char *const told[] = { "# record: rows.txt\n", "# SHA-256: 0123abcd\n", "# time scale: UTC; ",
                                       "quadratic 0.4, 0.19\n", "SNR 5.200; ", "in this record: 0.05\n",
-                                      "2 dips and 1 brightenings", "# duration_h: ", "# depth_ppm: ", "# mean_depth_ppm: " };
+                                      "2 dips and 1 brightenings", "# duration_h: ", "# depth_ppm: ",
+                                      "# mean_depth_ppm: " };
   for (gsize i = 0; i < G_N_ELEMENTS (told); i++)
     g_assert_nonnull (strstr (table->str, told[i]));
 }

@@ -33,7 +33,8 @@ static void
 test_no_rows (void)
 {
   g_autoptr (AntRecord) record = test_rows (3, 0.0, 1.0);
-  g_autoptr (GString) table = ant_number_table_text (record, "Nothing", NULL, 1, &(AntNumberColumn){ "x", NULL, NULL }, 0);
+  const AntNumberColumn column = { "x", NULL, NULL };
+  g_autoptr (GString) table = ant_number_table_text (record, "Nothing", NULL, 1, &column, 0);
   g_assert_true (g_str_has_prefix (table->str, "# Nothing (Antumbra "));
   g_assert_true (g_str_has_suffix (table->str, "\nx\n"));
 }
