@@ -17,7 +17,7 @@ append_flag_names (GString *table, guint16 flags)
 }
 
 GString *
-ant_flags_table_text (const AntRecord *record)
+ant_flags_table_text (const AntRecord *record, const guint16 *flags)
 {
   GString *table = g_string_new (NULL);
   ant_csv_preamble (table, "Flags of rows", record);
@@ -26,14 +26,14 @@ ant_flags_table_text (const AntRecord *record)
   g_string_append (table, ANT_FLAGS_HEADER "\n");
   for (gsize i = 0; i < record->n_rows; i++)
     {
-      if (record->flags[i] == 0)
+      if (flags[i] == 0)
         continue;
       g_autofree char *time =
           isfinite (record->time_d[i]) ? ant_time_reference_own_text (&record->time, record->time_d[i]) : g_strdup ("");
       g_string_append_printf (table, "%u,", record->line[i]);
       ant_csv_text (table, time);
       g_string_append_c (table, ',');
-      append_flag_names (table, record->flags[i]);
+      append_flag_names (table, flags[i]);
       g_string_append_c (table, '\n');
     }
   return table;

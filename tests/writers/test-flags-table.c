@@ -24,7 +24,7 @@ static void
 test_lists_the_flagged (void)
 {
   g_autoptr (AntRecord) record = gridded_rows (&(AntGridOptions) ANT_GRID_OPTIONS_INIT);
-  g_autoptr (GString) table = ant_flags_table_text (record);
+  g_autoptr (GString) table = ant_flags_table_text (record, record->flags);
   g_assert_nonnull (strstr (table->str, "rows that are not listed are used"));
   g_assert_nonnull (strstr (table->str, "\n" ANT_FLAGS_HEADER "\n301,"));
   g_assert_nonnull (strstr (table->str, ",fill\n401,"));
@@ -42,7 +42,7 @@ test_joins_names (void)
 {
   g_autoptr (AntRecord) record = test_rows (1, 0.0, 1.0);
   record->flags[0] = ANT_FLAG_FILL | ANT_FLAG_QUALITY | ANT_FLAG_DUPLICATE;
-  g_autoptr (GString) table = ant_flags_table_text (record);
+  g_autoptr (GString) table = ant_flags_table_text (record, record->flags);
   g_assert_true (g_str_has_suffix (table->str, ",fill|quality|duplicate\n"));
 }
 
@@ -56,7 +56,7 @@ test_round_trip (void)
       options.stamp = stamps[s];
       options.from_d = 101.0;
       g_autoptr (AntRecord) first = gridded_rows (&options);
-      g_autoptr (GString) table = ant_flags_table_text (first);
+      g_autoptr (GString) table = ant_flags_table_text (first, first->flags);
       g_autoptr (GArray) spans = ant_exclusions_parse ("flags.csv", table->str, &first->time, NULL);
       g_assert_nonnull (spans);
       options.from_d = NAN;

@@ -1,0 +1,76 @@
+/* scan-summary.c - say what a scan found. */
+#include "cli/scan-summary.h"
+
+#include <glib/gi18n.h>
+#include <math.h>
+
+#include "core/units.h"
+
+#define MOST_LINES 40
+#define MOST_SENTENCES 12
+
+/* The middle as people read it: UTC if it is known, else the record's own number. */
+static char *
+middle_text (const AntRecord *record, const AntDip *dip)
+{
+  g_autofree char *utc = ant_time_reference_utc_text (&record->time, dip->mid_d, 0);
+  return *utc ? g_steal_pointer (&utc) : ant_time_reference_own_text (&record->time, dip->mid_d);
+}
+
+static void
+print_dips (const AntRecord *record, gsize n, const AntDip *dip)
+{
+  if (n == 0)
+    return;
+  g_print (_("  no  middle                length   depth              SNR  first  by chance  edges\n"));
+  for (gsize i = 0; i < MIN (n, MOST_LINES); i++)
+    {
+      g_autofree char *middle = middle_text (record, &dip[i]);
+      g_print (_("%4" G_GSIZE_FORMAT "  %-20s %5.2f h %7.1f ± %-5.1f ppm %6.1f %6.1f   %8.2g  %s\n"), i + 1, middle,
+               dip[i].duration_d * ANT_HOURS_PER_DAY, dip[i].depth_ppm, dip[i].depth_sigma_ppm, dip[i].snr, dip[i].first_snr,
+               dip[i].expected_false, ant_edges_text (dip[i].edges));
+    }
+  if (n > MOST_LINES)
+    g_print (_("      and %" G_GSIZE_FORMAT " more in the table\n"), n - MOST_LINES);
+}
+
+static void
+print_floor (const AntScanResults *results)
+{
+  const double hours[] = { 0.5, 2, 6, 13 };
+  g_print (_("Noise floor, 1-sigma depth:"));
+  for (gsize h = 0; h < G_N_ELEMENTS (hours); h++)
+    for (gsize p = 0; p < results->n_floor; p++)
+      if (fabs (results->floor[p].duration_d * ANT_HOURS_PER_DAY - hours[h]) < 0.01)
+        g_print (_(" %.1f ppm at %g h;"), results->floor[p].sigma_ppm, hours[h]);
+  g_print (_(" times %.2f to be listed.\n"), results->threshold_snr);
+}
+
+void
+ant_scan_summary_print (const AntScanResults *results)
+{
+  const AntRecord *record = results->record;
+  g_print (_("%s: %.1f d observed, cadence %.6g s, %" G_GSIZE_FORMAT " noise models\n"), record->path, results->observed_d,
+           record->cadence_d * ANT_SECONDS_PER_DAY, results->n_chunks);
+  print_floor (results);
+  g_print (g_dngettext (NULL, "%" G_GSIZE_FORMAT " dip at or above SNR %.2f; noise alone would show %.2g.\n",
+                        "%" G_GSIZE_FORMAT " dips at or above SNR %.2f; noise alone would show %.2g.\n", results->n_dips),
+           results->n_dips, results->threshold_snr, results->expected_at_threshold);
+  print_dips (record, results->n_dips, results->dip);
+  g_print (_("Mirror (9 h and less): %" G_GSIZE_FORMAT " dips, %" G_GSIZE_FORMAT " brightenings; brightenings of any length: %" G_GSIZE_FORMAT ".\n"),
+           results->n_mirror_dips, results->n_mirrored, results->n_brightenings);
+  print_dips (record, results->n_brightenings, results->brightening);
+  for (guint i = 0; i < MIN (results->said->len, MOST_SENTENCES); i++)
+    g_print ("%s.\n", (const char *) g_ptr_array_index (results->said, i));
+  if (results->said->len > MOST_SENTENCES)
+    g_print (_("And %u more remarks on the noise of single chunks: see chunks.csv.\n"), results->said->len - MOST_SENTENCES);
+}
+
+void
+ant_scan_summary_print_asked (const AntRecord *record, const AntDip *dip, double upper_limit_ppm)
+{
+  g_autofree char *middle = middle_text (record, dip);
+  g_print (_("Asked dip at %s, %.2f h: depth %.1f ± %.1f ppm, SNR %.2f; deeper than %.1f ppm is excluded at 95 %%; %.0f %% observed, edges seen: %s.\n"),
+           middle, dip->duration_d * ANT_HOURS_PER_DAY, dip->depth_ppm, dip->depth_sigma_ppm, dip->snr, upper_limit_ppm,
+           100 * dip->coverage, ant_edges_text (dip->edges));
+}

@@ -1,0 +1,189 @@
+/* verb-scan.c - `antumbra-cli scan`: search a record for dips, or measure one that is asked about, and write the tables. */
+#include <gio/gio.h>
+#include <glib/gi18n.h>
+#include <math.h>
+
+#include "cli/exit-code.h"
+#include "cli/progress.h"
+#include "cli/record-options.h"
+#include "cli/scan-summary.h"
+#include "cli/settings-options.h"
+#include "cli/verbs.h"
+#include "data/error.h"
+#include "data/exclusions.h"
+#include "jobs/scan-job.h"
+#include "jobs/stop.h"
+#include "writers/dip-table.h"
+#include "writers/flags-table.h"
+#include "writers/output-dir.h"
+#include "writers/scan-tables.h"
+
+typedef struct
+{
+  char *out, *from, *to, *exclude, *at;
+  double hours;
+  int threads;
+  gboolean force, progress;
+  AntRecordOptions reading;
+  AntSettingsOptions given;
+} Options;
+
+static const char *const result_names[] = { "dips.csv", "brightenings.csv", "floor.csv", "spectrum.csv", "chunks.csv",
+                                            "flags.csv", NULL };
+
+static void
+options_clear (Options *options)
+{
+  g_free (options->out);
+  g_free (options->from);
+  g_free (options->to);
+  g_free (options->exclude);
+  g_free (options->at);
+  ant_record_options_clear (&options->reading);
+  ant_settings_options_clear (&options->given);
+}
+
+/* The limits and excluded spans, in the record's own time. */
+static gboolean
+limit_grid (const Options *options, const AntRecord *record, AntGridOptions *grid, GError **error)
+{
+  if (options->from && !ant_time_reference_parse (&record->time, options->from, &grid->from_d, error))
+    return FALSE;
+  if (options->to && !ant_time_reference_parse (&record->time, options->to, &grid->to_d, error))
+    return FALSE;
+  if (options->exclude)
+    {
+      grid->excluded = ant_exclusions_read (options->exclude, &record->time, error);
+      return grid->excluded != NULL;
+    }
+  return TRUE;
+}
+
+static AntRecord *
+load (const Options *options, const char *path, const AntSettings *settings, GCancellable *stop, GError **error)
+{
+  g_autoptr (AntRecord) record = ant_record_options_read (&options->reading, path, stop, error);
+  if (!record)
+    return NULL;
+  AntGridOptions grid = ant_settings_grid (settings);
+  gboolean good = ant_record_options_good (&options->reading, &grid, error) && limit_grid (options, record, &grid, error)
+                  && ant_record_make_grid (record, &grid, error);
+  g_clear_pointer (&grid.good_values, g_array_unref);
+  g_clear_pointer (&grid.excluded, g_array_unref);
+  return good ? g_steal_pointer (&record) : NULL;
+}
+
+/* Add one text to the directory and free it. */
+static gboolean
+add (AntOutputDir *dir, const char *name, GString *text, GError **error)
+{
+  gboolean good = ant_output_dir_add (dir, name, text->str, text->len, error);
+  g_string_free (text, TRUE);
+  return good;
+}
+
+static gboolean
+write_tables (AntOutputDir *dir, const AntScanResults *results, GError **error)
+{
+  AntDipList dips = ant_scan_results_list (results, FALSE), brightenings = ant_scan_results_list (results, TRUE);
+  return add (dir, "dips.csv", ant_dip_table_text (results->record, &dips), error)
+         && add (dir, "brightenings.csv", ant_dip_table_text (results->record, &brightenings), error)
+         && add (dir, "floor.csv", ant_floor_table_text (results), error)
+         && add (dir, "spectrum.csv", ant_spectrum_table_text (results), error)
+         && add (dir, "chunks.csv", ant_chunks_table_text (results), error)
+         && add (dir, "flags.csv", ant_flags_table_text (results->record, results->flags), error)
+         && ant_output_dir_commit (dir, error);
+}
+
+static gboolean
+search (const Options *options, AntRecord *record, const AntSettings *settings, AntOutputDir *dir, GCancellable *stop,
+        GError **error)
+{
+  AntProgressLine *line = ant_progress_line_new (options->progress);
+  g_autoptr (AntScanResults) results = ant_scan_job_run (record, settings, stop, ant_progress_line_show, line, error);
+  ant_progress_line_end (line);
+  if (!results || (dir && !write_tables (dir, results, error)))
+    return FALSE;
+  ant_scan_summary_print (results);
+  if (dir)
+    g_print (_("Tables are in %s: dips, brightenings, floor, spectrum, chunks, flags.\n"), options->out);
+  return TRUE;
+}
+
+static gboolean
+ask (const Options *options, AntRecord *record, const AntSettings *settings, AntOutputDir *dir, GError **error)
+{
+  AntDip dip;
+  double at_d, upper_limit_ppm;
+  if (!ant_time_reference_parse (&record->time, options->at, &at_d, error)
+      || !ant_scan_job_ask (record, settings, at_d, options->hours / 24, &dip, &upper_limit_ppm, error))
+    return FALSE;
+  AntDipList list = { .n = 1, .dip = &dip, .limb_u1 = settings->bank.limb_darkening.u1, .threshold_snr = NAN,
+                      .limb_u2 = settings->bank.limb_darkening.u2, .false_alarms = NAN, .upper_limit_ppm = &upper_limit_ppm };
+  if (dir && !(add (dir, "dips.csv", ant_dip_table_text (record, &list), error) && ant_output_dir_commit (dir, error)))
+    return FALSE;
+  ant_scan_summary_print_asked (record, &dip, upper_limit_ppm);
+  return TRUE;
+}
+
+static int
+run (const Options *options, const char *path)
+{
+  g_autoptr (GError) error = NULL;
+  g_autoptr (AntOutputDir) dir = NULL;
+  AntSettings settings;
+  GCancellable *stop = ant_stop_on_signals ();
+  if (!ant_settings_options_apply (&options->given, &settings, &error))
+    return ant_cli_fail (error);
+  if (options->threads)
+    settings.threads = options->threads;
+  g_autoptr (AntRecord) record = load (options, path, &settings, stop, &error);
+  const char *const asked[] = { "dips.csv", NULL };
+  if (record && options->out)
+    dir = ant_output_dir_open (options->out, options->at ? asked : result_names, options->force, &error);
+  gboolean good = record && (dir || !options->out)
+                  && (options->at ? ask (options, record, &settings, dir, &error)
+                                  : search (options, record, &settings, dir, stop, &error));
+  return good ? ANT_EXIT_DONE : ant_cli_fail (error);
+}
+
+int
+ant_verb_scan (int argc, char **argv)
+{
+  Options options = { .hours = NAN };
+  const GOptionEntry entries[] = {
+    { "out", 'o', 0, G_OPTION_ARG_FILENAME, &options.out, N_("write the tables into this folder"), N_("DIR") },
+    { "force", 0, 0, G_OPTION_ARG_NONE, &options.force, N_("replace results that are there"), NULL },
+    { "from", 0, 0, G_OPTION_ARG_STRING, &options.from, N_("use the record from this time"), N_("TIME") },
+    { "to", 0, 0, G_OPTION_ARG_STRING, &options.to, N_("use the record up to this time"), N_("TIME") },
+    { "exclude", 0, 0, G_OPTION_ARG_FILENAME, &options.exclude,
+      N_("leave out spans: lines of start, end, reason, or an earlier flags.csv"), N_("FILE") },
+    { "at", 0, 0, G_OPTION_ARG_STRING, &options.at, N_("measure a dip with this middle, without a search"), N_("TIME") },
+    { "hours", 0, 0, G_OPTION_ARG_DOUBLE, &options.hours, N_("length of the dip of --at, contact I to IV"), N_("H") },
+    { "threads", 0, 0, G_OPTION_ARG_INT, &options.threads, N_("threads to work with; the results do not depend on it"), N_("N") },
+    { "progress", 0, 0, G_OPTION_ARG_NONE, &options.progress, N_("print progress as lines"), NULL },
+    { NULL }
+  };
+  g_autoptr (GOptionContext) context = g_option_context_new (_("RECORD"));
+  g_option_context_set_summary (context, _("Searches a record (“-”: standard input) for dips and weighs each against the Sun's own noise."));
+  g_option_context_add_main_entries (context, entries, NULL);
+  ant_record_options_add (context, &options.reading);
+  ant_settings_options_add (context, &options.given);
+
+  g_autoptr (GError) error = NULL;
+  int code;
+  if (!g_option_context_parse (context, &argc, &argv, &error))
+    code = ant_cli_fail (error);
+  else if (argc != 2)
+    code = ant_cli_fail_usage (_("scan: found %d files, expected one record"), argc - 1);
+  else if (options.threads < 0)
+    code = ant_cli_fail_usage (_("scan: found --threads %d, expected 1 or more"), options.threads);
+  else if (!options.at != isnan (options.hours))
+    code = ant_cli_fail_usage (_("scan: found only one of --at and --hours, expected both"));
+  else if (options.at && !(options.hours > 0 && options.hours < 1000))
+    code = ant_cli_fail_usage (_("scan: found --hours %g, expected more than 0 and less than 1000"), options.hours);
+  else
+    code = run (&options, argv[1]);
+  options_clear (&options);
+  return code;
+}

@@ -1,0 +1,43 @@
+/* scan-results.h - what a scan of a record gave: everything that tables, window and report show, kept after the search's
+ * own workspace is gone. Reference-counted, immutable once made, shared freely between threads. */
+#pragma once
+
+#include <glib.h>
+#include "data/dip-list.h"
+#include "data/record.h"
+#include "data/settings.h"
+#include "search/scan.h"
+
+typedef struct
+{
+  AntRecord *record;         /* owned reference */
+  AntSettings settings;      /* those of the scan; its array pointers are not kept */
+  gsize n_dips, n_brightenings;
+  AntDip *dip, *brightening; /* by time, numbered from 1 in this order */
+  gsize n_chunks;
+  AntChunk *chunk;           /* frequency_cd and power_unmasked owned */
+  gsize n_floor;             /* points of the median floor over chunks */
+  AntFloorPoint floor[ANT_MAX_FLOOR];
+  double threshold_snr;
+  double expected_at_threshold;     /* noise-only dips of one sign expected at the threshold in this record */
+  double observed_d;
+  gsize n_refits;
+  gsize n_mirror_dips, n_mirrored;  /* dips and brightenings of 9 h and less: the mirror's check */
+  guint16 *flags;            /* [record->n_rows] the record's flags with the spikes found */
+  GPtrArray *said;           /* char*: what the scan found out about the noise, one sentence each */
+  gint ref_count;
+} AntScanResults;
+
+/* The mirror compares durations up to this: longer brightenings of the Sun (faculae) are no mirror of its spots. */
+#define ANT_MIRROR_LONGEST_H 9.0
+
+/* Copies what it needs of a scan that has run to its end. */
+AntScanResults *ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntScan *scan);
+AntScanResults *ant_scan_results_ref (AntScanResults *results);
+void ant_scan_results_unref (AntScanResults *results); /* NULL is fine */
+G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntScanResults, ant_scan_results_unref)
+
+/* The options of a search as the settings and the record's exposure give them. */
+AntScanOptions ant_scan_results_options (const AntRecord *record, const AntSettings *settings);
+/* The dips (or brightenings) as the view that tables take; valid as long as the results. */
+AntDipList ant_scan_results_list (const AntScanResults *results, gboolean brightenings);

@@ -1,0 +1,42 @@
+/* scan-job.c - a scan over the pool, and an asked dip. */
+#include "jobs/scan-job.h"
+
+#include <glib/gi18n.h>
+#include <math.h>
+
+#include "data/error.h"
+
+/* Phi^-1(0.95): a Gaussian exceeds its mean by this many sigma with probability 5 %. */
+#define ONE_SIDED_95 1.6448536269514722
+
+AntScanResults *
+ant_scan_job_run (AntRecord *record, const AntSettings *settings, GCancellable *cancellable, AntProgressFunc progress,
+                  gpointer data, GError **error)
+{
+  AntStatus status;
+  AntScanOptions options = ant_scan_results_options (record, settings);
+  AntScan *scan = ant_scan_new (&record->series, &options, &status);
+  if (scan)
+    status = ant_pool_run (ant_scan_stages (), scan, (guint) settings->threads, cancellable, progress, data);
+  AntScanResults *results = NULL;
+  if (ant_status_to_error (status, _("searching for dips"), error))
+    results = ant_scan_results_new (record, settings, scan);
+  ant_scan_free (scan);
+  return results;
+}
+
+gboolean
+ant_scan_job_ask (AntRecord *record, const AntSettings *settings, double mid_d, double duration_d, AntDip *dip,
+                  double *upper_limit_ppm, GError **error)
+{
+  AntScanOptions options = ant_scan_results_options (record, settings);
+  AntStatus status = ant_scan_asked (&record->series, &options, mid_d, duration_d, dip);
+  *upper_limit_ppm = fmax (0, dip->depth_ppm) + ONE_SIDED_95 * dip->depth_sigma_ppm;
+  if (status == ANT_NO_DATA)
+    {
+      g_set_error (error, ANT_ERROR, ANT_ERROR_NUMERIC,
+                   _("the asked dip is not observed: less than %.0f %% of it has data"), 100 * options.least_coverage);
+      return FALSE;
+    }
+  return ant_status_to_error (status, _("measuring the asked dip"), error);
+}

@@ -1,0 +1,14 @@
+/* scan-job.h - run the search of single dips on a record over the pool: the one way that command and window use. */
+#pragma once
+
+#include <gio/gio.h>
+#include "data/scan-results.h"
+#include "jobs/pool.h"
+
+/* Blocks until done; progress is called on this thread. NULL with one sentence; G_IO_ERROR_CANCELLED if stopped. The
+ * record must be gridded. Safe from any thread. */
+AntScanResults *ant_scan_job_run (AntRecord *record, const AntSettings *settings, GCancellable *cancellable,
+                                  AntProgressFunc progress, gpointer data, GError **error);
+/* Measure one asked dip: middle and length. upper_limit_ppm: one-sided 95 % limit of its depth, never below 0. */
+gboolean ant_scan_job_ask (AntRecord *record, const AntSettings *settings, double mid_d, double duration_d, AntDip *dip,
+                           double *upper_limit_ppm, GError **error);
