@@ -1,0 +1,272 @@
+/* byte-source.c - files, standard input and memory as one stream of plain bytes. */
+#include "readers/byte-source.h"
+
+#include <errno.h>
+#include <fcntl.h>
+#include <glib/gi18n.h>
+#include <string.h>
+#include <sys/stat.h>
+#include <unistd.h>
+#include <zlib.h>
+
+#include "data/error.h"
+#include "readers/sha256.h"
+
+#define PACKED_BLOCK (64 * 1024)
+/* Written records pack 3 to 20 fold. What unpacks further than this, beyond a first allowance, is no record. */
+#define MOST_UNPACK_RATIO 200
+#define UNPACK_ALLOWANCE (64 * 1024 * 1024)
+
+struct _AntByteSource
+{
+  char *name;
+  int fd; /* -1 for memory */
+  const guint8 *bytes;
+  gsize n_bytes, at;
+  AntSha256 *sha256;
+  guint64 n_stored, n_unpacked;
+
+  guint8 head[2]; /* read to tell gzip, not yet handed out */
+  gsize n_head;
+  gboolean looked, packed, member_open, at_end;
+  z_stream inflater;
+  guint8 *block;
+
+  guint8 peeked[1024]; /* unpacked, not yet handed out */
+  gsize peeked_at, n_peeked;
+};
+
+static AntByteSource *
+new_source (const char *name, int fd)
+{
+  AntByteSource *source = g_new0 (AntByteSource, 1);
+  source->name = g_strdup (name);
+  source->fd = fd;
+  source->sha256 = ant_sha256_new ();
+  return source;
+}
+
+AntByteSource *
+ant_byte_source_open (const char *path, GError **error)
+{
+  struct stat status;
+  if (!strcmp (path, "-"))
+    return new_source (_("standard input"), dup (STDIN_FILENO));
+  int fd = open (path, O_RDONLY | O_CLOEXEC);
+  if (fd < 0)
+    {
+      g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: cannot be opened: %s"), path, g_strerror (errno));
+      return NULL;
+    }
+  if (fstat (fd, &status) == 0 && S_ISDIR (status.st_mode))
+    {
+      close (fd);
+      g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: found a folder, expected a file with a record"), path);
+      return NULL;
+    }
+  return new_source (path, fd);
+}
+
+AntByteSource *
+ant_byte_source_new_bytes (const char *name, const void *bytes, gsize n)
+{
+  AntByteSource *source = new_source (name, -1);
+  source->bytes = bytes;
+  source->n_bytes = n;
+  return source;
+}
+
+void
+ant_byte_source_free (AntByteSource *source)
+{
+  if (!source)
+    return;
+  if (source->fd >= 0)
+    close (source->fd);
+  if (source->packed)
+    inflateEnd (&source->inflater);
+  ant_sha256_free (source->sha256);
+  g_free (source->block);
+  g_free (source->name);
+  g_free (source);
+}
+
+const char *
+ant_byte_source_name (const AntByteSource *source)
+{
+  return source->name;
+}
+
+gboolean
+ant_byte_source_is_packed (const AntByteSource *source)
+{
+  return source->packed;
+}
+
+char *
+ant_byte_source_sha256 (AntByteSource *source)
+{
+  return ant_sha256_hex (source->sha256);
+}
+
+/* The next stored bytes, hashed. */
+static gssize
+read_stored (AntByteSource *source, guint8 *buffer, gsize n, GError **error)
+{
+  gssize got;
+  if (source->bytes || source->fd < 0)
+    {
+      got = (gssize) MIN (n, source->n_bytes - source->at);
+      if (got > 0)
+        memcpy (buffer, source->bytes + source->at, (gsize) got);
+      source->at += (gsize) got;
+    }
+  else
+    do
+      got = read (source->fd, buffer, n);
+    while (got < 0 && errno == EINTR);
+  if (got < 0)
+    {
+      g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: cannot be read on: %s"), source->name, g_strerror (errno));
+      return -1;
+    }
+  ant_sha256_update (source->sha256, buffer, (gsize) got);
+  source->n_stored += (guint64) got;
+  return got;
+}
+
+/* Two bytes tell gzip. A pipe may hand them over one by one. */
+static gboolean
+look_at_head (AntByteSource *source, GError **error)
+{
+  source->looked = TRUE;
+  while (source->n_head < 2)
+    {
+      gssize got = read_stored (source, source->head + source->n_head, 2 - source->n_head, error);
+      if (got < 0)
+        return FALSE;
+      if (got == 0)
+        return TRUE;
+      source->n_head += (gsize) got;
+    }
+  if (source->head[0] != 0x1f || source->head[1] != 0x8b)
+    return TRUE;
+  source->block = g_malloc (PACKED_BLOCK);
+  memcpy (source->block, source->head, 2);
+  source->inflater.next_in = source->block;
+  source->inflater.avail_in = 2;
+  source->n_head = 0;
+  source->packed = source->member_open = inflateInit2 (&source->inflater, 15 + 16) == Z_OK;
+  return source->packed;
+}
+
+static gssize
+unpack_error (AntByteSource *source, const char *found, GError **error)
+{
+  g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: found %s after %" G_GUINT64_FORMAT " bytes, expected a whole gzip file"),
+               source->name, found, source->n_stored - source->inflater.avail_in);
+  return -1;
+}
+
+/* More packed bytes where none are left. FALSE on error; at_end is set where there are none. */
+static gboolean
+refill (AntByteSource *source, GError **error)
+{
+  if (source->inflater.avail_in > 0 || source->at_end)
+    return TRUE;
+  gssize got = read_stored (source, source->block, PACKED_BLOCK, error);
+  source->inflater.next_in = source->block;
+  source->inflater.avail_in = (uInt) MAX (got, 0);
+  source->at_end = got == 0;
+  return got >= 0;
+}
+
+/* Between members: the next one, or the end. Zero bytes after the last member are padding, as gzip itself takes them. */
+static gboolean
+open_next_member (AntByteSource *source, GError **error)
+{
+  while (refill (source, error))
+    {
+      while (source->inflater.avail_in > 0 && *source->inflater.next_in == 0)
+        {
+          source->inflater.next_in++;
+          source->inflater.avail_in--;
+        }
+      if (source->inflater.avail_in > 0)
+        source->member_open = inflateReset (&source->inflater) == Z_OK;
+      if (source->inflater.avail_in > 0 || source->at_end)
+        return TRUE;
+    }
+  return FALSE;
+}
+
+static gssize
+read_unpacked (AntByteSource *source, void *buffer, gsize n, GError **error)
+{
+  source->inflater.next_out = buffer;
+  source->inflater.avail_out = (uInt) MIN (n, 1u << 30);
+  uInt asked = source->inflater.avail_out;
+  while (source->inflater.avail_out == asked)
+    {
+      if (!source->member_open && !open_next_member (source, error))
+        return -1;
+      if (!refill (source, error))
+        return -1;
+      if (source->at_end && source->inflater.avail_in == 0)
+        return source->member_open ? unpack_error (source, _("the end"), error) : 0;
+      int outcome = inflate (&source->inflater, Z_NO_FLUSH);
+      if (outcome == Z_STREAM_END)
+        source->member_open = FALSE;
+      else if (outcome != Z_OK && outcome != Z_BUF_ERROR)
+        return unpack_error (source, _("damage"), error);
+    }
+  gsize got = asked - source->inflater.avail_out;
+  source->n_unpacked += got;
+  if (source->n_unpacked > UNPACK_ALLOWANCE && source->n_unpacked / MOST_UNPACK_RATIO > source->n_stored)
+    return unpack_error (source, _("more than 200 times the packed size"), error);
+  return (gssize) got;
+}
+
+static gssize
+read_plain (AntByteSource *source, void *buffer, gsize n, GError **error)
+{
+  if (!source->looked && !look_at_head (source, error))
+    return -1;
+  if (source->packed)
+    return read_unpacked (source, buffer, n, error);
+  if (source->n_head == 0)
+    return read_stored (source, buffer, n, error);
+  gsize got = MIN (n, source->n_head);
+  memcpy (buffer, source->head, got);
+  memmove (source->head, source->head + got, source->n_head - got);
+  source->n_head -= got;
+  return (gssize) got;
+}
+
+const guint8 *
+ant_byte_source_peek (AntByteSource *source, gsize *found, GError **error)
+{
+  while (source->n_peeked < sizeof source->peeked)
+    {
+      gssize got = read_plain (source, source->peeked + source->n_peeked, sizeof source->peeked - source->n_peeked, error);
+      if (got < 0)
+        return NULL;
+      if (got == 0)
+        break;
+      source->n_peeked += (gsize) got;
+    }
+  *found = source->n_peeked;
+  return source->peeked;
+}
+
+gssize
+ant_byte_source_read (AntByteSource *source, void *buffer, gsize n, GError **error)
+{
+  gsize waiting = source->n_peeked - source->peeked_at;
+  if (waiting == 0)
+    return read_plain (source, buffer, n, error);
+  n = MIN (n, waiting);
+  memcpy (buffer, source->peeked + source->peeked_at, n);
+  source->peeked_at += n;
+  return (gssize) n;
+}

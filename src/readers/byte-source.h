@@ -1,0 +1,24 @@
+/* byte-source.h - the bytes of an input, unpacked if it is gzip, with the SHA-256 of the bytes as stored. */
+#pragma once
+
+#include <gio/gio.h>
+
+typedef struct _AntByteSource AntByteSource;
+
+/* "-" is standard input. NULL with one sentence for a directory, a missing or an unreadable file. */
+AntByteSource *ant_byte_source_open (const char *path, GError **error);
+/* Bytes in memory, borrowed. */
+AntByteSource *ant_byte_source_new_bytes (const char *name, const void *bytes, gsize n);
+void ant_byte_source_free (AntByteSource *source);
+G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntByteSource, ant_byte_source_free)
+
+/* Up to n (unpacked) bytes into `buffer`. 0 at the end, -1 with an error: a fault of the disk, a damaged or cut-off gzip, or
+ * one that unpacks to absurdly more than its size. */
+gssize ant_byte_source_read (AntByteSource *source, void *buffer, gsize n, GError **error);
+/* The first (unpacked) bytes, up to a kilobyte, without taking them; *found says how many. NULL on error. Call before the first read. */
+const guint8 *ant_byte_source_peek (AntByteSource *source, gsize *found, GError **error);
+/* The name for people: the path, or "standard input". */
+const char *ant_byte_source_name (const AntByteSource *source);
+gboolean ant_byte_source_is_packed (const AntByteSource *source);
+/* Hexadecimal SHA-256 of all stored bytes; read to the end first. Caller frees. */
+char *ant_byte_source_sha256 (AntByteSource *source);

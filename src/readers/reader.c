@@ -1,0 +1,132 @@
+/* reader.c - the registry of formats, and the user's choices. */
+#include "readers/reader.h"
+
+#include <glib/gi18n.h>
+#include <string.h>
+
+#include "data/error.h"
+#include "readers/byte-source.h"
+#include "readers/text-reader.h"
+
+typedef struct
+{
+  const char *name;
+  gboolean (*sniff) (const guint8 *head, gsize n);
+  gboolean (*read) (AntByteSource *source, const AntReadingChoices *choices, GCancellable *cancellable, AntRecord *record,
+                    GError **error);
+} AntFormat;
+
+/* Known kinds of binary files, so that the sentence can name what was found. */
+static const struct
+{
+  const char *magic, *name;
+} binaries[] = {
+  { "SIMPLE  =", "FITS" }, { "\211HDF", "HDF5" }, { "CDF\001", "NetCDF" }, { "CDF\002", "NetCDF" }, { "PK\003\004", "zip" },
+  { "%PDF", "PDF" },       { "\211PNG", "PNG" },  { "BZh", "bzip2" },      { "\3757zXZ", "xz" },
+};
+
+static const char *
+binary_name (const guint8 *head, gsize n)
+{
+  for (gsize i = 0; i < G_N_ELEMENTS (binaries); i++)
+    if (n >= strlen (binaries[i].magic) && !memcmp (head, binaries[i].magic, strlen (binaries[i].magic)))
+      return binaries[i].name;
+  return NULL;
+}
+
+static gboolean
+sniff_text (const guint8 *head, gsize n)
+{
+  return binary_name (head, n) == NULL;
+}
+
+static const AntFormat formats[] = {
+  { "text", sniff_text, ant_text_reader_read },
+};
+
+static AntRecord *
+read_source (AntByteSource *source, const char *path, const AntReadingChoices *choices, GCancellable *cancellable,
+             GError **error)
+{
+  gsize n;
+  const guint8 *head = ant_byte_source_peek (source, &n, error);
+  if (!head)
+    return NULL;
+  for (gsize i = 0; i < G_N_ELEMENTS (formats); i++)
+    {
+      if (!formats[i].sniff (head, n))
+        continue;
+      g_autoptr (AntRecord) record = ant_record_new ();
+      record->path = g_strdup (ant_byte_source_name (source));
+      record->format = g_strdup (formats[i].name);
+      if (!formats[i].read (source, choices, cancellable, record, error))
+        return NULL;
+      g_free (record->path);
+      record->path = g_strdup (path);
+      record->sha256 = ant_byte_source_sha256 (source);
+      return g_steal_pointer (&record);
+    }
+  g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: line 1: found a %s file, expected a table of text"),
+               ant_byte_source_name (source), binary_name (head, n));
+  return NULL;
+}
+
+AntRecord *
+ant_reader_open (const char *path, const AntReadingChoices *choices, GCancellable *cancellable, GError **error)
+{
+  g_autoptr (AntByteSource) source = ant_byte_source_open (path, error);
+  return source ? read_source (source, path, choices, cancellable, error) : NULL;
+}
+
+AntRecord *
+ant_reader_read_bytes (const char *name, const void *bytes, gsize n, const AntReadingChoices *choices, GError **error)
+{
+  g_autoptr (AntByteSource) source = ant_byte_source_new_bytes (name, bytes, n);
+  return read_source (source, name, choices, NULL, error);
+}
+
+void
+ant_reading_choices_clear (AntReadingChoices *choices)
+{
+  g_free (choices->time_column);
+  g_free (choices->value_column);
+  g_free (choices->error_column);
+  g_free (choices->quality_column);
+  g_free (choices->time_format);
+  g_free (choices->time_scale);
+  g_clear_pointer (&choices->fill_values, g_array_unref);
+  memset (choices, 0, sizeof *choices);
+}
+
+gboolean
+ant_reading_choices_parse_columns (AntReadingChoices *choices, const char *text, GError **error)
+{
+  const struct
+  {
+    const char *key;
+    char **place;
+  } keys[] = { { "time", &choices->time_column },
+               { "value", &choices->value_column },
+               { "error", &choices->error_column },
+               { "quality", &choices->quality_column } };
+  g_auto (GStrv) parts = g_strsplit (text, ",", -1);
+  for (guint i = 0; parts[i]; i++)
+    {
+      char *equals = strchr (parts[i], '=');
+      char **place = NULL;
+      if (equals)
+        *equals = 0;
+      for (gsize k = 0; equals && k < G_N_ELEMENTS (keys); k++)
+        if (!strcmp (g_strstrip (parts[i]), keys[k].key))
+          place = keys[k].place;
+      if (!place || *g_strstrip (equals + 1) == 0)
+        {
+          g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE,
+                       _("column “%s”: expected time=…, value=…, error=… or quality=…, each with a name or number"), parts[i]);
+          return FALSE;
+        }
+      g_free (*place);
+      *place = g_strdup (equals + 1);
+    }
+  return TRUE;
+}

@@ -1,0 +1,13 @@
+/* time-header.h - what names and header of a text table say of its clock: offset from JD, time scale, place. */
+#pragma once
+
+#include "data/record.h"
+#include "readers/text-layout.h"
+#include "readers/time-form.h"
+
+/* "BJD-2454833" in the column's name or "time = JD - 2450000" in the header. */
+gboolean ant_time_header_jd_offset (const AntTextLayout *layout, const AntTextColumn *column, double *offset);
+/* Set the form's scale: as chosen, as the names or the header say, or as is usual for the style, which is said. Also sets
+ * the record's time.scale_assumed and time.place. FALSE if the chosen scale is none. */
+gboolean ant_time_header_scale (const AntTextLayout *layout, const char *chosen, AntRecord *record, AntTimeForm *form,
+                                GError **error);

@@ -1,0 +1,171 @@
+/* value-columns.c - value, error and quality by name and content. */
+#include "readers/value-columns.h"
+
+#include <glib/gi18n.h>
+#include <math.h>
+#include <string.h>
+
+#include "data/error.h"
+#include "readers/text-names.h"
+#include "readers/time-columns.h"
+
+static gboolean
+is_time_part (const AntTimeForm *form, guint c)
+{
+  for (guint i = 0; i < form->n_parts; i++)
+    if (form->columns[i] == c)
+      return TRUE;
+  return FALSE;
+}
+
+static gboolean
+names_error (const AntTextColumn *column)
+{
+  static const char *const words[] = { "error", "errors", "err", "sigma", "unc", "uncertainty", "std", "stdev", "stddev", "sd", "e",
+                                       "precision", "accuracy", "deviation", NULL };
+  return ant_text_column_has_word (column, words);
+}
+
+static gboolean
+names_quality (const AntTextColumn *column)
+{
+  static const char *const words[] = { "flag", "flags", "quality", "qual", "qualityflag", "qualityflags", "qc", "dq", "qa", "qf",
+                                       "qflag", NULL };
+  static const char *const other[] = { "provisional", NULL };
+  return ant_text_column_has_word (column, words) && !ant_text_column_has_word (column, other);
+}
+
+static gboolean
+mostly_numbers (const AntTextColumn *column)
+{
+  return 2 * column->n_text < column->n_cells;
+}
+
+static gboolean
+is_whole (const AntTextColumn *column)
+{
+  return column->n_numbers > 0 && column->n_whole == column->n_numbers && mostly_numbers (column);
+}
+
+static gboolean
+chosen (const AntTextLayout *layout, const char *name, const char *path, int *column, GError **error)
+{
+  *column = ant_text_layout_column (layout, name);
+  if (*column < 0)
+    {
+      ant_text_layout_no_column (layout, name, error);
+      g_prefix_error (error, "%s: ", path);
+    }
+  return *column >= 0;
+}
+
+/* Sure enough to look no further: numbers that vary, none of them a likely fill. */
+static gboolean
+plainly_good (const AntTextColumn *column)
+{
+  return 2 * column->n_numbers > column->n_cells && column->n_up + column->n_down > 0 && column->least > 0.0
+         && column->greatest < 9999.0;
+}
+
+static void
+candidates (const AntTextLayout *layout, const AntTimeForm *form, AntValueColumns *columns)
+{
+  for (guint c = 0; c < layout->n_columns && columns->n_values < ANT_MOST_CANDIDATES; c++)
+    {
+      const AntTextColumn *column = &layout->columns[c];
+      if (is_time_part (form, c) || (int) c == columns->error || (int) c == columns->quality || !mostly_numbers (column)
+          || names_error (column) || names_quality (column) || ant_time_columns_alike (layout, c))
+        continue;
+      columns->values[columns->n_values++] = c;
+      if (plainly_good (column))
+        break;
+    }
+}
+
+/* A column of this kind: the first after the value that its name tells, else the first at all. */
+static int
+by_name (const AntTextLayout *layout, const AntTimeForm *form, gboolean (*names) (const AntTextColumn *), gboolean whole)
+{
+  for (guint c = 0; c < layout->n_columns; c++)
+    if (names (&layout->columns[c]) && !is_time_part (form, c) && mostly_numbers (&layout->columns[c])
+        && (!whole || is_whole (&layout->columns[c])))
+      return (int) c;
+  return -1;
+}
+
+/* The error that belongs to the value stands behind it: behind the first candidate that has values. */
+static int
+error_by_name (const AntTextLayout *layout, const AntTimeForm *form, const AntValueColumns *columns)
+{
+  guint value = columns->values[columns->n_values - 1];
+  for (guint i = columns->n_values; i-- > 0;)
+    {
+      const AntTextColumn *column = &layout->columns[columns->values[i]];
+      if (2 * column->n_numbers > column->n_cells && column->n_up + column->n_down > 0)
+        value = columns->values[i];
+    }
+  for (guint c = value + 1; c < layout->n_columns; c++)
+    if (names_error (&layout->columns[c]) && mostly_numbers (&layout->columns[c]) && !is_time_part (form, c))
+      return (int) c;
+  return -1;
+}
+
+gboolean
+ant_value_columns_find (const AntTextLayout *layout, const AntTimeForm *form, const AntReadingChoices *choices, const char *path,
+                        AntValueColumns *columns, GError **error)
+{
+  static const AntReadingChoices none = { 0 };
+  int value;
+  if (!choices)
+    choices = &none;
+  *columns = (AntValueColumns){ .error = -1, .quality = -1 };
+  gboolean no_quality = choices->quality_column && !g_ascii_strcasecmp (choices->quality_column, "none");
+  gboolean no_error = choices->error_column && !g_ascii_strcasecmp (choices->error_column, "none");
+  if (choices->quality_column && !no_quality && !chosen (layout, choices->quality_column, path, &columns->quality, error))
+    return FALSE;
+  if (choices->error_column && !no_error && !chosen (layout, choices->error_column, path, &columns->error, error))
+    return FALSE;
+  if (!choices->quality_column)
+    columns->quality = by_name (layout, form, names_quality, TRUE);
+  if (choices->value_column)
+    {
+      if (!chosen (layout, choices->value_column, path, &value, error))
+        return FALSE;
+      columns->values[columns->n_values++] = (guint) value;
+    }
+  else
+    candidates (layout, form, columns);
+  if (columns->n_values == 0)
+    {
+      g_set_error (error, ANT_ERROR, ANT_ERROR_READ,
+                   _("%s: line %u: found no column of numbers beside the time, expected one; name it with --column value=…"), path,
+                   layout->first_row);
+      return FALSE;
+    }
+  if (!choices->error_column)
+    columns->error = error_by_name (layout, form, columns);
+  return TRUE;
+}
+
+char *
+ant_value_columns_unit (const AntTextLayout *layout, guint c)
+{
+  static const char *const ppm[] = { "ppm", NULL };
+  static const char *const relative[] = { "relative", "rel", "normalized", "normalised", "norm", NULL };
+  static const char *const spellings[] = { "W/m2", "W/m^2", "Wm-2", "W m-2", "W.m2", "W m^-2" };
+  const AntTextColumn *column = &layout->columns[c];
+  if (column->unit)
+    {
+      const char *known = ant_text_known_unit (column->unit);
+      return g_strdup (known ? known : column->unit);
+    }
+  if (ant_text_column_has_word (column, ppm))
+    return g_strdup ("ppm");
+  if (ant_text_column_has_word (column, relative))
+    return g_strdup ("relative");
+  for (guint i = 0; i < layout->header->len; i++)
+    for (gsize s = 0; s < G_N_ELEMENTS (spellings); s++)
+      if (strcasestr (g_ptr_array_index (layout->header, i), "unit") && strstr (g_ptr_array_index (layout->header, i), spellings[s]))
+        return g_strdup ("W/m2");
+  return NULL;
+}

@@ -1,0 +1,23 @@
+/* value-columns.h - which columns of a text table hold its values, their errors and its quality. */
+#pragma once
+
+#include "data/record.h"
+#include "readers/reader.h"
+#include "readers/text-layout.h"
+#include "readers/time-form.h"
+
+#define ANT_MOST_CANDIDATES 16
+
+typedef struct
+{
+  /* Columns that may hold the value, in order; the choice falls when all rows are read. */
+  guint n_values, values[ANT_MOST_CANDIDATES];
+  int error, quality; /* -1 if there is none */
+} AntValueColumns;
+
+/* By the user's choices ("none" for no error or quality), else by names (error, quality) and contents (value). FALSE with
+ * one sentence. */
+gboolean ant_value_columns_find (const AntTextLayout *layout, const AntTimeForm *form, const AntReadingChoices *choices,
+                                 const char *path, AntValueColumns *columns, GError **error);
+/* The unit of a value column: from its name or the header; NULL if unknown. Caller frees. */
+char *ant_value_columns_unit (const AntTextLayout *layout, guint column);
