@@ -190,7 +190,7 @@ study_cell (AntTextColumn *column, const AntCell *cell, double *previous)
     }
   if (cell->kind != ANT_CELL_NUMBER)
     return;
-  gboolean whole = number == floor (number) && fabs (number) < 1e15;
+  gboolean whole = number == floor (number) && fabs (number) < 2e19;
   column->n_numbers++;
   column->n_whole += whole;
   column->n_padded += cell->end - cell->start > 1 && cell->start[0] == '0' && g_ascii_isdigit (cell->start[1]);
@@ -198,12 +198,13 @@ study_cell (AntTextColumn *column, const AntCell *cell, double *previous)
                    && ant_iso_read (cell->start, cell->start + 8, &iso);
   column->n_clock_digits += whole && number >= 0 && number < 240000 && fmod (number, 100.0) < 61.0
                             && fmod (floor (number / 100.0), 100.0) < 60.0;
+  column->n_jd += number > 1.8e6 && number < 3.0e6;
+  if (!(fabs (number) < 1e18))
+    return;
   column->n_up += number > *previous;
   column->n_down += number < *previous;
-  if (column->n_numbers == 1)
-    column->first = column->least = column->greatest = number;
-  column->least = MIN (column->least, number);
-  column->greatest = MAX (column->greatest, number);
+  column->least = fmin (column->least, number);
+  column->greatest = fmax (column->greatest, number);
   *previous = number;
 }
 
@@ -212,7 +213,7 @@ study_columns (AntTextLayout *layout, const Line *lines, guint from, guint to, A
 {
   g_autofree double *previous = g_new (double, layout->n_columns);
   for (guint c = 0; c < layout->n_columns; c++)
-    previous[c] = layout->columns[c].first = layout->columns[c].least = layout->columns[c].greatest = NAN;
+    previous[c] = layout->columns[c].least = layout->columns[c].greatest = NAN;
   for (guint i = from; i < to; i++)
     if (lines[i].is_text
         && ant_cell_split (lines[i].start, lines[i].end, layout->separator, ANT_MOST_COLUMNS, cells) == layout->n_columns)

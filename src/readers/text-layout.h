@@ -19,9 +19,10 @@ typedef struct
   guint n_clock;                 /* text cells such as 07:12:05 */
   guint n_whole, n_ymd;          /* numbers without fraction; numbers that read as YYYYMMDD[.fff] */
   guint n_clock_digits;          /* whole numbers that read as hhmmss */
+  guint n_jd;                    /* numbers that a full Julian date of the years 216 to 3501 has */
   guint n_padded;                /* numbers such as 0007, which are codes more than counts */
   guint n_up, n_down;            /* steps from number to number */
-  double first, least, greatest; /* of the numbers; NaN without any */
+  double least, greatest;        /* of the numbers, absurdly great ones aside; NaN without any */
 } AntTextColumn;
 
 typedef struct

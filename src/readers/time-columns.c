@@ -10,7 +10,6 @@
 #include "readers/text-names.h"
 #include "readers/time-header.h"
 
-#define JD_LEAST 1.8e6
 #define JD_MOST 3.0e6
 #define MJD_ZERO_JD 2400000.5
 
@@ -32,7 +31,7 @@ static gboolean
 is_monotone (const AntTextColumn *column)
 {
   guint steps = column->n_up + column->n_down;
-  return steps > 0 && 10 * MAX (column->n_up, column->n_down) >= 9 * steps;
+  return steps == 0 ? column->n_numbers == 1 : 10 * MAX (column->n_up, column->n_down) >= 9 * steps;
 }
 
 static gboolean
@@ -146,7 +145,7 @@ form_of_numbers (const AntTextLayout *layout, guint c, AntTimeForm *form)
     }
   else if (!is_monotone (column))
     return FALSE;
-  else if (column->least > JD_LEAST && column->greatest < JD_MOST)
+  else if (mostly (column->n_jd, column))
     set_number (form, ANT_STAMP_JD, 0.0, 1.0, c);
   else if (ant_text_column_has_word (column, mjd_words) && column->greatest < 1e6)
     set_number (form, ANT_STAMP_JD, MJD_ZERO_JD, 1.0, c);

@@ -40,9 +40,13 @@ at_fraction (AntTimeForm *form, double midnight_jd, double fraction)
   return form->day_start_d + fraction * (form->scale == ANT_SCALE_UNIX ? 1.0 : form->day_length_d);
 }
 
+/* Hours beyond the day, by 24:00 or by a zone, belong to its neighbour. */
 static double
 at_second (AntTimeForm *form, double midnight_jd, double second, gboolean leap)
 {
+  double days = leap ? 0.0 : floor (second / ANT_SECONDS_PER_DAY);
+  midnight_jd += days;
+  second -= days * ANT_SECONDS_PER_DAY;
   if (!enter_day (form, midnight_jd))
     return (double) NAN;
   /* Second 60 is the last of a day that has one. */
@@ -86,29 +90,26 @@ read_number (AntTimeForm *form, double number)
     }
 }
 
-/* The zone, days to subtract; NaN if the cell is no ISO time. */
-static double
+static gboolean
 read_iso (const AntCell *cell, double *midnight_jd, double *second, gboolean *leap)
 {
   AntIsoTime iso;
   if (!ant_iso_read (cell->start, cell->end, &iso))
-    return (double) NAN;
+    return FALSE;
   *midnight_jd = calendar_midnight (iso.year, iso.month, iso.day);
-  *second = iso.second;
+  *second = iso.second - 60.0 * iso.zone_min;
   *leap = iso.leap;
-  return iso.zone_min / ANT_MINUTES_PER_DAY;
+  return isfinite (*midnight_jd);
 }
 
 static gboolean
-read_date (AntTimeForm *form, const AntCell *cells, double *midnight_jd, double *second, gboolean *leap, double *zone_d)
+read_date (AntTimeForm *form, const AntCell *cells, double *midnight_jd, double *second, gboolean *leap)
 {
   double number = cells[0].number, whole = floor (number), jd2;
   int date;
   switch (form->parts[0])
     {
-    case ANT_PART_ISO:
-      *zone_d = read_iso (&cells[0], midnight_jd, second, leap);
-      return isfinite (*zone_d + *midnight_jd);
+    case ANT_PART_ISO: return read_iso (&cells[0], midnight_jd, second, leap);
     case ANT_PART_YMD:
       if (!(number > 0.0 && number < 1e8))
         return FALSE;
@@ -160,7 +161,7 @@ read_clock_part (AntTimePart part, const AntCell *cell, gboolean *leap)
 double
 ant_time_form_read (AntTimeForm *form, const AntCell *cells)
 {
-  double midnight_jd = (double) NAN, second = 0.0, zone_d = 0.0, jd2;
+  double midnight_jd = (double) NAN, second = 0.0, jd2;
   gboolean leap = FALSE;
   if (form->parts[0] == ANT_PART_NUMBER)
     return read_number (form, cells[0].number);
@@ -170,11 +171,11 @@ ant_time_form_read (AntTimeForm *form, const AntCell *cells)
         return (double) NAN;
       return at_fraction (form, midnight_jd, jd2);
     }
-  if (!read_date (form, cells, &midnight_jd, &second, &leap, &zone_d))
+  if (!read_date (form, cells, &midnight_jd, &second, &leap))
     return (double) NAN;
   for (guint i = form->parts[0] == ANT_PART_YEAR ? 2 : 1; i < form->n_parts; i++)
     second += read_clock_part (form->parts[i], &cells[i], &leap);
-  return at_second (form, midnight_jd, second, leap) - zone_d;
+  return at_second (form, midnight_jd, second, leap);
 }
 
 void

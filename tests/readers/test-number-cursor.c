@@ -98,7 +98,7 @@ a_thousand_digits_equal_strtod (void)
 static void
 fortran_exponents_are_understood (void)
 {
-  double value;
+  double value = 0.0;
   g_assert_nonnull (ant_number_read ("1.361D+03,", &value));
   g_assert_cmpfloat (value, ==, 1361.0);
   g_assert_nonnull (ant_number_read ("1.2345678901234567890123d-300\n", &value));
@@ -109,7 +109,7 @@ static void
 words_are_no_numbers (void)
 {
   static const char *const words[] = { "\n", "-\n", "+\n", ".\n", "-.\n", "e5\n", "nan\n", "inf\n", "abc\n", ",1\n", "--1\n", " 1\n" };
-  double value;
+  double value = 0.0;
   for (gsize i = 0; i < G_N_ELEMENTS (words); i++)
     g_assert_null (ant_number_read (words[i], &value));
   g_assert_cmpstr (ant_number_read ("0x10\n", &value), ==, "x10\n");

@@ -90,7 +90,8 @@ columns_are_taken_by_name_or_number (void)
 static void
 a_column_that_is_not_there_is_named_with_those_that_are (void)
 {
-  AntReadingChoices choices = { .value_column = (char *) "tsi" };
+  char wanted[] = "tsi";
+  AntReadingChoices choices = { .value_column = wanted };
   g_autoptr (GError) error = NULL;
   const char *text = "JD,value\n2451639.5,1361\n2451640.5,1362\n";
   g_assert_null (ant_reader_read_bytes ("trial.txt", text, strlen (text), &choices, &error));

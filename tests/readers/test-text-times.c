@@ -154,13 +154,13 @@ the_user_chooses_columns_format_and_scale (void)
   {
     const char *columns, *format, *scale, *text, *utc;
   } cases[] = {
-    { "1", "mjd", "UTC", "57753.5 1361\n57754.5 1362\n57755.5 1361\n", "2016-12-31T12:00:00Z" },
+    { "1", "mjd", "UTC", "57752.5 1361\n57753.5 1362\n57754.5 1361\n", "2016-12-30T12:00:00Z" },
     { "a", "jd-2450000", "TT", "a b\n7754.5 1361\n7755.5 1362\n7756.5 1361\n", "2016-12-31T23:58:52Z" },
     { "1+2", "ymd", NULL, "20161231 12 1361\n20161231 13 1362\n20161231 14 1361\n", "2016-12-31T12:00:00Z" },
     { "1+2+3+4", "year-day", NULL, "2016 366 12 30 1361\n2016 366 13 30 1362\n2016 366 14 30 1361\n", "2016-12-31T12:30:00Z" },
     { "1+2", NULL, NULL, "2016-12-31 12:30 1361\n2016-12-31 13:30 1362\n2016-12-31 14:30 1361\n", "2016-12-31T12:30:00Z" },
     { "2", "unix", NULL, "x y z\n1 1483228740 1361\n1 1483228800 1362\n1 1483228860 1361\n", "2016-12-31T23:59:00Z" },
-    { NULL, "mjd", "UTC", "57753.5 1361\n57754.5 1362\n57755.5 1361\n", "2016-12-31T12:00:00Z" },
+    { NULL, "mjd", "UTC", "57752.5 1361\n57753.5 1362\n57754.5 1361\n", "2016-12-30T12:00:00Z" },
   };
   for (gsize i = 0; i < G_N_ELEMENTS (cases); i++)
     {
@@ -177,8 +177,9 @@ the_user_chooses_columns_format_and_scale (void)
 static void
 unknown_formats_and_scales_are_refused (void)
 {
-  static const AntReadingChoices bad[] = { { .time_format = (char *) "stardate" }, { .time_scale = (char *) "MARS" },
-                                           { .time_format = (char *) "jd-x" }, { .time_column = (char *) "1+2+3+4+5+6+7" } };
+  char stardate[] = "stardate", mars[] = "MARS", no_offset[] = "jd-x", many[] = "1+2+3+4+5+6+7";
+  const AntReadingChoices bad[] = { { .time_format = stardate }, { .time_scale = mars }, { .time_format = no_offset },
+                                    { .time_column = many } };
   const char *text = "JD v\n2451639.5 1\n2451640.5 2\n";
   for (gsize i = 0; i < G_N_ELEMENTS (bad); i++)
     {
