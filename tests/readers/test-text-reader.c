@@ -284,7 +284,7 @@ static void
 a_file_and_standard_input_read_alike (void)
 {
   const char *text = "JD value\n2451639.5 1361\n2451640.5 1362\n";
-  g_autofree char *folder = g_dir_make_tmp ("antumbra-XXXXXX", NULL);
+  g_autofree char *folder = g_dir_make_tmp (NULL, NULL);
   g_autofree char *path = g_build_filename (folder, "record.txt", NULL);
   g_assert_true (g_file_set_contents (path, text, -1, NULL));
   g_autoptr (AntRecord) from_file = ant_reader_open (path, NULL, NULL, NULL);
@@ -306,7 +306,7 @@ a_file_and_standard_input_read_alike (void)
 static void
 a_cancelled_read_stops (void)
 {
-  g_autofree char *folder = g_dir_make_tmp ("antumbra-XXXXXX", NULL);
+  g_autofree char *folder = g_dir_make_tmp (NULL, NULL);
   g_autofree char *path = g_build_filename (folder, "record.txt", NULL);
   g_autoptr (GCancellable) cancellable = g_cancellable_new ();
   g_autoptr (GError) error = NULL;

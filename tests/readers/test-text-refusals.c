@@ -69,7 +69,7 @@ bytes_that_are_no_text_are_refused (void)
 static void
 a_missing_file_and_a_folder_are_refused (void)
 {
-  g_autofree char *folder = g_dir_make_tmp ("antumbra-XXXXXX", NULL);
+  g_autofree char *folder = g_dir_make_tmp (NULL, NULL);
   g_autofree char *path = g_build_filename (folder, "none.txt", NULL);
   g_autoptr (GError) missing = NULL, is_folder = NULL;
   g_assert_null (ant_reader_open (path, NULL, NULL, &missing));
@@ -88,7 +88,7 @@ pack (const char *head, const char *block, gsize n)
   GByteArray *packed = g_byte_array_new ();
   guint8 buffer[65536];
   z_stream deflater = { 0 };
-  g_assert_cmpint (deflateInit2 (&deflater, 9, Z_DEFLATED, 15 + 16, 8, Z_DEFAULT_STRATEGY), ==, Z_OK);
+  g_assert_cmpint (deflateInit2 (&deflater, 6, Z_DEFLATED, 15 + 16, 8, Z_DEFAULT_STRATEGY), ==, Z_OK);
   gsize n_block = strlen (block);
   g_autofree char *bytes = g_strdup (block), *first = g_strdup (head);
   for (gsize done = 0; done <= n;)
@@ -130,7 +130,7 @@ an_endless_line_is_refused_in_little_memory (void)
 {
   struct rusage before, after;
   g_autofree char *block = g_strnfill (1024 * 1024, '7');
-  g_autoptr (GByteArray) packed = pack ("JD value\n2451639.5 1361\n", block, (gsize) 200 * 1024 * 1024);
+  g_autoptr (GByteArray) packed = pack ("JD value\n2451639.5 1361\n", block, (gsize) 64 * 1024 * 1024);
   getrusage (RUSAGE_SELF, &before);
   expect_refusal (packed->data, packed->len, "line 3: found a line longer than 1048576 bytes");
   getrusage (RUSAGE_SELF, &after);
@@ -142,7 +142,7 @@ a_gzip_that_unpacks_without_measure_is_refused (void)
 {
   struct rusage before, after;
   g_autofree char *block = g_strnfill (1024 * 1024, '\n');
-  g_autoptr (GByteArray) packed = pack ("JD value\n2451639.5 1361\n2451640.5 1361\n", block, (gsize) 300 * 1024 * 1024);
+  g_autoptr (GByteArray) packed = pack ("JD value\n2451639.5 1361\n2451640.5 1361\n", block, (gsize) 96 * 1024 * 1024);
   getrusage (RUSAGE_SELF, &before);
   expect_refusal (packed->data, packed->len, "200 times");
   getrusage (RUSAGE_SELF, &after);
