@@ -78,18 +78,23 @@ style_name (const AntTimeForm *form)
 }
 
 static void
-say_layout (const AntTextLayout *layout, const AntTimeForm *form, gboolean packed, AntRecord *record)
+say_layout (const AntTextLayout *layout, gboolean packed, AntRecord *record)
 {
   const char *separator = layout->separator == ',' ? _("commas") : layout->separator == ';' ? _("semicolons")
                           : layout->separator == '\t' ? _("TABs") : _("blanks");
-  g_autoptr (GString) names = g_string_new (NULL);
-  for (guint i = 0; i < form->n_parts; i++)
-    g_string_append_printf (names, "%s%s", i ? " + " : "", layout->columns[form->columns[i]].label);
-  record->time_name = g_strdup (names->str);
   ant_record_say (record, _("%u columns separated by %s%s; the data begin in line %u."), layout->n_columns, separator,
                   packed ? _(", packed by gzip") : "", layout->first_row);
   if (layout->counted >= layout->first_row)
     ant_record_say (record, _("The first line counts %u header lines, the data begin sooner."), layout->counted);
+}
+
+static void
+say_time (const AntTextLayout *layout, const AntTimeForm *form, AntRecord *record)
+{
+  g_autoptr (GString) names = g_string_new (NULL);
+  for (guint i = 0; i < form->n_parts; i++)
+    g_string_append_printf (names, "%s%s", i ? " + " : "", layout->columns[form->columns[i]].label);
+  record->time_name = g_strdup (names->str);
   ant_record_say (record, _("Time is %s, read as %s."), record->time_name, style_name (form));
   if (form->style == ANT_STAMP_JD && form->offset != 0.0)
     ant_record_say (record, _("JD is the record's number plus %.*f."), form->offset == floor (form->offset) ? 0 : 4, form->offset);
@@ -323,10 +328,12 @@ ant_text_reader_read (AntByteSource *source, const AntReadingChoices *choices, G
   gboolean done = FALSE;
   ant_line_source_init (&lines, source, cancellable);
   g_autoptr (AntTextLayout) layout = look_at_sample (&lines, record, error);
+  if (layout)
+    say_layout (layout, ant_byte_source_is_packed (source), record);
   if (layout && ant_time_columns_find (layout, choices, record, &form, error)
       && ant_value_columns_find (layout, &form, choices, record->path, &columns, error))
     {
-      say_layout (layout, &form, ant_byte_source_is_packed (source), record);
+      say_time (layout, &form, record);
       done = ant_table_rows_read (&rows, &lines, layout, &form, &columns, error)
              && finish (&rows, layout, &form, &columns, choices, record, error);
     }

@@ -1,0 +1,334 @@
+/* verb-info.c - `antumbra-cli info`: what is in a record, what was assumed and what was found, for people and programs. */
+#include <gio/gio.h>
+#include <glib/gi18n.h>
+#include <json-glib/json-glib.h>
+#include <math.h>
+
+#include "cli/exit-code.h"
+#include "cli/record-options.h"
+#include "cli/record-summary.h"
+#include "cli/settings-options.h"
+#include "cli/verbs.h"
+#include "core/units.h"
+#include "jobs/stop.h"
+
+static const char *const style_names[] = { "days",     "jd",           "unix", "iso", "ymd",
+                                           "year-day", "decimal-year" };
+static const char *const place_names[] = { "unknown", "start", "middle", "end" };
+
+static void print_line (const char *label, const char *format, ...) G_GNUC_PRINTF (2, 3);
+
+static void
+print_line (const char *label, const char *format, ...)
+{
+  va_list arguments;
+  va_start (arguments, format);
+  g_autofree char *text = g_strdup_vprintf (format, arguments);
+  va_end (arguments);
+  g_print ("  %-12s %s\n", label, text);
+}
+
+/* A length of time in the unit that people would use. */
+static char *
+length_text (double length_d)
+{
+  double size_d = fabs (length_d);
+  if (size_d >= 2.0)
+    return g_strdup_printf (_("%.2f d"), length_d);
+  if (size_d >= 2.0 / ANT_HOURS_PER_DAY)
+    return g_strdup_printf (_("%.2f h"), length_d * ANT_HOURS_PER_DAY);
+  return g_strdup_printf (_("%.6g s"), length_d * ANT_SECONDS_PER_DAY);
+}
+
+static const char *
+or_none (const char *text)
+{
+  return text ? text : _("none");
+}
+
+static void
+print_columns (const AntRecord *record)
+{
+  const AntTimeReference *time = &record->time;
+  print_line (_("time"), _("%s, written as %s; scale %s%s%s%s"), record->time_name, style_names[time->style],
+              ant_time_scale_name (time->scale), time->scale_assumed ? _(" (assumed)") : "", time->place ? _("; clock at the ") : "",
+              time->place ? time->place : "");
+  print_line (_("value"), _("%s, unit %s"), record->value_name, record->value_unit ? record->value_unit : _("not named"));
+  print_line (_("error"), "%s", or_none (record->error_name));
+  print_line (_("quality"), "%s", or_none (record->quality_name));
+}
+
+static void
+print_span (const AntRecord *record, const AntRecordSummary *summary)
+{
+  if (!summary->has_times)
+    return;
+  g_autofree char *first = ant_time_reference_own_text (&record->time, summary->first_d);
+  g_autofree char *last = ant_time_reference_own_text (&record->time, summary->last_d);
+  g_autofree char *first_utc = ant_time_reference_utc_text (&record->time, summary->first_d, 0);
+  g_autofree char *last_utc = ant_time_reference_utc_text (&record->time, summary->last_d, 0);
+  g_autofree char *length = length_text (summary->last_d - summary->first_d);
+  print_line (_("span"), _("%s to %s (%s)"), first, last, length);
+  if (*first_utc)
+    print_line (_("in UTC"), _("%s to %s"), first_utc, last_utc);
+  else
+    print_line (_("in UTC"), _("not known: the record does not tell its %s"),
+                record->time.origin_known ? _("time scale") : _("origin of time"));
+}
+
+static void
+print_rows (const AntRecord *record, const AntRecordSummary *summary)
+{
+  print_line (_("rows"), _("%" G_GSIZE_FORMAT " in lines %u to %u, %" G_GSIZE_FORMAT " of them good"), record->n_rows,
+              record->line[0], record->line[record->n_rows - 1], summary->n_good);
+  for (unsigned bit = 0; bit < ANT_N_FLAGS; bit++)
+    if (summary->n_flagged[bit] > 0)
+      print_line ("", _("%" G_GSIZE_FORMAT " %s: %s"), summary->n_flagged[bit], ant_flag_name (bit), ant_flag_description (bit));
+}
+
+static void
+print_dark (const AntRecord *record)
+{
+  guint n = record->dark_spans->len;
+  double sum_d = 0.0;
+  for (guint i = 0; i < n; i++)
+    sum_d += g_array_index (record->dark_spans, AntSpan, i).end_d - g_array_index (record->dark_spans, AntSpan, i).start_d;
+  g_autofree char *sum = length_text (sum_d);
+  print_line (_("dark spans"), n ? _("%u, %s together") : _("none"), n, sum);
+  for (guint i = 0; i < MIN (n, 5); i++)
+    {
+      const AntSpan *span = &g_array_index (record->dark_spans, AntSpan, i);
+      g_autofree char *start = ant_time_reference_own_text (&record->time, span->start_d);
+      g_autofree char *end = ant_time_reference_own_text (&record->time, span->end_d);
+      print_line ("", _("%s to %s"), start, end);
+    }
+  if (n > 5)
+    print_line ("", _("and %u more"), n - 5);
+}
+
+static void
+print_grid (const AntRecord *record, const AntRecordSummary *summary)
+{
+  g_autofree char *cadence = length_text (record->cadence_d), *exposure = length_text (record->exposure_d);
+  g_autofree char *rms = length_text (summary->jitter_rms_d), *most = length_text (summary->jitter_most_d);
+  g_autofree char *gap = length_text (summary->longest_gap_d);
+  g_autofree char *gap_start = ant_time_reference_own_text (&record->time, summary->longest_gap_start_d);
+  print_line (_("cadence"), _("%s; stamps are off the grid by %s rms, %s at most"), cadence, rms, most);
+  print_line (_("exposure"), record->exposure_known ? "%s" : _("unknown: %s, the cadence, is used"), exposure);
+  print_line (_("stamps"), record->stamp == ANT_AT_UNKNOWN ? _("unknown: taken as middles of exposures") : _("%s of exposure"),
+              place_names[record->stamp]);
+  print_line (_("samples"), _("%" G_GSIZE_FORMAT " on %" G_GSIZE_FORMAT " grid places: duty cycle %.1f %%"), summary->n_observed,
+              summary->n_places, 100.0 * (double) summary->n_observed / (double) summary->n_places);
+  if (record->gaps->len > 0)
+    print_line (_("gaps"), _("%u, the longest %s from %s"), record->gaps->len, gap, gap_start);
+  else
+    print_line (_("gaps"), "%s", _("none"));
+  print_dark (record);
+  print_line (_("level"), _("median %.8g%s%s"), record->median, record->value_unit ? " " : "",
+              record->value_unit ? record->value_unit : "");
+  print_line (_("scatter"), _("%.4g ppm about the median, %.4g ppm from sample to sample"), summary->scatter_ppm,
+              summary->sample_scatter_ppm);
+}
+
+static void
+print_plain (const AntRecord *record, const AntRecordSummary *summary, gboolean gridded)
+{
+  g_print ("%s\n", record->path);
+  print_line (_("format"), "%s", record->format);
+  print_line ("SHA-256", "%s", record->sha256);
+  print_columns (record);
+  print_span (record, summary);
+  print_rows (record, summary);
+  if (gridded)
+    print_grid (record, summary);
+  g_print ("%s\n", _("Assumed or found:"));
+  for (guint i = 0; i < record->said->len; i++)
+    g_print ("  - %s\n", (const char *) g_ptr_array_index (record->said, i));
+}
+
+static void
+add_text (JsonBuilder *json, const char *name, const char *text)
+{
+  json_builder_set_member_name (json, name);
+  if (text && *text)
+    json_builder_add_string_value (json, text);
+  else
+    json_builder_add_null_value (json);
+}
+
+/* JSON has no NaN. */
+static void
+add_number (JsonBuilder *json, const char *name, double number)
+{
+  json_builder_set_member_name (json, name);
+  if (isfinite (number))
+    json_builder_add_double_value (json, number);
+  else
+    json_builder_add_null_value (json);
+}
+
+static void
+add_count (JsonBuilder *json, const char *name, gsize n)
+{
+  json_builder_add_int_value (json_builder_set_member_name (json, name), (gint64) n);
+}
+
+static void
+add_truth (JsonBuilder *json, const char *name, gboolean truth)
+{
+  json_builder_add_boolean_value (json_builder_set_member_name (json, name), truth);
+}
+
+static void
+add_time (JsonBuilder *json, const AntRecord *record, const char *name, double time_d)
+{
+  g_autofree char *own = ant_time_reference_own_text (&record->time, time_d);
+  g_autofree char *utc = ant_time_reference_utc_text (&record->time, time_d, 3);
+  json_builder_begin_object (json_builder_set_member_name (json, name));
+  add_text (json, "own", own);
+  add_number (json, "jd", ant_time_reference_jd (&record->time, time_d));
+  add_text (json, "utc", utc);
+  json_builder_end_object (json);
+}
+
+static void
+add_rows (JsonBuilder *json, const AntRecord *record, const AntRecordSummary *summary)
+{
+  add_count (json, "rows", record->n_rows);
+  add_count (json, "good_rows", summary->n_good);
+  json_builder_begin_object (json_builder_set_member_name (json, "flags"));
+  for (unsigned bit = 0; bit < ANT_N_FLAGS; bit++)
+    add_count (json, ant_flag_name (bit), summary->n_flagged[bit]);
+  json_builder_end_object (json);
+  if (summary->has_times)
+    {
+      add_time (json, record, "first", summary->first_d);
+      add_time (json, record, "last", summary->last_d);
+      add_number (json, "span_d", summary->last_d - summary->first_d);
+    }
+}
+
+static void
+add_columns (JsonBuilder *json, const AntRecord *record)
+{
+  add_text (json, "time_column", record->time_name);
+  add_text (json, "value_column", record->value_name);
+  add_text (json, "error_column", record->error_name);
+  add_text (json, "quality_column", record->quality_name);
+  add_text (json, "unit", record->value_unit);
+  add_text (json, "time_format", style_names[record->time.style]);
+  add_text (json, "time_scale", ant_time_scale_name (record->time.scale));
+  add_truth (json, "time_scale_assumed", record->time.scale_assumed);
+  add_text (json, "time_place", record->time.place);
+  add_truth (json, "origin_known", record->time.origin_known);
+}
+
+static void
+add_spans (JsonBuilder *json, const AntRecord *record, const char *name, const GArray *spans)
+{
+  json_builder_begin_array (json_builder_set_member_name (json, name));
+  for (guint i = 0; i < spans->len; i++)
+    {
+      json_builder_begin_object (json);
+      add_time (json, record, "start", g_array_index (spans, AntSpan, i).start_d);
+      add_time (json, record, "end", g_array_index (spans, AntSpan, i).end_d);
+      json_builder_end_object (json);
+    }
+  json_builder_end_array (json);
+}
+
+static void
+add_grid (JsonBuilder *json, const AntRecord *record, const AntRecordSummary *summary)
+{
+  add_number (json, "median", record->median);
+  add_number (json, "cadence_s", record->cadence_d * ANT_SECONDS_PER_DAY);
+  add_number (json, "jitter_rms_s", summary->jitter_rms_d * ANT_SECONDS_PER_DAY);
+  add_number (json, "jitter_most_s", summary->jitter_most_d * ANT_SECONDS_PER_DAY);
+  add_number (json, "exposure_s", record->exposure_d * ANT_SECONDS_PER_DAY);
+  add_truth (json, "exposure_known", record->exposure_known);
+  add_text (json, "stamp", place_names[record->stamp]);
+  add_count (json, "places", summary->n_places);
+  add_count (json, "observed", summary->n_observed);
+  add_number (json, "duty_cycle", (double) summary->n_observed / (double) summary->n_places);
+  add_count (json, "gaps", record->gaps->len);
+  add_number (json, "longest_gap_h", summary->longest_gap_d * ANT_HOURS_PER_DAY);
+  add_spans (json, record, "dark_spans", record->dark_spans);
+  add_number (json, "scatter_ppm", summary->scatter_ppm);
+  add_number (json, "sample_scatter_ppm", summary->sample_scatter_ppm);
+}
+
+static void
+print_json (const AntRecord *record, const AntRecordSummary *summary, gboolean gridded, const GError *refusal)
+{
+  g_autoptr (JsonBuilder) json = json_builder_new ();
+  json_builder_begin_object (json);
+  add_text (json, "path", record->path);
+  add_text (json, "format", record->format);
+  add_text (json, "sha256", record->sha256);
+  add_columns (json, record);
+  add_rows (json, record, summary);
+  if (gridded)
+    add_grid (json, record, summary);
+  add_text (json, "refused", refusal ? refusal->message : NULL);
+  json_builder_begin_array (json_builder_set_member_name (json, "said"));
+  for (guint i = 0; i < record->said->len; i++)
+    json_builder_add_string_value (json, g_ptr_array_index (record->said, i));
+  json_builder_end_array (json);
+  json_builder_end_object (json);
+  g_autoptr (JsonNode) root = json_builder_get_root (json);
+  g_autofree char *text = json_to_string (root, TRUE);
+  g_print ("%s\n", text);
+}
+
+/* A record that no grid can be laid on is told about as far as it was read; the exit code tells the rest. */
+static int
+tell (const char *path, const AntRecordOptions *reading, const AntSettingsOptions *given, gboolean as_json)
+{
+  g_autoptr (GError) error = NULL;
+  AntSettings settings;
+  AntRecordSummary summary;
+  if (!ant_settings_options_apply (given, &settings, &error))
+    return ant_cli_fail (error);
+  AntGridOptions grid = settings.grid;
+  g_autoptr (AntRecord) record = NULL;
+  gboolean gridded = FALSE;
+  if (ant_record_options_good (reading, &grid, &error)
+      && (record = ant_record_options_read (reading, path, ant_stop_on_signals (), &error)))
+    gridded = ant_record_make_grid (record, &grid, &error);
+  g_clear_pointer (&grid.good_values, g_array_unref);
+  if (record)
+    {
+      ant_record_summarise (record, gridded, &summary);
+      if (as_json)
+        print_json (record, &summary, gridded, error);
+      else
+        print_plain (record, &summary, gridded);
+    }
+  return error ? ant_cli_fail (error) : ANT_EXIT_DONE;
+}
+
+int
+ant_verb_info (int argc, char **argv)
+{
+  gboolean as_json = FALSE;
+  AntRecordOptions reading = { 0 };
+  AntSettingsOptions given = { 0 };
+  const GOptionEntry entries[] = { { "json", 0, 0, G_OPTION_ARG_NONE, &as_json, N_("print JSON"), NULL }, { NULL } };
+  g_autoptr (GOptionContext) context = g_option_context_new (_("RECORD"));
+  g_option_context_set_summary (context, _("Tells what is in a record (“-”: standard input), and what was assumed to read it."));
+  g_option_context_add_main_entries (context, entries, NULL);
+  ant_record_options_add (context, &reading);
+  ant_settings_options_add (context, &given);
+
+  g_autoptr (GError) error = NULL;
+  int code;
+  if (!g_option_context_parse (context, &argc, &argv, &error))
+    code = ant_cli_fail (error);
+  else if (argc != 2)
+    code = ant_cli_fail_usage (_("info: found %d files, expected one record"), argc - 1);
+  else
+    code = tell (argv[1], &reading, &given, as_json);
+  ant_record_options_clear (&reading);
+  ant_settings_options_clear (&given);
+  return code;
+}
