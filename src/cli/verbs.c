@@ -5,6 +5,7 @@
 
 const AntVerb ant_verb_table[] = {
   { "settings", N_("print the table of settings"), ant_verb_settings },
+  { "simulate", N_("make a record from a recipe, with the truth beside it"), ant_verb_simulate },
 };
 const gsize ant_n_verbs = G_N_ELEMENTS (ant_verb_table);
 
