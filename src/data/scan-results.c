@@ -106,8 +106,8 @@ say_health (AntScanResults *results)
       if (fabs (health->lag1) > 0.05)
         say (results, _("Chunk %" G_GSIZE_FORMAT ": neighbouring forecast errors are correlated by %+.2f; the noise model misses something"),
              number, health->lag1);
-      if (health->loudest > 1.1 || health->quietest < 0.9)
-        say (results, _("Chunk %" G_GSIZE_FORMAT ": the noise changes within it, from %.2f to %.2f of the model's in windows of 4 d; SNRs in loud stretches are too high, in quiet ones too low"),
+      if (health->loudest > 1.15 || health->quietest < 0.87)
+        say (results, _("Chunk %" G_GSIZE_FORMAT ": the noise changes within it, from %.2f to %.2f of the model's; SNRs in loud stretches are too high, in quiet ones too low"),
              number, health->quietest, health->loudest);
       g_autoptr (GString) names = g_string_new (NULL);
       gsize free_parameters = ant_noise_model_get (&chunk->model, NULL);

@@ -8,6 +8,7 @@
 #define SPIKE_SIGMAS 5.5
 #define SPIKE_ROUNDS 3
 #define WINDOW_D 4.0
+#define WINDOW_SAMPLES 400 /* a window is longer where the cadence is coarse: its rms must be known to 4 % */
 
 /* A sample that departs from both its neighbours on the side of its own forecast error is a spike; the first sample of a
  * dip departs from one neighbour only. */
@@ -58,11 +59,12 @@ static void
 window_rms (const AntWhitener *whitener, const AntSeries *part, const double *pull, AntChunkHealth *health)
 {
   const unsigned *place = ant_whitener_places (whitener);
-  size_t m = ant_whitener_observed (whitener), windows = 0, least = (size_t) (0.2 * WINDOW_D / part->step_d) + 20;
+  double window_d = fmax (WINDOW_D, WINDOW_SAMPLES * part->step_d);
+  size_t m = ant_whitener_observed (whitener), windows = 0, least = (size_t) (0.3 * window_d / part->step_d) + 20;
   double low = HUGE_VAL, high = 0;
   for (size_t i = 0; i < m;)
     {
-      double end = (floor ((double) place[i] * part->step_d / WINDOW_D) + 1) * WINDOW_D, sum = 0;
+      double end = (floor ((double) place[i] * part->step_d / window_d) + 1) * window_d, sum = 0;
       size_t n = 0;
       for (; i < m && (double) place[i] * part->step_d < end; i++)
         if (!part->spike[place[i]])

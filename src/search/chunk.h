@@ -15,7 +15,8 @@ typedef struct
   size_t observed, spikes, refits;
   double innovation_rms;   /* of innovations over their stated sigma: 1 when the model fits */
   double lag1;             /* correlation of neighbouring innovations: 0 when the model fits */
-  double loudest, quietest; /* innovation rms in windows of 4 d: greatest and least; NaN below 3 windows */
+  double loudest, quietest; /* innovation rms in windows of 4 d (400 samples where that is longer);
+                               NaN below 3 windows */
   unsigned char unconstrained[ANT_MAX_FREE]; /* free parameters that only the prior decides */
 } AntChunkHealth;
 
