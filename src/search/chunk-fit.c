@@ -27,6 +27,7 @@ stands_alone (const AntSeries *part, const unsigned *place, size_t observed, siz
   return 1;
 }
 
+/* part holds only samples that the fit used. */
 static AntStatus
 find_spikes (const AntWhitener *whitener, const AntSeries *part, uint8_t *spike, size_t *found)
 {
@@ -44,7 +45,7 @@ find_spikes (const AntWhitener *whitener, const AntSeries *part, uint8_t *spike,
   for (size_t i = 0; i < m && !status; i++)
     {
       double departure = z[place[i]] / precision[i];
-      if (fabs (departure) * sqrt (precision[i]) > SPIKE_SIGMAS * fmax (sigma, 1) && !spike[place[i]]
+      if (fabs (departure) * sqrt (precision[i]) > SPIKE_SIGMAS * fmax (sigma, 1)
           && stands_alone (part, place, m, i, departure))
         {
           spike[place[i]] = ANT_SPIKE_FOUND;
@@ -66,12 +67,8 @@ window_rms (const AntWhitener *whitener, const AntSeries *part, const double *pu
     {
       double end = (floor ((double) place[i] * part->step_d / window_d) + 1) * window_d, sum = 0;
       size_t n = 0;
-      for (; i < m && (double) place[i] * part->step_d < end; i++)
-        if (!part->spike[place[i]])
-          {
-            sum += pull[i] * pull[i];
-            n++;
-          }
+      for (; i < m && (double) place[i] * part->step_d < end; i++, n++)
+        sum += pull[i] * pull[i];
       if (n < least)
         continue;
       windows++;
@@ -82,12 +79,11 @@ window_rms (const AntWhitener *whitener, const AntSeries *part, const double *pu
   health->loudest = windows >= 3 ? high : NAN;
 }
 
-/* Innovations over their stated sigma: rms and correlation of neighbours, over the samples the fit used. */
+/* Innovations over their stated sigma: rms and correlation of neighbours. */
 static AntStatus
 judge (const AntWhitener *whitener, const AntSeries *part, AntChunkHealth *health)
 {
-  size_t m = ant_whitener_observed (whitener), n = 0, pairs = 0;
-  const unsigned *place = ant_whitener_places (whitener);
+  size_t m = ant_whitener_observed (whitener);
   double *pull = malloc (m * sizeof *pull), squares = 0, products = 0;
   if (!pull)
     return ANT_NO_MEMORY;
@@ -95,22 +91,37 @@ judge (const AntWhitener *whitener, const AntSeries *part, AntChunkHealth *healt
   for (size_t i = 0; i < m; i++)
     {
       pull[i] /= sqrt (ant_whitener_variance (whitener)[i]);
-      if (part->spike[place[i]])
-        continue;
       squares += pull[i] * pull[i];
-      n++;
-      if (i && !part->spike[place[i - 1]])
-        {
-          products += pull[i] * pull[i - 1];
-          pairs++;
-        }
+      products += i ? pull[i] * pull[i - 1] : 0;
     }
-  health->observed = m;
-  health->innovation_rms = n ? sqrt (squares / (double) n) : NAN;
-  health->lag1 = pairs ? products / (double) pairs / (squares / (double) n) : NAN;
+  health->innovation_rms = sqrt (squares / (double) m);
+  health->lag1 = products / squares;
   window_rms (whitener, part, pull, health);
   free (pull);
   return ANT_OK;
+}
+
+/* Look at the samples that the fit used, and at no other: a dip that is still in the data would spoil its neighbours. */
+static AntStatus
+look (AntChunk *chunk, const AntSeries *part, uint8_t *spike, size_t *found)
+{
+  AntStatus status;
+  AntSeries used = *part;
+  float *value = malloc (part->n * sizeof *value);
+  *found = 0;
+  if (!value)
+    return ANT_NO_MEMORY;
+  for (size_t i = 0; i < part->n; i++)
+    value[i] = spike[i] ? NAN : part->value_ppm[i];
+  used.value_ppm = value;
+  AntWhitener *whitener = ant_whitener_new (&chunk->model, &used, &status);
+  if (whitener)
+    status = find_spikes (whitener, &used, spike, found);
+  if (whitener && !status)
+    status = judge (whitener, &used, &chunk->health);
+  ant_whitener_free (whitener);
+  free (value);
+  return status;
 }
 
 AntStatus
@@ -126,18 +137,14 @@ ant_chunk_fit (AntChunk *chunk, const AntSeries *part, uint8_t *spike, size_t ma
       status = ant_noise_fit (&chunk->model, &own, &options, &chunk->fit);
       if (status && status != ANT_NOT_CONVERGED)
         return status;
-      AntWhitener *whitener = ant_whitener_new (&chunk->model, &own, &status);
-      size_t found = 0;
-      if (whitener)
-        status = find_spikes (whitener, &own, spike, &found);
-      if (whitener && !status)
-        status = judge (whitener, &own, &chunk->health);
-      ant_whitener_free (whitener);
+      size_t found;
+      status = look (chunk, &own, spike, &found);
       if (status || !found)
         break;
       options.warm = 1;
       options.max_steps = 8;
     }
+  chunk->health.observed = ant_series_observed (part, 0);
   chunk->health.spikes = 0;
   for (size_t i = 0; i < part->n; i++)
     chunk->health.spikes += spike[i] == ANT_SPIKE_FOUND;

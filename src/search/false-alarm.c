@@ -30,7 +30,8 @@ draw (Neighbours *n, double duration_d, double edge_d, const AntRefineOptions *o
   AntCrossingShape shape;
   double reach = 0.5 * (duration_d + o->exposure_d) / o->step_d;
   ant_crossing_shape_init (&shape, duration_d, edge_d, ANT_SHAPE_IMPACT, o->limb_darkening);
-  n->moved = 0.2 * edge_d / o->step_d;
+  /* A dip shorter than its exposure only changes when it moves to another sample. */
+  n->moved = duration_d > o->exposure_d ? 0.2 * edge_d / o->step_d : 1;
   n->centre = ceil (reach) + 1;
   n->length = (size_t) (2 * n->centre + n->moved) + 2;
   n->whole = 0;

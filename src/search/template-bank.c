@@ -23,7 +23,7 @@ plan_family (const AntBankOptions *options, double step_d, double edge_h)
   plan.exposure_d = options->exposure_d > 0 ? options->exposure_d : step_d;
   plan.edge_d = fmax (edge_h / ANT_HOURS_PER_DAY, step_d);
   plan.phases = step_d >= plan.edge_d ? 4 : step_d > 0.5 * plan.edge_d ? 2 : 1;
-  double shortest_h = fmax (options->duration_min_h, 0.5 * step_d * ANT_HOURS_PER_DAY);
+  double shortest_h = fmax (options->duration_min_h, step_d * ANT_HOURS_PER_DAY); /* shorter ones look all the same */
   plan.first_h = options->duration_min_h;
   while (plan.first_h < shortest_h && plan.first_h + options->duration_step_h <= options->duration_max_h + 1e-9)
     plan.first_h += options->duration_step_h;

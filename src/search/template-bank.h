@@ -44,8 +44,8 @@ typedef struct
   double step_d;
 } AntTemplateBank;
 
-/* Shapes are negative (a dip), greatest depth 1 before smearing. Durations below half the cadence are left out (the
- * longest is always kept). The edge is at least the cadence; each duration comes in two sub-sample phases where the
+/* Shapes are negative (a dip), greatest depth 1 before smearing. Durations below the cadence are left out (the longest
+ * is always kept). The edge is at least the cadence; each duration comes in two sub-sample phases where the
  * cadence exceeds half the edge, in four where it equals it. The sharp family needs a cadence below half its edge. */
 AntTemplateBank *ant_template_bank_new (const AntBankOptions *options, double step_d, AntStatus *status);
 void ant_template_bank_free (AntTemplateBank *bank);
