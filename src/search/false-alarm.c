@@ -14,7 +14,9 @@
 #define SOFTNESS 0.0
 #define SOFTNESS_POWER 0.5
 
-/* A shape, the same moved a little, and their sum, on one window of lanes. */
+/* A shape, the same moved a little, the same a template longer, and their sums with the shape, on one window of lanes. */
+enum { SHAPE, MOVED, LONGER, WITH_MOVED, WITH_LONGER };
+
 typedef struct
 {
   size_t length;
@@ -25,13 +27,14 @@ typedef struct
 } Neighbours;
 
 static AntStatus
-draw (Neighbours *n, double duration_d, double edge_d, const AntRefineOptions *o)
+draw (Neighbours *n, const AntMember *member, double longer_d, const AntRefineOptions *o)
 {
-  AntCrossingShape shape;
-  double reach = 0.5 * (duration_d + o->exposure_d) / o->step_d;
-  ant_crossing_shape_init (&shape, duration_d, edge_d, ANT_SHAPE_IMPACT, o->limb_darkening);
+  AntCrossingShape shape, longer;
+  double reach = 0.5 * (member->duration_d + longer_d + o->exposure_d) / o->step_d;
+  ant_crossing_shape_init (&shape, member->duration_d, member->edge_d, ANT_SHAPE_IMPACT, o->limb_darkening);
+  ant_crossing_shape_init (&longer, member->duration_d + longer_d, member->edge_d, ANT_SHAPE_IMPACT, o->limb_darkening);
   /* A dip shorter than its exposure only changes when it moves to another sample. */
-  n->moved = duration_d > o->exposure_d ? 0.2 * edge_d / o->step_d : 1;
+  n->moved = member->duration_d > o->exposure_d ? 0.2 * member->edge_d / o->step_d : 1;
   n->centre = ceil (reach) + 1;
   n->length = (size_t) (2 * n->centre + n->moved) + 2;
   n->whole = 0;
@@ -40,25 +43,36 @@ draw (Neighbours *n, double duration_d, double edge_d, const AntRefineOptions *o
     return ANT_NO_MEMORY;
   for (size_t j = 0; j < n->length; j++)
     {
-      double *at = n->lane + j * ANT_LANES;
-      at[0] = -ant_crossing_shape_mean (&shape, ((double) j - n->centre) * o->step_d, o->exposure_d);
-      at[1] = -ant_crossing_shape_mean (&shape, ((double) j - n->centre - n->moved) * o->step_d, o->exposure_d);
-      at[2] = at[0] + at[1];
-      n->whole += at[0];
+      double *at = n->lane + j * ANT_LANES, place = (double) j - n->centre;
+      at[SHAPE] = -ant_crossing_shape_mean (&shape, place * o->step_d, o->exposure_d);
+      at[MOVED] = -ant_crossing_shape_mean (&shape, (place - n->moved) * o->step_d, o->exposure_d);
+      at[LONGER] = -ant_crossing_shape_mean (&longer, place * o->step_d, o->exposure_d);
+      at[WITH_MOVED] = at[SHAPE] + at[MOVED];
+      at[WITH_LONGER] = at[SHAPE] + at[LONGER];
+      n->whole += at[SHAPE];
     }
   return ANT_OK;
 }
 
-/* Upcrossings of zero per place at one epoch: sqrt(variance of the field's derivative)/2 pi (Rice 1945). */
+/* How far two shapes are apart, from the energies of both and of their sum: sqrt(2 (1 - correlation)), at most 1. */
+static double
+apart (double one, double other, double both)
+{
+  double correlation = 0.5 * (both - one - other) / sqrt (one * other);
+  return fmin (sqrt (2 * fmax (1 - correlation, 0)), 1);
+}
+
+/* Upcrossings of zero per place at one epoch, sqrt(variance of the field's derivative)/2 pi (Rice 1945), times the part of
+ * the template that its neighbour in duration does not share. */
 static double
 rate_at (const AntWhitener *whitener, const Neighbours *n, double place)
 {
   double energy[ANT_LANES], moment[ANT_LANES], weight[ANT_LANES];
   ant_whitener_energies (whitener, NULL, (ptrdiff_t) floor (place - n->centre), n->length, n->lane, energy, moment, weight);
-  if (weight[0] / n->whole < LEAST_COVERAGE || !(energy[0] > 0) || !(energy[1] > 0))
+  if (weight[SHAPE] / n->whole < LEAST_COVERAGE || !(energy[SHAPE] > 0 && energy[MOVED] > 0 && energy[LONGER] > 0))
     return 0;
-  double correlation = 0.5 * (energy[2] - energy[0] - energy[1]) / sqrt (energy[0] * energy[1]);
-  return sqrt (2 * fmax (1 - correlation, 0)) / n->moved / ANT_TAU;
+  return apart (energy[SHAPE], energy[MOVED], energy[WITH_MOVED]) / n->moved / ANT_TAU
+         * apart (energy[SHAPE], energy[LONGER], energy[WITH_LONGER]);
 }
 
 AntStatus
@@ -74,13 +88,15 @@ ant_chance_field_measure (AntChanceField *field, const AntWhitener *whitener, co
     {
       const AntFamily *family = &bank->family[f];
       size_t members = 0;
-      while (members < family->n_members && family->member[members].length)
-        members++;
+      double step_d = 0; /* from one duration to the next; half an hour where there is only one */
+      for (; members < family->n_members && family->member[members].length; members++)
+        step_d = fmax (step_d, members ? family->member[members].duration_d - family->member[members - 1].duration_d : 0);
+      step_d = step_d > 0 ? step_d : 1.0 / 48;
       for (size_t d = 0; d < DURATIONS; d++)
         {
           const AntMember *member = &family->member[d * (members - 1) / (DURATIONS - 1)];
           Neighbours neighbours;
-          AntStatus status = draw (&neighbours, member->duration_d, member->edge_d, options);
+          AntStatus status = draw (&neighbours, member, step_d, options);
           if (status)
             return status;
           for (size_t e = 0; e < EPOCHS; e++)
