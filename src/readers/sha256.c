@@ -51,6 +51,7 @@ add_blocks (guint32 *state, const guint8 *bytes, gsize n_blocks)
   for (; n_blocks > 0; n_blocks--, bytes += BLOCK)
     {
       __m128i before_abef = abef, before_cdgh = cdgh, w[4];
+#pragma GCC unroll 16 /* only then do the words stay in registers */
       for (int i = 0; i < 16; i++)
         {
           if (i < 4)

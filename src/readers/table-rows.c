@@ -65,7 +65,7 @@ cut (Slots *slots, const AntTextLayout *layout, const char *at, const char *end,
   while (at)
     {
       gint16 slot = n < layout->n_columns ? slots->slot[n] : -1;
-      at = slot >= 0 ? ant_cell_next (at, end, layout->separator, &slots->cells[slot])
+      at = slot >= 0 ? ant_cell_next_number (at, end, layout->separator, &slots->cells[slot])
                      : ant_cell_skip (at, end, layout->separator);
       n++;
     }
@@ -85,14 +85,14 @@ note_first (gsize *count, guint32 *first, char **text, guint32 line, const AntCe
 static void
 add_row (AntTableRows *rows, const Slots *slots, AntTimeForm *form, const AntValueColumns *columns, guint32 line)
 {
-  AntCell times[ANT_MOST_TIME_PARTS];
+  const AntCell *times[ANT_MOST_TIME_PARTS];
   gsize row = rows->n++;
   for (guint i = 0; i < form->n_parts; i++)
-    times[i] = slots->cells[slots->times[i]];
+    times[i] = &slots->cells[slots->times[i]];
   rows->line[row] = line;
   rows->time_d[row] = ant_time_form_read (form, times);
   if (isnan (rows->time_d[row]))
-    note_first (&rows->n_no_time, &rows->first_no_time, &rows->no_time_text, line, &times[0]);
+    note_first (&rows->n_no_time, &rows->first_no_time, &rows->no_time_text, line, times[0]);
   for (guint i = 0; i < columns->n_values; i++)
     {
       const AntCell *cell = &slots->cells[slots->values[i]];

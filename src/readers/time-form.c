@@ -26,6 +26,7 @@ enter_day (AntTimeForm *form, double midnight_jd)
   form->origin_jd = origin_jd;
   form->started = TRUE;
   form->day_jd = midnight_jd;
+  form->day_own = midnight_jd - form->offset;
   form->day_start_d = start_d;
   form->day_length_d = end_d - start_d;
   return TRUE;
@@ -65,7 +66,9 @@ calendar_midnight (int year, int month, int day)
 static double
 read_number (AntTimeForm *form, double number)
 {
-  double whole, shifted;
+  double whole, shifted, into_day = number - form->day_own;
+  if (form->style == ANT_STAMP_JD && form->started && into_day >= 0.0 && into_day < 1.0)
+    return form->day_start_d + into_day * form->day_length_d; /* still the day last met: the rest below would say the same */
   if (!isfinite (number))
     return (double) NAN;
   switch (form->style)
@@ -103,13 +106,13 @@ read_iso (const AntCell *cell, double *midnight_jd, double *second, gboolean *le
 }
 
 static gboolean
-read_date (AntTimeForm *form, const AntCell *cells, double *midnight_jd, double *second, gboolean *leap)
+read_date (AntTimeForm *form, const AntCell *const *cells, double *midnight_jd, double *second, gboolean *leap)
 {
-  double number = cells[0].number, whole = floor (number), jd2;
+  double number = cells[0]->number, whole = floor (number), jd2;
   int date;
   switch (form->parts[0])
     {
-    case ANT_PART_ISO: return read_iso (&cells[0], midnight_jd, second, leap);
+    case ANT_PART_ISO: return read_iso (cells[0], midnight_jd, second, leap);
     case ANT_PART_YMD:
       if (!(number > 0.0 && number < 1e8))
         return FALSE;
@@ -120,7 +123,7 @@ read_date (AntTimeForm *form, const AntCell *cells, double *midnight_jd, double 
     case ANT_PART_YEAR:
       if (form->n_parts < 2 || !(number > -4700.0 && number < 1e5) || number != whole)
         return FALSE;
-      if (ant_time_from_day_of_year (ANT_SCALE_TAI, (int) number, cells[1].number, midnight_jd, &jd2) != ANT_OK)
+      if (ant_time_from_day_of_year (ANT_SCALE_TAI, (int) number, cells[1]->number, midnight_jd, &jd2) != ANT_OK)
         return FALSE;
       *second = jd2 * ANT_SECONDS_PER_DAY;
       return TRUE;
@@ -159,22 +162,22 @@ read_clock_part (AntTimePart part, const AntCell *cell, gboolean *leap)
 }
 
 double
-ant_time_form_read (AntTimeForm *form, const AntCell *cells)
+ant_time_form_read (AntTimeForm *form, const AntCell *const *cells)
 {
   double midnight_jd = (double) NAN, second = 0.0, jd2;
   gboolean leap = FALSE;
   if (form->parts[0] == ANT_PART_NUMBER)
-    return read_number (form, cells[0].number);
+    return read_number (form, cells[0]->number);
   if (form->parts[0] == ANT_PART_DECIMAL_YEAR)
     {
-      if (ant_time_from_decimal_year (ANT_SCALE_TAI, cells[0].number, &midnight_jd, &jd2) != ANT_OK)
+      if (ant_time_from_decimal_year (ANT_SCALE_TAI, cells[0]->number, &midnight_jd, &jd2) != ANT_OK)
         return (double) NAN;
       return at_fraction (form, midnight_jd, jd2);
     }
   if (!read_date (form, cells, &midnight_jd, &second, &leap))
     return (double) NAN;
   for (guint i = form->parts[0] == ANT_PART_YEAR ? 2 : 1; i < form->n_parts; i++)
-    second += read_clock_part (form->parts[i], &cells[i], &leap);
+    second += read_clock_part (form->parts[i], cells[i], &leap);
   return at_second (form, midnight_jd, second, leap);
 }
 

@@ -37,9 +37,10 @@ typedef struct
   gboolean started;            /* the origin stands: the midnight at or before the first time read */
   double origin_jd, own_zero;
   double day_jd, day_start_d, day_length_d; /* the day last met, so that leap seconds cost nothing per row */
+  double day_own;                           /* ANT_STAMP_JD: the record's number at its midnight */
 } AntTimeForm;
 
 /* Elapsed days of a row from its time cells [n_parts]; the first readable one sets the origin. NaN if it cannot be read. */
-double ant_time_form_read (AntTimeForm *form, const AntCell *cells);
+double ant_time_form_read (AntTimeForm *form, const AntCell *const *cells);
 /* What the form has come to mean; call after the last row. Fills all but `place`. */
 void ant_time_form_reference (const AntTimeForm *form, AntTimeReference *reference);
