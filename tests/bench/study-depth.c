@@ -1,7 +1,7 @@
 /* study-depth.c - crossings planted at known epochs, masked while the noise is fitted, and measured: pull, scatter, bias.
  * Arguments: model, mask, days, cadence in seconds, records, seed, dips per record, T14 in hours, depth in ppm, impact, ingress in minutes.
- * Every dip is measured twice: with the planted shape, and with the bank's wide template of the same length. The paired
- * bias compares the same noise with and without the dip. Prints one summary line. */
+ * Every dip is measured twice, the others taken out: with the planted shape, and with the bank's wide template of the same
+ * length. The paired bias compares the same noise with and without the dip. Prints one summary line. */
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -77,7 +77,6 @@ main (int argc, char **argv)
       AntWhitener *whitener = scan ? whiten (scan, &series, dips, centre, t14_d, &status) : NULL;
       if (!whitener)
         return 1;
-      ant_whitener_solve (whitener, value, z);
       ant_whitener_solve (whitener, noise, z_noise);
       for (size_t k = 0; k < dips; k++)
         {
@@ -85,6 +84,9 @@ main (int argc, char **argv)
           with.centre = without.centre = wide.centre = wide_without.centre = centre[k];
           wide.edge_d = wide_without.edge_d = fmin (1.0 / 72, 0.4 * t14_d);
           wide.impact = wide_without.impact = ANT_SHAPE_IMPACT;
+          memcpy (value, noise, n * sizeof *value);
+          ant_scan_add_shape (scan, &with, -depth, 0, n, value);
+          ant_whitener_solve (whitener, value, z);
           if (ant_measure (whitener, z, &scan->refine, &with) || with.coverage < 0.5)
             continue;
           ant_measure (whitener, z_noise, &scan->refine, &without);
