@@ -145,15 +145,22 @@ ant_noise_model_default (AntNoiseModel *model, double step_d, double rms_ppm, do
   /* A record of constants still needs values whose logarithms exist. */
   double white = white_ppm > 1e-6 ? white_ppm : 1e-6;
   double rms = rms_ppm > white ? rms_ppm : white;
+  /* Where neighbours differ as much as the whole record scatters, there is little but white noise: expect small parts,
+   * else each would keep a share that its prior gave it. */
+  double coloured = fmax (1 - white * white / (rms * rms), 0.03);
   *model = (AntNoiseModel){ .error_scale = 1, .error_scale_width_ln = has_errors ? 0.5 : 0 };
   for (size_t i = 0; i < sizeof bank / sizeof *bank; i++)
     {
       const BankEntry *entry = &bank[i];
       if (step_d >= entry->longest_step_d)
         continue;
-      double start_ppm = entry->factor * pow (rms, 1 - entry->haste) * pow (white, entry->haste);
+      double start_ppm = coloured * entry->factor * pow (rms, 1 - entry->haste) * pow (white, entry->haste);
       add_part (model, entry->kind, start_ppm, fmax (entry->time_d, entry->stretch * step_d), entry->quality,
                 entry->time_width_ln);
+      /* Slow parts even smaller: a month says least of them, so the prior weighs most, and long dips pay for it. */
+      AntNoisePart *part = &model->part[model->n_parts - 1];
+      if (part->time_d > 0.5)
+        part->rms_prior_ppm *= coloured;
     }
   for (size_t i = 0; i < n_lines; i++)
     for (int h = 1; h <= lines[i].harmonics; h++)

@@ -216,3 +216,28 @@ ant_whitener_solve (const AntWhitener *whitener, const float *value, double *z)
   free (innovation);
   return ANT_OK;
 }
+
+AntStatus
+ant_whitener_solve_about_level (const AntWhitener *whitener, const float *value, double *z, double *level_ppm)
+{
+  float *ones = malloc (whitener->n * sizeof *ones);
+  double *z_one = malloc (whitener->n * sizeof *z_one), moment = 0, energy = 0;
+  AntStatus status = ones && z_one ? ant_whitener_solve (whitener, value, z) : ANT_NO_MEMORY;
+  for (size_t i = 0; i < whitener->n && !status; i++)
+    ones[i] = 1;
+  if (!status)
+    status = ant_whitener_solve (whitener, ones, z_one);
+  for (size_t i = 0; i < whitener->n && !status; i++)
+    {
+      moment += z[i];
+      energy += z_one[i];
+    }
+  double level = energy > 0 ? moment / energy : 0;
+  for (size_t i = 0; i < whitener->n && !status; i++)
+    z[i] -= level * z_one[i];
+  if (level_ppm)
+    *level_ppm = level;
+  free (ones);
+  free (z_one);
+  return status;
+}

@@ -42,6 +42,10 @@ void ant_whitener_innovations (const AntWhitener *whitener, const float *value, 
 /* z = C^-1 v on the grid: z [n], 0 at places not observed. */
 AntStatus ant_whitener_solve (const AntWhitener *whitener, const float *value, double *z);
 
+/* The same with a free constant level taken out: z = C^-1 (v - level), level = 1'C^-1 v / 1'C^-1 1 (generalised least
+ * squares, Aitken 1936). What a search uses: a record's median is only near its level. level_ppm may be NULL. */
+AntStatus ant_whitener_solve_about_level (const AntWhitener *whitener, const float *value, double *z, double *level_ppm);
+
 /* Shapes are limited in time: s[j] at places first+j, j < n_shape, else 0. Parts outside the grid are ignored. */
 /* s' C^-1 s, exact, in (n_shape + a checkpoint interval) J operations. */
 double ant_whitener_energy (const AntWhitener *whitener, ptrdiff_t first, size_t n_shape, const double *shape);

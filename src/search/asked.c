@@ -47,7 +47,7 @@ ant_scan_asked (const AntSeries *series, const AntScanOptions *options, double m
   if (!status)
     whitener = ant_whitener_new (&scan->start, &part, &status);
   if (!status)
-    status = ant_whitener_solve (whitener, part.value_ppm, z);
+    status = ant_whitener_solve_about_level (whitener, part.value_ppm, z, NULL);
   if (!status)
     status = ant_measure (whitener, z, &scan->refine, &fit);
   if (!status && fit.coverage < options->least_coverage)

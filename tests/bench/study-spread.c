@@ -36,7 +36,7 @@ main (int argc, char **argv)
       if (!scan || ant_scan_learn_noise (scan))
         return 1;
       AntWhitener *whitener = ant_whitener_new (&scan->start, &series, &status);
-      if (!whitener || ant_whitener_solve (whitener, value, z))
+      if (!whitener || ant_whitener_solve_about_level (whitener, value, z, NULL))
         return 1;
       AntDipMap *map = ant_dip_map_new (scan->bank, whitener, z, options.least_coverage, &status);
       const AntFamily *family = &scan->bank->family[0];

@@ -212,6 +212,30 @@ worked_example_of_a_box_in_correlated_noise (void)
   ant_whitener_free (whitener);
 }
 
+/* What is left has no level: its sum weighted by C^-1 1 is nil, and a constant added to the record changes nothing. */
+static void
+level_is_taken_out (Fixture *f, gconstpointer data)
+{
+  AntStatus status;
+  AntWhitener *whitener = ant_whitener_new (&f->model, &f->series, &status);
+  float raised[N];
+  double z[N], z_raised[N], level, level_raised, sum = 0, largest = 0;
+  for (size_t i = 0; i < N; i++)
+    raised[i] = f->value[i] + 1000;
+  g_assert_cmpint (ant_whitener_solve_about_level (whitener, f->value, z, &level), ==, ANT_OK);
+  g_assert_cmpint (ant_whitener_solve_about_level (whitener, raised, z_raised, &level_raised), ==, ANT_OK);
+  g_assert_cmpfloat_with_epsilon (level_raised - level, 1000, 1e-3);
+  for (size_t i = 0; i < N; i++)
+    {
+      sum += z[i];
+      largest = fmax (largest, fabs (z[i]));
+    }
+  g_assert_cmpfloat (fabs (sum), <, 1e-9 * largest * N);
+  for (size_t i = 0; i < N; i++)
+    g_assert_cmpfloat (fabs (z[i] - z_raised[i]), <, 1e-5 * largest); /* 1000 ppm + value in float */
+  ant_whitener_free (whitener);
+}
+
 static void
 nothing_observed_is_refused (void)
 {
@@ -234,6 +258,7 @@ main (int argc, char **argv)
   TEST ("likelihoods-of-many-models-equal-those-of-each", likelihoods_of_many_models_equal_those_of_each);
   TEST ("energies-equal-dense-algebra", energies_equal_dense);
   TEST ("innovations-have-the-stated-variance", innovations_have_the_stated_variance);
+  TEST ("level-is-taken-out", level_is_taken_out);
   g_test_add_func ("/noise/whitener/worked-example-of-a-box-in-correlated-noise", worked_example_of_a_box_in_correlated_noise);
   g_test_add_func ("/noise/whitener/nothing-observed-is-refused", nothing_observed_is_refused);
   return g_test_run ();
