@@ -94,7 +94,7 @@ make_family (AntFamily *family, const Plan *plan)
   AntStatus status = reserve (family, plan);
   if (status)
     return status;
-  double stride = 0.5 * plan->edge_d / plan->step_d;
+  double stride = 0.5 * plan->edge_d / plan->step_d + 1e-6; /* 10 places must not be 9.999999 */
   family->stride = stride > 1 ? (size_t) stride : 1;
   family->edge_d = plan->edge_d;
   lay_members (family, plan);
