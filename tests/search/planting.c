@@ -67,3 +67,15 @@ nearest_dip (size_t n, const AntDip *dip, double time_d, double within_d, size_t
       }
   return nearest;
 }
+
+double
+shape_energy (const AntWhitener *whitener, ptrdiff_t first, size_t n, const double *shape)
+{
+  double energy[ANT_LANES], moment[ANT_LANES], weight[ANT_LANES];
+  double *lanes = g_new0 (double, n * ANT_LANES);
+  for (size_t j = 0; j < n; j++)
+    lanes[j * ANT_LANES] = shape[j];
+  ant_whitener_energies (whitener, NULL, first, n, lanes, energy, moment, weight);
+  g_free (lanes);
+  return energy[0];
+}

@@ -2,6 +2,7 @@
  * the search share. */
 #pragma once
 
+#include "noise/whitener.h"
 #include "search/scan.h"
 
 /* One crossing (depth > 0) or its mirror image (depth < 0); depth before smearing. */
@@ -18,3 +19,5 @@ void plant (const AntSeries *series, const Planted *planted, float *value);
 AntScan *scan_all (const AntSeries *series, const AntScanOptions *options);
 /* The dip nearest to a time; NULL if there is none within `within_d`. Counts those within. */
 const AntDip *nearest_dip (size_t n, const AntDip *dip, double time_d, double within_d, size_t *count);
+/* s'C^-1 s of one shape. */
+double shape_energy (const AntWhitener *whitener, ptrdiff_t first, size_t n, const double *shape);
