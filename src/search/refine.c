@@ -3,6 +3,7 @@
 #include <math.h>
 #include <stdlib.h>
 #include <string.h>
+#include "core/dense.h"
 
 #define PASSES 60
 
@@ -74,16 +75,24 @@ rate (const Climb *climb, size_t n, const Trial *trial, double *snr)
     snr[i] = length && allowed (climb, &trial[i]) && energy[i] > 0 ? climb->sign * moment[i] / sqrt (energy[i]) : -HUGE_VAL;
 }
 
-/* The eight moves: each outer contact alone, both together, the edge. */
+/* A trial moved in ingress, egress (places) and edge (days), the edge about the middles of ingress and egress: the data pin
+ * these down far better than the contacts, with which held a climb sticks on a slanting ridge. */
+static Trial
+moved (const Trial *at, const double by[3], double step_d)
+{
+  double wider = 0.5 * by[2] / step_d;
+  return (Trial){ at->start + by[0] - wider, at->end + by[1] + wider, at->edge_d + by[2] };
+}
+
+/* The eight moves: ingress and egress alone, both together, the edge. */
 static void
-moves (const Trial *at, double h, double edge_factor, Trial *trial)
+moves (const Trial *at, double h, double edge_factor, double step_d, Trial *trial)
 {
   static const signed char start[8] = { -1, 1, 0, 0, -1, 1, 0, 0 }, end[8] = { 0, 0, -1, 1, -1, 1, 0, 0 };
   for (int i = 0; i < 8; i++)
     {
-      trial[i].start = at->start + h * start[i];
-      trial[i].end = at->end + h * end[i];
-      trial[i].edge_d = i == 6 ? at->edge_d / edge_factor : i == 7 ? at->edge_d * edge_factor : at->edge_d;
+      double edge_d = i == 6 ? at->edge_d / edge_factor : i == 7 ? at->edge_d * edge_factor : at->edge_d;
+      trial[i] = moved (at, (double[3]){ h * start[i], h * end[i], edge_d - at->edge_d }, step_d);
     }
 }
 
@@ -91,12 +100,12 @@ static double
 climb_up (const Climb *climb, Trial *at)
 {
   const AntRefineOptions *o = climb->options;
-  double best, h = fmax (0.25 * at->edge_d / o->step_d, 0.25), factor = 1.3, snr[8];
+  double best, h = fmax (fmax (0.25 * at->edge_d / o->step_d, 0.04 * (at->end - at->start)), 0.25), factor = 1.3, snr[8];
   Trial trial[8];
   rate (climb, 1, at, &best);
   for (int pass = 0; pass < PASSES && (h > 0.01 * at->edge_d / o->step_d || factor > 1.02); pass++)
     {
-      moves (at, h, factor, trial);
+      moves (at, h, factor, o->step_d, trial);
       rate (climb, 8, trial, snr);
       int winner = -1;
       for (int i = 0; i < 8; i++)
@@ -116,26 +125,81 @@ climb_up (const Climb *climb, Trial *at)
   return best;
 }
 
-/* Formal error of a shift by h of (start, end) in directions a, b: from the fall of SNR^2/2 over both sides. */
+/* How far SNR^2/2 falls below its best, mean over the two trials on either side of it. */
 static double
-formal_error (const Climb *climb, const Trial *at, double best, double a, double b)
+fall_of (double best, const double snr[2])
 {
-  double h = 0.25 * at->edge_d / climb->options->step_d, snr[2];
+  return 0.5 * best * best - 0.25 * (snr[0] * fabs (snr[0]) + snr[1] * fabs (snr[1]));
+}
+
+/* The step along one axis (ingress, egress, edge) over which SNR^2/2 falls by about a half, and that fall; NaN if the bounds
+ * or a flat top allow none. */
+static double
+axis_step (const Climb *climb, const Trial *at, double best, int axis, double *fall)
+{
+  const AntRefineOptions *o = climb->options;
+  double h = 0.25 * (axis == 2 ? at->edge_d : at->edge_d / o->step_d), snr[2];
   for (int round = 0; round < 12; round++)
     {
-      Trial trial[2] = { { at->start - a * h, at->end - b * h, at->edge_d }, { at->start + a * h, at->end + b * h, at->edge_d } };
+      double up[3] = { 0 }, down[3] = { 0 };
+      up[axis] = h;
+      down[axis] = -h;
+      Trial trial[2] = { moved (at, up, o->step_d), moved (at, down, o->step_d) };
       rate (climb, 2, trial, snr);
-      double fall = 0.5 * best * best - 0.25 * (snr[0] * fabs (snr[0]) + snr[1] * fabs (snr[1]));
-      if (!isfinite (fall))
+      *fall = fall_of (best, snr);
+      if (!isfinite (*fall))
         h *= 0.5;
-      else if (fall > 1 && round < 11)
-        h *= fmax (0.2, sqrt (0.5 / fall));
-      else if (fall < 0.1 && round < 11)
+      else if (*fall > 1 && round < 11)
+        h *= fmax (0.2, sqrt (0.5 / *fall));
+      else if (*fall < 0.1 && round < 11)
         h *= 1.8;
       else
-        return fall > 0 ? h / sqrt (2 * fall) : NAN;
+        return *fall > 0 ? h : NAN;
     }
   return NAN;
+}
+
+/* Formal errors of middle and duration: the inverse of the curvature of SNR^2/2 in ingress, egress and edge, so that an
+ * ingress in a gap counts as unsure. The edge counts as known where its bounds are nearer than its error. */
+static void
+formal_errors (const Climb *climb, const Trial *at, double best, AntShapeFit *fit)
+{
+  const AntRefineOptions *o = climb->options;
+  static const int pair[3][2] = { { 0, 1 }, { 0, 2 }, { 1, 2 } };
+  double step[3], fall[3], snr[6], curvature[9], covariance[9];
+  Trial trial[6];
+  for (int axis = 0; axis < 3; axis++)
+    step[axis] = axis_step (climb, at, best, axis, &fall[axis]);
+  size_t n = isnan (step[2]) ? 2 : 3, pairs = n == 3 ? 3 : 1;
+  fit->mid_sigma_d = fit->duration_sigma_d = NAN;
+  if (isnan (step[0]) || isnan (step[1]))
+    return;
+  for (size_t k = 0; k < 2 * pairs; k++)
+    {
+      double by[3] = { 0 };
+      for (int side = 0; side < 2; side++)
+        by[pair[k / 2][side]] = (k % 2 ? -1 : 1) * step[pair[k / 2][side]];
+      trial[k] = moved (at, by, o->step_d);
+    }
+  rate (climb, 2 * pairs, trial, snr);
+  for (size_t i = 0; i < n; i++)
+    curvature[i * n + i] = 2 * fall[i];
+  for (size_t k = 0; k < pairs; k++)
+    {
+      size_t i = (size_t) pair[k][0], j = (size_t) pair[k][1];
+      curvature[i * n + j] = curvature[j * n + i] = fall_of (best, snr + 2 * k) - fall[i] - fall[j];
+    }
+  if (ant_cholesky (n, curvature))
+    return;
+  ant_cholesky_inverse (n, curvature, covariance);
+  for (size_t i = 0; i < n; i++)
+    for (size_t j = 0; j < n; j++)
+      covariance[i * n + j] *= step[i] * step[j];
+  double start = covariance[0], end = covariance[n + 1], both = 2 * covariance[1], duration = start + end - both;
+  if (n == 3) /* the edge widens the crossing by its own length, half on either side */
+    duration += (covariance[8] / o->step_d + 2 * (covariance[5] - covariance[2])) / o->step_d;
+  fit->mid_sigma_d = 0.5 * sqrt (start + end + both) * o->step_d;
+  fit->duration_sigma_d = sqrt (duration) * o->step_d;
 }
 
 static size_t
@@ -223,10 +287,7 @@ ant_refine (const AntWhitener *whitener, const double *z, const AntPeak *peak, i
   *fit = (AntShapeFit){ .centre = 0.5 * (at.start + at.end), .duration_d = (at.end - at.start) * options->step_d,
                         .edge_d = at.edge_d, .impact = ANT_SHAPE_IMPACT };
   if (isfinite (best))
-    {
-      fit->mid_sigma_d = formal_error (&climb, &at, best, 1, 1) * options->step_d;
-      fit->duration_sigma_d = 2 * formal_error (&climb, &at, best, -1, 1) * options->step_d;
-    }
+    formal_errors (&climb, &at, best, fit);
   free (climb.buffer);
   return isfinite (best) ? ant_measure (whitener, z, options, fit) : ANT_NO_DATA;
 }
