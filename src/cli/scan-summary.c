@@ -11,10 +11,10 @@
 
 /* The middle as people read it: UTC if it is known, else the record's own number. */
 static char *
-middle_text (const AntRecord *record, const AntDip *dip)
+middle_text (const AntRecord *record, double mid_d)
 {
-  g_autofree char *utc = ant_time_reference_utc_text (&record->time, dip->mid_d, 0);
-  return *utc ? g_steal_pointer (&utc) : ant_time_reference_own_text (&record->time, dip->mid_d);
+  g_autofree char *utc = ant_time_reference_utc_text (&record->time, mid_d, 0);
+  return *utc ? g_steal_pointer (&utc) : ant_time_reference_own_text (&record->time, mid_d);
 }
 
 static void
@@ -25,13 +25,30 @@ print_dips (const AntRecord *record, gsize n, const AntDip *dip)
   g_print (_("  no  middle                length   depth              SNR  first  by chance  edges\n"));
   for (gsize i = 0; i < MIN (n, MOST_LINES); i++)
     {
-      g_autofree char *middle = middle_text (record, &dip[i]);
+      g_autofree char *middle = middle_text (record, dip[i].mid_d);
       g_print (_("%4" G_GSIZE_FORMAT "  %-20s %5.2f h %7.1f ± %-5.1f ppm %6.1f %6.1f   %8.2g  %s\n"), i + 1, middle,
                dip[i].duration_d * ANT_HOURS_PER_DAY, dip[i].depth_ppm, dip[i].depth_sigma_ppm, dip[i].snr, dip[i].first_snr,
                dip[i].expected_false, ant_edges_text (dip[i].edges));
     }
   if (n > MOST_LINES)
     g_print (_("      and %" G_GSIZE_FORMAT " more in the table\n"), n - MOST_LINES);
+}
+
+/* The deepest is named, the rest counted: the table has them. */
+static void
+print_passages (const AntScanResults *results)
+{
+  const AntPassage *deepest = NULL;
+  for (gsize i = 0; i < results->n_passages; i++)
+    if (!deepest || results->passage[i].depth_ppm > deepest->depth_ppm)
+      deepest = &results->passage[i];
+  if (!deepest)
+    return;
+  g_autofree char *time = middle_text (results->record, deepest->mid_d);
+  g_print (g_dngettext (NULL, "Spot groups and the like: %" G_GSIZE_FORMAT " passage, at %s, %.0f ± %.0f ppm deep, %.1f d wide.\n",
+                        "Spot groups and the like: %" G_GSIZE_FORMAT " passages, the deepest at %s, %.0f ± %.0f ppm, %.1f d wide.\n",
+                        results->n_passages),
+           results->n_passages, time, deepest->depth_ppm, deepest->depth_sigma_ppm, deepest->end_d - deepest->start_d);
 }
 
 static void
@@ -60,6 +77,7 @@ ant_scan_summary_print (const AntScanResults *results)
   g_print (_("Mirror (9 h and less): %" G_GSIZE_FORMAT " dips, %" G_GSIZE_FORMAT " brightenings; brightenings of any length: %" G_GSIZE_FORMAT ".\n"),
            results->n_mirror_dips, results->n_mirrored, results->n_brightenings);
   print_dips (record, results->n_brightenings, results->brightening);
+  print_passages (results);
   for (guint i = 0; i < MIN (results->said->len, MOST_SENTENCES); i++)
     g_print ("%s.\n", (const char *) g_ptr_array_index (results->said, i));
   if (results->said->len > MOST_SENTENCES)
@@ -69,7 +87,7 @@ ant_scan_summary_print (const AntScanResults *results)
 void
 ant_scan_summary_print_asked (const AntRecord *record, const AntDip *dip, double upper_limit_ppm)
 {
-  g_autofree char *middle = middle_text (record, dip);
+  g_autofree char *middle = middle_text (record, dip->mid_d);
   g_print (_("Asked dip at %s, %.2f h: depth %.1f ± %.1f ppm, SNR %.2f; deeper than %.1f ppm is excluded at 95 %%; %.0f %% observed, edges seen: %s.\n"),
            middle, dip->duration_d * ANT_HOURS_PER_DAY, dip->depth_ppm, dip->depth_sigma_ppm, dip->snr, upper_limit_ppm,
            100 * dip->coverage, ant_edges_text (dip->edges));

@@ -16,6 +16,7 @@
 #include "writers/dip-table.h"
 #include "writers/flags-table.h"
 #include "writers/output-dir.h"
+#include "writers/passage-table.h"
 #include "writers/scan-tables.h"
 
 typedef struct
@@ -28,7 +29,7 @@ typedef struct
   AntSettingsOptions given;
 } Options;
 
-static const char *const result_names[] = { "dips.csv", "brightenings.csv", "floor.csv", "spectrum.csv", "chunks.csv",
+static const char *const result_names[] = { "dips.csv", "brightenings.csv", "passages.csv", "floor.csv", "spectrum.csv", "chunks.csv",
                                             "flags.csv", NULL };
 
 static void
@@ -88,6 +89,7 @@ write_tables (AntOutputDir *dir, const AntScanResults *results, GError **error)
   AntDipList dips = ant_scan_results_list (results, FALSE), brightenings = ant_scan_results_list (results, TRUE);
   return add (dir, "dips.csv", ant_dip_table_text (results->record, &dips), error)
          && add (dir, "brightenings.csv", ant_dip_table_text (results->record, &brightenings), error)
+         && add (dir, "passages.csv", ant_passage_table_text (results), error)
          && add (dir, "floor.csv", ant_floor_table_text (results), error)
          && add (dir, "spectrum.csv", ant_spectrum_table_text (results), error)
          && add (dir, "chunks.csv", ant_chunks_table_text (results), error)
@@ -106,7 +108,7 @@ search (const Options *options, AntRecord *record, const AntSettings *settings, 
     return FALSE;
   ant_scan_summary_print (results);
   if (dir)
-    g_print (_("Tables are in %s: dips, brightenings, floor, spectrum, chunks, flags.\n"), options->out);
+    g_print (_("Tables are in %s: dips, brightenings, passages, floor, spectrum, chunks, flags.\n"), options->out);
   return TRUE;
 }
 

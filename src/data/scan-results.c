@@ -49,6 +49,15 @@ copy_chunks (AntScanResults *results, const AntScan *scan)
       }
 }
 
+static void
+copy_passages (AntScanResults *results, const AntScan *scan)
+{
+  const AntPassage *passage;
+  results->n_passages = ant_scan_passages (scan, &passage);
+  results->passage = g_memdup2 (passage, results->n_passages * sizeof *passage);
+  results->slow_ppm = g_memdup2 (ant_scan_slow (scan), results->record->series.n * sizeof *results->slow_ppm);
+}
+
 /* For each duration the median over chunks of the 1-sigma depth and of the SNR's spread. */
 static void
 median_floor (AntScanResults *results)
@@ -147,6 +156,7 @@ ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntS
   results->said = g_ptr_array_new_with_free_func (g_free);
   results->n_dips = ant_scan_dips (scan, &dip);
   results->dip = g_memdup2 (dip, results->n_dips * sizeof *dip);
+  copy_passages (results, scan);
   results->n_brightenings = ant_scan_brightenings (scan, &dip);
   results->brightening = g_memdup2 (dip, results->n_brightenings * sizeof *dip);
   results->threshold_snr = ant_scan_threshold (scan);
@@ -180,6 +190,8 @@ ant_scan_results_unref (AntScanResults *results)
   g_free (results->chunk);
   g_free (results->dip);
   g_free (results->brightening);
+  g_free (results->passage);
+  g_free (results->slow_ppm);
   g_free (results->flags);
   g_ptr_array_unref (results->said);
   ant_record_unref (results->record);

@@ -14,6 +14,9 @@ typedef struct
   AntSettings settings;      /* those of the scan; its array pointers are not kept */
   gsize n_dips, n_brightenings;
   AntDip *dip, *brightening; /* by time, numbered from 1 in this order */
+  gsize n_passages;
+  AntPassage *passage;       /* by time, numbered from 1 in this order */
+  float *slow_ppm;           /* [record->series.n] the slow part, dips taken out, gaps bridged */
   gsize n_chunks;
   AntChunk *chunk;           /* frequency_cd and power_unmasked owned */
   gsize n_floor;             /* points of the median floor over chunks */

@@ -69,3 +69,12 @@ ant_chunks_plan (const AntSeries *series, const AntChunkOptions *options, size_t
     }
   return n;
 }
+
+double
+ant_chunk_share (const AntChunk *chunk, double overlap, double place)
+{
+  if (!(overlap > 0))
+    return place >= chunk->own_from && place < chunk->own_to;
+  double rise = (place - chunk->own_from) / overlap + 0.5, fall = (chunk->own_to - place) / overlap + 0.5;
+  return fmin (fmax (rise, 0), 1) * fmin (fmax (fall, 0), 1);
+}

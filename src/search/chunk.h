@@ -46,6 +46,10 @@ size_t ant_chunks_plan (const AntSeries *series, const AntChunkOptions *options,
 /* Upper bound of the count, for room. */
 size_t ant_chunks_room (const AntSeries *series, const AntChunkOptions *options);
 
+/* How much of a place belongs to a chunk: 1 in its own part, falling to 0 over the overlap (in places) with each
+ * neighbour, so that the shares of neighbours add up to 1 if own parts are longer than the overlap. */
+double ant_chunk_share (const AntChunk *chunk, double overlap, double place);
+
 /* Fit the noise of a part in place, starting from chunk->model under its priors (and, if warm, from chunk->curvature);
  * spike [part->n] in/out: isolated
  * outliers (beyond 5.5 robust sigma of the forecast from all other samples, and from both neighbours on the same side)

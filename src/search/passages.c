@@ -92,6 +92,21 @@ lay_line (const Curve *curve, Hollow *hollow, size_t reach)
   while (left != hollow->left || right != hollow->right);
 }
 
+/* How far the curve rises on one side before it comes to lower ground. */
+static double
+rise (const Curve *curve, size_t k, int right, size_t reach)
+{
+  double highest = curve->value[k];
+  for (size_t i = 1; i <= reach && (right ? k + i < curve->n : i <= k); i++)
+    {
+      double value = curve->value[right ? k + i : k - i];
+      if (value < curve->value[k])
+        break;
+      highest = fmax (highest, value);
+    }
+  return highest - curve->value[k];
+}
+
 /* Where half the depth is reached on one side, between bins. */
 static double
 half_way (const Curve *curve, const Hollow *hollow, int side)
@@ -153,7 +168,8 @@ read_passages (const Curve *curve, const AntWhitener *whitener, const AntNoiseMo
         continue;
       lay_line (curve, &hollow, reach);
       hollow.depth = below_line (curve, &hollow, i);
-      if (!(hollow.depth > 0))
+      double least_rise = fmin (rise (curve, i, 0, reach), rise (curve, i, 1, reach));
+      if (!(hollow.depth > 0) || least_rise < 0.5 * hollow.depth) /* a ripple on the flank of another */
         continue;
       hollow.from = half_way (curve, &hollow, -1);
       hollow.to = half_way (curve, &hollow, 1);

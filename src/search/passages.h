@@ -2,11 +2,12 @@
  *
  * The slow part is what the data say about those parts of the noise model that vary over half a day and more (its
  * conditional mean, noise/smoother.h), dips taken out first. A passage is a minimum of that curve; its shoulders are where
- * the straight line over it touches the curve on both sides, before ground lower than the minimum and within 14 d. Depth
- * is measured from that line; start and end are where half the depth is reached, 1 to 14 d apart, and the middle is
- * halfway: a fault of the instrument in the passage moves it less than the lowest point. A passage is listed if its depth
- * is at least 3 times its own uncertainty given the model: below that the record does not show the dip, the smoothing
- * does, in a gap above all. That is a statement about the record and no false-alarm claim: the Sun does this. */
+ * the straight line over it touches the curve on both sides, before ground lower than the minimum and within 14 d, and on
+ * both the curve rises by half the depth at least: a ripple on another's flank does not. Depth is measured from that line;
+ * start and end are where half of it is reached, 1 to 14 d apart, and the middle is halfway: a fault of the instrument in
+ * the passage moves it less than the lowest point. A passage is listed if its depth is at least 3 times its own
+ * uncertainty given the model: below that the record does not show the dip, the smoothing does, in a gap above all. That
+ * is a statement about the record and no false-alarm claim: the Sun does this. */
 #pragma once
 
 #include <stddef.h>

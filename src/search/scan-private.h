@@ -28,6 +28,14 @@ typedef struct
   AntChanceField chance;
 } AntChunkHarvest;
 
+/* What one chunk's tracing leaves for finish to join. */
+typedef struct
+{
+  float *slow_ppm;   /* [chunk n] */
+  size_t n_passages;
+  AntPassage *passage;
+} AntTrace;
+
 struct _AntScan
 {
   AntSeries series;
@@ -47,6 +55,10 @@ struct _AntScan
   double threshold_snr;
   size_t n_dips, n_brightenings;
   AntDip *dip, *brightening;
+  AntTrace *trace;     /* [n_chunks] */
+  float *slow_ppm;     /* [n] */
+  size_t n_passages;
+  AntPassage *passage;
 };
 
 /* The start: one slice. */
@@ -57,6 +69,10 @@ AntStatus ant_scan_search_chunk (AntScan *scan, size_t i);
 AntStatus ant_scan_weigh (AntScan *scan, size_t event);
 /* All accepted events of one chunk fitted together. */
 AntStatus ant_scan_fit_together (AntScan *scan, size_t i);
+/* The slow part of one chunk, its events taken out, and its passages. */
+AntStatus ant_scan_trace_slow (AntScan *scan, size_t i);
+/* All chunks' traces as one curve and one list. */
+AntStatus ant_scan_join_traces (AntScan *scan);
 
 /* value[p] += factor * (the fit's loss) for places p of a stretch that begins at place `first` of the record. */
 void ant_scan_add_shape (const AntScan *scan, const AntShapeFit *fit, double factor, size_t first, size_t n, float *value);

@@ -7,7 +7,7 @@
 #include "noise/spectrum.h"
 #include "search/scan-private.h"
 
-enum { LEARN, SEARCH, WEIGH, TOGETHER, N_STAGES };
+enum { LEARN, SEARCH, WEIGH, TOGETHER, TRACE, N_STAGES };
 
 #define WHITTLE_BINS 6
 #define START_STEPS 40
@@ -43,9 +43,10 @@ ant_scan_new (const AntSeries *series, const AntScanOptions *options, AntStatus 
       scan->refine = refine_options (options, scan->bank);
       scan->chunk = calloc (room, sizeof *scan->chunk);
       scan->harvest = calloc (room, sizeof *scan->harvest);
+      scan->trace = calloc (room, sizeof *scan->trace);
       scan->residual = malloc (series->n * sizeof *scan->residual);
       scan->spike = calloc (series->n, 1);
-      *status = scan->chunk && scan->harvest && scan->residual && scan->spike ? ANT_OK : ANT_NO_MEMORY;
+      *status = scan->chunk && scan->harvest && scan->trace && scan->residual && scan->spike ? ANT_OK : ANT_NO_MEMORY;
       if (!*status)
         scan->n_chunks = ant_chunks_plan (series, &options->chunk, room, scan->chunk);
     }
@@ -79,6 +80,11 @@ ant_scan_free (AntScan *scan)
   forget_harvest (scan);
   for (size_t i = 0; scan->chunk && i < scan->n_chunks; i++)
     free (scan->chunk[i].frequency_cd);
+  for (size_t i = 0; scan->trace && i < scan->n_chunks; i++)
+    {
+      free (scan->trace[i].slow_ppm);
+      free (scan->trace[i].passage);
+    }
   ant_template_bank_free (scan->bank);
   free (scan->chunk);
   free (scan->harvest);
@@ -87,6 +93,9 @@ ant_scan_free (AntScan *scan)
   free (scan->event);
   free (scan->dip);
   free (scan->brightening);
+  free (scan->trace);
+  free (scan->slow_ppm);
+  free (scan->passage);
   free (scan);
 }
 
@@ -273,7 +282,7 @@ static const char *
 stage_title (void *work, size_t stage)
 {
   static const char *const title[N_STAGES] = { "learning the noise", "searching for dips", "weighing candidates",
-                                               "fitting dips together" };
+                                               "fitting dips together", "tracing passages" };
   return title[stage];
 }
 
@@ -281,7 +290,7 @@ static size_t
 stage_count (void *work, size_t stage)
 {
   AntScan *scan = work;
-  size_t count[N_STAGES] = { 1, scan->n_chunks, scan->n_events, scan->n_chunks };
+  size_t count[N_STAGES] = { 1, scan->n_chunks, scan->n_events, scan->n_chunks, scan->n_chunks };
   return count[stage];
 }
 
@@ -294,7 +303,8 @@ run_slice (void *work, size_t stage, size_t slice)
     case LEARN: return ant_scan_learn_noise (scan);
     case SEARCH: return ant_scan_search_chunk (scan, slice);
     case WEIGH: return scan->event[slice].strong ? ANT_OK : ant_scan_weigh (scan, slice);
-    default: return ant_scan_fit_together (scan, slice);
+    case TOGETHER: return ant_scan_fit_together (scan, slice);
+    default: return ant_scan_trace_slow (scan, slice);
     }
 }
 
@@ -306,6 +316,7 @@ finish (void *work, size_t stage)
     case SEARCH: return merge_chunks (work);
     case WEIGH: drop_side_lobes (work); return ANT_OK;
     case TOGETHER: drop_side_lobes (work); return list_dips (work);
+    case TRACE: return ant_scan_join_traces (work);
     default: return ANT_OK;
     }
 }
@@ -358,3 +369,12 @@ ant_scan_refits (const AntScan *scan)
 }
 
 const uint8_t *ant_scan_spikes (const AntScan *scan) { return scan->spike; }
+
+size_t
+ant_scan_passages (const AntScan *scan, const AntPassage **passage)
+{
+  *passage = scan->passage;
+  return scan->n_passages;
+}
+
+const float *ant_scan_slow (const AntScan *scan) { return scan->slow_ppm; }

@@ -14,6 +14,7 @@
 #include "search/chunk.h"
 #include "search/dip.h"
 #include "search/false-alarm.h"
+#include "search/passages.h"
 #include "search/refine.h"
 
 #define ANT_MAX_LINES 4
@@ -50,6 +51,11 @@ AntChanceField ant_scan_chance_field (const AntScan *scan);
 size_t ant_scan_refits (const AntScan *scan);
 /* [series->n] ANT_SPIKE_FOUND where an isolated outlier was left out of the fits. */
 const uint8_t *ant_scan_spikes (const AntScan *scan);
+
+/* Spot groups and the like, by time: they last days and carry no false-alarm claim. */
+size_t ant_scan_passages (const AntScan *scan, const AntPassage **passage);
+/* [series->n] the slow part of the record, ppm, its dips taken out and its gaps bridged; NULL before the last stage. */
+const float *ant_scan_slow (const AntScan *scan);
 
 /* Measure one asked dip (middle, T14) under the noise of a chunk centred on it, the dip masked while fitting; no search.
  * dip->snr etc. are filled; expected_false is NaN. ANT_NO_DATA if less than `least_coverage` of it is observed. */
