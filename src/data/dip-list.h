@@ -13,6 +13,7 @@ typedef struct
   double limb_u1, limb_u2;       /* quadratic limb darkening of the templates */
   double threshold_snr;          /* NaN for an asked dip: there was no search */
   double false_alarms;           /* dips of this sign expected by chance at that threshold in the record; NaN unknown */
+  gsize n_surrogates, n_surrogate_events; /* that the chance law was refitted to, and their events; 0: the built-in law */
   gboolean mirror_known;         /* the mirrored search was run: */
   gsize n_found, n_mirrored;     /*   dips at or above the threshold, and brightenings, of the durations it checks */
   const double *upper_limit_ppm; /* [n] 95 % upper limits of asked dips, or NULL if found by a search */

@@ -28,6 +28,8 @@ ant_scan_results_options (const AntRecord *record, const AntSettings *settings)
   options.chunk = (AntChunkOptions) { .length_d = settings->chunk_d, .overlap_d = settings->chunk_overlap_d };
   options.threshold_snr = settings->threshold_snr;
   options.false_alarms_per_year = settings->false_alarms_per_year;
+  options.surrogates = (size_t) settings->surrogates;
+  options.seed = (guint64) settings->seed;
   if (settings->line_period_h > 0)
     options.line[options.n_lines++] = (AntNoiseLine) { .period_d = settings->line_period_h / ANT_HOURS_PER_DAY,
                                                        .harmonics = (int) settings->line_harmonics };
@@ -133,6 +135,14 @@ say_health (AntScanResults *results)
 }
 
 static void
+say_surrogates (AntScanResults *results)
+{
+  if (results->n_surrogates)
+    say (results, _("Expected false dips and the threshold rest on %" G_GSIZE_FORMAT " surrogates of this record, with %" G_GSIZE_FORMAT " events of SNR 4 and more"),
+         results->n_surrogates, results->n_surrogate_events);
+}
+
+static void
 say_length (AntScanResults *results)
 {
   double span_d = (double) results->record->series.n * results->record->series.step_d;
@@ -160,6 +170,7 @@ ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntS
   results->n_brightenings = ant_scan_brightenings (scan, &dip);
   results->brightening = g_memdup2 (dip, results->n_brightenings * sizeof *dip);
   results->threshold_snr = ant_scan_threshold (scan);
+  results->n_surrogates = ant_scan_surrogates (scan, &results->n_surrogate_events);
   results->expected_at_threshold = ant_scan_expected_false (scan, results->threshold_snr);
   results->observed_d = ant_scan_chance_field (scan).observed_d;
   results->n_refits = ant_scan_refits (scan);
@@ -168,6 +179,7 @@ ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntS
   copy_chunks (results, scan);
   median_floor (results);
   add_spike_flags (results, scan);
+  say_surrogates (results);
   say_health (results);
   say_length (results);
   return results;
@@ -209,6 +221,8 @@ ant_scan_results_list (const AntScanResults *results, gboolean brightenings)
     .limb_u2 = results->settings.bank.limb_darkening.u2,
     .threshold_snr = results->threshold_snr,
     .false_alarms = results->expected_at_threshold,
+    .n_surrogates = results->n_surrogates,
+    .n_surrogate_events = results->n_surrogate_events,
     .mirror_known = TRUE,
     .n_found = results->n_mirror_dips,
     .n_mirrored = results->n_mirrored,

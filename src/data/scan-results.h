@@ -23,6 +23,7 @@ typedef struct
   AntFloorPoint floor[ANT_MAX_FLOOR];
   double threshold_snr;
   double expected_at_threshold;     /* noise-only dips of one sign expected at the threshold in this record */
+  gsize n_surrogates, n_surrogate_events; /* that the false-alarm law was refitted to; 0: the built-in law */
   double observed_d;
   gsize n_refits;
   gsize n_mirror_dips, n_mirrored;  /* dips and brightenings of 9 h and less: the mirror's check */

@@ -54,6 +54,8 @@ const AntSetting ant_setting_table[] = {
     N_("Noise-only dips accepted per year of observed time; sets the threshold") },
   { "threshold", "", REAL, 0, 0, 1000, 1, AT (threshold_snr), NULL, N_("False alarms"),
     N_("Least dip SNR listed; 0 = from false-alarms-per-year") },
+  { "surrogates", "", WHOLE, 0, 0, 10000, 1, AT (surrogates), NULL, N_("False alarms"),
+    N_("Noise-only records drawn from the fitted noise and searched, to refit the false-alarm law; each takes as long as a scan; 0 = the built-in law") },
 
   { "rotation-window", "d", REAL, 27.275232, 2, 365.25, 1, AT (rotation_window_d), NULL, N_("Display"),
     N_("Period and window of the rotation curve that is drawn") },

@@ -14,6 +14,7 @@ typedef struct
   double stamp;            /* an AntStampPlace */
   double threshold_snr;    /* 0 = from false_alarms_per_year */
   double false_alarms_per_year;
+  double surrogates;       /* 0 = the calibrated chance law */
   double chunk_d;          /* 0 = 90 below a 10-min cadence, else 180 */
   double chunk_overlap_d;
   double line_period_h;    /* 0 = no line */

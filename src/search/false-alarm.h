@@ -34,6 +34,10 @@ AntStatus ant_chance_field_measure (AntChanceField *field, const AntWhitener *wh
 void ant_chance_field_add (AntChanceField *sum, const AntChanceField *field);
 /* The calibrated law for a field. */
 void ant_chance_law_init (AntChanceLaw *law, const AntChanceField *field);
+/* Refit yield and softness to surrogates of the record: snr [n] final SNRs (signs dropped) of all events of both signs
+ * at or above `lowest` in n_records noise-only records. Greatest posterior of the tail above `lowest`, the law as it stands
+ * being the prior: few events leave the softness where it is and move the yield only. */
+void ant_chance_law_fit (AntChanceLaw *law, size_t n, const double *snr, size_t n_records, double lowest);
 /* Dips of one sign expected from noise alone with a final SNR of at least `snr`. */
 double ant_chance_law_expected (const AntChanceLaw *law, double snr);
 /* SNR at which `number` are expected; between 3 and 40. */

@@ -5,9 +5,10 @@
  * the straight line over it touches the curve on both sides, before ground lower than the minimum and within 14 d, and on
  * both the curve rises by half the depth at least: a ripple on another's flank does not. Depth is measured from that line;
  * start and end are where half of it is reached, 1 to 14 d apart, and the middle is halfway: a fault of the instrument in
- * the passage moves it less than the lowest point. A passage is listed if its depth is at least 3 times its own
- * uncertainty given the model: below that the record does not show the dip, the smoothing does, in a gap above all. That
- * is a statement about the record and no false-alarm claim: the Sun does this. */
+ * the passage moves it less than the lowest point. A passage is listed if its depth is at least 4 times its own
+ * uncertainty given the model (4, since the minimum and its shoulders are the most telling of many places): below that the
+ * record does not show the dip, the smoothing does, in a gap above all. That is a statement about the record and no
+ * false-alarm claim: the Sun does this. */
 #pragma once
 
 #include <stddef.h>
@@ -17,7 +18,7 @@
 
 #define ANT_PASSAGE_SHORTEST_D 1.0
 #define ANT_PASSAGE_LONGEST_D 14.0
-#define ANT_PASSAGE_SIGMAS 3.0
+#define ANT_PASSAGE_SIGMAS 4.0
 
 typedef struct
 {

@@ -6,6 +6,7 @@
 
 #define ANT_STRONG_SNR 8.0   /* masked and subtracted before weaker ones are looked for */
 #define ANT_KEEP_SNR 3.5     /* weakest first-pass peak that is ever weighed */
+#define ANT_SURROGATE_SNR 4.0 /* weakest event of a surrogate that the chance law is fitted to */
 #define ANT_PER_CHUNK 400    /* most events of one sign kept for a chunk */
 
 /* One dip or brightening on its way; places are those of the record. */
@@ -36,6 +37,13 @@ typedef struct
   AntPassage *passage;
 } AntTrace;
 
+/* What one surrogate showed: final SNRs of both signs, without their sign. */
+typedef struct
+{
+  size_t n;
+  double *snr;
+} AntSurrogate;
+
 struct _AntScan
 {
   AntSeries series;
@@ -52,6 +60,8 @@ struct _AntScan
   size_t n_events, n_kept;
   AntEvent *event;     /* strong first, then candidates to weigh */
   AntChanceLaw chance;
+  AntSurrogate *surrogate; /* [options.surrogates] */
+  size_t n_surrogate_events;
   double threshold_snr;
   size_t n_dips, n_brightenings;
   AntDip *dip, *brightening;
@@ -65,6 +75,14 @@ struct _AntScan
 AntStatus ant_scan_learn_noise (AntScan *scan);
 /* One chunk: fit, strong events, candidates, floor, spectrum. */
 AntStatus ant_scan_search_chunk (AntScan *scan, size_t i);
+/* A noise-only record from the chunks' models through the record's gaps: value [n] out. */
+AntStatus ant_scan_draw_surrogate (const AntScan *scan, size_t surrogate, float *value);
+/* One surrogate: draw, search, keep its SNRs. */
+AntStatus ant_scan_try_surrogate (AntScan *scan, size_t i);
+/* The chance law from all surrogates. */
+AntStatus ant_scan_learn_chance (AntScan *scan);
+/* Every stage up to the lists of dips and brightenings, one slice after another, for a scan inside a slice. */
+AntStatus ant_scan_find_alone (AntScan *scan);
 /* One candidate: mask, refit, weigh. */
 AntStatus ant_scan_weigh (AntScan *scan, size_t event);
 /* All accepted events of one chunk fitted together. */

@@ -7,7 +7,7 @@
 #include "noise/spectrum.h"
 #include "search/scan-private.h"
 
-enum { LEARN, SEARCH, WEIGH, TOGETHER, TRACE, N_STAGES };
+enum { LEARN, SEARCH, CHANCE, WEIGH, TOGETHER, TRACE, N_STAGES };
 
 #define WHITTLE_BINS 6
 #define START_STEPS 40
@@ -44,9 +44,10 @@ ant_scan_new (const AntSeries *series, const AntScanOptions *options, AntStatus 
       scan->chunk = calloc (room, sizeof *scan->chunk);
       scan->harvest = calloc (room, sizeof *scan->harvest);
       scan->trace = calloc (room, sizeof *scan->trace);
+      scan->surrogate = calloc (options->surrogates + 1, sizeof *scan->surrogate);
       scan->residual = malloc (series->n * sizeof *scan->residual);
       scan->spike = calloc (series->n, 1);
-      *status = scan->chunk && scan->harvest && scan->trace && scan->residual && scan->spike ? ANT_OK : ANT_NO_MEMORY;
+      *status = scan->chunk && scan->harvest && scan->trace && scan->surrogate && scan->residual && scan->spike ? ANT_OK : ANT_NO_MEMORY;
       if (!*status)
         scan->n_chunks = ant_chunks_plan (series, &options->chunk, room, scan->chunk);
     }
@@ -85,6 +86,8 @@ ant_scan_free (AntScan *scan)
       free (scan->trace[i].slow_ppm);
       free (scan->trace[i].passage);
     }
+  for (size_t i = 0; scan->surrogate && i < scan->options.surrogates; i++)
+    free (scan->surrogate[i].snr);
   ant_template_bank_free (scan->bank);
   free (scan->chunk);
   free (scan->harvest);
@@ -94,6 +97,7 @@ ant_scan_free (AntScan *scan)
   free (scan->dip);
   free (scan->brightening);
   free (scan->trace);
+  free (scan->surrogate);
   free (scan->slow_ppm);
   free (scan->passage);
   free (scan);
@@ -188,27 +192,35 @@ choose_candidates (AntScan *scan, AntChunkHarvest *harvest, double observed_d)
     }
 }
 
-/* Merge the chunks: spikes and masks of each chunk's own stretch, strong events out of the residual, candidates listed. */
-static AntStatus
+/* Merge the chunks: spikes and masks of each chunk's own stretch, and the chance field. */
+static void
 merge_chunks (AntScan *scan)
 {
   AntChanceField field = { 0 };
-  size_t room = 0;
   for (size_t i = 0; i < scan->n_chunks; i++)
     {
       AntChunk *chunk = &scan->chunk[i];
       AntChunkHarvest *harvest = &scan->harvest[i];
       ant_chance_field_add (&field, &harvest->chance);
-      room += harvest->n_events;
       for (size_t p = 0; p < chunk->n; p++)
         if ((double) (chunk->first + p) >= chunk->own_from && (double) (chunk->first + p) < chunk->own_to)
           scan->spike[chunk->first + p] = harvest->spike[p];
     }
   ant_chance_law_init (&scan->chance, &field);
-  scan->threshold_snr = scan->options.threshold_snr > 0
-                          ? scan->options.threshold_snr
-                          : ant_chance_law_threshold (&scan->chance,
-                                                      scan->options.false_alarms_per_year * field.observed_d / 365.25);
+}
+
+/* The threshold, strong events out of the residual, candidates listed. */
+static AntStatus
+choose_events (AntScan *scan)
+{
+  size_t room = 0;
+  for (size_t i = 0; i < scan->n_chunks; i++)
+    room += scan->harvest[i].n_events;
+  scan->threshold_snr = scan->options.threshold_snr;
+  if (!(scan->threshold_snr > 0))
+    scan->threshold_snr
+      = ant_chance_law_threshold (&scan->chance,
+                                  scan->options.false_alarms_per_year * scan->chance.field.observed_d / 365.25);
   scan->event = malloc ((room + 1) * sizeof *scan->event);
   if (!scan->event)
     return ANT_NO_MEMORY;
@@ -223,6 +235,13 @@ merge_chunks (AntScan *scan)
       }
   forget_harvest (scan);
   return ANT_OK;
+}
+
+static AntStatus
+settle_chance (AntScan *scan)
+{
+  AntStatus status = scan->options.surrogates ? ant_scan_learn_chance (scan) : ANT_OK;
+  return status ? status : choose_events (scan);
 }
 
 static int
@@ -281,7 +300,7 @@ list_dips (AntScan *scan)
 static const char *
 stage_title (void *work, size_t stage)
 {
-  static const char *const title[N_STAGES] = { "learning the noise", "searching for dips", "weighing candidates",
+  static const char *const title[N_STAGES] = { "learning the noise", "searching for dips", "searching surrogates", "weighing candidates",
                                                "fitting dips together", "tracing passages" };
   return title[stage];
 }
@@ -290,7 +309,7 @@ static size_t
 stage_count (void *work, size_t stage)
 {
   AntScan *scan = work;
-  size_t count[N_STAGES] = { 1, scan->n_chunks, scan->n_events, scan->n_chunks, scan->n_chunks };
+  size_t count[N_STAGES] = { 1, scan->n_chunks, scan->options.surrogates, scan->n_events, scan->n_chunks, scan->n_chunks };
   return count[stage];
 }
 
@@ -302,6 +321,7 @@ run_slice (void *work, size_t stage, size_t slice)
     {
     case LEARN: return ant_scan_learn_noise (scan);
     case SEARCH: return ant_scan_search_chunk (scan, slice);
+    case CHANCE: return ant_scan_try_surrogate (scan, slice);
     case WEIGH: return scan->event[slice].strong ? ANT_OK : ant_scan_weigh (scan, slice);
     case TOGETHER: return ant_scan_fit_together (scan, slice);
     default: return ant_scan_trace_slow (scan, slice);
@@ -313,12 +333,28 @@ finish (void *work, size_t stage)
 {
   switch (stage)
     {
-    case SEARCH: return merge_chunks (work);
+    case SEARCH: merge_chunks (work); return ANT_OK;
+    case CHANCE: return settle_chance (work);
     case WEIGH: drop_side_lobes (work); return ANT_OK;
     case TOGETHER: drop_side_lobes (work); return list_dips (work);
     case TRACE: return ant_scan_join_traces (work);
     default: return ANT_OK;
     }
+}
+
+AntStatus
+ant_scan_find_alone (AntScan *scan)
+{
+  AntStatus status = ANT_OK;
+  for (size_t stage = LEARN; stage <= TOGETHER && !status; stage++)
+    {
+      size_t count = stage_count (scan, stage);
+      for (size_t i = 0; i < count && !status; i++)
+        status = run_slice (scan, stage, i);
+      if (!status)
+        status = finish (scan, stage);
+    }
+  return status;
 }
 
 const AntStages *
@@ -355,6 +391,13 @@ double
 ant_scan_expected_false (const AntScan *scan, double snr)
 {
   return ant_chance_law_expected (&scan->chance, snr);
+}
+
+size_t
+ant_scan_surrogates (const AntScan *scan, size_t *n_events)
+{
+  *n_events = scan->n_surrogate_events;
+  return scan->options.surrogates;
 }
 
 AntChanceField ant_scan_chance_field (const AntScan *scan) { return scan->chance.field; }

@@ -26,6 +26,8 @@ typedef struct
   double threshold_snr;         /* 0: from false_alarms_per_year */
   double false_alarms_per_year; /* of observed time */
   double least_coverage;
+  size_t surrogates;            /* noise-only records to send through the search, to refit the chance law; 0: none */
+  uint64_t seed;                /* of the surrogates */
   size_t n_lines;
   AntNoiseLine line[ANT_MAX_LINES];
 } AntScanOptions;
@@ -47,6 +49,8 @@ double ant_scan_threshold (const AntScan *scan);
 double ant_scan_expected_false (const AntScan *scan, double snr);
 /* What the chance law is computed from. */
 AntChanceField ant_scan_chance_field (const AntScan *scan);
+/* Surrogates that the chance law was refitted to, and the events of both signs in them (SNR 4 and more). */
+size_t ant_scan_surrogates (const AntScan *scan, size_t *n_events);
 /* Candidates that were masked and refitted. */
 size_t ant_scan_refits (const AntScan *scan);
 /* [series->n] ANT_SPIKE_FOUND where an isolated outlier was left out of the fits. */

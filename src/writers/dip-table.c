@@ -26,6 +26,9 @@ append_search (GString *table, const AntDipList *list)
       isfinite (list->threshold_snr) ? g_ascii_formatd (snr, sizeof snr, "%.3f", list->threshold_snr) : "unknown",
       isfinite (list->false_alarms) ? g_ascii_formatd (false_alarms, sizeof false_alarms, "%.3g", list->false_alarms)
                                     : "unknown");
+  if (list->n_surrogates)
+    ant_csv_comment (table, "threshold and expected_false: from %zu surrogates of this record, with %zu events of SNR 4 and more",
+                     list->n_surrogates, list->n_surrogate_events);
   if (list->mirror_known)
     ant_csv_comment (
         table, "mirrored search, durations of 9 h and less: %zu dips and %zu brightenings at or above the threshold",
