@@ -47,10 +47,7 @@ AntStatus ant_whitener_solve (const AntWhitener *whitener, const float *value, d
 AntStatus ant_whitener_solve_about_level (const AntWhitener *whitener, const float *value, double *z, double *level_ppm);
 
 /* Shapes are limited in time: s[j] at places first+j, j < n_shape, else 0. Parts outside the grid are ignored. */
-/* s' C^-1 s, exact, in (n_shape + a checkpoint interval) J operations. */
-double ant_whitener_energy (const AntWhitener *whitener, ptrdiff_t first, size_t n_shape, const double *shape);
-
-/* The same for ANT_LANES shapes that begin at one place, stored interleaved shape[j*ANT_LANES + lane], j < n_shape;
+/* s' C^-1 s, exact, for ANT_LANES shapes that begin at one place, stored interleaved shape[j*ANT_LANES + lane], j < n_shape;
  * a lane that is shorter is padded with zeros (length[lane] <= n_shape says where it ends).
  * energy [ANT_LANES] out: s'C^-1 s. moment [ANT_LANES] out: s'z with z from ant_whitener_solve.
  * weight [ANT_LANES] out: the sum of s over observed places, for the coverage. */
