@@ -34,7 +34,7 @@ truth_beside (const char *out)
   return g_strdup_printf ("%.*s-truth.csv", (int) stem, out);
 }
 
-/* Both files or none: the truth is drafted before the record comes to its place. */
+/* Both files or none: both are on the disk before the first gets its name. */
 static gboolean
 write_files (const Choices *choices, const AntRecipe *recipe, const AntSimulated *simulated, GError **error)
 {
@@ -46,7 +46,8 @@ write_files (const Choices *choices, const AntRecipe *recipe, const AntSimulated
     return FALSE;
   ant_simulation_write_record (recipe, simulated, ant_whole_file_stream (record));
   ant_simulation_write_truth (recipe, simulated, ant_whole_file_stream (truth));
-  return ant_whole_file_commit (g_steal_pointer (&record), error)
+  return ant_whole_file_finish (record, error) && ant_whole_file_finish (truth, error)
+         && ant_whole_file_commit (g_steal_pointer (&record), error)
          && ant_whole_file_commit (g_steal_pointer (&truth), error);
 }
 

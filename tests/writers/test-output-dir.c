@@ -211,22 +211,6 @@ test_late_failure (void)
   remove_folder (folder);
 }
 
-static void
-test_single_file (void)
-{
-  char *folder = new_folder ();
-  g_autoptr (GError) error = NULL;
-  g_autofree char *path = g_build_filename (folder, "truth.csv", NULL);
-  g_assert_true (ant_output_file_write (path, "one\n", 4, FALSE, NULL));
-  g_assert_false (ant_output_file_write (path, "two\n", 4, FALSE, &error));
-  g_assert_error (error, ANT_ERROR, ANT_ERROR_WRITE);
-  assert_contents (folder, "truth.csv", "one\n");
-  g_assert_true (ant_output_file_write (path, "two\n", 4, TRUE, NULL));
-  assert_contents (folder, "truth.csv", "two\n");
-  g_assert_cmpuint (count_entries (folder), ==, 1);
-  remove_folder (folder);
-}
-
 int
 main (int argc, char **argv)
 {
@@ -239,6 +223,5 @@ main (int argc, char **argv)
   g_test_add_func ("/writers/output-dir/a-folder-in-the-way-is-named", test_a_folder_in_the_way);
   g_test_add_func ("/writers/output-dir/a-vanished-folder-is-named", test_vanished);
   g_test_add_func ("/writers/output-dir/a-late-failure-takes-the-others-back", test_late_failure);
-  g_test_add_func ("/writers/output-dir/one-file-by-the-same-rules", test_single_file);
   return g_test_run ();
 }

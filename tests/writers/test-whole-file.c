@@ -2,6 +2,7 @@
 #include <glib.h>
 #include <glib/gstdio.h>
 #include <string.h>
+#include <sys/stat.h>
 
 #include "data/error.h"
 #include "writers/whole-file.h"
@@ -66,6 +67,20 @@ before_the_commit_nothing_changes (Place *place, gconstpointer unused)
 }
 
 static void
+a_finished_file_waits_for_its_commit (Place *place, gconstpointer unused)
+{
+  g_autoptr (GError) error = NULL;
+  write_text (place, "one\n", FALSE);
+  AntWholeFile *file = ant_whole_file_open (place->path, TRUE, NULL);
+  fputs ("two\n", ant_whole_file_stream (file));
+  g_assert_true (ant_whole_file_finish (file, &error));
+  g_assert_no_error (error);
+  assert_holds (place, "one\n");
+  g_assert_true (ant_whole_file_commit (file, &error));
+  assert_holds (place, "two\n");
+}
+
+static void
 what_is_there_is_replaced_only_when_asked (Place *place, gconstpointer unused)
 {
   g_autoptr (GError) error = NULL;
@@ -92,6 +107,17 @@ impossible_places_are_told (Place *place, gconstpointer unused)
     }
 }
 
+/* A pipe stands for /dev/null, which a rename would replace for the whole machine. */
+static void
+a_device_is_not_replaced (Place *place, gconstpointer unused)
+{
+  g_autoptr (GError) error = NULL;
+  g_assert_cmpint (mkfifo (place->path, 0600), ==, 0);
+  g_assert_null (ant_whole_file_open (place->path, TRUE, &error));
+  g_assert_error (error, ANT_ERROR, ANT_ERROR_WRITE);
+  g_assert_nonnull (strstr (error->message, "expected an ordinary file"));
+}
+
 static void
 a_stream_in_error_is_not_committed (Place *place, gconstpointer unused)
 {
@@ -115,8 +141,10 @@ main (int argc, char **argv)
   g_test_init (&argc, &argv, NULL);
   ADD ("/writers/whole-file/a-committed-file-is-in-its-place", a_committed_file_is_in_its_place);
   ADD ("/writers/whole-file/before-the-commit-nothing-changes", before_the_commit_nothing_changes);
+  ADD ("/writers/whole-file/a-finished-file-waits-for-its-commit", a_finished_file_waits_for_its_commit);
   ADD ("/writers/whole-file/what-is-there-is-replaced-only-when-asked", what_is_there_is_replaced_only_when_asked);
   ADD ("/writers/whole-file/impossible-places-are-told", impossible_places_are_told);
+  ADD ("/writers/whole-file/a-device-is-not-replaced", a_device_is_not_replaced);
   ADD ("/writers/whole-file/a-stream-in-error-is-not-committed", a_stream_in_error_is_not_committed);
   return g_test_run ();
 }
