@@ -16,7 +16,6 @@ static const struct
   { "dark", N_("Dark or covered: far from the running 5-day median, as in an eclipse or at night.") },
   { "spike", N_("An isolated outlier: left out of the noise fit, still searched.") },
   { "no-time", N_("Its time cannot be read.") },
-  { "off-grid", N_("Shares its place on the grid with another row and could not be averaged with it.") },
 };
 
 const char *

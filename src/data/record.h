@@ -20,9 +20,8 @@ typedef enum
   ANT_FLAG_DARK = 1 << 5,      /* dark or covered: far from the running median (eclipse, night, shutter) */
   ANT_FLAG_SPIKE = 1 << 6,     /* isolated outlier: out of the noise fit, still searched */
   ANT_FLAG_NO_TIME = 1 << 7,   /* its time cannot be read */
-  ANT_FLAG_OFF_GRID = 1 << 8,  /* shares its grid place with another row and could not be averaged with it */
 } AntFlag;
-#define ANT_N_FLAGS 9
+#define ANT_N_FLAGS 8
 const char *ant_flag_name (unsigned bit_index);        /* "fill", "quality" ... */
 const char *ant_flag_description (unsigned bit_index); /* one translated sentence */
 

@@ -19,7 +19,7 @@ test_flag_names_match_bits (void)
 {
   static const struct { AntFlag flag; const char *name; } cases[] = {
     { ANT_FLAG_FILL, "fill" }, { ANT_FLAG_DUPLICATE, "duplicate" }, { ANT_FLAG_EXCLUDED, "excluded" },
-    { ANT_FLAG_DARK, "dark" }, { ANT_FLAG_NO_TIME, "no-time" }, { ANT_FLAG_OFF_GRID, "off-grid" },
+    { ANT_FLAG_DARK, "dark" }, { ANT_FLAG_NO_TIME, "no-time" },
   };
   for (gsize i = 0; i < G_N_ELEMENTS (cases); i++)
     g_assert_cmpstr (ant_flag_name ((unsigned) g_bit_nth_lsf (cases[i].flag, -1)), ==, cases[i].name);
