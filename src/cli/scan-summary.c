@@ -60,22 +60,23 @@ print_floor (const AntScanResults *results)
     for (gsize p = 0; p < results->n_floor; p++)
       if (fabs (results->floor[p].duration_d * ANT_HOURS_PER_DAY - hours[h]) < 0.01)
         g_print (_(" %.1f ppm at %g h;"), results->floor[p].sigma_ppm, hours[h]);
-  g_print (_(" times %.2f to be listed.\n"), results->threshold_snr);
+  g_print (_(" a dip is listed from %.2f times that depth.\n"), results->threshold_snr);
 }
 
 void
 ant_scan_summary_print (const AntScanResults *results)
 {
   const AntRecord *record = results->record;
-  g_print (_("%s: %.1f d observed, cadence %.6g s, %" G_GSIZE_FORMAT " noise models\n"), record->path, results->observed_d,
-           record->cadence_d * ANT_SECONDS_PER_DAY, results->n_chunks);
+  g_print (g_dngettext (NULL, "%s: %.1f d observed, cadence %.6g s, %" G_GSIZE_FORMAT " noise model.\n",
+                        "%s: %.1f d observed, cadence %.6g s, %" G_GSIZE_FORMAT " noise models.\n", results->n_chunks),
+           record->path, results->observed_d, record->cadence_d * ANT_SECONDS_PER_DAY, results->n_chunks);
   print_floor (results);
-  g_print (g_dngettext (NULL, "%" G_GSIZE_FORMAT " dip at or above SNR %.2f; noise alone would show %.2g.\n",
-                        "%" G_GSIZE_FORMAT " dips at or above SNR %.2f; noise alone would show %.2g.\n", results->n_dips),
+  g_print (g_dngettext (NULL, "%" G_GSIZE_FORMAT " dip at or above SNR %.2f; noise alone is expected to show %.2g.\n",
+                        "%" G_GSIZE_FORMAT " dips at or above SNR %.2f; noise alone is expected to show %.2g.\n", results->n_dips),
            results->n_dips, results->threshold_snr, results->expected_at_threshold);
   print_dips (record, results->n_dips, results->dip);
-  g_print (_("Mirror (9 h and less): %" G_GSIZE_FORMAT " dips, %" G_GSIZE_FORMAT " brightenings; brightenings of any length: %" G_GSIZE_FORMAT ".\n"),
-           results->n_mirror_dips, results->n_mirrored, results->n_brightenings);
+  g_print (_("The same search for brightenings lists %" G_GSIZE_FORMAT " (of 9 h or less: %" G_GSIZE_FORMAT ", beside %" G_GSIZE_FORMAT " of the dips).\n"),
+           results->n_brightenings, results->n_mirrored, results->n_mirror_dips);
   print_dips (record, results->n_brightenings, results->brightening);
   print_passages (results);
   for (guint i = 0; i < MIN (results->said->len, MOST_SENTENCES); i++)
