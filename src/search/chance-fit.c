@@ -26,7 +26,7 @@ ant_chance_law_fit (AntChanceLaw *law, size_t n, const double *snr, size_t n_rec
       AntChanceLaw trial = *law;
       trial.softness += SOFTNESS_STEP * step;
       double away = SOFTNESS_STEP * step / PRIOR_SOFTNESS, log_posterior = -0.5 * away * away;
-      if (trial.softness < -0.5)
+      if (trial.softness < -0.5 || trial.softness > 0.8)
         continue;
       for (size_t i = 0; i < n; i++)
         log_posterior += log_density (&trial, snr[i], lowest);

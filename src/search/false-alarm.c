@@ -10,9 +10,10 @@
 #define LEAST_COVERAGE 0.3
 
 /* The calibration: see docs/search.md. */
-#define YIELD 1.0
-#define SOFTNESS 0.0
-#define SOFTNESS_POWER 0.5
+#define YIELD 0.07
+#define PIVOT_SNR 4.33
+#define SOFTNESS_OF_A_DAY 0.66 /* softness = this / sqrt(days) */
+#define MOST_SOFTNESS 0.5
 
 /* A shape, the same moved a little, the same a template longer, and their sums with the shape, on one window of lanes. */
 enum { SHAPE, MOVED, LONGER, WITH_MOVED, WITH_LONGER };
@@ -118,18 +119,18 @@ ant_chance_field_add (AntChanceField *sum, const AntChanceField *field)
 }
 
 void
-ant_chance_law_init (AntChanceLaw *law, const AntChanceField *field)
+ant_chance_law_init (AntChanceLaw *law, const AntChanceField *field, double fitted_d)
 {
   law->field = *field;
   law->yield = YIELD;
-  law->softness = SOFTNESS * pow (fmax (field->observed_d, 1) / 30, -SOFTNESS_POWER);
+  law->softness = fmin (SOFTNESS_OF_A_DAY / sqrt (fmax (fitted_d, 1)), MOST_SOFTNESS);
 }
 
 double
 ant_chance_law_expected (const AntChanceLaw *law, double snr)
 {
-  double t2 = snr * snr / (1 + law->softness);
-  return law->yield * law->field.crossings * t2 * exp (-0.5 * t2);
+  double beyond = fmax (snr * snr - PIVOT_SNR * PIVOT_SNR, 0);
+  return law->yield * law->field.crossings * snr * snr * exp (-0.5 * (snr * snr - law->softness * beyond));
 }
 
 double

@@ -5,8 +5,9 @@
  * record's own mask and summed over the templates. Neighbouring templates share their peaks, the fit of the shape then
  * climbs two more dimensions (a factor T each: Adler & Taylor 2007, Random Fields and Geometry, ch. 12), and mask and
  * refit lifts noise peaks, the more the shorter the record:
- *   N(T) = yield * crossings * t^2 exp(-t^2/2),  t^2 = T^2 / (1 + softness).
- * yield and softness are calibrated on surrogates sent through the whole pipeline (docs/search.md has the study).
+ *   N(T) = yield * crossings * T^2 exp(-(T^2 - softness * (T^2 - T0^2)) / 2),  the softness only beyond T0 = 4.33.
+ * yield, T0 and the softness of records of different length are calibrated on surrogates sent through the whole pipeline
+ * (docs/search.md has the study).
  */
 #pragma once
 
@@ -32,8 +33,8 @@ typedef struct
 AntStatus ant_chance_field_measure (AntChanceField *field, const AntWhitener *whitener, const AntTemplateBank *bank,
                                     const AntRefineOptions *options, double from, double to);
 void ant_chance_field_add (AntChanceField *sum, const AntChanceField *field);
-/* The calibrated law for a field. */
-void ant_chance_law_init (AntChanceLaw *law, const AntChanceField *field);
+/* The calibrated law for a field. fitted_d: days of record that one noise fit sees (a chunk's length). */
+void ant_chance_law_init (AntChanceLaw *law, const AntChanceField *field, double fitted_d);
 /* Refit yield and softness to surrogates of the record: snr [n] final SNRs (signs dropped) of all events of both signs
  * at or above `lowest` in n_records noise-only records. Greatest posterior of the tail above `lowest`, the law as it stands
  * being the prior: few events leave the softness where it is and move the yield only. */

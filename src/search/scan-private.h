@@ -6,7 +6,7 @@
 
 #define ANT_STRONG_SNR 8.0   /* masked and subtracted before weaker ones are looked for */
 #define ANT_KEEP_SNR 3.5     /* weakest first-pass peak that is ever weighed */
-#define ANT_SURROGATE_SNR 4.0 /* weakest event of a surrogate that the chance law is fitted to */
+#define ANT_SURROGATE_SNR 4.5  /* lowest final SNR of the surrogates that the law is fitted to: below it the search keeps only a part */
 #define ANT_PER_CHUNK 400    /* most events of one sign kept for a chunk */
 
 /* One dip or brightening on its way; places are those of the record. */

@@ -197,16 +197,18 @@ static void
 merge_chunks (AntScan *scan)
 {
   AntChanceField field = { 0 };
+  double fitted_d = 0;
   for (size_t i = 0; i < scan->n_chunks; i++)
     {
       AntChunk *chunk = &scan->chunk[i];
       AntChunkHarvest *harvest = &scan->harvest[i];
       ant_chance_field_add (&field, &harvest->chance);
+      fitted_d = fmax (fitted_d, (double) chunk->n * scan->series.step_d);
       for (size_t p = 0; p < chunk->n; p++)
         if ((double) (chunk->first + p) >= chunk->own_from && (double) (chunk->first + p) < chunk->own_to)
           scan->spike[chunk->first + p] = harvest->spike[p];
     }
-  ant_chance_law_init (&scan->chance, &field);
+  ant_chance_law_init (&scan->chance, &field, fitted_d);
 }
 
 /* The threshold, strong events out of the residual, candidates listed. */

@@ -22,7 +22,7 @@ fewer_are_expected_at_every_higher_snr (void)
   for (size_t k = 0; k < G_N_ELEMENTS (fields); k++)
     {
       AntChanceLaw law;
-      ant_chance_law_init (&law, &fields[k]);
+      ant_chance_law_init (&law, &fields[k], 30);
       double before = HUGE_VAL;
       for (double snr = 2.5; snr < 12; snr += 0.05)
         {
@@ -41,7 +41,7 @@ the_threshold_is_where_so_many_are_expected (void)
     for (double number = 1e-4; number < 20; number *= 3)
       {
         AntChanceLaw law;
-        ant_chance_law_init (&law, &fields[k]);
+        ant_chance_law_init (&law, &fields[k], 30);
         double snr = ant_chance_law_threshold (&law, number);
         if (snr > 3 + 1e-9)
           g_assert_cmpfloat_with_epsilon (ant_chance_law_expected (&law, snr) / number, 1, 1e-6);
@@ -54,7 +54,7 @@ static void
 thresholds_stay_within_3_and_40 (void)
 {
   AntChanceLaw law;
-  ant_chance_law_init (&law, &fields[0]);
+  ant_chance_law_init (&law, &fields[0], 30);
   g_assert_cmpfloat_with_epsilon (ant_chance_law_threshold (&law, 1e9), 3, 1e-9);
   g_assert_cmpfloat (ant_chance_law_threshold (&law, 0), <=, 40);
   g_assert_cmpfloat (ant_chance_law_threshold (&law, 0), >, 35);
@@ -68,7 +68,7 @@ twice_the_record_expects_twice_the_dips (void)
   ant_chance_field_add (&two, &one);
   ant_chance_field_add (&two, &one);
   g_assert_cmpfloat (two.observed_d, ==, 2 * one.observed_d);
-  ant_chance_law_init (&law, &one);
+  ant_chance_law_init (&law, &one, 30);
   of_two = law;
   of_two.field = two;
   g_assert_cmpfloat_with_epsilon (ant_chance_law_expected (&of_two, 5) / ant_chance_law_expected (&law, 5), 2, 1e-12);

@@ -5,7 +5,7 @@
 #include "models.h"
 #include "search/scan-private.h"
 
-#define LOWEST 4.0
+#define LOWEST 4.5
 
 static AntChanceLaw
 law_of (double crossings, double yield, double softness)
@@ -24,7 +24,7 @@ draw_snr (const AntChanceLaw *law, AntRandom *random)
 static void
 test_fit_finds_a_known_law (void)
 {
-  enum { records = 40 };
+  enum { records = 120 };
   AntChanceLaw truth = law_of (3e4, 0.12, 0.18), law = law_of (3e4, 0.2, 0.05);
   size_t n = (size_t) (2 * records * ant_chance_law_expected (&truth, LOWEST));
   g_autofree double *snr = g_new (double, n);
@@ -35,7 +35,7 @@ test_fit_finds_a_known_law (void)
   ant_chance_law_fit (&law, n, snr, records, LOWEST);
   g_test_message ("%zu events: yield %.4f softness %.4f", n, law.yield, law.softness);
   g_assert_cmpuint (n, >, 500);
-  /* The tail's mean excess is about (1 + softness)/4 with a relative error of 1/sqrt(n). */
+  /* Mean of SNR^2/2 beyond the lowest is about 1/(1 - softness), with a relative error of 1/sqrt(n). */
   g_assert_cmpfloat (fabs (law.softness - truth.softness), <, 3.5 * 1.2 / sqrt ((double) n));
   double ratio = ant_chance_law_expected (&law, LOWEST) / ant_chance_law_expected (&truth, LOWEST);
   g_assert_cmpfloat (fabs (ratio - 1), <, 0.02);
@@ -45,10 +45,10 @@ test_fit_finds_a_known_law (void)
 static void
 test_few_events_move_the_yield_only (void)
 {
-  const double snr[] = { 4.05, 4.1, 4.4 };
+  const double snr[] = { 4.55, 4.6, 4.9 };
   AntChanceLaw before = law_of (4e3, 0.1, 0.1), law = before;
-  double expected = 2 * 10 * ant_chance_law_expected (&before, LOWEST);
-  ant_chance_law_fit (&law, G_N_ELEMENTS (snr), snr, 10, LOWEST);
+  double expected = 2 * 40 * ant_chance_law_expected (&before, LOWEST);
+  ant_chance_law_fit (&law, G_N_ELEMENTS (snr), snr, 40, LOWEST);
   g_test_message ("expected %.1f: yield %.4f softness %.4f", expected, law.yield, law.softness);
   g_assert_cmpfloat (expected, >, 6);
   g_assert_cmpfloat (fabs (law.softness - before.softness), <, 0.05);
