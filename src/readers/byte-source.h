@@ -20,5 +20,5 @@ const guint8 *ant_byte_source_peek (AntByteSource *source, gsize *found, GError 
 /* The name for people: the path, or "standard input". */
 const char *ant_byte_source_name (const AntByteSource *source);
 gboolean ant_byte_source_is_packed (const AntByteSource *source);
-/* Hexadecimal SHA-256 of all stored bytes; read to the end first. Caller frees. */
+/* Hexadecimal SHA-256 of all stored bytes; read to the end first, and ask once. Caller frees. */
 char *ant_byte_source_sha256 (AntByteSource *source);
