@@ -10,6 +10,7 @@ typedef struct
   AntEight memory[ANT_MAX_TERMS];
   AntEight innovation; /* of the last sample, not yet in memory */
   AntEight energy, moment, weight;
+  AntEight level; /* s' C^-1 1 */
 } Lanes;
 
 /* Bring the memory from sample i-1 to sample i and add up what it predicts there. One pass over the memory, and four sums
@@ -69,6 +70,8 @@ lanes_run (const AntWhitener *whitener, size_t width, const double *z, ptrdiff_t
       lanes_learn (whitener, i, &s, &predicted, lanes);
       lanes->moment += s * (z ? z[whitener->place[i]] : 0);
       lanes->weight += s;
+      if (whitener->level)
+        lanes->level += s * whitener->level[whitener->place[i]];
     }
   if (i == start)
     return; /* nothing of the window is observed */
@@ -98,6 +101,8 @@ ant_whitener_energies (const AntWhitener *whitener, const double *z, ptrdiff_t f
     case 16: lanes_run (whitener, 16, z, first, n_shape, shape, &lanes); break;
     default: lanes_run (whitener, whitener->terms.terms, z, first, n_shape, shape, &lanes); break;
     }
+  if (whitener->level)
+    lanes.energy -= lanes.level * lanes.level * (1.0 / whitener->level_energy);
   memcpy (energy, &lanes.energy, sizeof lanes.energy);
   memcpy (moment, &lanes.moment, sizeof lanes.moment);
   memcpy (weight, &lanes.weight, sizeof lanes.weight);

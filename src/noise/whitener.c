@@ -26,6 +26,7 @@ ant_whitener_free (AntWhitener *whitener)
   free (whitener->u);
   free (whitener->w);
   free (whitener->tail);
+  free (whitener->level);
   free (whitener);
 }
 
@@ -207,37 +208,43 @@ substitute_back (const AntWhitener *whitener, const double *innovation, double *
 AntStatus
 ant_whitener_solve (const AntWhitener *whitener, const float *value, double *z)
 {
-  double *innovation = malloc (whitener->observed * sizeof *innovation);
+  double *innovation = malloc (whitener->observed * sizeof *innovation), moment = 0;
   if (!innovation)
     return ANT_NO_MEMORY;
   memset (z, 0, whitener->n * sizeof *z);
   ant_whitener_innovations (whitener, value, innovation);
   substitute_back (whitener, innovation, z);
   free (innovation);
+  if (!whitener->level)
+    return ANT_OK;
+  for (size_t i = 0; i < whitener->n; i++)
+    moment += z[i];
+  for (size_t i = 0; i < whitener->n; i++)
+    z[i] -= moment / whitener->level_energy * whitener->level[i];
   return ANT_OK;
 }
 
-AntStatus
-ant_whitener_solve_about_level (const AntWhitener *whitener, const float *value, double *z, double *level_ppm)
+AntWhitener *
+ant_whitener_new_free_level (const AntNoiseModel *model, const AntSeries *series, AntStatus *status)
 {
+  AntWhitener *whitener = ant_whitener_new (model, series, status);
+  if (!whitener)
+    return NULL;
   float *ones = malloc (whitener->n * sizeof *ones);
-  double *z_one = malloc (whitener->n * sizeof *z_one), moment = 0, energy = 0;
-  AntStatus status = ones && z_one ? ant_whitener_solve (whitener, value, z) : ANT_NO_MEMORY;
-  for (size_t i = 0; i < whitener->n && !status; i++)
+  double *level = malloc (whitener->n * sizeof *level);
+  *status = ones && level ? ANT_OK : ANT_NO_MEMORY;
+  for (size_t i = 0; i < whitener->n && !*status; i++)
     ones[i] = 1;
-  if (!status)
-    status = ant_whitener_solve (whitener, ones, z_one);
-  for (size_t i = 0; i < whitener->n && !status; i++)
-    {
-      moment += z[i];
-      energy += z_one[i];
-    }
-  double level = energy > 0 ? moment / energy : 0;
-  for (size_t i = 0; i < whitener->n && !status; i++)
-    z[i] -= level * z_one[i];
-  if (level_ppm)
-    *level_ppm = level;
+  if (!*status)
+    *status = ant_whitener_solve (whitener, ones, level);
+  for (size_t i = 0; i < whitener->n && !*status; i++)
+    whitener->level_energy += level[i];
+  whitener->level = level; /* only now: until here solutions were those of C^-1 itself */
   free (ones);
-  free (z_one);
-  return status;
+  if (*status)
+    {
+      ant_whitener_free (whitener);
+      return NULL;
+    }
+  return whitener;
 }

@@ -28,6 +28,11 @@ AntStatus ant_noise_log_likelihood (const AntNoiseModel *model, const AntSeries 
 #define ANT_LANES 8
 AntStatus ant_noise_log_likelihoods (size_t n, const AntNoiseModel *model, const AntSeries *series, double *log_likelihood);
 
+/* As ant_whitener_new, with an unknown constant level: solutions and energies below are then those of C^-1 with the level
+ * projected out, C^-1 - C^-1 1 1'C^-1 / 1'C^-1 1 (generalised least squares, Aitken 1936). What a search uses, since a
+ * record's median is only near its level. */
+AntWhitener *ant_whitener_new_free_level (const AntNoiseModel *model, const AntSeries *series, AntStatus *status);
+
 size_t ant_whitener_n (const AntWhitener *whitener);          /* grid places */
 size_t ant_whitener_observed (const AntWhitener *whitener);   /* observed places */
 const unsigned *ant_whitener_places (const AntWhitener *whitener); /* [observed] their grid places, rising */
@@ -41,10 +46,6 @@ double ant_whitener_log_det (const AntWhitener *whitener);    /* ln det C */
 void ant_whitener_innovations (const AntWhitener *whitener, const float *value, double *innovation);
 /* z = C^-1 v on the grid: z [n], 0 at places not observed. */
 AntStatus ant_whitener_solve (const AntWhitener *whitener, const float *value, double *z);
-
-/* The same with a free constant level taken out: z = C^-1 (v - level), level = 1'C^-1 v / 1'C^-1 1 (generalised least
- * squares, Aitken 1936). What a search uses: a record's median is only near its level. level_ppm may be NULL. */
-AntStatus ant_whitener_solve_about_level (const AntWhitener *whitener, const float *value, double *z, double *level_ppm);
 
 /* Shapes are limited in time: s[j] at places first+j, j < n_shape, else 0. Parts outside the grid are ignored. */
 /* s' C^-1 s, exact, for ANT_LANES shapes that begin at one place, stored interleaved shape[j*ANT_LANES + lane], j < n_shape;

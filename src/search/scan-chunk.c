@@ -64,14 +64,14 @@ whiten (Work *work)
 {
   AntStatus status;
   ant_whitener_free (work->whitener);
-  work->whitener = ant_whitener_new (&work->chunk->model, &work->part, &status);
+  work->whitener = ant_whitener_new_free_level (&work->chunk->model, &work->part, &status);
   return status;
 }
 
 static AntStatus
 draw_map (Work *work)
 {
-  AntStatus status = ant_whitener_solve_about_level (work->whitener, work->value, work->z, NULL);
+  AntStatus status = ant_whitener_solve (work->whitener, work->value, work->z);
   ant_dip_map_free (work->map);
   work->map = status ? NULL
                      : ant_dip_map_new (work->scan->bank, work->whitener, work->z, work->scan->options.least_coverage,
@@ -108,7 +108,7 @@ fit_strong (Work *work)
       {
         AntEvent *event = &work->strong[i];
         subtract_strong (work, i);
-        status = ant_whitener_solve_about_level (work->whitener, work->value, work->z, NULL);
+        status = ant_whitener_solve (work->whitener, work->value, work->z);
         if (!status && ant_refine (work->whitener, work->z, &event->peak, event->sign, &work->scan->refine, &event->fit))
           event->fit = (AntShapeFit){ .centre = event->peak.centre, .duration_d = event->peak.duration_d,
                                       .edge_d = event->peak.edge_d, .impact = ANT_SHAPE_IMPACT };

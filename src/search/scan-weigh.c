@@ -53,8 +53,8 @@ bench_whiten (Bench *bench, const AntChunk *chunk)
 {
   AntStatus status = ant_chunk_refit (chunk, &bench->part, &bench->model);
   if (!status)
-    bench->whitener = ant_whitener_new (&bench->model, &bench->part, &status);
-  return status ? status : ant_whitener_solve_about_level (bench->whitener, bench->value, bench->z, NULL);
+    bench->whitener = ant_whitener_new_free_level (&bench->model, &bench->part, &status);
+  return status ? status : ant_whitener_solve (bench->whitener, bench->value, bench->z);
 }
 
 /* The stretch under which an event is weighed: its chunk, or one centred on it where it lies near the chunk's border. */
@@ -125,7 +125,7 @@ joint_amplitudes (const AntScan *scan, Bench *bench, size_t n, AntEvent **event)
       ant_scan_add_shape (scan, &event[i]->fit, -1, bench->first, places, shape + i * places);
     }
   if (!status)
-    status = ant_whitener_solve_about_level (bench->whitener, bench->value, bench->z, NULL);
+    status = ant_whitener_solve (bench->whitener, bench->value, bench->z);
   for (size_t i = 0; i < n && !status; i++)
     {
       status = ant_whitener_solve (bench->whitener, shape + i * places, zs);
@@ -193,7 +193,7 @@ ant_scan_fit_together (AntScan *scan, size_t index)
         {
           AntEvent *one = event[i % n]; /* put it back, fit it, take it out again */
           ant_scan_add_shape (scan, &one->fit, -one->fit.depth_ppm, bench.first, bench.part.n, bench.value);
-          status = ant_whitener_solve_about_level (bench.whitener, bench.value, bench.z, NULL);
+          status = ant_whitener_solve (bench.whitener, bench.value, bench.z);
           AntPeak peak = { .centre = one->fit.centre - (double) bench.first, .duration_d = one->fit.duration_d,
                            .edge_d = one->fit.edge_d };
           AntShapeFit fit = one->fit;

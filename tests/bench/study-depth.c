@@ -41,7 +41,7 @@ whiten (AntScan *scan, AntSeries *series, size_t dips, const double *centre, dou
     ant_scan_mask (scan, centre[k], t14_d, 0, series->n, scan->spike);
   scan->series.spike = scan->spike;
   *status = ant_scan_learn_noise (scan);
-  return *status ? NULL : ant_whitener_new (&scan->start, series, status);
+  return *status ? NULL : ant_whitener_new_free_level (&scan->start, series, status);
 }
 
 int

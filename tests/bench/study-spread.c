@@ -35,8 +35,8 @@ main (int argc, char **argv)
       AntScan *scan = ant_scan_new (&series, &options, &status);
       if (!scan || ant_scan_learn_noise (scan))
         return 1;
-      AntWhitener *whitener = ant_whitener_new (&scan->start, &series, &status);
-      if (!whitener || ant_whitener_solve_about_level (whitener, value, z, NULL))
+      AntWhitener *whitener = ant_whitener_new_free_level (&scan->start, &series, &status);
+      if (!whitener || ant_whitener_solve (whitener, value, z))
         return 1;
       AntDipMap *map = ant_dip_map_new (scan->bank, whitener, z, options.least_coverage, &status);
       const AntFamily *family = &scan->bank->family[0];

@@ -56,6 +56,27 @@ a_deep_dip_does_not_widen_its_own_error (void)
   g_free (value);
 }
 
+/* A deep crossing three days away is set aside, so that it neither bends the noise nor the depth. */
+static void
+a_deep_dip_elsewhere_does_no_harm (void)
+{
+  float *value = g_new (float, N);
+  AntDip alone, beside;
+  Planted other = crossing;
+  AntSeries series = ant_study_record ('C', ANT_MASK_L1, N, STEP_D, 8300, value);
+  plant (&series, &crossing, value);
+  g_assert_cmpint (ant_scan_asked (&series, &options, crossing.mid_d, 0.25, &alone), ==, ANT_OK);
+  other.mid_d += 3;
+  other.depth_ppm = 5000;
+  plant (&series, &other, value);
+  g_assert_cmpint (ant_scan_asked (&series, &options, crossing.mid_d, 0.25, &beside), ==, ANT_OK);
+  g_test_message ("depth %.1f +- %.1f alone, %.1f +- %.1f beside", alone.depth_ppm, alone.depth_sigma_ppm, beside.depth_ppm,
+                  beside.depth_sigma_ppm);
+  g_assert_cmpfloat_with_epsilon (beside.depth_sigma_ppm / alone.depth_sigma_ppm, 1, 0.1);
+  g_assert_cmpfloat_with_epsilon (beside.depth_ppm, alone.depth_ppm, alone.depth_sigma_ppm);
+  g_free (value);
+}
+
 static void
 what_is_told_is_what_was_asked (void)
 {
@@ -114,6 +135,7 @@ main (int argc, char **argv)
   g_test_init (&argc, &argv, NULL);
 #define TEST(path, function) g_test_add_func ("/search/asked/" path, function)
   TEST ("the-depth-is-unbiased", the_depth_is_unbiased);
+  g_test_add_func ("/search/asked/a-deep-dip-elsewhere-does-no-harm", a_deep_dip_elsewhere_does_no_harm);
   TEST ("a-deep-dip-does-not-widen-its-own-error", a_deep_dip_does_not_widen_its_own_error);
   TEST ("what-is-told-is-what-was-asked", what_is_told_is_what_was_asked);
   TEST ("what-was-not-observed-is-refused", what_was_not_observed_is_refused);
