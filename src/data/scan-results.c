@@ -138,7 +138,9 @@ static void
 say_surrogates (AntScanResults *results)
 {
   if (results->n_surrogates)
-    say (results, _("Expected false dips and the threshold rest on %" G_GSIZE_FORMAT " surrogates of this record, with %" G_GSIZE_FORMAT " events of SNR 4 and more"),
+    say (results,
+         _("Expected false dips and the threshold rest on %" G_GSIZE_FORMAT " surrogates of this record, "
+           "with %" G_GSIZE_FORMAT " events of SNR 4 and more"),
          results->n_surrogates, results->n_surrogate_events);
 }
 

@@ -187,7 +187,7 @@ ant_passages_trace (const AntNoiseModel *model, const AntSeries *part, float *sl
   AntStatus status;
   unsigned char chosen[ANT_MAX_PARTS];
   Curve curve = { 0 };
-  double *z = malloc (2 * part->n * sizeof *z), *slow = z + part->n;
+  double *z = malloc (2 * part->n * sizeof *z), *slow = z + part->n, level_ppm = 0;
   AntWhitener *whitener = z ? ant_whitener_new (model, part, &status) : NULL;
   *n_passages = 0;
   *passage = NULL;
@@ -195,7 +195,7 @@ ant_passages_trace (const AntNoiseModel *model, const AntSeries *part, float *sl
   if (!z)
     status = ANT_NO_MEMORY;
   if (whitener)
-    status = ant_whitener_solve (whitener, part->value_ppm, z);
+    status = ant_whitener_solve_about_level (whitener, part->value_ppm, z, &level_ppm);
   if (!status)
     status = ant_smooth (model, chosen, part->step_d, part->n, z, slow);
   if (!status)
@@ -206,7 +206,7 @@ ant_passages_trace (const AntNoiseModel *model, const AntSeries *part, float *sl
       status = *passage ? read_passages (&curve, whitener, model, chosen, part, n_passages, *passage) : ANT_NO_MEMORY;
     }
   for (size_t p = 0; p < part->n && !status; p++)
-    slow_ppm[p] = (float) slow[p];
+    slow_ppm[p] = (float) (level_ppm + slow[p]);
   ant_whitener_free (whitener);
   free (curve.value);
   free (z);

@@ -1,7 +1,7 @@
 /* passages.h - spot groups rotating past: minima of the slow part of a record that last days.
  *
  * The slow part is what the data say about those parts of the noise model that vary over half a day and more (its
- * conditional mean, noise/smoother.h), dips taken out first. A passage is a minimum of that curve; its shoulders are where
+ * conditional mean about the fitted level, noise/smoother.h), dips taken out first. A passage is a minimum of that curve; its shoulders are where
  * the straight line over it touches the curve on both sides, before ground lower than the minimum and within 14 d, and on
  * both the curve rises by half the depth at least: a ripple on another's flank does not. Depth is measured from that line;
  * start and end are where half of it is reached, 1 to 14 d apart, and the middle is halfway: a fault of the instrument in

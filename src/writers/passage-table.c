@@ -8,7 +8,7 @@
 static void
 append_definitions (GString *table, const AntRecord *record)
 {
-  ant_csv_preamble (table, _("Passages: minima of the slow part of the record, such as spot groups rotating past"), record);
+  ant_csv_preamble (table, _("Passages: minima of the slow part of the record, such as spot groups"), record);
   ant_csv_comment (table, _("no false-alarm claim: the Sun does this"));
   ant_csv_comment (table, _("slow part: what the data say about the noise model's parts slower than half a day, dips taken out"));
   ant_csv_comment (table, _("depth_ppm: below the straight line over the minimum that touches the slow part on both sides; "

@@ -1,4 +1,4 @@
-/* test-surrogates.c - the chance law refitted: to events of a known law, to few, to none, and by a scan to its own surrogates. */
+/* test-surrogates.c - the chance law refitted: to events of a known law, to few, to none, and to a scan's surrogates. */
 #include <math.h>
 #include "core/random.h"
 #include "driving.h"
@@ -81,7 +81,8 @@ test_a_scan_refits_its_law (void)
   g_assert_cmpuint (ant_scan_surrogates (plain, &events), ==, 0);
   g_assert_cmpuint (ant_scan_surrogates (one, &events), ==, 4);
   ant_scan_surrogates (two, &again);
-  g_test_message ("%zu events, threshold %.3f, built-in law %.3f", events, ant_scan_threshold (one), ant_scan_threshold (plain));
+  g_test_message ("%zu events, threshold %.3f, built-in law %.3f", events, ant_scan_threshold (one),
+                  ant_scan_threshold (plain));
   g_assert_cmpuint (events, ==, again);
   g_assert_cmpfloat (ant_scan_threshold (one), ==, ant_scan_threshold (two));
   g_assert_cmpfloat (ant_scan_threshold (one), !=, ant_scan_threshold (plain));
