@@ -248,3 +248,12 @@ ant_whitener_new_free_level (const AntNoiseModel *model, const AntSeries *series
     }
   return whitener;
 }
+
+double
+ant_whitener_level (const AntWhitener *whitener, const float *value)
+{
+  double moment = 0;
+  for (size_t i = 0; i < whitener->observed; i++)
+    moment += whitener->level[whitener->place[i]] * (double) value[whitener->place[i]];
+  return moment / whitener->level_energy;
+}

@@ -33,6 +33,9 @@ AntStatus ant_noise_log_likelihoods (size_t n, const AntNoiseModel *model, const
  * record's median is only near its level. */
 AntWhitener *ant_whitener_new_free_level (const AntNoiseModel *model, const AntSeries *series, AntStatus *status);
 
+/* The level itself, 1'C^-1 v / 1'C^-1 1, of a whitener with a free level. */
+double ant_whitener_level (const AntWhitener *whitener, const float *value);
+
 size_t ant_whitener_n (const AntWhitener *whitener);          /* grid places */
 size_t ant_whitener_observed (const AntWhitener *whitener);   /* observed places */
 const unsigned *ant_whitener_places (const AntWhitener *whitener); /* [observed] their grid places, rising */

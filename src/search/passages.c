@@ -188,14 +188,17 @@ ant_passages_trace (const AntNoiseModel *model, const AntSeries *part, float *sl
   unsigned char chosen[ANT_MAX_PARTS];
   Curve curve = { 0 };
   double *z = malloc (2 * part->n * sizeof *z), *slow = z + part->n, level_ppm = 0;
-  AntWhitener *whitener = z ? ant_whitener_new (model, part, &status) : NULL;
+  AntWhitener *whitener = z ? ant_whitener_new_free_level (model, part, &status) : NULL;
   *n_passages = 0;
   *passage = NULL;
   choose_slow (model, chosen);
   if (!z)
     status = ANT_NO_MEMORY;
   if (whitener)
-    status = ant_whitener_solve_about_level (whitener, part->value_ppm, z, &level_ppm);
+    {
+      status = ant_whitener_solve (whitener, part->value_ppm, z);
+      level_ppm = ant_whitener_level (whitener, part->value_ppm);
+    }
   if (!status)
     status = ant_smooth (model, chosen, part->step_d, part->n, z, slow);
   if (!status)
