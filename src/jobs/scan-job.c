@@ -25,6 +25,18 @@ ant_scan_job_run (AntRecord *record, const AntSettings *settings, GCancellable *
   return results;
 }
 
+/* The asked middle is none of the record's. */
+static void
+tell_outside (const AntRecord *record, double mid_d, GError **error)
+{
+  const AntSeries *series = &record->series;
+  g_autofree char *asked = ant_time_reference_own_text (&record->time, mid_d);
+  g_autofree char *start = ant_time_reference_own_text (&record->time, series->start_d);
+  g_autofree char *end = ant_time_reference_own_text (&record->time, ant_series_time (series, (double) series->n - 1));
+  g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("the asked time is %s, expected one within the record: %s to %s"), asked,
+               start, end);
+}
+
 gboolean
 ant_scan_job_ask (AntRecord *record, const AntSettings *settings, double mid_d, double duration_d, AntDip *dip,
                   double *upper_limit_ppm, GError **error)
@@ -32,6 +44,11 @@ ant_scan_job_ask (AntRecord *record, const AntSettings *settings, double mid_d, 
   AntScanOptions options = ant_scan_results_options (record, settings);
   AntStatus status = ant_scan_asked (&record->series, &options, mid_d, duration_d, dip);
   *upper_limit_ppm = fmax (0, dip->depth_ppm) + ONE_SIDED_95 * dip->depth_sigma_ppm;
+  if (status == ANT_BAD_ARGUMENT && duration_d > 0)
+    {
+      tell_outside (record, mid_d, error);
+      return FALSE;
+    }
   if (status == ANT_NO_DATA)
     {
       g_set_error (error, ANT_ERROR, ANT_ERROR_NUMERIC,
