@@ -14,6 +14,7 @@ typedef struct
 {
   AntPeak peak;      /* of the first pass */
   AntShapeFit fit;
+  AntShapeFit border_fit; /* of the last stage for events near a chunk's border, else the same as fit */
   int sign;          /* +1 dip, -1 brightening */
   int strong;        /* subtracted from scan->residual */
   int dropped;       /* the side lobe of a stronger event, or the same event found twice */
@@ -85,6 +86,8 @@ AntStatus ant_scan_learn_chance (AntScan *scan);
 AntStatus ant_scan_find_alone (AntScan *scan);
 /* One candidate: mask, refit, weigh. */
 AntStatus ant_scan_weigh (AntScan *scan, size_t event);
+/* An event that stands near its chunk's border, fitted again in a stretch centred on it, the others taken out. */
+AntStatus ant_scan_weigh_at_border (AntScan *scan, size_t event);
 /* All accepted events of one chunk fitted together. */
 AntStatus ant_scan_fit_together (AntScan *scan, size_t i);
 /* The slow part of one chunk, its events taken out, and its passages. */

@@ -57,8 +57,9 @@ bench_whiten (Bench *bench, const AntChunk *chunk)
   return status ? status : ant_whitener_solve (bench->whitener, bench->value, bench->z);
 }
 
-/* The stretch under which an event is weighed: its chunk, or one centred on it where it lies near the chunk's border. */
-static void
+/* The stretch under which an event is weighed: its chunk, or one centred on it where it lies near the chunk's border.
+ * Returns whether it does. */
+static int
 stretch_for (const AntScan *scan, const AntEvent *event, size_t *first, size_t *n)
 {
   const AntChunk *chunk = &scan->chunk[event->chunk];
@@ -72,6 +73,7 @@ stretch_for (const AntScan *scan, const AntEvent *event, size_t *first, size_t *
       double from = fmax (centre - 0.5 * (double) chunk->n, 0);
       *first = (size_t) fmin (from, (double) (scan->series.n - chunk->n));
     }
+  return near_start || near_end;
 }
 
 static AntPeak
@@ -155,6 +157,54 @@ joint_amplitudes (const AntScan *scan, Bench *bench, size_t n, AntEvent **event)
   return status;
 }
 
+static int
+stands (const AntScan *scan, const AntEvent *event)
+{
+  return !event->dropped && (event->strong || event->sign * event->fit.snr >= scan->threshold_snr);
+}
+
+/* Mask every event that stands, and take all but one out of the values. */
+static void
+take_out (const AntScan *scan, Bench *bench, const AntEvent *alone)
+{
+  for (size_t i = 0; i < scan->n_events; i++)
+    if (stands (scan, &scan->event[i]))
+      {
+        const AntShapeFit *fit = &scan->event[i].fit;
+        ant_scan_mask (scan, fit->centre, fit->duration_d, bench->first, bench->part.n, bench->spike);
+        if (&scan->event[i] != alone)
+          ant_scan_add_shape (scan, fit, fit->depth_ppm, bench->first, bench->part.n, bench->value);
+      }
+}
+
+AntStatus
+ant_scan_weigh_at_border (AntScan *scan, size_t index)
+{
+  AntEvent *event = &scan->event[index];
+  size_t first, n;
+  event->border_fit = event->fit;
+  if (!stretch_for (scan, event, &first, &n) || !stands (scan, event))
+    return ANT_OK;
+  Bench bench = { 0 };
+  AntStatus status = bench_lay (&bench, scan, first, n);
+  if (!status)
+    {
+      memcpy (bench.value, scan->series.value_ppm + first, bench.part.n * sizeof *bench.value);
+      take_out (scan, &bench, event);
+      status = bench_whiten (&bench, &scan->chunk[event->chunk]);
+    }
+  AntPeak peak = { .centre = event->fit.centre - (double) first, .duration_d = event->fit.duration_d,
+                   .edge_d = event->fit.edge_d };
+  AntShapeFit fit;
+  if (!status && !ant_refine (bench.whitener, bench.z, &peak, event->sign, &scan->refine, &fit))
+    {
+      fit.centre += (double) first;
+      event->border_fit = fit;
+    }
+  bench_clear (&bench);
+  return status;
+}
+
 /* Events of this chunk that stand: strong ones, and candidates at the threshold. */
 static size_t
 standing (AntScan *scan, size_t chunk, AntEvent ***list)
@@ -162,8 +212,7 @@ standing (AntScan *scan, size_t chunk, AntEvent ***list)
   size_t n = 0;
   *list = malloc ((scan->n_events + 1) * sizeof **list);
   for (size_t i = 0; *list && i < scan->n_events; i++)
-    if (scan->event[i].chunk == chunk && !scan->event[i].dropped
-        && (scan->event[i].strong || scan->event[i].sign * scan->event[i].fit.snr >= scan->threshold_snr))
+    if (scan->event[i].chunk == chunk && stands (scan, &scan->event[i]))
       (*list)[n++] = &scan->event[i];
   return n;
 }

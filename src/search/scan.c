@@ -7,7 +7,7 @@
 #include "noise/spectrum.h"
 #include "search/scan-private.h"
 
-enum { LEARN, SEARCH, CHANCE, WEIGH, TOGETHER, TRACE, N_STAGES };
+enum { LEARN, SEARCH, CHANCE, WEIGH, TOGETHER, BORDER, TRACE, N_STAGES };
 
 #define WHITTLE_BINS 6
 #define START_STEPS 40
@@ -276,6 +276,14 @@ drop_side_lobes (AntScan *scan)
       }
 }
 
+static void
+settle_borders (AntScan *scan)
+{
+  for (size_t i = 0; i < scan->n_events; i++)
+    scan->event[i].fit = scan->event[i].border_fit;
+  drop_side_lobes (scan);
+}
+
 static AntStatus
 list_dips (AntScan *scan)
 {
@@ -302,8 +310,10 @@ list_dips (AntScan *scan)
 static const char *
 stage_title (void *work, size_t stage)
 {
-  static const char *const title[N_STAGES] = { "learning the noise", "searching for dips", "searching surrogates", "weighing candidates",
-                                               "fitting dips together", "tracing passages" };
+  static const char *const title[N_STAGES] = {
+    "learning the noise", "searching for dips", "searching surrogates", "weighing candidates", "fitting dips together",
+    "fitting dips at borders", "tracing passages"
+  };
   return title[stage];
 }
 
@@ -311,7 +321,8 @@ static size_t
 stage_count (void *work, size_t stage)
 {
   AntScan *scan = work;
-  size_t count[N_STAGES] = { 1, scan->n_chunks, scan->options.surrogates, scan->n_events, scan->n_chunks, scan->n_chunks };
+  size_t count[N_STAGES] = { 1, scan->n_chunks, scan->options.surrogates, scan->n_events, scan->n_chunks, scan->n_events,
+                             scan->n_chunks };
   return count[stage];
 }
 
@@ -326,6 +337,7 @@ run_slice (void *work, size_t stage, size_t slice)
     case CHANCE: return ant_scan_try_surrogate (scan, slice);
     case WEIGH: return scan->event[slice].strong ? ANT_OK : ant_scan_weigh (scan, slice);
     case TOGETHER: return ant_scan_fit_together (scan, slice);
+    case BORDER: return ant_scan_weigh_at_border (scan, slice);
     default: return ant_scan_trace_slow (scan, slice);
     }
 }
@@ -338,7 +350,7 @@ finish (void *work, size_t stage)
     case SEARCH: merge_chunks (work); return ANT_OK;
     case CHANCE: return settle_chance (work);
     case WEIGH: drop_side_lobes (work); return ANT_OK;
-    case TOGETHER: drop_side_lobes (work); return list_dips (work);
+    case BORDER: settle_borders (work); return list_dips (work);
     case TRACE: return ant_scan_join_traces (work);
     default: return ANT_OK;
     }
@@ -348,7 +360,7 @@ AntStatus
 ant_scan_find_alone (AntScan *scan)
 {
   AntStatus status = ANT_OK;
-  for (size_t stage = LEARN; stage <= TOGETHER && !status; stage++)
+  for (size_t stage = LEARN; stage <= BORDER && !status; stage++)
     {
       size_t count = stage_count (scan, stage);
       for (size_t i = 0; i < count && !status; i++)

@@ -265,6 +265,8 @@ test_penalty_is_half_square_of_prior_widths (void)
 {
   AntNoiseModel model;
   ant_noise_model_default (&model, 1, 300, 12, 1, 0, NULL);
+  for (size_t i = 0; i < model.n_parts; i++)
+    model.part[i].rms_ppm = model.part[i].rms_prior_ppm;
   g_assert_cmpfloat (ant_noise_model_penalty (&model), ==, 0);
   model.part[0].rms_ppm *= exp (2);
   model.part[0].time_d *= exp (-1);
