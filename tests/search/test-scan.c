@@ -108,18 +108,17 @@ a_weak_dip_beside_a_strong_one_is_found (Fixture *f, gconstpointer data)
   g_assert_cmpuint (ant_scan_brightenings (f->scan, &dip), ==, 0); /* no side lobes */
 }
 
-/* Chunks of 30 d, and a dip on every border between their own stretches, weak and strong. */
+/* Chunks of about 90 d, and a dip on every border between their own stretches, weak and strong. */
 static void
 dips_on_borders_are_listed_once_and_measured_as_without_a_border (Fixture *f, gconstpointer data)
 {
   enum { MOST = 8 };
   Planted planted[MOST];
   AntChunk chunk[MOST];
-  double step_s = 300, days = 100;
+  double step_s = 480, days = 260;
   size_t places = (size_t) (days * ANT_SECONDS_PER_DAY / step_s);
   float *blank = g_new0 (float, places);
   AntSeries series = { .n = places, .step_d = step_s / ANT_SECONDS_PER_DAY, .value_ppm = blank };
-  f->options.chunk = (AntChunkOptions){ 30, 8 };
   size_t n = ant_chunks_plan (&series, &f->options.chunk, MOST, chunk), borders = n - 1;
   g_free (blank);
   g_assert_cmpuint (borders, >=, 3);
@@ -131,7 +130,7 @@ dips_on_borders_are_listed_once_and_measured_as_without_a_border (Fixture *f, gc
     {
       const AntDip *list, *free_list;
       size_t count, free_count;
-      check_listed_once (f, &planted[i], 20, 3);
+      check_listed_once (f, &planted[i], 40, 3); /* five samples of 8 min */
       /* The same length of record with the dip in its middle, and no border. */
       double from = (planted[i].mid_d / series.step_d) - 0.5 * (double) chunk[i].n;
       AntSeries centred = ant_series_part (&f->series, (size_t) from, chunk[i].n);
