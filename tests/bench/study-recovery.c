@@ -1,7 +1,7 @@
 /* study-recovery.c - crossings planted in noise and sent through the whole search: found or not, SNR against that of the
  * true shape under the true noise, depth against the planted one.
  * Arguments: model, mask, days, cadence in seconds, records, seed, dips per record, ideal SNR, least and greatest impact,
- * least and greatest ingress in minutes. One line per dip: found SNR true-shape-SNR depth planted sigma T14 true-T14 time error. */
+ * least and greatest ingress in minutes, and, if wanted, T14 in hours (else 2 to 12.5 at random). One line per dip: found SNR true-shape-SNR depth planted sigma T14 true-T14 time error. */
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -70,7 +70,7 @@ main (int argc, char **argv)
       AntWhitener *whitener = ant_whitener_new (&model, &series, &status);
       for (size_t k = 0; k < dips; k++)
         {
-          double per_ppm, t14_d = between (&random, 2, 12.5) / 24;
+          double per_ppm, t14_d = (argc > 13 ? atof (argv[13]) : between (&random, 2, 12.5)) / 24;
           ant_crossing_shape_init (&planted[k].shape, t14_d, between (&random, atof (argv[11]), atof (argv[12])) / 1440,
                                    between (&random, atof (argv[9]), atof (argv[10])), ANT_LIMB_DARKENING_SUN);
           planted[k].centre = (double) n * ((double) k + between (&random, 0.35, 0.65)) / (double) dips;
