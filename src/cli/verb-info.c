@@ -289,7 +289,7 @@ tell (const char *path, const AntRecordOptions *reading, const AntSettingsOption
   AntRecordSummary summary;
   if (!ant_settings_options_apply (given, &settings, &error))
     return ant_cli_fail (error);
-  AntGridOptions grid = settings.grid;
+  AntGridOptions grid = ant_settings_grid (&settings);
   g_autoptr (AntRecord) record = NULL;
   gboolean gridded = FALSE;
   if (ant_record_options_good (reading, &grid, &error)

@@ -88,6 +88,14 @@ good_takes_a_list_or_a_mask (Place *place, gconstpointer unused)
 }
 
 static void
+settings_of_the_record_are_obeyed (Place *place, gconstpointer unused)
+{
+  g_autoptr (JsonNode) start = ask_json (place->path, "--set=stamp=start"), cadence = ask_json (place->path, "--set=cadence=60");
+  g_assert_cmpstr (json_object_get_string_member (json_node_get_object (start), "stamp"), ==, "start");
+  g_assert_cmpstr (json_object_get_string_member (json_node_get_object (cadence), "stamp"), !=, "start");
+}
+
+static void
 plain_words_tell_the_assumptions (Place *place, gconstpointer unused)
 {
   g_autofree char *out = NULL, *err = NULL;
@@ -134,6 +142,7 @@ main (int argc, char **argv)
 #define ADD(path, function) g_test_add ("/cli/info/" path, Place, NULL, set_up, function, tear_down)
   ADD ("json-counts-what-was-planted", json_counts_what_was_planted);
   ADD ("good-takes-a-list-or-a-mask", good_takes_a_list_or_a_mask);
+  ADD ("settings-of-the-record-are-obeyed", settings_of_the_record_are_obeyed);
   ADD ("plain-words-tell-the-assumptions", plain_words_tell_the_assumptions);
   ADD ("what-cannot-be-read-is-one-line-and-code-3", what_cannot_be_read_is_one_line_and_code_3);
   ADD ("wrong-choices-are-usage", wrong_choices_are_usage);
