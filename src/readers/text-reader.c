@@ -284,14 +284,16 @@ name_columns (const AntTextLayout *layout, const AntValueColumns *columns, guint
   if (columns->error >= 0)
     {
       record->error_name = g_strdup (layout->columns[columns->error].label);
-      ant_record_say (record, _("Its 1-sigma error is %s (column %d)."), record->error_name, columns->error + 1);
+      g_autofree char *at = named_place (layout, (guint) columns->error);
+      ant_record_say (record, _("Its 1-sigma error is %s%s."), record->error_name, at);
     }
   else
     ant_record_say (record, _("No column of errors is told by its name."));
   if (columns->quality >= 0)
     {
       record->quality_name = g_strdup (layout->columns[columns->quality].label);
-      ant_record_say (record, _("Quality is %s (column %d)."), record->quality_name, columns->quality + 1);
+      g_autofree char *at = named_place (layout, (guint) columns->quality);
+      ant_record_say (record, _("Quality is %s%s."), record->quality_name, at);
     }
 }
 
