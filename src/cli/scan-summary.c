@@ -26,12 +26,12 @@ print_dips (const AntRecord *record, gsize n, const AntDip *dip)
   for (gsize i = 0; i < MIN (n, MOST_LINES); i++)
     {
       g_autofree char *middle = middle_text (record, dip[i].mid_d);
-      g_print (_("%4" G_GSIZE_FORMAT "  %-20s %5.2f h %7.1f ± %-5.1f ppm %6.1f %6.1f   %8.2g  %s\n"), i + 1, middle,
+      g_print (_("%4zu  %-20s %5.2f h %7.1f ± %-5.1f ppm %6.1f %6.1f   %8.2g  %s\n"), i + 1, middle,
                dip[i].duration_d * ANT_HOURS_PER_DAY, dip[i].depth_ppm, dip[i].depth_sigma_ppm, dip[i].snr, dip[i].first_snr,
                dip[i].expected_false, ant_edges_text (dip[i].edges));
     }
   if (n > MOST_LINES)
-    g_print (_("      and %" G_GSIZE_FORMAT " more in the table\n"), n - MOST_LINES);
+    g_print (_("      and %zu more in the table\n"), n - MOST_LINES);
 }
 
 /* The deepest is named, the rest counted: the table has them. */
@@ -45,8 +45,8 @@ print_passages (const AntScanResults *results)
   if (!deepest)
     return;
   g_autofree char *time = middle_text (results->record, deepest->mid_d);
-  g_print (g_dngettext (NULL, "Spot groups and the like: %" G_GSIZE_FORMAT " passage, at %s, %.0f ± %.0f ppm deep, %.1f d wide.\n",
-                        "Spot groups and the like: %" G_GSIZE_FORMAT " passages, the deepest at %s, %.0f ± %.0f ppm, %.1f d wide.\n",
+  g_print (g_dngettext (NULL, "Spot groups and the like: %zu passage, at %s, %.0f ± %.0f ppm deep, %.1f d wide.\n",
+                        "Spot groups and the like: %zu passages, the deepest at %s, %.0f ± %.0f ppm, %.1f d wide.\n",
                         results->n_passages),
            results->n_passages, time, deepest->depth_ppm, deepest->depth_sigma_ppm, deepest->end_d - deepest->start_d);
 }
@@ -67,15 +67,15 @@ void
 ant_scan_summary_print (const AntScanResults *results)
 {
   const AntRecord *record = results->record;
-  g_print (g_dngettext (NULL, "%s: %.1f d observed, cadence %.6g s, %" G_GSIZE_FORMAT " noise model.\n",
-                        "%s: %.1f d observed, cadence %.6g s, %" G_GSIZE_FORMAT " noise models.\n", results->n_chunks),
+  g_print (g_dngettext (NULL, "%s: %.1f d observed, cadence %.6g s, %zu noise model.\n",
+                        "%s: %.1f d observed, cadence %.6g s, %zu noise models.\n", results->n_chunks),
            record->path, results->observed_d, record->cadence_d * ANT_SECONDS_PER_DAY, results->n_chunks);
   print_floor (results);
-  g_print (g_dngettext (NULL, "%" G_GSIZE_FORMAT " dip at or above SNR %.2f; noise alone is expected to show %.2g.\n",
-                        "%" G_GSIZE_FORMAT " dips at or above SNR %.2f; noise alone is expected to show %.2g.\n", results->n_dips),
+  g_print (g_dngettext (NULL, "%zu dip at or above SNR %.2f; noise alone is expected to show %.2g.\n",
+                        "%zu dips at or above SNR %.2f; noise alone is expected to show %.2g.\n", results->n_dips),
            results->n_dips, results->threshold_snr, results->expected_at_threshold);
   print_dips (record, results->n_dips, results->dip);
-  g_print (_("The same search for brightenings lists %" G_GSIZE_FORMAT " (of 9 h or less: %" G_GSIZE_FORMAT ", beside %" G_GSIZE_FORMAT " of the dips).\n"),
+  g_print (_("The same search for brightenings lists %zu (of 9 h or less: %zu, beside %zu of the dips).\n"),
            results->n_brightenings, results->n_mirrored, results->n_mirror_dips);
   print_dips (record, results->n_brightenings, results->brightening);
   print_passages (results);

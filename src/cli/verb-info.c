@@ -79,11 +79,11 @@ print_span (const AntRecord *record, const AntRecordSummary *summary)
 static void
 print_rows (const AntRecord *record, const AntRecordSummary *summary)
 {
-  print_line (_("rows"), _("%" G_GSIZE_FORMAT " in lines %u to %u, %" G_GSIZE_FORMAT " of them good"), record->n_rows,
+  print_line (_("rows"), _("%zu in lines %u to %u, %zu of them good"), record->n_rows,
               record->line[0], record->line[record->n_rows - 1], summary->n_good);
   for (unsigned bit = 0; bit < ANT_N_FLAGS; bit++)
     if (summary->n_flagged[bit] > 0)
-      print_line ("", _("%" G_GSIZE_FORMAT " %s: %s"), summary->n_flagged[bit], ant_flag_name (bit), ant_flag_description (bit));
+      print_line ("", _("%zu %s: %s"), summary->n_flagged[bit], ant_flag_name (bit), ant_flag_description (bit));
 }
 
 static void
@@ -117,7 +117,7 @@ print_grid (const AntRecord *record, const AntRecordSummary *summary)
   print_line (_("exposure"), record->exposure_known ? "%s" : _("unknown: %s, the cadence, is used"), exposure);
   print_line (_("stamps"), record->stamp == ANT_AT_UNKNOWN ? _("unknown: taken as middles of exposures") : _("%s of exposure"),
               place_names[record->stamp]);
-  print_line (_("samples"), _("%" G_GSIZE_FORMAT " on %" G_GSIZE_FORMAT " grid places: duty cycle %.1f %%"), summary->n_observed,
+  print_line (_("samples"), _("%zu on %zu grid places: duty cycle %.1f %%"), summary->n_observed,
               summary->n_places, 100.0 * (double) summary->n_observed / (double) summary->n_places);
   if (record->gaps->len > 0)
     print_line (_("gaps"), _("%u, the longest %s from %s"), record->gaps->len, gap, gap_start);

@@ -89,7 +89,7 @@ check_repeats (const char *path, const char *text, gsize length, GError **error)
         }
       char *name = is_group ? g_strdup_printf ("[%s]", group) : g_strdup_printf ("[%s] %s", group, line);
       if (!g_hash_table_add (seen, name))
-        return refuse (error, path, _("line %" G_GSIZE_FORMAT ": found %s%s%s a second time, expected it once"), i + 1,
+        return refuse (error, path, _("line %zu: found %s%s%s a second time, expected it once"), i + 1,
                        is_group ? "[" : "", line + is_group, is_group ? "]" : "");
     }
   return TRUE;

@@ -70,7 +70,7 @@ judge_values (AntRecord *record, const AntGridOptions *options)
       if (options->good_values && options->good_values->len > 0)
         rule = g_strdup (_("good = one of the listed values"));
       else if (!options->quality_is_list && options->good_mask != 0)
-        rule = g_strdup_printf (_("good = no bit of 0x%" G_GINT64_MODIFIER "x set"), (guint64) options->good_mask);
+        rule = g_strdup_printf (_("good = no bit of 0x%llx set"), (unsigned long long) options->good_mask);
       else
         rule = g_strdup (_("good = 0"));
       ant_record_say (record, _("Quality column \"%s\": %s; rows left out by it: %zu of %zu."), name, rule, n_bad,

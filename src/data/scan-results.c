@@ -112,13 +112,13 @@ say_health (AntScanResults *results)
       const AntChunkHealth *health = &chunk->health;
       gsize number = i + 1;
       if (fabs (health->innovation_rms - 1) > 0.05)
-        say (results, _("Chunk %" G_GSIZE_FORMAT ": the scatter is %.2f times what its noise model says"), number,
+        say (results, _("Chunk %zu: the scatter is %.2f times what its noise model says"), number,
              health->innovation_rms);
       if (fabs (health->lag1) > 0.05)
-        say (results, _("Chunk %" G_GSIZE_FORMAT ": neighbouring forecast errors are correlated by %+.2f; the noise model misses something"),
+        say (results, _("Chunk %zu: neighbouring forecast errors are correlated by %+.2f; the noise model misses something"),
              number, health->lag1);
       if (health->loudest > 1.15 || health->quietest < 0.87)
-        say (results, _("Chunk %" G_GSIZE_FORMAT ": the noise changes within it, from %.2f to %.2f of the model's; SNRs in loud stretches are too high, in quiet ones too low"),
+        say (results, _("Chunk %zu: the noise changes within it, from %.2f to %.2f of the model's; SNRs in loud stretches are too high, in quiet ones too low"),
              number, health->quietest, health->loudest);
       g_autoptr (GString) names = g_string_new (NULL);
       gsize free_parameters = ant_noise_model_get (&chunk->model, NULL);
@@ -130,7 +130,7 @@ say_health (AntScanResults *results)
             g_string_append_printf (names, "%s%s", names->len ? ", " : "", name);
           }
       if (names->len)
-        say (results, _("Chunk %" G_GSIZE_FORMAT ": the data say little about %s; the prior decides"), number, names->str);
+        say (results, _("Chunk %zu: the data say little about %s; the prior decides"), number, names->str);
     }
 }
 
@@ -139,8 +139,7 @@ say_surrogates (AntScanResults *results)
 {
   if (results->n_surrogates)
     say (results,
-         _("Expected false dips and the threshold rest on %" G_GSIZE_FORMAT " surrogates of this record, "
-           "with %" G_GSIZE_FORMAT " events of SNR 4 and more"),
+         _("Expected false dips and the threshold rest on %zu surrogates of this record, with %zu events of SNR 4 and more"),
          results->n_surrogates, results->n_surrogate_events);
 }
 

@@ -167,8 +167,8 @@ look_at_head (AntByteSource *source, GError **error)
 static gssize
 unpack_error (AntByteSource *source, const char *found, GError **error)
 {
-  g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: found %s after %" G_GUINT64_FORMAT " bytes, expected a whole gzip file"),
-               source->name, found, source->n_stored - source->inflater.avail_in);
+  g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: found %s after %zu bytes, expected a whole gzip file"),
+               source->name, found, (gsize) source->n_stored - source->inflater.avail_in);
   return -1;
 }
 

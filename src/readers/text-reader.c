@@ -109,28 +109,28 @@ accept_rows (const AntTableRows *rows, const AntTextLayout *layout, AntRecord *r
 {
   gsize n_lines = rows->n + rows->n_other_width;
   if (rows->n_other_width > MOST_ODD_FRACTION * n_lines)
-    return refuse (error, record, _("line %u: found %u columns, expected %u; so in %" G_GSIZE_FORMAT " of %" G_GSIZE_FORMAT " lines"),
+    return refuse (error, record, _("line %u: found %u columns, expected %u; so in %zu of %zu lines"),
                    rows->first_other_width, rows->other_width, layout->n_columns, rows->n_other_width, n_lines);
   if (rows->n < 2)
     return refuse (error, record, _("line %u: found one row of data, expected a record of many"), layout->first_row);
   if (rows->n_no_time > MOST_NO_TIME_FRACTION * rows->n)
-    return refuse (error, record, _("line %u: found “%s” in %s, expected a time; so in %" G_GSIZE_FORMAT " of %" G_GSIZE_FORMAT " rows"),
+    return refuse (error, record, _("line %u: found “%s” in %s, expected a time; so in %zu of %zu rows"),
                    rows->first_no_time, rows->no_time_text, record->time_name, rows->n_no_time, rows->n);
   if (rows->n_text_values > MOST_ODD_FRACTION * rows->n)
-    return refuse (error, record, _("line %u: found “%s” in the value column, expected a number; so in %" G_GSIZE_FORMAT
-                                    " of %" G_GSIZE_FORMAT " rows"),
+    return refuse (error, record, _("line %u: found “%s” in the value column, expected a number; so in %zu"
+                                    " of %zu rows"),
                    rows->first_text_value, rows->text_value, rows->n_text_values, rows->n);
   if (rows->n_other_width > 0)
-    ant_record_say (record, _("%" G_GSIZE_FORMAT " lines with another number of columns are left out, the first is line %u."),
+    ant_record_say (record, _("%zu lines with another number of columns are left out, the first is line %u."),
                     rows->n_other_width, rows->first_other_width);
   if (rows->n_no_time > 0)
-    ant_record_say (record, _("%" G_GSIZE_FORMAT " rows have no readable time, the first is line %u (“%s”)."), rows->n_no_time,
+    ant_record_say (record, _("%zu rows have no readable time, the first is line %u (“%s”)."), rows->n_no_time,
                     rows->first_no_time, rows->no_time_text);
   if (rows->n_text_values > 0)
-    ant_record_say (record, _("%" G_GSIZE_FORMAT " values are words and count as missing, the first is “%s” in line %u."),
+    ant_record_say (record, _("%zu values are words and count as missing, the first is “%s” in line %u."),
                     rows->n_text_values, rows->text_value, rows->first_text_value);
   if (rows->n_no_quality > 0)
-    ant_record_say (record, _("%" G_GSIZE_FORMAT " qualities are no whole numbers and count as bad (-1)."), rows->n_no_quality);
+    ant_record_say (record, _("%zu qualities are no whole numbers and count as bad (-1)."), rows->n_no_quality);
   return TRUE;
 }
 
@@ -226,12 +226,12 @@ flag_rows (AntRecord *record, const GArray *fills)
         }
     }
   if (n_missing > 0)
-    ant_record_say (record, _("%" G_GSIZE_FORMAT " values are empty or not numbers."), n_missing);
+    ant_record_say (record, _("%zu values are empty or not numbers."), n_missing);
   for (guint i = 0; i < fills->len; i++)
     {
       const AntFill *fill = &g_array_index (fills, AntFill, i);
-      ant_record_say (record, fill->stated ? _("%" G_GSIZE_FORMAT " values are the stated fill value %.10g.")
-                                           : _("%" G_GSIZE_FORMAT " values are %.10g, far from all others: taken as fill."),
+      ant_record_say (record, fill->stated ? _("%zu values are the stated fill value %.10g.")
+                                           : _("%zu values are %.10g, far from all others: taken as fill."),
                       fill->count, fill->value);
     }
 }
@@ -248,7 +248,7 @@ clean_errors (AntRecord *record)
         record->error[i] = (double) NAN;
       }
   if (n_bad > 0)
-    ant_record_say (record, _("%" G_GSIZE_FORMAT " values have no positive error."), n_bad);
+    ant_record_say (record, _("%zu values have no positive error."), n_bad);
 }
 
 static void

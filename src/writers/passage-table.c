@@ -46,7 +46,7 @@ ant_passage_table_text (const AntScanResults *results)
   for (gsize i = 0; i < results->n_passages; i++)
     {
       const AntPassage *passage = &results->passage[i];
-      g_string_append_printf (table, "%" G_GSIZE_FORMAT, i + 1);
+      g_string_append_printf (table, "%zu", i + 1);
       append_number (table, "%.4f", ant_time_reference_jd (time, passage->start_d));
       append_number (table, "%.4f", ant_time_reference_jd (time, passage->mid_d));
       append_number (table, "%.4f", ant_time_reference_jd (time, passage->end_d));

@@ -13,7 +13,7 @@
 static void
 add_floor (GString *table, gsize chunk, const AntFloorPoint *point, double threshold_snr)
 {
-  g_string_append_printf (table, "%" G_GSIZE_FORMAT ",", chunk);
+  g_string_append_printf (table, "%zu,", chunk);
   ant_csv_number (table, "%.4g", point->duration_d * ANT_HOURS_PER_DAY);
   g_string_append_c (table, ',');
   ant_csv_number (table, "%.5g", point->sigma_ppm);
@@ -21,7 +21,7 @@ add_floor (GString *table, gsize chunk, const AntFloorPoint *point, double thres
   ant_csv_number (table, "%.5g", threshold_snr * point->sigma_ppm);
   g_string_append_c (table, ',');
   ant_csv_number (table, "%.4f", point->snr_sd);
-  g_string_append_printf (table, ",%" G_GSIZE_FORMAT "\n", point->starts);
+  g_string_append_printf (table, ",%zu\n", point->starts);
 }
 
 GString *
@@ -63,7 +63,7 @@ add_bin (GString *table, gsize number, const AntRecord *record, const AntChunk *
 {
   double f_cd = chunk->frequency_cd[bin];
   double white = ant_noise_white_psd (variance, record->series.step_d);
-  g_string_append_printf (table, "%" G_GSIZE_FORMAT ",", number);
+  g_string_append_printf (table, "%zu,", number);
   ant_csv_number (table, "%.6g", f_cd * UHZ_PER_CYCLE_A_DAY);
   g_string_append_c (table, ',');
   ant_csv_number (table, "%.5g", chunk->power_unmasked[bin] / UHZ_PER_CYCLE_A_DAY);
@@ -116,7 +116,7 @@ ant_spectrum_table_text (const AntScanResults *results)
   g_string_append (table, "chunk,frequency_uhz,measured,model,white");
   gsize n_parts = results->n_chunks ? results->chunk[0].model.n_parts : 0;
   for (gsize p = 0; p < n_parts; p++)
-    g_string_append_printf (table, ",part_%" G_GSIZE_FORMAT, p + 1);
+    g_string_append_printf (table, ",part_%zu", p + 1);
   g_string_append_c (table, '\n');
   g_autofree double *variance = g_new (double, results->n_chunks + 1);
   for (gsize i = 0; i < results->n_chunks; i++)
@@ -154,7 +154,7 @@ ant_chunks_table_text (const AntScanResults *results)
   ant_csv_comment (table, _("time of a part: undamped period of an oscillator, correlation time of an exponential"));
   g_string_append (table, "chunk,start_time,end_time,observed,spikes,innovation_rms,lag1,quietest,loudest,white_ppm,error_scale");
   for (gsize p = 0; results->n_chunks && p < results->chunk[0].model.n_parts; p++)
-    g_string_append_printf (table, ",part_%" G_GSIZE_FORMAT ",rms_%" G_GSIZE_FORMAT "_ppm,time_%" G_GSIZE_FORMAT "_h", p + 1,
+    g_string_append_printf (table, ",part_%zu,rms_%zu_ppm,time_%zu_h", p + 1,
                             p + 1, p + 1);
   g_string_append_c (table, '\n');
   for (gsize i = 0; i < results->n_chunks; i++)
@@ -165,7 +165,7 @@ ant_chunks_table_text (const AntScanResults *results)
       double end_d = ant_series_time (series, (double) (chunk->first + chunk->n - 1));
       g_autofree char *start = ant_time_reference_own_text (&results->record->time, start_d);
       g_autofree char *end = ant_time_reference_own_text (&results->record->time, end_d);
-      g_string_append_printf (table, "%" G_GSIZE_FORMAT ",%s,%s,%zu,%zu", i + 1, start, end, health->observed, health->spikes);
+      g_string_append_printf (table, "%zu,%s,%s,%zu,%zu", i + 1, start, end, health->observed, health->spikes);
       const double number[] = { health->innovation_rms, health->lag1, health->quietest, health->loudest,
                                 chunk->model.white_ppm, chunk->model.error_scale };
       for (gsize k = 0; k < G_N_ELEMENTS (number); k++)

@@ -74,7 +74,7 @@ write_head (const AntRecipe *recipe, const AntSimulated *simulated, FILE *stream
   write_fixed (stream, scenario->cadence_d * ANT_SECONDS_PER_DAY, 3);
   fputs (" s, exposure ", stream);
   write_fixed (stream, scenario->exposure_d * ANT_SECONDS_PER_DAY, 3);
-  fprintf (stream, " s, %" G_GSIZE_FORMAT " of %" G_GSIZE_FORMAT " samples observed\n", observed, simulated->n);
+  fprintf (stream, " s, %zu of %zu samples observed\n", observed, simulated->n);
 }
 
 void
