@@ -6,10 +6,10 @@
 
 #include "cli/exit-code.h"
 #include "cli/record-options.h"
-#include "cli/record-summary.h"
 #include "cli/settings-options.h"
 #include "cli/verbs.h"
 #include "core/units.h"
+#include "data/record-summary.h"
 #include "jobs/stop.h"
 
 static const char *const style_names[] = { "days",     "jd",           "unix", "iso", "ymd",

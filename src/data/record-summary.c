@@ -1,5 +1,5 @@
 /* record-summary.c - counting and measuring a record. */
-#include "cli/record-summary.h"
+#include "data/record-summary.h"
 
 #include <math.h>
 #include <string.h>

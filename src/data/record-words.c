@@ -1,0 +1,86 @@
+/* record-words.c - what a record is, for people. */
+#include "data/record-words.h"
+
+#include <glib/gi18n.h>
+#include <math.h>
+
+static void add (GPtrArray *facts, const char *label, const char *format, ...) G_GNUC_PRINTF (3, 4);
+
+static void
+add (GPtrArray *facts, const char *label, const char *format, ...)
+{
+  va_list arguments;
+  va_start (arguments, format);
+  g_autofree char *value = g_strdup_vprintf (format, arguments);
+  va_end (arguments);
+  ant_facts_add (facts, label, value);
+}
+
+static void
+add_columns (GPtrArray *facts, const AntRecord *record)
+{
+  const AntTimeReference *time = &record->time;
+  add (facts, _("Time"), _("%s, %s%s"), record->time_name, ant_time_scale_name (time->scale),
+       time->scale_assumed ? _(" (assumed)") : "");
+  if (time->place)
+    add (facts, _("Clock at"), "%s", time->place);
+  add (facts, _("Value"), "%s%s%s", record->value_name, record->value_unit ? ", " : "",
+       record->value_unit ? record->value_unit : "");
+  add (facts, _("Error"), "%s", record->error_name ? record->error_name : _("none"));
+  add (facts, _("Quality"), "%s", record->quality_name ? record->quality_name : _("none"));
+}
+
+static void
+add_grid (GPtrArray *facts, const AntRecord *record, const AntRecordSummary *summary)
+{
+  static const char *const places[] = { N_("unknown, taken as the middle"), N_("start"), N_("middle"), N_("end") };
+  g_autofree char *cadence = ant_length_words (record->cadence_d), *exposure = ant_length_words (record->exposure_d);
+  g_autofree char *jitter = ant_length_words (summary->jitter_most_d), *gap = ant_length_words (summary->longest_gap_d);
+  add (facts, _("Cadence"), _("%s, stamps within %s of the grid"), cadence, jitter);
+  add (facts, _("Exposure"), record->exposure_known ? "%s" : _("unknown, %s used"), exposure);
+  add (facts, _("Stamps mark"), "%s", _ (places[record->stamp]));
+  add (facts, _("Samples"), _("%" G_GSIZE_FORMAT " of %" G_GSIZE_FORMAT " places, duty cycle %.1f %%"), summary->n_observed,
+       summary->n_places, 100.0 * (double) summary->n_observed / (double) summary->n_places);
+  if (record->gaps->len > 0)
+    add (facts, _("Gaps"), _("%u, the longest %s"), record->gaps->len, gap);
+  add (facts, _("Level"), _("%.8g%s%s, the median: 0 ppm"), record->median, record->value_unit ? " " : "",
+       record->value_unit ? record->value_unit : "");
+  add (facts, _("Scatter"), _("%.4g ppm, %.4g ppm from sample to sample"), summary->scatter_ppm, summary->sample_scatter_ppm);
+}
+
+GPtrArray *
+ant_record_facts (const AntRecord *record, const AntRecordSummary *summary)
+{
+  GPtrArray *facts = g_ptr_array_new_with_free_func (ant_fact_free);
+  add (facts, _("Format"), "%s", record->format);
+  if (summary->has_times)
+    {
+      g_autofree char *first = ant_instant_words (record, summary->first_d), *last = ant_instant_words (record, summary->last_d);
+      add (facts, _("From"), "%s", first);
+      add (facts, _("To"), "%s", last);
+    }
+  add_columns (facts, record);
+  add_grid (facts, record, summary);
+  add (facts, "SHA-256", "%.16s…", record->sha256 ? record->sha256 : "");
+  return facts;
+}
+
+GPtrArray *
+ant_record_left_out (const AntRecordSummary *summary)
+{
+  GPtrArray *facts = g_ptr_array_new_with_free_func (ant_fact_free);
+  for (unsigned bit = 0; bit < ANT_N_FLAGS; bit++)
+    if (summary->n_flagged[bit] > 0)
+      add (facts, ant_flag_name (bit), _("%" G_GSIZE_FORMAT " rows\n%s"), summary->n_flagged[bit], ant_flag_description (bit));
+  return facts;
+}
+
+char *
+ant_record_headline (const AntRecord *record, const AntRecordSummary *summary)
+{
+  g_autofree char *span = ant_length_words (summary->last_d - summary->first_d);
+  g_autofree char *cadence = ant_length_words (record->cadence_d);
+  double missing = 100.0 * (1.0 - (double) summary->n_observed / (double) summary->n_places);
+  return g_strdup_printf (_("%s · %s · %" G_GSIZE_FORMAT " samples · %.0f %% missing"), span, cadence, summary->n_observed,
+                          missing);
+}

@@ -1,0 +1,12 @@
+/* record-words.h - a gridded record in words: its facts, and what was left out of it and why. */
+#pragma once
+
+#include "data/dip-words.h"
+#include "data/record-summary.h"
+
+/* Columns, times, level, cadence and scatter as AntFact. Caller unrefs. */
+GPtrArray *ant_record_facts (const AntRecord *record, const AntRecordSummary *summary);
+/* What is left out: for each flag that was set its name and count and, after a line break, what it means. */
+GPtrArray *ant_record_left_out (const AntRecordSummary *summary);
+/* "41.6 d · 60 s · 52 304 samples · 12 % missing". Caller frees. */
+char *ant_record_headline (const AntRecord *record, const AntRecordSummary *summary);

@@ -1,0 +1,255 @@
+/* desk-work.c - the desk's long work: opening, scanning, asking. A late answer to work that was stopped is dropped. */
+#include "gui/desk-private.h"
+
+#include <math.h>
+#include <string.h>
+
+#include "jobs/open-task.h"
+
+AntBusy
+ant_desk_get_busy (AntDesk *self)
+{
+  return self->busy;
+}
+
+const char *
+ant_desk_get_opening (AntDesk *self)
+{
+  return self->opening;
+}
+
+const AntTaskProgress *
+ant_desk_get_progress (AntDesk *self)
+{
+  return &self->progress;
+}
+
+/* Work gets a cancellable of its own; whoever is not the present one has been overtaken. */
+static GCancellable *
+begin (AntDesk *self, AntBusy busy)
+{
+  ant_desk_stop (self);
+  self->busy = busy;
+  self->stop = g_cancellable_new ();
+  self->progress = (AntTaskProgress) { .stage_left_s = NAN };
+  return self->stop;
+}
+
+static gboolean
+end (AntDesk *self, GAsyncResult *result)
+{
+  if (g_task_get_cancellable (G_TASK (result)) != self->stop)
+    return FALSE;
+  self->busy = ANT_BUSY_NO;
+  g_clear_object (&self->stop);
+  g_clear_pointer (&self->opening, g_free);
+  return TRUE;
+}
+
+void
+ant_desk_stop (AntDesk *self)
+{
+  if (self->busy == ANT_BUSY_NO)
+    return;
+  g_cancellable_cancel (self->stop);
+  g_clear_object (&self->stop);
+  g_clear_pointer (&self->opening, g_free);
+  self->busy = ANT_BUSY_NO;
+  self->scan_after = FALSE;
+  ant_desk_tell (self, ANT_DESK_BUSY);
+}
+
+static void
+drop_results (AntDesk *self)
+{
+  g_clear_object (&self->selected);
+  g_ptr_array_set_size (self->mark_items, 0);
+  g_array_set_size (self->marks, 0);
+  g_list_store_remove_all (self->items);
+  g_clear_pointer (&self->results, ant_scan_results_unref);
+}
+
+static void
+take_record (AntDesk *self, AntLayers *layers)
+{
+  gboolean same = self->layers && g_strcmp0 (self->layers->record->sha256, layers->record->sha256) == 0;
+  drop_results (self);
+  g_clear_pointer (&self->layers, ant_layers_unref);
+  self->layers = layers;
+  self->read_with = self->opening_with;
+  if (same)
+    return;
+  ant_judgements_free (self->judgements);
+  self->judgements = ant_judgements_new ();
+  ant_desk_begin_views (self);
+}
+
+static void
+opened_cb (GObject *source, GAsyncResult *result, gpointer data)
+{
+  g_autoptr (AntDesk) self = data;
+  g_autoptr (GError) error = NULL;
+  AntLayers *layers = ant_open_task_finish (result, &error);
+  if (!end (self, result))
+    {
+      ant_layers_unref (layers);
+      return;
+    }
+  if (layers)
+    take_record (self, layers);
+  ant_desk_tell (self, layers ? ANT_DESK_EVERYTHING : ANT_DESK_BUSY);
+  if (!layers)
+    ant_desk_fail (self, error->message);
+  else if (self->scan_after)
+    ant_desk_scan (self);
+  self->scan_after = FALSE;
+}
+
+void
+ant_desk_open (AntDesk *self, const char *path)
+{
+  g_autofree char *kept = g_strdup (path); /* it may be the present record's own */
+  GCancellable *stop = begin (self, ANT_BUSY_OPENING);
+  self->opening = g_steal_pointer (&kept);
+  self->opening_with = self->settings;
+  ant_open_task_async (self->opening, &self->settings, stop, opened_cb, g_object_ref (self));
+  ant_desk_tell (self, ANT_DESK_BUSY);
+}
+
+static void
+add_items (AntDesk *self, AntDipKind kind, gsize n, const AntDip *dip)
+{
+  for (gsize i = 0; i < n; i++)
+    {
+      g_autoptr (AntDipItem) item = ant_dip_item_new (kind, (guint) i + 1, &dip[i], NAN);
+      ant_dip_item_judge (item, ant_judgements_class (self->judgements, dip[i].mid_d, dip[i].duration_d),
+                          ant_judgements_note (self->judgements, dip[i].mid_d, dip[i].duration_d));
+      g_list_store_append (self->items, item);
+    }
+}
+
+/* Asked dips outlive a scan. */
+static GPtrArray *
+asked_items (AntDesk *self)
+{
+  GPtrArray *asked = g_ptr_array_new_with_free_func (g_object_unref);
+  for (guint i = 0; i < g_list_model_get_n_items (G_LIST_MODEL (self->items)); i++)
+    {
+      g_autoptr (AntDipItem) item = g_list_model_get_item (G_LIST_MODEL (self->items), i);
+      if (ant_dip_item_get_kind (item) == ANT_KIND_ASKED)
+        g_ptr_array_add (asked, g_steal_pointer (&item));
+    }
+  return asked;
+}
+
+/* The dip at the same place as the one that was selected, so that a new scan keeps the eye where it was. */
+static void
+select_again (AntDesk *self, double mid_d)
+{
+  for (gsize i = 0; i < self->marks->len; i++)
+    {
+      const AntDipMark *mark = &g_array_index (self->marks, AntDipMark, i);
+      if (fabs (mark->mid_d - mid_d) < mark->duration_d / 2)
+        g_set_object (&self->selected, g_ptr_array_index (self->mark_items, i));
+    }
+}
+
+static void
+take_outcome (AntDesk *self, AntScanOutcome *outcome)
+{
+  double selected_d = self->selected ? ant_dip_item_get_dip (self->selected)->mid_d : NAN;
+  g_autoptr (GPtrArray) asked = asked_items (self);
+  drop_results (self);
+  g_clear_pointer (&self->layers, ant_layers_unref);
+  self->layers = g_steal_pointer (&outcome->layers);
+  self->results = g_steal_pointer (&outcome->results);
+  add_items (self, ANT_KIND_DIP, self->results->n_dips, self->results->dip);
+  add_items (self, ANT_KIND_BRIGHTENING, self->results->n_brightenings, self->results->brightening);
+  for (guint i = 0; i < asked->len; i++)
+    g_list_store_append (self->items, g_ptr_array_index (asked, i));
+  ant_desk_make_marks (self);
+  select_again (self, selected_d);
+}
+
+static void
+scanned_cb (GObject *source, GAsyncResult *result, gpointer data)
+{
+  g_autoptr (AntDesk) self = data;
+  g_autoptr (GError) error = NULL;
+  g_autoptr (AntScanOutcome) outcome = ant_scan_task_finish (result, &error);
+  if (!end (self, result))
+    return;
+  if (outcome)
+    take_outcome (self, outcome);
+  ant_desk_tell (self, outcome ? ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_BUSY : ANT_DESK_BUSY);
+  if (!outcome)
+    ant_desk_fail (self, error->message);
+}
+
+static void
+progress_cb (const AntTaskProgress *progress, gpointer data)
+{
+  AntDesk *self = data;
+  if (self->busy != ANT_BUSY_SCANNING)
+    return;
+  self->progress = *progress;
+  ant_desk_tell (self, ANT_DESK_BUSY);
+}
+
+void
+ant_desk_scan (AntDesk *self)
+{
+  if (!self->layers)
+    return;
+  if (memcmp (&self->read_with.grid, &self->settings.grid, sizeof self->settings.grid) != 0
+      || self->read_with.stamp != self->settings.stamp)
+    {
+      ant_desk_open (self, self->layers->record->path);
+      self->scan_after = TRUE;
+      return;
+    }
+  GCancellable *stop = begin (self, ANT_BUSY_SCANNING);
+  ant_scan_task_async (self->layers, &self->settings, stop, progress_cb, scanned_cb, g_object_ref (self));
+  ant_desk_tell (self, ANT_DESK_BUSY);
+}
+
+static guint
+next_asked_number (AntDesk *self)
+{
+  g_autoptr (GPtrArray) asked = asked_items (self);
+  return asked->len + 1;
+}
+
+static void
+asked_cb (GObject *source, GAsyncResult *result, gpointer data)
+{
+  g_autoptr (AntDesk) self = data;
+  g_autoptr (GError) error = NULL;
+  g_autofree AntAskedDip *asked = ant_ask_task_finish (result, &error);
+  if (!end (self, result))
+    return;
+  if (asked)
+    {
+      g_autoptr (AntDipItem) item
+          = ant_dip_item_new (ANT_KIND_ASKED, next_asked_number (self), &asked->dip, asked->upper_limit_ppm);
+      g_list_store_append (self->items, item);
+      self->shown |= ANT_KIND_ASKED;
+      ant_desk_make_marks (self);
+      g_set_object (&self->selected, item);
+    }
+  self->span = (AntSpan) { NAN, NAN };
+  ant_desk_tell (self, ANT_DESK_BUSY | ANT_DESK_POINTER
+                           | (asked ? ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_LOOK : 0));
+  if (!asked)
+    ant_desk_fail (self, error->message);
+}
+
+void
+ant_desk_ask (AntDesk *self, double from_d, double to_d)
+{
+  if (!self->layers || !(to_d > from_d))
+    return;
+  GCancellable *stop = begin (self, ANT_BUSY_ASKING);
+  ant_ask_task_async (self->layers, &self->settings, (from_d + to_d) / 2, to_d - from_d, stop, asked_cb, g_object_ref (self));
+  ant_desk_tell (self, ANT_DESK_BUSY);
+}

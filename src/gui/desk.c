@@ -1,0 +1,300 @@
+/* desk.c - the things on the desk, selection and judgement. */
+#include "gui/desk-private.h"
+
+#include <math.h>
+
+G_DEFINE_FINAL_TYPE (AntDesk, ant_desk, G_TYPE_OBJECT)
+
+enum
+{
+  CHANGED,
+  FAILED,
+  N_SIGNALS
+};
+static guint signals[N_SIGNALS];
+
+void
+ant_desk_tell (AntDesk *self, AntDeskChange what)
+{
+  g_signal_emit (self, signals[CHANGED], 0, (guint) what);
+}
+
+void
+ant_desk_fail (AntDesk *self, const char *sentence)
+{
+  g_signal_emit (self, signals[FAILED], 0, sentence);
+}
+
+AntDesk *
+ant_desk_new (void)
+{
+  return g_object_new (ANT_TYPE_DESK, NULL);
+}
+
+const AntLayers *
+ant_desk_get_layers (AntDesk *self)
+{
+  return self->layers;
+}
+
+const AntRecord *
+ant_desk_get_record (AntDesk *self)
+{
+  return self->layers ? self->layers->record : NULL;
+}
+
+const AntScanResults *
+ant_desk_get_results (AntDesk *self)
+{
+  return self->results;
+}
+
+static gboolean
+settings_differ (const AntSettings *a, const AntSettings *b, const char *group)
+{
+  for (gsize i = 0; i < ant_n_settings; i++)
+    {
+      const AntSetting *setting = &ant_setting_table[i];
+      if ((!group || g_str_equal (setting->group, group)) && !g_str_equal (setting->key, "threads")
+          && ant_setting_get (setting, a) != ant_setting_get (setting, b))
+        return TRUE;
+    }
+  return FALSE;
+}
+
+gboolean
+ant_desk_is_stale (AntDesk *self)
+{
+  return self->results && settings_differ (&self->settings, &self->results->settings, NULL);
+}
+
+GListModel *
+ant_desk_get_items (AntDesk *self)
+{
+  return G_LIST_MODEL (self->items);
+}
+
+const AntSettings *
+ant_desk_get_settings (AntDesk *self)
+{
+  return &self->settings;
+}
+
+gboolean
+ant_desk_set_setting (AntDesk *self, const AntSetting *setting, const char *text, GError **error)
+{
+  double before = ant_setting_get (setting, &self->settings);
+  if (!ant_setting_set_text (setting, &self->settings, text, error))
+    return FALSE;
+  if (ant_setting_get (setting, &self->settings) != before)
+    ant_desk_tell (self, ANT_DESK_SETTINGS);
+  return TRUE;
+}
+
+void
+ant_desk_reset_settings (AntDesk *self)
+{
+  ant_settings_init (&self->settings);
+  ant_desk_tell (self, ANT_DESK_SETTINGS);
+}
+
+AntDipItem *
+ant_desk_get_selected (AntDesk *self)
+{
+  return self->selected;
+}
+
+void
+ant_desk_select (AntDesk *self, AntDipItem *item)
+{
+  if (item == self->selected)
+    return;
+  g_set_object (&self->selected, item);
+  if (item)
+    ant_desk_bring_into_view (self, ant_dip_item_get_dip (item));
+  ant_desk_tell (self, ANT_DESK_SELECTION | ANT_DESK_VIEW);
+}
+
+void
+ant_desk_select_next (AntDesk *self, int step)
+{
+  gsize n = self->mark_items->len, at = ant_desk_get_selected_mark (self);
+  if (n == 0)
+    return;
+  if (at == ANT_NO_DIP)
+    at = step > 0 ? 0 : n - 1;
+  else
+    at = step > 0 ? MIN (at + 1, n - 1) : at - (at > 0);
+  ant_desk_select_mark (self, at);
+}
+
+static void
+judge (AntDesk *self, AntDipClass class, const char *note)
+{
+  const AntDip *dip = ant_dip_item_get_dip (self->selected);
+  ant_judgements_set_class (self->judgements, dip->mid_d, dip->duration_d, class);
+  ant_judgements_set_note (self->judgements, dip->mid_d, dip->duration_d, note);
+  ant_dip_item_judge (self->selected, class, note);
+  ant_desk_make_marks (self);
+  ant_desk_tell (self, ANT_DESK_JUDGEMENT);
+}
+
+void
+ant_desk_judge (AntDesk *self, AntDipClass class)
+{
+  if (self->selected && ant_dip_item_get_class (self->selected) != class)
+    {
+      g_autofree char *note = g_strdup (ant_dip_item_get_note (self->selected));
+      judge (self, class, note);
+    }
+}
+
+void
+ant_desk_note (AntDesk *self, const char *note)
+{
+  if (self->selected && !g_str_equal (ant_dip_item_get_note (self->selected), note))
+    judge (self, ant_dip_item_get_class (self->selected), note);
+}
+
+static int
+by_time (gconstpointer a, gconstpointer b)
+{
+  const AntDip *one = ant_dip_item_get_dip (*(AntDipItem *const *) a);
+  const AntDip *other = ant_dip_item_get_dip (*(AntDipItem *const *) b);
+  return (one->mid_d > other->mid_d) - (one->mid_d < other->mid_d);
+}
+
+void
+ant_desk_make_marks (AntDesk *self)
+{
+  g_ptr_array_set_size (self->mark_items, 0);
+  g_array_set_size (self->marks, 0);
+  guint n = g_list_model_get_n_items (G_LIST_MODEL (self->items));
+  for (guint i = 0; i < n; i++)
+    {
+      g_autoptr (AntDipItem) item = g_list_model_get_item (G_LIST_MODEL (self->items), i);
+      if (ant_dip_item_get_kind (item) & self->shown)
+        g_ptr_array_add (self->mark_items, item);
+    }
+  g_ptr_array_sort (self->mark_items, by_time);
+  for (guint i = 0; i < self->mark_items->len; i++)
+    {
+      AntDipItem *item = g_ptr_array_index (self->mark_items, i);
+      const AntDip *dip = ant_dip_item_get_dip (item);
+      AntDipMark mark = { dip->mid_d, dip->duration_d, dip->depth_ppm, ant_dip_item_get_number (item), ant_dip_item_look (item) };
+      g_array_append_val (self->marks, mark);
+    }
+}
+
+gsize
+ant_desk_get_marks (AntDesk *self, const AntDipMark **marks)
+{
+  *marks = &g_array_index (self->marks, AntDipMark, 0);
+  return self->marks->len;
+}
+
+gsize
+ant_desk_get_selected_mark (AntDesk *self)
+{
+  guint index;
+  return self->selected && g_ptr_array_find (self->mark_items, self->selected, &index) ? index : ANT_NO_DIP;
+}
+
+void
+ant_desk_select_mark (AntDesk *self, gsize index)
+{
+  ant_desk_select (self, index < self->mark_items->len ? g_ptr_array_index (self->mark_items, index) : NULL);
+}
+
+AntDepthUnit
+ant_desk_get_unit (AntDesk *self)
+{
+  return self->unit;
+}
+
+void
+ant_desk_set_unit (AntDesk *self, AntDepthUnit unit)
+{
+  self->unit = unit;
+  ant_desk_tell (self, ANT_DESK_LOOK);
+}
+
+int
+ant_desk_get_average (AntDesk *self)
+{
+  return self->average;
+}
+
+void
+ant_desk_set_average (AntDesk *self, int average)
+{
+  self->average = CLAMP (average, -1, ANT_N_AVERAGES - 1);
+  ant_desk_tell (self, ANT_DESK_LOOK);
+}
+
+guint
+ant_desk_get_shown (AntDesk *self)
+{
+  return self->shown;
+}
+
+void
+ant_desk_set_shown (AntDesk *self, guint kinds)
+{
+  self->shown = kinds;
+  ant_desk_make_marks (self);
+  if (self->selected && !(ant_dip_item_get_kind (self->selected) & kinds))
+    g_clear_object (&self->selected);
+  ant_desk_tell (self, ANT_DESK_LOOK | ANT_DESK_SELECTION);
+}
+
+static void
+ant_desk_dispose (GObject *object)
+{
+  AntDesk *self = ANT_DESK (object);
+  ant_desk_stop (self);
+  g_clear_object (&self->selected);
+  g_ptr_array_set_size (self->mark_items, 0);
+  g_list_store_remove_all (self->items);
+  G_OBJECT_CLASS (ant_desk_parent_class)->dispose (object);
+}
+
+static void
+ant_desk_finalize (GObject *object)
+{
+  AntDesk *self = ANT_DESK (object);
+  g_clear_object (&self->stop);
+  g_object_unref (self->items);
+  g_array_unref (self->marks);
+  g_ptr_array_unref (self->mark_items);
+  ant_judgements_free (self->judgements);
+  ant_scan_results_unref (self->results);
+  ant_layers_unref (self->layers);
+  g_free (self->opening);
+  G_OBJECT_CLASS (ant_desk_parent_class)->finalize (object);
+}
+
+static void
+ant_desk_class_init (AntDeskClass *klass)
+{
+  GObjectClass *object_class = G_OBJECT_CLASS (klass);
+  object_class->dispose = ant_desk_dispose;
+  object_class->finalize = ant_desk_finalize;
+  signals[CHANGED] = g_signal_new ("changed", ANT_TYPE_DESK, G_SIGNAL_RUN_LAST, 0, NULL, NULL, NULL, G_TYPE_NONE, 1, G_TYPE_UINT);
+  signals[FAILED] = g_signal_new ("failed", ANT_TYPE_DESK, G_SIGNAL_RUN_LAST, 0, NULL, NULL, NULL, G_TYPE_NONE, 1, G_TYPE_STRING);
+}
+
+static void
+ant_desk_init (AntDesk *self)
+{
+  self->items = g_list_store_new (ANT_TYPE_DIP_ITEM);
+  self->marks = g_array_new (FALSE, TRUE, sizeof (AntDipMark));
+  self->mark_items = g_ptr_array_new ();
+  self->judgements = ant_judgements_new ();
+  self->shown = ANT_KIND_DIP | ANT_KIND_ASKED;
+  self->pointer_d = NAN;
+  self->span = (AntSpan) { NAN, NAN };
+  self->progress.stage_left_s = NAN;
+  ant_settings_init (&self->settings);
+  self->read_with = self->settings;
+}

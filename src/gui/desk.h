@@ -1,0 +1,103 @@
+/* desk.h - what one window works on: the record, what the scan found, what is selected and seen. Every widget of the
+ * window looks at it and is told by one signal when it changes:
+ *
+ *   "changed" (AntDeskChange what)   several bits at once where several things changed
+ *   "failed" (const char *sentence)  something asked for could not be done
+ *
+ * Long work runs in jobs/; the desk only starts and stops it. For the main loop alone. */
+#pragma once
+
+#include "data/dip-words.h"
+#include "gui/dip-item.h"
+#include "jobs/layers.h"
+#include "jobs/scan-task.h"
+#include "plot/view.h"
+
+typedef enum
+{
+  ANT_DESK_RECORD = 1 << 0,    /* another record, or none */
+  ANT_DESK_RESULTS = 1 << 1,   /* the items */
+  ANT_DESK_SELECTION = 1 << 2,
+  ANT_DESK_VIEW = 1 << 3,      /* time range in view */
+  ANT_DESK_SETTINGS = 1 << 4,
+  ANT_DESK_JUDGEMENT = 1 << 5,
+  ANT_DESK_BUSY = 1 << 6,      /* work began, went on or ended */
+  ANT_DESK_POINTER = 1 << 7,   /* time under the pointer, or span being drawn */
+  ANT_DESK_LOOK = 1 << 8,      /* units, averages, which kinds are shown */
+} AntDeskChange;
+#define ANT_DESK_EVERYTHING ((AntDeskChange) 0x1ff)
+
+typedef enum
+{
+  ANT_BUSY_NO,
+  ANT_BUSY_OPENING,
+  ANT_BUSY_SCANNING,
+  ANT_BUSY_ASKING,
+} AntBusy;
+
+#define ANT_TYPE_DESK (ant_desk_get_type ())
+G_DECLARE_FINAL_TYPE (AntDesk, ant_desk, ANT, DESK, GObject)
+
+AntDesk *ant_desk_new (void);
+
+/* Work. Each stops what was running before. Results of an earlier scan stay until a new one is complete. */
+void ant_desk_open (AntDesk *self, const char *path);
+void ant_desk_scan (AntDesk *self); /* reads the record again first if the settings of its grid have changed */
+void ant_desk_ask (AntDesk *self, double from_d, double to_d); /* measure the dip that fills this span */
+void ant_desk_stop (AntDesk *self);
+AntBusy ant_desk_get_busy (AntDesk *self);
+const char *ant_desk_get_opening (AntDesk *self);         /* path being read, or NULL */
+const AntTaskProgress *ant_desk_get_progress (AntDesk *self); /* of the scan */
+
+/* The record and what was found; NULL while there is none. Borrowed. */
+const AntLayers *ant_desk_get_layers (AntDesk *self);
+const AntRecord *ant_desk_get_record (AntDesk *self);
+const AntScanResults *ant_desk_get_results (AntDesk *self);
+gboolean ant_desk_is_stale (AntDesk *self); /* the settings differ from those of the results */
+GListModel *ant_desk_get_items (AntDesk *self); /* of AntDipItem */
+
+/* The settings. A change is told only if the value differs. */
+const AntSettings *ant_desk_get_settings (AntDesk *self);
+gboolean ant_desk_set_setting (AntDesk *self, const AntSetting *setting, const char *text, GError **error);
+void ant_desk_reset_settings (AntDesk *self);
+
+/* Selection: NULL for none. Selecting brings the dip into view. */
+AntDipItem *ant_desk_get_selected (AntDesk *self);
+void ant_desk_select (AntDesk *self, AntDipItem *item);
+void ant_desk_select_next (AntDesk *self, int step); /* +1 or -1, by time, among the shown ones */
+void ant_desk_judge (AntDesk *self, AntDipClass class); /* the selected dip */
+void ant_desk_note (AntDesk *self, const char *note);
+
+/* Shown dips as the plots want them, parallel arrays; marks live until the next change. */
+gsize ant_desk_get_marks (AntDesk *self, const AntDipMark **marks);
+gsize ant_desk_get_selected_mark (AntDesk *self); /* index or ANT_NO_DIP */
+void ant_desk_select_mark (AntDesk *self, gsize index);
+
+/* The time range in view, days from the origin of the record. y is not used. */
+const AntView *ant_desk_get_view (AntDesk *self);
+void ant_desk_set_view (AntDesk *self, double from_d, double to_d);
+void ant_desk_zoom (AntDesk *self, double factor, double at_d);
+void ant_desk_pan (AntDesk *self, double fraction);
+void ant_desk_view_whole (AntDesk *self);
+void ant_desk_view_selected (AntDesk *self); /* the span that was drawn, else the selected dip and its surroundings */
+gboolean ant_desk_can_go (AntDesk *self, int step);
+void ant_desk_go (AntDesk *self, int step); /* -1 back, +1 forward through views */
+
+/* Pointer and span. */
+double ant_desk_get_pointer (AntDesk *self); /* days, NaN: not over a strip */
+void ant_desk_set_pointer (AntDesk *self, double time_d);
+gboolean ant_desk_get_span (AntDesk *self, AntSpan *span);
+void ant_desk_set_span (AntDesk *self, const AntSpan *span); /* NULL: none */
+void ant_desk_widen_span (AntDesk *self, int steps); /* about the middle of the view, for keys */
+gboolean ant_desk_get_measuring (AntDesk *self); /* the next drag on a strip draws a span */
+void ant_desk_set_measuring (AntDesk *self, gboolean measuring);
+/* "2041-03-14 07:12 · 1360.52 W/m² · residual −871 ppm" for the pointer, "" for none. Caller frees. */
+char *ant_desk_readout (AntDesk *self);
+
+/* Ways of looking. */
+AntDepthUnit ant_desk_get_unit (AntDesk *self);
+void ant_desk_set_unit (AntDesk *self, AntDepthUnit unit);
+int ant_desk_get_average (AntDesk *self); /* index of ant_average_lengths_d, or -1: none */
+void ant_desk_set_average (AntDesk *self, int average);
+guint ant_desk_get_shown (AntDesk *self); /* AntDipKind bits */
+void ant_desk_set_shown (AntDesk *self, guint kinds);

@@ -1,0 +1,135 @@
+/* dip-inspector.c - the inspector of the page Dips. */
+#include "gui/dip-inspector.h"
+
+#include <glib/gi18n.h>
+
+#include "gui/closeup-view.h"
+#include "gui/fact-list.h"
+
+struct _AntDipInspector
+{
+  GtkWidget parent_instance;
+
+  /* From the template */
+  GtkStack *stack;
+  GtkLabel *title, *span;
+  AntCloseupView *closeup;
+  AntFactList *facts;
+  GtkDropDown *verdict;
+  GtkEntry *note;
+
+  /* Owned */
+  AntDesk *desk;
+  gboolean filling; /* the controls follow the desk, not the user */
+};
+
+G_DEFINE_FINAL_TYPE (AntDipInspector, ant_dip_inspector, GTK_TYPE_WIDGET)
+
+static void
+show_judgement (AntDipInspector *self, AntDipItem *item)
+{
+  self->filling = TRUE;
+  gtk_drop_down_set_selected (self->verdict, ant_dip_item_get_class (item));
+  if (!g_str_equal (gtk_editable_get_text (GTK_EDITABLE (self->note)), ant_dip_item_get_note (item)))
+    gtk_editable_set_text (GTK_EDITABLE (self->note), ant_dip_item_get_note (item));
+  self->filling = FALSE;
+}
+
+static void
+show (AntDipInspector *self)
+{
+  AntDipItem *item = ant_desk_get_selected (self->desk);
+  const AntRecord *record = ant_desk_get_record (self->desk);
+  gtk_stack_set_visible_child_name (self->stack, item && record ? "dip" : "empty");
+  if (!item || !record)
+    return;
+  const AntDip *dip = ant_dip_item_get_dip (item);
+  g_autofree char *title = ant_dip_item_title (item), *span = ant_span_words (record, dip);
+  g_autoptr (GPtrArray) facts
+      = ant_dip_facts (record, dip, ant_dip_item_get_upper_limit_ppm (item), ant_desk_get_unit (self->desk));
+  gtk_label_set_text (self->title, title);
+  gtk_label_set_text (self->span, span);
+  gtk_widget_set_tooltip_text (GTK_WIDGET (self->span), span);
+  ant_fact_list_set_facts (self->facts, facts);
+  show_judgement (self, item);
+}
+
+static void
+desk_changed_cb (AntDesk *desk, guint what, AntDipInspector *self)
+{
+  if (what & (ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_LOOK))
+    show (self);
+  else if ((what & ANT_DESK_JUDGEMENT) && ant_desk_get_selected (desk))
+    show_judgement (self, ant_desk_get_selected (desk));
+}
+
+static void
+verdict_chosen_cb (AntDipInspector *self)
+{
+  if (!self->filling)
+    ant_desk_judge (self->desk, (AntDipClass) gtk_drop_down_get_selected (self->verdict));
+}
+
+/* Every letter is kept as it is typed: there is nothing to confirm and nothing to lose. */
+static void
+note_changed_cb (AntDipInspector *self)
+{
+  if (!self->filling)
+    ant_desk_note (self->desk, gtk_editable_get_text (GTK_EDITABLE (self->note)));
+}
+
+void
+ant_dip_inspector_focus_note (AntDipInspector *self)
+{
+  gtk_widget_grab_focus (GTK_WIDGET (self->note));
+}
+
+void
+ant_dip_inspector_set_desk (AntDipInspector *self, AntDesk *desk)
+{
+  g_set_object (&self->desk, desk);
+  ant_plot_view_set_desk (ANT_PLOT_VIEW (self->closeup), desk);
+  g_signal_connect_object (desk, "changed", G_CALLBACK (desk_changed_cb), self, 0);
+  desk_changed_cb (desk, ANT_DESK_EVERYTHING, self);
+}
+
+static void
+ant_dip_inspector_dispose (GObject *object)
+{
+  g_clear_object (&ANT_DIP_INSPECTOR (object)->desk);
+  gtk_widget_dispose_template (GTK_WIDGET (object), ANT_TYPE_DIP_INSPECTOR);
+  G_OBJECT_CLASS (ant_dip_inspector_parent_class)->dispose (object);
+}
+
+static void
+ant_dip_inspector_class_init (AntDipInspectorClass *klass)
+{
+  GtkWidgetClass *widget_class = GTK_WIDGET_CLASS (klass);
+  G_OBJECT_CLASS (klass)->dispose = ant_dip_inspector_dispose;
+  g_type_ensure (ANT_TYPE_CLOSEUP_VIEW);
+  g_type_ensure (ANT_TYPE_FACT_LIST);
+  gtk_widget_class_set_template_from_resource (widget_class, "/org/antumbra/Antumbra/dip-inspector.ui");
+  gtk_widget_class_set_layout_manager_type (widget_class, GTK_TYPE_BIN_LAYOUT);
+  gtk_widget_class_bind_template_child (widget_class, AntDipInspector, stack);
+  gtk_widget_class_bind_template_child (widget_class, AntDipInspector, title);
+  gtk_widget_class_bind_template_child (widget_class, AntDipInspector, span);
+  gtk_widget_class_bind_template_child (widget_class, AntDipInspector, closeup);
+  gtk_widget_class_bind_template_child (widget_class, AntDipInspector, facts);
+  gtk_widget_class_bind_template_child (widget_class, AntDipInspector, verdict);
+  gtk_widget_class_bind_template_child (widget_class, AntDipInspector, note);
+  gtk_widget_class_bind_template_callback (widget_class, verdict_chosen_cb);
+  gtk_widget_class_bind_template_callback (widget_class, note_changed_cb);
+}
+
+static void
+ant_dip_inspector_init (AntDipInspector *self)
+{
+  self->filling = TRUE;
+  gtk_widget_init_template (GTK_WIDGET (self));
+  const char *titles[ANT_N_CLASSES + 1] = { NULL };
+  for (guint i = 0; i < ANT_N_CLASSES; i++)
+    titles[i] = ant_dip_class_title ((AntDipClass) i);
+  g_autoptr (GtkStringList) classes = gtk_string_list_new (titles);
+  gtk_drop_down_set_model (self->verdict, G_LIST_MODEL (classes));
+  self->filling = FALSE;
+}

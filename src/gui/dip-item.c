@@ -1,0 +1,147 @@
+/* dip-item.c - a row of the list of dips. */
+#include "gui/dip-item.h"
+
+#include <glib/gi18n.h>
+
+struct _AntDipItem
+{
+  GObject parent_instance;
+  AntDipKind kind;
+  guint number;
+  AntDip dip;
+  double upper_limit_ppm;
+  AntDipClass class;
+  char *note;
+};
+
+enum
+{
+  PROP_0,
+  PROP_JUDGEMENT,
+  N_PROPS
+};
+static GParamSpec *properties[N_PROPS];
+
+G_DEFINE_FINAL_TYPE (AntDipItem, ant_dip_item, G_TYPE_OBJECT)
+
+AntDipItem *
+ant_dip_item_new (AntDipKind kind, guint number, const AntDip *dip, double upper_limit_ppm)
+{
+  AntDipItem *self = g_object_new (ANT_TYPE_DIP_ITEM, NULL);
+  self->kind = kind;
+  self->number = number;
+  self->dip = *dip;
+  self->upper_limit_ppm = upper_limit_ppm;
+  return self;
+}
+
+AntDipKind
+ant_dip_item_get_kind (AntDipItem *self)
+{
+  return self->kind;
+}
+
+guint
+ant_dip_item_get_number (AntDipItem *self)
+{
+  return self->number;
+}
+
+const AntDip *
+ant_dip_item_get_dip (AntDipItem *self)
+{
+  return &self->dip;
+}
+
+double
+ant_dip_item_get_upper_limit_ppm (AntDipItem *self)
+{
+  return self->upper_limit_ppm;
+}
+
+AntDipClass
+ant_dip_item_get_class (AntDipItem *self)
+{
+  return self->class;
+}
+
+const char *
+ant_dip_item_get_note (AntDipItem *self)
+{
+  return self->note;
+}
+
+void
+ant_dip_item_judge (AntDipItem *self, AntDipClass class, const char *note)
+{
+  if (self->class == class && g_str_equal (self->note, note))
+    return;
+  self->class = class;
+  g_free (self->note);
+  self->note = g_strdup (note);
+  g_object_notify_by_pspec (G_OBJECT (self), properties[PROP_JUDGEMENT]);
+}
+
+char *
+ant_dip_item_title (AntDipItem *self)
+{
+  switch (self->kind)
+    {
+    case ANT_KIND_BRIGHTENING:
+      return g_strdup_printf (_("Brightening %u"), self->number);
+    case ANT_KIND_ASKED:
+      return g_strdup_printf (_("Asked dip %u"), self->number);
+    case ANT_KIND_DIP:
+    default:
+      return g_strdup_printf (_("Dip %u"), self->number);
+    }
+}
+
+char *
+ant_dip_item_label (AntDipItem *self)
+{
+  const char *sign = self->kind == ANT_KIND_BRIGHTENING ? "+" : self->kind == ANT_KIND_ASKED ? "?" : "";
+  return g_strdup_printf ("%s%u", sign, self->number);
+}
+
+AntDipLook
+ant_dip_item_look (AntDipItem *self)
+{
+  static const AntDipLook looks[ANT_N_CLASSES] = {
+    [ANT_CLASS_UNDECIDED] = ANT_LOOK_UNDECIDED, [ANT_CLASS_PLANET] = ANT_LOOK_PLANET,
+    [ANT_CLASS_PLANET_SHAPED] = ANT_LOOK_PLANET_SHAPED, [ANT_CLASS_SPOT] = ANT_LOOK_SPOT,
+    [ANT_CLASS_ECLIPSE] = ANT_LOOK_ECLIPSE, [ANT_CLASS_INSTRUMENT] = ANT_LOOK_INSTRUMENT,
+    [ANT_CLASS_NOISE] = ANT_LOOK_NOISE,
+  };
+  return looks[self->class];
+}
+
+static void
+ant_dip_item_finalize (GObject *object)
+{
+  g_free (ANT_DIP_ITEM (object)->note);
+  G_OBJECT_CLASS (ant_dip_item_parent_class)->finalize (object);
+}
+
+static void
+ant_dip_item_get_property (GObject *object, guint id, GValue *value, GParamSpec *pspec)
+{
+  g_value_set_int (value, (int) ANT_DIP_ITEM (object)->class);
+}
+
+static void
+ant_dip_item_class_init (AntDipItemClass *klass)
+{
+  GObjectClass *object_class = G_OBJECT_CLASS (klass);
+  object_class->finalize = ant_dip_item_finalize;
+  object_class->get_property = ant_dip_item_get_property;
+  properties[PROP_JUDGEMENT] = g_param_spec_int ("judgement", NULL, NULL, 0, ANT_N_CLASSES - 1, 0,
+                                                 G_PARAM_READABLE | G_PARAM_EXPLICIT_NOTIFY | G_PARAM_STATIC_STRINGS);
+  g_object_class_install_properties (object_class, N_PROPS, properties);
+}
+
+static void
+ant_dip_item_init (AntDipItem *self)
+{
+  self->note = g_strdup ("");
+}

@@ -1,0 +1,35 @@
+/* dip-item.h - one row of the list of dips: a dip, a brightening or an asked dip, with the analyst's word on it. */
+#pragma once
+
+#include <gio/gio.h>
+#include "data/judgement.h"
+#include "plot/dip-mark.h"
+#include "search/dip.h"
+
+typedef enum
+{
+  ANT_KIND_DIP = 1 << 0,
+  ANT_KIND_BRIGHTENING = 1 << 1,
+  ANT_KIND_ASKED = 1 << 2,
+} AntDipKind;
+
+#define ANT_TYPE_DIP_ITEM (ant_dip_item_get_type ())
+G_DECLARE_FINAL_TYPE (AntDipItem, ant_dip_item, ANT, DIP_ITEM, GObject)
+
+/* upper_limit_ppm: of an asked dip, else NaN. number: from 1 within its kind. */
+AntDipItem *ant_dip_item_new (AntDipKind kind, guint number, const AntDip *dip, double upper_limit_ppm);
+AntDipKind ant_dip_item_get_kind (AntDipItem *self);
+guint ant_dip_item_get_number (AntDipItem *self);
+const AntDip *ant_dip_item_get_dip (AntDipItem *self);
+double ant_dip_item_get_upper_limit_ppm (AntDipItem *self);
+
+/* Property "judgement" (int, read) is notified when either changes. */
+AntDipClass ant_dip_item_get_class (AntDipItem *self);
+const char *ant_dip_item_get_note (AntDipItem *self);
+void ant_dip_item_judge (AntDipItem *self, AntDipClass class, const char *note);
+
+/* "Dip 3", "Brightening 1", "Asked dip 2". Caller frees. */
+char *ant_dip_item_title (AntDipItem *self);
+/* The same as short as a list has it: "3", "+1", "?2". Caller frees. */
+char *ant_dip_item_label (AntDipItem *self);
+AntDipLook ant_dip_item_look (AntDipItem *self);

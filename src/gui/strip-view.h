@@ -1,0 +1,20 @@
+/* strip-view.h - a strip of the time stack as a widget: irradiance with its rotation curve, or what that leaves.
+ *
+ * Wheel: zoom at the pointer, sideways or with Shift: pan. Drag: pan; with Shift, or when measuring: draw a span, and
+ * measure the dip in it. Click: select a dip, twice: see it from near. Keys: + - zoom, Left Right pan, Home whole, with
+ * Shift Left Right a span, Return measures it, Escape forgets it. */
+#pragma once
+
+#include "gui/plot-view.h"
+
+typedef enum
+{
+  ANT_STRIP_IRRADIANCE,
+  ANT_STRIP_RESIDUAL,
+} AntStripKind;
+
+#define ANT_TYPE_STRIP_VIEW (ant_strip_view_get_type ())
+G_DECLARE_FINAL_TYPE (AntStripView, ant_strip_view, ANT, STRIP_VIEW, AntPlotView)
+
+/* A new one shows irradiance. */
+void ant_strip_view_set_kind (AntStripView *self, AntStripKind kind);

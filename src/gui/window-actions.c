@@ -1,0 +1,397 @@
+/* window-actions.c - all that a window can do, and when. Buttons, menus, keys and tests name these actions and nothing
+ * else. */
+#include <glib/gi18n.h>
+#include <math.h>
+
+#include "gui/file-prompt.h"
+#include "gui/preferences.h"
+#include "gui/shortcuts.h"
+#include "gui/window-private.h"
+#include "writers/dip-table.h"
+#include "writers/flags-table.h"
+#include "writers/whole-file.h"
+
+#define VIEW_ZOOM 1.5
+#define VIEW_PAN 0.2
+
+/* What must hold for an action to make sense. */
+enum
+{
+  NEEDS_RECORD = 1 << 0,
+  NEEDS_RESULTS = 1 << 1,
+  NEEDS_MARKS = 1 << 2,
+  NEEDS_SELECTION = 1 << 3,
+  NEEDS_WORK = 1 << 4, /* something is running */
+  NEEDS_BACK = 1 << 5,
+  NEEDS_FORWARD = 1 << 6,
+  NEEDS_PLACE = 1 << 7, /* a span or a selection to go to */
+  NEEDS_NO_SCAN = 1 << 8,
+};
+
+static const char *const average_names[] = { "none", "10min", "1h", "6h", "1d" };
+
+static void
+open_path_cb (const char *path, gpointer data)
+{
+  AntWindow *self = data;
+  if (path)
+    ant_window_open (self, path);
+  g_object_unref (self);
+}
+
+static void
+open_record (AntWindow *self, GVariant *parameter)
+{
+  ant_file_prompt_open (GTK_WINDOW (self), _("Open a Record"), open_path_cb, g_object_ref (self));
+}
+
+static void
+open_named (AntWindow *self, GVariant *parameter)
+{
+  ant_window_open (self, g_variant_get_string (parameter, NULL));
+}
+
+static void
+reload (AntWindow *self, GVariant *parameter)
+{
+  g_autofree char *path = g_strdup (ant_desk_get_record (self->desk)->path);
+  ant_desk_open (self->desk, path);
+}
+
+static void
+close_window (AntWindow *self, GVariant *parameter)
+{
+  gtk_window_close (GTK_WINDOW (self));
+}
+
+static void
+scan (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_scan (self->desk);
+}
+
+static void
+stop (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_stop (self->desk);
+}
+
+static void
+measure (AntWindow *self, GVariant *parameter)
+{
+  AntSpan span;
+  if (ant_desk_get_span (self->desk, &span))
+    ant_desk_ask (self->desk, span.start_d, span.end_d);
+  else
+    ant_desk_set_measuring (self->desk, !ant_desk_get_measuring (self->desk));
+}
+
+static void
+reset_settings (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_reset_settings (self->desk);
+}
+
+static void
+hidden_cb (GtkRevealer *revealer)
+{
+  if (!gtk_revealer_get_reveal_child (revealer))
+    gtk_widget_set_visible (GTK_WIDGET (revealer), FALSE);
+}
+
+static void
+show_settings (AntWindow *self, gboolean shown)
+{
+  if (shown)
+    gtk_widget_set_visible (GTK_WIDGET (self->settings_revealer), TRUE);
+  gtk_revealer_set_reveal_child (self->settings_revealer, shown);
+  if (!shown && !gtk_revealer_get_child_revealed (self->settings_revealer))
+    hidden_cb (self->settings_revealer);
+}
+
+static void
+toggle_settings (AntWindow *self, GVariant *state)
+{
+  show_settings (self, g_variant_get_boolean (state));
+  ant_preferences_set_settings_shown (g_variant_get_boolean (state));
+}
+
+static void
+toggle_unit (AntWindow *self, GVariant *state)
+{
+  ant_desk_set_unit (self->desk, g_variant_get_boolean (state) ? ANT_DEPTH_W_M2 : ANT_DEPTH_PPM);
+}
+
+static void
+choose_average (AntWindow *self, GVariant *state)
+{
+  for (int i = 0; i < (int) G_N_ELEMENTS (average_names); i++)
+    if (g_str_equal (average_names[i], g_variant_get_string (state, NULL)))
+      ant_desk_set_average (self->desk, i - 1);
+}
+
+static void
+next_average (AntWindow *self, GVariant *parameter)
+{
+  guint next = (guint) (ant_desk_get_average (self->desk) + 2) % G_N_ELEMENTS (average_names);
+  g_action_group_change_action_state (G_ACTION_GROUP (self), "average", g_variant_new_string (average_names[next]));
+}
+
+static void
+choose_page (AntWindow *self, GVariant *state)
+{
+  if (gtk_stack_get_child_by_name (self->pages, g_variant_get_string (state, NULL)))
+    gtk_stack_set_visible_child_name (self->pages, g_variant_get_string (state, NULL));
+}
+
+static void
+view_in (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_zoom (self->desk, VIEW_ZOOM, ant_desk_get_pointer (self->desk));
+}
+
+static void
+view_out (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_zoom (self->desk, 1 / VIEW_ZOOM, ant_desk_get_pointer (self->desk));
+}
+
+static void
+view_whole (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_view_whole (self->desk);
+}
+
+static void
+view_selected (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_view_selected (self->desk);
+}
+
+static void
+view_earlier (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_pan (self->desk, -VIEW_PAN);
+}
+
+static void
+view_later (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_pan (self->desk, VIEW_PAN);
+}
+
+static void
+view_back (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_go (self->desk, -1);
+}
+
+static void
+view_forward (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_go (self->desk, 1);
+}
+
+static void
+next_dip (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_select_next (self->desk, 1);
+}
+
+static void
+previous_dip (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_select_next (self->desk, -1);
+}
+
+static void
+give_verdict (AntWindow *self, GVariant *parameter)
+{
+  AntDipClass class;
+  if (ant_dip_class_parse (g_variant_get_string (parameter, NULL), &class))
+    ant_desk_judge (self->desk, class);
+}
+
+static void
+write_note (AntWindow *self, GVariant *parameter)
+{
+  gtk_stack_set_visible_child_name (self->pages, "dips");
+  ant_dips_page_focus_note (self->dips_page);
+}
+
+static void
+filter (AntWindow *self, GVariant *parameter)
+{
+  gtk_stack_set_visible_child_name (self->pages, "dips");
+  ant_dips_page_focus_filter (self->dips_page);
+}
+
+static void
+copy_dip (AntWindow *self, GVariant *parameter)
+{
+  AntDipItem *item = ant_desk_get_selected (self->desk);
+  g_autoptr (GPtrArray) facts = ant_dip_facts (ant_desk_get_record (self->desk), ant_dip_item_get_dip (item),
+                                               ant_dip_item_get_upper_limit_ppm (item), ant_desk_get_unit (self->desk));
+  g_autofree char *text = ant_facts_text (facts);
+  gdk_clipboard_set_text (gtk_widget_get_clipboard (GTK_WIDGET (self)), text);
+}
+
+static void
+write_table (AntWindow *self, const char *path, GString *text)
+{
+  g_autoptr (GError) error = NULL;
+  AntWholeFile *file = ant_whole_file_open (path, TRUE, &error);
+  if (file)
+    {
+      fwrite (text->str, 1, text->len, ant_whole_file_stream (file));
+      ant_whole_file_commit (file, &error);
+    }
+  if (error)
+    ant_window_complain (self, error->message);
+  g_string_free (text, TRUE);
+}
+
+static void
+save_list_cb (const char *path, gpointer data)
+{
+  g_autoptr (AntWindow) self = data;
+  const AntScanResults *results = ant_desk_get_results (self->desk);
+  if (!path || !results)
+    return;
+  AntDipList list = ant_scan_results_list (results, ant_desk_get_shown (self->desk) == ANT_KIND_BRIGHTENING);
+  write_table (self, path, ant_dip_table_text (results->record, &list));
+}
+
+static void
+save_list (AntWindow *self, GVariant *parameter)
+{
+  gboolean brightenings = ant_desk_get_shown (self->desk) == ANT_KIND_BRIGHTENING;
+  ant_file_prompt_save (GTK_WINDOW (self), _("Save the List as CSV"), brightenings ? "brightenings.csv" : "dips.csv",
+                        save_list_cb, g_object_ref (self));
+}
+
+static void
+save_flags_cb (const char *path, gpointer data)
+{
+  g_autoptr (AntWindow) self = data;
+  const AntRecord *record = ant_desk_get_record (self->desk);
+  const AntScanResults *results = ant_desk_get_results (self->desk);
+  if (path && record)
+    write_table (self, path, ant_flags_table_text (record, results ? results->flags : record->flags));
+}
+
+static void
+save_flags (AntWindow *self, GVariant *parameter)
+{
+  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Flags as CSV"), "flags.csv", save_flags_cb, g_object_ref (self));
+}
+
+static void
+show_shortcuts (AntWindow *self, GVariant *parameter)
+{
+  GtkWidget *window = ant_shortcuts_window_new ();
+  gtk_window_set_transient_for (GTK_WINDOW (window), GTK_WINDOW (self));
+  gtk_window_present (GTK_WINDOW (window));
+}
+
+/* The table: a state makes an action a toggle or a choice, whose `run` takes the new state. */
+typedef struct
+{
+  const char *name, *parameter, *state;
+  void (*run) (AntWindow *self, GVariant *value);
+  unsigned needs;
+} Action;
+
+static const Action actions[] = {
+  { "open", NULL, NULL, open_record, 0 },
+  { "open-recent", "s", NULL, open_named, 0 },
+  { "reload", NULL, NULL, reload, NEEDS_RECORD | NEEDS_NO_SCAN },
+  { "close", NULL, NULL, close_window, 0 },
+  { "save-list", NULL, NULL, save_list, NEEDS_RESULTS },
+  { "save-flags", NULL, NULL, save_flags, NEEDS_RECORD },
+  { "scan", NULL, NULL, scan, NEEDS_RECORD | NEEDS_NO_SCAN },
+  { "stop", NULL, NULL, stop, NEEDS_WORK },
+  { "measure", NULL, NULL, measure, NEEDS_RECORD | NEEDS_NO_SCAN },
+  { "settings", NULL, "false", toggle_settings, 0 },
+  { "reset-settings", NULL, NULL, reset_settings, 0 },
+  { "own-unit", NULL, "false", toggle_unit, NEEDS_RECORD },
+  { "average", "s", "'1h'", choose_average, NEEDS_RECORD },
+  { "next-average", NULL, NULL, next_average, NEEDS_RECORD },
+  { "page", "s", "'dips'", choose_page, NEEDS_RECORD },
+  { "view-in", NULL, NULL, view_in, NEEDS_RECORD },
+  { "view-out", NULL, NULL, view_out, NEEDS_RECORD },
+  { "view-whole", NULL, NULL, view_whole, NEEDS_RECORD },
+  { "view-selected", NULL, NULL, view_selected, NEEDS_PLACE },
+  { "view-earlier", NULL, NULL, view_earlier, NEEDS_RECORD },
+  { "view-later", NULL, NULL, view_later, NEEDS_RECORD },
+  { "view-back", NULL, NULL, view_back, NEEDS_BACK },
+  { "view-forward", NULL, NULL, view_forward, NEEDS_FORWARD },
+  { "next-dip", NULL, NULL, next_dip, NEEDS_MARKS },
+  { "previous-dip", NULL, NULL, previous_dip, NEEDS_MARKS },
+  { "verdict", "s", NULL, give_verdict, NEEDS_SELECTION },
+  { "note", NULL, NULL, write_note, NEEDS_SELECTION },
+  { "filter", NULL, NULL, filter, NEEDS_MARKS },
+  { "copy-dip", NULL, NULL, copy_dip, NEEDS_SELECTION },
+  { "shortcuts", NULL, NULL, show_shortcuts, 0 },
+};
+
+static void
+activated_cb (GSimpleAction *simple, GVariant *parameter, gpointer data)
+{
+  const Action *action = &actions[GPOINTER_TO_SIZE (g_object_get_data (G_OBJECT (simple), "action"))];
+  action->run (ANT_WINDOW (data), parameter);
+}
+
+static void
+state_cb (GSimpleAction *simple, GVariant *state, gpointer data)
+{
+  const Action *action = &actions[GPOINTER_TO_SIZE (g_object_get_data (G_OBJECT (simple), "action"))];
+  g_simple_action_set_state (simple, state);
+  action->run (ANT_WINDOW (data), state);
+}
+
+void
+ant_window_add_actions (AntWindow *self)
+{
+  for (gsize i = 0; i < G_N_ELEMENTS (actions); i++)
+    {
+      const Action *action = &actions[i];
+      const GVariantType *type = action->parameter ? G_VARIANT_TYPE (action->parameter) : NULL;
+      g_autoptr (GVariant) state = action->state ? g_variant_new_parsed (action->state) : NULL;
+      g_autoptr (GSimpleAction) simple = action->state
+                                             ? g_simple_action_new_stateful (action->name, type, g_variant_ref_sink (state))
+                                             : g_simple_action_new (action->name, type);
+      g_object_set_data (G_OBJECT (simple), "action", GSIZE_TO_POINTER (i));
+      if (action->state)
+        g_signal_connect (simple, "change-state", G_CALLBACK (state_cb), self);
+      else
+        g_signal_connect (simple, "activate", G_CALLBACK (activated_cb), self);
+      g_action_map_add_action (G_ACTION_MAP (self), G_ACTION (simple));
+    }
+  g_signal_connect (self->settings_revealer, "notify::child-revealed", G_CALLBACK (hidden_cb), NULL);
+}
+
+static unsigned
+present_state (AntDesk *desk)
+{
+  const AntDipMark *marks;
+  AntSpan span;
+  gboolean record = ant_desk_get_record (desk) != NULL, selection = ant_desk_get_selected (desk) != NULL;
+  return (record ? NEEDS_RECORD : 0u) | (ant_desk_get_results (desk) ? NEEDS_RESULTS : 0u)
+         | (ant_desk_get_marks (desk, &marks) > 0 ? NEEDS_MARKS : 0u) | (selection ? NEEDS_SELECTION : 0u)
+         | (ant_desk_get_busy (desk) != ANT_BUSY_NO ? NEEDS_WORK : 0u) | (ant_desk_can_go (desk, -1) ? NEEDS_BACK : 0u)
+         | (ant_desk_can_go (desk, 1) ? NEEDS_FORWARD : 0u)
+         | (selection || (record && ant_desk_get_span (desk, &span)) ? NEEDS_PLACE : 0u)
+         | (ant_desk_get_busy (desk) == ANT_BUSY_NO ? NEEDS_NO_SCAN : 0u);
+}
+
+void
+ant_window_update_actions (AntWindow *self)
+{
+  unsigned state = present_state (self->desk);
+  for (gsize i = 0; i < G_N_ELEMENTS (actions); i++)
+    {
+      GAction *action = g_action_map_lookup_action (G_ACTION_MAP (self), actions[i].name);
+      g_simple_action_set_enabled (G_SIMPLE_ACTION (action), (state & actions[i].needs) == actions[i].needs);
+    }
+}

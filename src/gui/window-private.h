@@ -1,0 +1,40 @@
+/* window-private.h - inside of the window, shared by its two files. */
+#pragma once
+
+#include "gui/dips-page.h"
+#include "gui/noise-page.h"
+#include "gui/record-page.h"
+#include "gui/settings-panel.h"
+#include "gui/time-stack.h"
+#include "gui/window.h"
+
+struct _AntWindow
+{
+  GtkApplicationWindow parent_instance;
+
+  /* From the template */
+  GtkLabel *title, *subtitle, *banner_text, *welcome, *welcome_more, *status;
+  GtkMenuButton *recent_button;
+  GtkButton *scan;
+  GtkWidget *welcome_open;
+  GtkSpinner *spinner;
+  GtkInfoBar *banner;
+  GtkStack *stack, *pages;
+  GtkListBox *recent;
+  GtkPaned *paned;
+  AntTimeStack *time_stack;
+  GtkProgressBar *progress;
+  AntRecordPage *record_page;
+  AntNoisePage *noise_page;
+  AntDipsPage *dips_page;
+  GtkRevealer *settings_revealer;
+  AntSettingsPanel *settings_panel;
+
+  /* Owned */
+  AntDesk *desk;
+};
+
+/* Install the actions on a new window, and grey out those that make no sense now. */
+void ant_window_add_actions (AntWindow *self);
+void ant_window_update_actions (AntWindow *self);
+void ant_window_complain (AntWindow *self, const char *sentence);

@@ -1,0 +1,77 @@
+/* closeup-data.c - collect a dip's surroundings. */
+#include "jobs/closeup-data.h"
+
+#include <glib/gi18n.h>
+#include <math.h>
+
+#include "core/robust.h"
+#include "core/units.h"
+#include "search/crossing-shape.h"
+
+#define MOST_POINTS 160
+#define SHAPE_POINTS 241
+#define HALF_WIDTH 1.4 /* of a close-up, in durations */
+
+static void
+draw_shape (AntCloseupData *data, const AntSettings *settings, const AntDip *dip, double exposure_d)
+{
+  double *hours = data->curve, *ppm = data->curve + SHAPE_POINTS;
+  AntCrossingShape shape;
+  double edge_d = CLAMP (dip->edge_d, 1e-6 * dip->duration_d, dip->duration_d / 2);
+  ant_crossing_shape_init (&shape, dip->duration_d, edge_d, ANT_SHAPE_IMPACT, settings->bank.limb_darkening);
+  for (int i = 0; i < SHAPE_POINTS; i++)
+    {
+      double time_d = HALF_WIDTH * dip->duration_d * (2.0 * i / (SHAPE_POINTS - 1) - 1);
+      hours[i] = time_d * ANT_HOURS_PER_DAY;
+      ppm[i] = -dip->depth_ppm * ant_crossing_shape_mean (&shape, time_d, exposure_d);
+    }
+  data->shape[0] = (AntShapeLine) { _("fitted crossing"), SHAPE_POINTS, hours, ppm };
+}
+
+/* The rotation curve is for looking only: what it leaves beside the dip is not quite zero, and the shape stands on that. */
+static void
+level (AntCloseupData *data, const AntSettings *settings, const AntDip *dip, double exposure_d)
+{
+  gsize n = data->closeup.n;
+  double *ppm = data->points + MOST_POINTS;
+  AntCrossingShape shape;
+  double edge_d = CLAMP (dip->edge_d, 1e-6 * dip->duration_d, dip->duration_d / 2);
+  ant_crossing_shape_init (&shape, dip->duration_d, edge_d, ANT_SHAPE_IMPACT, settings->bank.limb_darkening);
+  double above[MOST_POINTS];
+  gsize n_above = 0;
+  for (gsize i = 0; i < n; i++)
+    if (isfinite (ppm[i]))
+      above[n_above++] = ppm[i] + dip->depth_ppm * ant_crossing_shape_mean (&shape, data->points[i] / ANT_HOURS_PER_DAY, exposure_d);
+  double median = ant_median (n_above, above, above);
+  for (gsize i = 0; i < n && isfinite (median); i++)
+    ppm[i] -= median;
+}
+
+AntCloseupData *
+ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, const AntDip *dip)
+{
+  const AntSeries *series = &layers->record->series;
+  double exposure_d = layers->record->exposure_d > 0 ? layers->record->exposure_d : series->step_d;
+  AntCloseupData *data = g_new0 (AntCloseupData, 1);
+  data->points = g_new (double, 3 * MOST_POINTS);
+  data->curve = g_new (double, 2 * SHAPE_POINTS);
+  double *hours = data->points, *ppm = hours + MOST_POINTS, *error = ppm + MOST_POINTS;
+  gsize n = ant_dip_closeup_points (series->n, layers->residual_ppm, series->start_d, series->step_d, dip->mid_d,
+                                    HALF_WIDTH * dip->duration_d, NAN, MOST_POINTS, hours, ppm, error);
+  double half_h = dip->duration_d / 2 * ANT_HOURS_PER_DAY;
+  data->closeup = (AntDipCloseup) { .n = n, .hours = hours, .ppm = ppm, .error_ppm = error, .n_shapes = 1,
+                                    .shape = data->shape, .contact_h = { -half_h, half_h } };
+  draw_shape (data, settings, dip, exposure_d);
+  level (data, settings, dip, exposure_d);
+  return data;
+}
+
+void
+ant_closeup_data_free (AntCloseupData *data)
+{
+  if (!data)
+    return;
+  g_free (data->points);
+  g_free (data->curve);
+  g_free (data);
+}

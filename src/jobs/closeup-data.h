@@ -1,0 +1,18 @@
+/* closeup-data.h - one dip's surroundings, ready for the close-up painter: samples or their averages about the level
+ * beside the dip, and the shape that was fitted. */
+#pragma once
+
+#include "data/settings.h"
+#include "jobs/layers.h"
+#include "plot/dip-closeup.h"
+
+typedef struct
+{
+  AntDipCloseup closeup; /* its arrays belong to this struct */
+  AntShapeLine shape[1];
+  double *points, *curve;
+} AntCloseupData;
+
+/* A millisecond of work. Never NULL; no points where nothing was observed. */
+AntCloseupData *ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, const AntDip *dip);
+void ant_closeup_data_free (AntCloseupData *data); /* NULL is fine */

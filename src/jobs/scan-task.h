@@ -1,0 +1,42 @@
+/* scan-task.h - a scan, or an asked dip, without holding up the main loop. */
+#pragma once
+
+#include <gio/gio.h>
+#include "data/scan-results.h"
+#include "jobs/layers.h"
+
+typedef struct
+{
+  const char *title;      /* of the stage, untranslated; NULL until the first has begun */
+  gsize stage, n_stages;  /* from 0 */
+  double fraction;        /* of the whole, every stage counting alike, 0..1 */
+  double stage_left_s;    /* until this stage's end at its pace so far; NaN while unknown */
+} AntTaskProgress;
+typedef void (*AntTaskProgressFunc) (const AntTaskProgress *progress, gpointer data);
+
+typedef struct
+{
+  AntScanResults *results;
+  AntLayers *layers;      /* the record again, with the found dips masked in its rotation curve */
+} AntScanOutcome;
+void ant_scan_outcome_free (AntScanOutcome *outcome);
+G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntScanOutcome, ant_scan_outcome_free)
+
+/* progress is called in the caller's context, about ten times a second, never after the callback began; `data` goes to
+ * both. The task keeps a reference to the layers and a copy of the settings. */
+void ant_scan_task_async (AntLayers *layers, const AntSettings *settings, GCancellable *cancellable,
+                          AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data);
+/* NULL with one sentence; G_IO_ERROR_CANCELLED if stopped. */
+AntScanOutcome *ant_scan_task_finish (GAsyncResult *result, GError **error);
+
+typedef struct
+{
+  AntDip dip;
+  double upper_limit_ppm; /* one-sided 95 % limit of its depth */
+} AntAskedDip;
+
+/* Measure the dip that would stand at mid_d for duration_d, contact I to IV. */
+void ant_ask_task_async (AntLayers *layers, const AntSettings *settings, double mid_d, double duration_d,
+                         GCancellable *cancellable, GAsyncReadyCallback callback, gpointer data);
+/* NULL with one sentence; else the caller frees by g_free. */
+AntAskedDip *ant_ask_task_finish (GAsyncResult *result, GError **error);
