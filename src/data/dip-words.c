@@ -67,6 +67,29 @@ ant_instant_words (const AntRecord *record, double time_d)
   return utc;
 }
 
+static gboolean
+in_one_year (const AntRecord *record)
+{
+  const AntSeries *series = &record->series;
+  g_autofree char *first = ant_instant_words (record, series->start_d);
+  g_autofree char *last = ant_instant_words (record, ant_series_time (series, (double) series->n - 1));
+  return strncmp (first, last, 5) == 0;
+}
+
+char *
+ant_instant_short (const AntRecord *record, double time_d)
+{
+  static const char *const months[] = { N_("Jan"), N_("Feb"), N_("Mar"), N_("Apr"), N_("May"), N_("Jun"),
+                                        N_("Jul"), N_("Aug"), N_("Sep"), N_("Oct"), N_("Nov"), N_("Dec") };
+  char *full = ant_instant_words (record, time_d);
+  if (strlen (full) != 16 || full[4] != '-' || full[10] != ' ' || !in_one_year (record))
+    return full;
+  gsize month = (gsize) ((full[5] - '0') * 10 + full[6] - '0' - 1) % G_N_ELEMENTS (months);
+  char *text = g_strdup_printf ("%s %s", _ (months[month]), full + 8);
+  g_free (full);
+  return text;
+}
+
 /* Decimals that leave two figures of the uncertainty. */
 static int
 decimals_for (double sigma)
@@ -127,8 +150,8 @@ ant_radius_words (const AntDip *dip)
     return g_strdup (_("none"));
   double km = dip->radius_ratio * ANT_SUN_RADIUS_KM;
   double rounding = pow (10, floor (log10 (km)) - 2);
-  return g_strdup_printf (_("%.4f of the Sun's, %.0f km, %.2f Earth radii"), dip->radius_ratio,
-                          round (km / rounding) * rounding, km / ANT_EARTH_RADIUS_KM);
+  return g_strdup_printf (_("%.0f km, %.2f Earth radii, %.4f solar"), round (km / rounding) * rounding,
+                          km / ANT_EARTH_RADIUS_KM, dip->radius_ratio);
 }
 
 static const char *
@@ -144,13 +167,9 @@ ant_dip_facts (const AntRecord *record, const AntDip *dip, double upper_limit_pp
 {
   GPtrArray *facts = g_ptr_array_new_with_free_func (ant_fact_free);
   g_autofree char *exact = ant_time_reference_utc_text (&record->time, dip->mid_d, 0);
-  gboolean utc = *exact != '\0';
-  g_autofree char *middle = ant_instant_words (record, dip->mid_d);
-  add_taking (facts, _("Middle"), g_strconcat (middle, utc ? " UTC" : "", NULL));
-  add_taking (facts, _("Contacts I to IV"), ant_length_words (dip->duration_d));
+  g_autofree char *middle = ant_instant_words (record, dip->mid_d), *length = ant_length_words (dip->duration_d);
   add_taking (facts, dip->depth_ppm < 0 ? _("Height") : _("Depth"), ant_depth_words (record, dip, unit));
-  add_taking (facts, _("Mean depth"), g_strdup_printf (_("%.1f ppm"), dip->mean_depth_ppm));
-  add_taking (facts, _("SNR"), isnan (dip->first_snr) || dip->first_snr == 0
+  add_taking (facts, _("SNR"), dip->first_snr == 0 || isnan (dip->first_snr)
                                    ? g_strdup_printf ("%.1f", dip->snr)
                                    : g_strdup_printf (_("%.1f (%.1f on the first pass)"), dip->snr, dip->first_snr));
   if (!isnan (upper_limit_ppm))
@@ -159,6 +178,9 @@ ant_dip_facts (const AntRecord *record, const AntDip *dip, double upper_limit_pp
     add_taking (facts, _("By chance"), ant_chance_words (dip->expected_false));
   if (dip->depth_ppm > 0)
     add_taking (facts, _("As a planet"), ant_radius_words (dip));
+  add_taking (facts, _("Middle"), g_strconcat (middle, *exact ? " UTC" : "", NULL));
+  add_taking (facts, _("Contacts I to IV"), g_strdup_printf (_("%s, ingress %.0f min"), length, dip->edge_d * ANT_MINUTES_PER_DAY));
+  add_taking (facts, _("Mean depth"), g_strdup_printf (_("%.1f ppm"), dip->mean_depth_ppm));
   add_taking (facts, _("Observed"), g_strdup_printf (_("%.0f %%, %s seen"), 100 * dip->coverage, edges_words (dip->edges)));
   return facts;
 }

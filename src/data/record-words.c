@@ -4,6 +4,8 @@
 #include <glib/gi18n.h>
 #include <math.h>
 
+#include "core/units.h"
+
 static void add (GPtrArray *facts, const char *label, const char *format, ...) G_GNUC_PRINTF (3, 4);
 
 static void
@@ -36,7 +38,10 @@ add_grid (GPtrArray *facts, const AntRecord *record, const AntRecordSummary *sum
   static const char *const places[] = { N_("unknown, taken as the middle"), N_("start"), N_("middle"), N_("end") };
   g_autofree char *cadence = ant_length_words (record->cadence_d), *exposure = ant_length_words (record->exposure_d);
   g_autofree char *jitter = ant_length_words (summary->jitter_most_d), *gap = ant_length_words (summary->longest_gap_d);
-  add (facts, _("Cadence"), _("%s, stamps within %s of the grid"), cadence, jitter);
+  if (summary->jitter_most_d * ANT_SECONDS_PER_DAY < 0.001)
+    add (facts, _("Cadence"), _("%s, every stamp on the grid"), cadence);
+  else
+    add (facts, _("Cadence"), _("%s, stamps within %s of the grid"), cadence, jitter);
   add (facts, _("Exposure"), record->exposure_known ? "%s" : _("unknown, %s used"), exposure);
   add (facts, _("Stamps mark"), "%s", _ (places[record->stamp]));
   add (facts, _("Samples"), _("%" G_GSIZE_FORMAT " of %" G_GSIZE_FORMAT " places, duty cycle %.1f %%"), summary->n_observed,

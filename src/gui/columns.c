@@ -4,6 +4,7 @@
 #define GAP 10
 #define WIDE 900  /* room for all */
 #define MIDDLE 560 /* room for two */
+#define FIRST_SHARE 1.2 /* the first is wider than each other by this */
 
 struct _AntColumns
 {
@@ -64,7 +65,9 @@ ant_columns_size_allocate (GtkWidget *widget, int width, int height, int baselin
   AntColumns *self = ANT_COLUMNS (widget);
   guint shown = width >= WIDE ? 3 : width >= MIDDLE ? 2 : 1;
   guint second = self->front == 0 ? 1 : self->front;
-  int x = 0, each = (width - GAP * ((int) shown - 1)) / (int) shown;
+  int room = width - GAP * ((int) shown - 1), x = 0;
+  int first = shown == 1 ? room : (int) (room * FIRST_SHARE / (FIRST_SHARE + shown - 1));
+  int other = shown == 1 ? room : (room - first) / ((int) shown - 1);
   guint index = 0;
   for (GtkWidget *child = gtk_widget_get_first_child (widget); child; child = gtk_widget_get_next_sibling (child), index++)
     {
@@ -72,8 +75,9 @@ ant_columns_size_allocate (GtkWidget *widget, int width, int height, int baselin
       gtk_widget_set_child_visible (child, fits);
       if (!fits)
         continue;
-      gtk_widget_size_allocate (child, &(GtkAllocation) { x, 0, each, height }, -1);
-      x += each + GAP;
+      int own = index == 0 ? first : other;
+      gtk_widget_size_allocate (child, &(GtkAllocation) { x, 0, own, height }, -1);
+      x += own + GAP;
     }
   if (shown == self->shown)
     return;

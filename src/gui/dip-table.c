@@ -43,7 +43,7 @@ typedef struct
 static char *
 middle_text (AntDesk *desk, AntDipItem *item)
 {
-  return ant_instant_words (ant_desk_get_record (desk), ant_dip_item_get_dip (item)->mid_d);
+  return ant_instant_short (ant_desk_get_record (desk), ant_dip_item_get_dip (item)->mid_d);
 }
 
 static char *
@@ -217,7 +217,7 @@ kept_cb (gpointer object, gpointer data)
   if (!self->desk || !(ant_dip_item_get_kind (item) & ant_desk_get_shown (self->desk)))
     return FALSE;
   g_autofree char *wanted = g_utf8_casefold (gtk_editable_get_text (GTK_EDITABLE (self->search)), -1);
-  g_autofree char *title = ant_dip_item_title (item), *middle = middle_text (self->desk, item);
+  g_autofree char *title = ant_dip_item_title (item), *middle = ant_instant_words (ant_desk_get_record (self->desk), ant_dip_item_get_dip (item)->mid_d);
   g_autofree char *all = g_strjoin ("\n", title, middle, ant_dip_class_title (ant_dip_item_get_class (item)),
                                     ant_dip_item_get_note (item), NULL);
   g_autofree char *folded = g_utf8_casefold (all, -1);

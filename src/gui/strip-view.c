@@ -36,6 +36,14 @@ has_axis (AntStripView *self)
   return self->kind == ANT_STRIP_RESIDUAL;
 }
 
+/* Irradiance is always told in the record's unit, if that is known; the residual in ppm unless asked otherwise. */
+static gboolean
+in_own_unit (AntStripView *self)
+{
+  const AntRecord *record = ant_desk_get_record (desk_of (self));
+  return record->value_unit && (self->kind == ANT_STRIP_IRRADIANCE || ant_desk_get_unit (desk_of (self)) == ANT_DEPTH_W_M2);
+}
+
 static void
 fill_strip (AntStripView *self, AntStrip *strip)
 {
@@ -43,7 +51,7 @@ fill_strip (AntStripView *self, AntStrip *strip)
   const AntLayers *layers = ant_desk_get_layers (desk);
   const AntSeries *series = &layers->record->series;
   int average = ant_desk_get_average (desk);
-  gboolean residual = self->kind == ANT_STRIP_RESIDUAL, own = ant_desk_get_unit (desk) == ANT_DEPTH_W_M2;
+  gboolean residual = self->kind == ANT_STRIP_RESIDUAL;
   *strip = (AntStrip) ANT_STRIP_INIT;
   strip->time = &layers->record->time;
   strip->start_d = series->start_d;
@@ -57,7 +65,7 @@ fill_strip (AntStripView *self, AntStrip *strip)
   strip->selected = ant_desk_get_selected_mark (desk);
   strip->brackets = residual;
   strip->time_axis = has_axis (self);
-  if (own)
+  if (in_own_unit (self))
     {
       strip->label_zero = residual ? 0 : layers->record->median;
       strip->label_per = layers->record->median * ANT_PPM;
@@ -332,8 +340,8 @@ name_by_unit (AntPlotView *plot)
   const AntRecord *record = ant_desk_get_record (desk);
   if (!record)
     return;
-  gboolean own = ant_desk_get_unit (desk) == ANT_DEPTH_W_M2 && record->value_unit;
-  const char *unit = !own ? "ppm" : g_str_equal (record->value_unit, "W/m2") ? "W/m²" : record->value_unit;
+  AntDepthUnit kind = in_own_unit (ANT_STRIP_VIEW (plot)) ? ANT_DEPTH_W_M2 : ANT_DEPTH_PPM;
+  const char *unit = ant_depth_unit_name (record, kind);
   const char *what = ANT_STRIP_VIEW (plot)->kind == ANT_STRIP_RESIDUAL ? _("Residual") : _("Irradiance");
   g_autofree char *title = g_strdup_printf ("%s, %s", what, unit);
   ant_plot_view_set_title (plot, title);

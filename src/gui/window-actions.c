@@ -315,7 +315,7 @@ static const Action actions[] = {
   { "settings", NULL, "false", toggle_settings, 0 },
   { "reset-settings", NULL, NULL, reset_settings, 0 },
   { "own-unit", NULL, "false", toggle_unit, NEEDS_RECORD },
-  { "average", "s", "'1h'", choose_average, NEEDS_RECORD },
+  { "average", "s", "'10min'", choose_average, NEEDS_RECORD },
   { "next-average", NULL, NULL, next_average, NEEDS_RECORD },
   { "page", "s", "'dips'", choose_page, NEEDS_RECORD },
   { "view-in", NULL, NULL, view_in, NEEDS_RECORD },

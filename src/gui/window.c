@@ -97,6 +97,7 @@ show_record (AntWindow *self)
   gtk_stack_set_visible_child_name (self->stack, layers ? "work" : "welcome");
   if (!layers)
     return;
+  gtk_widget_child_focus (GTK_WIDGET (self->time_stack), GTK_DIR_TAB_FORWARD);
   gtk_info_bar_set_revealed (self->banner, FALSE);
   ant_preferences_add_recent (layers->record->path);
   show_recent (self);
@@ -307,7 +308,7 @@ ant_window_init (AntWindow *self)
   g_signal_connect (self->desk, "changed", G_CALLBACK (desk_changed_cb), self);
   g_signal_connect_swapped (self->desk, "failed", G_CALLBACK (ant_window_complain), self);
   take_drops (self);
-  ant_desk_set_average (self->desk, 1);
+  ant_desk_set_average (self->desk, 0);
   gtk_stack_set_visible_child_name (self->pages, "dips");
   show_recent (self);
   desk_changed_cb (self->desk, ANT_DESK_EVERYTHING, self);
@@ -316,5 +317,5 @@ ant_window_init (AntWindow *self)
   int width = 1280, height = 800;
   ant_preferences_get_size (&width, &height);
   gtk_window_set_default_size (GTK_WINDOW (self), width, height);
-  gtk_paned_set_position (self->paned, height * 46 / 100);
+  gtk_paned_set_position (self->paned, height * 42 / 100);
 }
