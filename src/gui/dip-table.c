@@ -12,6 +12,7 @@ struct _AntDipTable
   GtkWidget parent_instance;
 
   /* From the template */
+  GtkWidget *content;
   GtkStack *stack;
   GtkColumnView *view;
   GtkDropDown *kinds;
@@ -397,6 +398,7 @@ ant_dip_table_class_init (AntDipTableClass *klass)
   G_OBJECT_CLASS (klass)->dispose = ant_dip_table_dispose;
   gtk_widget_class_set_template_from_resource (widget_class, "/org/antumbra/Antumbra/dip-table.ui");
   gtk_widget_class_set_layout_manager_type (widget_class, GTK_TYPE_BIN_LAYOUT);
+  gtk_widget_class_bind_template_child (widget_class, AntDipTable, content);
   gtk_widget_class_bind_template_child (widget_class, AntDipTable, stack);
   gtk_widget_class_bind_template_child (widget_class, AntDipTable, view);
   gtk_widget_class_bind_template_child (widget_class, AntDipTable, kinds);

@@ -8,7 +8,10 @@
 struct _AntSettingsPanel
 {
   GtkWidget parent_instance;
-  GtkBox *list; /* from the template */
+
+  /* From the template */
+  GtkWidget *content;
+  GtkBox *list;
 };
 
 G_DEFINE_FINAL_TYPE (AntSettingsPanel, ant_settings_panel, GTK_TYPE_WIDGET)
@@ -47,6 +50,7 @@ ant_settings_panel_class_init (AntSettingsPanelClass *klass)
   gtk_widget_class_set_template_from_resource (widget_class, "/org/antumbra/Antumbra/settings-panel.ui");
   gtk_widget_class_set_layout_manager_type (widget_class, GTK_TYPE_BIN_LAYOUT);
   gtk_widget_class_set_css_name (widget_class, "settingspanel");
+  gtk_widget_class_bind_template_child (widget_class, AntSettingsPanel, content);
   gtk_widget_class_bind_template_child (widget_class, AntSettingsPanel, list);
 }
 

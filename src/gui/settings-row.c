@@ -8,6 +8,7 @@ struct _AntSettingsRow
   GtkWidget parent_instance;
 
   /* From the template */
+  GtkWidget *content;
   GtkLabel *name, *help, *unit, *fault;
   GtkEntry *entry;
   GtkDropDown *words;
@@ -159,6 +160,7 @@ ant_settings_row_class_init (AntSettingsRowClass *klass)
   gtk_widget_class_set_css_name (widget_class, "settingsrow");
   gtk_widget_class_install_action (widget_class, "setting.reset", NULL, reset_action);
   gtk_widget_class_add_binding_action (widget_class, GDK_KEY_r, GDK_CONTROL_MASK, "setting.reset", NULL);
+  gtk_widget_class_bind_template_child (widget_class, AntSettingsRow, content);
   gtk_widget_class_bind_template_child (widget_class, AntSettingsRow, name);
   gtk_widget_class_bind_template_child (widget_class, AntSettingsRow, help);
   gtk_widget_class_bind_template_child (widget_class, AntSettingsRow, unit);

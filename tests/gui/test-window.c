@@ -1,0 +1,229 @@
+/* test-window.c - the window as a whole: opening, scanning, stopping, closing. */
+#include "gui/shortcuts.h"
+#include "support.h"
+
+static gboolean
+is_enabled (AntWindow *window, const char *name)
+{
+  return g_action_group_get_action_enabled (G_ACTION_GROUP (window), name);
+}
+
+static void
+an_empty_window_offers_to_open (void)
+{
+  AntWindow *window = test_gui_window ();
+  g_assert_true (ant_window_is_empty (window));
+  g_assert_true (is_enabled (window, "open"));
+  g_assert_false (is_enabled (window, "scan"));
+  g_assert_false (is_enabled (window, "next-dip"));
+  g_assert_false (is_enabled (window, "view-whole"));
+  test_gui_close (window);
+}
+
+static void
+opening_shows_the_whole_record (void)
+{
+  AntWindow *window = test_gui_window_with_record ();
+  AntDesk *desk = ant_window_get_desk (window);
+  g_assert_cmpstr (gtk_window_get_title (GTK_WINDOW (window)), ==, "record.csv");
+  g_assert_cmpfloat (ant_desk_get_view (desk)->to - ant_desk_get_view (desk)->from, >, 15.9);
+  g_assert_true (is_enabled (window, "scan"));
+  g_assert_false (is_enabled (window, "save-list"));
+  test_gui_close (window);
+}
+
+static void
+a_bad_record_is_told_in_the_banner (void)
+{
+  AntWindow *window = test_gui_window ();
+  GtkInfoBar *banner = test_gui_find (window, GTK_TYPE_INFO_BAR);
+  ant_window_open (window, test_gui_bad_record ());
+  test_gui_wait (test_gui_idle, ant_window_get_desk (window), 20);
+  g_assert_true (gtk_info_bar_get_revealed (banner));
+  g_assert_null (ant_desk_get_record (ant_window_get_desk (window)));
+  ant_window_open (window, test_gui_record ());
+  test_gui_wait (test_gui_idle, ant_window_get_desk (window), 20);
+  g_assert_false (gtk_info_bar_get_revealed (banner));
+  test_gui_close (window);
+}
+
+static void
+a_bad_record_leaves_the_good_one_open (void)
+{
+  AntWindow *window = test_gui_window_with_record ();
+  ant_window_open (window, test_gui_bad_record ());
+  test_gui_wait (test_gui_idle, ant_window_get_desk (window), 20);
+  g_assert_cmpstr (gtk_window_get_title (GTK_WINDOW (window)), ==, "record.csv");
+  test_gui_close (window);
+}
+
+static void
+a_scan_finds_the_planted_dip (void)
+{
+  AntWindow *window = test_gui_window_scanned ();
+  AntDesk *desk = ant_window_get_desk (window);
+  const AntDipMark *mark;
+  g_assert_cmpuint (ant_desk_get_marks (desk, &mark), ==, 1);
+  g_assert_cmpfloat_with_epsilon (mark[0].depth_ppm, 900, 60);
+  g_assert_cmpfloat_with_epsilon (mark[0].duration_d * 24, 6, 0.5);
+  g_assert_true (is_enabled (window, "next-dip"));
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.next-dip", NULL);
+  g_assert_cmpuint (ant_desk_get_selected_mark (desk), ==, 0);
+  g_assert_true (is_enabled (window, "copy-dip"));
+  test_gui_close (window);
+}
+
+static void
+a_verdict_and_a_note_outlive_a_scan (void)
+{
+  AntWindow *window = test_gui_window_scanned ();
+  AntDesk *desk = ant_window_get_desk (window);
+  ant_desk_select_mark (desk, 0);
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.verdict", "s", "planet");
+  ant_desk_note (desk, "as predicted");
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.scan", NULL);
+  test_gui_wait (test_gui_idle, desk, 120);
+  AntDipItem *item = ant_desk_get_selected (desk);
+  g_assert_nonnull (item);
+  g_assert_cmpint (ant_dip_item_get_class (item), ==, ANT_CLASS_PLANET);
+  g_assert_cmpstr (ant_dip_item_get_note (item), ==, "as predicted");
+  test_gui_close (window);
+}
+
+static void
+a_changed_setting_makes_the_results_stale (void)
+{
+  AntWindow *window = test_gui_window_scanned ();
+  AntDesk *desk = ant_window_get_desk (window);
+  g_assert_false (ant_desk_is_stale (desk));
+  g_assert_true (ant_desk_set_setting (desk, ant_setting_find ("duration-max"), "8", NULL));
+  g_assert_true (ant_desk_is_stale (desk));
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.reset-settings", NULL);
+  g_assert_false (ant_desk_is_stale (desk));
+  test_gui_close (window);
+}
+
+static void
+a_setting_of_the_grid_reads_the_record_again (void)
+{
+  AntWindow *window = test_gui_window_scanned ();
+  AntDesk *desk = ant_window_get_desk (window);
+  g_assert_true (ant_desk_set_setting (desk, ant_setting_find ("exposure"), "300", NULL));
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.scan", NULL);
+  test_gui_wait (test_gui_idle, desk, 120);
+  g_assert_cmpfloat_with_epsilon (ant_desk_get_record (desk)->exposure_d, 300 / 86400.0, 1e-9);
+  g_assert_nonnull (ant_desk_get_results (desk));
+  test_gui_close (window);
+}
+
+static void
+stopping_keeps_what_was_found_before (void)
+{
+  AntWindow *window = test_gui_window_scanned ();
+  AntDesk *desk = ant_window_get_desk (window);
+  const AntScanResults *before = ant_desk_get_results (desk);
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.scan", NULL);
+  g_assert_true (is_enabled (window, "stop"));
+  test_gui_settle (30);
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.stop", NULL);
+  g_assert_true (test_gui_idle (desk));
+  g_assert_true (ant_desk_get_results (desk) == before);
+  test_gui_close (window);
+}
+
+static void
+a_window_may_be_closed_while_it_scans (void)
+{
+  for (guint wait = 0; wait < 200; wait += 60)
+    {
+      AntWindow *window = test_gui_window_with_record ();
+      gtk_widget_activate_action (GTK_WIDGET (window), "win.scan", NULL);
+      test_gui_settle (wait + 1);
+      test_gui_close (window);
+    }
+}
+
+static void
+another_record_may_be_opened_while_it_scans (void)
+{
+  AntWindow *window = test_gui_window_with_record ();
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.scan", NULL);
+  test_gui_settle (50);
+  ant_window_open (window, test_gui_record ());
+  test_gui_wait (test_gui_idle, ant_window_get_desk (window), 20);
+  g_assert_null (ant_desk_get_results (ant_window_get_desk (window)));
+  test_gui_close (window);
+}
+
+static void
+it_fits_a_small_screen (void)
+{
+  AntWindow *window = test_gui_window_scanned ();
+  int width, height;
+  gtk_widget_measure (GTK_WIDGET (window), GTK_ORIENTATION_HORIZONTAL, -1, &width, NULL, NULL, NULL);
+  gtk_widget_measure (GTK_WIDGET (window), GTK_ORIENTATION_VERTICAL, -1, &height, NULL, NULL, NULL);
+  g_assert_cmpint (width, <=, 640);
+  g_assert_cmpint (height, <=, 420);
+  g_action_group_change_action_state (G_ACTION_GROUP (window), "settings", g_variant_new_boolean (TRUE));
+  gtk_widget_measure (GTK_WIDGET (window), GTK_ORIENTATION_HORIZONTAL, -1, &width, NULL, NULL, NULL);
+  g_assert_cmpint (width, <=, 640);
+  g_action_group_change_action_state (G_ACTION_GROUP (window), "settings", g_variant_new_boolean (FALSE));
+  test_gui_close (window);
+}
+
+static void
+every_key_has_its_action (void)
+{
+  AntWindow *window = test_gui_window ();
+  for (gsize i = 0; i < ant_n_shortcuts; i++)
+    {
+      g_autofree char *name = NULL;
+      g_autoptr (GVariant) target = NULL;
+      g_assert_true (g_action_parse_detailed_name (ant_shortcut_table[i].action, &name, &target, NULL));
+      if (g_str_has_prefix (name, "win."))
+        g_assert_true (g_action_group_has_action (G_ACTION_GROUP (window), name + 4));
+      for (gsize k = 0; k < G_N_ELEMENTS (ant_shortcut_table[i].keys) && ant_shortcut_table[i].keys[k]; k++)
+        {
+          guint key;
+          GdkModifierType modifiers;
+          g_assert_true (gtk_accelerator_parse (ant_shortcut_table[i].keys[k], &key, &modifiers));
+          for (gsize j = 0; j < i; j++)
+            g_assert_cmpstr (ant_shortcut_table[j].keys[0], !=, ant_shortcut_table[i].keys[k]);
+        }
+    }
+  test_gui_close (window);
+}
+
+static void
+the_shortcuts_window_is_made_from_the_table (void)
+{
+  GtkWidget *window = ant_shortcuts_window_new ();
+  g_assert_true (GTK_IS_SHORTCUTS_WINDOW (window));
+  g_assert_nonnull (test_gui_find (window, GTK_TYPE_SHORTCUTS_SHORTCUT));
+  gtk_window_destroy (GTK_WINDOW (window));
+}
+
+static void
+add (void)
+{
+  g_test_add_func ("/gui/window/an-empty-one-offers-to-open", an_empty_window_offers_to_open);
+  g_test_add_func ("/gui/window/opening-shows-the-whole-record", opening_shows_the_whole_record);
+  g_test_add_func ("/gui/window/a-bad-record-is-told-in-the-banner", a_bad_record_is_told_in_the_banner);
+  g_test_add_func ("/gui/window/a-bad-record-leaves-the-good-one-open", a_bad_record_leaves_the_good_one_open);
+  g_test_add_func ("/gui/window/a-scan-finds-the-planted-dip", a_scan_finds_the_planted_dip);
+  g_test_add_func ("/gui/window/a-verdict-and-a-note-outlive-a-scan", a_verdict_and_a_note_outlive_a_scan);
+  g_test_add_func ("/gui/window/a-changed-setting-makes-the-results-stale", a_changed_setting_makes_the_results_stale);
+  g_test_add_func ("/gui/window/a-setting-of-the-grid-reads-the-record-again", a_setting_of_the_grid_reads_the_record_again);
+  g_test_add_func ("/gui/window/stopping-keeps-what-was-found-before", stopping_keeps_what_was_found_before);
+  g_test_add_func ("/gui/window/it-may-be-closed-while-it-scans", a_window_may_be_closed_while_it_scans);
+  g_test_add_func ("/gui/window/another-record-may-be-opened-while-it-scans", another_record_may_be_opened_while_it_scans);
+  g_test_add_func ("/gui/window/it-fits-a-small-screen", it_fits_a_small_screen);
+  g_test_add_func ("/gui/window/every-key-has-its-action", every_key_has_its_action);
+  g_test_add_func ("/gui/window/the-shortcuts-window-is-made-from-the-table", the_shortcuts_window_is_made_from_the_table);
+}
+
+int
+main (int argc, char **argv)
+{
+  return test_gui_run (&argc, &argv, add);
+}
