@@ -22,5 +22,5 @@ AntWindow *test_gui_window_scanned (void);
 /* Close it and prove that it is finalised. */
 void test_gui_close (AntWindow *window);
 gboolean test_gui_idle (gpointer desk); /* a condition: no work is running */
-/* First descendant of this type, or NULL. */
+/* First descendant of this type that is not in a popover, or NULL. */
 gpointer test_gui_find (gpointer widget, GType type);
