@@ -19,7 +19,7 @@ struct _AntSettingsRow
 
   /* Borrowed from the table */
   const AntSetting *setting;
-  gboolean filling;
+  gboolean filling, assigning; /* the controls follow the desk; the desk follows the controls */
 };
 
 G_DEFINE_FINAL_TYPE (AntSettingsRow, ant_settings_row, GTK_TYPE_WIDGET)
@@ -33,7 +33,7 @@ show (AntSettingsRow *self)
   self->filling = TRUE;
   if (self->setting->kind == ANT_SETTING_WORD)
     gtk_drop_down_set_selected (self->words, (guint) value);
-  else if (!gtk_widget_has_focus (GTK_WIDGET (self->entry)))
+  else if (!self->assigning) /* never under the fingers of who is typing */
     gtk_editable_set_text (GTK_EDITABLE (self->entry), text);
   self->filling = FALSE;
   gtk_widget_set_sensitive (GTK_WIDGET (self->reset), changed);
@@ -48,6 +48,7 @@ static gboolean
 assign (AntSettingsRow *self, const char *text)
 {
   g_autoptr (GError) error = NULL;
+  self->assigning = TRUE;
   gboolean good = ant_desk_set_setting (self->desk, self->setting, text, &error);
   gtk_label_set_text (self->fault, good ? "" : error->message);
   gtk_widget_set_visible (GTK_WIDGET (self->fault), !good);
@@ -56,6 +57,7 @@ assign (AntSettingsRow *self, const char *text)
   else
     gtk_widget_add_css_class (GTK_WIDGET (self->entry), "error");
   show (self);
+  self->assigning = FALSE;
   return good;
 }
 
@@ -79,8 +81,8 @@ reset_action (GtkWidget *widget, const char *name, GVariant *parameter)
 {
   AntSettingsRow *self = ANT_SETTINGS_ROW (widget);
   g_autofree char *text = ant_setting_format (self->setting, self->setting->fallback);
-  gtk_editable_set_text (GTK_EDITABLE (self->entry), text);
   assign (self, text);
+  show (self);
 }
 
 static void
