@@ -150,8 +150,7 @@ ant_radius_words (const AntDip *dip)
     return g_strdup (_("none"));
   double km = dip->radius_ratio * ANT_SUN_RADIUS_KM;
   double rounding = pow (10, floor (log10 (km)) - 2);
-  return g_strdup_printf (_("%.0f km, %.2f Earth radii, %.4f solar"), round (km / rounding) * rounding,
-                          km / ANT_EARTH_RADIUS_KM, dip->radius_ratio);
+  return g_strdup_printf (_("%.0f km, %.2f Earth radii"), round (km / rounding) * rounding, km / ANT_EARTH_RADIUS_KM);
 }
 
 static const char *
@@ -177,7 +176,10 @@ ant_dip_facts (const AntRecord *record, const AntDip *dip, double upper_limit_pp
   if (!isnan (dip->expected_false))
     add_taking (facts, _("By chance"), ant_chance_words (dip->expected_false));
   if (dip->depth_ppm > 0)
-    add_taking (facts, _("As a planet"), ant_radius_words (dip));
+    {
+      add_taking (facts, _("As a planet"), ant_radius_words (dip));
+      add_taking (facts, _("Radius ratio"), g_strdup_printf (_("%.4f of the Sun's"), dip->radius_ratio));
+    }
   add_taking (facts, _("Middle"), g_strconcat (middle, *exact ? " UTC" : "", NULL));
   add_taking (facts, _("Contacts I to IV"), g_strdup_printf (_("%s, ingress %.0f min"), length, dip->edge_d * ANT_MINUTES_PER_DAY));
   add_taking (facts, _("Mean depth"), g_strdup_printf (_("%.1f ppm"), dip->mean_depth_ppm));

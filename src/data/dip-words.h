@@ -31,7 +31,7 @@ char *ant_depth_figures (const AntRecord *record, const AntDip *dip, AntDepthUni
 const char *ant_depth_unit_name (const AntRecord *record, AntDepthUnit unit);           /* "ppm", "W/m²"; borrowed */
 char *ant_span_words (const AntRecord *record, const AntDip *dip);                      /* "2041-03-14 04:03 to 10:21 UTC" */
 char *ant_chance_words (double expected_false);                /* "0.02", "1e-7", "" if not known */
-/* "what the depth would be as a planet": ratio of radii, km, Earth radii. */
+/* The planet whose crossing is that deep: "20600 km, 3.22 Earth radii". */
 char *ant_radius_words (const AntDip *dip);
 
 /* Everything about a dip, as AntFact. upper_limit_ppm NaN: the dip was found, not asked for. Caller unrefs. */

@@ -1,6 +1,7 @@
 /* look-icon.c - the shape of a dip beside its number. */
 #include "gui/look-icon.h"
 
+#include "gui/paper.h"
 #include "plot/pen.h"
 
 #define SIZE 14
@@ -23,13 +24,10 @@ ant_look_icon_set_look (AntLookIcon *self, AntDipLook look)
 static void
 ant_look_icon_snapshot (GtkWidget *widget, GtkSnapshot *snapshot)
 {
-  GdkRGBA text;
-  gtk_style_context_get_color (gtk_widget_get_style_context (widget), &text);
-  gboolean dark = 0.2126f * text.red + 0.7152f * text.green + 0.0722f * text.blue > 0.5f;
   float width = (float) gtk_widget_get_width (widget), height = (float) gtk_widget_get_height (widget);
   AntTheme theme;
   AntPen pen;
-  ant_theme_init (&theme, dark ? ANT_THEME_DARK : ANT_THEME_LIGHT);
+  ant_theme_init (&theme, ant_paper_kind (widget));
   cairo_t *cr = gtk_snapshot_append_cairo (snapshot, &GRAPHENE_RECT_INIT (0, 0, width, height));
   ant_pen_begin (&pen, cr, &theme, gtk_widget_get_scale_factor (widget));
   ant_pen_dip (&pen, ANT_LOOK_ICON (widget)->look, (double) width / 2, (double) height / 2, 4.5, FALSE);

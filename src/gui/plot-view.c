@@ -3,9 +3,9 @@
 
 #include <glib/gi18n.h>
 #include <math.h>
-#include <string.h>
 
 #include "gui/file-prompt.h"
+#include "gui/paper.h"
 #include "plot/figure.h"
 
 #define FONT_SHARE 0.88 /* of the desktop's font: labels are quieter than controls */
@@ -29,21 +29,6 @@ static AntPlotViewPrivate *
 private (AntPlotView *self)
 {
   return ant_plot_view_get_instance_private (self);
-}
-
-/* Dark or light by the colour of the text itself, so every theme is followed; high contrast by the theme's name. */
-static AntThemeKind
-theme_kind (GtkWidget *widget)
-{
-  GdkRGBA text;
-  gtk_style_context_get_color (gtk_widget_get_style_context (widget), &text);
-  gboolean dark = 0.2126f * text.red + 0.7152f * text.green + 0.0722f * text.blue > 0.5f;
-  g_autofree char *name = NULL;
-  g_object_get (gtk_widget_get_settings (widget), "gtk-theme-name", &name, NULL);
-  const char *forced = g_getenv ("GTK_THEME");
-  g_autofree char *folded = g_ascii_strdown (forced ? forced : name ? name : "", -1);
-  gboolean contrast = strstr (folded, "highcontrast") || strstr (folded, "-hc");
-  return contrast ? (dark ? ANT_THEME_CONTRAST_DARK : ANT_THEME_CONTRAST) : dark ? ANT_THEME_DARK : ANT_THEME_LIGHT;
 }
 
 static void
@@ -70,7 +55,7 @@ ant_plot_view_theme (AntPlotView *self)
   AntPlotViewPrivate *priv = private (self);
   if (!priv->theme_known)
     {
-      ant_theme_init (&priv->theme, theme_kind (GTK_WIDGET (self)));
+      ant_theme_init (&priv->theme, ant_paper_kind (GTK_WIDGET (self)));
       set_fonts (self, &priv->theme);
       priv->theme_known = TRUE;
     }

@@ -4,6 +4,7 @@
 
 #include "data/noise-words.h"
 #include "data/record-words.h"
+#include "gui/paper.h"
 #include "gui/preferences.h"
 #include "gui/window-private.h"
 
@@ -298,6 +299,7 @@ static void
 ant_window_init (AntWindow *self)
 {
   self->desk = ant_desk_new ();
+  ant_paper_follow (GTK_WIDGET (self));
   gtk_widget_init_template (GTK_WIDGET (self));
   ant_window_add_actions (self);
   ant_time_stack_set_desk (self->time_stack, self->desk);

@@ -155,6 +155,43 @@ another_record_may_be_opened_while_it_scans (void)
   test_gui_close (window);
 }
 
+/* How light the window is on the whole, 0 to 1. */
+static double
+lightness (AntWindow *window)
+{
+  g_autoptr (GdkPaintable) paintable = gtk_widget_paintable_new (GTK_WIDGET (window));
+  int width = gdk_paintable_get_intrinsic_width (paintable), height = gdk_paintable_get_intrinsic_height (paintable);
+  GtkSnapshot *snapshot = gtk_snapshot_new ();
+  gdk_paintable_snapshot (paintable, snapshot, width, height);
+  g_autoptr (GskRenderNode) node = gtk_snapshot_free_to_node (snapshot);
+  g_autoptr (GdkTexture) texture
+      = gsk_renderer_render_texture (gtk_native_get_renderer (GTK_NATIVE (window)), node, NULL);
+  width = gdk_texture_get_width (texture);
+  height = gdk_texture_get_height (texture);
+  g_autofree guchar *pixels = g_malloc ((gsize) width * (gsize) height * 4);
+  gdk_texture_download (texture, pixels, (gsize) width * 4);
+  double sum = 0;
+  for (gsize i = 0; i < (gsize) width * (gsize) height; i++)
+    sum += pixels[4 * i + 1];
+  return sum / 255 / width / height;
+}
+
+static void
+dark_and_light_are_followed_live (void)
+{
+  AntWindow *window = test_gui_window_with_record ();
+  GtkSettings *settings = gtk_widget_get_settings (GTK_WIDGET (window));
+  test_gui_settle (300);
+  g_assert_cmpfloat (lightness (window), >, 0.8);
+  g_object_set (settings, "gtk-application-prefer-dark-theme", TRUE, NULL);
+  test_gui_settle (300);
+  g_assert_cmpfloat (lightness (window), <, 0.3);
+  g_object_set (settings, "gtk-application-prefer-dark-theme", FALSE, NULL);
+  test_gui_settle (300);
+  g_assert_cmpfloat (lightness (window), >, 0.8);
+  test_gui_close (window);
+}
+
 static void
 it_fits_a_small_screen (void)
 {
@@ -217,6 +254,7 @@ add (void)
   g_test_add_func ("/gui/window/stopping-keeps-what-was-found-before", stopping_keeps_what_was_found_before);
   g_test_add_func ("/gui/window/it-may-be-closed-while-it-scans", a_window_may_be_closed_while_it_scans);
   g_test_add_func ("/gui/window/another-record-may-be-opened-while-it-scans", another_record_may_be_opened_while_it_scans);
+  g_test_add_func ("/gui/window/dark-and-light-are-followed-live", dark_and_light_are_followed_live);
   g_test_add_func ("/gui/window/it-fits-a-small-screen", it_fits_a_small_screen);
   g_test_add_func ("/gui/window/every-key-has-its-action", every_key_has_its_action);
   g_test_add_func ("/gui/window/the-shortcuts-window-is-made-from-the-table", the_shortcuts_window_is_made_from_the_table);
