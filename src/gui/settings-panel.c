@@ -35,6 +35,12 @@ ant_settings_panel_set_desk (AntSettingsPanel *self, AntDesk *desk)
     }
 }
 
+void
+ant_settings_panel_focus (AntSettingsPanel *self)
+{
+  gtk_widget_child_focus (GTK_WIDGET (self->list), GTK_DIR_TAB_FORWARD);
+}
+
 static void
 ant_settings_panel_dispose (GObject *object)
 {

@@ -8,3 +8,5 @@
 G_DECLARE_FINAL_TYPE (AntSettingsPanel, ant_settings_panel, ANT, SETTINGS_PANEL, GtkWidget)
 
 void ant_settings_panel_set_desk (AntSettingsPanel *self, AntDesk *desk);
+/* The first setting gets the keys. */
+void ant_settings_panel_focus (AntSettingsPanel *self);

@@ -92,11 +92,14 @@ reset_settings (AntWindow *self, GVariant *parameter)
   ant_desk_reset_settings (self->desk);
 }
 
+/* Out of sight, the panel takes no room; in sight, it has the keys. */
 static void
-hidden_cb (GtkRevealer *revealer)
+settled_cb (GtkRevealer *revealer, GParamSpec *pspec, AntWindow *self)
 {
   if (!gtk_revealer_get_reveal_child (revealer))
     gtk_widget_set_visible (GTK_WIDGET (revealer), FALSE);
+  else if (gtk_revealer_get_child_revealed (revealer))
+    ant_settings_panel_focus (self->settings_panel);
 }
 
 static void
@@ -106,7 +109,7 @@ show_settings (AntWindow *self, gboolean shown)
     gtk_widget_set_visible (GTK_WIDGET (self->settings_revealer), TRUE);
   gtk_revealer_set_reveal_child (self->settings_revealer, shown);
   if (!shown && !gtk_revealer_get_child_revealed (self->settings_revealer))
-    hidden_cb (self->settings_revealer);
+    settled_cb (self->settings_revealer, NULL, self);
 }
 
 static void
@@ -232,6 +235,9 @@ copy_dip (AntWindow *self, GVariant *parameter)
   AntDipItem *item = ant_desk_get_selected (self->desk);
   g_autoptr (GPtrArray) facts = ant_dip_facts (ant_desk_get_record (self->desk), ant_dip_item_get_dip (item),
                                                ant_dip_item_get_upper_limit_ppm (item), ant_desk_get_unit (self->desk));
+  ant_facts_add (facts, _("Verdict"), ant_dip_class_title (ant_dip_item_get_class (item)));
+  if (*ant_dip_item_get_note (item))
+    ant_facts_add (facts, _("Note"), ant_dip_item_get_note (item));
   g_autofree char *text = ant_facts_text (facts);
   gdk_clipboard_set_text (gtk_widget_get_clipboard (GTK_WIDGET (self)), text);
 }
@@ -368,7 +374,7 @@ ant_window_add_actions (AntWindow *self)
         g_signal_connect (simple, "activate", G_CALLBACK (activated_cb), self);
       g_action_map_add_action (G_ACTION_MAP (self), G_ACTION (simple));
     }
-  g_signal_connect (self->settings_revealer, "notify::child-revealed", G_CALLBACK (hidden_cb), NULL);
+  g_signal_connect (self->settings_revealer, "notify::child-revealed", G_CALLBACK (settled_cb), self);
 }
 
 static unsigned
