@@ -271,7 +271,7 @@ draw_levels (Canvas *canvas)
       draw_threshold (canvas, n, x, threshold_y);
       ant_labels_block_curve (&canvas->field, n, x, threshold_y);
       char number[48], name[96];
-      ant_number_text (threshold, 1, sizeof number, number);
+      ant_plot_number_text (threshold, 1, sizeof number, number);
       g_snprintf (name, sizeof name, _("threshold, SNR %s"), number);
       name_curve (canvas, n, x, threshold_y, name);
     }

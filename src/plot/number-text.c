@@ -7,7 +7,7 @@
 #define MOST_DIGITS 32
 
 void
-ant_number_text (double value, int decimals, size_t size, char *text)
+ant_plot_number_text (double value, int decimals, size_t size, char *text)
 {
   char plain[MOST_DIGITS];
   g_snprintf (plain, sizeof plain, "%.*f", decimals, fabs (value));
@@ -31,7 +31,7 @@ ant_power_text (int exponent, size_t size, char *text)
   static const char *const raised[] = { "⁰", "¹", "²", "³", "⁴", "⁵", "⁶", "⁷", "⁸", "⁹" };
   if (exponent >= -2 && exponent <= 3)
     {
-      ant_number_text (pow (10, exponent), MAX (0, -exponent), size, text);
+      ant_plot_number_text (pow (10, exponent), MAX (0, -exponent), size, text);
       return;
     }
   char digits[MOST_DIGITS];

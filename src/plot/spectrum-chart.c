@@ -146,7 +146,7 @@ title_of (const AntNoisePart *part, size_t size, char *text)
   const char *name = ant_part_title (part);
   double hours = part->time_d * ANT_HOURS_PER_DAY;
   double value = hours >= 36 ? part->time_d : hours >= 1.5 ? hours : 60 * hours;
-  ant_number_text (value, value < 9.95 ? 1 : 0, sizeof number, number);
+  ant_plot_number_text (value, value < 9.95 ? 1 : 0, sizeof number, number);
   if (hours >= 36)
     g_snprintf (text, size, _("%s, %s d"), name, number);
   else if (hours >= 1.5)

@@ -145,19 +145,19 @@ duration_text (double days, size_t size, char *text)
   char number[48];
   if (minutes < 59.5)
     {
-      ant_number_text (minutes, minutes < 9.95 && fabs (minutes - round (minutes)) > 0.05 ? 1 : 0, sizeof number,
+      ant_plot_number_text (minutes, minutes < 9.95 && fabs (minutes - round (minutes)) > 0.05 ? 1 : 0, sizeof number,
                        number);
       g_snprintf (text, size, _("%s min averages"), number);
     }
   else if (minutes < 36 * 60)
     {
       double hours = minutes / 60;
-      ant_number_text (hours, fabs (hours - round (hours)) > 0.05 ? 1 : 0, sizeof number, number);
+      ant_plot_number_text (hours, fabs (hours - round (hours)) > 0.05 ? 1 : 0, sizeof number, number);
       g_snprintf (text, size, _("%s h averages"), number);
     }
   else
     {
-      ant_number_text (days, fabs (days - round (days)) > 0.05 ? 1 : 0, sizeof number, number);
+      ant_plot_number_text (days, fabs (days - round (days)) > 0.05 ? 1 : 0, sizeof number, number);
       g_snprintf (text, size, _("%s d averages"), number);
     }
 }

@@ -107,7 +107,7 @@ draw_threshold (Canvas *canvas, double snr)
   Line line = { 2, line_x, line_y };
   draw_line (canvas, &styles[3], &line);
   char number[48], name[96];
-  ant_number_text (snr, 1, sizeof number, number);
+  ant_plot_number_text (snr, 1, sizeof number, number);
   g_snprintf (name, sizeof name, _("threshold %s"), number);
   AntAnchor anchor[] = { { x + 5, top + 4, 0, 0 }, { x - 5, top + 4, 1, 0 }, { x + 5, foot - 4, 0, 1 } };
   ant_pen_colour (pen, ANT_ROLE_TEXT);

@@ -92,7 +92,7 @@ linear_at (double from, double to, int exponent, int m, const AntRuler *ruler, A
       char label[48];
       if (whole == floor (whole))
         {
-          ant_number_text (value, MAX (0, -exponent), sizeof label, label);
+          ant_plot_number_text (value, MAX (0, -exponent), sizeof label, label);
           label_or_mark (ticks, &minor, value, label, from, to, FALSE, ruler);
         }
       else if (every == 1)
@@ -156,7 +156,7 @@ log_at (double from, double to, const LogStyle *style, const AntRuler *ruler, An
             if (digit == 1 && style->digits == 1 << 1)
               ant_power_text (exponent, sizeof label, label);
             else
-              ant_number_text (value, MAX (0, -exponent), sizeof label, label);
+              ant_plot_number_text (value, MAX (0, -exponent), sizeof label, label);
             label_or_mark (ticks, &minor, value, label, from, to, TRUE, ruler);
           }
         else if (show_digits || digit == 1)

@@ -326,7 +326,7 @@ ant_time_label (const AntTimeReference *time, double time_d, double resolution_d
     {
       int digits = (int) CLAMP (ceil (-log10 (resolution_d)), 0, 9);
       char number[48];
-      ant_number_text (time_d, digits, sizeof number, number);
+      ant_plot_number_text (time_d, digits, sizeof number, number);
       g_snprintf (text, size, _("%s d"), number);
       return;
     }

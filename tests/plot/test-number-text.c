@@ -6,7 +6,7 @@ static void
 assert_text (double value, int decimals, const char *expected)
 {
   char text[48];
-  ant_number_text (value, decimals, sizeof text, text);
+  ant_plot_number_text (value, decimals, sizeof text, text);
   g_assert_cmpstr (text, ==, expected);
 }
 
