@@ -16,7 +16,7 @@ test_gui_run (int *argc, char ***argv, void (*add) (void))
   gtk_test_init (argc, argv, NULL);
   gsl_set_error_handler_off ();
   fftw_make_planner_thread_safe ();
-  folder = g_dir_make_tmp ("antumbra-XXXXXX", NULL);
+  folder = g_dir_make_tmp (NULL, NULL);
   add ();
   int code = g_test_run ();
   for (gsize i = 0; i < 2; i++)

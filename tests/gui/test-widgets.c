@@ -57,7 +57,7 @@ every_plot_is_saved_in_every_format (void)
                           ANT_TYPE_CLOSEUP_VIEW };
   const char *const endings[] = { "png", "svg", "pdf" };
   const char *const starts[] = { "\211PNG", "<?xml", "%PDF" };
-  g_autofree char *folder = g_dir_make_tmp ("figures-XXXXXX", NULL);
+  g_autofree char *folder = g_dir_make_tmp (NULL, NULL);
   AntWindow *window = test_gui_window_scanned ();
   ant_desk_select_mark (ant_window_get_desk (window), 0);
   for (gsize i = 0; i < G_N_ELEMENTS (types); i++)
