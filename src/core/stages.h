@@ -6,8 +6,21 @@
  * A stage may find at count() time that it has nothing to do and return 0. */
 #pragma once
 
+#include <stdatomic.h>
 #include <stddef.h>
 #include "core/status.h"
+
+/* A wish that long slices look at now and then: once asked, they end soon with ANT_STOPPED. Zero-initialised. */
+typedef struct
+{
+  atomic_int asked;
+} AntStop;
+
+static inline int
+ant_stop_asked (const AntStop *stop) /* NULL: never */
+{
+  return stop && atomic_load_explicit (&stop->asked, memory_order_relaxed);
+}
 
 typedef struct
 {
@@ -16,4 +29,5 @@ typedef struct
   size_t (*count) (void *work, size_t stage);
   AntStatus (*run_slice) (void *work, size_t stage, size_t slice);
   AntStatus (*finish) (void *work, size_t stage);
+  AntStop *(*stop) (void *work); /* where running slices look whether they should end early; NULL if slices are short */
 } AntStages;

@@ -104,6 +104,8 @@ watch_workers (Run *run)
       {
         gsize done = run->done;
         g_mutex_unlock (&run->lock);
+        if (run->stages->stop && g_cancellable_is_cancelled (run->cancellable))
+          atomic_store (&run->stages->stop (run->work)->asked, 1);
         report (run, done);
         g_mutex_lock (&run->lock);
         wake_us = g_get_monotonic_time () + REPORT_EVERY_US;

@@ -31,12 +31,12 @@ full_weights (const AntFamily *family, double *weight)
     }
 }
 
-static void
+static AntStatus
 evaluate (AntFamilyMap *map, const AntFamily *family, const AntWhitener *whitener, const double *z, const double *full,
-          double least_coverage)
+          double least_coverage, const AntStop *stop)
 {
   double energy[ANT_LANES], moment[ANT_LANES], weight[ANT_LANES];
-  for (size_t i = 0; i < map->n_starts; i++)
+  for (size_t i = 0; i < map->n_starts && !ant_stop_asked (stop); i++)
     for (size_t b = 0; b < family->n_members / ANT_LANES; b++)
       {
         float *snr = map->snr + i * family->n_members + b * ANT_LANES;
@@ -51,11 +51,12 @@ evaluate (AntFamilyMap *map, const AntFamily *family, const AntWhitener *whitene
             sigma[l] = good ? (float) (1 / sqrt (energy[l])) : NAN;
           }
       }
+  return ant_stop_asked (stop) ? ANT_STOPPED : ANT_OK;
 }
 
 AntDipMap *
 ant_dip_map_new (const AntTemplateBank *bank, const AntWhitener *whitener, const double *z, double least_coverage,
-                 AntStatus *status)
+                 const AntStop *stop, AntStatus *status)
 {
   AntDipMap *map = calloc (1, sizeof *map);
   *status = map ? ANT_OK : ANT_NO_MEMORY;
@@ -70,7 +71,7 @@ ant_dip_map_new (const AntTemplateBank *bank, const AntWhitener *whitener, const
       if (!*status)
         {
           full_weights (family, full);
-          evaluate (&map->family[f], family, whitener, z, full, least_coverage);
+          *status = evaluate (&map->family[f], family, whitener, z, full, least_coverage, stop);
         }
       free (full);
     }

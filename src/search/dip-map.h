@@ -6,7 +6,7 @@
 #pragma once
 
 #include <stddef.h>
-#include "core/status.h"
+#include "core/stages.h"
 #include "search/template-bank.h"
 
 typedef struct
@@ -23,9 +23,10 @@ typedef struct
   AntFamilyMap family[2];
 } AntDipMap;
 
-/* Evaluate the bank. z [n of the whitener]: C^-1 y. least_coverage: weighted observed fraction a template needs (0.3). */
+/* Evaluate the bank. z [n of the whitener]: C^-1 y. least_coverage: weighted observed fraction a template needs (0.3).
+ * stop may be NULL; once it is asked, NULL is returned soon with ANT_STOPPED. */
 AntDipMap *ant_dip_map_new (const AntTemplateBank *bank, const AntWhitener *whitener, const double *z,
-                            double least_coverage, AntStatus *status);
+                            double least_coverage, const AntStop *stop, AntStatus *status);
 void ant_dip_map_free (AntDipMap *map);
 
 typedef struct

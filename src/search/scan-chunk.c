@@ -75,7 +75,7 @@ draw_map (Work *work)
   ant_dip_map_free (work->map);
   work->map = status ? NULL
                      : ant_dip_map_new (work->scan->bank, work->whitener, work->z, work->scan->options.least_coverage,
-                                        &status);
+                                        work->scan->stop, &status);
   return status;
 }
 

@@ -47,6 +47,8 @@ typedef struct
 
 struct _AntScan
 {
+  AntStop own_stop;
+  AntStop *stop;       /* own_stop, or that of the scan whose surrogate this is */
   AntSeries series;
   AntScanOptions options;
   AntRefineOptions refine;

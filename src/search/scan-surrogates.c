@@ -69,7 +69,10 @@ ant_scan_try_surrogate (AntScan *scan, size_t i)
       noise = ant_scan_new (&series, &options, &status);
     }
   if (!status)
-    status = ant_scan_find_alone (noise);
+    {
+      noise->stop = scan->stop;
+      status = ant_scan_find_alone (noise);
+    }
   if (!status)
     status = keep_events (noise, &scan->surrogate[i]);
   ant_scan_free (noise);

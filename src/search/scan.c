@@ -36,6 +36,7 @@ ant_scan_new (const AntSeries *series, const AntScanOptions *options, AntStatus 
     return NULL;
   scan->series = *series;
   scan->options = *options;
+  scan->stop = &scan->own_stop;
   scan->bank = ant_template_bank_new (&options->bank, series->step_d, status);
   if (scan->bank)
     {
@@ -330,6 +331,8 @@ static AntStatus
 run_slice (void *work, size_t stage, size_t slice)
 {
   AntScan *scan = work;
+  if (ant_stop_asked (scan->stop))
+    return ANT_STOPPED;
   switch (stage)
     {
     case LEARN: return ant_scan_learn_noise (scan);
@@ -371,9 +374,16 @@ ant_scan_find_alone (AntScan *scan)
   return status;
 }
 
+static AntStop *
+stop_of (void *work)
+{
+  AntScan *scan = work;
+  return scan->stop;
+}
+
 const AntStages *
 ant_scan_stages (void)
 {
-  static const AntStages stages = { N_STAGES, stage_title, stage_count, run_slice, finish };
+  static const AntStages stages = { N_STAGES, stage_title, stage_count, run_slice, finish, stop_of };
   return &stages;
 }

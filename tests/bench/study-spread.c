@@ -38,7 +38,7 @@ main (int argc, char **argv)
       AntWhitener *whitener = ant_whitener_new_free_level (&scan->start, &series, &status);
       if (!whitener || ant_whitener_solve (whitener, value, z))
         return 1;
-      AntDipMap *map = ant_dip_map_new (scan->bank, whitener, z, options.least_coverage, &status);
+      AntDipMap *map = ant_dip_map_new (scan->bank, whitener, z, options.least_coverage, NULL, &status);
       const AntFamily *family = &scan->bank->family[0];
       for (size_t i = 0; i < map->family[0].n_starts * family->n_members; i++)
         {

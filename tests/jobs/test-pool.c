@@ -130,6 +130,45 @@ a_failure_stops_the_rest (void)
   g_assert_null (toy.finisher);
 }
 
+/* --- a slice that would never end by itself --- */
+
+typedef struct
+{
+  AntStop stop;
+  GCancellable *cancellable;
+} Endless;
+
+static size_t
+endless_count (void *work, size_t stage)
+{
+  return 2;
+}
+
+static AntStatus
+endless_slice (void *work, size_t stage, size_t slice)
+{
+  Endless *endless = work;
+  g_cancellable_cancel (endless->cancellable);
+  while (!ant_stop_asked (&endless->stop))
+    g_usleep (1000);
+  return ANT_STOPPED;
+}
+
+static AntStop *
+endless_stop (void *work)
+{
+  return &((Endless *) work)->stop;
+}
+
+static void
+cancelling_ends_slices_that_look_for_it (void)
+{
+  static const AntStages stages = { 1, toy_title, endless_count, endless_slice, toy_finish, endless_stop };
+  g_autoptr (GCancellable) cancellable = g_cancellable_new ();
+  Endless endless = { .cancellable = cancellable };
+  g_assert_cmpint (ant_pool_run (&stages, &endless, 2, cancellable, NULL, NULL), ==, ANT_STOPPED);
+}
+
 static void
 cancelling_stops_between_slices (void)
 {
@@ -195,6 +234,7 @@ main (int argc, char **argv)
   g_test_add_func ("/jobs/pool/finish-runs-on-the-calling-thread", finish_runs_on_the_calling_thread);
   g_test_add_func ("/jobs/pool/the-lowest-failing-slice-decides", the_lowest_failing_slice_decides);
   g_test_add_func ("/jobs/pool/a-failure-stops-the-rest", a_failure_stops_the_rest);
+  g_test_add_func ("/jobs/pool/cancelling-ends-slices-that-look-for-it", cancelling_ends_slices_that_look_for_it);
   g_test_add_func ("/jobs/pool/cancelling-stops-between-slices", cancelling_stops_between_slices);
   g_test_add_func ("/jobs/pool/a-run-cancelled-before-it-begins-does-nothing",
                    a_run_cancelled_before_it_begins_does_nothing);

@@ -32,7 +32,7 @@ set_up (Fixture *f, gconstpointer data)
   f->whitener = ant_whitener_new (&f->model, &f->series, &status);
   g_assert_nonnull (f->whitener);
   g_assert_cmpint (ant_whitener_solve (f->whitener, f->value, f->z), ==, ANT_OK);
-  f->map = ant_dip_map_new (f->bank, f->whitener, f->z, LEAST_COVERAGE, &status);
+  f->map = ant_dip_map_new (f->bank, f->whitener, f->z, LEAST_COVERAGE, NULL, &status);
   g_assert_nonnull (f->map);
 }
 
@@ -205,7 +205,7 @@ a_mirrored_record_has_mirrored_peaks (Fixture *f, gconstpointer data)
   double mirrored[N];
   for (size_t i = 0; i < N; i++)
     mirrored[i] = -f->z[i];
-  AntDipMap *map = ant_dip_map_new (f->bank, f->whitener, mirrored, LEAST_COVERAGE, &status);
+  AntDipMap *map = ant_dip_map_new (f->bank, f->whitener, mirrored, LEAST_COVERAGE, NULL, &status);
   size_t n = ant_dip_map_peaks (f->map, 1, 1.2, 0, NULL, 100, dips);
   g_assert_cmpuint (ant_dip_map_peaks (map, -1, 1.2, 0, NULL, 100, brightenings), ==, n);
   for (size_t i = 0; i < n; i++)
