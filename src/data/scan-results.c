@@ -43,6 +43,8 @@ copy_chunks (AntScanResults *results, const AntScan *scan)
   results->n_chunks = ant_scan_chunks (scan, &chunk);
   results->chunk = g_memdup2 (chunk, results->n_chunks * sizeof *chunk);
   for (gsize i = 0; i < results->n_chunks; i++)
+    results->chunk[i].stop = NULL; /* the scan's, which ends before the results do */
+  for (gsize i = 0; i < results->n_chunks; i++)
     if (chunk[i].n_bins)
       {
         AntChunk *own = &results->chunk[i];

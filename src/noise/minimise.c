@@ -158,6 +158,8 @@ ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step
     reset (&search, g, first_step);
   for (; steps < options->max_steps; steps++)
     {
+      if (ant_stop_asked (options->stop))
+        return ANT_STOPPED;
       double slope = direction (&search, g, p);
       double length = slope < 0 ? backtrack (&search, x, p, fx, slope, moved, &f_new) : 0;
       if (length == 0)

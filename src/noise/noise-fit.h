@@ -3,7 +3,7 @@
  * BFGS (Nocedal & Wright 2006, algorithm 6.1) with forward differences. */
 #pragma once
 
-#include "core/status.h"
+#include "core/stages.h"
 #include "noise/noise-model.h"
 #include "noise/series.h"
 
@@ -14,6 +14,7 @@ typedef struct
   size_t max_steps;       /* BFGS steps at most */
   double settled_lnl;     /* stop when a step gains less ln posterior than this */
   double *curvature;      /* [ANT_MAX_FREE^2] inverse Hessian, or NULL: read if warm, written on return */
+  const AntStop *stop;    /* looked at between steps; NULL: never */
   int warm;               /* curvature holds that of a fit to much the same data */
 } AntFitOptions;
 #define ANT_FIT_OPTIONS_INIT { .max_steps = 40, .settled_lnl = 0.01 }

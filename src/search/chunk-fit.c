@@ -128,7 +128,7 @@ AntStatus
 ant_chunk_fit (AntChunk *chunk, const AntSeries *part, uint8_t *spike, size_t max_steps, int warm)
 {
   AntFitOptions options = { .max_steps = max_steps, .settled_lnl = 0.02, .curvature = chunk->curvature,
-                            .warm = warm };
+                            .warm = warm, .stop = chunk->stop };
   AntSeries own = *part;
   own.spike = spike;
   AntStatus status = ANT_OK;
@@ -160,7 +160,8 @@ ant_chunk_refit (const AntChunk *chunk, const AntSeries *part, AntNoiseModel *mo
     curvature[i] = chunk->curvature[i];
   /* Masking a few hours moves a fit to months of data by less than one Newton step finds; a fit to days needs more. */
   double days = (double) chunk->health.observed * part->step_d;
-  AntFitOptions options = { .max_steps = days > 60 ? 1 : days > 15 ? 2 : 6, .settled_lnl = 0.02, .curvature = curvature, .warm = 1 };
+  AntFitOptions options = { .max_steps = days > 60 ? 1 : days > 15 ? 2 : 6, .settled_lnl = 0.02, .curvature = curvature, .warm = 1,
+                            .stop = chunk->stop };
   *model = chunk->model;
   AntStatus status = ant_noise_fit (model, part, &options, NULL);
   return status == ANT_NOT_CONVERGED ? ANT_OK : status;

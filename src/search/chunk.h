@@ -24,6 +24,7 @@ typedef struct
 {
   size_t first, n;          /* places of the record */
   double own_from, own_to;  /* places of the record whose epochs belong here: own_from <= p < own_to */
+  const AntStop *stop;      /* borrowed: fits of this chunk look at it; NULL: never */
   AntNoiseModel model;
   AntFitReport fit;
   double curvature[ANT_MAX_FREE * ANT_MAX_FREE]; /* inverse Hessian of the fit, to start refits warm */

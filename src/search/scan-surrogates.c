@@ -71,6 +71,8 @@ ant_scan_try_surrogate (AntScan *scan, size_t i)
   if (!status)
     {
       noise->stop = scan->stop;
+      for (size_t c = 0; c < noise->n_chunks; c++)
+        noise->chunk[c].stop = scan->stop;
       status = ant_scan_find_alone (noise);
     }
   if (!status)

@@ -51,6 +51,8 @@ ant_scan_new (const AntSeries *series, const AntScanOptions *options, AntStatus 
       *status = scan->chunk && scan->harvest && scan->trace && scan->surrogate && scan->residual && scan->spike ? ANT_OK : ANT_NO_MEMORY;
       if (!*status)
         scan->n_chunks = ant_chunks_plan (series, &options->chunk, room, scan->chunk);
+      for (size_t i = 0; i < scan->n_chunks; i++)
+        scan->chunk[i].stop = &scan->own_stop;
     }
   if (*status)
     {
