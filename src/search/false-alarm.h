@@ -2,8 +2,8 @@
  *
  * Under the noise the SNR of one template is a Gaussian process in time with unit variance, which crosses a high level T
  * upwards crossings * exp(-T^2/2) times (Rice 1945); `crossings` is computed here from the fitted model through the
- * record's own mask and summed over the templates. Neighbouring templates share their peaks, the fit of the shape then
- * climbs two more dimensions (a factor T each: Adler & Taylor 2007, Random Fields and Geometry, ch. 12), and mask and
+ * record's own mask and summed over the templates, each counted by what its neighbour in duration does not share. The
+ * families still share peaks, the fit of the shape then climbs two more dimensions (a factor T each: Adler & Taylor 2007, Random Fields and Geometry, ch. 12), and mask and
  * refit lifts noise peaks, the more the shorter the record:
  *   N(T) = yield * crossings * T^2 exp(-(T^2 - softness * (T^2 - T0^2)) / 2),  the softness only beyond T0 = 4.33.
  * yield, T0 and the softness of records of different length are calibrated on surrogates sent through the whole pipeline
@@ -18,7 +18,7 @@
 
 typedef struct
 {
-  double crossings;            /* of zero, upwards, summed over all templates */
+  double crossings;            /* of zero, upwards, summed over all templates as above */
   double observed_d;           /* observed time */
 } AntChanceField;
 
