@@ -76,6 +76,14 @@ struct _AntScan
 
 /* The start: one slice. */
 AntStatus ant_scan_learn_noise (AntScan *scan);
+/* After the chunks: spikes and masks of each chunk's own stretch, and the chance field. */
+void ant_scan_merge_chunks (AntScan *scan);
+/* After the surrogates: the chance law, the threshold, strong events out of the residual, candidates listed. */
+AntStatus ant_scan_settle_chance (AntScan *scan);
+void ant_scan_drop_side_lobes (AntScan *scan);
+/* The results: events that stand, as dips and brightenings by time. */
+AntStatus ant_scan_list_dips (AntScan *scan);
+void ant_scan_forget_harvest (AntScan *scan);
 /* One chunk: fit, strong events, candidates, floor, spectrum. */
 AntStatus ant_scan_search_chunk (AntScan *scan, size_t i);
 /* A noise-only record from the chunks' models through the record's gaps: value [n] out. */

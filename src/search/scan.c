@@ -1,20 +1,11 @@
-/* scan.c - the stages of a scan and the merging of what their slices found. */
+/* scan.c - a scan from its making to its end, and the table of its stages. */
 #include "search/scan.h"
 #include <math.h>
 #include <stdlib.h>
 #include <string.h>
-#include "core/robust.h"
-#include "noise/spectrum.h"
 #include "search/scan-private.h"
 
 enum { LEARN, SEARCH, CHANCE, WEIGH, TOGETHER, BORDER, TRACE, N_STAGES };
-
-#define WHITTLE_BINS 6
-#define START_STEPS 40
-#define CHUNK_PRIOR_LN 0.7
-#define WEIGH_MARGIN 0.7   /* below the threshold, in 30 d of data and more */
-#define SHORT_RECORD_D 30
-#define LEAST_WEIGHED 3    /* per chunk and sign */
 
 static AntRefineOptions
 refine_options (const AntScanOptions *options, const AntTemplateBank *bank)
@@ -65,8 +56,8 @@ ant_scan_new (const AntSeries *series, const AntScanOptions *options, AntStatus 
   return scan;
 }
 
-static void
-forget_harvest (AntScan *scan)
+void
+ant_scan_forget_harvest (AntScan *scan)
 {
   for (size_t i = 0; scan->harvest && i < scan->n_chunks; i++)
     {
@@ -81,7 +72,7 @@ ant_scan_free (AntScan *scan)
 {
   if (!scan)
     return;
-  forget_harvest (scan);
+  ant_scan_forget_harvest (scan);
   for (size_t i = 0; scan->chunk && i < scan->n_chunks; i++)
     free (scan->chunk[i].frequency_cd);
   for (size_t i = 0; scan->trace && i < scan->n_chunks; i++)
@@ -104,210 +95,6 @@ ant_scan_free (AntScan *scan)
   free (scan->slow_ppm);
   free (scan->passage);
   free (scan);
-}
-
-/* rms of the record and of its neighbouring differences over sqrt2, robustly: where the fit starts. */
-static AntStatus
-scatter (const AntSeries *part, double *rms_ppm, double *white_ppm)
-{
-  double *value = malloc (2 * part->n * sizeof *value), *difference = value + part->n;
-  size_t n = 0, pairs = 0;
-  if (!value)
-    return ANT_NO_MEMORY;
-  for (size_t i = 0; i < part->n; i++)
-    if (!isnan (part->value_ppm[i]))
-      {
-        value[n++] = (double) part->value_ppm[i];
-        if (i && !isnan (part->value_ppm[i - 1]))
-          difference[pairs++] = (double) part->value_ppm[i] - (double) part->value_ppm[i - 1];
-      }
-  *rms_ppm = ant_mad_sigma (n, value, value);
-  *white_ppm = pairs > 5 ? ant_mad_sigma (pairs, difference, difference) / sqrt (2) : 0.3 * *rms_ppm;
-  free (value);
-  return n < 20 || !(*rms_ppm > 0) ? ANT_NO_DATA : ANT_OK;
-}
-
-AntStatus
-ant_scan_learn_noise (AntScan *scan)
-{
-  size_t best = 0, most = 0;
-  for (size_t i = 0; i < scan->n_chunks; i++)
-    {
-      AntSeries part = ant_series_part (&scan->series, scan->chunk[i].first, scan->chunk[i].n);
-      size_t observed = ant_series_observed (&part, 1);
-      if (observed > most)
-        {
-          most = observed;
-          best = i;
-        }
-    }
-  AntSeries part = ant_series_part (&scan->series, scan->chunk[best].first, scan->chunk[best].n);
-  AntChunk chunk = scan->chunk[best];
-  double rms_ppm, white_ppm;
-  AntStatus status = scatter (&part, &rms_ppm, &white_ppm);
-  if (status)
-    return status;
-  ant_noise_model_default (&chunk.model, part.step_d, rms_ppm, fmax (white_ppm, 1e-3 * rms_ppm), part.error_ppm != NULL,
-                           scan->options.n_lines, scan->options.line);
-  AntSpectrum *spectrum = ant_spectrum_new (&part, WHITTLE_BINS, &status);
-  if (spectrum)
-    status = ant_spectrum_whittle_fit (spectrum, &chunk.model);
-  ant_spectrum_free (spectrum);
-  if (status && status != ANT_NOT_CONVERGED)
-    return status;
-  uint8_t *spike = calloc (part.n, 1);
-  if (!spike)
-    return ANT_NO_MEMORY;
-  if (part.spike)
-    memcpy (spike, part.spike, part.n);
-  status = ant_chunk_fit (&chunk, &part, spike, START_STEPS, 0);
-  free (spike);
-  scan->start = chunk.model;
-  memcpy (scan->start_curvature, chunk.curvature, sizeof scan->start_curvature);
-  if (scan->n_chunks > 1)
-    ant_noise_model_centre_priors (&scan->start, CHUNK_PRIOR_LN);
-  return status == ANT_NOT_CONVERGED ? ANT_OK : status;
-}
-
-static int
-by_strength (const void *a, const void *b)
-{
-  double left = fabs (((const AntEvent *) a)->peak.snr), right = fabs (((const AntEvent *) b)->peak.snr);
-  return left > right ? -1 : left < right;
-}
-
-/* From one chunk's harvest: strong events, and of each sign the candidates that a refit could lift to the threshold. */
-static void
-choose_candidates (AntScan *scan, AntChunkHarvest *harvest, double observed_d)
-{
-  double cut = observed_d < SHORT_RECORD_D ? ANT_KEEP_SNR : scan->threshold_snr - WEIGH_MARGIN;
-  size_t weighed[2] = { 0, 0 };
-  qsort (harvest->event, harvest->n_events, sizeof *harvest->event, by_strength);
-  for (size_t i = 0; i < harvest->n_events; i++)
-    {
-      const AntEvent *event = &harvest->event[i];
-      size_t *count = &weighed[event->sign > 0];
-      if (event->strong || fabs (event->peak.snr) >= cut || *count < LEAST_WEIGHED)
-        {
-          *count += !event->strong;
-          scan->event[scan->n_events++] = *event;
-        }
-    }
-}
-
-/* Merge the chunks: spikes and masks of each chunk's own stretch, and the chance field. */
-static void
-merge_chunks (AntScan *scan)
-{
-  AntChanceField field = { 0 };
-  double fitted_d = 0;
-  for (size_t i = 0; i < scan->n_chunks; i++)
-    {
-      AntChunk *chunk = &scan->chunk[i];
-      AntChunkHarvest *harvest = &scan->harvest[i];
-      ant_chance_field_add (&field, &harvest->chance);
-      fitted_d = fmax (fitted_d, (double) chunk->n * scan->series.step_d);
-      for (size_t p = 0; p < chunk->n; p++)
-        if ((double) (chunk->first + p) >= chunk->own_from && (double) (chunk->first + p) < chunk->own_to)
-          scan->spike[chunk->first + p] = harvest->spike[p];
-    }
-  ant_chance_law_init (&scan->chance, &field, fitted_d);
-}
-
-/* The threshold, strong events out of the residual, candidates listed. */
-static AntStatus
-choose_events (AntScan *scan)
-{
-  size_t room = 0;
-  for (size_t i = 0; i < scan->n_chunks; i++)
-    room += scan->harvest[i].n_events;
-  scan->threshold_snr = scan->options.threshold_snr;
-  if (!(scan->threshold_snr > 0))
-    scan->threshold_snr
-      = ant_chance_law_threshold (&scan->chance,
-                                  scan->options.false_alarms_per_year * scan->chance.field.observed_d / 365.25);
-  scan->event = malloc ((room + 1) * sizeof *scan->event);
-  if (!scan->event)
-    return ANT_NO_MEMORY;
-  for (size_t i = 0; i < scan->n_chunks; i++)
-    choose_candidates (scan, &scan->harvest[i], scan->harvest[i].chance.observed_d);
-  for (size_t i = 0; i < scan->n_events; i++)
-    if (scan->event[i].strong)
-      {
-        const AntShapeFit *fit = &scan->event[i].fit;
-        ant_scan_add_shape (scan, fit, fit->depth_ppm, 0, scan->series.n, scan->residual);
-        ant_scan_mask (scan, fit->centre, fit->duration_d, 0, scan->series.n, scan->spike);
-      }
-  forget_harvest (scan);
-  return ANT_OK;
-}
-
-static AntStatus
-settle_chance (AntScan *scan)
-{
-  AntStatus status = scan->options.surrogates ? ant_scan_learn_chance (scan) : ANT_OK;
-  return status ? status : choose_events (scan);
-}
-
-static int
-by_time (const void *a, const void *b)
-{
-  double left = ((const AntDip *) a)->mid_d, right = ((const AntDip *) b)->mid_d;
-  return (left > right) - (left < right);
-}
-
-static AntPeak
-as_peak (const AntEvent *event)
-{
-  return (AntPeak){ .centre = event->fit.centre, .duration_d = event->fit.duration_d };
-}
-
-/* A dip pulls up its surroundings, and two candidates may have climbed to one dip: within one duration of a stronger
- * event of either sign nothing else stands. */
-static void
-drop_side_lobes (AntScan *scan)
-{
-  for (size_t i = 0; i < scan->n_events; i++)
-    for (size_t j = 0; j < scan->n_events && !scan->event[i].dropped; j++)
-      {
-        const AntEvent *weak = &scan->event[i], *strong = &scan->event[j];
-        double weak_snr = fabs (weak->fit.snr), strong_snr = fabs (strong->fit.snr);
-        AntPeak at_weak = as_peak (weak), at_strong = as_peak (strong);
-        if (i == j || !(strong_snr >= scan->threshold_snr) || weak_snr > strong_snr || (weak_snr == strong_snr && i < j))
-          continue;
-        scan->event[i].dropped = ant_peaks_clash (&at_strong, &at_weak, scan->series.step_d);
-      }
-}
-
-static void
-settle_borders (AntScan *scan)
-{
-  for (size_t i = 0; i < scan->n_events; i++)
-    scan->event[i].fit = scan->event[i].border_fit;
-  drop_side_lobes (scan);
-}
-
-static AntStatus
-list_dips (AntScan *scan)
-{
-  scan->dip = malloc ((scan->n_events + 1) * sizeof *scan->dip);
-  scan->brightening = malloc ((scan->n_events + 1) * sizeof *scan->brightening);
-  if (!scan->dip || !scan->brightening)
-    return ANT_NO_MEMORY;
-  for (size_t i = 0; i < scan->n_events; i++)
-    {
-      const AntEvent *event = &scan->event[i];
-      if (event->dropped || !(event->sign * event->fit.snr >= scan->threshold_snr))
-        continue;
-      AntDip *dip = event->sign > 0 ? &scan->dip[scan->n_dips++] : &scan->brightening[scan->n_brightenings++];
-      ant_shape_fit_to_dip (&event->fit, &scan->refine, scan->series.start_d, dip);
-      dip->first_snr = event->peak.snr;
-      dip->chunk = event->chunk;
-      dip->expected_false = ant_chance_law_expected (&scan->chance, fabs (dip->snr));
-    }
-  qsort (scan->dip, scan->n_dips, sizeof *scan->dip, by_time);
-  qsort (scan->brightening, scan->n_brightenings, sizeof *scan->brightening, by_time);
-  return ANT_OK;
 }
 
 static const char *
@@ -352,10 +139,10 @@ finish (void *work, size_t stage)
 {
   switch (stage)
     {
-    case SEARCH: merge_chunks (work); return ANT_OK;
-    case CHANCE: return settle_chance (work);
-    case WEIGH: drop_side_lobes (work); return ANT_OK;
-    case BORDER: settle_borders (work); return list_dips (work);
+    case SEARCH: ant_scan_merge_chunks (work); return ANT_OK;
+    case CHANCE: return ant_scan_settle_chance (work);
+    case WEIGH: ant_scan_drop_side_lobes (work); return ANT_OK;
+    case BORDER: return ant_scan_list_dips (work);
     case TRACE: return ant_scan_join_traces (work);
     default: return ANT_OK;
     }
