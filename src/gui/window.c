@@ -94,7 +94,6 @@ show_record (AntWindow *self)
   gtk_label_set_text (self->title, name);
   gtk_label_set_text (self->subtitle, headline);
   gtk_widget_set_visible (GTK_WIDGET (self->subtitle), layers != NULL);
-  gtk_window_set_title (GTK_WINDOW (self), name);
   gtk_stack_set_visible_child_name (self->stack, layers ? "work" : "welcome");
   if (!layers)
     return;
@@ -118,9 +117,10 @@ progress_text (AntDesk *desk)
   if (!progress->title)
     return g_strdup (_("Beginning…"));
   GString *text = g_string_new (NULL);
-  g_string_printf (text, _("%s, stage %" G_GSIZE_FORMAT " of %" G_GSIZE_FORMAT), _ (progress->title), progress->stage + 1, progress->n_stages);
+  g_string_printf (text, _("Stage %" G_GSIZE_FORMAT " of %" G_GSIZE_FORMAT ", %s"), progress->stage + 1, progress->n_stages,
+                   _ (progress->title));
   if (!isnan (progress->stage_left_s))
-    g_string_append_printf (text, _(", %.0f s left of it"), ceil (progress->stage_left_s));
+    g_string_append_printf (text, _(": %.0f s left"), ceil (progress->stage_left_s));
   return g_string_free (text, FALSE);
 }
 
@@ -143,6 +143,18 @@ show_status (AntWindow *self)
   gtk_label_set_text (self->welcome, busy == ANT_BUSY_OPENING ? text : _("Open a record of solar irradiance"));
   gtk_widget_set_visible (GTK_WIDGET (self->welcome_more), busy == ANT_BUSY_NO);
   gtk_spinner_set_spinning (self->spinner, busy == ANT_BUSY_OPENING);
+}
+
+/* The desktop's list of windows tells from afar whether the scan is over. */
+static void
+show_title (AntWindow *self)
+{
+  const AntRecord *record = ant_desk_get_record (self->desk);
+  g_autofree char *name = record ? g_path_get_basename (record->path) : g_strdup (_("Antumbra"));
+  gboolean scanning = ant_desk_get_busy (self->desk) == ANT_BUSY_SCANNING;
+  g_autofree char *title = scanning ? g_strdup_printf (_("%s – scanning"), name) : g_strdup (name);
+  if (g_strcmp0 (title, gtk_window_get_title (GTK_WINDOW (self))) != 0)
+    gtk_window_set_title (GTK_WINDOW (self), title);
 }
 
 /* One button in one place: what it does now stands on it. */
@@ -172,7 +184,10 @@ desk_changed_cb (AntDesk *desk, guint what, AntWindow *self)
   if (what & (ANT_DESK_BUSY | ANT_DESK_RESULTS | ANT_DESK_RECORD | ANT_DESK_SETTINGS | ANT_DESK_POINTER))
     show_status (self);
   if (what & (ANT_DESK_BUSY | ANT_DESK_RESULTS | ANT_DESK_RECORD | ANT_DESK_SETTINGS))
-    show_scan_button (self);
+    {
+      show_scan_button (self);
+      show_title (self);
+    }
   ant_window_update_actions (self);
 }
 
