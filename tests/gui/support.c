@@ -90,7 +90,7 @@ test_gui_wait (gboolean (*holds) (gpointer data), gpointer data, double seconds)
   while (!holds (data))
     {
       g_assert_false (late);
-      g_main_context_iteration (NULL, TRUE);
+      g_main_context_iteration (NULL, TRUE); /* the timer at least brings it back */
     }
   if (!late)
     g_source_remove (timer);
