@@ -58,8 +58,8 @@ ant_noise_health_facts (const AntScanResults *results, gsize index)
   add (facts, _("Neighbours"), _("correlated by %.3f (0 if the model holds)"), health->lag1);
   if (!isnan (health->loudest))
     add (facts, _("Loudest, quietest"), _("%.2f, %.2f of the stated size"), health->loudest, health->quietest);
-  add (facts, _("Samples"), _("%" G_GSIZE_FORMAT ", %" G_GSIZE_FORMAT " spikes left out"), health->observed, health->spikes);
-  add (facts, _("Mirror"), _("%" G_GSIZE_FORMAT " dips, %" G_GSIZE_FORMAT " brightenings of 9 h and less"), results->n_mirror_dips,
+  add (facts, _("Samples"), _("%zu, %zu spikes left out"), health->observed, health->spikes);
+  add (facts, _("Mirror"), _("%zu dips, %zu brightenings of 9 h and less"), results->n_mirror_dips,
        results->n_mirrored);
   for (guint i = 0; i < MIN (results->said->len, 12); i++)
     add (facts, i == 0 ? _("Remarks") : "", "%s", (const char *) g_ptr_array_index (results->said, i));
@@ -73,15 +73,15 @@ ant_noise_chunk_title (const AntScanResults *results, gsize index)
   const AntSeries *series = &results->record->series;
   g_autofree char *from = ant_instant_words (results->record, ant_series_time (series, chunk->own_from));
   g_autofree char *to = ant_instant_words (results->record, ant_series_time (series, chunk->own_to));
-  return g_strdup_printf (_("Piece %" G_GSIZE_FORMAT ": %s to %s"), index + 1, from, to);
+  return g_strdup_printf (_("Piece %zu: %s to %s"), index + 1, from, to);
 }
 
 char *
 ant_scan_headline (const AntScanResults *results)
 {
   g_autofree char *chance = ant_chance_words (results->expected_at_threshold);
-  g_autofree char *dips = g_strdup_printf (g_dngettext (NULL, "%" G_GSIZE_FORMAT " dip above SNR %.1f", "%" G_GSIZE_FORMAT " dips above SNR %.1f",
+  g_autofree char *dips = g_strdup_printf (g_dngettext (NULL, "%zu dip above SNR %.1f", "%zu dips above SNR %.1f",
                                                         results->n_dips),
                                            results->n_dips, results->threshold_snr);
-  return g_strdup_printf (_("%s · %s expected by chance · mirror %" G_GSIZE_FORMAT), dips, chance, results->n_mirrored);
+  return g_strdup_printf (_("%s · %s expected by chance · mirror %zu"), dips, chance, results->n_mirrored);
 }

@@ -44,7 +44,7 @@ add_grid (GPtrArray *facts, const AntRecord *record, const AntRecordSummary *sum
     add (facts, _("Cadence"), _("%s, stamps within %s of the grid"), cadence, jitter);
   add (facts, _("Exposure"), record->exposure_known ? "%s" : _("unknown, %s used"), exposure);
   add (facts, _("Stamps mark"), "%s", _ (places[record->stamp]));
-  add (facts, _("Samples"), _("%" G_GSIZE_FORMAT " of %" G_GSIZE_FORMAT " places, duty cycle %.1f %%"), summary->n_observed,
+  add (facts, _("Samples"), _("%zu of %zu places, duty cycle %.1f %%"), summary->n_observed,
        summary->n_places, 100.0 * (double) summary->n_observed / (double) summary->n_places);
   if (record->gaps->len > 0)
     add (facts, _("Gaps"), _("%u, the longest %s"), record->gaps->len, gap);
@@ -76,7 +76,7 @@ ant_record_left_out (const AntRecordSummary *summary)
   GPtrArray *facts = g_ptr_array_new_with_free_func (ant_fact_free);
   for (unsigned bit = 0; bit < ANT_N_FLAGS; bit++)
     if (summary->n_flagged[bit] > 0)
-      add (facts, ant_flag_name (bit), _("%" G_GSIZE_FORMAT " rows\n%s"), summary->n_flagged[bit], ant_flag_description (bit));
+      add (facts, ant_flag_name (bit), _("%zu rows\n%s"), summary->n_flagged[bit], ant_flag_description (bit));
   return facts;
 }
 
@@ -86,6 +86,6 @@ ant_record_headline (const AntRecord *record, const AntRecordSummary *summary)
   g_autofree char *span = ant_length_words (summary->last_d - summary->first_d);
   g_autofree char *cadence = ant_length_words (record->cadence_d);
   double missing = 100.0 * (1.0 - (double) summary->n_observed / (double) summary->n_places);
-  return g_strdup_printf (_("%s · %s · %" G_GSIZE_FORMAT " samples · %.0f %% missing"), span, cadence, summary->n_observed,
+  return g_strdup_printf (_("%s · %s · %zu samples · %.0f %% missing"), span, cadence, summary->n_observed,
                           missing);
 }

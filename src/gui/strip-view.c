@@ -147,7 +147,7 @@ ant_strip_view_describe (AntPlotView *plot)
   for (gsize i = 0; i < n; i++)
     seen += marks[i].mid_d >= view->from && marks[i].mid_d <= view->to;
   g_autofree char *from = ant_instant_words (record, view->from), *to = ant_instant_words (record, view->to);
-  return g_strdup_printf (_("From %s to %s; %" G_GSIZE_FORMAT " dips in view"), from, to, seen);
+  return g_strdup_printf (_("From %s to %s; %zu dips in view"), from, to, seen);
 }
 
 static double

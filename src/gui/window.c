@@ -117,7 +117,7 @@ progress_text (AntDesk *desk)
   if (!progress->title)
     return g_strdup (_("Beginning…"));
   GString *text = g_string_new (NULL);
-  g_string_printf (text, _("Stage %" G_GSIZE_FORMAT " of %" G_GSIZE_FORMAT ", %s"), progress->stage + 1, progress->n_stages,
+  g_string_printf (text, _("Stage %zu of %zu, %s"), progress->stage + 1, progress->n_stages,
                    _ (progress->title));
   if (!isnan (progress->stage_left_s))
     g_string_append_printf (text, _(": %.0f s left"), ceil (progress->stage_left_s));
