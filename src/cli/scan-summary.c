@@ -58,7 +58,7 @@ print_floor (const AntScanResults *results)
   g_print (_("Noise floor, 1-sigma depth:"));
   for (gsize h = 0; h < G_N_ELEMENTS (hours); h++)
     for (gsize p = 0; p < results->n_floor; p++)
-      if (fabs (results->floor[p].duration_d * ANT_HOURS_PER_DAY - hours[h]) < 0.01)
+      if (fabs (results->floor[p].duration_d * ANT_HOURS_PER_DAY - hours[h]) < 0.01 && isfinite (results->floor[p].sigma_ppm))
         g_print (_(" %.1f ppm at %g h;"), results->floor[p].sigma_ppm, hours[h]);
   g_print (_(" a dip is listed from %.2f times that depth.\n"), results->threshold_snr);
 }

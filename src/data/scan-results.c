@@ -145,6 +145,16 @@ say_surrogates (AntScanResults *results)
          results->n_surrogates, results->n_surrogate_events);
 }
 
+/* The mirror is the data's own check: noise of the fitted kind would put as few brightenings above the threshold as dips. */
+static void
+say_mirror (AntScanResults *results)
+{
+  double expected = results->expected_at_threshold;
+  if ((double) results->n_mirrored > expected + 3 * sqrt (expected) + 2)
+    say (results, _("%zu brightenings of 9 h and less are listed where noise alone would give %.2g: the record has excursions that the noise model does not know (instrument, flares), so dips of like SNR need a cause other than chance, not necessarily a crossing"),
+         results->n_mirrored, expected);
+}
+
 static void
 say_length (AntScanResults *results)
 {
@@ -185,6 +195,7 @@ ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntS
   say_surrogates (results);
   say_health (results);
   say_length (results);
+  say_mirror (results);
   return results;
 }
 
