@@ -6,20 +6,25 @@
  * A stage may find at count() time that it has nothing to do and return 0. */
 #pragma once
 
-#include <stdatomic.h>
 #include <stddef.h>
 #include "core/status.h"
 
 /* A wish that long slices look at now and then: once asked, they end soon with ANT_STOPPED. Zero-initialised. */
 typedef struct
 {
-  atomic_int asked;
+  int asked; /* only through the two functions below, which any thread may call */
 } AntStop;
+
+static inline void
+ant_stop_ask (AntStop *stop)
+{
+  __atomic_store_n (&stop->asked, 1, __ATOMIC_RELAXED);
+}
 
 static inline int
 ant_stop_asked (const AntStop *stop) /* NULL: never */
 {
-  return stop && atomic_load_explicit (&stop->asked, memory_order_relaxed);
+  return stop && __atomic_load_n (&stop->asked, __ATOMIC_RELAXED);
 }
 
 typedef struct

@@ -105,7 +105,7 @@ watch_workers (Run *run)
         gsize done = run->done;
         g_mutex_unlock (&run->lock);
         if (run->stages->stop && g_cancellable_is_cancelled (run->cancellable))
-          atomic_store (&run->stages->stop (run->work)->asked, 1);
+          ant_stop_ask (run->stages->stop (run->work));
         report (run, done);
         g_mutex_lock (&run->lock);
         wake_us = g_get_monotonic_time () + REPORT_EVERY_US;
