@@ -156,8 +156,10 @@ ant_radius_words (const AntDip *dip)
 static const char *
 edges_words (AntEdges edges)
 {
-  static const char *const words[] = { [ANT_EDGES_NONE] = N_("neither"), [ANT_EDGES_INGRESS] = N_("ingress only"),
-                                       [ANT_EDGES_EGRESS] = N_("egress only"), [ANT_EDGES_BOTH] = N_("ingress and egress") };
+  static const char *const words[] = { [ANT_EDGES_NONE] = N_ ("neither"),
+                                       [ANT_EDGES_INGRESS] = N_ ("ingress only"),
+                                       [ANT_EDGES_EGRESS] = N_ ("egress only"),
+                                       [ANT_EDGES_BOTH] = N_ ("ingress and egress") };
   return _ (words[edges]);
 }
 
@@ -181,9 +183,11 @@ ant_dip_facts (const AntRecord *record, const AntDip *dip, double upper_limit_pp
       add_taking (facts, _("Radius ratio"), g_strdup_printf (_("%.4f of the Sun's"), dip->radius_ratio));
     }
   add_taking (facts, _("Middle"), g_strconcat (middle, *exact ? " UTC" : "", NULL));
-  add_taking (facts, _("Contacts I to IV"), g_strdup_printf (_("%s, ingress %.0f min"), length, dip->edge_d * ANT_MINUTES_PER_DAY));
+  add_taking (facts, _("Contacts I to IV"),
+              g_strdup_printf (_("%s, ingress %.0f min"), length, dip->edge_d * ANT_MINUTES_PER_DAY));
   add_taking (facts, _("Mean depth"), g_strdup_printf (_("%.1f ppm"), dip->mean_depth_ppm));
-  add_taking (facts, _("Observed"), g_strdup_printf (_("%.0f %%, %s seen"), 100 * dip->coverage, edges_words (dip->edges)));
+  add_taking (facts, _("Observed"),
+              g_strdup_printf (_("%.0f %%, %s seen"), 100 * dip->coverage, edges_words (dip->edges)));
   return facts;
 }
 

@@ -1,5 +1,5 @@
-/* judgement.h - what the analyst says of dips: a class and a note for each, kept by the dip's place in time so that they
- * outlive a new scan. For one thread. */
+/* judgement.h - what the analyst says of dips: a class and a note for each, kept by the dip's place in time so that
+ * they outlive a new scan. For one thread. */
 #pragma once
 
 #include <glib.h>

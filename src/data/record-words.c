@@ -50,7 +50,8 @@ add_grid (GPtrArray *facts, const AntRecord *record, const AntRecordSummary *sum
     add (facts, _("Gaps"), _("%u, the longest %s"), record->gaps->len, gap);
   add (facts, _("Level"), _("%.8g%s%s, the median: 0 ppm"), record->median, record->value_unit ? " " : "",
        record->value_unit ? record->value_unit : "");
-  add (facts, _("Scatter"), _("%.4g ppm, %.4g ppm from sample to sample"), summary->scatter_ppm, summary->sample_scatter_ppm);
+  add (facts, _("Scatter"), _("%.4g ppm, %.4g ppm from sample to sample"), summary->scatter_ppm,
+       summary->sample_scatter_ppm);
 }
 
 GPtrArray *
@@ -60,7 +61,8 @@ ant_record_facts (const AntRecord *record, const AntRecordSummary *summary)
   add (facts, _("Format"), "%s", record->format);
   if (summary->has_times)
     {
-      g_autofree char *first = ant_instant_words (record, summary->first_d), *last = ant_instant_words (record, summary->last_d);
+      g_autofree char *first = ant_instant_words (record, summary->first_d),
+                      *last = ant_instant_words (record, summary->last_d);
       add (facts, _("From"), "%s", first);
       add (facts, _("To"), "%s", last);
     }

@@ -53,11 +53,12 @@ new_window (GSimpleAction *action, GVariant *parameter, gpointer data)
 static void
 about (GSimpleAction *action, GVariant *parameter, gpointer data)
 {
-  gtk_show_about_dialog (gtk_application_get_active_window (GTK_APPLICATION (data)), "program-name", _("Antumbra"),
-                         "logo-icon-name", "org.antumbra.Antumbra", "version", ANT_VERSION, "comments",
-                         _("Finds and explains dips in records of solar irradiance.\n\nNever look at the Sun, least of all "
-                           "through optics, without a certified solar filter made for it."),
-                         "license-type", GTK_LICENSE_GPL_3_0, NULL);
+  gtk_show_about_dialog (
+      gtk_application_get_active_window (GTK_APPLICATION (data)), "program-name", _("Antumbra"), "logo-icon-name",
+      "org.antumbra.Antumbra", "version", ANT_VERSION, "comments",
+      _("Finds and explains dips in records of solar irradiance.\n\nNever look at the Sun, least of all "
+         "through optics, without a certified solar filter made for it."),
+      "license-type", GTK_LICENSE_GPL_3_0, NULL);
 }
 
 static void
@@ -81,7 +82,8 @@ ant_application_startup (GApplication *application)
   G_APPLICATION_CLASS (ant_application_parent_class)->startup (application);
   g_action_map_add_action_entries (G_ACTION_MAP (application), entries, G_N_ELEMENTS (entries), application);
   ant_shortcuts_install (GTK_APPLICATION (application));
-  gtk_icon_theme_add_resource_path (gtk_icon_theme_get_for_display (gdk_display_get_default ()), "/org/antumbra/Antumbra/icons");
+  gtk_icon_theme_add_resource_path (gtk_icon_theme_get_for_display (gdk_display_get_default ()),
+                                    "/org/antumbra/Antumbra/icons");
   gtk_window_set_default_icon_name ("org.antumbra.Antumbra");
   g_autoptr (GtkCssProvider) style = gtk_css_provider_new ();
   gtk_css_provider_load_from_resource (style, "/org/antumbra/Antumbra/style.css");

@@ -24,7 +24,8 @@ ant_closeup_view_desk_changed (AntPlotView *plot, AntDeskChange what)
   g_clear_pointer (&self->data, ant_closeup_data_free);
   if (!item || !ant_desk_get_layers (desk))
     return;
-  self->data = ant_closeup_data_new (ant_desk_get_layers (desk), ant_desk_get_settings (desk), ant_dip_item_get_dip (item));
+  self->data =
+      ant_closeup_data_new (ant_desk_get_layers (desk), ant_desk_get_settings (desk), ant_dip_item_get_dip (item));
   g_autofree char *title = ant_dip_item_title (item);
   ant_plot_view_set_title (plot, title);
 }

@@ -69,9 +69,11 @@ ant_columns_size_allocate (GtkWidget *widget, int width, int height, int baselin
   int first = shown == 1 ? room : (int) (room * FIRST_SHARE / (FIRST_SHARE + shown - 1));
   int other = shown == 1 ? room : (room - first) / ((int) shown - 1);
   guint index = 0;
-  for (GtkWidget *child = gtk_widget_get_first_child (widget); child; child = gtk_widget_get_next_sibling (child), index++)
+  for (GtkWidget *child = gtk_widget_get_first_child (widget); child;
+       child = gtk_widget_get_next_sibling (child), index++)
     {
-      gboolean fits = shown == 3 || (shown == 2 && (index == 0 || index == second)) || (shown == 1 && index == self->front);
+      gboolean fits =
+          shown == 3 || (shown == 2 && (index == 0 || index == second)) || (shown == 1 && index == self->front);
       gtk_widget_set_child_visible (child, fits);
       if (!fits)
         continue;

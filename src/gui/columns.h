@@ -1,7 +1,8 @@
-/* columns.h - up to three children side by side as the width allows; those that do not fit wait behind the one in front.
+/* columns.h - up to three children side by side as the width allows; those that do not fit wait behind the one in
+ * front.
  *
- * Wide: all. Narrower: the first, and the one in front. Narrow: the one in front alone. "changed" is emitted, on an idle,
- * when the number that is shown has changed. */
+ * Wide: all. Narrower: the first, and the one in front. Narrow: the one in front alone. "changed" is emitted, on an
+ * idle, when the number that is shown has changed. */
 #pragma once
 
 #include <gtk/gtk.h>

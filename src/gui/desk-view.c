@@ -75,7 +75,8 @@ static void
 place_view (AntDesk *self, double from_d, double to_d)
 {
   AntSpan whole = ant_desk_whole (self);
-  double length_d = CLAMP (to_d - from_d, fmin (least_d (self), whole.end_d - whole.start_d), whole.end_d - whole.start_d);
+  double length_d =
+      CLAMP (to_d - from_d, fmin (least_d (self), whole.end_d - whole.start_d), whole.end_d - whole.start_d);
   double middle_d = (from_d + to_d) / 2;
   double start_d = CLAMP (middle_d - length_d / 2, whole.start_d, whole.end_d - length_d);
   self->view.from = start_d;
@@ -129,11 +130,13 @@ ant_desk_view_selected (AntDesk *self)
   else if (self->selected)
     {
       const AntDip *dip = ant_dip_item_get_dip (self->selected);
-      ant_desk_set_view (self, dip->mid_d - SURROUNDINGS / 2 * dip->duration_d, dip->mid_d + SURROUNDINGS / 2 * dip->duration_d);
+      ant_desk_set_view (self, dip->mid_d - SURROUNDINGS / 2 * dip->duration_d,
+                         dip->mid_d + SURROUNDINGS / 2 * dip->duration_d);
     }
 }
 
-/* A dip outside the view, or only partly in it, comes to its middle; the scale stays unless it is too small for the dip. */
+/* A dip outside the view, or only partly in it, comes to its middle; the scale stays unless it is too small for the
+ * dip. */
 void
 ant_desk_bring_into_view (AntDesk *self, const AntDip *dip)
 {
@@ -232,7 +235,9 @@ append_value (AntDesk *self, GString *text, gsize place)
       g_string_append (text, _("  ·  not observed"));
       return;
     }
-  const char *unit = g_strcmp0 (record->value_unit, "W/m2") == 0 ? "W/m²" : record->value_unit ? record->value_unit : "";
+  const char *unit = g_strcmp0 (record->value_unit, "W/m2") == 0 ? "W/m²"
+                     : record->value_unit                        ? record->value_unit
+                                                                 : "";
   g_autofree char *residual = ant_number_words ((double) self->layers->residual_ppm[place], 0);
   g_string_append_printf (text, _("  ·  %.7g %s  ·  residual %s ppm"), ant_record_value (record, ppm), unit, residual);
 }
@@ -253,7 +258,8 @@ ant_desk_readout (AntDesk *self)
     return g_strdup ("");
   const AntSeries *series = &self->layers->record->series;
   char time[96];
-  ant_time_label (&self->layers->record->time, self->pointer_d, (self->view.to - self->view.from) / 2000, sizeof time, time);
+  ant_time_label (&self->layers->record->time, self->pointer_d, (self->view.to - self->view.from) / 2000, sizeof time,
+                  time);
   GString *text = g_string_new (time);
   double place = round (ant_series_place (series, self->pointer_d));
   if (place >= 0 && place < (double) series->n)

@@ -250,6 +250,7 @@ ant_desk_ask (AntDesk *self, double from_d, double to_d)
   if (!self->layers || !(to_d > from_d))
     return;
   GCancellable *stop = begin (self, ANT_BUSY_ASKING);
-  ant_ask_task_async (self->layers, &self->settings, (from_d + to_d) / 2, to_d - from_d, stop, asked_cb, g_object_ref (self));
+  ant_ask_task_async (self->layers, &self->settings, (from_d + to_d) / 2, to_d - from_d, stop, asked_cb,
+                      g_object_ref (self));
   ant_desk_tell (self, ANT_DESK_BUSY);
 }

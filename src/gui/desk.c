@@ -181,7 +181,8 @@ ant_desk_make_marks (AntDesk *self)
     {
       AntDipItem *item = g_ptr_array_index (self->mark_items, i);
       const AntDip *dip = ant_dip_item_get_dip (item);
-      AntDipMark mark = { dip->mid_d, dip->duration_d, dip->depth_ppm, ant_dip_item_get_number (item), ant_dip_item_look (item) };
+      AntDipMark mark = { dip->mid_d, dip->duration_d, dip->depth_ppm, ant_dip_item_get_number (item),
+                          ant_dip_item_look (item) };
       g_array_append_val (self->marks, mark);
     }
 }
@@ -280,8 +281,10 @@ ant_desk_class_init (AntDeskClass *klass)
   GObjectClass *object_class = G_OBJECT_CLASS (klass);
   object_class->dispose = ant_desk_dispose;
   object_class->finalize = ant_desk_finalize;
-  signals[CHANGED] = g_signal_new ("changed", ANT_TYPE_DESK, G_SIGNAL_RUN_LAST, 0, NULL, NULL, NULL, G_TYPE_NONE, 1, G_TYPE_UINT);
-  signals[FAILED] = g_signal_new ("failed", ANT_TYPE_DESK, G_SIGNAL_RUN_LAST, 0, NULL, NULL, NULL, G_TYPE_NONE, 1, G_TYPE_STRING);
+  signals[CHANGED] =
+      g_signal_new ("changed", ANT_TYPE_DESK, G_SIGNAL_RUN_LAST, 0, NULL, NULL, NULL, G_TYPE_NONE, 1, G_TYPE_UINT);
+  signals[FAILED] =
+      g_signal_new ("failed", ANT_TYPE_DESK, G_SIGNAL_RUN_LAST, 0, NULL, NULL, NULL, G_TYPE_NONE, 1, G_TYPE_STRING);
 }
 
 static void

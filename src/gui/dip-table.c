@@ -218,7 +218,8 @@ kept_cb (gpointer object, gpointer data)
   if (!self->desk || !(ant_dip_item_get_kind (item) & ant_desk_get_shown (self->desk)))
     return FALSE;
   g_autofree char *wanted = g_utf8_casefold (gtk_editable_get_text (GTK_EDITABLE (self->search)), -1);
-  g_autofree char *title = ant_dip_item_title (item), *middle = ant_instant_words (ant_desk_get_record (self->desk), ant_dip_item_get_dip (item)->mid_d);
+  g_autofree char *title = ant_dip_item_title (item),
+                  *middle = ant_instant_words (ant_desk_get_record (self->desk), ant_dip_item_get_dip (item)->mid_d);
   g_autofree char *all = g_strjoin ("\n", title, middle, ant_dip_class_title (ant_dip_item_get_class (item)),
                                     ant_dip_item_get_note (item), NULL);
   g_autofree char *folded = g_utf8_casefold (all, -1);
@@ -239,10 +240,11 @@ show_emptiness (AntDipTable *self)
   const AntScanResults *results = ant_desk_get_results (self->desk);
   gboolean empty = g_list_model_get_n_items (G_LIST_MODEL (self->selection)) == 0;
   gboolean filtered = *gtk_editable_get_text (GTK_EDITABLE (self->search)) != '\0';
-  g_autofree char *text = filtered || !results
-                              ? g_strdup (filtered ? _("Nothing fits these words.") : "")
-                              : g_strdup_printf (_("Nothing reaches SNR %.1f. The chart shows what depth would have been seen."),
-                                                 results->threshold_snr);
+  g_autofree char *text =
+      filtered || !results
+          ? g_strdup (filtered ? _("Nothing fits these words.") : "")
+          : g_strdup_printf (_("Nothing reaches SNR %.1f. The chart shows what depth would have been seen."),
+                             results->threshold_snr);
   gtk_label_set_text (self->empty, text);
   gtk_stack_set_visible_child_name (self->stack, empty ? "empty" : "list");
 }
@@ -251,7 +253,8 @@ show_emptiness (AntDipTable *self)
 static void
 scroll_to (AntDipTable *self, guint position)
 {
-  for (GtkWidget *child = gtk_widget_get_first_child (GTK_WIDGET (self->view)); child; child = gtk_widget_get_next_sibling (child))
+  for (GtkWidget *child = gtk_widget_get_first_child (GTK_WIDGET (self->view)); child;
+       child = gtk_widget_get_next_sibling (child))
     if (GTK_IS_LIST_VIEW (child))
       gtk_widget_activate_action (child, "list.scroll-to-item", "u", position);
 }
@@ -307,8 +310,10 @@ static void
 name_depth_column (AntDipTable *self)
 {
   const AntRecord *record = ant_desk_get_record (self->desk);
-  g_autoptr (GtkColumnViewColumn) column = g_list_model_get_item (gtk_column_view_get_columns (self->view), DEPTH_COLUMN);
-  g_autofree char *title = g_strdup_printf (_("Depth, %s"), ant_depth_unit_name (record, ant_desk_get_unit (self->desk)));
+  g_autoptr (GtkColumnViewColumn) column =
+      g_list_model_get_item (gtk_column_view_get_columns (self->view), DEPTH_COLUMN);
+  g_autofree char *title =
+      g_strdup_printf (_("Depth, %s"), ant_depth_unit_name (record, ant_desk_get_unit (self->desk)));
   gtk_column_view_column_set_title (column, title);
 }
 

@@ -41,7 +41,8 @@ ant_file_prompt_open (GtkWindow *parent, const char *title, AntFilePromptFunc ca
 }
 
 void
-ant_file_prompt_save (GtkWindow *parent, const char *title, const char *suggested, AntFilePromptFunc callback, gpointer data)
+ant_file_prompt_save (GtkWindow *parent, const char *title, const char *suggested, AntFilePromptFunc callback,
+                      gpointer data)
 {
   GtkFileChooserNative *dialog
       = prompt_new (parent, title, GTK_FILE_CHOOSER_ACTION_SAVE, _("_Save"), callback, data);

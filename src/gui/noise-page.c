@@ -1,4 +1,5 @@
-/* noise-page.c - the page Noise. A record that was cut into pieces has a noise model for each; one is shown at a time. */
+/* noise-page.c - the page Noise. A record that was cut into pieces has a noise model for each; one is shown at a time.
+ */
 #include "gui/noise-page.h"
 
 #include <glib/gi18n.h>

@@ -32,7 +32,8 @@ apply (GtkWidget *window)
   gtk_css_provider_load_from_data (provider, css, -1);
   if (before)
     gtk_style_context_remove_provider_for_display (display, GTK_STYLE_PROVIDER (before));
-  gtk_style_context_add_provider_for_display (display, GTK_STYLE_PROVIDER (provider), GTK_STYLE_PROVIDER_PRIORITY_APPLICATION);
+  gtk_style_context_add_provider_for_display (display, GTK_STYLE_PROVIDER (provider),
+                                              GTK_STYLE_PROVIDER_PRIORITY_APPLICATION);
   g_object_set_data_full (G_OBJECT (display), "ant-paper", provider, g_object_unref);
 }
 
@@ -47,7 +48,7 @@ ant_paper_follow (GtkWidget *window)
 {
   GtkSettings *settings = gtk_widget_get_settings (window);
   g_signal_connect_object (settings, "notify::gtk-theme-name", G_CALLBACK (scheme_changed_cb), window, G_CONNECT_AFTER);
-  g_signal_connect_object (settings, "notify::gtk-application-prefer-dark-theme", G_CALLBACK (scheme_changed_cb), window,
-                           G_CONNECT_AFTER);
+  g_signal_connect_object (settings, "notify::gtk-application-prefer-dark-theme", G_CALLBACK (scheme_changed_cb),
+                           window, G_CONNECT_AFTER);
   apply (window);
 }

@@ -1,5 +1,5 @@
-/* paper.h - the colours that the desktop's present scheme asks of the plots, and the same paper under all that lies beside
- * them. */
+/* paper.h - the colours that the desktop's present scheme asks of the plots, and the same paper under all that lies
+ * beside them. */
 #pragma once
 
 #include <gtk/gtk.h>

@@ -75,8 +75,9 @@ describe (AntPlotView *self)
   AntPlotViewClass *klass = ANT_PLOT_VIEW_GET_CLASS (self);
   gboolean shown = priv->desk && ant_desk_get_layers (priv->desk);
   g_autofree char *text = shown && klass->describe ? klass->describe (self) : g_strdup (_("Nothing to show yet"));
-  gtk_accessible_update_property (GTK_ACCESSIBLE (self), GTK_ACCESSIBLE_PROPERTY_LABEL, priv->title ? priv->title : _("Plot"),
-                                  GTK_ACCESSIBLE_PROPERTY_DESCRIPTION, text, -1);
+  gtk_accessible_update_property (GTK_ACCESSIBLE (self), GTK_ACCESSIBLE_PROPERTY_LABEL,
+                                  priv->title ? priv->title : _("Plot"), GTK_ACCESSIBLE_PROPERTY_DESCRIPTION, text,
+                                  -1);
 }
 
 void
@@ -175,8 +176,9 @@ paint_figure (cairo_t *cr, const AntBox *box, double scale, gpointer data)
 static AntFigureOptions
 figure_options (AntPlotView *self, AntFigureFormat format)
 {
-  return (AntFigureOptions) { format, fmax (gtk_widget_get_width (GTK_WIDGET (self)), 16),
-                              fmax (gtk_widget_get_height (GTK_WIDGET (self)), 16), PICTURE_SCALE, private (self)->title };
+  return (AntFigureOptions){ format, fmax (gtk_widget_get_width (GTK_WIDGET (self)), 16),
+                             fmax (gtk_widget_get_height (GTK_WIDGET (self)), 16), PICTURE_SCALE,
+                             private(self)->title };
 }
 
 gboolean
@@ -207,8 +209,8 @@ save_action (GtkWidget *widget, const char *name, GVariant *parameter)
     return;
   g_autofree char *lower = g_utf8_strdown (private (self)->title, -1);
   g_autofree char *suggested = g_strconcat (g_strdelimit (lower, " ", '-'), ".png", NULL);
-  ant_file_prompt_save (GTK_WINDOW (gtk_widget_get_root (widget)), _("Save figure as PNG, SVG or PDF"), suggested, save_path_cb,
-                        g_object_ref (self));
+  ant_file_prompt_save (GTK_WINDOW (gtk_widget_get_root (widget)), _("Save figure as PNG, SVG or PDF"), suggested,
+                        save_path_cb, g_object_ref (self));
 }
 
 static void

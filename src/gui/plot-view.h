@@ -1,5 +1,5 @@
-/* plot-view.h - a widget that shows what a painter of plot/ draws: theme, caching, accessibility and saving are done here
- * once, so that each plot only says what to paint and what to call it.
+/* plot-view.h - a widget that shows what a painter of plot/ draws: theme, caching, accessibility and saving are done
+ * here once, so that each plot only says what to paint and what to call it.
  *
  * Actions of every plot: plot.save (asks where), plot.copy (as a picture), plot.menu. */
 #pragma once

@@ -1,5 +1,5 @@
-/* preferences.h - what the window remembers from one day to the next: records opened, its size, the settings panel. A key
- * file in the user's configuration folder; one that cannot be read or written is no reason to trouble anybody. */
+/* preferences.h - what the window remembers from one day to the next: records opened, its size, the settings panel. A
+ * key file in the user's configuration folder; one that cannot be read or written is no reason to trouble anybody. */
 #pragma once
 
 #include <glib.h>

@@ -64,7 +64,8 @@ show_spans (AntRecordPage *self, const AntRecord *record)
   while ((child = gtk_widget_get_first_child (GTK_WIDGET (self->gaps))))
     gtk_list_box_remove (self->gaps, child);
   for (guint i = 0; i < MIN (record->dark_spans->len, MOST_SPANS); i++)
-    gtk_list_box_append (self->gaps, span_row_new (record, &g_array_index (record->dark_spans, AntSpan, i), _("dark or covered")));
+    gtk_list_box_append (self->gaps,
+                         span_row_new (record, &g_array_index (record->dark_spans, AntSpan, i), _("dark or covered")));
   for (guint i = 0; i < MIN (record->gaps->len, MOST_SPANS); i++)
     gtk_list_box_append (self->gaps, span_row_new (record, &g_array_index (record->gaps, AntSpan, i), _("gap")));
 }

@@ -61,7 +61,8 @@ part_at (AntRibbonView *self, double x)
   AntPlotView *plot = ANT_PLOT_VIEW (self);
   AntBox box = ant_plot_view_box (plot);
   AntRibbon ribbon = make_ribbon (plot);
-  return ant_ribbon_part_at (&box, &ribbon, ant_desk_get_view (ant_plot_view_get_desk (plot)), ant_plot_view_theme (plot), x);
+  return ant_ribbon_part_at (&box, &ribbon, ant_desk_get_view (ant_plot_view_get_desk (plot)),
+                             ant_plot_view_theme (plot), x);
 }
 
 static void
@@ -135,7 +136,8 @@ ant_ribbon_view_class_init (AntRibbonViewClass *klass)
 {
   GtkWidgetClass *widget_class = GTK_WIDGET_CLASS (klass);
   AntPlotViewClass *plot_class = ANT_PLOT_VIEW_CLASS (klass);
-  plot_class->watches = ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT | ANT_DESK_LOOK;
+  plot_class->watches =
+      ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT | ANT_DESK_LOOK;
   plot_class->paint = ant_ribbon_view_paint;
   plot_class->describe = ant_ribbon_view_describe;
   widget_class->measure = ant_ribbon_view_measure;

@@ -108,7 +108,8 @@ label (AntSettingsRow *self)
   gboolean word = setting->kind == ANT_SETTING_WORD;
   g_autofree char *name = readable (setting->key), *range = ant_setting_range (setting);
   g_autofree char *fallback = ant_setting_format (setting, setting->fallback);
-  g_autofree char *tip = g_strdup_printf (_("%s; default %s\nIn the command: --set %s=…"), range, fallback, setting->key);
+  g_autofree char *tip =
+      g_strdup_printf (_("%s; default %s\nIn the command: --set %s=…"), range, fallback, setting->key);
   gtk_label_set_text (self->name, name);
   gtk_label_set_text (self->help, _ (setting->help));
   gtk_label_set_text (self->unit, setting->unit);

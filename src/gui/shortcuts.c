@@ -10,48 +10,51 @@
 #define GENERAL N_("General")
 
 const AntShortcut ant_shortcut_table[] = {
-  { "win.open", N_("Open a record"), FILES, { "<Control>o" } },
-  { "win.reload", N_("Read the record again"), FILES, { "<Control>r" } },
-  { "win.save-list", N_("Save the list of dips as CSV"), FILES, { "<Control>e" } },
-  { "win.save-flags", N_("Save the flags of left-out rows as CSV"), FILES, { "<Control><Shift>e" } },
-  { "app.new-window", N_("New window"), FILES, { "<Control>n" } },
-  { "win.close", N_("Close the window"), FILES, { "<Control>w" } },
-  { "app.quit", N_("Quit"), FILES, { "<Control>q" } },
+  { "win.open", N_ ("Open a record"), FILES, { "<Control>o" } },
+  { "win.reload", N_ ("Read the record again"), FILES, { "<Control>r" } },
+  { "win.save-list", N_ ("Save the list of dips as CSV"), FILES, { "<Control>e" } },
+  { "win.save-flags", N_ ("Save the flags of left-out rows as CSV"), FILES, { "<Control><Shift>e" } },
+  { "app.new-window", N_ ("New window"), FILES, { "<Control>n" } },
+  { "win.close", N_ ("Close the window"), FILES, { "<Control>w" } },
+  { "app.quit", N_ ("Quit"), FILES, { "<Control>q" } },
 
-  { "win.scan", N_("Scan for dips"), SEARCH, { "<Control>Return", "F5" } },
-  { "win.stop", N_("Stop what is running"), SEARCH, { "<Control>period" } },
-  { "win.measure", N_("Measure a dip: drag across it, or widen the span by Shift+Right and press Return"), SEARCH, { "<Control>m" } },
-  { "win.settings", N_("Settings of the search"), SEARCH, { "F9" } },
-  { "win.reset-settings", N_("All settings back to default"), SEARCH, { "<Control><Shift>F9" } },
+  { "win.scan", N_ ("Scan for dips"), SEARCH, { "<Control>Return", "F5" } },
+  { "win.stop", N_ ("Stop what is running"), SEARCH, { "<Control>period" } },
+  { "win.measure",
+    N_ ("Measure a dip: drag across it, or widen the span by Shift+Right and press Return"),
+    SEARCH,
+    { "<Control>m" } },
+  { "win.settings", N_ ("Settings of the search"), SEARCH, { "F9" } },
+  { "win.reset-settings", N_ ("All settings back to default"), SEARCH, { "<Control><Shift>F9" } },
 
-  { "win.view-in", N_("Closer"), VIEW, { "<Control>plus", "<Control>equal" } },
-  { "win.view-out", N_("Farther"), VIEW, { "<Control>minus" } },
-  { "win.view-whole", N_("The whole record"), VIEW, { "<Control>0" } },
-  { "win.view-selected", N_("The drawn span, or the selected dip and its surroundings"), VIEW, { "<Control>j" } },
-  { "win.view-earlier", N_("Earlier"), VIEW, { "<Control>Left" } },
-  { "win.view-later", N_("Later"), VIEW, { "<Control>Right" } },
-  { "win.view-back", N_("Back to the view before"), VIEW, { "<Alt>Left" } },
-  { "win.view-forward", N_("Forward again"), VIEW, { "<Alt>Right" } },
-  { "win.own-unit", N_("Between ppm and the record's own unit"), VIEW, { "<Control>u" } },
-  { "win.next-average", N_("Longer averages over the samples, then none"), VIEW, { "<Control>g" } },
-  { "win.page::record", N_("Page Record"), VIEW, { "<Alt>1" } },
-  { "win.page::noise", N_("Page Noise"), VIEW, { "<Alt>2" } },
-  { "win.page::dips", N_("Page Dips"), VIEW, { "<Alt>3" } },
+  { "win.view-in", N_ ("Closer"), VIEW, { "<Control>plus", "<Control>equal" } },
+  { "win.view-out", N_ ("Farther"), VIEW, { "<Control>minus" } },
+  { "win.view-whole", N_ ("The whole record"), VIEW, { "<Control>0" } },
+  { "win.view-selected", N_ ("The drawn span, or the selected dip and its surroundings"), VIEW, { "<Control>j" } },
+  { "win.view-earlier", N_ ("Earlier"), VIEW, { "<Control>Left" } },
+  { "win.view-later", N_ ("Later"), VIEW, { "<Control>Right" } },
+  { "win.view-back", N_ ("Back to the view before"), VIEW, { "<Alt>Left" } },
+  { "win.view-forward", N_ ("Forward again"), VIEW, { "<Alt>Right" } },
+  { "win.own-unit", N_ ("Between ppm and the record's own unit"), VIEW, { "<Control>u" } },
+  { "win.next-average", N_ ("Longer averages over the samples, then none"), VIEW, { "<Control>g" } },
+  { "win.page::record", N_ ("Page Record"), VIEW, { "<Alt>1" } },
+  { "win.page::noise", N_ ("Page Noise"), VIEW, { "<Alt>2" } },
+  { "win.page::dips", N_ ("Page Dips"), VIEW, { "<Alt>3" } },
 
-  { "win.next-dip", N_("Next dip"), DIPS, { "<Alt>Down" } },
-  { "win.previous-dip", N_("Previous dip"), DIPS, { "<Alt>Up" } },
-  { "win.filter", N_("Filter the list"), DIPS, { "<Control>f" } },
-  { "win.note", N_("Write a note"), DIPS, { "<Control>t" } },
-  { "win.copy-dip", N_("Copy the numbers of the dip with their units"), DIPS, { "<Control><Shift>c" } },
-  { "win.verdict::undecided", N_("Verdict: undecided"), DIPS, { "<Control><Alt>0" } },
-  { "win.verdict::planet", N_("Verdict: planet"), DIPS, { "<Control><Alt>1" } },
-  { "win.verdict::planet-shaped", N_("Verdict: planet-shaped"), DIPS, { "<Control><Alt>2" } },
-  { "win.verdict::spot", N_("Verdict: spot"), DIPS, { "<Control><Alt>3" } },
-  { "win.verdict::eclipse", N_("Verdict: eclipse"), DIPS, { "<Control><Alt>4" } },
-  { "win.verdict::instrument", N_("Verdict: instrument"), DIPS, { "<Control><Alt>5" } },
-  { "win.verdict::noise", N_("Verdict: noise"), DIPS, { "<Control><Alt>6" } },
+  { "win.next-dip", N_ ("Next dip"), DIPS, { "<Alt>Down" } },
+  { "win.previous-dip", N_ ("Previous dip"), DIPS, { "<Alt>Up" } },
+  { "win.filter", N_ ("Filter the list"), DIPS, { "<Control>f" } },
+  { "win.note", N_ ("Write a note"), DIPS, { "<Control>t" } },
+  { "win.copy-dip", N_ ("Copy the numbers of the dip with their units"), DIPS, { "<Control><Shift>c" } },
+  { "win.verdict::undecided", N_ ("Verdict: undecided"), DIPS, { "<Control><Alt>0" } },
+  { "win.verdict::planet", N_ ("Verdict: planet"), DIPS, { "<Control><Alt>1" } },
+  { "win.verdict::planet-shaped", N_ ("Verdict: planet-shaped"), DIPS, { "<Control><Alt>2" } },
+  { "win.verdict::spot", N_ ("Verdict: spot"), DIPS, { "<Control><Alt>3" } },
+  { "win.verdict::eclipse", N_ ("Verdict: eclipse"), DIPS, { "<Control><Alt>4" } },
+  { "win.verdict::instrument", N_ ("Verdict: instrument"), DIPS, { "<Control><Alt>5" } },
+  { "win.verdict::noise", N_ ("Verdict: noise"), DIPS, { "<Control><Alt>6" } },
 
-  { "win.shortcuts", N_("Keyboard shortcuts"), GENERAL, { "<Control>question", "F1" } },
+  { "win.shortcuts", N_ ("Keyboard shortcuts"), GENERAL, { "<Control>question", "F1" } },
 };
 const gsize ant_n_shortcuts = G_N_ELEMENTS (ant_shortcut_table);
 
@@ -116,11 +119,12 @@ GtkWidget *
 ant_shortcuts_window_new (void)
 {
   GString *ui = g_string_new ("<interface><object class='GtkShortcutsWindow' id='window'>");
-  g_autofree char *head = g_markup_printf_escaped ("<property name='title'>%s</property><property name='modal'>1</property>"
-                                                   "<child><object class='GtkShortcutsSection'>"
-                                                   "<property name='section-name'>all</property>"
-                                                   "<property name='max-height'>14</property>",
-                                                   _("Keyboard Shortcuts"));
+  g_autofree char *head =
+      g_markup_printf_escaped ("<property name='title'>%s</property><property name='modal'>1</property>"
+                               "<child><object class='GtkShortcutsSection'>"
+                               "<property name='section-name'>all</property>"
+                               "<property name='max-height'>14</property>",
+                               _("Keyboard Shortcuts"));
   g_string_append (ui, head);
   append_groups (ui, ant_n_shortcuts, ant_shortcut_table);
   append_groups (ui, G_N_ELEMENTS (on_plots), on_plots);

@@ -27,9 +27,12 @@ ant_spectrum_view_paint (AntPlotView *plot, cairo_t *cr, const AntBox *box, cons
   if (!chunk)
     return;
   const AntRecord *record = ant_desk_get_record (ant_plot_view_get_desk (plot));
-  AntSpectrumChart chart = { .n = chunk->n_bins, .frequency_cd = chunk->frequency_cd, .power = chunk->power_unmasked,
+  AntSpectrumChart chart = { .n = chunk->n_bins,
+                             .frequency_cd = chunk->frequency_cd,
+                             .power = chunk->power_unmasked,
                              .model = &chunk->model,
-                             .white_psd = ant_noise_white_psd (chunk->model.white_ppm * chunk->model.white_ppm, record->series.step_d) };
+                             .white_psd = ant_noise_white_psd (chunk->model.white_ppm * chunk->model.white_ppm,
+                                                               record->series.step_d) };
   AntView view;
   ant_spectrum_chart_view (&chart, &view);
   ant_spectrum_chart_paint (cr, box, &chart, &view, theme, scale);

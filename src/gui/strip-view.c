@@ -41,7 +41,8 @@ static gboolean
 in_own_unit (AntStripView *self)
 {
   const AntRecord *record = ant_desk_get_record (desk_of (self));
-  return record->value_unit && (self->kind == ANT_STRIP_IRRADIANCE || ant_desk_get_unit (desk_of (self)) == ANT_DEPTH_W_M2);
+  return record->value_unit
+         && (self->kind == ANT_STRIP_IRRADIANCE || ant_desk_get_unit (desk_of (self)) == ANT_DEPTH_W_M2);
 }
 
 static void
@@ -121,9 +122,13 @@ ant_strip_view_overlay (AntPlotView *plot, GtkSnapshot *snapshot, const AntBox *
       GdkRGBA wash = rgba (theme->role[ANT_ROLE_SELECTION], 0.18), edge = rgba (theme->role[ANT_ROLE_SELECTION], 1);
       if (to > from)
         {
-          gtk_snapshot_append_color (snapshot, &wash, &GRAPHENE_RECT_INIT ((float) from, (float) area.y, (float) (to - from), (float) area.height));
-          gtk_snapshot_append_color (snapshot, &edge, &GRAPHENE_RECT_INIT ((float) from, (float) area.y, 1, (float) area.height));
-          gtk_snapshot_append_color (snapshot, &edge, &GRAPHENE_RECT_INIT ((float) to - 1, (float) area.y, 1, (float) area.height));
+          gtk_snapshot_append_color (
+              snapshot, &wash,
+              &GRAPHENE_RECT_INIT ((float) from, (float) area.y, (float) (to - from), (float) area.height));
+          gtk_snapshot_append_color (snapshot, &edge,
+                                     &GRAPHENE_RECT_INIT ((float) from, (float) area.y, 1, (float) area.height));
+          gtk_snapshot_append_color (snapshot, &edge,
+                                     &GRAPHENE_RECT_INIT ((float) to - 1, (float) area.y, 1, (float) area.height));
         }
     }
   double pointer_d = ant_desk_get_pointer (desk);
@@ -131,7 +136,8 @@ ant_strip_view_overlay (AntPlotView *plot, GtkSnapshot *snapshot, const AntBox *
     {
       GdkRGBA line = rgba (theme->role[ANT_ROLE_QUIET], 0.7);
       double x = floor (ant_view_x (view, &area, pointer_d));
-      gtk_snapshot_append_color (snapshot, &line, &GRAPHENE_RECT_INIT ((float) x, (float) area.y, 1, (float) area.height));
+      gtk_snapshot_append_color (snapshot, &line,
+                                 &GRAPHENE_RECT_INIT ((float) x, (float) area.y, 1, (float) area.height));
     }
 }
 
@@ -352,7 +358,8 @@ ant_strip_view_desk_changed (AntPlotView *plot, AntDeskChange what)
 {
   if (what & (ANT_DESK_RECORD | ANT_DESK_LOOK))
     name_by_unit (plot);
-  gtk_widget_set_cursor_from_name (GTK_WIDGET (plot), ant_desk_get_measuring (ant_plot_view_get_desk (plot)) ? "crosshair" : NULL);
+  gtk_widget_set_cursor_from_name (GTK_WIDGET (plot),
+                                   ant_desk_get_measuring (ant_plot_view_get_desk (plot)) ? "crosshair" : NULL);
 }
 
 void
@@ -367,7 +374,8 @@ ant_strip_view_class_init (AntStripViewClass *klass)
 {
   GtkWidgetClass *widget_class = GTK_WIDGET_CLASS (klass);
   AntPlotViewClass *plot_class = ANT_PLOT_VIEW_CLASS (klass);
-  plot_class->watches = ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT | ANT_DESK_LOOK;
+  plot_class->watches =
+      ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT | ANT_DESK_LOOK;
   plot_class->paint = ant_strip_view_paint;
   plot_class->overlay = ant_strip_view_overlay;
   plot_class->describe = ant_strip_view_describe;

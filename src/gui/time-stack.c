@@ -42,7 +42,8 @@ ant_time_stack_set_desk (AntTimeStack *self, AntDesk *desk)
   desk_changed_cb (desk, ANT_DESK_EVERYTHING, self);
 }
 
-/* With little height one strip is worth more than two that nobody can read: the residual, which carries the time axis. */
+/* With little height one strip is worth more than two that nobody can read: the residual, which carries the time axis.
+ */
 static void
 ant_time_stack_size_allocate (GtkWidget *widget, int width, int height, int baseline)
 {

@@ -364,9 +364,9 @@ ant_window_add_actions (AntWindow *self)
       const Action *action = &actions[i];
       const GVariantType *type = action->parameter ? G_VARIANT_TYPE (action->parameter) : NULL;
       g_autoptr (GVariant) state = action->state ? g_variant_new_parsed (action->state) : NULL;
-      g_autoptr (GSimpleAction) simple = action->state
-                                             ? g_simple_action_new_stateful (action->name, type, g_variant_ref_sink (state))
-                                             : g_simple_action_new (action->name, type);
+      g_autoptr (GSimpleAction) simple =
+          action->state ? g_simple_action_new_stateful (action->name, type, g_variant_ref_sink (state))
+                        : g_simple_action_new (action->name, type);
       g_object_set_data (G_OBJECT (simple), "action", GSIZE_TO_POINTER (i));
       if (action->state)
         g_signal_connect (simple, "change-state", G_CALLBACK (state_cb), self);

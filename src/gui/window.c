@@ -167,8 +167,9 @@ show_scan_button (AntWindow *self)
                                     : ant_desk_get_results (self->desk) ? _("_Scan Again")
                                                                         : _("_Scan"));
   gtk_actionable_set_action_name (GTK_ACTIONABLE (self->scan), busy != ANT_BUSY_NO ? "win.stop" : "win.scan");
-  gtk_widget_set_tooltip_text (GTK_WIDGET (self->scan),
-                               busy != ANT_BUSY_NO ? _("Stop (Ctrl+.)") : _("Search the record for dips (Ctrl+Return)"));
+  gtk_widget_set_tooltip_text (GTK_WIDGET (self->scan), busy != ANT_BUSY_NO
+                                                            ? _("Stop (Ctrl+.)")
+                                                            : _("Search the record for dips (Ctrl+Return)"));
   gtk_widget_set_visible (GTK_WIDGET (self->scan), ant_desk_get_record (self->desk) || busy != ANT_BUSY_NO);
   if (busy == ANT_BUSY_NO && !done)
     gtk_widget_add_css_class (GTK_WIDGET (self->scan), "suggested-action");
@@ -196,7 +197,8 @@ page_shown_cb (AntWindow *self)
 {
   GAction *page = g_action_map_lookup_action (G_ACTION_MAP (self), "page");
   if (page)
-    g_simple_action_set_state (G_SIMPLE_ACTION (page), g_variant_new_string (gtk_stack_get_visible_child_name (self->pages)));
+    g_simple_action_set_state (G_SIMPLE_ACTION (page),
+                               g_variant_new_string (gtk_stack_get_visible_child_name (self->pages)));
 }
 
 static gboolean

@@ -28,7 +28,8 @@ draw_shape (AntCloseupData *data, const AntSettings *settings, const AntDip *dip
   data->shape[0] = (AntShapeLine) { _("fitted crossing"), SHAPE_POINTS, hours, ppm };
 }
 
-/* The rotation curve is for looking only: what it leaves beside the dip is not quite zero, and the shape stands on that. */
+/* The rotation curve is for looking only: what it leaves beside the dip is not quite zero, and the shape stands on
+ * that. */
 static void
 level (AntCloseupData *data, const AntSettings *settings, const AntDip *dip, double exposure_d)
 {
@@ -41,7 +42,8 @@ level (AntCloseupData *data, const AntSettings *settings, const AntDip *dip, dou
   gsize n_above = 0;
   for (gsize i = 0; i < n; i++)
     if (isfinite (ppm[i]))
-      above[n_above++] = ppm[i] + dip->depth_ppm * ant_crossing_shape_mean (&shape, data->points[i] / ANT_HOURS_PER_DAY, exposure_d);
+      above[n_above++] =
+          ppm[i] + dip->depth_ppm * ant_crossing_shape_mean (&shape, data->points[i] / ANT_HOURS_PER_DAY, exposure_d);
   double median = ant_median (n_above, above, above);
   for (gsize i = 0; i < n && isfinite (median); i++)
     ppm[i] -= median;

@@ -37,8 +37,8 @@ draw_curve (AntLayers *layers, const AntSettings *settings, const AntScanResults
     }
   layers->curve_ppm = g_new (float, series->n);
   layers->residual_ppm = g_new (float, series->n);
-  if (!ant_status_to_error (ant_rotation_curve (series, masked, &options, layers->curve_ppm), _("drawing the rotation curve"),
-                            error))
+  if (!ant_status_to_error (ant_rotation_curve (series, masked, &options, layers->curve_ppm),
+                            _("drawing the rotation curve"), error))
     return FALSE;
   for (gsize i = 0; i < series->n; i++)
     layers->residual_ppm[i] = series->value_ppm[i] - layers->curve_ppm[i];

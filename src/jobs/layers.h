@@ -1,5 +1,6 @@
 /* layers.h - what strips and ribbon are drawn from: a record's values, its rotation curve, what that leaves, and the
- * pyramids and averages of both. Immutable once made and counted, so that a window may draw while a job makes the next. */
+ * pyramids and averages of both. Immutable once made and counted, so that a window may draw while a job makes the next.
+ */
 #pragma once
 
 #include <glib.h>

@@ -41,8 +41,8 @@ run (gpointer data)
 }
 
 void
-ant_open_task_async (const char *path, const AntSettings *settings, GCancellable *cancellable, GAsyncReadyCallback callback,
-                     gpointer data)
+ant_open_task_async (const char *path, const AntSettings *settings, GCancellable *cancellable,
+                     GAsyncReadyCallback callback, gpointer data)
 {
   GTask *task = g_task_new (NULL, cancellable, callback, data);
   Order *order = g_new0 (Order, 1);

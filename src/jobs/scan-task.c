@@ -1,7 +1,7 @@
 /* scan-task.c - threads that scan and measure, and a timer that tells how far they are.
  *
- * The worker writes its progress under a lock; the main loop reads it ten times a second. However fast the worker is, the
- * loop is never flooded. */
+ * The worker writes its progress under a lock; the main loop reads it ten times a second. However fast the worker is,
+ * the loop is never flooded. */
 #include "jobs/scan-task.h"
 
 #include <math.h>
@@ -91,7 +91,8 @@ run_scan (gpointer data)
   AntRecord *record = order->layers->record;
   GError *error = NULL;
   g_autoptr (AntScanOutcome) outcome = g_new0 (AntScanOutcome, 1);
-  outcome->results = ant_scan_job_run (record, &order->settings, g_task_get_cancellable (task), note_progress, order, &error);
+  outcome->results =
+      ant_scan_job_run (record, &order->settings, g_task_get_cancellable (task), note_progress, order, &error);
   if (outcome->results)
     outcome->layers = ant_layers_new (record, &order->settings, outcome->results, order->layers, &error);
   if (outcome->layers)
@@ -102,8 +103,8 @@ run_scan (gpointer data)
 }
 
 void
-ant_scan_task_async (AntLayers *layers, const AntSettings *settings, GCancellable *cancellable, AntTaskProgressFunc progress,
-                     GAsyncReadyCallback callback, gpointer data)
+ant_scan_task_async (AntLayers *layers, const AntSettings *settings, GCancellable *cancellable,
+                     AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data)
 {
   GTask *task = g_task_new (NULL, cancellable, callback, data);
   Order *order = order_new (layers, settings);

@@ -142,7 +142,8 @@ add (void)
   g_test_add_func ("/gui/desk/an-asked-dip-is-measured-and-selected", an_asked_dip_is_measured_and_selected);
   g_test_add_func ("/gui/desk/selecting-brings-a-dip-into-view", selecting_brings_a_dip_into_view);
   g_test_add_func ("/gui/desk/the-readout-tells-time-value-and-residual", the_readout_tells_time_value_and_residual);
-  g_test_add_func ("/gui/desk/a-span-grows-by-keys-about-the-middle-of-the-view", a_span_grows_by_keys_about_the_middle_of_the_view);
+  g_test_add_func ("/gui/desk/a-span-grows-by-keys-about-the-middle-of-the-view",
+                   a_span_grows_by_keys_about_the_middle_of_the_view);
 }
 
 int

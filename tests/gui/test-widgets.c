@@ -182,15 +182,20 @@ recent_records_are_kept_latest_first_while_they_exist (void)
 static void
 add (void)
 {
-  g_test_add_func ("/gui/widgets/each-can-be-made-and-dropped-without-a-desk", every_widget_can_be_made_and_dropped_without_a_desk);
-  g_test_add_func ("/gui/widgets/every-plot-has-a-name-and-says-what-it-shows", every_plot_has_a_name_and_says_what_it_shows);
+  g_test_add_func ("/gui/widgets/each-can-be-made-and-dropped-without-a-desk",
+                   every_widget_can_be_made_and_dropped_without_a_desk);
+  g_test_add_func ("/gui/widgets/every-plot-has-a-name-and-says-what-it-shows",
+                   every_plot_has_a_name_and_says_what_it_shows);
   g_test_add_func ("/gui/widgets/every-plot-is-saved-in-every-format", every_plot_is_saved_in_every_format);
-  g_test_add_func ("/gui/widgets/the-list-is-filtered-by-words-and-follows-the-selection", the_list_is_filtered_by_words_and_follows_the_selection);
+  g_test_add_func ("/gui/widgets/the-list-is-filtered-by-words-and-follows-the-selection",
+                   the_list_is_filtered_by_words_and_follows_the_selection);
   g_test_add_func ("/gui/widgets/choosing-a-row-selects-the-dip-everywhere", choosing_a_row_selects_the_dip_everywhere);
   g_test_add_func ("/gui/widgets/the-inspector-judges-the-selected-dip", the_inspector_judges_the_selected_dip);
-  g_test_add_func ("/gui/widgets/a-setting-is-refused-with-its-range-and-reset-by-its-action", a_setting_is_refused_with_its_range_and_reset_by_its_action);
+  g_test_add_func ("/gui/widgets/a-setting-is-refused-with-its-range-and-reset-by-its-action",
+                   a_setting_is_refused_with_its_range_and_reset_by_its_action);
   g_test_add_func ("/gui/widgets/the-panel-has-a-row-for-every-setting", the_panel_has_a_row_for_every_setting);
-  g_test_add_func ("/gui/widgets/recent-records-are-kept-latest-first-while-they-exist", recent_records_are_kept_latest_first_while_they_exist);
+  g_test_add_func ("/gui/widgets/recent-records-are-kept-latest-first-while-they-exist",
+                   recent_records_are_kept_latest_first_while_they_exist);
 }
 
 int

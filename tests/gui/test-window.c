@@ -263,14 +263,17 @@ add (void)
   g_test_add_func ("/gui/window/a-scan-finds-the-planted-dip", a_scan_finds_the_planted_dip);
   g_test_add_func ("/gui/window/a-verdict-and-a-note-outlive-a-scan", a_verdict_and_a_note_outlive_a_scan);
   g_test_add_func ("/gui/window/a-changed-setting-makes-the-results-stale", a_changed_setting_makes_the_results_stale);
-  g_test_add_func ("/gui/window/a-setting-of-the-grid-reads-the-record-again", a_setting_of_the_grid_reads_the_record_again);
+  g_test_add_func ("/gui/window/a-setting-of-the-grid-reads-the-record-again",
+                   a_setting_of_the_grid_reads_the_record_again);
   g_test_add_func ("/gui/window/stopping-keeps-what-was-found-before", stopping_keeps_what_was_found_before);
   g_test_add_func ("/gui/window/it-may-be-closed-while-it-scans", a_window_may_be_closed_while_it_scans);
-  g_test_add_func ("/gui/window/another-record-may-be-opened-while-it-scans", another_record_may_be_opened_while_it_scans);
+  g_test_add_func ("/gui/window/another-record-may-be-opened-while-it-scans",
+                   another_record_may_be_opened_while_it_scans);
   g_test_add_func ("/gui/window/dark-and-light-are-followed-live", dark_and_light_are_followed_live);
   g_test_add_func ("/gui/window/it-fits-a-small-screen", it_fits_a_small_screen);
   g_test_add_func ("/gui/window/every-key-has-its-action", every_key_has_its_action);
-  g_test_add_func ("/gui/window/the-shortcuts-window-is-made-from-the-table", the_shortcuts_window_is_made_from_the_table);
+  g_test_add_func ("/gui/window/the-shortcuts-window-is-made-from-the-table",
+                   the_shortcuts_window_is_made_from_the_table);
 }
 
 int
