@@ -64,13 +64,9 @@ about (GSimpleAction *action, GVariant *parameter, gpointer data)
 static void
 quit (GSimpleAction *action, GVariant *parameter, gpointer data)
 {
-  GList *windows;
-  while ((windows = gtk_application_get_windows (GTK_APPLICATION (data))))
-    {
-      gtk_window_close (windows->data);
-      if (gtk_application_get_windows (GTK_APPLICATION (data)) == windows)
-        gtk_window_destroy (windows->data);
-    }
+  g_autoptr (GList) windows = g_list_copy (gtk_application_get_windows (GTK_APPLICATION (data)));
+  for (GList *one = windows; one; one = one->next)
+    gtk_window_close (one->data);
 }
 
 static void
