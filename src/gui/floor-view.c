@@ -52,7 +52,8 @@ ant_floor_view_describe (AntPlotView *plot)
   if (!results)
     return g_strdup (_("Nothing to show before a scan"));
   const AntDipMark *marks;
-  return g_strdup_printf (_("Depth against duration: %zu dips over a threshold of %.1f times the noise floor. Left and Right choose a dip."),
+  return g_strdup_printf (_("Depth against duration: %zu dips over a threshold of %.1f times the noise floor. Left "
+                             "and Right choose a dip."),
                           ant_desk_get_marks (desk, &marks), results->threshold_snr);
 }
 

@@ -44,8 +44,9 @@ ant_spectrum_view_describe (AntPlotView *plot)
   const AntChunk *chunk = chunk_of (ANT_SPECTRUM_VIEW (plot));
   if (!chunk)
     return g_strdup (_("Nothing to show before a scan"));
-  return g_strdup_printf (_("Power against frequency, %zu measured points, fitted by %zu parts and white noise of %.1f ppm"),
-                          chunk->n_bins, chunk->model.n_parts, chunk->model.white_ppm);
+  return g_strdup_printf (
+      _("Power against frequency, %zu measured points, fitted by %zu parts and white noise of %.1f ppm"),
+      chunk->n_bins, chunk->model.n_parts, chunk->model.white_ppm);
 }
 
 void
