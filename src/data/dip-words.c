@@ -156,10 +156,10 @@ ant_radius_words (const AntDip *dip)
 static const char *
 edges_words (AntEdges edges)
 {
-  static const char *const words[] = { [ANT_EDGES_NONE] = N_ ("neither"),
-                                       [ANT_EDGES_INGRESS] = N_ ("ingress only"),
-                                       [ANT_EDGES_EGRESS] = N_ ("egress only"),
-                                       [ANT_EDGES_BOTH] = N_ ("ingress and egress") };
+  static const char *const words[] = { [ANT_EDGES_NONE] = N_("neither"),
+                                       [ANT_EDGES_INGRESS] = N_("ingress only"),
+                                       [ANT_EDGES_EGRESS] = N_("egress only"),
+                                       [ANT_EDGES_BOTH] = N_("ingress and egress") };
   return _ (words[edges]);
 }
 
