@@ -1,5 +1,6 @@
 /* study-depth.c - crossings planted at known epochs, masked while the noise is fitted, and measured: pull, scatter, bias.
- * Arguments: model, mask, days, cadence in seconds, records, seed, dips per record, T14 in hours, depth in ppm, impact, ingress in minutes.
+ * Arguments: model, mask, days, cadence in seconds, records, seed, dips per record, T14 in hours, depth in ppm, impact, ingress in minutes,
+ * and, if wanted, 1 for spots of 3000 ppm rotating past.
  * Every dip is measured twice, the others taken out: with the planted shape, and with the bank's wide template of the same
  * length. The paired bias compares the same noise with and without the dip. Prints one summary line. */
 #include <math.h>
@@ -10,6 +11,7 @@
 #include "models.h"
 #include "noise/whitener.h"
 #include "search/scan-private.h"
+#include "spotted.h"
 
 typedef struct
 {
@@ -63,6 +65,8 @@ main (int argc, char **argv)
       AntScanOptions options = ANT_SCAN_OPTIONS_INIT;
       AntSeries series = ant_study_record (argv[1][0], mask, n, step_d, strtoul (argv[6], NULL, 10) + r, noise);
       ant_random_seed (&random, strtoul (argv[6], NULL, 10) + r, 55);
+      if (argc > 12 && atoi (argv[12]))
+        ant_study_add_spots (n, step_d, strtoul (argv[6], NULL, 10) + r, noise);
       AntScan *scan = ant_scan_new (&series, &options, &status);
       memcpy (value, noise, n * sizeof *value);
       AntShapeFit fit = { .duration_d = t14_d, .edge_d = edge_d, .impact = impact };
