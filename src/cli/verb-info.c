@@ -56,6 +56,11 @@ print_columns (const AntRecord *record)
   print_line (_("value"), _("%s, unit %s"), record->value_name, record->value_unit ? record->value_unit : _("not named"));
   print_line (_("error"), "%s", or_none (record->error_name));
   print_line (_("quality"), "%s", or_none (record->quality_name));
+  for (guint i = 0; i < record->columns->len; i++)
+    {
+      g_autofree char *words = ant_column_words (g_ptr_array_index (record->columns, i), record->n_rows);
+      print_line (i ? "" : _("further"), "%s", words);
+    }
 }
 
 static void
@@ -221,6 +226,17 @@ add_columns (JsonBuilder *json, const AntRecord *record)
   add_truth (json, "time_scale_assumed", record->time.scale_assumed);
   add_text (json, "time_place", record->time.place);
   add_truth (json, "origin_known", record->time.origin_known);
+  json_builder_begin_array (json_builder_set_member_name (json, "columns"));
+  for (guint i = 0; i < record->columns->len; i++)
+    {
+      const AntColumn *column = g_ptr_array_index (record->columns, i);
+      json_builder_begin_object (json);
+      add_text (json, "name", column->name);
+      add_text (json, "unit", column->unit);
+      add_count (json, "values", record->n_rows - column->n_missing);
+      json_builder_end_object (json);
+    }
+  json_builder_end_array (json);
 }
 
 static void

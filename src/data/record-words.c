@@ -30,6 +30,11 @@ add_columns (GPtrArray *facts, const AntRecord *record)
        record->value_unit ? record->value_unit : "");
   add (facts, _("Error"), "%s", record->error_name ? record->error_name : _("none"));
   add (facts, _("Quality"), "%s", record->quality_name ? record->quality_name : _("none"));
+  for (guint i = 0; i < record->columns->len; i++)
+    {
+      g_autofree char *words = ant_column_words (g_ptr_array_index (record->columns, i), record->n_rows);
+      add (facts, i ? "" : _("Further"), "%s", words);
+    }
 }
 
 static void

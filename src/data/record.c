@@ -1,6 +1,7 @@
 /* record.c - an irradiance record's life, what was said of it, and the names of its flags. */
 #include "data/record.h"
 #include <glib/gi18n.h>
+#include <math.h>
 #include "core/units.h"
 
 static const struct
@@ -37,6 +38,7 @@ ant_record_new (void)
 {
   AntRecord *record = g_new0 (AntRecord, 1);
   record->said = g_ptr_array_new_with_free_func (g_free);
+  record->columns = g_ptr_array_new_with_free_func ((GDestroyNotify) ant_column_free);
   record->dark_spans = g_array_new (FALSE, FALSE, sizeof (AntSpan));
   record->gaps = g_array_new (FALSE, FALSE, sizeof (AntSpan));
   record->time.own_unit_d = 1.0;
@@ -78,6 +80,7 @@ ant_record_unref (AntRecord *record)
   g_free (record->quality_name);
   g_free (record->value_unit);
   ant_time_reference_clear (&record->time);
+  g_ptr_array_unref (record->columns);
   g_ptr_array_unref (record->said);
   free_view (record->series.value_ppm);
   free_view (record->series.error_ppm);
@@ -102,4 +105,22 @@ double
 ant_record_value (const AntRecord *record, double ppm)
 {
   return record->median * (1.0 + ppm * ANT_PPM);
+}
+
+float *
+ant_record_column_on_grid (const AntRecord *record, const AntColumn *column)
+{
+  gsize n = record->series.n;
+  float *grid = g_new0 (float, n);
+  g_autofree guint32 *count = g_new0 (guint32, n);
+  for (gsize i = 0; i < record->n_rows; i++)
+    if (record->place[i] >= 0 && !isnan (column->value[i]))
+      {
+        gint64 place = record->place[i];
+        grid[place] += (column->value[i] - grid[place]) / (float) ++count[place];
+      }
+  for (gsize k = 0; k < n; k++)
+    if (count[k] == 0)
+      grid[k] = NAN;
+  return grid;
 }

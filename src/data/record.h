@@ -5,6 +5,7 @@
 #pragma once
 
 #include <glib.h>
+#include "data/column.h"
 #include "data/time-reference.h"
 #include "core/span.h"
 #include "noise/series.h"
@@ -44,6 +45,7 @@ typedef struct
   char *time_name, *value_name, *error_name, *quality_name; /* column names or "column 3"; NULL if absent */
   char *value_unit; /* "W/m2", "relative", or NULL if unknown */
   AntTimeReference time;
+  GPtrArray *columns; /* AntColumn*: the file's other numbers, in its order; empty if there are none */
   GPtrArray *said;  /* char*: what the reader and the grid assumed or found, one sentence each */
 
   /* Set by ant_record_make_grid. */
@@ -84,5 +86,8 @@ typedef struct
  * a constant record, a median that is not the record's usual level (half of it night, say), a cadence that cannot be
  * found. Everything assumed or found is added to `said`. */
 gboolean ant_record_make_grid (AntRecord *record, const AntGridOptions *options, GError **error);
+/* A further column on the record's grid: means of the rows that share a place, NaN where there is none. The row's flags do not
+ * matter: temperatures go on in the dark. Allocated [series.n]; the caller frees. The record must be gridded. */
+float *ant_record_column_on_grid (const AntRecord *record, const AntColumn *column);
 /* Value on the record's own scale for a level in ppm. */
 double ant_record_value (const AntRecord *record, double ppm);

@@ -48,20 +48,40 @@ ant_fill_stated (const GPtrArray *header)
   return stated;
 }
 
+/* The numbers to judge, in one precision or the other: -99.9 as a float is not -99.9 as a double. */
+typedef struct
+{
+  const double *wide;
+  const float *narrow;
+  gsize n;
+} Numbers;
+
+static double
+number_at (const Numbers *numbers, gsize i)
+{
+  return numbers->wide ? numbers->wide[i] : (double) numbers->narrow[i];
+}
+
+static gboolean
+is_same (const Numbers *numbers, double value, double fill)
+{
+  return numbers->wide ? value == fill : (float) value == (float) fill;
+}
+
 static int
-usual_index (double value)
+usual_index (const Numbers *numbers, double value)
 {
   for (gsize i = 0; i < G_N_ELEMENTS (usual); i++)
-    if (usual[i].value == value)
+    if (is_same (numbers, value, usual[i].value))
       return (int) i;
   return -1;
 }
 
 static gboolean
-is_stated (const GArray *stated, double value)
+is_stated (const Numbers *numbers, const GArray *stated, double value)
 {
   for (guint i = 0; stated && i < stated->len; i++)
-    if (g_array_index (stated, double, i) == value)
+    if (is_same (numbers, value, g_array_index (stated, double, i)))
       return TRUE;
   return FALSE;
 }
@@ -75,16 +95,17 @@ compare (const void *a, const void *b)
 
 /* Where everything else lies, from evenly spread values that are no candidates. FALSE if there are none. */
 static gboolean
-usual_range (const double *value, gsize n, const GArray *stated, double *low, double *high)
+usual_range (const Numbers *numbers, const GArray *stated, double *low, double *high)
 {
   double sample[SAMPLE];
-  gsize n_sample = 0, stride = n / SAMPLE + 1;
-  for (gsize i = 0; i < n && n_sample < SAMPLE; i += stride)
-    if (isfinite (value[i]) && usual_index (value[i]) < 0 && !is_stated (stated, value[i]))
-      sample[n_sample++] = value[i];
-  for (gsize i = 0; n_sample == 0 && i < n; i++) /* a few good ones among many fills */
-    if (isfinite (value[i]) && usual_index (value[i]) < 0 && !is_stated (stated, value[i]))
-      sample[n_sample++] = value[i];
+  gsize n = numbers->n, n_sample = 0, stride = n / SAMPLE + 1;
+  for (int pass = 0; pass < 2 && n_sample == 0; pass++, stride = 1) /* the second for a few good ones among many fills */
+    for (gsize i = 0; i < n && n_sample < (pass ? 1 : SAMPLE); i += stride)
+      {
+        double value = number_at (numbers, i);
+        if (isfinite (value) && usual_index (numbers, value) < 0 && !is_stated (numbers, stated, value))
+          sample[n_sample++] = value;
+      }
   if (n_sample == 0)
     return FALSE;
   qsort (sample, n_sample, sizeof *sample, compare);
@@ -109,28 +130,35 @@ count_fill (GArray *fills, double value, gboolean stated)
   g_array_append_val (fills, fill);
 }
 
-GArray *
-ant_fill_judge (const double *value, gsize n, const GArray *stated)
+static GArray *
+judge (const Numbers *numbers, const GArray *stated)
 {
   GArray *fills = g_array_new (FALSE, FALSE, sizeof (AntFill));
   double low = HUGE_VAL, high = -HUGE_VAL;
-  gboolean lone = !usual_range (value, n, stated, &low, &high);
+  gboolean lone = !usual_range (numbers, stated, &low, &high);
   gboolean any_stated = stated && stated->len > 0;
-  for (gsize i = 0; i < n; i++)
+  for (gsize i = 0; i < numbers->n; i++)
     {
-      gboolean inside = value[i] > low && value[i] < high;
-      if (any_stated && is_stated (stated, value[i]))
-        count_fill (fills, value[i], TRUE);
-      else if (!inside && !isnan (value[i]) && usual_index (value[i]) >= 0)
-        count_fill (fills, value[i], FALSE);
+      double value = number_at (numbers, i);
+      gboolean inside = value > low && value < high;
+      if (any_stated && is_stated (numbers, stated, value))
+        count_fill (fills, value, TRUE);
+      else if (!inside && !isnan (value) && usual_index (numbers, value) >= 0)
+        count_fill (fills, value, FALSE);
     }
   for (guint i = fills->len; i-- > 0;)
     {
       const AntFill *fill = &g_array_index (fills, AntFill, i);
-      if (!fill->stated && fill->count < 2 && !lone && usual[usual_index (fill->value)].weak)
+      if (!fill->stated && fill->count < 2 && !lone && usual[usual_index (numbers, fill->value)].weak)
         g_array_remove_index (fills, i);
     }
   return fills;
+}
+
+GArray *
+ant_fill_judge (const double *value, gsize n, const GArray *stated)
+{
+  return judge (&(Numbers){ .wide = value, .n = n }, stated);
 }
 
 gboolean
@@ -140,4 +168,18 @@ ant_fill_is (const GArray *fills, double value)
     if (g_array_index (fills, AntFill, i).value == value)
       return TRUE;
   return FALSE;
+}
+
+gsize
+ant_fill_clear (float *value, gsize n, const GArray *stated)
+{
+  g_autoptr (GArray) fills = judge (&(Numbers){ .narrow = value, .n = n }, stated);
+  gsize n_cleared = 0;
+  for (gsize i = 0; fills->len > 0 && i < n; i++)
+    if (ant_fill_is (fills, (double) value[i]))
+      {
+        value[i] = NAN;
+        n_cleared++;
+      }
+  return n_cleared;
 }

@@ -15,4 +15,6 @@ GArray *ant_fill_stated (const GPtrArray *header);
 /* Which fills the n values hold: the stated ones wherever they stand, and the usual ones (-99, -999, 0, 65535, -1e34 ...)
  * where they lie far outside everything else, the weaker of them only if repeated. GArray of AntFill; caller unrefs. */
 GArray *ant_fill_judge (const double *value, gsize n, const GArray *stated);
+/* The same in single precision: the fills found become NaN. Returns how many values they were. */
+gsize ant_fill_clear (float *value, gsize n, const GArray *stated);
 gboolean ant_fill_is (const GArray *fills, double value);

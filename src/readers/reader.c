@@ -1,4 +1,4 @@
-/* reader.c - the registry of formats, and the user's choices. */
+/* reader.c - the registry of formats. */
 #include "readers/reader.h"
 
 #include <glib/gi18n.h>
@@ -83,50 +83,4 @@ ant_reader_read_bytes (const char *name, const void *bytes, gsize n, const AntRe
 {
   g_autoptr (AntByteSource) source = ant_byte_source_new_bytes (name, bytes, n);
   return read_source (source, name, choices, NULL, error);
-}
-
-void
-ant_reading_choices_clear (AntReadingChoices *choices)
-{
-  g_free (choices->time_column);
-  g_free (choices->value_column);
-  g_free (choices->error_column);
-  g_free (choices->quality_column);
-  g_free (choices->time_format);
-  g_free (choices->time_scale);
-  g_clear_pointer (&choices->fill_values, g_array_unref);
-  memset (choices, 0, sizeof *choices);
-}
-
-gboolean
-ant_reading_choices_parse_columns (AntReadingChoices *choices, const char *text, GError **error)
-{
-  const struct
-  {
-    const char *key;
-    char **place;
-  } keys[] = { { "time", &choices->time_column },
-               { "value", &choices->value_column },
-               { "error", &choices->error_column },
-               { "quality", &choices->quality_column } };
-  g_auto (GStrv) parts = g_strsplit (text, ",", -1);
-  for (guint i = 0; parts[i]; i++)
-    {
-      char *equals = strchr (parts[i], '=');
-      char **place = NULL;
-      if (equals)
-        *equals = 0;
-      for (gsize k = 0; equals && k < G_N_ELEMENTS (keys); k++)
-        if (!strcmp (g_strstrip (parts[i]), keys[k].key))
-          place = keys[k].place;
-      if (!place || *g_strstrip (equals + 1) == 0)
-        {
-          g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE,
-                       _("column “%s”: expected time=…, value=…, error=… or quality=…, each with a name or number"), parts[i]);
-          return FALSE;
-        }
-      g_free (*place);
-      *place = g_strdup (equals + 1);
-    }
-  return TRUE;
 }

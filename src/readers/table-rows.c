@@ -1,6 +1,7 @@
 /* table-rows.c - the loop over the lines of a text table. */
 #include "readers/table-rows.h"
 
+#include <float.h>
 #include <math.h>
 #include <string.h>
 
@@ -13,8 +14,8 @@ typedef struct
   gint16 slot[ANT_MOST_COLUMNS];
   guint n_slots;
   guint error, quality; /* slots, where there are such columns */
-  guint values[ANT_MOST_CANDIDATES], times[ANT_MOST_TIME_PARTS];
-  AntCell cells[ANT_MOST_CANDIDATES + ANT_MOST_TIME_PARTS + 2];
+  guint values[ANT_MOST_CANDIDATES], times[ANT_MOST_TIME_PARTS], further[ANT_MOST_FURTHER];
+  AntCell cells[ANT_MOST_CANDIDATES + ANT_MOST_TIME_PARTS + ANT_MOST_FURTHER + 2];
 } Slots;
 
 static guint
@@ -35,6 +36,8 @@ make_slots (Slots *slots, const AntTextLayout *layout, const AntTimeForm *form, 
     slots->times[i] = slot_of (slots, form->columns[i]);
   for (guint i = 0; i < columns->n_values; i++)
     slots->values[i] = slot_of (slots, columns->values[i]);
+  for (guint i = 0; i < columns->n_further; i++)
+    slots->further[i] = slot_of (slots, columns->further[i]);
   if (columns->error >= 0)
     slots->error = slot_of (slots, (guint) columns->error);
   if (columns->quality >= 0)
@@ -51,6 +54,8 @@ make_room (AntTableRows *rows, const AntValueColumns *columns)
   rows->line = g_renew (guint32, rows->line, rows->room);
   for (guint i = 0; i < columns->n_values; i++)
     rows->values[i] = g_renew (double, rows->values[i], rows->room);
+  for (guint i = 0; i < columns->n_further; i++)
+    rows->further[i] = g_renew (float, rows->further[i], rows->room);
   if (columns->error >= 0)
     rows->error = g_renew (double, rows->error, rows->room);
   if (columns->quality >= 0)
@@ -82,6 +87,13 @@ note_first (gsize *count, guint32 *first, char **text, guint32 line, const AntCe
   *text = ant_text_excerpt (cell->start, cell->end, 40);
 }
 
+/* Beyond a float there is no housekeeping, only marks of missing ones. */
+static float
+as_float (double number)
+{
+  return fabs (number) <= (double) FLT_MAX ? (float) number : NAN;
+}
+
 static void
 add_row (AntTableRows *rows, const Slots *slots, AntTimeForm *form, const AntValueColumns *columns, guint32 line)
 {
@@ -100,6 +112,8 @@ add_row (AntTableRows *rows, const Slots *slots, AntTimeForm *form, const AntVal
       if (cell->kind == ANT_CELL_TEXT && columns->n_values == 1)
         note_first (&rows->n_text_values, &rows->first_text_value, &rows->text_value, line, cell);
     }
+  for (guint i = 0; i < columns->n_further; i++)
+    rows->further[i][row] = as_float (slots->cells[slots->further[i]].number);
   if (columns->error >= 0)
     rows->error[row] = slots->cells[slots->error].number;
   /* An unreadable quality is a bad one: -1 has every bit set. */
@@ -147,6 +161,8 @@ ant_table_rows_clear (AntTableRows *rows)
   g_free (rows->line);
   for (guint i = 0; i < ANT_MOST_CANDIDATES; i++)
     g_free (rows->values[i]);
+  for (guint i = 0; i < ANT_MOST_FURTHER; i++)
+    g_free (rows->further[i]);
   g_free (rows->no_time_text);
   g_free (rows->text_value);
   memset (rows, 0, sizeof *rows);

@@ -11,6 +11,7 @@ typedef struct
   gsize n, room;
   double *time_d, *error;
   double *values[ANT_MOST_CANDIDATES];
+  float *further[ANT_MOST_FURTHER];
   gint64 *quality;
   guint32 *line;
 

@@ -1,6 +1,7 @@
 /* text-reader.c - a text table to the rows of a record, and every assumption aloud. */
 #include "readers/text-reader.h"
 
+#include <float.h>
 #include <glib/gi18n.h>
 #include <math.h>
 #include <string.h>
@@ -264,6 +265,44 @@ take_rows (AntTableRows *rows, int value, AntRecord *record)
     record->quality = g_renew (gint64, g_steal_pointer (&rows->quality), rows->n);
 }
 
+static void
+add_column (AntRecord *record, const AntTextColumn *from, float *value, const GArray *stated)
+{
+  ant_fill_clear (value, record->n_rows, stated);
+  g_ptr_array_add (record->columns, ant_column_new (from->label, from->unit, value, record->n_rows));
+}
+
+static float *
+narrow_values (const double *value, gsize n)
+{
+  float *narrow = g_new (float, n);
+  for (gsize i = 0; i < n; i++)
+    narrow[i] = fabs (value[i]) <= (double) FLT_MAX ? (float) value[i] : NAN;
+  return narrow;
+}
+
+/* The other columns of numbers in the file's order: candidates that were not taken, and those that were none. */
+static void
+take_columns (AntTableRows *rows, const AntTextLayout *layout, const AntValueColumns *columns, int value, const GArray *stated,
+              AntRecord *record)
+{
+  guint next_value = 0, next_further = 0;
+  for (guint c = 0; c < layout->n_columns; c++)
+    if (next_value < columns->n_values && columns->values[next_value] == c)
+      {
+        double *values = rows->values[next_value++];
+        if ((int) next_value - 1 != value)
+          add_column (record, &layout->columns[c], narrow_values (values, record->n_rows), stated);
+      }
+    else if (next_further < columns->n_further && columns->further[next_further] == c)
+      {
+        float *values = g_renew (float, g_steal_pointer (&rows->further[next_further++]), record->n_rows);
+        add_column (record, &layout->columns[c], values, stated);
+      }
+  if (columns->n_left_out > 0)
+    ant_record_say (record, _("Of the further columns %u are kept, %u are left out."), record->columns->len, columns->n_left_out);
+}
+
 /* " (column 3)" behind a name that is not just that. */
 static char *
 named_place (const AntTextLayout *layout, guint column)
@@ -312,6 +351,7 @@ finish (AntTableRows *rows, const AntTextLayout *layout, const AntTimeForm *form
     return refuse (error, record, _("line %u: found no values in %s but missing ones in half the rows or more, expected irradiances"),
                    layout->first_row, layout->columns[columns->values[0]].label);
   take_rows (rows, value, record);
+  take_columns (rows, layout, columns, value, stated, record);
   name_columns (layout, columns, columns->values[value], record);
   flag_rows (record, fills);
   clean_errors (record);

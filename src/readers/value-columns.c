@@ -110,6 +110,32 @@ error_by_name (const AntTextLayout *layout, const AntTimeForm *form, const AntVa
   return -1;
 }
 
+static gboolean
+is_candidate (const AntValueColumns *columns, guint c)
+{
+  for (guint i = 0; i < columns->n_values; i++)
+    if (columns->values[i] == c)
+      return TRUE;
+  return FALSE;
+}
+
+/* Housekeeping and other bands: all that is left but other ways to write the time. */
+static void
+find_further (const AntTextLayout *layout, const AntTimeForm *form, AntValueColumns *columns)
+{
+  for (guint c = 0; c < layout->n_columns; c++)
+    {
+      const AntTextColumn *column = &layout->columns[c];
+      if (is_time_part (form, c) || is_candidate (columns, c) || (int) c == columns->error || (int) c == columns->quality
+          || !mostly_numbers (column) || column->n_missing == column->n_cells || ant_time_columns_alike (layout, c))
+        continue;
+      if (columns->n_further < ANT_MOST_FURTHER)
+        columns->further[columns->n_further++] = c;
+      else
+        columns->n_left_out++;
+    }
+}
+
 gboolean
 ant_value_columns_find (const AntTextLayout *layout, const AntTimeForm *form, const AntReadingChoices *choices, const char *path,
                         AntValueColumns *columns, GError **error)
@@ -144,6 +170,7 @@ ant_value_columns_find (const AntTextLayout *layout, const AntTimeForm *form, co
     }
   if (!choices->error_column)
     columns->error = error_by_name (layout, form, columns);
+  find_further (layout, form, columns);
   return TRUE;
 }
 

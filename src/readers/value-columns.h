@@ -7,12 +7,15 @@
 #include "readers/time-form.h"
 
 #define ANT_MOST_CANDIDATES 16
+#define ANT_MOST_FURTHER 64 /* further columns that are kept: the next ones are left out, which is said */
 
 typedef struct
 {
   /* Columns that may hold the value, in order; the choice falls when all rows are read. */
   guint n_values, values[ANT_MOST_CANDIDATES];
   int error, quality; /* -1 if there is none */
+  guint n_further, further[ANT_MOST_FURTHER]; /* the other columns of numbers, in order */
+  guint n_left_out; /* more of them than are kept */
 } AntValueColumns;
 
 /* By the user's choices ("none" for no error or quality), else by names (error, quality) and contents (value). FALSE with

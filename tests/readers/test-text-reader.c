@@ -88,6 +88,24 @@ columns_are_taken_by_name_or_number (void)
 }
 
 static void
+other_columns_of_numbers_are_kept_in_order (void)
+{
+  g_autoptr (AntRecord) record
+      = read_text ("JD,row,temperature [K],tsi,tsi_error,words,empty,pressure\n2451639.5,5,290.5,1361.25,0.5,a,,-9999.9\n"
+                   "2451640.5,5,290.75,1361.5,0.5,b,,3\n2451641.5,5,,1361.75,0.5,c,,3.5\n");
+  static const char *const names[] = { "row", "tsi", "pressure" };
+  g_assert_cmpstr (record->value_name, ==, "temperature [K]");
+  g_assert_cmpuint (record->columns->len, ==, G_N_ELEMENTS (names));
+  for (guint i = 0; i < G_N_ELEMENTS (names); i++)
+    g_assert_cmpstr (((AntColumn *) g_ptr_array_index (record->columns, i))->name, ==, names[i]);
+  const AntColumn *tsi = g_ptr_array_index (record->columns, 1), *pressure = g_ptr_array_index (record->columns, 2);
+  g_assert_cmpfloat (tsi->value[1], ==, 1361.5f);
+  g_assert_cmpuint (tsi->n_missing, ==, 0);
+  g_assert_true (isnan (pressure->value[0])); /* a fill */
+  g_assert_cmpuint (pressure->n_missing, ==, 1);
+}
+
+static void
 a_column_that_is_not_there_is_named_with_those_that_are (void)
 {
   char wanted[] = "tsi";
@@ -98,19 +116,6 @@ a_column_that_is_not_there_is_named_with_those_that_are (void)
   g_assert_error (error, ANT_ERROR, ANT_ERROR_USAGE);
   g_assert_nonnull (strstr (error->message, "“tsi”"));
   g_assert_nonnull (strstr (error->message, "JD, value"));
-}
-
-static void
-malformed_choices_are_refused (void)
-{
-  static const char *const bad[] = { "time", "time=", "flux=3", "=3", "" };
-  for (gsize i = 0; i < G_N_ELEMENTS (bad); i++)
-    {
-      AntReadingChoices choices = { 0 };
-      g_autoptr (GError) error = NULL;
-      g_assert_cmpint (ant_reading_choices_parse_columns (&choices, bad[i], &error), ==, *bad[i] == 0);
-      ant_reading_choices_clear (&choices);
-    }
 }
 
 static void
@@ -337,8 +342,8 @@ main (int argc, char **argv)
   ADD ("a-table-without-header-is-read-by-position", a_table_without_header_is_read_by_position);
   ADD ("numbered-lines-of-prose-name-the-columns", numbered_lines_of_prose_name_the_columns);
   ADD ("columns-are-taken-by-name-or-number", columns_are_taken_by_name_or_number);
+  ADD ("other-columns-of-numbers-are-kept-in-order", other_columns_of_numbers_are_kept_in_order);
   ADD ("a-column-that-is-not-there-is-named-with-those-that-are", a_column_that_is_not_there_is_named_with_those_that_are);
-  ADD ("malformed-choices-are-refused", malformed_choices_are_refused);
   ADD ("a-julian-date-is-taken-before-decimal-years", a_julian_date_is_taken_before_decimal_years);
   ADD ("the-first-column-with-enough-values-is-the-value", the_first_column_with_enough_values_is_the_value);
   ADD ("a-column-empty-at-first-is-still-found", a_column_empty_at_first_is_still_found);

@@ -1,0 +1,19 @@
+/* reading-choices.h - what a person said about how a record is to be read. */
+#pragma once
+
+#include <glib.h>
+
+/* NULL or 0 fields are found by the reader and said. */
+typedef struct
+{
+  char *time_column, *value_column, *error_column, *quality_column; /* names, or numbers from 1; time may be "1+2" */
+  char *time_format; /* "jd", "mjd", "jd-OFFSET", "iso", "ymd", "unix", "year-day", "decimal-year", "days", "hours", "seconds" */
+  char *time_scale;  /* "UTC", "TT", ... */
+  GArray *fill_values; /* of double: these and the usual ones count as missing; NULL = only the usual ones */
+} AntReadingChoices;
+
+void ant_reading_choices_clear (AntReadingChoices *choices);
+/* A copy of its own; clear it. */
+void ant_reading_choices_copy (const AntReadingChoices *choices, AntReadingChoices *copy);
+/* Parse "time=1,value=tsi,error=4,quality=flag". */
+gboolean ant_reading_choices_parse_columns (AntReadingChoices *choices, const char *text, GError **error);
