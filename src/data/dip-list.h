@@ -8,6 +8,7 @@
 typedef struct
 {
   gboolean brightenings;         /* this list is of the other sign: negative depths and SNRs */
+  const char *incomplete;        /* what a stopped scan lacks, as a sentence; NULL: nothing */
   gsize n;
   const AntDip *dip;             /* [n] in the order in which they are numbered */
   double limb_u1, limb_u2;       /* quadratic limb darkening of the templates */

@@ -83,5 +83,6 @@ ant_scan_headline (const AntScanResults *results)
   g_autofree char *dips = g_strdup_printf (g_dngettext (NULL, "%zu dip above SNR %.1f", "%zu dips above SNR %.1f",
                                                         results->n_dips),
                                            results->n_dips, results->threshold_snr);
-  return g_strdup_printf (_("%s · %s expected by chance · mirror %zu"), dips, chance, results->n_mirrored);
+  const char *mark = results->reach < ANT_SCAN_COMPLETE ? _("incomplete · ") : "";
+  return g_strdup_printf (_("%s%s · %s expected by chance · mirror %zu"), mark, dips, chance, results->n_mirrored);
 }

@@ -10,5 +10,5 @@ GPtrArray *ant_noise_part_facts (const AntNoiseModel *model);
 GPtrArray *ant_noise_health_facts (const AntScanResults *results, gsize chunk);
 /* "Piece 2: 2041-03-03 to 2041-06-01". Caller frees. */
 char *ant_noise_chunk_title (const AntScanResults *results, gsize chunk);
-/* "3 dips above SNR 5.1 · 0.02 expected by chance · mirror 0". Caller frees. */
+/* "3 dips above SNR 5.1 · 0.02 expected by chance · mirror 0"; "incomplete · ..." after a stop. Caller frees. */
 char *ant_scan_headline (const AntScanResults *results);

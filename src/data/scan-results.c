@@ -166,6 +166,33 @@ say_length (AntScanResults *results)
     say (results, _("Dips longer than 13 h are looked for: on the Sun, spots and faculae look like dips of that length"));
 }
 
+const char *
+ant_scan_reach_words (AntScanReach reach)
+{
+  switch (reach)
+    {
+    case ANT_SCAN_COMPLETE:
+      return NULL;
+    case ANT_SCAN_DIPS:
+      return _("The scan was stopped before its end: the dips are complete, passages were not traced");
+    case ANT_SCAN_WEIGHED:
+      return _("The scan was stopped before its end: dips were weighed one by one, but neighbours not fitted together and "
+               "those at the borders of pieces not fitted again; passages were not traced");
+    case ANT_SCAN_NOISE:
+    case ANT_SCAN_NOTHING:
+    default:
+      return _("The scan was stopped before its end: the noise is known and dips of SNR 8 and more are listed, weaker ones "
+               "were not weighed; passages were not traced");
+    }
+}
+
+static void
+say_reach (AntScanResults *results)
+{
+  if (results->reach < ANT_SCAN_COMPLETE)
+    say (results, "%s", ant_scan_reach_words (results->reach));
+}
+
 AntScanResults *
 ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntScan *scan)
 {
@@ -176,6 +203,7 @@ ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntS
   results->settings = *settings;
   results->settings.grid.good_values = NULL;
   results->settings.grid.excluded = NULL;
+  results->reach = ant_scan_reach (scan);
   results->said = g_ptr_array_new_with_free_func (g_free);
   results->n_dips = ant_scan_dips (scan, &dip);
   results->dip = g_memdup2 (dip, results->n_dips * sizeof *dip);
@@ -192,6 +220,7 @@ ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntS
   copy_chunks (results, scan);
   median_floor (results);
   add_spike_flags (results, scan);
+  say_reach (results);
   say_surrogates (results);
   say_health (results);
   say_length (results);
@@ -229,6 +258,7 @@ ant_scan_results_list (const AntScanResults *results, gboolean brightenings)
 {
   return (AntDipList) {
     .brightenings = brightenings,
+    .incomplete = ant_scan_reach_words (results->reach),
     .n = brightenings ? results->n_brightenings : results->n_dips,
     .dip = brightenings ? results->brightening : results->dip,
     .limb_u1 = results->settings.bank.limb_darkening.u1,

@@ -12,11 +12,12 @@ typedef struct
 {
   AntRecord *record;         /* owned reference */
   AntSettings settings;      /* those of the scan; its array pointers are not kept */
+  AntScanReach reach;        /* below ANT_SCAN_COMPLETE: the scan was stopped */
   gsize n_dips, n_brightenings;
   AntDip *dip, *brightening; /* by time, numbered from 1 in this order */
   gsize n_passages;
   AntPassage *passage;       /* by time, numbered from 1 in this order */
-  float *slow_ppm;           /* [record->series.n] the slow part, dips taken out, gaps bridged */
+  float *slow_ppm;           /* [record->series.n] the slow part, dips taken out, gaps bridged; NULL unless complete */
   gsize n_chunks;
   AntChunk *chunk;           /* frequency_cd and power_unmasked owned */
   gsize n_floor;             /* points of the median floor over chunks */
@@ -35,7 +36,7 @@ typedef struct
 /* The mirror compares durations up to this: longer brightenings of the Sun (faculae) are no mirror of its spots. */
 #define ANT_MIRROR_LONGEST_H 9.0
 
-/* Copies what it needs of a scan that has run to its end. */
+/* Copies what it needs of a scan that has run to its end or was concluded after a stop (reach above NOTHING). */
 AntScanResults *ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntScan *scan);
 AntScanResults *ant_scan_results_ref (AntScanResults *results);
 void ant_scan_results_unref (AntScanResults *results); /* NULL is fine */
@@ -43,5 +44,7 @@ G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntScanResults, ant_scan_results_unref)
 
 /* The options of a search as the settings and the record's exposure give them. */
 AntScanOptions ant_scan_results_options (const AntRecord *record, const AntSettings *settings);
+/* What a stopped scan lacks, as a sentence; NULL if it is complete. Static. */
+const char *ant_scan_reach_words (AntScanReach reach);
 /* The dips (or brightenings) as the view that tables take; valid as long as the results. */
 AntDipList ant_scan_results_list (const AntScanResults *results, gboolean brightenings);

@@ -1,4 +1,4 @@
-/* desk-work.c - the desk's long work: opening, scanning, asking. A late answer to work that was stopped is dropped. */
+/* desk-work.c - the desk's long work: opening, scanning, asking. A late answer to work that was abandoned is dropped. */
 #include "gui/desk-private.h"
 
 #include <math.h>
@@ -28,7 +28,7 @@ ant_desk_get_progress (AntDesk *self)
 static GCancellable *
 begin (AntDesk *self, AntBusy busy)
 {
-  ant_desk_stop (self);
+  ant_desk_abandon (self);
   self->busy = busy;
   self->stop = g_cancellable_new ();
   self->progress = (AntTaskProgress) { .stage_left_s = NAN };
@@ -47,7 +47,7 @@ end (AntDesk *self, GAsyncResult *result)
 }
 
 void
-ant_desk_stop (AntDesk *self)
+ant_desk_abandon (AntDesk *self)
 {
   if (self->busy == ANT_BUSY_NO)
     return;
@@ -56,6 +56,20 @@ ant_desk_stop (AntDesk *self)
   g_clear_pointer (&self->opening, g_free);
   self->busy = ANT_BUSY_NO;
   self->scan_after = FALSE;
+  ant_desk_tell (self, ANT_DESK_BUSY);
+}
+
+void
+ant_desk_stop (AntDesk *self)
+{
+  if (self->busy != ANT_BUSY_SCANNING)
+    {
+      if (self->busy != ANT_BUSY_STOPPING)
+        ant_desk_abandon (self);
+      return;
+    }
+  g_cancellable_cancel (self->stop);
+  self->busy = ANT_BUSY_STOPPING;
   ant_desk_tell (self, ANT_DESK_BUSY);
 }
 
@@ -179,10 +193,11 @@ scanned_cb (GObject *source, GAsyncResult *result, gpointer data)
   g_autoptr (AntScanOutcome) outcome = ant_scan_task_finish (result, &error);
   if (!end (self, result))
     return;
-  if (outcome)
+  gboolean better = outcome && (!self->results || outcome->results->reach >= self->results->reach);
+  if (better)
     take_outcome (self, outcome);
-  ant_desk_tell (self, outcome ? ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_BUSY : ANT_DESK_BUSY);
-  if (!outcome)
+  ant_desk_tell (self, better ? ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_BUSY : ANT_DESK_BUSY);
+  if (!outcome && !g_error_matches (error, G_IO_ERROR, G_IO_ERROR_CANCELLED))
     ant_desk_fail (self, error->message);
 }
 

@@ -253,7 +253,7 @@ static void
 ant_desk_dispose (GObject *object)
 {
   AntDesk *self = ANT_DESK (object);
-  ant_desk_stop (self);
+  ant_desk_abandon (self);
   g_clear_object (&self->selected);
   g_ptr_array_set_size (self->mark_items, 0);
   g_list_store_remove_all (self->items);

@@ -33,6 +33,7 @@ typedef enum
   ANT_BUSY_OPENING,
   ANT_BUSY_SCANNING,
   ANT_BUSY_ASKING,
+  ANT_BUSY_STOPPING, /* the scan was asked to end and gathers what it has found */
 } AntBusy;
 
 #define ANT_TYPE_DESK (ant_desk_get_type ())
@@ -40,11 +41,13 @@ G_DECLARE_FINAL_TYPE (AntDesk, ant_desk, ANT, DESK, GObject)
 
 AntDesk *ant_desk_new (void);
 
-/* Work. Each stops what was running before. Results of an earlier scan stay until a new one is complete. */
+/* Work. Each abandons what was running before. Results of an earlier scan stay until a new one is complete, or was stopped
+ * no earlier than it. */
 void ant_desk_open (AntDesk *self, const char *path);
 void ant_desk_scan (AntDesk *self); /* reads the record again first if the settings of its grid have changed */
 void ant_desk_ask (AntDesk *self, double from_d, double to_d); /* measure the dip that fills this span */
-void ant_desk_stop (AntDesk *self);
+void ant_desk_stop (AntDesk *self);    /* what a scan has found so far is kept */
+void ant_desk_abandon (AntDesk *self); /* it is not */
 AntBusy ant_desk_get_busy (AntDesk *self);
 const char *ant_desk_get_opening (AntDesk *self);         /* path being read, or NULL */
 const AntTaskProgress *ant_desk_get_progress (AntDesk *self); /* of the scan */

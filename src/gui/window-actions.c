@@ -21,7 +21,7 @@ enum
   NEEDS_RESULTS = 1 << 1,
   NEEDS_MARKS = 1 << 2,
   NEEDS_SELECTION = 1 << 3,
-  NEEDS_WORK = 1 << 4, /* something is running */
+  NEEDS_WORK = 1 << 4, /* something is running and can be stopped */
   NEEDS_BACK = 1 << 5,
   NEEDS_FORWARD = 1 << 6,
   NEEDS_PLACE = 1 << 7, /* a span or a selection to go to */
@@ -382,13 +382,14 @@ present_state (AntDesk *desk)
 {
   const AntDipMark *marks;
   AntSpan span;
+  AntBusy busy = ant_desk_get_busy (desk);
   gboolean record = ant_desk_get_record (desk) != NULL, selection = ant_desk_get_selected (desk) != NULL;
   return (record ? NEEDS_RECORD : 0u) | (ant_desk_get_results (desk) ? NEEDS_RESULTS : 0u)
          | (ant_desk_get_marks (desk, &marks) > 0 ? NEEDS_MARKS : 0u) | (selection ? NEEDS_SELECTION : 0u)
-         | (ant_desk_get_busy (desk) != ANT_BUSY_NO ? NEEDS_WORK : 0u) | (ant_desk_can_go (desk, -1) ? NEEDS_BACK : 0u)
+         | (busy != ANT_BUSY_NO && busy != ANT_BUSY_STOPPING ? NEEDS_WORK : 0u) | (ant_desk_can_go (desk, -1) ? NEEDS_BACK : 0u)
          | (ant_desk_can_go (desk, 1) ? NEEDS_FORWARD : 0u)
          | (selection || (record && ant_desk_get_span (desk, &span)) ? NEEDS_PLACE : 0u)
-         | (ant_desk_get_busy (desk) == ANT_BUSY_NO ? NEEDS_NO_SCAN : 0u);
+         | (busy == ANT_BUSY_NO ? NEEDS_NO_SCAN : 0u);
 }
 
 void

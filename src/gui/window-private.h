@@ -15,7 +15,7 @@ struct _AntWindow
   /* From the template */
   GtkLabel *title, *subtitle, *banner_text, *welcome, *welcome_more, *status;
   GtkMenuButton *recent_button;
-  GtkButton *scan;
+  GtkButton *scan, *banner_button;
   GtkWidget *welcome_open;
   GtkSpinner *spinner;
   GtkInfoBar *banner;

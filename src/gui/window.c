@@ -22,11 +22,33 @@ ant_window_is_empty (AntWindow *self)
   return !ant_desk_get_record (self->desk) && ant_desk_get_busy (self->desk) == ANT_BUSY_NO;
 }
 
+/* A sentence, and the way on. */
+static void
+show_banner (AntWindow *self, GtkMessageType type, const char *sentence, const char *way, const char *action)
+{
+  gtk_label_set_text (self->banner_text, sentence);
+  gtk_info_bar_set_message_type (self->banner, type);
+  gtk_button_set_label (self->banner_button, way);
+  gtk_actionable_set_action_name (GTK_ACTIONABLE (self->banner_button), action);
+  gtk_info_bar_set_revealed (self->banner, TRUE);
+}
+
 void
 ant_window_complain (AntWindow *self, const char *sentence)
 {
-  gtk_label_set_text (self->banner_text, sentence);
-  gtk_info_bar_set_revealed (self->banner, TRUE);
+  show_banner (self, GTK_MESSAGE_ERROR, sentence, _("Open Another…"), "win.open");
+}
+
+/* Results of a stopped scan say so as long as they are shown; complete ones take that back. */
+static void
+show_completeness (AntWindow *self)
+{
+  const AntScanResults *results = ant_desk_get_results (self->desk);
+  const char *lack = results ? ant_scan_reach_words (results->reach) : NULL;
+  if (lack)
+    show_banner (self, GTK_MESSAGE_WARNING, lack, _("Scan Again"), "win.scan");
+  else if (gtk_info_bar_get_message_type (self->banner) == GTK_MESSAGE_WARNING)
+    gtk_info_bar_set_revealed (self->banner, FALSE);
 }
 
 static void
@@ -109,6 +131,8 @@ progress_text (AntDesk *desk)
   const AntTaskProgress *progress = ant_desk_get_progress (desk);
   if (ant_desk_get_busy (desk) == ANT_BUSY_ASKING)
     return g_strdup (_("Measuring the dip…"));
+  if (ant_desk_get_busy (desk) == ANT_BUSY_STOPPING)
+    return g_strdup (_("Stopping…"));
   if (ant_desk_get_busy (desk) == ANT_BUSY_OPENING)
     {
       g_autofree char *name = g_path_get_basename (ant_desk_get_opening (desk));
@@ -182,6 +206,8 @@ desk_changed_cb (AntDesk *desk, guint what, AntWindow *self)
 {
   if (what & ANT_DESK_RECORD)
     show_record (self);
+  if (what & (ANT_DESK_RESULTS | ANT_DESK_RECORD))
+    show_completeness (self);
   if (what & (ANT_DESK_BUSY | ANT_DESK_RESULTS | ANT_DESK_RECORD | ANT_DESK_SETTINGS | ANT_DESK_POINTER))
     show_status (self);
   if (what & (ANT_DESK_BUSY | ANT_DESK_RESULTS | ANT_DESK_RECORD | ANT_DESK_SETTINGS))
@@ -249,7 +275,7 @@ ant_window_close_request (GtkWindow *window)
       gtk_window_get_default_size (window, &width, &height);
       ant_preferences_set_size (width, height);
     }
-  ant_desk_stop (ANT_WINDOW (window)->desk);
+  ant_desk_abandon (ANT_WINDOW (window)->desk);
   return GTK_WINDOW_CLASS (ant_window_parent_class)->close_request (window);
 }
 
@@ -260,7 +286,7 @@ ant_window_dispose (GObject *object)
   if (self->desk)
     {
       g_signal_handlers_disconnect_by_data (self->desk, self);
-      ant_desk_stop (self->desk);
+      ant_desk_abandon (self->desk);
     }
   g_clear_object (&self->desk);
   gtk_widget_dispose_template (GTK_WIDGET (object), ANT_TYPE_WINDOW);
@@ -273,6 +299,7 @@ bind_children (GtkWidgetClass *widget_class)
   gtk_widget_class_bind_template_child (widget_class, AntWindow, title);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, subtitle);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, banner_text);
+  gtk_widget_class_bind_template_child (widget_class, AntWindow, banner_button);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, welcome);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, welcome_more);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, welcome_open);

@@ -9,20 +9,36 @@
 /* Phi^-1(0.95): a Gaussian exceeds its mean by this many sigma with probability 5 %. */
 #define ONE_SIDED_95 1.6448536269514722
 
-AntScanResults *
-ant_scan_job_run (AntRecord *record, const AntSettings *settings, GCancellable *cancellable, AntProgressFunc progress,
-                  gpointer data, GError **error)
+static AntScanResults *
+run (AntRecord *record, const AntSettings *settings, gboolean keep_part, GCancellable *cancellable,
+     AntProgressFunc progress, gpointer data, GError **error)
 {
   AntStatus status;
   AntScanOptions options = ant_scan_results_options (record, settings);
   AntScan *scan = ant_scan_new (&record->series, &options, &status);
   if (scan)
     status = ant_pool_run (ant_scan_stages (), scan, (guint) settings->threads, cancellable, progress, data);
+  if (keep_part && status == ANT_STOPPED && ant_scan_reach (scan) > ANT_SCAN_NOTHING)
+    status = ant_scan_conclude (scan);
   AntScanResults *results = NULL;
   if (ant_status_to_error (status, _("searching for dips"), error))
     results = ant_scan_results_new (record, settings, scan);
   ant_scan_free (scan);
   return results;
+}
+
+AntScanResults *
+ant_scan_job_run (AntRecord *record, const AntSettings *settings, GCancellable *cancellable, AntProgressFunc progress,
+                  gpointer data, GError **error)
+{
+  return run (record, settings, FALSE, cancellable, progress, data, error);
+}
+
+AntScanResults *
+ant_scan_job_run_partly (AntRecord *record, const AntSettings *settings, GCancellable *cancellable,
+                         AntProgressFunc progress, gpointer data, GError **error)
+{
+  return run (record, settings, TRUE, cancellable, progress, data, error);
 }
 
 /* The asked middle is none of the record's. */

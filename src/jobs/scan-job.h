@@ -9,6 +9,10 @@
  * record must be gridded. Safe from any thread. */
 AntScanResults *ant_scan_job_run (AntRecord *record, const AntSettings *settings, GCancellable *cancellable,
                                   AntProgressFunc progress, gpointer data, GError **error);
+/* The same, but of a stopped scan it gives what the finished stages found (reach below ANT_SCAN_COMPLETE); NULL with
+ * G_IO_ERROR_CANCELLED only if that is nothing. */
+AntScanResults *ant_scan_job_run_partly (AntRecord *record, const AntSettings *settings, GCancellable *cancellable,
+                                         AntProgressFunc progress, gpointer data, GError **error);
 /* Measure one asked dip: middle and length. upper_limit_ppm: one-sided 95 % limit of its depth, never below 0. */
 gboolean ant_scan_job_ask (AntRecord *record, const AntSettings *settings, double mid_d, double duration_d, AntDip *dip,
                            double *upper_limit_ppm, GError **error);

@@ -92,8 +92,10 @@ run_scan (gpointer data)
   GError *error = NULL;
   g_autoptr (AntScanOutcome) outcome = g_new0 (AntScanOutcome, 1);
   outcome->results =
-      ant_scan_job_run (record, &order->settings, g_task_get_cancellable (task), note_progress, order, &error);
-  if (outcome->results)
+      ant_scan_job_run_partly (record, &order->settings, g_task_get_cancellable (task), note_progress, order, &error);
+  if (outcome->results && outcome->results->reach < ANT_SCAN_COMPLETE) /* who stops does not want to wait */
+    outcome->layers = ant_layers_ref (order->layers);
+  else if (outcome->results)
     outcome->layers = ant_layers_new (record, &order->settings, outcome->results, order->layers, &error);
   if (outcome->layers)
     g_task_return_pointer (task, g_steal_pointer (&outcome), (GDestroyNotify) ant_scan_outcome_free);
@@ -109,6 +111,7 @@ ant_scan_task_async (AntLayers *layers, const AntSettings *settings, GCancellabl
   GTask *task = g_task_new (NULL, cancellable, callback, data);
   Order *order = order_new (layers, settings);
   g_task_set_source_tag (task, ant_scan_task_async);
+  g_task_set_check_cancellable (task, FALSE); /* a stopped scan has results too */
   order->progress = progress;
   order->data = data;
   g_task_set_task_data (task, order, order_free);

@@ -17,7 +17,8 @@ typedef void (*AntTaskProgressFunc) (const AntTaskProgress *progress, gpointer d
 typedef struct
 {
   AntScanResults *results;
-  AntLayers *layers;      /* the record again, with the found dips masked in its rotation curve */
+  AntLayers *layers;      /* the record again, with the found dips masked in its rotation curve; those that were given if
+                             the scan was stopped */
 } AntScanOutcome;
 void ant_scan_outcome_free (AntScanOutcome *outcome);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntScanOutcome, ant_scan_outcome_free)
@@ -26,7 +27,8 @@ G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntScanOutcome, ant_scan_outcome_free)
  * both. The task keeps a reference to the layers and a copy of the settings. */
 void ant_scan_task_async (AntLayers *layers, const AntSettings *settings, GCancellable *cancellable,
                           AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data);
-/* NULL with one sentence; G_IO_ERROR_CANCELLED if stopped. */
+/* What a stopped scan found before is kept (reach of its results below ANT_SCAN_COMPLETE). NULL with one sentence;
+ * G_IO_ERROR_CANCELLED if it was stopped before it found anything. */
 AntScanOutcome *ant_scan_task_finish (GAsyncResult *result, GError **error);
 
 typedef struct

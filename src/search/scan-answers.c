@@ -1,6 +1,17 @@
 /* scan-answers.c - what a scan tells of itself when its stages are done. */
 #include "search/scan-private.h"
 
+AntScanReach
+ant_scan_reach (const AntScan *scan)
+{
+  size_t n = scan->n_finished;
+  return n > ANT_STAGE_TRACE    ? ANT_SCAN_COMPLETE
+         : n > ANT_STAGE_BORDER ? ANT_SCAN_DIPS
+         : n > ANT_STAGE_WEIGH  ? ANT_SCAN_WEIGHED
+         : n > ANT_STAGE_SEARCH ? ANT_SCAN_NOISE
+                                : ANT_SCAN_NOTHING;
+}
+
 size_t
 ant_scan_chunks (const AntScan *scan, const AntChunk **chunk)
 {
@@ -34,7 +45,7 @@ size_t
 ant_scan_surrogates (const AntScan *scan, size_t *n_events)
 {
   *n_events = scan->n_surrogate_events;
-  return scan->options.surrogates;
+  return scan->n_finished > ANT_STAGE_CHANCE ? scan->options.surrogates : 0;
 }
 
 AntChanceField ant_scan_chance_field (const AntScan *scan) { return scan->chance.field; }

@@ -118,18 +118,9 @@ ant_scan_drop_side_lobes (AntScan *scan)
       }
 }
 
-static void
-settle_borders (AntScan *scan)
+static AntStatus
+list_events (AntScan *scan)
 {
-  for (size_t i = 0; i < scan->n_events; i++)
-    scan->event[i].fit = scan->event[i].border_fit;
-  ant_scan_drop_side_lobes (scan);
-}
-
-AntStatus
-ant_scan_list_dips (AntScan *scan)
-{
-  settle_borders (scan);
   scan->dip = malloc ((scan->n_events + 1) * sizeof *scan->dip);
   scan->brightening = malloc ((scan->n_events + 1) * sizeof *scan->brightening);
   if (!scan->dip || !scan->brightening)
@@ -148,4 +139,41 @@ ant_scan_list_dips (AntScan *scan)
   qsort (scan->dip, scan->n_dips, sizeof *scan->dip, by_time);
   qsort (scan->brightening, scan->n_brightenings, sizeof *scan->brightening, by_time);
   return ANT_OK;
+}
+
+AntStatus
+ant_scan_list_dips (AntScan *scan)
+{
+  for (size_t i = 0; i < scan->n_events; i++)
+    scan->event[i].fit = scan->event[i].border_fit;
+  ant_scan_drop_side_lobes (scan);
+  return list_events (scan);
+}
+
+/* Before all candidates were weighed only the strong events have been measured as they ought to be. */
+static void
+keep_strong (AntScan *scan)
+{
+  size_t n = 0;
+  for (size_t i = 0; i < scan->n_events; i++)
+    if (scan->event[i].strong)
+      scan->event[n++] = scan->event[i];
+  scan->n_events = n;
+}
+
+AntStatus
+ant_scan_conclude (AntScan *scan)
+{
+  AntScanReach reach = ant_scan_reach (scan);
+  if (reach == ANT_SCAN_NOTHING)
+    return ANT_NO_DATA;
+  if (reach >= ANT_SCAN_DIPS)
+    return ANT_OK;
+  AntStatus status = scan->n_finished > ANT_STAGE_CHANCE ? ANT_OK : choose_events (scan);
+  if (status)
+    return status;
+  if (reach == ANT_SCAN_NOISE)
+    keep_strong (scan);
+  ant_scan_drop_side_lobes (scan);
+  return list_events (scan);
 }

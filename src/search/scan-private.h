@@ -9,6 +9,18 @@
 #define ANT_SURROGATE_SNR 4.5  /* lowest final SNR of the surrogates that the law is fitted to: below it the search keeps only a part */
 #define ANT_PER_CHUNK 400    /* most events of one sign kept for a chunk */
 
+enum
+{
+  ANT_STAGE_LEARN,
+  ANT_STAGE_SEARCH,
+  ANT_STAGE_CHANCE,
+  ANT_STAGE_WEIGH,
+  ANT_STAGE_TOGETHER,
+  ANT_STAGE_BORDER,
+  ANT_STAGE_TRACE,
+  ANT_N_STAGES,
+};
+
 /* One dip or brightening on its way; places are those of the record. */
 typedef struct
 {
@@ -49,6 +61,7 @@ struct _AntScan
 {
   AntStop own_stop;
   AntStop *stop;       /* own_stop, or that of the scan whose surrogate this is */
+  size_t n_finished;   /* stages */
   AntSeries series;
   AntScanOptions options;
   AntRefineOptions refine;

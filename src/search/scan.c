@@ -5,8 +5,6 @@
 #include <string.h>
 #include "search/scan-private.h"
 
-enum { LEARN, SEARCH, CHANCE, WEIGH, TOGETHER, BORDER, TRACE, N_STAGES };
-
 static AntRefineOptions
 refine_options (const AntScanOptions *options, const AntTemplateBank *bank)
 {
@@ -100,7 +98,7 @@ ant_scan_free (AntScan *scan)
 static const char *
 stage_title (void *work, size_t stage)
 {
-  static const char *const title[N_STAGES] = {
+  static const char *const title[ANT_N_STAGES] = {
     "learning the noise", "searching for dips", "searching surrogates", "weighing candidates", "fitting dips together",
     "fitting dips at borders", "tracing passages"
   };
@@ -111,7 +109,7 @@ static size_t
 stage_count (void *work, size_t stage)
 {
   AntScan *scan = work;
-  size_t count[N_STAGES] = { 1, scan->n_chunks, scan->options.surrogates, scan->n_events, scan->n_chunks, scan->n_events,
+  size_t count[ANT_N_STAGES] = { 1, scan->n_chunks, scan->options.surrogates, scan->n_events, scan->n_chunks, scan->n_events,
                              scan->n_chunks };
   return count[stage];
 }
@@ -124,35 +122,45 @@ run_slice (void *work, size_t stage, size_t slice)
     return ANT_STOPPED;
   switch (stage)
     {
-    case LEARN: return ant_scan_learn_noise (scan);
-    case SEARCH: return ant_scan_search_chunk (scan, slice);
-    case CHANCE: return ant_scan_try_surrogate (scan, slice);
-    case WEIGH: return scan->event[slice].strong ? ANT_OK : ant_scan_weigh (scan, slice);
-    case TOGETHER: return ant_scan_fit_together (scan, slice);
-    case BORDER: return ant_scan_weigh_at_border (scan, slice);
+    case ANT_STAGE_LEARN: return ant_scan_learn_noise (scan);
+    case ANT_STAGE_SEARCH: return ant_scan_search_chunk (scan, slice);
+    case ANT_STAGE_CHANCE: return ant_scan_try_surrogate (scan, slice);
+    case ANT_STAGE_WEIGH: return scan->event[slice].strong ? ANT_OK : ant_scan_weigh (scan, slice);
+    case ANT_STAGE_TOGETHER: return ant_scan_fit_together (scan, slice);
+    case ANT_STAGE_BORDER: return ant_scan_weigh_at_border (scan, slice);
     default: return ant_scan_trace_slow (scan, slice);
+    }
+}
+
+static AntStatus
+merge (AntScan *scan, size_t stage)
+{
+  switch (stage)
+    {
+    case ANT_STAGE_SEARCH: ant_scan_merge_chunks (scan); return ANT_OK;
+    case ANT_STAGE_CHANCE: return ant_scan_settle_chance (scan);
+    case ANT_STAGE_WEIGH: ant_scan_drop_side_lobes (scan); return ANT_OK;
+    case ANT_STAGE_BORDER: return ant_scan_list_dips (scan);
+    case ANT_STAGE_TRACE: return ant_scan_join_traces (scan);
+    default: return ANT_OK;
     }
 }
 
 static AntStatus
 finish (void *work, size_t stage)
 {
-  switch (stage)
-    {
-    case SEARCH: ant_scan_merge_chunks (work); return ANT_OK;
-    case CHANCE: return ant_scan_settle_chance (work);
-    case WEIGH: ant_scan_drop_side_lobes (work); return ANT_OK;
-    case BORDER: return ant_scan_list_dips (work);
-    case TRACE: return ant_scan_join_traces (work);
-    default: return ANT_OK;
-    }
+  AntScan *scan = work;
+  AntStatus status = merge (scan, stage);
+  if (!status)
+    scan->n_finished = stage + 1;
+  return status;
 }
 
 AntStatus
 ant_scan_find_alone (AntScan *scan)
 {
   AntStatus status = ANT_OK;
-  for (size_t stage = LEARN; stage <= BORDER && !status; stage++)
+  for (size_t stage = ANT_STAGE_LEARN; stage <= ANT_STAGE_BORDER && !status; stage++)
     {
       size_t count = stage_count (scan, stage);
       for (size_t i = 0; i < count && !status; i++)
@@ -173,6 +181,6 @@ stop_of (void *work)
 const AntStages *
 ant_scan_stages (void)
 {
-  static const AntStages stages = { N_STAGES, stage_title, stage_count, run_slice, finish, stop_of };
+  static const AntStages stages = { ANT_N_STAGES, stage_title, stage_count, run_slice, finish, stop_of };
   return &stages;
 }

@@ -5,7 +5,8 @@
  * looked for. Brightenings go through exactly the same steps: they are the mirror that shows what noise alone does.
  *
  * Run by driving ant_scan_stages () (core/stages.h) with the scan as work. Results are valid after the last finish;
- * after a stop they are those of the stages that finished. The series' arrays must outlive the scan. */
+ * after a stop, and ant_scan_conclude (), they are those of the stages that finished. The series' arrays must outlive the
+ * scan. */
 #pragma once
 
 #include <stdint.h>
@@ -40,6 +41,20 @@ AntScan *ant_scan_new (const AntSeries *series, const AntScanOptions *options, A
 void ant_scan_free (AntScan *scan);
 const AntStages *ant_scan_stages (void);
 
+/* How far a scan came. */
+typedef enum
+{
+  ANT_SCAN_NOTHING,
+  ANT_SCAN_NOISE,    /* noise, floor, threshold by the built-in law; dips of SNR 8 and more from the first pass */
+  ANT_SCAN_WEIGHED,  /* every dip, each weighed alone */
+  ANT_SCAN_DIPS,     /* every dip as it stays; no passages */
+  ANT_SCAN_COMPLETE,
+} AntScanReach;
+AntScanReach ant_scan_reach (const AntScan *scan);
+/* After a stop, with no slice running: bring what the finished stages found into the lists. No stage may be run after it.
+ * ANT_NO_DATA if they found nothing that can be told. */
+AntStatus ant_scan_conclude (AntScan *scan);
+
 size_t ant_scan_chunks (const AntScan *scan, const AntChunk **chunk);
 /* Dips at or above the threshold by time, and brightenings likewise. */
 size_t ant_scan_dips (const AntScan *scan, const AntDip **dip);
@@ -49,7 +64,7 @@ double ant_scan_threshold (const AntScan *scan);
 double ant_scan_expected_false (const AntScan *scan, double snr);
 /* What the chance law is computed from. */
 AntChanceField ant_scan_chance_field (const AntScan *scan);
-/* Surrogates that the chance law was refitted to, and the events of both signs in them (SNR 4 and more). */
+/* Surrogates that the chance law was refitted to (0: none), and the events of both signs in them (SNR 4 and more). */
 size_t ant_scan_surrogates (const AntScan *scan, size_t *n_events);
 /* Candidates that were masked and refitted. */
 size_t ant_scan_refits (const AntScan *scan);

@@ -11,6 +11,8 @@ static void
 append_search (GString *table, const AntDipList *list)
 {
   char u1[G_ASCII_DTOSTR_BUF_SIZE], u2[G_ASCII_DTOSTR_BUF_SIZE];
+  if (list->incomplete)
+    ant_csv_comment (table, "incomplete: %s", list->incomplete);
   ant_csv_comment (table, "limb darkening: quadratic %s, %s", g_ascii_formatd (u1, sizeof u1, "%.4g", list->limb_u1),
                    g_ascii_formatd (u2, sizeof u2, "%.4g", list->limb_u2));
   if (list->upper_limit_ppm)

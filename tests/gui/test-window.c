@@ -128,9 +128,41 @@ stopping_keeps_what_was_found_before (void)
   g_assert_true (is_enabled (window, "stop"));
   /* At once: a small record may be searched in the time of one frame. */
   gtk_widget_activate_action (GTK_WIDGET (window), "win.stop", NULL);
-  g_assert_true (test_gui_idle (desk));
-  test_gui_settle (300); /* whatever the stopped work still has to say */
+  g_assert_false (is_enabled (window, "stop"));
+  test_gui_wait (test_gui_idle, desk, 20);
   g_assert_true (ant_desk_get_results (desk) == before);
+  test_gui_close (window);
+}
+
+/* A condition: the scan has come to its surrogates, where it stays for a while. */
+static gboolean
+searches_surrogates (gpointer desk)
+{
+  return ant_desk_get_progress (desk)->stage >= 2;
+}
+
+static void
+stopping_keeps_what_was_found_so_far_and_says_so (void)
+{
+  AntWindow *window = test_gui_window_with_record ();
+  AntDesk *desk = ant_window_get_desk (window);
+  GtkInfoBar *banner = test_gui_find (window, GTK_TYPE_INFO_BAR);
+  g_assert_true (ant_desk_set_setting (desk, ant_setting_find ("threads"), "1", NULL));
+  g_assert_true (ant_desk_set_setting (desk, ant_setting_find ("surrogates"), "100", NULL));
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.scan", NULL);
+  test_gui_wait (searches_surrogates, desk, 60);
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.stop", NULL);
+  test_gui_wait (test_gui_idle, desk, 60);
+  const AntScanResults *results = ant_desk_get_results (desk);
+  g_assert_nonnull (results);
+  g_assert_cmpint (results->reach, ==, ANT_SCAN_NOISE);
+  g_assert_cmpuint (results->n_dips, ==, 1);
+  g_assert_true (gtk_info_bar_get_revealed (banner));
+  g_assert_true (ant_desk_set_setting (desk, ant_setting_find ("surrogates"), "0", NULL));
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.scan", NULL);
+  test_gui_wait (test_gui_idle, desk, 120);
+  g_assert_cmpint (ant_desk_get_results (desk)->reach, ==, ANT_SCAN_COMPLETE);
+  g_assert_false (gtk_info_bar_get_revealed (banner));
   test_gui_close (window);
 }
 
@@ -267,6 +299,8 @@ add (void)
   g_test_add_func ("/gui/window/a-setting-of-the-grid-reads-the-record-again",
                    a_setting_of_the_grid_reads_the_record_again);
   g_test_add_func ("/gui/window/stopping-keeps-what-was-found-before", stopping_keeps_what_was_found_before);
+  g_test_add_func ("/gui/window/stopping-keeps-what-was-found-so-far-and-says-so",
+                   stopping_keeps_what_was_found_so_far_and_says_so);
   g_test_add_func ("/gui/window/it-may-be-closed-while-it-scans", a_window_may_be_closed_while_it_scans);
   g_test_add_func ("/gui/window/another-record-may-be-opened-while-it-scans",
                    another_record_may_be_opened_while_it_scans);

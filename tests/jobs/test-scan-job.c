@@ -151,6 +151,50 @@ a_stopped_scan_gives_no_results (Fixture *f, gconstpointer data)
   g_assert_error (error, G_IO_ERROR, G_IO_ERROR_CANCELLED);
 }
 
+/* Cancel as soon as a stage begins. */
+typedef struct
+{
+  GCancellable *stop;
+  gsize stage;
+} StopAt;
+
+static void
+cancel_at_stage (const AntProgress *progress, gpointer data)
+{
+  StopAt *at = data;
+  if (progress->stage >= at->stage)
+    g_cancellable_cancel (at->stop);
+}
+
+static void
+what_a_stopped_scan_found_can_be_kept (Fixture *f, gconstpointer data)
+{
+  const AntScanReach expected[] = { ANT_SCAN_NOTHING, ANT_SCAN_NOTHING, ANT_SCAN_NOISE, ANT_SCAN_NOISE, ANT_SCAN_WEIGHED,
+                                    ANT_SCAN_WEIGHED, ANT_SCAN_DIPS };
+  for (gsize stage = 0; stage < G_N_ELEMENTS (expected); stage++)
+    {
+      g_autoptr (GCancellable) stop = g_cancellable_new ();
+      g_autoptr (GError) error = NULL;
+      StopAt at = { stop, stage };
+      g_autoptr (AntScanResults) results
+          = ant_scan_job_run_partly (f->record, &f->settings, stop, cancel_at_stage, &at, &error);
+      if (expected[stage] == ANT_SCAN_NOTHING)
+        {
+          g_assert_null (results);
+          g_assert_error (error, G_IO_ERROR, G_IO_ERROR_CANCELLED);
+          continue;
+        }
+      g_assert_no_error (error);
+      g_assert_cmpint (results->reach, ==, expected[stage]);
+      g_assert_cmpuint (results->n_chunks, >, 1);
+      g_assert_cmpuint (results->n_floor, >, 0);
+      g_assert_cmpuint (results->n_passages, ==, 0);
+      g_assert_cmpstr (g_ptr_array_index (results->said, 0), ==, ant_scan_reach_words (expected[stage]));
+      size_t count;
+      g_assert_nonnull (nearest_dip (results->n_dips, results->dip, planted.mid_d, 0.5, &count));
+    }
+}
+
 static void
 an_asked_dip_has_a_limit_above_its_depth (Fixture *f, gconstpointer data)
 {
@@ -190,6 +234,7 @@ main (int argc, char **argv)
   TEST ("what-was-planted-is-in-the-results", what_was_planted_is_in_the_results);
   TEST ("progress-goes-forward-through-the-stages", progress_goes_forward_through_the_stages);
   TEST ("a-stopped-scan-gives-no-results", a_stopped_scan_gives_no_results);
+  TEST ("what-a-stopped-scan-found-can-be-kept", what_a_stopped_scan_found_can_be_kept);
   TEST ("an-asked-dip-has-a-limit-above-its-depth", an_asked_dip_has_a_limit_above_its_depth);
   TEST ("an-asked-dip-outside-the-data-is-refused", an_asked_dip_outside_the_data_is_refused);
   return g_test_run ();

@@ -231,6 +231,72 @@ a_record_too_bare_to_fit_is_refused (Fixture *f, gconstpointer data)
   g_assert_cmpint (ant_scan_stages ()->run_slice (f->scan, 0, 0), ==, ANT_NO_DATA);
 }
 
+/* A scan whose first stages alone were finished; NULL fails the test. */
+static AntScan *
+scan_up_to (const AntSeries *series, const AntScanOptions *options, size_t n_stages)
+{
+  AntStatus status;
+  const AntStages *stages = ant_scan_stages ();
+  AntScan *scan = ant_scan_new (series, options, &status);
+  g_assert_nonnull (scan);
+  for (size_t stage = 0; stage < n_stages; stage++)
+    {
+      size_t count = stages->count (scan, stage);
+      for (size_t i = 0; i < count; i++)
+        g_assert_cmpint (stages->run_slice (scan, stage, i), ==, ANT_OK);
+      g_assert_cmpint (stages->finish (scan, stage), ==, ANT_OK);
+    }
+  return scan;
+}
+
+static void
+a_stopped_scan_tells_what_its_finished_stages_found (Fixture *f, gconstpointer data)
+{
+  static const Planted planted[] = { { 6, 8, 20, 0.3, 1500 }, { 14, 6, 20, 0.3, 200 } };
+  const AntDip *whole, *part;
+  lay (f, 'C', ANT_MASK_L1, 20, 300, 9110, 2, planted);
+  f->scan = scan_all (&f->series, &f->options);
+  size_t n_stages = ant_scan_stages ()->n_stages, n_whole = ant_scan_dips (f->scan, &whole);
+  g_assert_cmpuint (n_whole, ==, 2);
+  g_assert_cmpint (ant_scan_reach (f->scan), ==, ANT_SCAN_COMPLETE);
+  AntScanReach last = ANT_SCAN_NOTHING;
+  for (size_t stages = 0; stages < n_stages; stages++)
+    {
+      AntScan *scan = scan_up_to (&f->series, &f->options, stages);
+      AntScanReach reach = ant_scan_reach (scan);
+      g_assert_cmpint (ant_scan_conclude (scan), ==, reach == ANT_SCAN_NOTHING ? ANT_NO_DATA : ANT_OK);
+      g_assert_cmpint (reach, >=, last);
+      g_assert_cmpint (reach, <, ANT_SCAN_COMPLETE);
+      g_assert_null (ant_scan_slow (scan));
+      size_t n = ant_scan_dips (scan, &part), expected = reach == ANT_SCAN_NOTHING ? 0 : reach == ANT_SCAN_NOISE ? 1 : 2;
+      g_assert_cmpuint (n, ==, expected);
+      if (n > 0)
+        g_assert_cmpfloat (ant_scan_threshold (scan), ==, ant_scan_threshold (f->scan));
+      for (size_t i = 0; i < n; i++)
+        g_assert_cmpfloat_with_epsilon (part[i].depth_ppm, whole[i].depth_ppm,
+                                        reach == ANT_SCAN_DIPS ? 1e-9 : whole[i].depth_sigma_ppm);
+      last = reach;
+      ant_scan_free (scan);
+    }
+  g_assert_cmpint (last, ==, ANT_SCAN_DIPS);
+}
+
+static void
+a_scan_stopped_among_its_surrogates_keeps_the_built_in_law (Fixture *f, gconstpointer data)
+{
+  size_t n_events;
+  lay (f, 'C', ANT_MASK_L1, 12, 600, 9111, 0, NULL);
+  f->scan = scan_all (&f->series, &f->options);
+  f->options.surrogates = 2;
+  AntScan *stopped = scan_up_to (&f->series, &f->options, 2);
+  g_assert_cmpint (ant_scan_stages ()->run_slice (stopped, 2, 0), ==, ANT_OK);
+  g_assert_cmpint (ant_scan_conclude (stopped), ==, ANT_OK);
+  g_assert_cmpuint (ant_scan_surrogates (stopped, &n_events), ==, 0);
+  g_assert_cmpuint (n_events, ==, 0);
+  g_assert_cmpfloat (ant_scan_threshold (stopped), ==, ant_scan_threshold (f->scan));
+  ant_scan_free (stopped);
+}
+
 int
 main (int argc, char **argv)
 {
@@ -246,5 +312,7 @@ main (int argc, char **argv)
   TEST ("fewer-false-alarms-a-year-ask-for-a-higher-threshold", fewer_false_alarms_a_year_ask_for_a_higher_threshold);
   TEST ("spikes-are-told-and-still-searched", spikes_are_told_and_still_searched);
   TEST ("a-record-too-bare-to-fit-is-refused", a_record_too_bare_to_fit_is_refused);
+  TEST ("a-stopped-one-tells-what-its-finished-stages-found", a_stopped_scan_tells_what_its_finished_stages_found);
+  TEST ("one-stopped-among-its-surrogates-keeps-the-built-in-law", a_scan_stopped_among_its_surrogates_keeps_the_built_in_law);
   return g_test_run ();
 }

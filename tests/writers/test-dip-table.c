@@ -147,6 +147,18 @@ test_same_bytes (void)
   g_assert_cmpstr (one->str, ==, two->str);
 }
 
+static void
+test_incomplete (void)
+{
+  g_autoptr (AntRecord) record = record_in_utc ();
+  AntDipList list = list_of (2);
+  g_autoptr (GString) whole = ant_dip_table_text (record, &list);
+  g_assert_null (strstr (whole->str, "incomplete"));
+  list.incomplete = "stopped";
+  g_autoptr (GString) part = ant_dip_table_text (record, &list);
+  g_assert_nonnull (strstr (part->str, "\n# incomplete: stopped\n"));
+}
+
 int
 main (int argc, char **argv)
 {
@@ -158,5 +170,6 @@ main (int argc, char **argv)
   g_test_add_func ("/writers/dip-table/no-scale-no-utc", test_unknown_scale);
   g_test_add_func ("/writers/dip-table/asked-dips-have-an-upper-limit", test_asked);
   g_test_add_func ("/writers/dip-table/same-record-same-bytes", test_same_bytes);
+  g_test_add_func ("/writers/dip-table/a-stopped-scan-says-what-it-lacks", test_incomplete);
   return g_test_run ();
 }
