@@ -7,8 +7,9 @@
 
 #define TRACK_D 1.0
 #define TRACK_MARGIN_D 0.015 /* light needs 13 min from the far side of Venus's orbit */
-#define LIGHT_LOOPS 3        /* each gains a factor v/c */
-#define ROUGH_LOOPS 2
+#define LIGHT_LOOPS 5        /* each gains a factor v/c: two or three are needed */
+#define SETTLED_D 1e-9       /* of the time the light takes */
+#define SETTLED_ROUGH_D 1e-4
 
 /* Chebyshev coefficients of a body's place over the track: sums over the roots (Press et al. 2007, sec. 5.8). */
 static void
@@ -59,8 +60,8 @@ dot (const double a[3], const double b[3])
 static void
 body_then (const AntWatch *watch, double tt_d, int rough, const double from_km[3], double away_km[3])
 {
-  double light_d = 0;
-  for (int loop = 0; loop < (rough ? ROUGH_LOOPS : LIGHT_LOOPS); loop++)
+  double light_d = 0, was_d = 1;
+  for (int loop = 0; loop < LIGHT_LOOPS && fabs (light_d - was_d) > (rough ? SETTLED_ROUGH_D : SETTLED_D); loop++)
     {
       if (rough)
         ant_place_rough (watch->body, tt_d - light_d, away_km);
@@ -68,6 +69,7 @@ body_then (const AntWatch *watch, double tt_d, int rough, const double from_km[3
         read_track (watch, watch->body_km, tt_d - light_d, away_km);
       for (int i = 0; i < 3; i++)
         away_km[i] -= from_km[i];
+      was_d = light_d;
       light_d = sqrt (dot (away_km, away_km)) / ANT_LIGHT_KM_S / ANT_SECONDS_PER_DAY;
     }
 }

@@ -10,7 +10,7 @@
 #include "sky/observer.h"
 #include "sky/places.h"
 
-#define ANT_TRACK_NODES 8
+#define ANT_TRACK_NODES 7
 
 typedef struct
 {
@@ -34,7 +34,7 @@ typedef struct
 void ant_watch_init (AntWatch *watch, AntBody body, const AntObserver *observer, AntRadiiSet radii);
 /* ANT_NO_DATA outside the span of an observer's table, ANT_BAD_ARGUMENT outside that of the theories. */
 AntStatus ant_watch_look (AntWatch *watch, double tt_d, AntLook *look);
-/* From the rough places: separation to about 3', in a few us. */
+/* From the rough places: separation to 1', in a few us. */
 AntStatus ant_watch_look_rough (const AntWatch *watch, double tt_d, AntLook *look);
 /* Fraction of the Sun's light that is lost, 0..1: none if the body is behind the Sun. */
 double ant_look_loss (const AntLook *look, AntLimbDarkening limb_darkening);

@@ -72,52 +72,61 @@ check_site (const AntObserver *observer, double *value)
 }
 
 static AntObserverFault
-check_row (const AntPositionTable *table, size_t i, double usual_d, double *value)
+check_distance (const AntPositionTable *table, size_t i, double *value)
+{
+  double place[3] = { table->x_km[i], table->y_km[i], table->z_km[i] };
+  *value = length (place);
+  if (!(*value >= ANT_OBSERVER_NEAREST_KM))
+    return ANT_OBSERVER_INSIDE_EARTH;
+  return *value <= ANT_OBSERVER_FARTHEST_KM ? ANT_OBSERVER_GOOD : ANT_OBSERVER_TOO_FAR;
+}
+
+/* A row must be told by the six around it: what is read between rows is then far better known. */
+static AntObserverFault
+check_smooth (const AntPositionTable *table, size_t i, double *value)
 {
   double place[3] = { table->x_km[i], table->y_km[i], table->z_km[i] }, guess[3];
-  double distance = *value = length (place);
-  if (!(distance >= ANT_OBSERVER_NEAREST_KM))
-    return ANT_OBSERVER_INSIDE_EARTH;
-  if (!(distance <= ANT_OBSERVER_FARTHEST_KM))
-    return ANT_OBSERVER_TOO_FAR;
-  if (i > 0)
-    {
-      *value = table->time_tt_d[i] - table->time_tt_d[i - 1];
-      if (*value > HOLE_STEPS * usual_d)
-        return ANT_OBSERVER_HOLE;
-    }
   if (i < NODES / 2 || i + NODES / 2 >= table->n)
     return ANT_OBSERVER_GOOD;
   interpolate (table, table->time_tt_d[i], i - NODES / 2, NODES + 1, i, guess);
   for (int axis = 0; axis < 3; axis++)
     guess[axis] -= place[axis];
   *value = length (guess);
-  return *value > COARSE * distance ? ANT_OBSERVER_TOO_COARSE : ANT_OBSERVER_GOOD;
+  return *value > COARSE * length (place) ? ANT_OBSERVER_TOO_COARSE : ANT_OBSERVER_GOOD;
+}
+
+static AntObserverFault
+check_steps (const AntPositionTable *table, size_t *row, double *value)
+{
+  double *step = malloc (table->n * sizeof *step);
+  if (!step)
+    return ANT_OBSERVER_TOO_FEW;
+  AntObserverFault fault = ANT_OBSERVER_GOOD;
+  for (size_t i = 1; i < table->n; i++)
+    step[i - 1] = table->time_tt_d[i] - table->time_tt_d[i - 1];
+  double usual_d = ant_median (table->n - 1, step, step);
+  free (step);
+  for (size_t i = 1; i < table->n && !fault; i++)
+    {
+      *row = i;
+      *value = table->time_tt_d[i] - table->time_tt_d[i - 1];
+      fault = !(*value > 0) ? ANT_OBSERVER_NOT_RISING : *value > HOLE_STEPS * usual_d ? ANT_OBSERVER_HOLE : ANT_OBSERVER_GOOD;
+    }
+  return fault;
 }
 
 static AntObserverFault
 check_table (const AntPositionTable *table, size_t *row, double *value)
 {
-  double *step = table->n >= 2 ? malloc (table->n * sizeof *step) : NULL;
   *row = 0;
   *value = (double) table->n;
-  if (!step)
+  if (table->n < 2)
     return ANT_OBSERVER_TOO_FEW;
-  AntObserverFault fault = ANT_OBSERVER_GOOD;
-  for (size_t i = 1; i < table->n && !fault; i++)
-    {
-      step[i - 1] = table->time_tt_d[i] - table->time_tt_d[i - 1];
-      *row = i;
-      *value = step[i - 1];
-      fault = step[i - 1] > 0 ? ANT_OBSERVER_GOOD : ANT_OBSERVER_NOT_RISING;
-    }
-  double usual_d = fault ? 0 : ant_median (table->n - 1, step, step);
-  free (step);
+  AntObserverFault fault = check_steps (table, row, value);
   for (size_t i = 0; i < table->n && !fault; i++)
-    {
-      *row = i;
-      fault = check_row (table, i, usual_d, value);
-    }
+    fault = check_distance (table, *row = i, value);
+  for (size_t i = 0; i < table->n && !fault; i++)
+    fault = check_smooth (table, *row = i, value);
   return fault;
 }
 

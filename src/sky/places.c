@@ -11,7 +11,7 @@
 
 #define J2000_OBLIQUITY (84381.448 / 3600.0 * ANT_PI / 180.0) /* of FK5, which libnova's places are reduced to */
 #define ARCSEC (ANT_PI / 648000.0)
-#define LEAST_TERM 1e-8 /* of the lunar theory, arcsec: 0.2 km are left out, and six sevenths of the time */
+#define LEAST_TERM 1e-9 /* of the lunar theory: 0.02" are left out at most, and three quarters of the time */
 #define ALMANAC_EARTH_KM 6378.137 /* the radius that the Moon's 0.2725076 counts in */
 
 static const char *const body_names[ANT_N_BODIES] = { "Mercury", "Venus", "Moon", "Earth" };

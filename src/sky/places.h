@@ -27,9 +27,9 @@ const char *ant_body_name (AntBody body); /* "Mercury"; untranslated, static */
 #define ANT_SKY_FIRST_TT_D (-146097.5) /* 1600-01-01T00:00 TT */
 #define ANT_SKY_LAST_TT_D 146096.5     /* 2400-01-01T00:00 TT */
 
-/* Heliocentric place, km, to the few km of the theories, in 50 to 300 us. */
+/* Heliocentric place, km, to the few km of the theories, in 50 to 600 us. */
 void ant_place_exact (AntBody body, double tt_d, double place_km[3]);
-/* The same to about 3' as seen from the Earth, in a few us: mean elements (Simon et al. 1994, A&A 282, 663) and a short
+/* The same to 1' as seen from the Earth, in a few us: mean elements (Simon et al. 1994, A&A 282, 663) and a short
  * lunar theory (Meeus 1998, ch. 47), as ERFA has them. The Earth-Moon barycentre stands for the Earth. */
 void ant_place_rough (AntBody body, double tt_d, double place_km[3]);
 

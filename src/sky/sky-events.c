@@ -6,7 +6,7 @@
 #include "core/units.h"
 
 #define ARCSEC (ANT_PI / 648000.0)
-#define ROUGH_MARGIN (180 * ARCSEC)  /* rough separations are no worse */
+#define ROUGH_MARGIN (180 * ARCSEC)  /* three times what rough separations are wrong by */
 #define BEHIND 0.26                  /* radians: a planet behind the Sun must pass an elongation of 15 degrees first */
 #define EARTH_SPEED_KM_S 30.3
 #define NEARER 0.2                   /* a step may change the body's distance by so much of it */
