@@ -14,28 +14,25 @@
 #include "jobs/scan-job.h"
 #include "jobs/stop.h"
 #include "writers/dip-table.h"
-#include "writers/flags-table.h"
 #include "writers/output-dir.h"
-#include "writers/passage-table.h"
-#include "writers/scan-tables.h"
+#include "writers/result-files.h"
 
 typedef struct
 {
-  char *out, *from, *to, *exclude, *at;
+  char *out, *also, *from, *to, *exclude, *at;
   double hours;
   int threads;
   gboolean force, progress;
+  AntResultChoice choice;
   AntRecordOptions reading;
   AntSettingsOptions given;
 } Options;
-
-static const char *const result_names[] = { "dips.csv", "brightenings.csv", "passages.csv", "floor.csv", "spectrum.csv", "chunks.csv",
-                                            "flags.csv", NULL };
 
 static void
 options_clear (Options *options)
 {
   g_free (options->out);
+  g_free (options->also);
   g_free (options->from);
   g_free (options->to);
   g_free (options->exclude);
@@ -74,27 +71,12 @@ load (const Options *options, const char *path, const AntSettings *settings, GCa
   return good ? g_steal_pointer (&record) : NULL;
 }
 
-/* Add one text to the directory and free it. */
-static gboolean
-add (AntOutputDir *dir, const char *name, GString *text, GError **error)
+static void
+print_names (const Options *options)
 {
-  gboolean good = ant_output_dir_add (dir, name, text->str, text->len, error);
-  g_string_free (text, TRUE);
-  return good;
-}
-
-static gboolean
-write_tables (AntOutputDir *dir, const AntScanResults *results, GError **error)
-{
-  AntDipList dips = ant_scan_results_list (results, FALSE), brightenings = ant_scan_results_list (results, TRUE);
-  return add (dir, "dips.csv", ant_dip_table_text (results->record, &dips), error)
-         && add (dir, "brightenings.csv", ant_dip_table_text (results->record, &brightenings), error)
-         && add (dir, "passages.csv", ant_passage_table_text (results), error)
-         && add (dir, "floor.csv", ant_floor_table_text (results), error)
-         && add (dir, "spectrum.csv", ant_spectrum_table_text (results), error)
-         && add (dir, "chunks.csv", ant_chunks_table_text (results), error)
-         && add (dir, "flags.csv", ant_flags_table_text (results->record, results->flags), error)
-         && ant_output_dir_commit (dir, error);
+  g_auto (GStrv) names = ant_result_file_names (&options->choice);
+  g_autofree char *all = g_strjoinv (", ", names);
+  g_print (_("Tables are in %s: %s.\n"), options->out, all);
 }
 
 static gboolean
@@ -104,13 +86,15 @@ search (const Options *options, AntRecord *record, const AntSettings *settings, 
   AntProgressLine *line = ant_progress_line_new (options->progress);
   g_autoptr (AntScanResults) results = ant_scan_job_run (record, settings, stop, ant_progress_line_show, line, error);
   ant_progress_line_end (line);
-  if (!results || (dir && !write_tables (dir, results, error)))
+  if (!results || (dir && !(ant_result_files_add (dir, results, &options->choice, error) && ant_output_dir_commit (dir, error))))
     return FALSE;
   ant_scan_summary_print (results);
   if (dir)
-    g_print (_("Tables are in %s: dips, brightenings, passages, floor, spectrum, chunks, flags.\n"), options->out);
+    print_names (options);
   return TRUE;
 }
+
+static const char *const asked_names[] = { "dips.csv", NULL };
 
 static gboolean
 ask (const Options *options, AntRecord *record, const AntSettings *settings, AntOutputDir *dir, GError **error)
@@ -122,7 +106,8 @@ ask (const Options *options, AntRecord *record, const AntSettings *settings, Ant
     return FALSE;
   AntDipList list = { .n = 1, .dip = &dip, .limb_u1 = settings->bank.limb_darkening.u1, .threshold_snr = NAN,
                       .limb_u2 = settings->bank.limb_darkening.u2, .false_alarms = NAN, .upper_limit_ppm = &upper_limit_ppm };
-  if (dir && !(add (dir, "dips.csv", ant_dip_table_text (record, &list), error) && ant_output_dir_commit (dir, error)))
+  g_autoptr (GString) text = dir ? ant_dip_table_text (record, &list) : NULL;
+  if (dir && !(ant_output_dir_add (dir, asked_names[0], text->str, text->len, error) && ant_output_dir_commit (dir, error)))
     return FALSE;
   ant_scan_summary_print_asked (record, &dip, upper_limit_ppm);
   return TRUE;
@@ -140,9 +125,9 @@ run (const Options *options, const char *path)
   if (options->threads)
     settings.threads = options->threads;
   g_autoptr (AntRecord) record = load (options, path, &settings, stop, &error);
-  const char *const asked[] = { "dips.csv", NULL };
+  g_auto (GStrv) names = options->at ? g_strdupv ((char **) (gsize) asked_names) : ant_result_file_names (&options->choice);
   if (record && options->out)
-    dir = ant_output_dir_open (options->out, options->at ? asked : result_names, options->force, &error);
+    dir = ant_output_dir_open (options->out, (const char *const *) names, options->force, &error);
   gboolean good = record && (dir || !options->out)
                   && (options->at ? ask (options, record, &settings, dir, &error)
                                   : search (options, record, &settings, dir, stop, &error));
@@ -155,6 +140,8 @@ ant_verb_scan (int argc, char **argv)
   Options options = { .hours = NAN };
   const GOptionEntry entries[] = {
     { "out", 'o', 0, G_OPTION_ARG_FILENAME, &options.out, N_("write the tables into this folder"), N_("DIR") },
+    { "also", 0, 0, G_OPTION_ARG_STRING, &options.also, N_("write the tables as fits, votable or fits,votable too"), N_("FORMATS") },
+    { "series", 0, 0, G_OPTION_ARG_NONE, &options.choice.series, N_("write the detrended series, row by row, too"), NULL },
     { "force", 0, 0, G_OPTION_ARG_NONE, &options.force, N_("replace results that are there"), NULL },
     { "from", 0, 0, G_OPTION_ARG_STRING, &options.from, N_("use the record from this time"), N_("TIME") },
     { "to", 0, 0, G_OPTION_ARG_STRING, &options.to, N_("use the record up to this time"), N_("TIME") },
@@ -184,6 +171,11 @@ ant_verb_scan (int argc, char **argv)
     code = ant_cli_fail_usage (_("scan: found only one of --at and --hours, expected both"));
   else if (options.at && !(options.hours > 0 && options.hours < 1000))
     code = ant_cli_fail_usage (_("scan: found --hours %g, expected more than 0 and less than 1000"), options.hours);
+  else if ((options.also || options.choice.series) && (options.at || !options.out))
+    code = ant_cli_fail_usage (_("scan: found --also or --series %s, expected them where a search writes its tables"),
+                               options.at ? _("with --at") : _("without --out"));
+  else if (options.also && !ant_result_choice_parse (&options.choice, options.also, &error))
+    code = ant_cli_fail (error);
   else
     code = run (&options, argv[1]);
   options_clear (&options);

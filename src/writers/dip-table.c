@@ -1,126 +1,142 @@
-/* dip-table.c - dips.csv and brightenings.csv. */
+/* dip-table.c - the columns of dips and brightenings, and what stands above them. */
 #include "writers/dip-table.h"
-#include <math.h>
-#include "writers/csv.h"
 
-#define COLUMNS                                                                                                        \
-  "dip,start_jd,mid_jd,end_jd,mid_time,mid_utc,duration_h,depth_ppm,depth_sigma_ppm,mean_depth_ppm,radius_ratio,snr,"  \
-  "first_snr,expected_false,coverage,edges,class,probability,evidence"
+#include <math.h>
+
+#include "core/units.h"
+
+typedef struct
+{
+  const AntRecord *record;
+  AntDipList list; /* its arrays are borrowed */
+} Rows;
+
+/* Cells: an expression of `rows`, `time` and `dip`. */
+#define NUMBER(name, expression)                                                                                       \
+  static double name (gconstpointer data, gsize row)                                                                   \
+  {                                                                                                                    \
+    const Rows *rows = data;                                                                                           \
+    G_GNUC_UNUSED const AntTimeReference *time = &rows->record->time;                                                  \
+    G_GNUC_UNUSED const AntDip *dip = &rows->list.dip[row];                                                           \
+    return expression;                                                                                                 \
+  }
+#define TEXT(name, expression)                                                                                         \
+  static char *name (gconstpointer data, gsize row)                                                                    \
+  {                                                                                                                    \
+    const Rows *rows = data;                                                                                           \
+    G_GNUC_UNUSED const AntTimeReference *time = &rows->record->time;                                                  \
+    G_GNUC_UNUSED const AntDip *dip = &rows->list.dip[row];                                                           \
+    return expression;                                                                                                 \
+  }
+
+NUMBER (number, (double) row + 1)
+NUMBER (start_jd, ant_time_reference_jd (time, dip->mid_d - dip->duration_d / 2))
+NUMBER (mid_jd, ant_time_reference_jd (time, dip->mid_d))
+NUMBER (end_jd, ant_time_reference_jd (time, dip->mid_d + dip->duration_d / 2))
+TEXT (mid_time, ant_time_reference_own_text (time, dip->mid_d))
+TEXT (mid_utc, ant_time_reference_utc_text (time, dip->mid_d, 0))
+NUMBER (duration_h, dip->duration_d * ANT_HOURS_PER_DAY)
+NUMBER (depth_ppm, dip->depth_ppm)
+NUMBER (depth_sigma_ppm, dip->depth_sigma_ppm)
+NUMBER (mean_depth_ppm, dip->mean_depth_ppm)
+NUMBER (radius_ratio, dip->radius_ratio)
+NUMBER (snr, dip->snr)
+NUMBER (first_snr, dip->first_snr)
+NUMBER (expected_false, dip->expected_false)
+NUMBER (coverage, dip->coverage)
+TEXT (edges, g_strdup (ant_edges_text (dip->edges)))
+TEXT (class, g_strdup ("undecided"))
+NUMBER (probability, NAN)
+TEXT (evidence, g_strdup (""))
+TEXT (asked, g_strdup ("asked"))
+NUMBER (upper_limit_ppm, rows->list.upper_limit_ppm[row])
+
+#define PPM "10**-6"
+static const AntTableColumn columns[] = {
+  { "dip", ANT_CELL_WHOLE, NULL, NULL, "meta.id;meta.main", NULL, FALSE, number, NULL },
+  { "start_jd", ANT_CELL_REAL, "%.7f", "d", "time.start", "contact I, JD in the record's time scale; empty if the origin of its times is unknown", TRUE,
+    start_jd, NULL },
+  { "mid_jd", ANT_CELL_REAL, "%.7f", "d", "time.epoch;meta.main", "middle, likewise", TRUE, mid_jd, NULL },
+  { "end_jd", ANT_CELL_REAL, "%.7f", "d", "time.end", "contact IV, likewise", TRUE, end_jd, NULL },
+  { "mid_time", ANT_CELL_TEXT, NULL, NULL, "time.epoch", "middle as the record writes its times", FALSE, NULL, mid_time },
+  { "mid_utc", ANT_CELL_TEXT, NULL, NULL, "time.epoch", "middle in UTC; empty if the time scale is unknown", FALSE, NULL, mid_utc },
+  { "duration_h", ANT_CELL_REAL, "%.4f", "h", "time.duration", "contact I to IV of the fitted shape; start and end are these contacts", FALSE,
+    duration_h, NULL },
+  { "depth_ppm", ANT_CELL_REAL, "%.6g", PPM, "phot.flux.bol;arith.ratio;stat.max",
+    "greatest depth of the fitted shape before exposure smearing, relative to the undimmed level at that time", FALSE, depth_ppm, NULL },
+  { "depth_sigma_ppm", ANT_CELL_REAL, "%.6g", PPM, "stat.error;phot.flux.bol;arith.ratio;stat.max", "1 sigma of depth_ppm", FALSE,
+    depth_sigma_ppm, NULL },
+  { "mean_depth_ppm", ANT_CELL_REAL, "%.6g", PPM, "phot.flux.bol;arith.ratio;stat.mean", "average of the fitted shape over contact I to IV", FALSE,
+    mean_depth_ppm, NULL },
+  { "radius_ratio", ANT_CELL_REAL, "%.6g", NULL, "phys.size.radius;arith.ratio",
+    "radius of the dark disc whose crossing is that deep, over the radius of the source", FALSE, radius_ratio, NULL },
+  { "snr", ANT_CELL_REAL, "%.4f", NULL, "stat.snr;meta.main",
+    "of the fitted shape against the noise, after the dip was masked and the noise refitted", FALSE, snr, NULL },
+  { "first_snr", ANT_CELL_REAL, "%.4f", NULL, "stat.snr", "of the best template on the first pass", FALSE, first_snr, NULL },
+  { "expected_false", ANT_CELL_REAL, "%.3g", NULL, "meta.number;stat.probability",
+    "dips by noise alone expected to reach this snr in this record", FALSE, expected_false, NULL },
+  { "coverage", ANT_CELL_REAL, "%.4f", NULL, "stat.filling", "observed fraction of the dip, weighted by its shape", FALSE, coverage, NULL },
+  { "edges", ANT_CELL_TEXT, NULL, NULL, "meta.code", "which of ingress and egress were observed: both, ingress, egress, none", FALSE, NULL, edges },
+  { "class", ANT_CELL_TEXT, NULL, NULL, "meta.code.class", "what the dip is taken for", FALSE, NULL, class },
+  { "probability", ANT_CELL_REAL, "%.4f", NULL, "stat.probability", "of that class", FALSE, probability, NULL },
+  { "evidence", ANT_CELL_TEXT, NULL, NULL, "meta.note", "what speaks for it", FALSE, NULL, evidence },
+};
+
+static const AntTableColumn asked_columns[] = {
+  { "asked", ANT_CELL_TEXT, NULL, NULL, "meta.code", "time and duration were given and nothing was searched", FALSE, NULL, asked },
+  { "upper_limit_ppm", ANT_CELL_REAL, "%.6g", PPM, "phot.flux.bol;arith.ratio;stat.max", "depth that is exceeded with a probability of 5 %",
+    FALSE, upper_limit_ppm, NULL },
+};
 
 static void
-append_search (GString *table, const AntDipList *list)
+tell_search (AntTable *table, const AntDipList *list)
 {
   char u1[G_ASCII_DTOSTR_BUF_SIZE], u2[G_ASCII_DTOSTR_BUF_SIZE];
   if (list->incomplete)
-    ant_csv_comment (table, "incomplete: %s", list->incomplete);
-  ant_csv_comment (table, "limb darkening: quadratic %s, %s", g_ascii_formatd (u1, sizeof u1, "%.4g", list->limb_u1),
-                   g_ascii_formatd (u2, sizeof u2, "%.4g", list->limb_u2));
+    ant_table_note (table, "incomplete: %s", list->incomplete);
+  ant_table_note (table, "limb darkening: quadratic %s, %s", g_ascii_formatd (u1, sizeof u1, "%.4g", list->limb_u1),
+                  g_ascii_formatd (u2, sizeof u2, "%.4g", list->limb_u2));
   if (list->upper_limit_ppm)
     {
-      ant_csv_comment (table, "asked: time and duration were given and nothing was searched; snr is not to be held "
-                              "against the threshold of a search");
-      ant_csv_comment (table, "upper_limit_ppm: depth that is exceeded with a probability of 5 %%");
+      ant_table_note (table, "asked: snr is not to be held against the threshold of a search");
       return;
     }
-  char snr[G_ASCII_DTOSTR_BUF_SIZE], false_alarms[G_ASCII_DTOSTR_BUF_SIZE];
-  ant_csv_comment (
+  char snr_text[G_ASCII_DTOSTR_BUF_SIZE], false_alarms[G_ASCII_DTOSTR_BUF_SIZE];
+  ant_table_note (
       table, "threshold: SNR %s; expected by chance at or above it in this record: %s",
-      isfinite (list->threshold_snr) ? g_ascii_formatd (snr, sizeof snr, "%.3f", list->threshold_snr) : "unknown",
-      isfinite (list->false_alarms) ? g_ascii_formatd (false_alarms, sizeof false_alarms, "%.3g", list->false_alarms)
-                                    : "unknown");
+      isfinite (list->threshold_snr) ? g_ascii_formatd (snr_text, sizeof snr_text, "%.3f", list->threshold_snr) : "unknown",
+      isfinite (list->false_alarms) ? g_ascii_formatd (false_alarms, sizeof false_alarms, "%.3g", list->false_alarms) : "unknown");
   if (list->n_surrogates)
-    ant_csv_comment (table, "threshold and expected_false: from %zu surrogates of this record, with %zu events of SNR 4 and more",
-                     list->n_surrogates, list->n_surrogate_events);
+    ant_table_note (table, "threshold and expected_false: from %zu surrogates of this record, with %zu events of SNR 4 and more",
+                    list->n_surrogates, list->n_surrogate_events);
   if (list->mirror_known)
-    ant_csv_comment (
-        table, "mirrored search, durations of 9 h and less: %zu dips and %zu brightenings at or above the threshold",
-        list->n_found, list->n_mirrored);
-}
-
-static void
-append_definitions (GString *table, const AntRecord *record, const AntDipList *list)
-{
-  static const char *const lines[] = {
-    "duration_h: contact I to IV of the fitted shape; start and end are these contacts",
-    "depth_ppm: greatest depth of the fitted shape before exposure smearing, relative to the undimmed level at that "
-    "time",
-    "mean_depth_ppm: average of the fitted shape over contact I to IV",
-    "radius_ratio: radius of the dark disc whose crossing is that deep, over the radius of the source",
-    "snr: of the fitted shape against the noise, after the dip was masked and the noise refitted; first_snr: of the "
-    "best "
-    "template on the first pass",
-    "expected_false: dips by noise alone expected to reach this snr in this record",
-    "coverage: observed fraction of the dip, weighted by its shape; edges: which of ingress and egress were observed",
-  };
-  if (record->time.origin_known)
-    ant_csv_comment (table, "start_jd, mid_jd, end_jd: JD(%s); mid_time: as the record writes its times",
-                     record->time.scale == ANT_SCALE_UNKNOWN ? "of the record"
-                                                             : ant_time_scale_name (record->time.scale));
-  else
-    ant_csv_comment (table,
-                     "start_jd, mid_jd, end_jd: empty, the origin of the times is unknown; mid_time: as the record "
-                     "writes its times");
-  for (gsize i = 0; i < G_N_ELEMENTS (lines); i++)
-    ant_csv_comment (table, "%s", lines[i]);
+    ant_table_note (table, "mirrored search, durations of 9 h and less: %zu dips and %zu brightenings at or above the threshold",
+                    list->n_found, list->n_mirrored);
   if (list->brightenings)
-    ant_csv_comment (table, "brightenings have negative depth and snr");
+    ant_table_note (table, "brightenings have negative depth and snr");
 }
 
-static void
-append_number (GString *table, const char *format, double number)
+AntTable *
+ant_dip_table_new (const AntRecord *record, const AntDipList *list)
 {
-  ant_csv_number (table, format, number);
-  g_string_append_c (table, ',');
-}
-
-static void
-append_own_text (GString *table, char *text)
-{
-  ant_csv_text (table, text);
-  g_string_append_c (table, ',');
-  g_free (text);
-}
-
-static void
-append_dip (GString *table, const AntRecord *record, gsize number, const AntDip *dip)
-{
-  const AntTimeReference *time = &record->time;
-  double half_d = 0.5 * dip->duration_d;
-  g_string_append_printf (table, "%zu,", number);
-  append_number (table, "%.7f", ant_time_reference_jd (time, dip->mid_d - half_d));
-  append_number (table, "%.7f", ant_time_reference_jd (time, dip->mid_d));
-  append_number (table, "%.7f", ant_time_reference_jd (time, dip->mid_d + half_d));
-  append_own_text (table, ant_time_reference_own_text (time, dip->mid_d));
-  append_own_text (table, ant_time_reference_utc_text (time, dip->mid_d, 0));
-  append_number (table, "%.4f", dip->duration_d * 24.0);
-  append_number (table, "%.6g", dip->depth_ppm);
-  append_number (table, "%.6g", dip->depth_sigma_ppm);
-  append_number (table, "%.6g", dip->mean_depth_ppm);
-  append_number (table, "%.6g", dip->radius_ratio);
-  append_number (table, "%.4f", dip->snr);
-  append_number (table, "%.4f", dip->first_snr);
-  append_number (table, "%.3g", dip->expected_false);
-  append_number (table, "%.4f", dip->coverage);
-  g_string_append_printf (table, "%s,undecided,,", ant_edges_text (dip->edges));
+  AntTable *table = list->brightenings ? ant_table_new ("Brightenings", "BRIGHTENINGS", record) : ant_table_new ("Dips", "DIPS", record);
+  Rows *rows = g_new (Rows, 1);
+  *rows = (Rows) { record, *list };
+  tell_search (table, list);
+  ant_table_fact_number (table, "LIMB1", list->limb_u1, "linear coefficient of the limb darkening");
+  ant_table_fact_number (table, "LIMB2", list->limb_u2, "quadratic coefficient of it");
+  ant_table_fact_number (table, "MINSNR", list->threshold_snr, "least snr that is listed");
+  ant_table_fact_number (table, "EXPFALSE", list->false_alarms, "dips by noise alone expected from there up");
+  ant_table_add_columns (table, G_N_ELEMENTS (columns), columns);
+  if (list->upper_limit_ppm)
+    ant_table_add_columns (table, G_N_ELEMENTS (asked_columns), asked_columns);
+  ant_table_set_rows (table, list->n, rows, g_free);
+  return table;
 }
 
 GString *
 ant_dip_table_text (const AntRecord *record, const AntDipList *list)
 {
-  GString *table = g_string_new (NULL);
-  ant_csv_preamble (table, list->brightenings ? "Brightenings" : "Dips", record);
-  append_search (table, list);
-  append_definitions (table, record, list);
-  g_string_append (table, list->upper_limit_ppm ? COLUMNS ",asked,upper_limit_ppm\n" : COLUMNS "\n");
-  for (gsize i = 0; i < list->n; i++)
-    {
-      append_dip (table, record, i + 1, &list->dip[i]);
-      if (list->upper_limit_ppm)
-        {
-          g_string_append (table, ",asked,");
-          ant_csv_number (table, "%.6g", list->upper_limit_ppm[i]);
-        }
-      g_string_append_c (table, '\n');
-    }
-  return table;
+  g_autoptr (AntTable) table = ant_dip_table_new (record, list);
+  return ant_table_text (table);
 }

@@ -1,9 +1,12 @@
-/* dip-table.h - dips.csv and brightenings.csv: a list of dips as a table with its definitions above it. */
+/* dip-table.h - dips and brightenings as a table: its columns, with what they mean, stand in dip-table.c once for every
+ * format. */
 #pragma once
 
 #include "data/dip-list.h"
-#include "data/record.h"
+#include "writers/table.h"
 
-/* Comment lines, a header and a line for each dip. Asked dips (list->upper_limit_ppm) have two more columns, `asked`
- * and `upper_limit_ppm`. Numbers that are not known are empty. Caller frees. */
+/* One row for each dip. Asked dips (list->upper_limit_ppm) have two more columns, `asked` and `upper_limit_ppm`. Record and
+ * the arrays of the list must outlive the table. Caller frees. */
+AntTable *ant_dip_table_new (const AntRecord *record, const AntDipList *list);
+/* The same as CSV at once. Caller frees. */
 GString *ant_dip_table_text (const AntRecord *record, const AntDipList *list);

@@ -14,7 +14,7 @@ static AntPassage passages[] = {
 static GString *
 table_of (AntRecord *record, gsize n)
 {
-  AntScanResults results = { .record = record, .n_passages = n, .passage = passages };
+  AntScanResults results = { .record = record, .reach = ANT_SCAN_COMPLETE, .n_passages = n, .passage = passages };
   return ant_passage_table_text (&results);
 }
 
@@ -24,7 +24,7 @@ test_preamble (void)
   g_autoptr (AntRecord) record = test_rows (100, 0.0, 1.0);
   g_autoptr (GString) table = table_of (record, 0);
   static const char *const told[] = { "# record: rows.txt\n", "# no false-alarm claim: the Sun does this\n", "# depth_ppm: ",
-                                      "width_d: from start to end, 1 to 14 d\n", "# coverage: ", "listed from 4 times that\n" };
+                                      "width_d: from start to end, 1 to 14 d\n", "# coverage: ", "listed from 4 times its sigma\n" };
   for (gsize i = 0; i < G_N_ELEMENTS (told); i++)
     g_assert_nonnull (strstr (table->str, told[i]));
   g_assert_true (g_str_has_suffix (table->str, "\n" HEADER "\n"));
@@ -59,7 +59,6 @@ test_unknown_origin (void)
 {
   g_autoptr (AntRecord) record = test_rows (100, 0.0, 1.0);
   g_autoptr (GString) table = table_of (record, 1);
-  g_assert_nonnull (strstr (table->str, "the origin of the times is unknown"));
   g_assert_nonnull (strstr (table->str, "\n1,,,,13.5"));
 }
 

@@ -1,0 +1,32 @@
+/* result-files.h - the tables that a scan leaves in its folder: which there are, and in which formats. */
+#pragma once
+
+#include "data/scan-results.h"
+#include "writers/output-dir.h"
+#include "writers/table.h"
+
+/* CSV is always written. */
+typedef struct
+{
+  gboolean fits, votable; /* the tables of dips, brightenings and passages so too; fits: the mask of flags likewise */
+  gboolean series;        /* the detrended series as well */
+} AntResultChoice;
+
+/* "fits", "votable" or both with a comma between. FALSE with one sentence. */
+gboolean ant_result_choice_parse (AntResultChoice *choice, const char *text, GError **error);
+/* What is written: "dips.csv" ... Caller g_strfreevs. */
+char **ant_result_file_names (const AntResultChoice *choice);
+/* Add all of them to a folder that is open. */
+gboolean ant_result_files_add (AntOutputDir *dir, const AntScanResults *results, const AntResultChoice *choice, GError **error);
+
+/* The tables that come in several formats, by what a scan is asked for; NULL if a stopped scan does not have it. The results
+ * must outlive the table. Caller frees. */
+typedef enum
+{
+  ANT_RESULT_DIPS,
+  ANT_RESULT_BRIGHTENINGS,
+  ANT_RESULT_PASSAGES,
+  ANT_RESULT_SERIES,
+  ANT_N_RESULT_TABLES,
+} AntResultTable;
+AntTable *ant_result_table_new (AntResultTable which, const AntScanResults *results);
