@@ -7,9 +7,6 @@
 #include "gui/preferences.h"
 #include "gui/shortcuts.h"
 #include "gui/window-private.h"
-#include "writers/dip-table.h"
-#include "writers/flags-table.h"
-#include "writers/whole-file.h"
 
 #define VIEW_ZOOM 1.5
 #define VIEW_PAN 0.2
@@ -26,6 +23,7 @@ enum
   NEEDS_FORWARD = 1 << 6,
   NEEDS_PLACE = 1 << 7, /* a span or a selection to go to */
   NEEDS_NO_SCAN = 1 << 8,
+  NEEDS_SLOW_PART = 1 << 9, /* a scan has run to its end */
 };
 
 static const char *const average_names[] = { "none", "10min", "1h", "6h", "1d" };
@@ -243,53 +241,21 @@ copy_dip (AntWindow *self, GVariant *parameter)
 }
 
 static void
-write_table (AntWindow *self, const char *path, GString *text)
-{
-  g_autoptr (GError) error = NULL;
-  AntWholeFile *file = ant_whole_file_open (path, TRUE, &error);
-  if (file)
-    {
-      fwrite (text->str, 1, text->len, ant_whole_file_stream (file));
-      ant_whole_file_commit (file, &error);
-    }
-  if (error)
-    ant_window_complain (self, error->message);
-  g_string_free (text, TRUE);
-}
-
-static void
-save_list_cb (const char *path, gpointer data)
-{
-  g_autoptr (AntWindow) self = data;
-  const AntScanResults *results = ant_desk_get_results (self->desk);
-  if (!path || !results)
-    return;
-  AntDipList list = ant_scan_results_list (results, ant_desk_get_shown (self->desk) == ANT_KIND_BRIGHTENING);
-  write_table (self, path, ant_dip_table_text (results->record, &list));
-}
-
-static void
 save_list (AntWindow *self, GVariant *parameter)
 {
-  gboolean brightenings = ant_desk_get_shown (self->desk) == ANT_KIND_BRIGHTENING;
-  ant_file_prompt_save (GTK_WINDOW (self), _("Save the List as CSV"), brightenings ? "brightenings.csv" : "dips.csv",
-                        save_list_cb, g_object_ref (self));
-}
-
-static void
-save_flags_cb (const char *path, gpointer data)
-{
-  g_autoptr (AntWindow) self = data;
-  const AntRecord *record = ant_desk_get_record (self->desk);
-  const AntScanResults *results = ant_desk_get_results (self->desk);
-  if (path && record)
-    write_table (self, path, ant_flags_table_text (record, results ? results->flags : record->flags));
+  ant_window_save_list (self);
 }
 
 static void
 save_flags (AntWindow *self, GVariant *parameter)
 {
-  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Flags as CSV"), "flags.csv", save_flags_cb, g_object_ref (self));
+  ant_window_save_flags (self);
+}
+
+static void
+save_series (AntWindow *self, GVariant *parameter)
+{
+  ant_window_save_series (self);
 }
 
 static void
@@ -315,6 +281,7 @@ static const Action actions[] = {
   { "close", NULL, NULL, close_window, 0 },
   { "save-list", NULL, NULL, save_list, NEEDS_RESULTS },
   { "save-flags", NULL, NULL, save_flags, NEEDS_RECORD },
+  { "save-series", NULL, NULL, save_series, NEEDS_SLOW_PART },
   { "scan", NULL, NULL, scan, NEEDS_RECORD | NEEDS_NO_SCAN },
   { "stop", NULL, NULL, stop, NEEDS_WORK },
   { "measure", NULL, NULL, measure, NEEDS_RECORD | NEEDS_NO_SCAN },
@@ -382,9 +349,11 @@ present_state (AntDesk *desk)
 {
   const AntDipMark *marks;
   AntSpan span;
+  const AntScanResults *results = ant_desk_get_results (desk);
   AntBusy busy = ant_desk_get_busy (desk);
   gboolean record = ant_desk_get_record (desk) != NULL, selection = ant_desk_get_selected (desk) != NULL;
-  return (record ? NEEDS_RECORD : 0u) | (ant_desk_get_results (desk) ? NEEDS_RESULTS : 0u)
+  return (record ? NEEDS_RECORD : 0u) | (results ? NEEDS_RESULTS : 0u)
+         | (results && results->slow_ppm ? NEEDS_SLOW_PART : 0u)
          | (ant_desk_get_marks (desk, &marks) > 0 ? NEEDS_MARKS : 0u) | (selection ? NEEDS_SELECTION : 0u)
          | (busy != ANT_BUSY_NO && busy != ANT_BUSY_STOPPING ? NEEDS_WORK : 0u) | (ant_desk_can_go (desk, -1) ? NEEDS_BACK : 0u)
          | (ant_desk_can_go (desk, 1) ? NEEDS_FORWARD : 0u)

@@ -1,4 +1,4 @@
-/* window-private.h - inside of the window, shared by its two files. */
+/* window-private.h - inside of the window, shared by its files. */
 #pragma once
 
 #include "gui/dips-page.h"
@@ -38,3 +38,7 @@ struct _AntWindow
 void ant_window_add_actions (AntWindow *self);
 void ant_window_update_actions (AntWindow *self);
 void ant_window_complain (AntWindow *self, const char *sentence);
+/* Save what the window shows, as it stands now; asks where. window-save.c. */
+void ant_window_save_list (AntWindow *self);   /* dips or brightenings, whichever the list shows; wants results */
+void ant_window_save_flags (AntWindow *self);  /* wants a record */
+void ant_window_save_series (AntWindow *self); /* wants results with a slow part */

@@ -1,0 +1,111 @@
+/* window-save.c - save tables and reports: ask where, make the file off the main loop, tell if it could not be written. */
+#include <glib/gi18n.h>
+
+#include "gui/file-prompt.h"
+#include "gui/window-private.h"
+#include "jobs/save-task.h"
+#include "writers/flags-table.h"
+#include "writers/result-files.h"
+
+/* What is to be saved, as it stood when the user asked; later changes of the window do not touch it. */
+typedef struct
+{
+  AntWindow *window; /* until the file has been chosen: the order may end on another thread, a widget may not */
+  AntSaveMake make;
+  AntRecord *record;
+  AntScanResults *results; /* or NULL */
+  AntResultTable which;
+  AntTableFormat format;
+} Order;
+
+static void
+order_free (gpointer data)
+{
+  Order *order = data;
+  ant_record_unref (order->record);
+  ant_scan_results_unref (order->results);
+  g_clear_object (&order->window);
+  g_free (order);
+}
+
+static Order *
+order_new (AntWindow *self, AntSaveMake make)
+{
+  Order *order = g_new0 (Order, 1);
+  const AntScanResults *results = ant_desk_get_results (self->desk);
+  order->window = g_object_ref (self);
+  order->make = make;
+  order->record = ant_record_ref ((AntRecord *) (gsize) ant_desk_get_record (self->desk));
+  order->results = results ? ant_scan_results_ref ((AntScanResults *) (gsize) results) : NULL;
+  return order;
+}
+
+/* The application stays until the file is whole, even if its windows are closed. */
+static void
+saved_cb (GObject *source, GAsyncResult *result, gpointer data)
+{
+  g_autoptr (AntWindow) self = data;
+  g_autoptr (GError) error = NULL;
+  if (!ant_save_task_finish (result, &error))
+    ant_window_complain (self, error->message);
+  g_application_release (g_application_get_default ());
+}
+
+static void
+chosen_cb (const char *path, gpointer data)
+{
+  Order *order = data;
+  g_autoptr (GError) error = NULL;
+  if (path && ant_table_format_of (path, &order->format, &error))
+    {
+      g_application_hold (g_application_get_default ());
+      ant_save_task_async (path, order->make, order, order_free, saved_cb, g_steal_pointer (&order->window));
+      return;
+    }
+  if (error)
+    ant_window_complain (order->window, error->message);
+  order_free (order);
+}
+
+static GBytes *
+make_table (gconstpointer data, GError **error)
+{
+  const Order *order = data;
+  g_autoptr (AntTable) table = ant_result_table_new (order->which, order->results);
+  return ant_table_bytes (table, order->format, error);
+}
+
+static GBytes *
+make_flags (gconstpointer data, GError **error)
+{
+  const Order *order = data;
+  const guint16 *flags = order->results ? order->results->flags : order->record->flags;
+  if (order->format == ANT_TABLE_CSV)
+    return g_string_free_to_bytes (ant_flags_table_text (order->record, flags));
+  g_autoptr (AntTable) mask = ant_mask_table_new (order->record, flags);
+  return ant_table_bytes (mask, order->format, error);
+}
+
+void
+ant_window_save_list (AntWindow *self)
+{
+  gboolean brightenings = ant_desk_get_shown (self->desk) == ANT_KIND_BRIGHTENING;
+  Order *order = order_new (self, make_table);
+  order->which = brightenings ? ANT_RESULT_BRIGHTENINGS : ANT_RESULT_DIPS;
+  ant_file_prompt_save (GTK_WINDOW (self), _("Save the List as CSV, FITS or VOTable"), brightenings ? "brightenings.csv" : "dips.csv",
+                        chosen_cb, order);
+}
+
+void
+ant_window_save_flags (AntWindow *self)
+{
+  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Flags as CSV or FITS"), "flags.csv", chosen_cb, order_new (self, make_flags));
+}
+
+void
+ant_window_save_series (AntWindow *self)
+{
+  Order *order = order_new (self, make_table);
+  order->which = ANT_RESULT_SERIES;
+  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Detrended Series as CSV or FITS"), "series.csv", chosen_cb, order);
+}
