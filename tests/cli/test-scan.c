@@ -240,6 +240,10 @@ wrong_options_are_usage (Place *place, gconstpointer unused)
                                        "scan %R --out %O --at 2043-09-03T17:00:00",
                                        "scan %R --out %O --hours 6",
                                        "scan %R --out %O --at 2043-09-03T17:00:00 --hours 0",
+                                       "scan %R --also fits",
+                                       "scan %R --series",
+                                       "scan %R --out %O --also csv",
+                                       "scan %R --out %O --at 2043-09-03T17:00:00 --hours 6 --also fits",
                                        "scan %R --out %O --set no-such-key=1",
                                        "scan %R --out %O --set threshold=high",
                                        "scan %R --out %O --good x" };
