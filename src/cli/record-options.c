@@ -16,6 +16,8 @@ ant_record_options_add (GOptionContext *context, AntRecordOptions *options)
     { "time-format", 0, 0, G_OPTION_ARG_STRING, &options->time_format,
       N_("jd, mjd, jd-OFFSET, iso, ymd, unix, year-day, decimal-year, days, hours or seconds"), N_("FORMAT") },
     { "time-scale", 0, 0, G_OPTION_ARG_STRING, &options->time_scale, N_("UTC, TAI, TT, TDB, GPS, Unix or unknown"), N_("SCALE") },
+    { "hdu", 0, 0, G_OPTION_ARG_STRING, &options->hdu, N_("table of a FITS file, 0 the primary one; without it the first with a time"),
+      N_("NAME|NUMBER") },
     { "fill", 0, 0, G_OPTION_ARG_STRING, &options->fill, N_("values that count as missing, besides the usual ones"),
       N_("NUMBER,…") },
     { "good", 0, 0, G_OPTION_ARG_STRING, &options->good,
@@ -31,6 +33,7 @@ ant_record_options_clear (AntRecordOptions *options)
   g_free (options->columns);
   g_free (options->time_format);
   g_free (options->time_scale);
+  g_free (options->hdu);
   g_free (options->fill);
   g_free (options->good);
   *options = (AntRecordOptions){ 0 };
@@ -57,7 +60,8 @@ parse_fill (const char *text, GArray *values, GError **error)
 AntRecord *
 ant_record_options_read (const AntRecordOptions *options, const char *path, GCancellable *cancellable, GError **error)
 {
-  AntReadingChoices choices = { .time_format = g_strdup (options->time_format), .time_scale = g_strdup (options->time_scale) };
+  AntReadingChoices choices = { .time_format = g_strdup (options->time_format), .time_scale = g_strdup (options->time_scale),
+                                .hdu = g_strdup (options->hdu) };
   AntRecord *record = NULL;
   if (options->fill)
     choices.fill_values = g_array_new (FALSE, FALSE, sizeof (double));

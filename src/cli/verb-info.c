@@ -12,6 +12,8 @@
 #include "data/record-summary.h"
 #include "jobs/stop.h"
 
+#define MOST_COLUMNS 16
+
 static const char *const style_names[] = { "days",     "jd",           "unix", "iso", "ymd",
                                            "year-day", "decimal-year" };
 static const char *const place_names[] = { "unknown", "start", "middle", "end" };
@@ -56,11 +58,13 @@ print_columns (const AntRecord *record)
   print_line (_("value"), _("%s, unit %s"), record->value_name, record->value_unit ? record->value_unit : _("not named"));
   print_line (_("error"), "%s", or_none (record->error_name));
   print_line (_("quality"), "%s", or_none (record->quality_name));
-  for (guint i = 0; i < record->columns->len; i++)
+  for (guint i = 0; i < MIN (record->columns->len, MOST_COLUMNS); i++)
     {
       g_autofree char *words = ant_column_words (g_ptr_array_index (record->columns, i), record->n_rows);
       print_line (i ? "" : _("further"), "%s", words);
     }
+  if (record->columns->len > MOST_COLUMNS)
+    print_line ("", _("and %u more"), record->columns->len - MOST_COLUMNS);
 }
 
 static void
@@ -84,7 +88,7 @@ print_span (const AntRecord *record, const AntRecordSummary *summary)
 static void
 print_rows (const AntRecord *record, const AntRecordSummary *summary)
 {
-  print_line (_("rows"), _("%zu in lines %u to %u, %zu of them good"), record->n_rows,
+  print_line (_("rows"), record->part ? _("%zu in rows %u to %u, %zu of them good") : _("%zu in lines %u to %u, %zu of them good"), record->n_rows,
               record->line[0], record->line[record->n_rows - 1], summary->n_good);
   for (unsigned bit = 0; bit < ANT_N_FLAGS; bit++)
     if (summary->n_flagged[bit] > 0)
@@ -139,7 +143,7 @@ static void
 print_plain (const AntRecord *record, const AntRecordSummary *summary, gboolean gridded)
 {
   g_print ("%s\n", record->path);
-  print_line (_("format"), "%s", record->format);
+  print_line (_("format"), "%s%s%s", record->format, record->part ? ", " : "", record->part ? record->part : "");
   print_line ("SHA-256", "%s", record->sha256);
   print_columns (record);
   print_span (record, summary);
@@ -280,6 +284,7 @@ print_json (const AntRecord *record, const AntRecordSummary *summary, gboolean g
   json_builder_begin_object (json);
   add_text (json, "path", record->path);
   add_text (json, "format", record->format);
+  add_text (json, "part", record->part);
   add_text (json, "sha256", record->sha256);
   add_columns (json, record);
   add_rows (json, record, summary);

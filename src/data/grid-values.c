@@ -47,9 +47,10 @@ drop_wild (AntRecord *record, const AntRowOrder *order)
       if (n_wild++ == 0)
         first = row;
     }
-  if (n_wild > 0)
-    ant_record_say (record, _("Values more than a million times the median, taken as fill: %zu, first at line %u."),
-                    n_wild, record->line[first]);
+  if (n_wild == 0)
+    return;
+  g_autofree char *place = ant_record_row_text (record, record->line[first]);
+  ant_record_say (record, _("Values more than a million times the median, taken as fill: %zu, first at %s."), n_wild, place);
 }
 
 static double

@@ -15,6 +15,7 @@ ant_reading_choices_clear (AntReadingChoices *choices)
   g_free (choices->quality_column);
   g_free (choices->time_format);
   g_free (choices->time_scale);
+  g_free (choices->hdu);
   g_clear_pointer (&choices->fill_values, g_array_unref);
   memset (choices, 0, sizeof *choices);
 }
@@ -29,6 +30,7 @@ ant_reading_choices_copy (const AntReadingChoices *choices, AntReadingChoices *c
     .quality_column = g_strdup (choices->quality_column),
     .time_format = g_strdup (choices->time_format),
     .time_scale = g_strdup (choices->time_scale),
+    .hdu = g_strdup (choices->hdu),
     .fill_values = choices->fill_values ? g_array_copy (choices->fill_values) : NULL,
   };
 }

@@ -9,6 +9,7 @@ typedef struct
   char *time_column, *value_column, *error_column, *quality_column; /* names, or numbers from 1; time may be "1+2" */
   char *time_format; /* "jd", "mjd", "jd-OFFSET", "iso", "ymd", "unix", "year-day", "decimal-year", "days", "hours", "seconds" */
   char *time_scale;  /* "UTC", "TT", ... */
+  char *hdu;         /* of a FITS file: its name, or its number, 0 the primary one */
   GArray *fill_values; /* of double: these and the usual ones count as missing; NULL = only the usual ones */
 } AntReadingChoices;
 

@@ -99,10 +99,11 @@ place_rows (AntRecord *record, const AntRowOrder *order, AntCadence *cadence, GE
     {
       char count[ANT_N_NUMBER_TEXT];
       g_autofree char *step = ant_length_text (cadence->step_d), *span = ant_length_text (span_d);
+      g_autofree char *rows = ant_record_rows_text (record, record->line[order->row[0]], record->line[order->row[order->n - 1]]);
       return ant_record_refuse (record, error,
-                                _("lines %u to %u: the good rows span %s, %s steps of the cadence %s for %zu rows: "
+                                _("%s: the good rows span %s, %s steps of the cadence %s for %zu rows: "
                                   "expected times and a cadence that belong together"),
-                                record->line[order->row[0]], record->line[order->row[order->n - 1]], span,
+                                rows, span,
                                 ant_number_text (count, "%.3g", n_steps), step, record->n_rows);
     }
   record->place = g_new (gint64, record->n_rows);
@@ -160,10 +161,13 @@ lay_grid (AntRecord *record, AntRowOrder *order, const AntGridOptions *options, 
     return FALSE;
   ant_row_order_trim (order, record);
   if (!ant_cadence_find (order->n, order->time_d, options->cadence_d, &cadence))
-    return ant_record_refuse (record, error,
-                              _("lines %u to %u: no cadence can be found in %zu different times: expected times "
-                                "that grow in steps"),
-                              record->line[order->row[0]], record->line[order->row[order->n - 1]], order->n);
+    {
+      g_autofree char *rows = ant_record_rows_text (record, record->line[order->row[0]], record->line[order->row[order->n - 1]]);
+      return ant_record_refuse (record, error,
+                                _("%s: no cadence can be found in %zu different times: expected times that grow in "
+                                  "steps"),
+                                rows, order->n);
+    }
   record->cadence_d = cadence.step_d;
   double shift_d = settle_exposure (record, options);
   if (!place_rows (record, order, &cadence, error))

@@ -6,6 +6,8 @@
 
 #include "core/units.h"
 
+#define MOST_COLUMNS 16
+
 static void add (GPtrArray *facts, const char *label, const char *format, ...) G_GNUC_PRINTF (3, 4);
 
 static void
@@ -30,11 +32,13 @@ add_columns (GPtrArray *facts, const AntRecord *record)
        record->value_unit ? record->value_unit : "");
   add (facts, _("Error"), "%s", record->error_name ? record->error_name : _("none"));
   add (facts, _("Quality"), "%s", record->quality_name ? record->quality_name : _("none"));
-  for (guint i = 0; i < record->columns->len; i++)
+  for (guint i = 0; i < MIN (record->columns->len, MOST_COLUMNS); i++)
     {
       g_autofree char *words = ant_column_words (g_ptr_array_index (record->columns, i), record->n_rows);
       add (facts, i ? "" : _("Further"), "%s", words);
     }
+  if (record->columns->len > MOST_COLUMNS)
+    add (facts, "", _("and %u more"), record->columns->len - MOST_COLUMNS);
 }
 
 static void
@@ -63,7 +67,7 @@ GPtrArray *
 ant_record_facts (const AntRecord *record, const AntRecordSummary *summary)
 {
   GPtrArray *facts = g_ptr_array_new_with_free_func (ant_fact_free);
-  add (facts, _("Format"), "%s", record->format);
+  add (facts, _("Format"), "%s%s%s", record->format, record->part ? ", " : "", record->part ? record->part : "");
   if (summary->has_times)
     {
       g_autofree char *first = ant_instant_words (record, summary->first_d),

@@ -3,6 +3,7 @@
 #include <glib/gi18n.h>
 #include <math.h>
 #include "core/units.h"
+#include "data/error.h"
 
 static const struct
 {
@@ -74,6 +75,7 @@ ant_record_unref (AntRecord *record)
   g_free (record->path);
   g_free (record->sha256);
   g_free (record->format);
+  g_free (record->part);
   g_free (record->time_name);
   g_free (record->value_name);
   g_free (record->error_name);
@@ -99,6 +101,31 @@ ant_record_say (AntRecord *record, const char *format, ...)
   va_start (arguments, format);
   g_ptr_array_add (record->said, g_strdup_vprintf (format, arguments));
   va_end (arguments);
+}
+
+char *
+ant_record_row_text (const AntRecord *record, guint32 line)
+{
+  return g_strdup_printf (record->part ? _("row %u") : _("line %u"), line);
+}
+
+char *
+ant_record_rows_text (const AntRecord *record, guint32 first, guint32 last)
+{
+  return g_strdup_printf (record->part ? _("rows %u to %u") : _("lines %u to %u"), first, last);
+}
+
+gboolean
+ant_record_refuse (const AntRecord *record, GError **error, const char *format, ...)
+{
+  va_list arguments;
+  va_start (arguments, format);
+  char *sentence = g_strdup_vprintf (format, arguments);
+  va_end (arguments);
+  g_set_error (error, ANT_ERROR, ANT_ERROR_READ, "%s: %s%s%s", record->path ? record->path : "-",
+               record->part ? record->part : "", record->part ? ": " : "", sentence);
+  g_free (sentence);
+  return FALSE;
 }
 
 double

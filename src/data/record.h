@@ -41,7 +41,8 @@ typedef struct
 
   char *path;       /* as given; "-" for standard input */
   char *sha256;     /* of the bytes as stored */
-  char *format;     /* "text", later "FITS", ... */
+  char *format;     /* "text", "FITS", ... */
+  char *part;       /* which part of the file, "HDU 1 (FLUXES)"; NULL where the file is one table of text lines */
   char *time_name, *value_name, *error_name, *quality_name; /* column names or "column 3"; NULL if absent */
   char *value_unit; /* "W/m2", "relative", or NULL if unknown */
   AntTimeReference time;
@@ -67,6 +68,12 @@ void ant_record_unref (AntRecord *record); /* NULL is fine */
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntRecord, ant_record_unref)
 /* Add a sentence to what was said. Takes a printf format. */
 void ant_record_say (AntRecord *record, const char *format, ...) G_GNUC_PRINTF (2, 3);
+
+/* What record->line counts: "line 7" of a text, "row 7" of other tables; "lines 7 to 9". Caller frees. */
+char *ant_record_row_text (const AntRecord *record, guint32 line);
+char *ant_record_rows_text (const AntRecord *record, guint32 first, guint32 last);
+/* Set *error (ANT_ERROR_READ) to "path: sentence", or "path: part: sentence"; returns FALSE. */
+gboolean ant_record_refuse (const AntRecord *record, GError **error, const char *format, ...) G_GNUC_PRINTF (3, 4);
 
 typedef struct
 {

@@ -8,18 +8,6 @@
 #define FEWEST_GOOD 50
 #define SAME_TIME_D 1e-9 /* 0.1 ms: the rounding of a JD in one double */
 
-gboolean
-ant_record_refuse (const AntRecord *record, GError **error, const char *format, ...)
-{
-  va_list arguments;
-  va_start (arguments, format);
-  char *sentence = g_strdup_vprintf (format, arguments);
-  va_end (arguments);
-  g_set_error (error, ANT_ERROR, ANT_ERROR_READ, "%s: %s", record->path ? record->path : "-", sentence);
-  g_free (sentence);
-  return FALSE;
-}
-
 void
 ant_row_order_clear (AntRowOrder *order)
 {
@@ -106,17 +94,16 @@ sort_rows (AntRowOrder *order, AntRecord *record, GError **error)
         }
       order->row[order->n++] = (guint32) i;
     }
+  if (n_back == 0)
+    return TRUE;
+  g_autofree char *first = ant_record_row_text (record, record->line[first_back]);
   if (n_back * 2 > order->n)
     return ant_record_refuse (record, error,
-                              _("line %u: the time goes back, and so do %zu of %zu "
+                              _("%s: the time goes back, and so do %zu of %zu "
                                 "rows: expected times that grow"),
-                              record->line[first_back], n_back, order->n);
-  if (n_back > 0)
-    {
-      g_qsort_with_data (order->row, (int) order->n, sizeof (guint32), compare_rows, record->time_d);
-      ant_record_say (record, _("The times go back at %zu places, first at line %u: the rows were sorted."), n_back,
-                      record->line[first_back]);
-    }
+                              first, n_back, order->n);
+  g_qsort_with_data (order->row, (int) order->n, sizeof (guint32), compare_rows, record->time_d);
+  ant_record_say (record, _("The times go back at %zu places, first at %s: the rows were sorted."), n_back, first);
   return TRUE;
 }
 
@@ -144,11 +131,13 @@ drop_duplicates (AntRowOrder *order, AntRecord *record)
       order->time_d[n_kept++] = record->time_d[order->row[keep]];
     }
   order->n = n_kept;
-  if (n_dropped > 0)
-    ant_record_say (record,
-                    _("Rows that repeat the time of another, left out: %zu, first at line %u; the first "
-                      "good row of each time is kept."),
-                    n_dropped, record->line[first_dropped]);
+  if (n_dropped == 0)
+    return;
+  g_autofree char *first = ant_record_row_text (record, record->line[first_dropped]);
+  ant_record_say (record,
+                  _("Rows that repeat the time of another, left out: %zu, first at %s; the first good row of each time "
+                    "is kept."),
+                  n_dropped, first);
 }
 
 gboolean

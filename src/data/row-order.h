@@ -29,5 +29,3 @@ void ant_row_order_trim (AntRowOrder *order, const AntRecord *record);
 gsize ant_row_order_count_good (const AntRowOrder *order, const AntRecord *record);
 /* FALSE with one sentence, which counts the reasons, if fewer than 50 rows are good. */
 gboolean ant_row_order_require_good (const AntRowOrder *order, const AntRecord *record, GError **error);
-/* Set *error (ANT_ERROR_READ) to "path: sentence"; returns FALSE. */
-gboolean ant_record_refuse (const AntRecord *record, GError **error, const char *format, ...) G_GNUC_PRINTF (3, 4);

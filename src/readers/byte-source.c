@@ -13,6 +13,7 @@
 #include "data/error.h"
 
 #define PACKED_BLOCK (64 * 1024)
+#define BLOCK (256 * 1024)
 /* Written records pack 3 to 20 fold. What unpacks further than this, beyond a first allowance, is no record. */
 #define MOST_UNPACK_RATIO 200
 #define UNPACK_ALLOWANCE (64 * 1024 * 1024)
@@ -28,7 +29,7 @@ struct _AntByteSource
 
   guint8 head[2]; /* read to tell gzip, not yet handed out */
   gsize n_head;
-  gboolean looked, packed, member_open, at_end;
+  gboolean is_file, looked, packed, member_open, at_end;
   z_stream inflater;
   guint8 *block;
 
@@ -58,13 +59,17 @@ ant_byte_source_open (const char *path, GError **error)
       g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: cannot be opened: %s"), path, g_strerror (errno));
       return NULL;
     }
-  if (fstat (fd, &status) == 0 && S_ISDIR (status.st_mode))
+  if (fstat (fd, &status) != 0)
+    status.st_mode = 0;
+  if (S_ISDIR (status.st_mode))
     {
       close (fd);
       g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: found a folder, expected a file with a record"), path);
       return NULL;
     }
-  return new_source (path, fd);
+  AntByteSource *source = new_source (path, fd);
+  source->is_file = S_ISREG (status.st_mode);
+  return source;
 }
 
 AntByteSource *
@@ -273,4 +278,44 @@ ant_byte_source_read (AntByteSource *source, void *buffer, gsize n, GError **err
   memcpy (buffer, source->peeked + source->peeked_at, n);
   source->peeked_at += n;
   return (gssize) n;
+}
+
+gboolean
+ant_byte_source_drain (AntByteSource *source, gsize *n, GCancellable *cancellable, GError **error)
+{
+  g_autofree char *buffer = g_malloc (BLOCK);
+  gssize got = 1;
+  for (*n = 0; got > 0; *n += (gsize) MAX (got, 0))
+    {
+      if (g_cancellable_set_error_if_cancelled (cancellable, error))
+        return FALSE;
+      got = ant_byte_source_read (source, buffer, BLOCK, error);
+    }
+  return got == 0;
+}
+
+void *
+ant_byte_source_take (AntByteSource *source, gsize *n, GCancellable *cancellable, GError **error)
+{
+  gsize room = BLOCK;
+  char *bytes = g_malloc (room);
+  gssize got = 1;
+  for (*n = 0; got > 0; *n += (gsize) MAX (got, 0))
+    {
+      if (*n == room)
+        bytes = g_realloc (bytes, room *= 2);
+      got = g_cancellable_set_error_if_cancelled (cancellable, error)
+                ? -1
+                : ant_byte_source_read (source, bytes + *n, MIN (room - *n, (gsize) BLOCK), error);
+    }
+  if (got == 0)
+    return bytes;
+  g_free (bytes);
+  return NULL;
+}
+
+const char *
+ant_byte_source_path (const AntByteSource *source)
+{
+  return source->is_file && !source->packed ? source->name : NULL;
 }

@@ -6,6 +6,7 @@
 
 #include "data/error.h"
 #include "readers/byte-source.h"
+#include "readers/fits-reader.h"
 #include "readers/text-reader.h"
 
 typedef struct
@@ -21,7 +22,7 @@ static const struct
 {
   const char *magic, *name;
 } binaries[] = {
-  { "SIMPLE  =", "FITS" }, { "\211HDF", "HDF5" }, { "CDF\001", "NetCDF" }, { "CDF\002", "NetCDF" }, { "PK\003\004", "zip" },
+  { "\211HDF", "HDF5" }, { "CDF\001", "NetCDF" }, { "CDF\002", "NetCDF" }, { "PK\003\004", "zip" },
   { "%PDF", "PDF" },       { "\211PNG", "PNG" },  { "BZh", "bzip2" },      { "\3757zXZ", "xz" },
 };
 
@@ -40,7 +41,14 @@ sniff_text (const guint8 *head, gsize n)
   return binary_name (head, n) == NULL;
 }
 
+static gboolean
+sniff_fits (const guint8 *head, gsize n)
+{
+  return n >= 9 && !memcmp (head, "SIMPLE  =", 9);
+}
+
 static const AntFormat formats[] = {
+  { "FITS", sniff_fits, ant_fits_reader_read },
   { "text", sniff_text, ant_text_reader_read },
 };
 
@@ -66,7 +74,7 @@ read_source (AntByteSource *source, const char *path, const AntReadingChoices *c
       record->sha256 = ant_byte_source_sha256 (source);
       return g_steal_pointer (&record);
     }
-  g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: line 1: found a %s file, expected a table of text"),
+  g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: line 1: found a %s file, expected a table of text or a FITS file"),
                ant_byte_source_name (source), binary_name (head, n));
   return NULL;
 }

@@ -27,7 +27,7 @@ slot_of (Slots *slots, guint column)
 }
 
 static void
-make_slots (Slots *slots, const AntTextLayout *layout, const AntTimeForm *form, const AntValueColumns *columns)
+make_slots (Slots *slots, const AntTableLayout *layout, const AntTimeForm *form, const AntValueColumns *columns)
 {
   memset (slots, 0, sizeof *slots);
   for (guint c = 0; c < layout->n_columns; c++)
@@ -64,7 +64,7 @@ make_room (AntTableRows *rows, const AntValueColumns *columns)
 
 /* Cut a line; TRUE if it has as many cells as there are columns. */
 static gboolean
-cut (Slots *slots, const AntTextLayout *layout, const char *at, const char *end, guint *n_cells)
+cut (Slots *slots, const AntTableLayout *layout, const char *at, const char *end, guint *n_cells)
 {
   guint n = 0;
   while (at)
@@ -125,7 +125,7 @@ add_row (AntTableRows *rows, const Slots *slots, AntTimeForm *form, const AntVal
 }
 
 gboolean
-ant_table_rows_read (AntTableRows *rows, AntLineSource *lines, const AntTextLayout *layout, AntTimeForm *form,
+ant_table_rows_read (AntTableRows *rows, AntLineSource *lines, const AntTableLayout *layout, AntTimeForm *form,
                      const AntValueColumns *columns, GError **error)
 {
   g_autofree Slots *slots = g_new (Slots, 1);

@@ -2,7 +2,7 @@
 #pragma once
 
 #include "readers/line-source.h"
-#include "readers/text-layout.h"
+#include "readers/table-layout.h"
 #include "readers/time-form.h"
 #include "readers/value-columns.h"
 
@@ -23,6 +23,6 @@ typedef struct
 } AntTableRows;
 
 /* Read all lines from the layout's first row on. FALSE on a fault of the source or a cancel. */
-gboolean ant_table_rows_read (AntTableRows *rows, AntLineSource *lines, const AntTextLayout *layout, AntTimeForm *form,
+gboolean ant_table_rows_read (AntTableRows *rows, AntLineSource *lines, const AntTableLayout *layout, AntTimeForm *form,
                               const AntValueColumns *columns, GError **error);
 void ant_table_rows_clear (AntTableRows *rows);

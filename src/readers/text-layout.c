@@ -112,7 +112,7 @@ judge_separator (const Line *lines, guint from, guint to, char separator, AntCel
 }
 
 static gboolean
-find_separator (AntTextLayout *layout, const char *name, const Line *lines, guint from, guint to, AntCell *cells,
+find_separator (AntTableLayout *layout, const char *name, const Line *lines, guint from, guint to, AntCell *cells,
                 GError **error)
 {
   static const char separators[] = { '\t', ',', ';', ' ' };
@@ -152,7 +152,7 @@ find_separator (AntTextLayout *layout, const char *name, const Line *lines, guin
 
 /* The first line that looks like the data at the end of the sample. */
 static guint
-find_first_row (const AntTextLayout *layout, const Line *lines, guint from, guint to, AntCell *cells)
+find_first_row (const AntTableLayout *layout, const Line *lines, guint from, guint to, AntCell *cells)
 {
   guint usual = 0;
   for (guint i = to, seen = 0; i-- > from && seen < 16;)
@@ -171,45 +171,7 @@ find_first_row (const AntTextLayout *layout, const Line *lines, guint from, guin
 }
 
 static void
-study_cell (AntTextColumn *column, const AntCell *cell, double *previous)
-{
-  AntIsoTime iso;
-  double second, number = cell->number;
-  int leap;
-  column->n_cells++;
-  if (cell->kind == ANT_CELL_MISSING)
-    column->n_missing++;
-  if (cell->kind == ANT_CELL_TEXT)
-    {
-      gboolean is_iso = ant_iso_read (cell->start, cell->end, &iso);
-      column->n_text++;
-      column->n_iso_time += is_iso && iso.has_time;
-      column->n_iso_date += is_iso && !iso.has_time;
-      column->has_zone |= is_iso && iso.has_zone;
-      column->n_clock += !is_iso && ant_iso_read_clock (cell->start, cell->end, &second, &leap);
-    }
-  if (cell->kind != ANT_CELL_NUMBER)
-    return;
-  gboolean whole = number == floor (number) && fabs (number) < 2e19;
-  column->n_numbers++;
-  column->n_whole += whole;
-  column->n_padded += cell->end - cell->start > 1 && cell->start[0] == '0' && g_ascii_isdigit (cell->start[1]);
-  column->n_ymd += number > 1.5e7 && number < 3e7 && cell->end - cell->start >= 8
-                   && ant_iso_read (cell->start, cell->start + 8, &iso);
-  column->n_clock_digits += whole && number >= 0 && number < 240000 && fmod (number, 100.0) < 61.0
-                            && fmod (floor (number / 100.0), 100.0) < 60.0;
-  column->n_jd += number > 1.8e6 && number < 3.0e6;
-  if (!(fabs (number) < 1e18))
-    return;
-  column->n_up += number > *previous;
-  column->n_down += number < *previous;
-  column->least = fmin (column->least, number);
-  column->greatest = fmax (column->greatest, number);
-  *previous = number;
-}
-
-static void
-study_columns (AntTextLayout *layout, const Line *lines, guint from, guint to, AntCell *cells)
+study_columns (AntTableLayout *layout, const Line *lines, guint from, guint to, AntCell *cells)
 {
   g_autofree double *previous = g_new (double, layout->n_columns);
   for (guint c = 0; c < layout->n_columns; c++)
@@ -218,17 +180,17 @@ study_columns (AntTextLayout *layout, const Line *lines, guint from, guint to, A
     if (lines[i].is_text
         && ant_cell_split (lines[i].start, lines[i].end, layout->separator, ANT_MOST_COLUMNS, cells) == layout->n_columns)
       for (guint c = 0; c < layout->n_columns; c++)
-        study_cell (&layout->columns[c], &cells[c], &previous[c]);
+        ant_table_column_study (&layout->columns[c], &cells[c], &previous[c]);
 }
 
-AntTextLayout *
+AntTableLayout *
 ant_text_layout_find (const char *name, const char *sample, gsize n, GError **error)
 {
-  g_autoptr (AntTextLayout) layout = g_new0 (AntTextLayout, 1);
+  g_autoptr (AntTableLayout) layout = ant_table_layout_new (0);
   g_autofree Line *lines = g_new (Line, MOST_LINES);
   g_autofree AntCell *cells = g_new (AntCell, ANT_MOST_COLUMNS);
   guint n_lines = cut_lines (sample, n, lines);
-  layout->header = g_ptr_array_new_with_free_func (g_free);
+  layout->is_text = TRUE;
   layout->counted = header_count (lines, n_lines);
   guint from = layout->counted;
   if (!find_separator (layout, name, lines, from, n_lines, cells, error))
@@ -237,25 +199,9 @@ ant_text_layout_find (const char *name, const char *sample, gsize n, GError **er
   layout->first_row = first_row + 1;
   for (guint i = 0; i < MIN (first_row, MOST_HEADER_LINES); i++)
     g_ptr_array_add (layout->header, ant_text_excerpt (lines[i].start, lines[i].end, 400));
-  layout->columns = g_new0 (AntTextColumn, layout->n_columns);
+  g_free (layout->columns);
+  layout->columns = g_new0 (AntTableColumn, layout->n_columns);
   ant_text_name_columns (layout);
   study_columns (layout, lines, first_row, n_lines, cells);
   return g_steal_pointer (&layout);
-}
-
-void
-ant_text_layout_free (AntTextLayout *layout)
-{
-  if (!layout)
-    return;
-  for (guint c = 0; layout->columns && c < layout->n_columns; c++)
-    {
-      g_free (layout->columns[c].name);
-      g_free (layout->columns[c].label);
-      g_free (layout->columns[c].unit);
-      g_free (layout->columns[c].remark);
-    }
-  g_free (layout->columns);
-  g_clear_pointer (&layout->header, g_ptr_array_unref);
-  g_free (layout);
 }

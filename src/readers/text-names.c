@@ -41,46 +41,9 @@ ant_text_known_unit (const char *text)
   return NULL;
 }
 
-gboolean
-ant_text_column_has_word (const AntTextColumn *column, const char *const *words)
-{
-  for (const char *at = column->name; *at;)
-    {
-      gsize n = 0;
-      while (g_ascii_isalpha (at[n]))
-        n++;
-      for (gsize i = 0; n > 0 && words[i]; i++)
-        if (strlen (words[i]) == n && !g_ascii_strncasecmp (words[i], at, n))
-          return TRUE;
-      at += n > 0 ? n : 1;
-    }
-  return FALSE;
-}
-
-int
-ant_text_layout_column (const AntTextLayout *layout, const char *name)
-{
-  for (guint c = 0; c < layout->n_columns; c++)
-    if (!g_ascii_strcasecmp (layout->columns[c].name, name))
-      return (int) c;
-  char *end;
-  guint64 number = g_ascii_strtoull (name, &end, 10);
-  return end != name && *end == 0 && number >= 1 && number <= layout->n_columns ? (int) number - 1 : -1;
-}
-
-void
-ant_text_layout_no_column (const AntTextLayout *layout, const char *name, GError **error)
-{
-  g_autoptr (GString) names = g_string_new (NULL);
-  for (guint c = 0; c < MIN (layout->n_columns, 12); c++)
-    g_string_append_printf (names, "%s%s", c ? ", " : "", layout->columns[c].label);
-  g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("no column “%s”; expected a number from 1 to %u or one of %s%s"), name,
-               layout->n_columns, names->str, layout->n_columns > 12 ? ", …" : "");
-}
-
 /* "TSI [W/m2]" or "TSI (Wm-2)": the part in brackets, where it is a unit. */
 static void
-take_unit (AntTextColumn *column)
+take_unit (AntTableColumn *column)
 {
   const char *open = strpbrk (column->name, "[(");
   const char *close = open ? strpbrk (open, "])") : NULL;
@@ -94,8 +57,8 @@ has_time_word (const AntCell *cells, guint n)
   for (guint c = 0; c < n; c++)
     {
       g_autofree char *name = g_strndup (cells[c].start, (gsize) (cells[c].end - cells[c].start));
-      AntTextColumn column = { .name = name };
-      if (ant_text_column_has_word (&column, ant_time_words))
+      AntTableColumn column = { .name = name };
+      if (ant_table_column_has_word (&column, ant_time_words))
         return TRUE;
     }
   return FALSE;
@@ -104,7 +67,7 @@ has_time_word (const AntCell *cells, guint n)
 /* A row of names in this line? Names are words; a cell of bare number shows that it is not. Comments hold much other prose:
  * there one of the names must be a time's. */
 static gboolean
-names_from_line (AntTextLayout *layout, const char *line, char separator, gboolean is_comment, AntCell *cells)
+names_from_line (AntTableLayout *layout, const char *line, char separator, gboolean is_comment, AntCell *cells)
 {
   const char *end = line + strlen (line);
   if (ant_cell_split (line, end, separator, layout->n_columns, cells) != layout->n_columns)
@@ -160,7 +123,7 @@ numbered_column (const char *line, const char **words)
 }
 
 static void
-names_from_prose (AntTextLayout *layout)
+names_from_prose (AntTableLayout *layout)
 {
   for (guint i = 0; i < layout->header->len; i++)
     {
@@ -179,7 +142,7 @@ names_from_prose (AntTextLayout *layout)
 }
 
 void
-ant_text_name_columns (AntTextLayout *layout)
+ant_text_name_columns (AntTableLayout *layout)
 {
   const char separators[] = { layout->separator, ',', '\t', ' ', ';' };
   g_autofree AntCell *cells = g_new (AntCell, layout->n_columns);
@@ -203,8 +166,8 @@ ant_text_name_columns (AntTextLayout *layout)
     names_from_prose (layout);
   for (guint c = 0; c < layout->n_columns; c++)
     {
-      AntTextColumn *column = &layout->columns[c];
+      AntTableColumn *column = &layout->columns[c];
       take_unit (column);
-      column->label = *column->name ? g_strdup (column->name) : g_strdup_printf (_("column %u"), c + 1);
     }
+  ant_table_layout_label (layout);
 }

@@ -28,14 +28,14 @@ static const char *const hour_words[] = { "hour", "hours", "hr", "hh", NULL };
 static const char *const spread_words[] = { "std", "stdev", "stddev", "err", "error", "unc", "uncertainty", "sigma", "exposure", NULL };
 
 static gboolean
-is_monotone (const AntTextColumn *column)
+is_monotone (const AntTableColumn *column)
 {
   guint steps = column->n_up + column->n_down;
   return steps == 0 ? column->n_numbers == 1 : 10 * MAX (column->n_up, column->n_down) >= 9 * steps;
 }
 
 static gboolean
-mostly (guint n, const AntTextColumn *column)
+mostly (guint n, const AntTableColumn *column)
 {
   return n > 0 && 2 * n > column->n_cells - MIN (column->n_missing, column->n_cells - 1);
 }
@@ -58,18 +58,18 @@ set_number (AntTimeForm *form, AntStampStyle style, double offset, double unit_d
 
 /* The kind of clock in a column that stands beside a date; FALSE if it is none. */
 static gboolean
-clock_part (const AntTextColumn *column, AntTimePart *part)
+clock_part (const AntTableColumn *column, AntTimePart *part)
 {
-  gboolean named = ant_text_column_has_word (column, clock_words);
+  gboolean named = ant_table_column_has_word (column, clock_words);
   if (mostly (column->n_clock, column))
     *part = ANT_PART_CLOCK;
+  else if (mostly (column->n_numbers, column) && column->least >= 0.0 && ant_table_column_has_word (column, second_words))
+    *part = ANT_PART_SECOND;
   else if (!mostly (column->n_whole, column) || column->least < 0.0)
     return FALSE;
-  else if (ant_text_column_has_word (column, second_words))
-    *part = ANT_PART_SECOND;
-  else if (ant_text_column_has_word (column, minute_words) && column->greatest <= 1440.0)
+  else if (ant_table_column_has_word (column, minute_words) && column->greatest <= 1440.0)
     *part = ANT_PART_MINUTE;
-  else if (ant_text_column_has_word (column, hour_words) && column->greatest <= 24.0)
+  else if (ant_table_column_has_word (column, hour_words) && column->greatest <= 24.0)
     *part = ANT_PART_HOUR;
   else if ((named || !*column->name) && mostly (column->n_clock_digits, column) && column->greatest > 2400.0)
     *part = ANT_PART_HHMMSS;
@@ -82,7 +82,7 @@ clock_part (const AntTextColumn *column, AntTimePart *part)
 
 /* Clocks in the columns after the date's: one, or hour, minute and second. */
 static void
-add_clocks (const AntTextLayout *layout, guint next, AntTimeForm *form)
+add_clocks (const AntTableLayout *layout, guint next, AntTimeForm *form)
 {
   AntTimePart part, last = ANT_PART_ISO;
   while (next < layout->n_columns && form->n_parts < ANT_MOST_TIME_PARTS && clock_part (&layout->columns[next], &part)
@@ -95,10 +95,10 @@ add_clocks (const AntTextLayout *layout, guint next, AntTimeForm *form)
 }
 
 static gboolean
-find_day_of_year (const AntTextLayout *layout, guint year, guint *found)
+find_day_of_year (const AntTableLayout *layout, guint year, guint *found)
 {
   for (guint c = 0; c < layout->n_columns; c++)
-    if (c != year && ant_text_column_has_word (&layout->columns[c], day_of_year_words)
+    if (c != year && ant_table_column_has_word (&layout->columns[c], day_of_year_words)
         && mostly (layout->columns[c].n_numbers, &layout->columns[c]))
       {
         *found = c;
@@ -109,24 +109,24 @@ find_day_of_year (const AntTextLayout *layout, guint year, guint *found)
 
 /* Numbers that count from somewhere: the unit by the column's name or unit. */
 static double
-unit_of_days (const AntTextColumn *column)
+unit_of_days (const AntTableColumn *column)
 {
   static const char *const unit_seconds[] = { "s", "sec", "secs", "second", "seconds", NULL };
   static const char *const unit_hours[] = { "h", "hr", "hrs", "hour", "hours", NULL };
-  AntTextColumn unit = { .name = column->unit ? column->unit : column->name };
-  if (ant_text_column_has_word (&unit, unit_seconds))
+  AntTableColumn unit = { .name = column->unit ? column->unit : column->name };
+  if (ant_table_column_has_word (&unit, unit_seconds))
     return 1.0 / ANT_SECONDS_PER_DAY;
-  return ant_text_column_has_word (&unit, unit_hours) ? 1.0 / ANT_HOURS_PER_DAY : 1.0;
+  return ant_table_column_has_word (&unit, unit_hours) ? 1.0 / ANT_HOURS_PER_DAY : 1.0;
 }
 
 static gboolean
-form_of_numbers (const AntTextLayout *layout, guint c, AntTimeForm *form)
+form_of_numbers (const AntTableLayout *layout, guint c, AntTimeForm *form)
 {
-  const AntTextColumn *column = &layout->columns[c];
-  gboolean named = ant_text_column_has_word (column, ant_time_words) || ant_text_column_has_word (column, year_words);
+  const AntTableColumn *column = &layout->columns[c];
+  gboolean named = ant_table_column_has_word (column, ant_time_words) || ant_table_column_has_word (column, year_words);
   double offset;
   guint day_of_year;
-  if (ant_text_column_has_word (column, spread_words))
+  if (ant_table_column_has_word (column, spread_words))
     return FALSE;
   if (mostly (column->n_ymd, column))
     {
@@ -135,7 +135,7 @@ form_of_numbers (const AntTextLayout *layout, guint c, AntTimeForm *form)
       if (mostly (column->n_whole, column))
         add_clocks (layout, c + 1, form);
     }
-  else if (ant_text_column_has_word (column, plain_year_words) && mostly (column->n_whole, column)
+  else if (ant_table_column_has_word (column, plain_year_words) && mostly (column->n_whole, column)
            && find_day_of_year (layout, c, &day_of_year))
     {
       form->style = ANT_STAMP_YEAR_DAY;
@@ -145,17 +145,19 @@ form_of_numbers (const AntTextLayout *layout, guint c, AntTimeForm *form)
     }
   else if (!is_monotone (column))
     return FALSE;
-  else if (mostly (column->n_jd, column))
+  else if (layout->has_epoch && named)
+    set_number (form, ANT_STAMP_DAYS, 0.0, unit_of_days (column), c);
+  else if (mostly (column->n_jd, column) && unit_of_days (column) == 1.0)
     set_number (form, ANT_STAMP_JD, 0.0, 1.0, c);
-  else if (ant_text_column_has_word (column, mjd_words) && column->greatest < 1e6)
+  else if (ant_table_column_has_word (column, mjd_words) && column->greatest < 1e6)
     set_number (form, ANT_STAMP_JD, MJD_ZERO_JD, 1.0, c);
   else if (column->greatest < 1e6 && ant_time_header_jd_offset (layout, column, &offset))
     set_number (form, ANT_STAMP_JD, offset, 1.0, c);
-  else if (ant_text_column_has_word (column, unix_words) && column->least > 1e8 && column->greatest < 1e10)
+  else if (ant_table_column_has_word (column, unix_words) && column->least > 1e8 && column->greatest < 1e10)
     set_number (form, ANT_STAMP_UNIX, 0.0, 1.0, c);
-  else if (ant_text_column_has_word (column, year_words) && column->least > 1600.0 && column->greatest < 2400.0)
+  else if (ant_table_column_has_word (column, year_words) && column->least > 1600.0 && column->greatest < 2400.0)
     set_number (form, ANT_STAMP_DECIMAL_YEAR, 0.0, 1.0, c);
-  else if ((named && !ant_text_column_has_word (column, digit_clock_words)) || (!*column->name && c == 0 && column->n_padded == 0))
+  else if ((named && !ant_table_column_has_word (column, digit_clock_words)) || (!*column->name && c == 0 && column->n_padded == 0))
     set_number (form, ANT_STAMP_DAYS, 0.0, unit_of_days (column), c);
   else
     return FALSE;
@@ -164,9 +166,9 @@ form_of_numbers (const AntTextLayout *layout, guint c, AntTimeForm *form)
 
 /* The form that the column begins, if it is a time by its contents and name. */
 static gboolean
-form_at (const AntTextLayout *layout, guint c, AntTimeForm *form)
+form_at (const AntTableLayout *layout, guint c, AntTimeForm *form)
 {
-  const AntTextColumn *column = &layout->columns[c];
+  const AntTableColumn *column = &layout->columns[c];
   *form = (AntTimeForm){ .unit_d = 1.0 };
   if (mostly (column->n_iso_time + column->n_iso_date, column))
     {
@@ -180,16 +182,16 @@ form_at (const AntTextLayout *layout, guint c, AntTimeForm *form)
 }
 
 gboolean
-ant_time_columns_alike (const AntTextLayout *layout, guint c)
+ant_time_columns_alike (const AntTableLayout *layout, guint c)
 {
   AntTimeForm form;
-  return *layout->columns[c].name ? form_at (layout, c, &form) || ant_text_column_has_word (&layout->columns[c], jd_words)
+  return *layout->columns[c].name ? form_at (layout, c, &form) || ant_table_column_has_word (&layout->columns[c], jd_words)
                                   : mostly (layout->columns[c].n_clock, &layout->columns[c]);
 }
 
 /* The first time-like column; where that is a decimal year, which keeps time worst, a JD if there is one. */
 static gboolean
-recognise (const AntTextLayout *layout, AntRecord *record, AntTimeForm *form)
+recognise (const AntTableLayout *layout, AntRecord *record, AntTimeForm *form)
 {
   AntTimeForm other;
   for (guint c = 0; c < layout->n_columns; c++)
@@ -209,21 +211,21 @@ recognise (const AntTextLayout *layout, AntRecord *record, AntTimeForm *form)
 }
 
 static int
-named_column (const AntTextLayout *layout, const char *name, GError **error)
+named_column (const AntTableLayout *layout, const char *name, GError **error)
 {
-  int c = ant_text_layout_column (layout, name);
+  int c = ant_table_layout_column (layout, name);
   if (c < 0)
-    ant_text_layout_no_column (layout, name, error);
+    ant_table_layout_no_column (layout, name, error);
   return c;
 }
 
 /* "1+2" or a name. */
 static gboolean
-chosen_columns (const AntTextLayout *layout, const char *text, AntTimeForm *form, GError **error)
+chosen_columns (const AntTableLayout *layout, const char *text, AntTimeForm *form, GError **error)
 {
-  if (ant_text_layout_column (layout, text) >= 0)
+  if (ant_table_layout_column (layout, text) >= 0)
     {
-      add_part (form, ANT_PART_NUMBER, (guint) ant_text_layout_column (layout, text));
+      add_part (form, ANT_PART_NUMBER, (guint) ant_table_layout_column (layout, text));
       return TRUE;
     }
   g_auto (GStrv) names = g_strsplit (text, "+", ANT_MOST_TIME_PARTS + 1);
@@ -244,7 +246,7 @@ chosen_columns (const AntTextLayout *layout, const char *text, AntTimeForm *form
 
 /* What the further columns of a chosen time hold. */
 static void
-further_parts (const AntTextLayout *layout, AntTimeForm *form, guint from)
+further_parts (const AntTableLayout *layout, AntTimeForm *form, guint from)
 {
   for (guint i = from; i < form->n_parts; i++)
     if (!clock_part (&layout->columns[form->columns[i]], &form->parts[i]))
@@ -252,7 +254,7 @@ further_parts (const AntTextLayout *layout, AntTimeForm *form, guint from)
 }
 
 static gboolean
-set_format (const AntTextLayout *layout, const char *format, AntTimeForm *form, GError **error)
+set_format (const AntTableLayout *layout, const char *format, AntTimeForm *form, GError **error)
 {
   static const struct
   {
@@ -302,7 +304,7 @@ set_format (const AntTextLayout *layout, const char *format, AntTimeForm *form, 
 
 /* A format without columns: the first column that could hold it. */
 static gboolean
-column_for_format (const AntTextLayout *layout, const char *format, AntTimeForm *form)
+column_for_format (const AntTableLayout *layout, const char *format, AntTimeForm *form)
 {
   AntTimeForm found;
   gboolean text = !g_ascii_strcasecmp (format, "iso");
@@ -324,7 +326,7 @@ column_for_format (const AntTextLayout *layout, const char *format, AntTimeForm 
 
 /* Columns chosen without a format: what the first one begins, over just these columns. */
 static void
-form_of_chosen (const AntTextLayout *layout, AntTimeForm *form)
+form_of_chosen (const AntTableLayout *layout, AntTimeForm *form)
 {
   AntTimeForm chosen = *form, found;
   if (!form_at (layout, chosen.columns[0], &found))
@@ -338,19 +340,20 @@ form_of_chosen (const AntTextLayout *layout, AntTimeForm *form)
 }
 
 static gboolean
-no_time (const char *path, const AntTextLayout *layout, GError **error)
+no_time (const char *path, const AntTableLayout *layout, GError **error)
 {
   g_autoptr (GString) names = g_string_new (NULL);
+  g_autofree char *place = ant_table_layout_place (layout);
   for (guint c = 0; c < MIN (layout->n_columns, 8); c++)
     g_string_append_printf (names, "%s%s", c ? ", " : "", layout->columns[c].label);
   g_set_error (error, ANT_ERROR, ANT_ERROR_READ,
-               _("%s: line %u: found columns %s%s, expected one that looks like a time; name it with --column time=…"), path,
-               layout->first_row, names->str, layout->n_columns > 8 ? ", …" : "");
+               _("%s: %s: found columns %s%s, expected one that looks like a time; name it with --column time=…"), path,
+               place, names->str, layout->n_columns > 8 ? ", …" : "");
   return FALSE;
 }
 
 gboolean
-ant_time_columns_find (const AntTextLayout *layout, const AntReadingChoices *choices, AntRecord *record, AntTimeForm *form,
+ant_time_columns_find (const AntTableLayout *layout, const AntReadingChoices *choices, AntRecord *record, AntTimeForm *form,
                        GError **error)
 {
   const char *columns = choices ? choices->time_column : NULL, *format = choices ? choices->time_format : NULL;

@@ -63,33 +63,42 @@ calendar_midnight (int year, int month, int day)
   return ant_time_from_calendar (ANT_SCALE_TAI, year, month, day, 0, 0, 0.0, &jd1, &jd2) == ANT_OK ? jd1 + jd2 : (double) NAN;
 }
 
+/* A number and the rest of it. Whole days and fractions are split before the offset is added: an MJD keeps all its digits. */
 static double
-read_number (AntTimeForm *form, double number)
+read_jd (AntTimeForm *form, double number, double rest)
 {
-  double whole, shifted, into_day = number - form->day_own;
-  if (form->style == ANT_STAMP_JD && form->started && into_day >= 0.0 && into_day < 1.0)
-    return form->day_start_d + into_day * form->day_length_d; /* still the day last met: the rest below would say the same */
-  if (!isfinite (number))
+  double into_day = number - form->day_own + rest;
+  if (form->started && into_day >= 0.0 && into_day < 1.0)
+    return form->day_start_d + into_day * form->day_length_d; /* still the day last met: what follows would say the same */
+  if (!isfinite (into_day))
     return (double) NAN;
+  double shifted = form->offset + 0.5, shift = shifted - floor (shifted);
+  double whole = floor (number + shift), fraction = number - whole + shift + rest;
+  double carry = floor (fraction);
+  return at_fraction (form, whole + carry + floor (shifted) - 0.5, fraction - carry);
+}
+
+static double
+read_number (AntTimeForm *form, double number, double rest)
+{
+  double whole;
   switch (form->style)
     {
-    case ANT_STAMP_JD:
-      /* Split before adding the offset: an MJD keeps all its digits. */
-      shifted = form->offset + 0.5;
-      whole = floor (number + (shifted - floor (shifted)));
-      return at_fraction (form, whole + floor (shifted) - 0.5, number + (shifted - floor (shifted)) - whole);
+    case ANT_STAMP_JD: return read_jd (form, number, rest + form->offset_rest);
     case ANT_STAMP_UNIX:
+      if (!isfinite (number))
+        return (double) NAN;
       whole = floor (number / ANT_SECONDS_PER_DAY);
-      return at_fraction (form, UNIX_EPOCH_JD + whole, (number - whole * ANT_SECONDS_PER_DAY) / ANT_SECONDS_PER_DAY);
+      return at_fraction (form, UNIX_EPOCH_JD + whole, (number - whole * ANT_SECONDS_PER_DAY + rest) / ANT_SECONDS_PER_DAY);
     default:
-      if (fabs (number * form->unit_d) > GREATEST_DAYS)
+      if (!(fabs (number * form->unit_d) <= GREATEST_DAYS) || !isfinite (rest))
         return (double) NAN;
       if (!form->started)
         {
           form->started = TRUE;
           form->own_zero = round (floor (number * form->unit_d) / form->unit_d);
         }
-      return (number - form->own_zero) * form->unit_d;
+      return (number - form->own_zero) * form->unit_d + rest * form->unit_d;
     }
 }
 
@@ -167,7 +176,7 @@ ant_time_form_read (AntTimeForm *form, const AntCell *const *cells)
   double midnight_jd = (double) NAN, second = 0.0, jd2;
   gboolean leap = FALSE;
   if (form->parts[0] == ANT_PART_NUMBER)
-    return read_number (form, cells[0]->number);
+    return read_number (form, cells[0]->number, form->n_parts > 1 && form->parts[1] == ANT_PART_FRACTION ? cells[1]->number : 0.0);
   if (form->parts[0] == ANT_PART_DECIMAL_YEAR)
     {
       if (ant_time_from_decimal_year (ANT_SCALE_TAI, cells[0]->number, &midnight_jd, &jd2) != ANT_OK)
@@ -186,16 +195,19 @@ ant_time_form_reference (const AntTimeForm *form, AntTimeReference *reference)
 {
   reference->scale = form->scale;
   reference->style = form->style;
-  reference->own_offset = form->offset;
+  reference->own_offset = form->offset + form->offset_rest;
   reference->own_unit_d = form->style == ANT_STAMP_UNIX ? 1.0 / ANT_SECONDS_PER_DAY : form->unit_d;
   reference->own_zero = form->own_zero;
   reference->origin_known = form->style != ANT_STAMP_DAYS;
-  if (!reference->origin_known)
+  if (form->style == ANT_STAMP_DAYS && form->epoch_known)
+    reference->origin_known = ant_time_after (form->scale, form->epoch_jd1, form->epoch_jd2, form->own_zero * form->unit_d,
+                                              &reference->origin_jd1, &reference->origin_jd2) == ANT_OK;
+  if (form->style == ANT_STAMP_DAYS)
     return;
   reference->origin_jd1 = form->origin_jd;
   reference->origin_jd2 = 0.0;
   if (form->style == ANT_STAMP_JD)
-    reference->own_zero = form->origin_jd - form->offset;
+    reference->own_zero = form->origin_jd - reference->own_offset;
   else if (form->style == ANT_STAMP_UNIX)
     reference->own_zero = (form->origin_jd - UNIX_EPOCH_JD) * ANT_SECONDS_PER_DAY;
   else if (form->style == ANT_STAMP_DECIMAL_YEAR)

@@ -10,6 +10,7 @@
 typedef enum
 {
   ANT_PART_NUMBER,       /* JD, days, Unix seconds: the style says */
+  ANT_PART_FRACTION,     /* more of that number, kept apart from it */
   ANT_PART_ISO,          /* an ISO 8601 date or time */
   ANT_PART_YMD,          /* YYYYMMDD, with a day fraction perhaps */
   ANT_PART_YEAR,         /* a whole year, day of year to follow */
@@ -28,7 +29,10 @@ typedef struct
   AntStampStyle style;
   AntTimeScale scale;
   double offset;  /* ANT_STAMP_JD: JD minus the number */
+  double offset_rest; /* more of it, kept apart: fractions of a day lose digits beside millions */
   double unit_d;  /* ANT_STAMP_DAYS */
+  gboolean epoch_known; /* ANT_STAMP_DAYS: what the numbers count from, in `scale` */
+  double epoch_jd1, epoch_jd2;
   guint n_parts;
   guint columns[ANT_MOST_TIME_PARTS]; /* from 0 */
   AntTimePart parts[ANT_MOST_TIME_PARTS];

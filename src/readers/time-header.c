@@ -32,7 +32,7 @@ offset_in (const char *text, double *offset)
 }
 
 gboolean
-ant_time_header_jd_offset (const AntTextLayout *layout, const AntTextColumn *column, double *offset)
+ant_time_header_jd_offset (const AntTableLayout *layout, const AntTableColumn *column, double *offset)
 {
   if (offset_in (column->name, offset))
     return TRUE;
@@ -43,13 +43,13 @@ ant_time_header_jd_offset (const AntTextLayout *layout, const AntTextColumn *col
 }
 
 static AntTimeScale
-scale_in_name (const AntTextColumn *column)
+scale_in_name (const AntTableColumn *column)
 {
   static const char *const words[] = { "utc", "tai", "tt", "tdb", "gps", "tdt", "gmt", "ut", NULL };
   for (gsize i = 0; words[i]; i++)
     {
       const char *const one[] = { words[i], NULL };
-      if (ant_text_column_has_word (column, one))
+      if (ant_table_column_has_word (column, one))
         return strcmp (words[i], "ut") ? ant_time_scale_from_name (words[i]) : ANT_SCALE_UTC;
     }
   return ANT_SCALE_UNKNOWN;
@@ -57,7 +57,7 @@ scale_in_name (const AntTextColumn *column)
 
 /* "Time scale: TT" in a header line. */
 static AntTimeScale
-scale_in_header (const AntTextLayout *layout)
+scale_in_header (const AntTableLayout *layout)
 {
   static const char *const keys[] = { "time scale", "timescale", "time system", "timesys" };
   for (guint i = 0; i < layout->header->len; i++)
@@ -77,22 +77,22 @@ scale_in_header (const AntTextLayout *layout)
 }
 
 static gboolean
-is_local (const AntTextLayout *layout, const AntTimeForm *form)
+is_local (const AntTableLayout *layout, const AntTimeForm *form)
 {
   static const char *const local_words[] = { "mst", "est", "pst", "cst", "cet", "local", "lst", "lt", NULL };
   for (guint i = 0; i < form->n_parts; i++)
-    if (ant_text_column_has_word (&layout->columns[form->columns[i]], local_words))
+    if (ant_table_column_has_word (&layout->columns[form->columns[i]], local_words))
       return TRUE;
   return FALSE;
 }
 
 static void
-set_place (const AntTextColumn *column, AntRecord *record)
+set_place (const AntTableColumn *column, AntRecord *record)
 {
   static const char *const bary[] = { "bjd", "bkjd", "btjd", "barycentric", NULL };
   static const char *const helio[] = { "hjd", "heliocentric", NULL };
-  const char *place = ant_text_column_has_word (column, bary)    ? "barycentre"
-                      : ant_text_column_has_word (column, helio) ? "heliocentre"
+  const char *place = ant_table_column_has_word (column, bary)    ? "barycentre"
+                      : ant_table_column_has_word (column, helio) ? "heliocentre"
                                                                  : NULL;
   if (!place)
     return;
@@ -108,7 +108,7 @@ is_calendar (AntStampStyle style)
 
 /* No word about the scale: calendars are kept in UTC, bare counts of days in none that could be told. */
 static void
-assume_scale (const AntTextLayout *layout, AntRecord *record, AntTimeForm *form)
+assume_scale (const AntTableLayout *layout, AntRecord *record, AntTimeForm *form)
 {
   const char *label = layout->columns[form->columns[0]].label;
   if (is_local (layout, form))
@@ -124,7 +124,7 @@ assume_scale (const AntTextLayout *layout, AntRecord *record, AntTimeForm *form)
 }
 
 gboolean
-ant_time_header_scale (const AntTextLayout *layout, const char *chosen, AntRecord *record, AntTimeForm *form, GError **error)
+ant_time_header_scale (const AntTableLayout *layout, const char *chosen, AntRecord *record, AntTimeForm *form, GError **error)
 {
   form->scale = ANT_SCALE_UNKNOWN;
   set_place (&layout->columns[form->columns[0]], record);

@@ -2,12 +2,12 @@
 #pragma once
 
 #include "data/record.h"
-#include "readers/text-layout.h"
+#include "readers/table-layout.h"
 #include "readers/time-form.h"
 
 /* "BJD-2454833" in the column's name or "time = JD - 2450000" in the header. */
-gboolean ant_time_header_jd_offset (const AntTextLayout *layout, const AntTextColumn *column, double *offset);
+gboolean ant_time_header_jd_offset (const AntTableLayout *layout, const AntTableColumn *column, double *offset);
 /* Set the form's scale: as chosen, as the names or the header say, or as is usual for the style, which is said. Also sets
  * the record's time.scale_assumed and time.place. FALSE if the chosen scale is none. */
-gboolean ant_time_header_scale (const AntTextLayout *layout, const char *chosen, AntRecord *record, AntTimeForm *form,
+gboolean ant_time_header_scale (const AntTableLayout *layout, const char *chosen, AntRecord *record, AntTimeForm *form,
                                 GError **error);

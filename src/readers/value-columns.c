@@ -19,41 +19,41 @@ is_time_part (const AntTimeForm *form, guint c)
 }
 
 static gboolean
-names_error (const AntTextColumn *column)
+names_error (const AntTableColumn *column)
 {
   static const char *const words[] = { "error", "errors", "err", "sigma", "unc", "uncertainty", "std", "stdev", "stddev", "sd", "e",
                                        "precision", "accuracy", "deviation", NULL };
-  return ant_text_column_has_word (column, words);
+  return ant_table_column_has_word (column, words);
 }
 
 static gboolean
-names_quality (const AntTextColumn *column)
+names_quality (const AntTableColumn *column)
 {
   static const char *const words[] = { "flag", "flags", "quality", "qual", "qualityflag", "qualityflags", "qc", "dq", "qa", "qf",
                                        "qflag", NULL };
   static const char *const other[] = { "provisional", NULL };
-  return ant_text_column_has_word (column, words) && !ant_text_column_has_word (column, other);
+  return ant_table_column_has_word (column, words) && !ant_table_column_has_word (column, other);
 }
 
 static gboolean
-mostly_numbers (const AntTextColumn *column)
+mostly_numbers (const AntTableColumn *column)
 {
   return 2 * column->n_text < column->n_cells;
 }
 
 static gboolean
-is_whole (const AntTextColumn *column)
+is_whole (const AntTableColumn *column)
 {
   return column->n_numbers > 0 && column->n_whole == column->n_numbers && mostly_numbers (column);
 }
 
 static gboolean
-chosen (const AntTextLayout *layout, const char *name, const char *path, int *column, GError **error)
+chosen (const AntTableLayout *layout, const char *name, const char *path, int *column, GError **error)
 {
-  *column = ant_text_layout_column (layout, name);
+  *column = ant_table_layout_column (layout, name);
   if (*column < 0)
     {
-      ant_text_layout_no_column (layout, name, error);
+      ant_table_layout_no_column (layout, name, error);
       g_prefix_error (error, "%s: ", path);
     }
   return *column >= 0;
@@ -61,18 +61,18 @@ chosen (const AntTextLayout *layout, const char *name, const char *path, int *co
 
 /* Sure enough to look no further: numbers that vary, none of them a likely fill. */
 static gboolean
-plainly_good (const AntTextColumn *column)
+plainly_good (const AntTableColumn *column)
 {
   return 2 * column->n_numbers > column->n_cells && column->n_up + column->n_down > 0 && column->least > 0.0
          && column->greatest < 9999.0;
 }
 
 static void
-candidates (const AntTextLayout *layout, const AntTimeForm *form, AntValueColumns *columns)
+candidates (const AntTableLayout *layout, const AntTimeForm *form, AntValueColumns *columns)
 {
   for (guint c = 0; c < layout->n_columns && columns->n_values < ANT_MOST_CANDIDATES; c++)
     {
-      const AntTextColumn *column = &layout->columns[c];
+      const AntTableColumn *column = &layout->columns[c];
       if (is_time_part (form, c) || (int) c == columns->error || (int) c == columns->quality || !mostly_numbers (column)
           || names_error (column) || names_quality (column) || ant_time_columns_alike (layout, c))
         continue;
@@ -84,7 +84,7 @@ candidates (const AntTextLayout *layout, const AntTimeForm *form, AntValueColumn
 
 /* A column of this kind: the first after the value that its name tells, else the first at all. */
 static int
-by_name (const AntTextLayout *layout, const AntTimeForm *form, gboolean (*names) (const AntTextColumn *), gboolean whole)
+by_name (const AntTableLayout *layout, const AntTimeForm *form, gboolean (*names) (const AntTableColumn *), gboolean whole)
 {
   for (guint c = 0; c < layout->n_columns; c++)
     if (names (&layout->columns[c]) && !is_time_part (form, c) && mostly_numbers (&layout->columns[c])
@@ -95,12 +95,12 @@ by_name (const AntTextLayout *layout, const AntTimeForm *form, gboolean (*names)
 
 /* The error that belongs to the value stands behind it: behind the first candidate that has values. */
 static int
-error_by_name (const AntTextLayout *layout, const AntTimeForm *form, const AntValueColumns *columns)
+error_by_name (const AntTableLayout *layout, const AntTimeForm *form, const AntValueColumns *columns)
 {
   guint value = columns->values[columns->n_values - 1];
   for (guint i = columns->n_values; i-- > 0;)
     {
-      const AntTextColumn *column = &layout->columns[columns->values[i]];
+      const AntTableColumn *column = &layout->columns[columns->values[i]];
       if (2 * column->n_numbers > column->n_cells && column->n_up + column->n_down > 0)
         value = columns->values[i];
     }
@@ -121,11 +121,11 @@ is_candidate (const AntValueColumns *columns, guint c)
 
 /* Housekeeping and other bands: all that is left but other ways to write the time. */
 static void
-find_further (const AntTextLayout *layout, const AntTimeForm *form, AntValueColumns *columns)
+find_further (const AntTableLayout *layout, const AntTimeForm *form, AntValueColumns *columns)
 {
   for (guint c = 0; c < layout->n_columns; c++)
     {
-      const AntTextColumn *column = &layout->columns[c];
+      const AntTableColumn *column = &layout->columns[c];
       if (is_time_part (form, c) || is_candidate (columns, c) || (int) c == columns->error || (int) c == columns->quality
           || !mostly_numbers (column) || column->n_missing == column->n_cells || ant_time_columns_alike (layout, c))
         continue;
@@ -137,7 +137,7 @@ find_further (const AntTextLayout *layout, const AntTimeForm *form, AntValueColu
 }
 
 gboolean
-ant_value_columns_find (const AntTextLayout *layout, const AntTimeForm *form, const AntReadingChoices *choices, const char *path,
+ant_value_columns_find (const AntTableLayout *layout, const AntTimeForm *form, const AntReadingChoices *choices, const char *path,
                         AntValueColumns *columns, GError **error)
 {
   static const AntReadingChoices none = { 0 };
@@ -163,9 +163,10 @@ ant_value_columns_find (const AntTextLayout *layout, const AntTimeForm *form, co
     candidates (layout, form, columns);
   if (columns->n_values == 0)
     {
+      g_autofree char *place = ant_table_layout_place (layout);
       g_set_error (error, ANT_ERROR, ANT_ERROR_READ,
-                   _("%s: line %u: found no column of numbers beside the time, expected one; name it with --column value=…"), path,
-                   layout->first_row);
+                   _("%s: %s: found no column of numbers beside the time, expected one; name it with --column value=…"), path,
+                   place);
       return FALSE;
     }
   if (!choices->error_column)
@@ -175,21 +176,27 @@ ant_value_columns_find (const AntTextLayout *layout, const AntTimeForm *form, co
 }
 
 char *
-ant_value_columns_unit (const AntTextLayout *layout, guint c)
+ant_value_columns_own_unit (const AntTableColumn *column)
 {
   static const char *const ppm[] = { "ppm", NULL };
   static const char *const relative[] = { "relative", "rel", "normalized", "normalised", "norm", NULL };
-  static const char *const spellings[] = { "W/m2", "W/m^2", "Wm-2", "W m-2", "W.m2", "W m^-2" };
-  const AntTextColumn *column = &layout->columns[c];
   if (column->unit)
     {
       const char *known = ant_text_known_unit (column->unit);
       return g_strdup (known ? known : column->unit);
     }
-  if (ant_text_column_has_word (column, ppm))
+  if (ant_table_column_has_word (column, ppm))
     return g_strdup ("ppm");
-  if (ant_text_column_has_word (column, relative))
-    return g_strdup ("relative");
+  return ant_table_column_has_word (column, relative) ? g_strdup ("relative") : NULL;
+}
+
+char *
+ant_value_columns_unit (const AntTableLayout *layout, guint c)
+{
+  static const char *const spellings[] = { "W/m2", "W/m^2", "Wm-2", "W m-2", "W.m2", "W m^-2" };
+  char *own = ant_value_columns_own_unit (&layout->columns[c]);
+  if (own)
+    return own;
   for (guint i = 0; i < layout->header->len; i++)
     for (gsize s = 0; s < G_N_ELEMENTS (spellings); s++)
       if (strcasestr (g_ptr_array_index (layout->header, i), "unit") && strstr (g_ptr_array_index (layout->header, i), spellings[s]))

@@ -3,7 +3,7 @@
 
 #include "data/record.h"
 #include "readers/reader.h"
-#include "readers/text-layout.h"
+#include "readers/table-layout.h"
 #include "readers/time-form.h"
 
 #define ANT_MOST_CANDIDATES 16
@@ -20,7 +20,9 @@ typedef struct
 
 /* By the user's choices ("none" for no error or quality), else by names (error, quality) and contents (value). FALSE with
  * one sentence. */
-gboolean ant_value_columns_find (const AntTextLayout *layout, const AntTimeForm *form, const AntReadingChoices *choices,
+gboolean ant_value_columns_find (const AntTableLayout *layout, const AntTimeForm *form, const AntReadingChoices *choices,
                                  const char *path, AntValueColumns *columns, GError **error);
-/* The unit of a value column: from its name or the header; NULL if unknown. Caller frees. */
-char *ant_value_columns_unit (const AntTextLayout *layout, guint column);
+/* The unit by the column's own words: one of ours for its many spellings. NULL if unknown. Caller frees. */
+char *ant_value_columns_own_unit (const AntTableColumn *column);
+/* The same, else as the header says for all values. */
+char *ant_value_columns_unit (const AntTableLayout *layout, guint column);

@@ -6,6 +6,8 @@
  *   convert FROM TO JD1 JD2               the instant in another scale, two numbers
  *   calendar SCALE Y M D H MIN S          its JD, two numbers
  *   number TEXT                           its value and how many characters it took; "none"
+ *   record PATH HDU VALUE                 scale and JD (two numbers) of time 0, then elapsed days and value of every row;
+ *                                         "-" for what the reader is to find
  *   gls WHITE STEP PARTS (KIND RMS TIME QUALITY)... FIRST LENGTH VALUES...
  *                                         box of unit depth at FIRST: energy, moment; ln likelihood of the values
  */
@@ -17,6 +19,7 @@
 #include "noise/spectrum.h"
 #include "noise/whitener.h"
 #include "readers/number-cursor.h"
+#include "readers/reader.h"
 #include "sky/time-scale.h"
 
 static char *cursor; /* in the line that is being answered */
@@ -162,6 +165,27 @@ answer_gls (void)
   free (box);
 }
 
+static void
+answer_record (void)
+{
+  AntReadingChoices choices = { 0 };
+  const char *path = next_word (), *hdu = next_word (), *value = next_word ();
+  if (strcmp (hdu, "-"))
+    choices.hdu = g_strdup (hdu);
+  if (strcmp (value, "-"))
+    choices.value_column = g_strdup (value);
+  AntRecord *record = ant_reader_open (path, &choices, NULL, NULL);
+  if (record)
+    printf ("%s %.17g %.17g", ant_time_scale_name (record->time.scale), record->time.origin_jd1, record->time.origin_jd2);
+  else
+    printf ("refused");
+  for (gsize i = 0; record && i < record->n_rows; i++)
+    printf (" %.17g %.17g", record->time_d[i], record->value[i]);
+  printf ("\n");
+  ant_record_unref (record);
+  ant_reading_choices_clear (&choices);
+}
+
 int
 main (void)
 {
@@ -170,7 +194,8 @@ main (void)
     const char *word;
     void (*answer) (void);
   } questions[] = { { "robust", answer_robust },     { "spectrum", answer_spectrum }, { "convert", answer_convert },
-                    { "calendar", answer_calendar }, { "number", answer_number },     { "gls", answer_gls } };
+                    { "calendar", answer_calendar }, { "number", answer_number },     { "gls", answer_gls },
+                    { "record", answer_record } };
   char *line = NULL;
   size_t room = 0;
   while (getline (&line, &room, stdin) > 0)

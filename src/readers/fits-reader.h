@@ -1,0 +1,9 @@
+/* fits-reader.h - tables of FITS files: the HDU found or asked for, its columns told, rows read, fills flagged. */
+#pragma once
+
+#include "readers/byte-source.h"
+#include "readers/reader.h"
+
+/* Everything but path and SHA-256, which the registry sets. */
+gboolean ant_fits_reader_read (AntByteSource *source, const AntReadingChoices *choices, GCancellable *cancellable,
+                               AntRecord *record, GError **error);
