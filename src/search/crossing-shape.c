@@ -21,25 +21,39 @@ place_nodes (AntCrossingShape *shape)
     shape->time_d[inner + i] = flat + (half - flat) * 0.5 * (1 - cos (ANT_PI * (double) i / (double) (outer - 1)));
 }
 
-void
-ant_crossing_shape_init (AntCrossingShape *shape, double duration_d, double edge_d, double impact, AntLimbDarkening ld)
+/* shape->edge_d is set. */
+static void
+tabulate (AntCrossingShape *shape, const AntCrossing *crossing, AntLimbDarkening ld)
 {
-  shape->duration_d = duration_d;
-  shape->edge_d = edge_d;
-  shape->impact = impact;
-  AntCrossing crossing = { .impact = impact, .t14_d = duration_d,
-                           .radius_ratio = ant_crossing_radius_for_ingress (impact, duration_d, edge_d) };
+  shape->duration_d = crossing->t14_d;
+  shape->impact = crossing->impact;
   place_nodes (shape);
-  double greatest = ant_crossing_loss (&crossing, ld, 0);
+  double greatest = ant_crossing_loss (crossing, ld, 0);
   for (size_t i = 0; i < ANT_SHAPE_NODES; i++)
-    shape->loss[i] = ant_crossing_loss (&crossing, ld, shape->time_d[i]) / greatest;
+    shape->loss[i] = ant_crossing_loss (crossing, ld, shape->time_d[i]) / greatest;
   shape->total_d[0] = 0;
   for (size_t i = 1; i < ANT_SHAPE_NODES; i++)
     {
       double width = shape->time_d[i] - shape->time_d[i - 1];
-      double middle = ant_crossing_loss (&crossing, ld, 0.5 * (shape->time_d[i] + shape->time_d[i - 1])) / greatest;
+      double middle = ant_crossing_loss (crossing, ld, 0.5 * (shape->time_d[i] + shape->time_d[i - 1])) / greatest;
       shape->total_d[i] = shape->total_d[i - 1] + width / 6 * (shape->loss[i - 1] + 4 * middle + shape->loss[i]);
     }
+}
+
+void
+ant_crossing_shape_init (AntCrossingShape *shape, double duration_d, double edge_d, double impact, AntLimbDarkening ld)
+{
+  AntCrossing crossing = { .impact = impact, .t14_d = duration_d,
+                           .radius_ratio = ant_crossing_radius_for_ingress (impact, duration_d, edge_d) };
+  shape->edge_d = edge_d;
+  tabulate (shape, &crossing, ld);
+}
+
+void
+ant_crossing_shape_of (AntCrossingShape *shape, const AntCrossing *crossing, AntLimbDarkening ld)
+{
+  shape->edge_d = ant_crossing_ingress_d (crossing);
+  tabulate (shape, crossing, ld);
 }
 
 /* Integral of the loss from the middle to t >= 0: cubic through totals and losses at the two nodes around t. */

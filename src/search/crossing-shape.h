@@ -22,6 +22,8 @@ typedef struct
 /* 0 < edge_d <= duration_d/2, 0 <= impact < 1. */
 void ant_crossing_shape_init (AntCrossingShape *shape, double duration_d, double edge_d, double impact,
                               AntLimbDarkening ld);
+/* The same of a given crossing, 0 <= impact < 1 + radius ratio: the edge follows. */
+void ant_crossing_shape_of (AntCrossingShape *shape, const AntCrossing *crossing, AntLimbDarkening ld);
 /* Mean loss over an exposure of exposure_d (> 0) centred `time_d` from the middle. */
 double ant_crossing_shape_mean (const AntCrossingShape *shape, double time_d, double exposure_d);
 /* Mean of the loss over I..IV. */

@@ -1,0 +1,301 @@
+/* evidence-integral.c - climb, Laplace's Gaussian, and adaptive importance sampling from it. */
+#include "verdict/evidence-integral.h"
+
+#include <math.h>
+#include <string.h>
+#include "core/dense.h"
+#include "core/random.h"
+#include "core/units.h"
+
+#define N ANT_INTEGRAL_DIMENSIONS
+#define BATCH ANT_INTEGRAL_BATCH
+#define CLIMB_PASSES 60
+#define ADAPT_ROUNDS 3
+#define ADAPT_SAMPLES 96
+#define FINAL_SAMPLES 256
+#define LEAST_EFFECTIVE 20.0 /* fewer samples do not tell a covariance: weights are tempered */
+#define WIDEN 1.25           /* the proposal over the Gaussian it is made from */
+
+typedef struct
+{
+  size_t n;
+  AntLogFunction f;
+  void *data;
+  AntRandom random;
+  AntIntegral *result;
+  double centre[N], factor[N * N]; /* of the proposal: a Student t with 4 degrees of freedom, scale L L' */
+  double point[FINAL_SAMPLES * N], value[FINAL_SAMPLES], log_weight[FINAL_SAMPLES];
+} Integral;
+
+/* f at up to BATCH points, 0 outside the cube; the highest is kept. */
+static void
+evaluate (Integral *it, size_t count, const double *u, double *value)
+{
+  it->f (it->data, count, u, value);
+  for (size_t i = 0; i < count; i++)
+    {
+      for (size_t k = 0; k < it->n; k++)
+        if (!(u[i * it->n + k] > 0 && u[i * it->n + k] < 1))
+          value[i] = -HUGE_VAL;
+      if (!(value[i] > -HUGE_VAL))
+        value[i] = -HUGE_VAL; /* NaN too */
+      if (value[i] > it->result->best_value)
+        {
+          it->result->best_value = value[i];
+          memcpy (it->result->best, u + i * it->n, it->n * sizeof *u);
+        }
+    }
+}
+
+static void
+evaluate_all (Integral *it, size_t count, const double *u, double *value)
+{
+  for (size_t i = 0; i < count; i += BATCH)
+    evaluate (it, count - i < BATCH ? count - i : BATCH, u + i * it->n, value + i);
+}
+
+static void
+climb (Integral *it)
+{
+  double h[N], u[BATCH * N], value[BATCH];
+  size_t n = it->n;
+  for (size_t k = 0; k < n; k++)
+    h[k] = 0.05;
+  for (int pass = 0; pass < CLIMB_PASSES; pass++)
+    {
+      double from = it->result->best_value, at[N], widest = 0;
+      memcpy (at, it->result->best, sizeof at);
+      for (size_t k = 0; k < n; k++)
+        for (size_t side = 0; side < 2; side++)
+          {
+            double *trial = u + (2 * k + side) * n;
+            memcpy (trial, at, n * sizeof *trial);
+            trial[k] += side ? h[k] : -h[k];
+          }
+      evaluate (it, 2 * n, u, value);
+      for (size_t k = 0; k < n; k++)
+        {
+          double gain = fmax (value[2 * k], value[2 * k + 1]) - from;
+          h[k] *= gain > 0 ? 1.3 : 0.5;
+          widest = fmax (widest, gain > 0.01 ? 1 : from - fmin (value[2 * k], value[2 * k + 1]));
+        }
+      if (it->result->best_value <= from && widest < 0.05)
+        return;
+    }
+}
+
+/* Steps along each axis over which ln f falls by about a half, as the mean of both sides, and these falls. */
+static void
+axis_steps (Integral *it, const double *at, double best, double *step, double *fall)
+{
+  double u[BATCH * N], value[BATCH];
+  int settled[N] = { 0 };
+  for (size_t k = 0; k < it->n; k++)
+    step[k] = 0.01;
+  for (int round = 0; round < 20; round++)
+    {
+      int left = 0;
+      for (size_t k = 0; k < it->n; k++)
+        for (size_t side = 0; side < 2; side++)
+          {
+            double *trial = u + (2 * k + side) * it->n;
+            memcpy (trial, at, it->n * sizeof *trial);
+            trial[k] = fmax (1e-9, fmin (1 - 1e-9, trial[k] + (side ? step[k] : -step[k])));
+          }
+      evaluate (it, 2 * it->n, u, value);
+      for (size_t k = 0; k < it->n; k++)
+        {
+          fall[k] = best - 0.5 * (value[2 * k] + value[2 * k + 1]);
+          settled[k] = settled[k] || (fall[k] > 0.2 && fall[k] < 1) || (fall[k] <= 0.2 && step[k] > 0.3);
+          if (settled[k])
+            continue;
+          left = 1;
+          step[k] *= fall[k] >= 1 ? fmax (0.15, sqrt (0.5 / fall[k])) : 2;
+        }
+      if (!left)
+        return;
+    }
+}
+
+/* Laplace's covariance from the curvature; the axes alone where the whole is no Gaussian. */
+static void
+laplace (Integral *it, double *covariance)
+{
+  size_t n = it->n, pairs = 0;
+  double at[N], best = it->result->best_value, step[N], fall[N], curvature[N * N] = { 0 };
+  double u[12 * N], value[12];
+  memcpy (at, it->result->best, sizeof at);
+  axis_steps (it, at, best, step, fall);
+  for (size_t i = 0; i < n; i++)
+    for (size_t j = 0; j < i; j++)
+      for (size_t side = 0; side < 2; side++, pairs++)
+        {
+          memcpy (u + pairs * n, at, n * sizeof *u);
+          u[pairs * n + i] += side ? step[i] : -step[i];
+          u[pairs * n + j] += side ? step[j] : -step[j];
+        }
+  evaluate_all (it, pairs, u, value);
+  pairs = 0;
+  for (size_t i = 0; i < n; i++)
+    {
+      curvature[i * n + i] = 2 * fmax (fall[i], 1e-3);
+      for (size_t j = 0; j < i; j++, pairs += 2)
+        {
+          double both = best - 0.5 * (value[pairs] + value[pairs + 1]);
+          curvature[i * n + j] = curvature[j * n + i] = isfinite (both) ? both - fall[i] - fall[j] : 0;
+        }
+    }
+  double factor[N * N], diagonal[N];
+  for (size_t i = 0; i < n; i++)
+    diagonal[i] = curvature[i * n + i];
+  memcpy (factor, curvature, sizeof factor);
+  it->result->log_laplace = NAN;
+  memset (covariance, 0, N * N * sizeof *covariance);
+  if (!ant_cholesky (n, factor))
+    {
+      ant_cholesky_inverse (n, factor, covariance);
+      it->result->log_laplace = best + 0.5 * ((double) n * log (ANT_TAU) - ant_cholesky_log_det (n, factor));
+    }
+  else
+    for (size_t i = 0; i < n; i++)
+      covariance[i * n + i] = 1 / diagonal[i];
+  for (size_t i = 0; i < n; i++)
+    {
+      it->result->log_laplace += log (step[i]);
+      for (size_t j = 0; j < n; j++)
+        covariance[i * n + j] *= step[i] * step[j];
+    }
+}
+
+/* Take a Gaussian as the next proposal. */
+static void
+propose (Integral *it, const double *centre, const double *covariance)
+{
+  size_t n = it->n;
+  memcpy (it->centre, centre, n * sizeof *centre);
+  for (size_t i = 0; i < n * n; i++)
+    it->factor[i] = covariance[i] * WIDEN * WIDEN;
+  for (size_t i = 0; i < n; i++)
+    it->factor[i * n + i] += 1e-18;
+  if (ant_cholesky (n, it->factor))
+    for (size_t i = 0; i < n; i++)
+      for (size_t j = 0; j < n; j++)
+        it->factor[i * n + j] = i == j ? WIDEN * sqrt (fmax (covariance[i * n + i], 1e-18)) : 0;
+}
+
+/* Draw from the proposal, evaluate, and set ln weights = ln f - ln proposal. */
+static void
+sample (Integral *it, size_t count)
+{
+  size_t n = it->n;
+  double constant = lgamma (0.5 * (4 + (double) n)) - lgamma (2) - 0.5 * (double) n * log (4 * ANT_PI);
+  for (size_t i = 0; i < n; i++)
+    constant -= log (it->factor[i * n + i]);
+  for (size_t s = 0; s < count; s++)
+    {
+      double normal[N], squares = 0, *u = it->point + s * n;
+      double chi2 = -2 * log ((1 - ant_random_uniform (&it->random)) * (1 - ant_random_uniform (&it->random)));
+      for (size_t i = 0; i < n; i++)
+        {
+          normal[i] = ant_random_normal (&it->random) * sqrt (4 / chi2);
+          squares += normal[i] * normal[i];
+        }
+      for (size_t i = 0; i < n; i++)
+        {
+          u[i] = it->centre[i];
+          for (size_t j = 0; j <= i; j++)
+            u[i] += it->factor[i * n + j] * normal[j];
+        }
+      it->log_weight[s] = -constant + 0.5 * (4 + (double) n) * log1p (squares / 4);
+    }
+  evaluate_all (it, count, it->point, it->value);
+  for (size_t s = 0; s < count; s++)
+    it->log_weight[s] += it->value[s];
+}
+
+/* Weights exp (power (w - highest)); their sum, and the effective number of samples. */
+static double
+effective (const Integral *it, size_t count, double power, double highest, double *sum)
+{
+  double squares = 0;
+  *sum = 0;
+  for (size_t s = 0; s < count; s++)
+    {
+      double weight = exp (power * (it->log_weight[s] - highest));
+      *sum += weight;
+      squares += weight * weight;
+    }
+  return squares > 0 ? *sum * *sum / squares : 0;
+}
+
+/* Mean and covariance of the weighted samples. */
+static void
+moments (const Integral *it, size_t count, double power, double highest, double sum, double *mean, double *covariance)
+{
+  size_t n = it->n;
+  memset (mean, 0, N * sizeof *mean);
+  memset (covariance, 0, N * N * sizeof *covariance);
+  for (int pass = 0; pass < 2; pass++)
+    for (size_t s = 0; s < count; s++)
+      {
+        double weight = exp (power * (it->log_weight[s] - highest)) / sum;
+        const double *u = it->point + s * n;
+        if (!(weight > 0)) /* outside the cube */
+          continue;
+        for (size_t i = 0; i < n; i++)
+          if (pass == 0)
+            mean[i] += weight * u[i];
+          else
+            for (size_t j = 0; j < n; j++)
+              covariance[i * n + j] += weight * (u[i] - mean[i]) * (u[j] - mean[j]);
+      }
+}
+
+static double
+highest_weight (const Integral *it, size_t count)
+{
+  double highest = -HUGE_VAL;
+  for (size_t s = 0; s < count; s++)
+    highest = fmax (highest, it->log_weight[s]);
+  return highest;
+}
+
+/* Learn the proposal from what it showed; too uneven weights are tempered until enough samples count. */
+static void
+adapt (Integral *it)
+{
+  double highest = highest_weight (it, ADAPT_SAMPLES), power = 1, sum, mean[N], covariance[N * N];
+  if (!isfinite (highest))
+    return;
+  while (effective (it, ADAPT_SAMPLES, power, highest, &sum) < LEAST_EFFECTIVE && power > 1e-3)
+    power *= 0.7;
+  moments (it, ADAPT_SAMPLES, power, highest, sum, mean, covariance);
+  propose (it, mean, covariance);
+}
+
+AntStatus
+ant_evidence_integral (size_t n, AntLogFunction f, void *data, size_t n_starts, const double *start, AntIntegral *result)
+{
+  Integral it = { .n = n, .f = f, .data = data, .result = result };
+  double covariance[N * N], value[BATCH], sum;
+  *result = (AntIntegral){ .n = n, .best_value = -HUGE_VAL };
+  ant_random_seed (&it.random, 9, n);
+  for (size_t i = 0; i < n_starts; i += BATCH)
+    evaluate (&it, n_starts - i < BATCH ? n_starts - i : BATCH, start + i * n, value);
+  if (!(result->best_value > -HUGE_VAL))
+    return ANT_NO_DATA;
+  climb (&it);
+  laplace (&it, covariance);
+  propose (&it, result->best, covariance);
+  for (int round = 0; round < ADAPT_ROUNDS; round++)
+    {
+      sample (&it, ADAPT_SAMPLES);
+      adapt (&it);
+    }
+  sample (&it, FINAL_SAMPLES);
+  double highest = highest_weight (&it, FINAL_SAMPLES);
+  result->effective = effective (&it, FINAL_SAMPLES, 1, highest, &sum);
+  result->log_integral = highest + log (sum / FINAL_SAMPLES);
+  moments (&it, FINAL_SAMPLES, 1, highest, sum, result->mean, result->covariance);
+  return isfinite (result->log_integral) ? ANT_OK : ANT_NO_DATA;
+}

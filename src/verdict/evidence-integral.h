@@ -1,0 +1,31 @@
+/* evidence-integral.h - the integral of a likelihood over a unit cube: Laplace's method, its Gaussian put right.
+ *
+ * From the best of some starting points a pattern search (Hooke & Jeeves 1961, J. ACM 8, 212) climbs to the mode; the curvature there gives
+ * Laplace's Gaussian (Tierney & Kadane 1986, J. Am. Stat. Assoc. 81, 82), widened and given heavy tails it is the proposal
+ * of an importance sampling that adapts (Cappe, Guillin, Marin & Robert 2004, J. Comput. Graph. Stat. 13, 907), since an
+ * onset inside a gap or a sharp edge has no Gaussian. Random numbers with one fixed seed: same function, same digits. */
+#pragma once
+
+#include <stddef.h>
+#include "core/status.h"
+
+#define ANT_INTEGRAL_DIMENSIONS 4
+#define ANT_INTEGRAL_BATCH 8
+
+/* ln f at n_points <= ANT_INTEGRAL_BATCH points of the cube, u [n_points][n]; -HUGE_VAL where f is 0. */
+typedef void (*AntLogFunction) (void *data, size_t n_points, const double *u, double *value);
+
+typedef struct
+{
+  size_t n;
+  double best[ANT_INTEGRAL_DIMENSIONS], best_value; /* the highest point met */
+  double mean[ANT_INTEGRAL_DIMENSIONS];             /* under f as a density */
+  double covariance[ANT_INTEGRAL_DIMENSIONS * ANT_INTEGRAL_DIMENSIONS];
+  double log_integral;
+  double log_laplace; /* what the Gaussian alone gives; NaN if the curvature is none */
+  double effective;   /* number of independent samples that the integral rests on */
+} AntIntegral;
+
+/* start [n_starts][n]; 1 <= n <= 4. ANT_NO_DATA if f is 0 at all starts. */
+AntStatus ant_evidence_integral (size_t n, AntLogFunction f, void *data, size_t n_starts, const double *start,
+                                 AntIntegral *result);
