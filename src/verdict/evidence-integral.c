@@ -2,6 +2,7 @@
 #include "verdict/evidence-integral.h"
 
 #include <math.h>
+#include <stdint.h>
 #include <string.h>
 #include "core/dense.h"
 #include "core/random.h"
@@ -10,6 +11,9 @@
 #define N ANT_INTEGRAL_DIMENSIONS
 #define BATCH ANT_INTEGRAL_BATCH
 #define CLIMB_PASSES 60
+#define CLIMBS 2
+#define ATTEMPTS 3
+#define HIGHER 1.0         /* in ln f: a point this far above the hill that was sampled is another hill */
 #define ADAPT_ROUNDS 3
 #define ADAPT_SAMPLES 96
 #define FINAL_SAMPLES 256
@@ -54,17 +58,19 @@ evaluate_all (Integral *it, size_t count, const double *u, double *value)
     evaluate (it, count - i < BATCH ? count - i : BATCH, u + i * it->n, value + i);
 }
 
-static void
-climb (Integral *it)
+/* Pattern search from a point; returns the highest value met. */
+static double
+climb (Integral *it, const double *from, double value_there, double *at)
 {
-  double h[N], u[BATCH * N], value[BATCH];
+  double h[N], u[BATCH * N] = { 0 }, value[BATCH], best = value_there;
   size_t n = it->n;
+  memcpy (at, from, n * sizeof *at);
   for (size_t k = 0; k < n; k++)
     h[k] = 0.05;
   for (int pass = 0; pass < CLIMB_PASSES; pass++)
     {
-      double from = it->result->best_value, at[N], widest = 0;
-      memcpy (at, it->result->best, sizeof at);
+      double before = best, widest = 0;
+      size_t winner = SIZE_MAX;
       for (size_t k = 0; k < n; k++)
         for (size_t side = 0; side < 2; side++)
           {
@@ -73,28 +79,67 @@ climb (Integral *it)
             trial[k] += side ? h[k] : -h[k];
           }
       evaluate (it, 2 * n, u, value);
+      for (size_t i = 0; i < 2 * n; i++)
+        if (value[i] > best)
+          {
+            best = value[i];
+            winner = i;
+          }
       for (size_t k = 0; k < n; k++)
         {
-          double gain = fmax (value[2 * k], value[2 * k + 1]) - from;
-          h[k] *= gain > 0 ? 1.3 : 0.5;
-          widest = fmax (widest, gain > 0.01 ? 1 : from - fmin (value[2 * k], value[2 * k + 1]));
+          widest = fmax (widest, before - fmin (value[2 * k], value[2 * k + 1]));
+          h[k] *= fmax (value[2 * k], value[2 * k + 1]) > before ? 1.3 : 0.5;
         }
-      if (it->result->best_value <= from && widest < 0.05)
-        return;
+      if (winner != SIZE_MAX)
+        memcpy (at, u + winner * n, n * sizeof *at);
+      else if (widest < 0.05)
+        break;
     }
+  return best;
+}
+
+/* Climb from the best starts, which may lie on different hills; the highest point met is the result's best. */
+static void
+climb_from_starts (Integral *it, size_t n_starts, const double *start, double *value)
+{
+  double at[N];
+  for (int climbs = 0; climbs < CLIMBS; climbs++)
+    {
+      size_t best = 0;
+      for (size_t i = 1; i < n_starts; i++)
+        best = value[i] > value[best] ? i : best;
+      if (!(value[best] > -HUGE_VAL))
+        return;
+      climb (it, start + best * it->n, value[best], at);
+      value[best] = -HUGE_VAL;
+    }
+}
+
+/* One more guess at a step whose fall is between a fifth and one: doubled or shrunk, or halfway between a step that was too
+ * short and one that was too long, for a wall has no other. Returns whether it is good. */
+static int
+adjust (double fall, double *step, double bracket[2])
+{
+  if ((fall > 0.2 && fall < 1) || (fall <= 0.2 && *step > 0.3))
+    return 1;
+  bracket[fall >= 1] = *step;
+  if (bracket[0] > 0 && bracket[1] > 0)
+    *step = sqrt (bracket[0] * bracket[1]);
+  else
+    *step *= fall >= 1 ? fmax (0.15, sqrt (0.5 / fall)) : 2;
+  return 0;
 }
 
 /* Steps along each axis over which ln f falls by about a half, as the mean of both sides, and these falls. */
 static void
 axis_steps (Integral *it, const double *at, double best, double *step, double *fall)
 {
-  double u[BATCH * N], value[BATCH];
-  int settled[N] = { 0 };
+  double u[BATCH * N] = { 0 }, value[BATCH], bracket[N][2] = { { 0 } };
   for (size_t k = 0; k < it->n; k++)
     step[k] = 0.01;
-  for (int round = 0; round < 20; round++)
+  for (int round = 0, left = 1; round < 24 && left; round++)
     {
-      int left = 0;
+      double tried[N];
       for (size_t k = 0; k < it->n; k++)
         for (size_t side = 0; side < 2; side++)
           {
@@ -103,18 +148,19 @@ axis_steps (Integral *it, const double *at, double best, double *step, double *f
             trial[k] = fmax (1e-9, fmin (1 - 1e-9, trial[k] + (side ? step[k] : -step[k])));
           }
       evaluate (it, 2 * it->n, u, value);
+      left = 0;
       for (size_t k = 0; k < it->n; k++)
         {
           fall[k] = best - 0.5 * (value[2 * k] + value[2 * k + 1]);
-          settled[k] = settled[k] || (fall[k] > 0.2 && fall[k] < 1) || (fall[k] <= 0.2 && step[k] > 0.3);
-          if (settled[k])
-            continue;
-          left = 1;
-          step[k] *= fall[k] >= 1 ? fmax (0.15, sqrt (0.5 / fall[k])) : 2;
+          tried[k] = step[k];
+          if (!adjust (fall[k], &step[k], bracket[k]))
+            left = 1;
         }
-      if (!left)
-        return;
+      if (round == 23 || !left)
+        memcpy (step, tried, it->n * sizeof *step);
     }
+  for (size_t k = 0; k < it->n; k++)
+    fall[k] = fmin (fall[k], 2); /* a wall: its distance counts, not its height */
 }
 
 /* Laplace's covariance from the curvature; the axes alone where the whole is no Gaussian. */
@@ -273,25 +319,43 @@ adapt (Integral *it)
   propose (it, mean, covariance);
 }
 
+/* The proposal about the highest point met, adapted; again from the start where a higher hill shows up meanwhile. */
+static void
+settle (Integral *it)
+{
+  double covariance[N * N], at[N];
+  for (int attempt = 0; attempt < ATTEMPTS; attempt++)
+    {
+      double best = it->result->best_value;
+      memcpy (at, it->result->best, sizeof at);
+      laplace (it, covariance);
+      propose (it, at, covariance);
+      for (int round = 0; round < ADAPT_ROUNDS; round++)
+        {
+          sample (it, ADAPT_SAMPLES);
+          adapt (it);
+        }
+      if (it->result->best_value < best + HIGHER)
+        return;
+      memcpy (at, it->result->best, sizeof at);
+      climb (it, at, it->result->best_value, at);
+    }
+}
+
 AntStatus
 ant_evidence_integral (size_t n, AntLogFunction f, void *data, size_t n_starts, const double *start, AntIntegral *result)
 {
   Integral it = { .n = n, .f = f, .data = data, .result = result };
-  double covariance[N * N], value[BATCH], sum;
+  double sum;
   *result = (AntIntegral){ .n = n, .best_value = -HUGE_VAL };
+  if (n_starts > ANT_INTEGRAL_STARTS)
+    return ANT_BAD_ARGUMENT;
   ant_random_seed (&it.random, 9, n);
-  for (size_t i = 0; i < n_starts; i += BATCH)
-    evaluate (&it, n_starts - i < BATCH ? n_starts - i : BATCH, start + i * n, value);
+  evaluate_all (&it, n_starts, start, it.value);
   if (!(result->best_value > -HUGE_VAL))
     return ANT_NO_DATA;
-  climb (&it);
-  laplace (&it, covariance);
-  propose (&it, result->best, covariance);
-  for (int round = 0; round < ADAPT_ROUNDS; round++)
-    {
-      sample (&it, ADAPT_SAMPLES);
-      adapt (&it);
-    }
+  climb_from_starts (&it, n_starts, start, it.value);
+  settle (&it);
   sample (&it, FINAL_SAMPLES);
   double highest = highest_weight (&it, FINAL_SAMPLES);
   result->effective = effective (&it, FINAL_SAMPLES, 1, highest, &sum);

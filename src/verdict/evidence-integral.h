@@ -11,6 +11,7 @@
 
 #define ANT_INTEGRAL_DIMENSIONS 4
 #define ANT_INTEGRAL_BATCH 8
+#define ANT_INTEGRAL_STARTS 256
 
 /* ln f at n_points <= ANT_INTEGRAL_BATCH points of the cube, u [n_points][n]; -HUGE_VAL where f is 0. */
 typedef void (*AntLogFunction) (void *data, size_t n_points, const double *u, double *value);
@@ -26,6 +27,6 @@ typedef struct
   double effective;   /* number of independent samples that the integral rests on */
 } AntIntegral;
 
-/* start [n_starts][n]; 1 <= n <= 4. ANT_NO_DATA if f is 0 at all starts. */
+/* start [n_starts][n], at most ANT_INTEGRAL_STARTS; 1 <= n <= 4. ANT_NO_DATA if f is 0 at all starts. */
 AntStatus ant_evidence_integral (size_t n, AntLogFunction f, void *data, size_t n_starts, const double *start,
                                  AntIntegral *result);

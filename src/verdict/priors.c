@@ -17,7 +17,7 @@ static const AntRivalPrior table[ANT_N_RIVALS] = {
   [ANT_RIVAL_SPIKE] = { "spike", 1, { { MINUTE / 6, 20 * MINUTE, 1 } }, 0,
                         { ANT_CAUSE_INSTRUMENT, ANT_CAUSE_INSTRUMENT }, { 0.2, 0.2 } },
   [ANT_RIVAL_SPOT] = { "spot", 1, { { 0.25, 8, 1 } }, 0, { ANT_CAUSE_SPOT, ANT_CAUSE_SPOT }, { 1, 0 } },
-  [ANT_RIVAL_ECLIPSE] = { "eclipse", 1, { { 0.2 * HOUR, 18 * HOUR, 1 } }, 0,
+  [ANT_RIVAL_ECLIPSE] = { "eclipse", 1, { { 0.3 * HOUR, 8 * HOUR, 1 } }, 0,
                           { ANT_CAUSE_ECLIPSE, ANT_CAUSE_ECLIPSE }, { 1, 0 } },
   [ANT_RIVAL_FLARE] = { "flare", 2, { { 0.5 * MINUTE, 30 * MINUTE, 1 }, { 3 * MINUTE, 12 * HOUR, 1 } }, 0,
                         { ANT_CAUSE_FLARE, ANT_CAUSE_FLARE }, { 0, 1 } },

@@ -5,14 +5,22 @@
 #include "core/units.h"
 
 #define MEMORY 14.0       /* an exponential is over after this many times: 1e-6 is left */
-#define HALF_DEPTH 0.2805 /* full width at half depth of mu (3 mu + 2)/5 over the rotation period */
+#define HALF_DEPTH 0.279567 /* full width at half depth of mu (3 mu + 2)/5 over the rotation period */
 #define MOON 1.0          /* radius ratio of an eclipsing disc: the Moon from the Earth, 0.94 to 1.07 */
 
-/* Integral up to t of 1 - exp (-t/time_d)-like decay: of exp (-t/time_d) from 0. */
+/* Integral from 0 to t of an exponential decay. */
 static double
 decay (double time_d, double t)
 {
   return t > 0 ? -time_d * expm1 (-t / time_d) : 0;
+}
+
+/* Of a straight rise from 0 to 1. */
+static double
+ramp (double length_d, double t)
+{
+  t = fmax (0, fmin (t, length_d));
+  return 0.5 * t * t / length_d;
 }
 
 /* Of a unit box with straight edges, from its start. */
@@ -47,7 +55,7 @@ integral (const AntRivalCurve *curve, double t)
       return decay (p[1], t);
     case ANT_RIVAL_THERMAL:
     case ANT_RIVAL_FLARE:
-      return (decay (p[2], t) - decay (p[1], t)) / curve->greatest;
+      return ramp (p[1], t) + decay (p[2], t - p[1]);
     case ANT_RIVAL_SPIKE:
       return fmax (-0.5 * p[1], fmin (t, 0.5 * p[1]));
     case ANT_RIVAL_SPOT:
@@ -79,17 +87,6 @@ stretch (const AntCrossingShape *unit, double t14_d, AntCrossingShape *shape)
     }
 }
 
-/* Fall and return may not take the same time: their difference would vanish. */
-static void
-part_times (AntRivalCurve *curve)
-{
-  double *p = curve->parameter;
-  if (fabs (log (p[2] / p[1])) < 1e-3)
-    p[2] = p[1] * exp (1e-3);
-  double peak_d = log (p[2] / p[1]) * p[1] * p[2] / (p[2] - p[1]);
-  curve->greatest = exp (-peak_d / p[2]) - exp (-peak_d / p[1]);
-}
-
 void
 ant_rival_curve_init (AntRivalCurve *curve, AntRivalKind kind, const double parameter[ANT_RIVAL_PARAMETERS],
                       AntLimbDarkening ld, const AntCrossingShape *eclipse)
@@ -97,7 +94,6 @@ ant_rival_curve_init (AntRivalCurve *curve, AntRivalKind kind, const double para
   double *p = curve->parameter, before = 0, after = HUGE_VAL;
   curve->kind = kind;
   curve->tied_depth_ppm = NAN;
-  curve->greatest = 1;
   for (int i = 0; i < ANT_RIVAL_PARAMETERS; i++)
     p[i] = parameter[i];
   if (kind == ANT_RIVAL_CROSSING)
@@ -107,10 +103,7 @@ ant_rival_curve_init (AntRivalCurve *curve, AntRivalKind kind, const double para
   else if (kind == ANT_RIVAL_RECOVERY)
     after = MEMORY * p[1];
   else if (kind == ANT_RIVAL_THERMAL || kind == ANT_RIVAL_FLARE)
-    {
-      part_times (curve);
-      after = MEMORY * fmax (p[1], p[2]);
-    }
+    after = p[1] + MEMORY * p[2];
   if (kind == ANT_RIVAL_SPOT)
     before = after = 0.25 * p[1] / HALF_DEPTH;
   else if (kind != ANT_RIVAL_STEP && kind != ANT_RIVAL_RECOVERY && kind != ANT_RIVAL_THERMAL && kind != ANT_RIVAL_FLARE)

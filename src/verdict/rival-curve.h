@@ -12,11 +12,11 @@ typedef enum
   ANT_RIVAL_TRAPEZOID, /* middle, length, edge over length: flat between straight edges */
   ANT_RIVAL_STEP,      /* onset: the level changes and stays */
   ANT_RIVAL_RECOVERY,  /* onset, time: a step that returns exponentially */
-  ANT_RIVAL_THERMAL,   /* onset, time of fall, time of return: a gradual fall that returns exponentially */
+  ANT_RIVAL_THERMAL,   /* onset, length of the fall, time of return: a straight fall that returns exponentially */
   ANT_RIVAL_SPIKE,     /* middle, length: a short box */
   ANT_RIVAL_SPOT,      /* middle, width at half depth: a spot carried over the disc by rotation (Hudson et al. 1982) */
   ANT_RIVAL_ECLIPSE,   /* middle, T14: a disc as large as the Sun covers part of it */
-  ANT_RIVAL_FLARE,     /* onset, time of rise, time of decay: the shape of a gradual fall, bright and quick */
+  ANT_RIVAL_FLARE,     /* onset, length of the rise, time of decay: the same, bright and quick */
   ANT_N_RIVALS,
 } AntRivalKind;
 
@@ -28,7 +28,6 @@ typedef struct
   AntRivalKind kind;
   double parameter[ANT_RIVAL_PARAMETERS];
   double from_d, to_d;   /* nonzero between these; to_d is HUGE_VAL for a step */
-  double greatest;       /* of the unnormalised fall and return */
   double tied_depth_ppm; /* of a crossing: the depth that its radius ratio gives; NaN where the depth is free */
   AntCrossingShape table; /* of crossing and eclipse */
 } AntRivalCurve;

@@ -203,7 +203,8 @@ AntStatus
 ant_rival_fit (const AntRivalBench *bench, const AntDip *dip, AntRivalKind kind, AntRivalFit *fit)
 {
   const AntRivalPrior *prior = ant_rival_prior (kind);
-  double reach_d = 1.5 * dip->duration_d + (kind == ANT_RIVAL_SPOT ? 3 : 0.2);
+  /* A spot that makes a dip of hours is at its darkest in it: one that passes days away explains another part of the record. */
+  double reach_d = kind == ANT_RIVAL_SPOT ? 0.6 * dip->duration_d + 0.3 : 1.5 * dip->duration_d + 0.2;
   Cube cube = { .bench = bench, .prior = prior, .kind = kind, .epoch_low_d = dip->mid_d - reach_d,
                 .epoch_high_d = dip->mid_d + reach_d };
   double parameter[ANT_RIVAL_STARTS][ANT_RIVAL_PARAMETERS], start[ANT_RIVAL_STARTS * ANT_RIVAL_PARAMETERS];
