@@ -1,9 +1,11 @@
-/* desk-private.h - inside of the desk, shared by its three files. */
+/* desk-private.h - inside of the desk, shared by its files. */
 #pragma once
 
+#include "core/units.h"
 #include "gui/desk.h"
 
 #define ANT_MOST_VIEWS 64
+#define ANT_USUAL_SNR_D (6 / ANT_HOURS_PER_DAY) /* dips whose SNR is followed until one is selected */
 
 struct _AntDesk
 {
@@ -39,6 +41,14 @@ struct _AntDesk
   AntSpan span;          /* NaN: none */
   gboolean measuring;
 
+  /* The dip SNR of one duration */
+  gboolean snr_shown;
+  double snr_choice_d;      /* 0: the selected dip's */
+  double snr_wanted_d;      /* of what is computed, or was last */
+  AntSnrStrip *snr;         /* owned; NULL: none yet */
+  GCancellable *snr_stop;   /* owned; NULL: nothing is being computed */
+  double snr_done;
+
   AntDepthUnit unit;
   int average;
   guint shown;
@@ -50,5 +60,8 @@ void ant_desk_fail (AntDesk *self, const char *sentence);
 void ant_desk_make_marks (AntDesk *self);
 /* The record is another: begin its views anew. */
 void ant_desk_begin_views (AntDesk *self);
+/* Compute the dip SNR that is wanted now, if it is not there; drop what belongs to other results. */
+void ant_desk_follow_snr (AntDesk *self);
+void ant_desk_drop_snr (AntDesk *self);
 void ant_desk_bring_into_view (AntDesk *self, const AntDip *dip);
 AntSpan ant_desk_whole (AntDesk *self);

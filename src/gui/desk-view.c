@@ -240,6 +240,11 @@ append_value (AntDesk *self, GString *text, gsize place)
                                                                  : "";
   g_autofree char *residual = ant_number_words ((double) self->layers->residual_ppm[place], 0);
   g_string_append_printf (text, _("  ·  %.7g %s  ·  residual %s ppm"), ant_record_value (record, ppm), unit, residual);
+  if (self->snr && !isnan (self->snr->snr[place]))
+    {
+      g_autofree char *snr = ant_number_words ((double) self->snr->snr[place], 1);
+      g_string_append_printf (text, _("  ·  SNR %s"), snr);
+    }
 }
 
 char *

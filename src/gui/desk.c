@@ -16,6 +16,8 @@ static guint signals[N_SIGNALS];
 void
 ant_desk_tell (AntDesk *self, AntDeskChange what)
 {
+  if (what & (ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION))
+    ant_desk_follow_snr (self);
   g_signal_emit (self, signals[CHANGED], 0, (guint) what);
 }
 
@@ -254,6 +256,7 @@ ant_desk_dispose (GObject *object)
 {
   AntDesk *self = ANT_DESK (object);
   ant_desk_abandon (self);
+  ant_desk_drop_snr (self);
   g_clear_object (&self->selected);
   g_ptr_array_set_size (self->mark_items, 0);
   g_list_store_remove_all (self->items);
@@ -296,6 +299,7 @@ ant_desk_init (AntDesk *self)
   self->judgements = ant_judgements_new ();
   self->shown = ANT_KIND_DIP | ANT_KIND_ASKED;
   self->pointer_d = NAN;
+  self->snr_wanted_d = ANT_USUAL_SNR_D;
   self->span = (AntSpan) { NAN, NAN };
   self->progress.stage_left_s = NAN;
   ant_settings_init (&self->settings);

@@ -11,6 +11,7 @@
 #include "gui/dip-item.h"
 #include "jobs/layers.h"
 #include "jobs/scan-task.h"
+#include "jobs/snr-task.h"
 #include "plot/view.h"
 
 typedef enum
@@ -24,8 +25,9 @@ typedef enum
   ANT_DESK_BUSY = 1 << 6,      /* work began, went on or ended */
   ANT_DESK_POINTER = 1 << 7,   /* time under the pointer, or span being drawn */
   ANT_DESK_LOOK = 1 << 8,      /* units, averages, which kinds are shown */
+  ANT_DESK_SNR = 1 << 9,       /* the dip SNR against time: shown or not, of which duration, computed */
 } AntDeskChange;
-#define ANT_DESK_EVERYTHING ((AntDeskChange) 0x1ff)
+#define ANT_DESK_EVERYTHING ((AntDeskChange) 0x3ff)
 
 typedef enum
 {
@@ -104,3 +106,11 @@ int ant_desk_get_average (AntDesk *self); /* index of ant_average_lengths_d, or 
 void ant_desk_set_average (AntDesk *self, int average);
 guint ant_desk_get_shown (AntDesk *self); /* AntDipKind bits */
 void ant_desk_set_shown (AntDesk *self, guint kinds);
+
+/* The dip SNR of one duration against time, computed after a scan while it is shown. */
+gboolean ant_desk_get_snr_shown (AntDesk *self);
+void ant_desk_set_snr_shown (AntDesk *self, gboolean shown);
+void ant_desk_set_snr_duration (AntDesk *self, double duration_d); /* 0: that of the selected dip */
+double ant_desk_get_snr_duration (AntDesk *self); /* of what is shown, else of what will be */
+const AntSnrStrip *ant_desk_get_snr (AntDesk *self);    /* NULL: none yet. Borrowed */
+double ant_desk_get_snr_progress (AntDesk *self);       /* 0..1 while it is being computed, else -1 */

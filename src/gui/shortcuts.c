@@ -35,6 +35,8 @@ const AntShortcut ant_shortcut_table[] = {
   { "win.view-forward", N_("Forward again"), VIEW, { "<Alt>Right" } },
   { "win.own-unit", N_("Between ppm and the record's own unit"), VIEW, { "<Control>u" } },
   { "win.next-average", N_("Longer averages over the samples, then none"), VIEW, { "<Control>g" } },
+  { "win.snr", N_("The dip SNR against time"), VIEW, { "<Control>d" } },
+  { "win.next-snr-duration", N_("That of longer dips"), VIEW, { "<Control><Shift>d" } },
   { "win.page::record", N_("Page Record"), VIEW, { "<Alt>1" } },
   { "win.page::noise", N_("Page Noise"), VIEW, { "<Alt>2" } },
   { "win.page::dips", N_("Page Dips"), VIEW, { "<Alt>3" } },

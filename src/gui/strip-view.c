@@ -4,9 +4,6 @@
 #include <glib/gi18n.h>
 #include <math.h>
 
-#include "core/units.h"
-#include "plot/strip.h"
-
 #define WHEEL_ZOOM 1.25
 #define KEY_ZOOM 1.5
 #define WHEEL_PAN 0.08
@@ -17,6 +14,8 @@ struct _AntStripView
 {
   AntPlotView parent_instance;
   AntStripKind kind;
+  gboolean axis;
+  AntPyramid *nothing; /* drawn while there is nothing yet */
   gboolean dragging, drawing; /* the view moves, or a span grows */
   double drag_from_d, drag_to_d, drag_at_d, pinch;
   AntView drag_view;
@@ -30,66 +29,24 @@ desk_of (AntStripView *self)
   return ant_plot_view_get_desk (ANT_PLOT_VIEW (self));
 }
 
-static gboolean
-has_axis (AntStripView *self)
-{
-  return self->kind == ANT_STRIP_RESIDUAL;
-}
-
-/* Irradiance is always told in the record's unit, if that is known; the residual in ppm unless asked otherwise. */
-static gboolean
-in_own_unit (AntStripView *self)
-{
-  const AntRecord *record = ant_desk_get_record (desk_of (self));
-  return record->value_unit
-         && (self->kind == ANT_STRIP_IRRADIANCE || ant_desk_get_unit (desk_of (self)) == ANT_DEPTH_W_M2);
-}
-
-static void
-fill_strip (AntStripView *self, AntStrip *strip)
-{
-  AntDesk *desk = desk_of (self);
-  const AntLayers *layers = ant_desk_get_layers (desk);
-  const AntSeries *series = &layers->record->series;
-  int average = ant_desk_get_average (desk);
-  gboolean residual = self->kind == ANT_STRIP_RESIDUAL;
-  *strip = (AntStrip) ANT_STRIP_INIT;
-  strip->time = &layers->record->time;
-  strip->start_d = series->start_d;
-  strip->step_d = series->step_d;
-  strip->pyramid = residual ? layers->residual : layers->values;
-  if (average >= 0)
-    strip->averages = residual ? layers->residual_averages[average] : layers->value_averages[average];
-  strip->curve = residual ? NULL : layers->curve_ppm;
-  strip->title = ant_plot_view_get_title (ANT_PLOT_VIEW (self));
-  strip->n_dips = ant_desk_get_marks (desk, &strip->dip);
-  strip->selected = ant_desk_get_selected_mark (desk);
-  strip->brackets = residual;
-  strip->time_axis = has_axis (self);
-  if (in_own_unit (self))
-    {
-      strip->label_zero = residual ? 0 : layers->record->median;
-      strip->label_per = layers->record->median * ANT_PPM;
-    }
-}
-
+/* The strip as it is now, and the part of it in view. */
 static AntView
-fit_view (AntStripView *self, const AntStrip *strip)
+fill_strip (AntStripView *self, AntStrip *strip, gsize size, char *text)
 {
-  AntView view = *ant_desk_get_view (desk_of (self));
-  view.low = -100;
-  view.high = 100;
-  ant_view_fit_y (&view, strip->pyramid, strip->start_d, strip->step_d);
-  return view;
+  ant_strip_fill (desk_of (self), self->kind, strip, size, text);
+  if (!strip->pyramid)
+    strip->pyramid = self->nothing;
+  strip->title = ant_plot_view_get_title (ANT_PLOT_VIEW (self));
+  strip->time_axis = self->axis;
+  return ant_strip_range (desk_of (self), self->kind, strip);
 }
 
 static void
 ant_strip_view_paint (AntPlotView *plot, cairo_t *cr, const AntBox *box, const AntTheme *theme, double scale)
 {
-  AntStripView *self = ANT_STRIP_VIEW (plot);
   AntStrip strip;
-  fill_strip (self, &strip);
-  AntView view = fit_view (self, &strip);
+  char text[128];
+  AntView view = fill_strip (ANT_STRIP_VIEW (plot), &strip, sizeof text, text);
   ant_strip_paint (cr, box, &strip, &view, theme, scale);
 }
 
@@ -98,7 +55,7 @@ data_area (AntStripView *self)
 {
   AntPlotView *plot = ANT_PLOT_VIEW (self);
   AntBox box = ant_plot_view_box (plot);
-  return ant_strip_area (&box, ant_plot_view_theme (plot), has_axis (self));
+  return ant_strip_area (&box, ant_plot_view_theme (plot), self->axis);
 }
 
 static GdkRGBA
@@ -144,16 +101,7 @@ ant_strip_view_overlay (AntPlotView *plot, GtkSnapshot *snapshot, const AntBox *
 static char *
 ant_strip_view_describe (AntPlotView *plot)
 {
-  AntStripView *self = ANT_STRIP_VIEW (plot);
-  AntDesk *desk = desk_of (self);
-  const AntRecord *record = ant_desk_get_record (desk);
-  const AntView *view = ant_desk_get_view (desk);
-  const AntDipMark *marks;
-  gsize n = ant_desk_get_marks (desk, &marks), seen = 0;
-  for (gsize i = 0; i < n; i++)
-    seen += marks[i].mid_d >= view->from && marks[i].mid_d <= view->to;
-  g_autofree char *from = ant_instant_words (record, view->from), *to = ant_instant_words (record, view->to);
-  return g_strdup_printf (_("From %s to %s; %zu dips in view"), from, to, seen);
+  return ant_strip_describe (ant_plot_view_get_desk (plot), ANT_STRIP_VIEW (plot)->kind);
 }
 
 static double
@@ -271,8 +219,8 @@ released_cb (GtkGestureClick *gesture, int n_press, double x, double y, AntStrip
   AntPlotView *plot = ANT_PLOT_VIEW (self);
   AntBox box = ant_plot_view_box (plot);
   AntStrip strip;
-  fill_strip (self, &strip);
-  AntView view = fit_view (self, &strip);
+  char text[128];
+  AntView view = fill_strip (self, &strip, sizeof text, text);
   gsize at = ant_strip_dip_at (&box, &strip, &view, ant_plot_view_theme (plot), x, y);
   if (at != ANT_NO_DIP)
     ant_desk_select_mark (desk, at);
@@ -340,24 +288,18 @@ move_action (GtkWidget *widget, const char *name, GVariant *parameter)
 }
 
 static void
-name_by_unit (AntPlotView *plot)
+name (AntStripView *self)
 {
-  AntDesk *desk = ant_plot_view_get_desk (plot);
-  const AntRecord *record = ant_desk_get_record (desk);
-  if (!record)
-    return;
-  AntDepthUnit kind = in_own_unit (ANT_STRIP_VIEW (plot)) ? ANT_DEPTH_W_M2 : ANT_DEPTH_PPM;
-  const char *unit = ant_depth_unit_name (record, kind);
-  const char *what = ANT_STRIP_VIEW (plot)->kind == ANT_STRIP_RESIDUAL ? _("Residual") : _("Irradiance");
-  g_autofree char *title = g_strdup_printf ("%s, %s", what, unit);
-  ant_plot_view_set_title (plot, title);
+  AntDesk *desk = desk_of (self);
+  g_autofree char *title = desk ? ant_strip_title (desk, self->kind) : NULL;
+  ant_plot_view_set_title (ANT_PLOT_VIEW (self), title ? title : _("Strip"));
 }
 
 static void
 ant_strip_view_desk_changed (AntPlotView *plot, AntDeskChange what)
 {
-  if (what & (ANT_DESK_RECORD | ANT_DESK_LOOK))
-    name_by_unit (plot);
+  if (what & (ANT_DESK_RECORD | ANT_DESK_LOOK | ANT_DESK_SNR))
+    name (ANT_STRIP_VIEW (plot));
   gtk_widget_set_cursor_from_name (GTK_WIDGET (plot),
                                    ant_desk_get_measuring (ant_plot_view_get_desk (plot)) ? "crosshair" : NULL);
 }
@@ -366,7 +308,23 @@ void
 ant_strip_view_set_kind (AntStripView *self, AntStripKind kind)
 {
   self->kind = kind;
-  ant_plot_view_set_title (ANT_PLOT_VIEW (self), kind == ANT_STRIP_RESIDUAL ? _("Residual") : _("Irradiance"));
+  name (self);
+}
+
+void
+ant_strip_view_set_axis (AntStripView *self, gboolean axis)
+{
+  if (axis == self->axis)
+    return;
+  self->axis = axis;
+  ant_plot_view_redraw (ANT_PLOT_VIEW (self));
+}
+
+static void
+ant_strip_view_finalize (GObject *object)
+{
+  ant_pyramid_free (ANT_STRIP_VIEW (object)->nothing);
+  G_OBJECT_CLASS (ant_strip_view_parent_class)->finalize (object);
 }
 
 static void
@@ -374,8 +332,9 @@ ant_strip_view_class_init (AntStripViewClass *klass)
 {
   GtkWidgetClass *widget_class = GTK_WIDGET_CLASS (klass);
   AntPlotViewClass *plot_class = ANT_PLOT_VIEW_CLASS (klass);
-  plot_class->watches =
-      ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT | ANT_DESK_LOOK;
+  G_OBJECT_CLASS (klass)->finalize = ant_strip_view_finalize;
+  plot_class->watches = ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT
+                        | ANT_DESK_LOOK | ANT_DESK_SNR;
   plot_class->paint = ant_strip_view_paint;
   plot_class->overlay = ant_strip_view_overlay;
   plot_class->describe = ant_strip_view_describe;
@@ -399,6 +358,7 @@ add (AntStripView *self, gpointer controller)
 static void
 ant_strip_view_init (AntStripView *self)
 {
+  self->nothing = ant_pyramid_new (0, NULL);
   GtkEventController *motion = gtk_event_controller_motion_new ();
   g_signal_connect (motion, "motion", G_CALLBACK (motion_cb), self);
   g_signal_connect (motion, "leave", G_CALLBACK (leave_cb), self);

@@ -3,6 +3,7 @@
 #include <glib/gi18n.h>
 #include <math.h>
 
+#include "core/units.h"
 #include "gui/file-prompt.h"
 #include "gui/preferences.h"
 #include "gui/shortcuts.h"
@@ -27,6 +28,14 @@ enum
 };
 
 static const char *const average_names[] = { "none", "10min", "1h", "6h", "1d" };
+
+/* Durations of dips whose SNR can be followed; 0: the selected dip's. */
+static const struct
+{
+  const char *name;
+  double hours;
+} snr_durations[] = { { "selected", 0 }, { "30min", 0.5 }, { "1h", 1 }, { "2h", 2 }, { "4h", 4 },
+                      { "6h", 6 }, { "8h", 8 }, { "10h", 10 }, { "13h", 13 } };
 
 static void
 open_path_cb (const char *path, gpointer data)
@@ -136,6 +145,32 @@ next_average (AntWindow *self, GVariant *parameter)
 {
   guint next = (guint) (ant_desk_get_average (self->desk) + 2) % G_N_ELEMENTS (average_names);
   g_action_group_change_action_state (G_ACTION_GROUP (self), "average", g_variant_new_string (average_names[next]));
+}
+
+static void
+toggle_snr (AntWindow *self, GVariant *state)
+{
+  ant_desk_set_snr_shown (self->desk, g_variant_get_boolean (state));
+}
+
+static void
+choose_snr_duration (AntWindow *self, GVariant *state)
+{
+  for (gsize i = 0; i < G_N_ELEMENTS (snr_durations); i++)
+    if (g_str_equal (snr_durations[i].name, g_variant_get_string (state, NULL)))
+      ant_desk_set_snr_duration (self->desk, snr_durations[i].hours / ANT_HOURS_PER_DAY);
+  g_action_group_change_action_state (G_ACTION_GROUP (self), "snr", g_variant_new_boolean (TRUE));
+}
+
+static void
+next_snr_duration (AntWindow *self, GVariant *parameter)
+{
+  g_autoptr (GVariant) state = g_action_group_get_action_state (G_ACTION_GROUP (self), "snr-duration");
+  gsize at = 0;
+  while (at + 1 < G_N_ELEMENTS (snr_durations) && !g_str_equal (snr_durations[at].name, g_variant_get_string (state, NULL)))
+    at++;
+  const char *next = snr_durations[(at + 1) % G_N_ELEMENTS (snr_durations)].name;
+  g_action_group_change_action_state (G_ACTION_GROUP (self), "snr-duration", g_variant_new_string (next));
 }
 
 static void
@@ -290,6 +325,9 @@ static const Action actions[] = {
   { "own-unit", NULL, "false", toggle_unit, NEEDS_RECORD },
   { "average", "s", "'10min'", choose_average, NEEDS_RECORD },
   { "next-average", NULL, NULL, next_average, NEEDS_RECORD },
+  { "snr", NULL, "false", toggle_snr, NEEDS_RECORD },
+  { "snr-duration", "s", "'selected'", choose_snr_duration, NEEDS_RECORD },
+  { "next-snr-duration", NULL, NULL, next_snr_duration, NEEDS_RECORD },
   { "page", "s", "'dips'", choose_page, NEEDS_RECORD },
   { "view-in", NULL, NULL, view_in, NEEDS_RECORD },
   { "view-out", NULL, NULL, view_out, NEEDS_RECORD },

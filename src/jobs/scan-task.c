@@ -1,24 +1,14 @@
-/* scan-task.c - threads that scan and measure, and a timer that tells how far they are.
- *
- * The worker writes its progress under a lock; the main loop reads it ten times a second. However fast the worker is,
- * the loop is never flooded. */
+/* scan-task.c - threads that scan and measure. */
 #include "jobs/scan-task.h"
 
-#include <math.h>
-
 #include "jobs/scan-job.h"
-
-#define REPORT_EVERY_MS 100
 
 typedef struct
 {
   AntLayers *layers;
   AntSettings settings;
   double mid_d, duration_d; /* of an asked dip */
-  AntTaskProgressFunc progress;
-  gpointer data;
-  GMutex lock;
-  AntTaskProgress now;      /* under the lock */
+  AntProgressRelay *relay;  /* of a scan */
 } Order;
 
 static void
@@ -26,7 +16,7 @@ order_free (gpointer data)
 {
   Order *order = data;
   ant_layers_unref (order->layers);
-  g_mutex_clear (&order->lock);
+  g_clear_pointer (&order->relay, ant_progress_relay_free);
   g_free (order);
 }
 
@@ -36,8 +26,6 @@ order_new (AntLayers *layers, const AntSettings *settings)
   Order *order = g_new0 (Order, 1);
   order->layers = ant_layers_ref (layers);
   order->settings = *settings;
-  order->now.stage_left_s = NAN;
-  g_mutex_init (&order->lock);
   return order;
 }
 
@@ -51,38 +39,6 @@ ant_scan_outcome_free (AntScanOutcome *outcome)
   g_free (outcome);
 }
 
-/* On the worker. */
-static void
-note_progress (const AntProgress *progress, gpointer data)
-{
-  Order *order = data;
-  double part = progress->count > 0 ? (double) progress->done / (double) progress->count : 0;
-  g_mutex_lock (&order->lock);
-  order->now = (AntTaskProgress) {
-    .title = progress->title,
-    .stage = progress->stage,
-    .n_stages = progress->n_stages,
-    .fraction = ((double) progress->stage + part) / (double) progress->n_stages,
-    .stage_left_s = part > 0 ? progress->stage_s * (1 - part) / part : NAN,
-  };
-  g_mutex_unlock (&order->lock);
-}
-
-/* On the main loop. */
-static gboolean
-report (gpointer data)
-{
-  GTask *task = data;
-  Order *order = g_task_get_task_data (task);
-  if (g_task_get_completed (task))
-    return G_SOURCE_REMOVE;
-  g_mutex_lock (&order->lock);
-  AntTaskProgress now = order->now;
-  g_mutex_unlock (&order->lock);
-  order->progress (&now, order->data);
-  return G_SOURCE_CONTINUE;
-}
-
 static gpointer
 run_scan (gpointer data)
 {
@@ -92,7 +48,8 @@ run_scan (gpointer data)
   GError *error = NULL;
   g_autoptr (AntScanOutcome) outcome = g_new0 (AntScanOutcome, 1);
   outcome->results =
-      ant_scan_job_run_partly (record, &order->settings, g_task_get_cancellable (task), note_progress, order, &error);
+      ant_scan_job_run_partly (record, &order->settings, g_task_get_cancellable (task), ant_progress_relay_note,
+                               order->relay, &error);
   if (outcome->results && outcome->results->reach < ANT_SCAN_COMPLETE) /* who stops does not want to wait */
     outcome->layers = ant_layers_ref (order->layers);
   else if (outcome->results)
@@ -112,11 +69,8 @@ ant_scan_task_async (AntLayers *layers, const AntSettings *settings, GCancellabl
   Order *order = order_new (layers, settings);
   g_task_set_source_tag (task, ant_scan_task_async);
   g_task_set_check_cancellable (task, FALSE); /* a stopped scan has results too */
-  order->progress = progress;
-  order->data = data;
+  order->relay = ant_progress_relay_new (task, progress, data);
   g_task_set_task_data (task, order, order_free);
-  if (progress)
-    g_timeout_add_full (G_PRIORITY_DEFAULT, REPORT_EVERY_MS, report, g_object_ref (task), g_object_unref);
   g_thread_unref (g_thread_new ("scan", run_scan, task));
 }
 

@@ -4,15 +4,7 @@
 #include <gio/gio.h>
 #include "data/scan-results.h"
 #include "jobs/layers.h"
-
-typedef struct
-{
-  const char *title;      /* of the stage, untranslated; NULL until the first has begun */
-  gsize stage, n_stages;  /* from 0 */
-  double fraction;        /* of the whole, every stage counting alike, 0..1 */
-  double stage_left_s;    /* until this stage's end at its pace so far; NaN while unknown */
-} AntTaskProgress;
-typedef void (*AntTaskProgressFunc) (const AntTaskProgress *progress, gpointer data);
+#include "jobs/progress-relay.h"
 
 typedef struct
 {

@@ -82,6 +82,16 @@ ant_view_fit_y (AntView *view, const AntPyramid *pyramid, double start_d, double
   return 1;
 }
 
+void
+ant_view_hold_y (AntView *view, double y)
+{
+  double air = 0.07 * (view->high - view->low);
+  if (y + air > view->high)
+    view->high = y + air;
+  else if (y - air < view->low)
+    view->low = y - air;
+}
+
 int
 ant_box_holds (const AntBox *box, double x, double y)
 {

@@ -33,5 +33,8 @@ void ant_view_pan (AntView *view, double fraction, double whole_from, double who
  * returned, if nothing is observed there. */
 int ant_view_fit_y (AntView *view, const AntPyramid *pyramid, double start_d, double step_d);
 
+/* Widen the y range, with some air, so that it holds a value; NaN: unchanged. Linear axes only. */
+void ant_view_hold_y (AntView *view, double y);
+
 int ant_box_holds (const AntBox *box, double x, double y);
 int ant_boxes_meet (const AntBox *a, const AntBox *b);

@@ -1,7 +1,10 @@
 /* test-window.c - the window as a whole: opening, scanning, stopping, closing. */
 #include <math.h>
+#include <string.h>
 
 #include "gui/shortcuts.h"
+#include "gui/strip-view.h"
+#include "gui/time-stack.h"
 #include "support.h"
 
 static gboolean
@@ -166,6 +169,70 @@ stopping_keeps_what_was_found_so_far_and_says_so (void)
   test_gui_close (window);
 }
 
+static gboolean
+follows_snr (gpointer desk)
+{
+  return ant_desk_get_snr (desk) && ant_desk_get_snr_progress (desk) < 0;
+}
+
+static guint
+n_visible_strips (AntWindow *window)
+{
+  guint n = 0;
+  GtkWidget *stack = test_gui_find (window, ANT_TYPE_TIME_STACK);
+  for (GtkWidget *child = gtk_widget_get_first_child (stack); child; child = gtk_widget_get_next_sibling (child))
+    n += ANT_IS_STRIP_VIEW (child) && gtk_widget_get_child_visible (child);
+  return n;
+}
+
+static void
+the_dip_snr_is_followed_on_demand (void)
+{
+  AntWindow *window = test_gui_window_scanned ();
+  AntDesk *desk = ant_window_get_desk (window);
+  g_assert_null (ant_desk_get_snr (desk));
+  g_assert_cmpuint (n_visible_strips (window), ==, 2);
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.snr", NULL);
+  test_gui_wait (follows_snr, desk, 60);
+  test_gui_settle (100);
+  g_assert_cmpuint (n_visible_strips (window), ==, 3);
+  g_assert_cmpfloat_with_epsilon (ant_desk_get_snr_duration (desk) * 24, 6, 1e-9);
+  const AntSeries *series = &ant_desk_get_record (desk)->series;
+  float peak = ant_pyramid_extent (ant_desk_get_snr (desk)->pyramid, 0, series->n).high;
+  g_assert_cmpfloat ((double) peak, >, 2 * ant_desk_get_results (desk)->threshold_snr);
+  ant_desk_set_pointer (desk, TEST_DIP_D);
+  g_autofree char *readout = ant_desk_readout (desk);
+  g_assert_nonnull (strstr (readout, "SNR"));
+  /* The selected dip's duration, then one that was chosen; then no strip and no work. */
+  ant_desk_select_mark (desk, 0);
+  test_gui_wait (follows_snr, desk, 60);
+  double own_d = ant_dip_item_get_dip (ant_desk_get_selected (desk))->duration_d;
+  g_assert_cmpfloat_with_epsilon (ant_desk_get_snr_duration (desk), own_d, 0.02 * own_d);
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.snr-duration", "s", "2h");
+  test_gui_wait (follows_snr, desk, 60);
+  g_assert_cmpfloat_with_epsilon (ant_desk_get_snr_duration (desk) * 24, 2, 1e-9);
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.snr", NULL);
+  g_assert_null (ant_desk_get_snr (desk));
+  test_gui_close (window);
+}
+
+static void
+the_dip_snr_may_be_overtaken_at_any_moment (void)
+{
+  AntWindow *window = test_gui_window_scanned ();
+  AntDesk *desk = ant_window_get_desk (window);
+  for (double hours = 1; hours < 12; hours++)
+    {
+      ant_desk_set_snr_shown (desk, TRUE);
+      ant_desk_set_snr_duration (desk, hours / 24);
+      test_gui_settle ((guint) hours);
+    }
+  test_gui_wait (follows_snr, desk, 60);
+  g_assert_cmpfloat_with_epsilon (ant_desk_get_snr_duration (desk) * 24, 11, 1e-9);
+  ant_desk_set_snr_duration (desk, 5 / 24.0);
+  test_gui_close (window);
+}
+
 static void
 a_window_may_be_closed_while_it_scans (void)
 {
@@ -301,6 +368,8 @@ add (void)
   g_test_add_func ("/gui/window/stopping-keeps-what-was-found-before", stopping_keeps_what_was_found_before);
   g_test_add_func ("/gui/window/stopping-keeps-what-was-found-so-far-and-says-so",
                    stopping_keeps_what_was_found_so_far_and_says_so);
+  g_test_add_func ("/gui/window/the-dip-snr-is-followed-on-demand", the_dip_snr_is_followed_on_demand);
+  g_test_add_func ("/gui/window/the-dip-snr-may-be-overtaken-at-any-moment", the_dip_snr_may_be_overtaken_at_any_moment);
   g_test_add_func ("/gui/window/it-may-be-closed-while-it-scans", a_window_may_be_closed_while_it_scans);
   g_test_add_func ("/gui/window/another-record-may-be-opened-while-it-scans",
                    another_record_may_be_opened_while_it_scans);
