@@ -14,8 +14,11 @@ ant_record_options_add (GOptionContext *context, AntRecordOptions *options)
     { "column", 0, 0, G_OPTION_ARG_STRING, &options->columns, N_("columns by name or number; those not named are told by the reader"),
       N_("time=…,value=…,error=…,quality=…") },
     { "time-format", 0, 0, G_OPTION_ARG_STRING, &options->time_format,
-      N_("jd, mjd, jd-OFFSET, iso, ymd, unix, year-day, decimal-year, days, hours or seconds"), N_("FORMAT") },
+      N_("jd, mjd, jd-OFFSET, iso, ymd, unix, year-day, year-month-day, decimal-year, days, hours or seconds"), N_("FORMAT") },
     { "time-scale", 0, 0, G_OPTION_ARG_STRING, &options->time_scale, N_("UTC, TAI, TT, TDB, GPS, Unix or unknown"), N_("SCALE") },
+    { "time-zone", 0, 0, G_OPTION_ARG_STRING, &options->time_zone, N_("hours of a local clock ahead of UTC, such as +01:00"), N_("ZONE") },
+    { "epoch", 0, 0, G_OPTION_ARG_STRING, &options->epoch, N_("what days, hours or seconds count from, such as 2000-01-01T12:00:00"),
+      N_("TIME") },
     { "hdu", 0, 0, G_OPTION_ARG_STRING, &options->hdu, N_("table of a FITS file, 0 the primary one; without it the first with a time"),
       N_("NAME|NUMBER") },
     { "fill", 0, 0, G_OPTION_ARG_STRING, &options->fill, N_("values that count as missing, besides the usual ones"),
@@ -33,6 +36,8 @@ ant_record_options_clear (AntRecordOptions *options)
   g_free (options->columns);
   g_free (options->time_format);
   g_free (options->time_scale);
+  g_free (options->time_zone);
+  g_free (options->epoch);
   g_free (options->hdu);
   g_free (options->fill);
   g_free (options->good);
@@ -61,6 +66,7 @@ AntRecord *
 ant_record_options_read (const AntRecordOptions *options, const char *path, GCancellable *cancellable, GError **error)
 {
   AntReadingChoices choices = { .time_format = g_strdup (options->time_format), .time_scale = g_strdup (options->time_scale),
+                                .time_zone = g_strdup (options->time_zone), .epoch = g_strdup (options->epoch),
                                 .hdu = g_strdup (options->hdu) };
   AntRecord *record = NULL;
   if (options->fill)

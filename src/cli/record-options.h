@@ -9,6 +9,8 @@ typedef struct
   char *columns;     /* --column time=1,value=tsi,error=4,quality=flag */
   char *time_format; /* --time-format */
   char *time_scale;  /* --time-scale */
+  char *time_zone;   /* --time-zone */
+  char *epoch;       /* --epoch */
   char *hdu;         /* --hdu */
   char *fill;        /* --fill -99,-999 */
   char *good;        /* --good 0,2 or 0x10042 */

@@ -15,6 +15,8 @@ ant_reading_choices_clear (AntReadingChoices *choices)
   g_free (choices->quality_column);
   g_free (choices->time_format);
   g_free (choices->time_scale);
+  g_free (choices->time_zone);
+  g_free (choices->epoch);
   g_free (choices->hdu);
   g_clear_pointer (&choices->fill_values, g_array_unref);
   memset (choices, 0, sizeof *choices);
@@ -30,6 +32,8 @@ ant_reading_choices_copy (const AntReadingChoices *choices, AntReadingChoices *c
     .quality_column = g_strdup (choices->quality_column),
     .time_format = g_strdup (choices->time_format),
     .time_scale = g_strdup (choices->time_scale),
+    .time_zone = g_strdup (choices->time_zone),
+    .epoch = g_strdup (choices->epoch),
     .hdu = g_strdup (choices->hdu),
     .fill_values = choices->fill_values ? g_array_copy (choices->fill_values) : NULL,
   };

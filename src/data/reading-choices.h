@@ -7,8 +7,10 @@
 typedef struct
 {
   char *time_column, *value_column, *error_column, *quality_column; /* names, or numbers from 1; time may be "1+2" */
-  char *time_format; /* "jd", "mjd", "jd-OFFSET", "iso", "ymd", "unix", "year-day", "decimal-year", "days", "hours", "seconds" */
+  char *time_format; /* "jd", "mjd", "jd-OFFSET", "iso", "ymd", "unix", "year-day", "year-month-day", "decimal-year", "days", "hours", "seconds" */
   char *time_scale;  /* "UTC", "TT", ... */
+  char *time_zone;   /* of a local clock, hours ahead of UTC: "+01:00", "-7" */
+  char *epoch;       /* what plain numbers count from: an ISO time or a JD, in the times' own scale */
   char *hdu;         /* of a FITS file: its name, or its number, 0 the primary one */
   GArray *fill_values; /* of double: these and the usual ones count as missing; NULL = only the usual ones */
 } AntReadingChoices;

@@ -290,7 +290,7 @@ ant_fits_time_apply (AntFitsTable *table, const AntReadingChoices *choices, AntR
   stated = stated_epoch (table, form->scale, &epoch);
   set_place (table, column, record);
   set_exposure (table, general_unit_d, record);
-  if (choices && choices->time_format)
+  if (choices && (choices->time_format || choices->epoch))
     return;
   if (form->style == ANT_STAMP_DAYS)
     {

@@ -45,6 +45,12 @@ ant_table_layout_no_column (const AntTableLayout *layout, const char *name, GErr
                layout->n_columns, names->str, layout->n_columns > 12 ? ", …" : "");
 }
 
+gboolean
+ant_table_column_mostly (const AntTableColumn *column, guint n)
+{
+  return n > 0 && 2 * n > column->n_cells - MIN (column->n_missing, column->n_cells - 1);
+}
+
 void
 ant_table_column_study (AntTableColumn *column, const AntCell *cell, double *previous)
 {

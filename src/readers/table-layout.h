@@ -46,6 +46,8 @@ G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntTableLayout, ant_table_layout_free)
 void ant_table_column_study (AntTableColumn *column, const AntCell *cell, double *previous);
 /* One of the lower-case words of the column's name ("Time_dec" has "time" and "dec") is in the list, NULL-terminated. */
 gboolean ant_table_column_has_word (const AntTableColumn *column, const char *const *words);
+/* n of the column's cells, the missing ones aside, are more than half. */
+gboolean ant_table_column_mostly (const AntTableColumn *column, guint n);
 /* Labels from the names, "column 3" where there is none. */
 void ant_table_layout_label (AntTableLayout *layout);
 /* The column of this name or number (from 1), -1 if there is none. */

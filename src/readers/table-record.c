@@ -64,6 +64,12 @@ ant_table_record_say_time (const AntTableLayout *layout, const AntTimeForm *form
     g_string_append_printf (names, "%s%s", i ? " + " : "", layout->columns[form->columns[i]].label);
   record->time_name = g_strdup (names->str);
   ant_record_say (record, _("Time is %s, read as %s."), record->time_name, style);
+  if (form->has_date)
+    {
+      char date[40] = "";
+      ant_time_text (ANT_SCALE_TAI, form->date_jd, 0.0, 0, sizeof date, date);
+      ant_record_say (record, _("The date, %.10s, stands in the header."), date);
+    }
   double offset = form->offset + form->offset_rest;
   if (form->style == ANT_STAMP_JD && offset != 0.0)
     ant_record_say (record, _("JD is the record's number plus %.*f."), offset == floor (offset) ? 0 : 4, offset);
@@ -317,7 +323,9 @@ name_columns (const AntTableLayout *layout, const AntValueColumns *columns, guin
     {
       record->quality_name = g_strdup (layout->columns[columns->quality].label);
       g_autofree char *at = named_place (layout, (guint) columns->quality);
-      ant_record_say (record, _("Quality is %s%s."), record->quality_name, at);
+      ant_record_say (record, columns->interleaved ? _("Values alternate with flags; quality is %s%s, which follows the value.")
+                                                   : _("Quality is %s%s."),
+                      record->quality_name, at);
     }
 }
 

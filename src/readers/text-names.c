@@ -45,7 +45,7 @@ ant_text_known_unit (const char *text)
 static void
 take_unit (AntTableColumn *column)
 {
-  const char *open = strpbrk (column->name, "[(");
+  const char *square = strchr (column->name, '['), *open = square ? square : strchr (column->name, '(');
   const char *close = open ? strpbrk (open, "])") : NULL;
   if (close)
     column->unit = g_strndup (open + 1, (gsize) (close - open - 1));
@@ -65,21 +65,20 @@ has_time_word (const AntCell *cells, guint n)
 }
 
 /* A row of names in this line? Names are words; a cell of bare number shows that it is not. Comments hold much other prose:
- * there one of the names must be a time's. */
+ * there one of the names must be a time's, and then a few may be numbers, such as wavelengths. */
 static gboolean
 names_from_line (AntTableLayout *layout, const char *line, char separator, gboolean is_comment, AntCell *cells)
 {
   const char *end = line + strlen (line);
   if (ant_cell_split (line, end, separator, layout->n_columns, cells) != layout->n_columns)
     return FALSE;
-  guint words = 0;
+  guint words = 0, numbers = 0;
   for (guint c = 0; c < layout->n_columns; c++)
     {
-      if (cells[c].kind == ANT_CELL_NUMBER)
-        return FALSE;
+      numbers += cells[c].kind == ANT_CELL_NUMBER;
       words += cells[c].kind == ANT_CELL_TEXT;
     }
-  if (words == 0 || (is_comment && !has_time_word (cells, layout->n_columns)))
+  if (words <= 2 * numbers || (numbers > 0 && !is_comment) || (is_comment && !has_time_word (cells, layout->n_columns)))
     return FALSE;
   for (guint c = 0; c < layout->n_columns; c++)
     {

@@ -9,6 +9,7 @@
 #include "data/error.h"
 #include "readers/text-names.h"
 #include "readers/time-header.h"
+#include "readers/time-parts.h"
 
 #define JD_MOST 3.0e6
 #define MJD_ZERO_JD 2400000.5
@@ -17,14 +18,7 @@ static const char *const jd_words[] = { "jd", "jdn", "bjd", "hjd", NULL };
 static const char *const mjd_words[] = { "mjd", NULL };
 static const char *const unix_words[] = { "unix", "epoch", "posix", "timestamp", "time", NULL };
 static const char *const year_words[] = { "year", "yr", "yyyy", "dec", "decimal", "decyear", NULL };
-static const char *const plain_year_words[] = { "year", "yr", "yyyy", NULL };
-static const char *const day_of_year_words[] = { "doy", "yday", "jday", "dayofyear", "ddd", NULL };
-static const char *const clock_words[] = { "time", "utc", "ut", "gmt", "clock", "hhmmss", "hhmm", "mst", "est", "pst", "cst", "cet",
-                                           "lst", "local", NULL };
 static const char *const digit_clock_words[] = { "hhmm", "hhmmss", NULL };
-static const char *const second_words[] = { "sod", "sec", "second", "seconds", NULL };
-static const char *const minute_words[] = { "minute", "minutes", "min", "mm", NULL };
-static const char *const hour_words[] = { "hour", "hours", "hr", "hh", NULL };
 static const char *const spread_words[] = { "std", "stdev", "stddev", "err", "error", "unc", "uncertainty", "sigma", "exposure", NULL };
 
 static gboolean
@@ -32,12 +26,6 @@ is_monotone (const AntTableColumn *column)
 {
   guint steps = column->n_up + column->n_down;
   return steps == 0 ? column->n_numbers == 1 : 10 * MAX (column->n_up, column->n_down) >= 9 * steps;
-}
-
-static gboolean
-mostly (guint n, const AntTableColumn *column)
-{
-  return n > 0 && 2 * n > column->n_cells - MIN (column->n_missing, column->n_cells - 1);
 }
 
 static void
@@ -54,57 +42,6 @@ set_number (AntTimeForm *form, AntStampStyle style, double offset, double unit_d
   form->offset = offset;
   form->unit_d = unit_d;
   add_part (form, style == ANT_STAMP_DECIMAL_YEAR ? ANT_PART_DECIMAL_YEAR : ANT_PART_NUMBER, column);
-}
-
-/* The kind of clock in a column that stands beside a date; FALSE if it is none. */
-static gboolean
-clock_part (const AntTableColumn *column, AntTimePart *part)
-{
-  gboolean named = ant_table_column_has_word (column, clock_words);
-  if (mostly (column->n_clock, column))
-    *part = ANT_PART_CLOCK;
-  else if (mostly (column->n_numbers, column) && column->least >= 0.0 && ant_table_column_has_word (column, second_words))
-    *part = ANT_PART_SECOND;
-  else if (!mostly (column->n_whole, column) || column->least < 0.0)
-    return FALSE;
-  else if (ant_table_column_has_word (column, minute_words) && column->greatest <= 1440.0)
-    *part = ANT_PART_MINUTE;
-  else if (ant_table_column_has_word (column, hour_words) && column->greatest <= 24.0)
-    *part = ANT_PART_HOUR;
-  else if ((named || !*column->name) && mostly (column->n_clock_digits, column) && column->greatest > 2400.0)
-    *part = ANT_PART_HHMMSS;
-  else if ((named || !*column->name) && column->greatest <= 2400.0 && column->greatest > 24.0)
-    *part = ANT_PART_HHMM;
-  else
-    return FALSE;
-  return TRUE;
-}
-
-/* Clocks in the columns after the date's: one, or hour, minute and second. */
-static void
-add_clocks (const AntTableLayout *layout, guint next, AntTimeForm *form)
-{
-  AntTimePart part, last = ANT_PART_ISO;
-  while (next < layout->n_columns && form->n_parts < ANT_MOST_TIME_PARTS && clock_part (&layout->columns[next], &part)
-         && (last == ANT_PART_ISO || (last == ANT_PART_HOUR && part == ANT_PART_MINUTE)
-             || (last == ANT_PART_MINUTE && part == ANT_PART_SECOND)))
-    {
-      add_part (form, part, next++);
-      last = part;
-    }
-}
-
-static gboolean
-find_day_of_year (const AntTableLayout *layout, guint year, guint *found)
-{
-  for (guint c = 0; c < layout->n_columns; c++)
-    if (c != year && ant_table_column_has_word (&layout->columns[c], day_of_year_words)
-        && mostly (layout->columns[c].n_numbers, &layout->columns[c]))
-      {
-        *found = c;
-        return TRUE;
-      }
-  return FALSE;
 }
 
 /* Numbers that count from somewhere: the unit by the column's name or unit. */
@@ -125,29 +62,22 @@ form_of_numbers (const AntTableLayout *layout, guint c, AntTimeForm *form)
   const AntTableColumn *column = &layout->columns[c];
   gboolean named = ant_table_column_has_word (column, ant_time_words) || ant_table_column_has_word (column, year_words);
   double offset;
-  guint day_of_year;
   if (ant_table_column_has_word (column, spread_words))
     return FALSE;
-  if (mostly (column->n_ymd, column))
+  if (ant_time_parts_find (layout, c, form))
+    return TRUE;
+  if (ant_table_column_mostly (column, column->n_ymd))
     {
       form->style = ANT_STAMP_YMD;
       add_part (form, ANT_PART_YMD, c);
-      if (mostly (column->n_whole, column))
-        add_clocks (layout, c + 1, form);
-    }
-  else if (ant_table_column_has_word (column, plain_year_words) && mostly (column->n_whole, column)
-           && find_day_of_year (layout, c, &day_of_year))
-    {
-      form->style = ANT_STAMP_YEAR_DAY;
-      add_part (form, ANT_PART_YEAR, c);
-      add_part (form, ANT_PART_DAY_OF_YEAR, day_of_year);
-      add_clocks (layout, day_of_year + 1, form);
+      if (ant_table_column_mostly (column, column->n_whole))
+        ant_time_parts_add_clocks (layout, c + 1, form);
     }
   else if (!is_monotone (column))
     return FALSE;
   else if (layout->has_epoch && named)
     set_number (form, ANT_STAMP_DAYS, 0.0, unit_of_days (column), c);
-  else if (mostly (column->n_jd, column) && unit_of_days (column) == 1.0)
+  else if (ant_table_column_mostly (column, column->n_jd) && unit_of_days (column) == 1.0)
     set_number (form, ANT_STAMP_JD, 0.0, 1.0, c);
   else if (ant_table_column_has_word (column, mjd_words) && column->greatest < 1e6)
     set_number (form, ANT_STAMP_JD, MJD_ZERO_JD, 1.0, c);
@@ -169,24 +99,27 @@ static gboolean
 form_at (const AntTableLayout *layout, guint c, AntTimeForm *form)
 {
   const AntTableColumn *column = &layout->columns[c];
-  *form = (AntTimeForm){ .unit_d = 1.0 };
-  if (mostly (column->n_iso_time + column->n_iso_date, column))
+  *form = (AntTimeForm) ANT_TIME_FORM_INIT;
+  if (ant_table_column_mostly (column, column->n_iso_time + column->n_iso_date))
     {
       form->style = ANT_STAMP_ISO;
       add_part (form, ANT_PART_ISO, c);
       if (column->n_iso_time == 0)
-        add_clocks (layout, c + 1, form);
+        ant_time_parts_add_clocks (layout, c + 1, form);
       return TRUE;
     }
-  return mostly (column->n_numbers, column) && form_of_numbers (layout, c, form);
+  return ant_table_column_mostly (column, column->n_numbers) && form_of_numbers (layout, c, form);
 }
 
 gboolean
 ant_time_columns_alike (const AntTableLayout *layout, guint c)
 {
   AntTimeForm form;
-  return *layout->columns[c].name ? form_at (layout, c, &form) || ant_table_column_has_word (&layout->columns[c], jd_words)
-                                  : mostly (layout->columns[c].n_clock, &layout->columns[c]);
+  const AntTableColumn *column = &layout->columns[c];
+  if (*column->name)
+    return form_at (layout, c, &form) || ant_table_column_has_word (column, jd_words);
+  return ant_table_column_mostly (column, column->n_clock) || ant_table_column_mostly (column, column->n_ymd)
+         || (ant_table_column_mostly (column, column->n_padded) && ant_table_column_mostly (column, column->n_clock_digits));
 }
 
 /* The first time-like column; where that is a decimal year, which keeps time worst, a JD if there is one. */
@@ -207,7 +140,8 @@ recognise (const AntTableLayout *layout, AntRecord *record, AntTimeForm *form)
           }
       return TRUE;
     }
-  return FALSE;
+  *form = (AntTimeForm) ANT_TIME_FORM_INIT;
+  return ant_time_parts_in_header (layout, form);
 }
 
 static int
@@ -249,7 +183,7 @@ static void
 further_parts (const AntTableLayout *layout, AntTimeForm *form, guint from)
 {
   for (guint i = from; i < form->n_parts; i++)
-    if (!clock_part (&layout->columns[form->columns[i]], &form->parts[i]))
+    if (!ant_time_parts_clock (&layout->columns[form->columns[i]], &form->parts[i]))
       form->parts[i] = i == from ? ANT_PART_HOUR : i == from + 1 ? ANT_PART_MINUTE : ANT_PART_SECOND;
 }
 
@@ -261,14 +195,15 @@ set_format (const AntTableLayout *layout, const char *format, AntTimeForm *form,
     const char *name;
     AntStampStyle style;
     double offset, unit_d;
-    AntTimePart part;
+    AntTimePart part, second;
   } formats[] = {
     { "jd", ANT_STAMP_JD, 0.0, 1.0, ANT_PART_NUMBER },
     { "mjd", ANT_STAMP_JD, MJD_ZERO_JD, 1.0, ANT_PART_NUMBER },
     { "iso", ANT_STAMP_ISO, 0.0, 1.0, ANT_PART_ISO },
     { "ymd", ANT_STAMP_YMD, 0.0, 1.0, ANT_PART_YMD },
     { "unix", ANT_STAMP_UNIX, 0.0, 1.0, ANT_PART_NUMBER },
-    { "year-day", ANT_STAMP_YEAR_DAY, 0.0, 1.0, ANT_PART_YEAR },
+    { "year-day", ANT_STAMP_YEAR_DAY, 0.0, 1.0, ANT_PART_YEAR, ANT_PART_DAY_OF_YEAR },
+    { "year-month-day", ANT_STAMP_YMD, 0.0, 1.0, ANT_PART_YEAR, ANT_PART_MONTH },
     { "decimal-year", ANT_STAMP_DECIMAL_YEAR, 0.0, 1.0, ANT_PART_DECIMAL_YEAR },
     { "days", ANT_STAMP_DAYS, 0.0, 1.0, ANT_PART_NUMBER },
     { "hours", ANT_STAMP_DAYS, 0.0, 1.0 / ANT_HOURS_PER_DAY, ANT_PART_NUMBER },
@@ -290,14 +225,15 @@ set_format (const AntTableLayout *layout, const char *format, AntTimeForm *form,
         form->offset = formats[i].offset;
         form->unit_d = formats[i].unit_d;
         form->parts[0] = formats[i].part;
-        if (form->style == ANT_STAMP_YEAR_DAY)
-          form->parts[1] = ANT_PART_DAY_OF_YEAR;
-        further_parts (layout, form, form->style == ANT_STAMP_YEAR_DAY ? 2 : 1);
+        form->parts[1] = formats[i].second;
+        if (formats[i].second == ANT_PART_MONTH)
+          form->parts[2] = ANT_PART_DAY;
+        further_parts (layout, form, ant_time_form_date_parts (form));
         return TRUE;
       }
   g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE,
-               _("“%s” is no time format; expected jd, mjd, jd-OFFSET, iso, ymd, unix, year-day, decimal-year, days, hours "
-                 "or seconds"),
+               _("“%s” is no time format; expected jd, mjd, jd-OFFSET, iso, ymd, unix, year-day, year-month-day, "
+                 "decimal-year, days, hours or seconds"),
                format);
   return FALSE;
 }
@@ -316,7 +252,7 @@ column_for_format (const AntTableLayout *layout, const char *format, AntTimeForm
         return TRUE;
       }
   for (guint c = 0; c < layout->n_columns; c++)
-    if (mostly (text ? layout->columns[c].n_text : layout->columns[c].n_numbers, &layout->columns[c]))
+    if (ant_table_column_mostly (&layout->columns[c], text ? layout->columns[c].n_text : layout->columns[c].n_numbers))
       {
         add_part (form, ANT_PART_NUMBER, c);
         return TRUE;
@@ -334,9 +270,7 @@ form_of_chosen (const AntTableLayout *layout, AntTimeForm *form)
   *form = found;
   form->n_parts = chosen.n_parts;
   memcpy (form->columns, chosen.columns, sizeof form->columns);
-  if (found.style == ANT_STAMP_YEAR_DAY && chosen.n_parts > 1)
-    form->parts[1] = ANT_PART_DAY_OF_YEAR;
-  further_parts (layout, form, found.style == ANT_STAMP_YEAR_DAY ? 2 : 1);
+  further_parts (layout, form, MAX (ant_time_form_date_parts (form), 1));
 }
 
 static gboolean
@@ -357,7 +291,7 @@ ant_time_columns_find (const AntTableLayout *layout, const AntReadingChoices *ch
                        GError **error)
 {
   const char *columns = choices ? choices->time_column : NULL, *format = choices ? choices->time_format : NULL;
-  *form = (AntTimeForm){ .unit_d = 1.0 };
+  *form = (AntTimeForm) ANT_TIME_FORM_INIT;
   if (columns && !chosen_columns (layout, columns, form, error))
     return FALSE;
   if (!columns && (format ? !column_for_format (layout, format, form) : !recognise (layout, record, form)))
@@ -366,10 +300,11 @@ ant_time_columns_find (const AntTableLayout *layout, const AntReadingChoices *ch
     return FALSE;
   if (columns && !format)
     form_of_chosen (layout, form);
-  if (form->parts[0] == ANT_PART_YEAR && form->n_parts < 2)
+  if (form->n_parts < ant_time_form_date_parts (form))
     {
-      g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("%s: a year needs its day of year: --column time=YEAR+DAY"), record->path);
+      g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE,
+                   _("%s: a year needs its day, or month and day: --column time=YEAR+DAY or time=YEAR+MONTH+DAY"), record->path);
       return FALSE;
     }
-  return ant_time_header_scale (layout, choices ? choices->time_scale : NULL, record, form, error);
+  return ant_time_header_scale (layout, choices, record, form, error) && ant_time_header_origin (choices, record, form, error);
 }

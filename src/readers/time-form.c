@@ -56,6 +56,16 @@ at_second (AntTimeForm *form, double midnight_jd, double second, gboolean leap)
   return form->day_start_d + second / ANT_SECONDS_PER_DAY;
 }
 
+guint
+ant_time_form_date_parts (const AntTimeForm *form)
+{
+  if (form->has_date)
+    return 0;
+  if (form->parts[0] != ANT_PART_YEAR)
+    return 1;
+  return form->n_parts > 1 && form->parts[1] == ANT_PART_MONTH ? 3 : 2;
+}
+
 static double
 calendar_midnight (int year, int month, int day)
 {
@@ -84,7 +94,7 @@ read_number (AntTimeForm *form, double number, double rest)
   double whole;
   switch (form->style)
     {
-    case ANT_STAMP_JD: return read_jd (form, number, rest + form->offset_rest);
+    case ANT_STAMP_JD: return read_jd (form, number, rest + form->offset_rest - form->zone_min / ANT_MINUTES_PER_DAY);
     case ANT_STAMP_UNIX:
       if (!isfinite (number))
         return (double) NAN;
@@ -103,14 +113,26 @@ read_number (AntTimeForm *form, double number, double rest)
 }
 
 static gboolean
-read_iso (const AntCell *cell, double *midnight_jd, double *second, gboolean *leap)
+read_iso (const AntCell *cell, int zone_min, double *midnight_jd, double *second, gboolean *leap)
 {
   AntIsoTime iso;
   if (!ant_iso_read (cell->start, cell->end, &iso))
     return FALSE;
   *midnight_jd = calendar_midnight (iso.year, iso.month, iso.day);
-  *second = iso.second - 60.0 * iso.zone_min;
+  *second = iso.second - 60.0 * (iso.has_zone ? iso.zone_min : zone_min);
   *leap = iso.leap;
+  return isfinite (*midnight_jd);
+}
+
+static gboolean
+read_year_month_day (const AntCell *const *cells, double *midnight_jd, double *second)
+{
+  double year = cells[0]->number, month = cells[1]->number, day = floor (cells[2]->number);
+  if (!(year > -4700.0 && year < 1e5) || year != floor (year) || !(month >= 1.0 && month <= 12.0) || month != floor (month)
+      || !(day >= 1.0 && day <= 31.0))
+    return FALSE;
+  *midnight_jd = calendar_midnight ((int) year, (int) month, (int) day);
+  *second = (cells[2]->number - day) * ANT_SECONDS_PER_DAY;
   return isfinite (*midnight_jd);
 }
 
@@ -119,9 +141,14 @@ read_date (AntTimeForm *form, const AntCell *const *cells, double *midnight_jd, 
 {
   double number = cells[0]->number, whole = floor (number), jd2;
   int date;
+  if (form->has_date)
+    {
+      *midnight_jd = form->date_jd;
+      return TRUE;
+    }
   switch (form->parts[0])
     {
-    case ANT_PART_ISO: return read_iso (cells[0], midnight_jd, second, leap);
+    case ANT_PART_ISO: return read_iso (cells[0], form->zone_min, midnight_jd, second, leap);
     case ANT_PART_YMD:
       if (!(number > 0.0 && number < 1e8))
         return FALSE;
@@ -130,6 +157,8 @@ read_date (AntTimeForm *form, const AntCell *const *cells, double *midnight_jd, 
       *second = (number - whole) * ANT_SECONDS_PER_DAY;
       return isfinite (*midnight_jd);
     case ANT_PART_YEAR:
+      if (ant_time_form_date_parts (form) == 3)
+        return read_year_month_day (cells, midnight_jd, second);
       if (form->n_parts < 2 || !(number > -4700.0 && number < 1e5) || number != whole)
         return FALSE;
       if (ant_time_from_day_of_year (ANT_SCALE_TAI, (int) number, cells[1]->number, midnight_jd, &jd2) != ANT_OK)
@@ -185,7 +214,9 @@ ant_time_form_read (AntTimeForm *form, const AntCell *const *cells)
     }
   if (!read_date (form, cells, &midnight_jd, &second, &leap))
     return (double) NAN;
-  for (guint i = form->parts[0] == ANT_PART_YEAR ? 2 : 1; i < form->n_parts; i++)
+  if (form->parts[0] != ANT_PART_ISO || form->has_date)
+    second -= 60.0 * form->zone_min;
+  for (guint i = ant_time_form_date_parts (form); i < form->n_parts; i++)
     second += read_clock_part (form->parts[i], cells[i], &leap);
   return at_second (form, midnight_jd, second, leap);
 }

@@ -2,9 +2,12 @@
 #include "readers/time-header.h"
 
 #include <glib/gi18n.h>
+#include <math.h>
+#include <stdlib.h>
 #include <string.h>
 
 #include "data/error.h"
+#include "sky/iso-time.h"
 
 /* "JD - 2454833.0" in a text; the sign may stand in blanks, the words before JD do not matter. */
 static gboolean
@@ -112,7 +115,8 @@ assume_scale (const AntTableLayout *layout, AntRecord *record, AntTimeForm *form
 {
   const char *label = layout->columns[form->columns[0]].label;
   if (is_local (layout, form))
-    ant_record_say (record, _("The clock is a local one: its time scale counts as unknown, nothing is converted."));
+    ant_record_say (record, _("The clock is a local one: its time scale counts as unknown, nothing is converted; --time-zone takes "
+                              "it to UTC."));
   else if (is_calendar (form->style))
     {
       form->scale = ANT_SCALE_UTC;
@@ -123,11 +127,84 @@ assume_scale (const AntTableLayout *layout, AntRecord *record, AntTimeForm *form
     ant_record_say (record, _("The file does not name the time scale of %s; it counts as unknown, nothing is converted."), label);
 }
 
-gboolean
-ant_time_header_scale (const AntTableLayout *layout, const char *chosen, AntRecord *record, AntTimeForm *form, GError **error)
+/* "+07:00", "-7", "UTC-0730", "Z": minutes ahead of UTC. */
+static gboolean
+parse_zone (const char *text, int *minutes)
 {
+  const char *at = text;
+  if (!g_ascii_strncasecmp (at, "UTC", 3) || !g_ascii_strncasecmp (at, "GMT", 3))
+    at += 3;
+  if (*at == 0 || !g_ascii_strcasecmp (at, "Z"))
+    {
+      *minutes = 0;
+      return at > text || *at;
+    }
+  if (*at != '+' && *at != '-')
+    return FALSE;
+  char *end;
+  gint64 hours = g_ascii_strtoll (at + 1, &end, 10), minute = 0;
+  if (end - at == 4 || end - at == 5)
+    {
+      minute = hours % 100;
+      hours /= 100;
+    }
+  else if (*end == ':')
+    minute = g_ascii_strtoll (end + 1, &end, 10);
+  *minutes = (int) ((*at == '-' ? -1 : 1) * (60 * hours + minute));
+  return g_ascii_isdigit (at[1]) && *end == 0 && hours >= 0 && hours <= 15 && minute >= 0 && minute < 60;
+}
+
+static gboolean
+set_zone (const char *zone, AntRecord *record, AntTimeForm *form, GError **error)
+{
+  if (!is_calendar (form->style) && form->style != ANT_STAMP_JD)
+    {
+      g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("%s: a time zone was given, but the times are no dates"), record->path);
+      return FALSE;
+    }
+  if (!parse_zone (zone, &form->zone_min))
+    {
+      g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("“%s” is no time zone; expected hours ahead of UTC such as +01:00 or -7"), zone);
+      return FALSE;
+    }
+  form->scale = ANT_SCALE_UTC;
+  ant_record_say (record, _("The clock is taken as UTC%+03d:%02d; times are given in UTC."), form->zone_min / 60, abs (form->zone_min) % 60);
+  return TRUE;
+}
+
+gboolean
+ant_time_header_origin (const AntReadingChoices *choices, const AntRecord *record, AntTimeForm *form, GError **error)
+{
+  AntIsoTime iso;
+  char *end;
+  if (!choices || !choices->epoch)
+    return TRUE;
+  if (form->style != ANT_STAMP_DAYS)
+    {
+      g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("%s: an epoch was given, but the times have an origin of their own"), record->path);
+      return FALSE;
+    }
+  form->epoch_known = TRUE;
+  double jd = g_ascii_strtod (choices->epoch, &end);
+  form->epoch_jd1 = floor (jd);
+  form->epoch_jd2 = jd - floor (jd);
+  if (ant_iso_read (choices->epoch, choices->epoch + strlen (choices->epoch), &iso)
+          ? ant_iso_instant (&iso, form->scale, &form->epoch_jd1, &form->epoch_jd2) == ANT_OK
+          : *end == 0 && jd > 0.0 && jd < 1e7)
+    return TRUE;
+  g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("“%s” is no epoch; expected a time such as 2000-01-01T12:00:00, or a JD"), choices->epoch);
+  return FALSE;
+}
+
+gboolean
+ant_time_header_scale (const AntTableLayout *layout, const AntReadingChoices *choices, AntRecord *record, AntTimeForm *form,
+                       GError **error)
+{
+  const char *chosen = choices ? choices->time_scale : NULL;
   form->scale = ANT_SCALE_UNKNOWN;
   set_place (&layout->columns[form->columns[0]], record);
+  if (choices && choices->time_zone)
+    return set_zone (choices->time_zone, record, form, error);
   if (chosen)
     {
       form->scale = ant_time_scale_from_name (chosen);

@@ -15,7 +15,7 @@ is_time_part (const AntTimeForm *form, guint c)
   for (guint i = 0; i < form->n_parts; i++)
     if (form->columns[i] == c)
       return TRUE;
-  return FALSE;
+  return form->repeats[0] == (int) c || form->repeats[1] == (int) c;
 }
 
 static gboolean
@@ -65,6 +65,45 @@ plainly_good (const AntTableColumn *column)
 {
   return 2 * column->n_numbers > column->n_cells && column->n_up + column->n_down > 0 && column->least > 0.0
          && column->greatest < 9999.0;
+}
+
+/* Flags without a name: small whole numbers. */
+static gboolean
+is_flag (const AntTableColumn *column)
+{
+  return !*column->name && is_whole (column) && column->least >= 0.0 && column->greatest <= 9.0;
+}
+
+static gboolean
+has_flag (const AntTableLayout *layout, guint c)
+{
+  return c + 1 < layout->n_columns && !*layout->columns[c].name && !is_flag (&layout->columns[c]) && is_flag (&layout->columns[c + 1]);
+}
+
+/* A table without names whose values are each followed by a flag. */
+static gboolean
+is_interleaved (const AntTableLayout *layout, const AntTimeForm *form)
+{
+  guint n_pairs = 0, n_rest = 0;
+  for (guint c = 0; c < layout->n_columns; c++)
+    if (!is_time_part (form, c))
+      {
+        n_pairs += has_flag (layout, c) && !is_time_part (form, c + 1);
+        n_rest++;
+      }
+  return n_pairs >= 3 && 3 * n_pairs >= n_rest;
+}
+
+/* The first value with a flag that varies, and that flag. */
+static void
+find_pair (const AntTableLayout *layout, const AntTimeForm *form, AntValueColumns *columns)
+{
+  for (guint c = 0; c < layout->n_columns && columns->n_values == 0; c++)
+    {
+      const AntTableColumn *column = &layout->columns[c];
+      if (!is_time_part (form, c) && has_flag (layout, c) && 2 * column->n_numbers > column->n_cells && column->n_up + column->n_down > 0)
+        columns->values[columns->n_values++] = c;
+    }
 }
 
 static void
@@ -127,7 +166,7 @@ find_further (const AntTableLayout *layout, const AntTimeForm *form, AntValueCol
     {
       const AntTableColumn *column = &layout->columns[c];
       if (is_time_part (form, c) || is_candidate (columns, c) || (int) c == columns->error || (int) c == columns->quality
-          || !mostly_numbers (column) || column->n_missing == column->n_cells || ant_time_columns_alike (layout, c))
+          || (columns->interleaved && is_flag (column)) || !mostly_numbers (column) || column->n_missing == column->n_cells || ant_time_columns_alike (layout, c))
         continue;
       if (columns->n_further < ANT_MOST_FURTHER)
         columns->further[columns->n_further++] = c;
@@ -153,12 +192,15 @@ ant_value_columns_find (const AntTableLayout *layout, const AntTimeForm *form, c
     return FALSE;
   if (!choices->quality_column)
     columns->quality = by_name (layout, form, names_quality, TRUE);
+  columns->interleaved = !choices->quality_column && columns->quality < 0 && is_interleaved (layout, form);
   if (choices->value_column)
     {
       if (!chosen (layout, choices->value_column, path, &value, error))
         return FALSE;
       columns->values[columns->n_values++] = (guint) value;
     }
+  else if (columns->interleaved)
+    find_pair (layout, form, columns);
   else
     candidates (layout, form, columns);
   if (columns->n_values == 0)
@@ -169,6 +211,8 @@ ant_value_columns_find (const AntTableLayout *layout, const AntTimeForm *form, c
                    place);
       return FALSE;
     }
+  if (columns->interleaved && has_flag (layout, columns->values[0]))
+    columns->quality = (int) columns->values[0] + 1;
   if (!choices->error_column)
     columns->error = error_by_name (layout, form, columns);
   find_further (layout, form, columns);

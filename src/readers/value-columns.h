@@ -15,6 +15,7 @@ typedef struct
   guint n_values, values[ANT_MOST_CANDIDATES];
   int error, quality; /* -1 if there is none */
   guint n_further, further[ANT_MOST_FURTHER]; /* the other columns of numbers, in order */
+  gboolean interleaved; /* every value is followed by its flag; quality is the value's */
   guint n_left_out; /* more of them than are kept */
 } AntValueColumns;
 

@@ -3,6 +3,9 @@
 
 #include <glib.h>
 #include <math.h>
+#include <string.h>
+
+#include "sky/iso-time.h"
 
 /* Check values made once by a separate program from the ERFA routines (IAU SOFA algorithms). The Unix column leaves
  * out leap-second days, where that program stretched the day instead of following POSIX. */
@@ -23,6 +26,8 @@ static const struct
   { 2015, 6, 30, 23, 59, 59, 2457204.499976852, 57204.0007660185, 1372636834.0, 1119744015.0, NAN },
   { 2015, 7, 1, 0, 0, 0, 2457204.500000000, 57204.0007891667, 1372636836.0, 1119744017.0, 1435708800.0 },
   { 2016, 12, 31, 23, 59, 58, 2457754.499965278, 57754.0007660185, 1420156834.0, 1167264015.0, NAN },
+  { 2016, 12, 31, 23, 59, 59, 2457754.499976852, 57754.0007775926, 1420156835.0, 1167264016.0, NAN },
+  { 2016, 12, 31, 23, 59, 60, 2457754.499988426, 57754.0007891667, 1420156836.0, 1167264017.0, NAN },
   { 2016, 12, 31, 23, 59, 60.5, 2457754.499994213, 57754.0007949537, 1420156836.5, 1167264017.5, NAN },
   { 2017, 1, 1, 0, 0, 0, 2457754.500000000, 57754.0008007407, 1420156837.0, 1167264018.0, 1483228800.0 },
   { 2032, 11, 13, 8, 54, 0, 2463549.870833333, 63549.3716340741, 1920876877.0, 1667984058.0, 1983948840.0 },
@@ -47,6 +52,50 @@ utc_anchors_reach_every_scale (void)
       g_assert_cmpint (ant_time_convert (ANT_SCALE_UTC, jd1, jd2, ANT_SCALE_UNIX, &a, &b), ==, ANT_OK);
       if (isfinite (anchors[i].unix_s))
         g_assert_cmpfloat_with_epsilon (((a - 2440587.5) + b) * 86400.0, anchors[i].unix_s, 2e-5);
+    }
+}
+
+/* The same table's calendars, to the microsecond that they are written with. */
+static void
+the_calendars_of_tai_and_tt_agree_to_the_microsecond (void)
+{
+  static const struct
+  {
+    const char *utc, *tai, *tt;
+  } rows[] = {
+    { "1972-01-01T00:00:00.000000Z", "1972-01-01T00:00:10.000000", "1972-01-01T00:00:42.184000" },
+    { "1999-11-15T21:41:00.000000Z", "1999-11-15T21:41:32.000000", "1999-11-15T21:42:04.184000" },
+    { "2003-10-29T00:00:00.000000Z", "2003-10-29T00:00:32.000000", "2003-10-29T00:01:04.184000" },
+    { "2004-06-08T08:19:44.000000Z", "2004-06-08T08:20:16.000000", "2004-06-08T08:20:48.184000" },
+    { "2006-01-01T00:00:00.000000Z", "2006-01-01T00:00:33.000000", "2006-01-01T00:01:05.184000" },
+    { "2008-12-31T23:59:60.000000Z", "2009-01-01T00:00:33.000000", "2009-01-01T00:01:05.184000" },
+    { "2012-06-06T01:29:36.000000Z", "2012-06-06T01:30:10.000000", "2012-06-06T01:30:42.184000" },
+    { "2012-06-30T23:59:60.000000Z", "2012-07-01T00:00:34.000000", "2012-07-01T00:01:06.184000" },
+    { "2015-06-30T23:59:59.000000Z", "2015-07-01T00:00:34.000000", "2015-07-01T00:01:06.184000" },
+    { "2015-07-01T00:00:00.000000Z", "2015-07-01T00:00:36.000000", "2015-07-01T00:01:08.184000" },
+    { "2016-12-31T23:59:58.000000Z", "2017-01-01T00:00:34.000000", "2017-01-01T00:01:06.184000" },
+    { "2016-12-31T23:59:59.000000Z", "2017-01-01T00:00:35.000000", "2017-01-01T00:01:07.184000" },
+    { "2016-12-31T23:59:60.000000Z", "2017-01-01T00:00:36.000000", "2017-01-01T00:01:08.184000" },
+    { "2016-12-31T23:59:60.500000Z", "2017-01-01T00:00:36.500000", "2017-01-01T00:01:08.684000" },
+    { "2017-01-01T00:00:00.000000Z", "2017-01-01T00:00:37.000000", "2017-01-01T00:01:09.184000" },
+    { "2032-11-13T08:54:00.000000Z", "2032-11-13T08:54:37.000000", "2032-11-13T08:55:09.184000" },
+  };
+  for (gsize i = 0; i < G_N_ELEMENTS (rows); i++)
+    {
+      AntIsoTime iso;
+      char text[40];
+      double jd1, jd2, a, b, back1, back2;
+      g_assert_true (ant_iso_read (rows[i].utc, rows[i].utc + strlen (rows[i].utc), &iso));
+      g_assert_cmpint (ant_iso_instant (&iso, ANT_SCALE_UTC, &jd1, &jd2), ==, ANT_OK);
+      g_assert_cmpint (ant_time_convert (ANT_SCALE_UTC, jd1, jd2, ANT_SCALE_TAI, &a, &b), ==, ANT_OK);
+      g_assert_cmpint (ant_time_text (ANT_SCALE_TAI, a, b, 6, sizeof text, text), ==, ANT_OK);
+      g_assert_cmpstr (text, ==, rows[i].tai);
+      g_assert_cmpint (ant_time_convert (ANT_SCALE_UTC, jd1, jd2, ANT_SCALE_TT, &a, &b), ==, ANT_OK);
+      g_assert_cmpint (ant_time_text (ANT_SCALE_TT, a, b, 6, sizeof text, text), ==, ANT_OK);
+      g_assert_cmpstr (text, ==, rows[i].tt);
+      g_assert_cmpint (ant_time_convert (ANT_SCALE_TT, a, b, ANT_SCALE_UTC, &back1, &back2), ==, ANT_OK);
+      g_assert_cmpint (ant_time_text (ANT_SCALE_UTC, back1, back2, 6, sizeof text, text), ==, ANT_OK);
+      g_assert_cmpstr (text, ==, rows[i].utc);
     }
 }
 
@@ -240,6 +289,8 @@ main (int argc, char **argv)
 {
   g_test_init (&argc, &argv, NULL);
   g_test_add_func ("/sky/time-scale/utc-anchors-reach-every-scale", utc_anchors_reach_every_scale);
+  g_test_add_func ("/sky/time-scale/the-calendars-of-tai-and-tt-agree-to-the-microsecond",
+                   the_calendars_of_tai_and_tt_agree_to_the_microsecond);
   g_test_add_func ("/sky/time-scale/every-leap-second-since-1972-is-counted", every_leap_second_since_1972_is_counted);
   g_test_add_func ("/sky/time-scale/every-pair-of-scales-goes-there-and-back", every_pair_of_scales_goes_there_and_back);
   g_test_add_func ("/sky/time-scale/tdb-swings-by-milliseconds-about-tt", tdb_swings_by_milliseconds_about_tt);
