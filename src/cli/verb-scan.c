@@ -11,6 +11,7 @@
 #include "cli/verbs.h"
 #include "data/error.h"
 #include "data/exclusions.h"
+#include "jobs/report.h"
 #include "jobs/scan-job.h"
 #include "jobs/stop.h"
 #include "writers/dip-table.h"
@@ -22,7 +23,7 @@ typedef struct
   char *out, *also, *from, *to, *exclude, *at;
   double hours;
   int threads;
-  gboolean force, progress;
+  gboolean force, progress, no_report;
   AntResultChoice choice;
   AntRecordOptions reading;
   AntSettingsOptions given;
@@ -71,12 +72,38 @@ load (const Options *options, const char *path, const AntSettings *settings, GCa
   return good ? g_steal_pointer (&record) : NULL;
 }
 
+#define REPORT "report.pdf"
+
+/* All that a search may write. */
+static char **
+names_of (const Options *options)
+{
+  char **names = ant_result_file_names (&options->choice);
+  if (options->no_report)
+    return names;
+  guint n = g_strv_length (names);
+  names = g_renew (char *, names, n + 2);
+  names[n] = g_strdup (REPORT);
+  names[n + 1] = NULL;
+  return names;
+}
+
+static gboolean
+write_all (const Options *options, AntOutputDir *dir, const AntScanResults *results, GError **error)
+{
+  gsize size = 0;
+  g_autoptr (GBytes) report = options->no_report ? NULL : ant_report_bytes (results, NULL, (AntPaper) results->settings.paper, error);
+  const char *pages = report ? g_bytes_get_data (report, &size) : NULL;
+  return (report || options->no_report) && ant_result_files_add (dir, results, &options->choice, error)
+         && (!report || ant_output_dir_add (dir, REPORT, pages, size, error)) && ant_output_dir_commit (dir, error);
+}
+
 static void
 print_names (const Options *options)
 {
-  g_auto (GStrv) names = ant_result_file_names (&options->choice);
+  g_auto (GStrv) names = names_of (options);
   g_autofree char *all = g_strjoinv (", ", names);
-  g_print (_("Tables are in %s: %s.\n"), options->out, all);
+  g_print (_("In %s: %s.\n"), options->out, all);
 }
 
 static gboolean
@@ -86,7 +113,7 @@ search (const Options *options, AntRecord *record, const AntSettings *settings, 
   AntProgressLine *line = ant_progress_line_new (options->progress);
   g_autoptr (AntScanResults) results = ant_scan_job_run (record, settings, stop, ant_progress_line_show, line, error);
   ant_progress_line_end (line);
-  if (!results || (dir && !(ant_result_files_add (dir, results, &options->choice, error) && ant_output_dir_commit (dir, error))))
+  if (!results || (dir && !write_all (options, dir, results, error)))
     return FALSE;
   ant_scan_summary_print (results);
   if (dir)
@@ -125,7 +152,7 @@ run (const Options *options, const char *path)
   if (options->threads)
     settings.threads = options->threads;
   g_autoptr (AntRecord) record = load (options, path, &settings, stop, &error);
-  g_auto (GStrv) names = options->at ? g_strdupv ((char **) (gsize) asked_names) : ant_result_file_names (&options->choice);
+  g_auto (GStrv) names = options->at ? g_strdupv ((char **) (gsize) asked_names) : names_of (options);
   if (record && options->out)
     dir = ant_output_dir_open (options->out, (const char *const *) names, options->force, &error);
   gboolean good = record && (dir || !options->out)
@@ -142,6 +169,7 @@ ant_verb_scan (int argc, char **argv)
     { "out", 'o', 0, G_OPTION_ARG_FILENAME, &options.out, N_("write the tables into this folder"), N_("DIR") },
     { "also", 0, 0, G_OPTION_ARG_STRING, &options.also, N_("write the tables as fits, votable or fits,votable too"), N_("FORMATS") },
     { "series", 0, 0, G_OPTION_ARG_NONE, &options.choice.series, N_("write the detrended series, row by row, too"), NULL },
+    { "no-report", 0, 0, G_OPTION_ARG_NONE, &options.no_report, N_("leave out report.pdf"), NULL },
     { "force", 0, 0, G_OPTION_ARG_NONE, &options.force, N_("replace results that are there"), NULL },
     { "from", 0, 0, G_OPTION_ARG_STRING, &options.from, N_("use the record from this time"), N_("TIME") },
     { "to", 0, 0, G_OPTION_ARG_STRING, &options.to, N_("use the record up to this time"), N_("TIME") },

@@ -11,6 +11,8 @@
 static const char *const stamp_words[] = { [ANT_AT_UNKNOWN] = "unknown", [ANT_AT_START] = "start",
                                            [ANT_AT_MIDDLE] = "middle", [ANT_AT_END] = "end", NULL };
 
+static const char *const paper_words[] = { "A4", "letter", NULL };
+
 #define AT(field) G_STRUCT_OFFSET (AntSettings, field)
 #define REAL ANT_SETTING_REAL
 #define WHOLE ANT_SETTING_WHOLE
@@ -66,6 +68,7 @@ const AntSetting ant_setting_table[] = {
     N_("Start of the random numbers of surrogates; same seed, same numbers") },
   { "threads", "", WHOLE, 0, 0, 1024, 1, AT (threads), NULL, N_("Run"),
     N_("Threads to work with; 0 = as many as processors; results do not depend on it") },
+  { "paper", "", WORD, 0, 0, 1, 1, AT (paper), paper_words, N_("Run"), N_("Paper of the report") },
 };
 const gsize ant_n_settings = G_N_ELEMENTS (ant_setting_table);
 
@@ -89,6 +92,12 @@ ant_settings_grid (const AntSettings *settings)
   AntGridOptions grid = settings->grid;
   grid.stamp = (AntStampPlace) settings->stamp;
   return grid;
+}
+
+gboolean
+ant_setting_matters (const AntSetting *setting)
+{
+  return !g_str_equal (setting->key, "threads") && !g_str_equal (setting->key, "paper");
 }
 
 const AntSetting *

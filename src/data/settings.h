@@ -23,6 +23,7 @@ typedef struct
   double rotation_harmonics;
   double seed;
   double threads;          /* 0 = as many as processors */
+  double paper;            /* of the report: 0 A4, 1 letter */
 } AntSettings;
 
 typedef enum
@@ -52,6 +53,8 @@ void ant_settings_init (AntSettings *settings); /* every default */
 /* The grid options with the word settings filled in. */
 AntGridOptions ant_settings_grid (const AntSettings *settings);
 
+/* Whether results depend on it: FALSE for how fast, and on what paper. */
+gboolean ant_setting_matters (const AntSetting *setting);
 const AntSetting *ant_setting_find (const char *key); /* NULL if there is none */
 /* Of this key, or NULL with one sentence that offers the nearest key. */
 const AntSetting *ant_setting_require (const char *key, GError **error);

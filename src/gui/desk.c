@@ -57,7 +57,7 @@ settings_differ (const AntSettings *a, const AntSettings *b, const char *group)
   for (gsize i = 0; i < ant_n_settings; i++)
     {
       const AntSetting *setting = &ant_setting_table[i];
-      if ((!group || g_str_equal (setting->group, group)) && !g_str_equal (setting->key, "threads")
+      if ((!group || g_str_equal (setting->group, group)) && ant_setting_matters (setting)
           && ant_setting_get (setting, a) != ant_setting_get (setting, b))
         return TRUE;
     }

@@ -107,13 +107,7 @@ ant_dip_item_label (AntDipItem *self)
 AntDipLook
 ant_dip_item_look (AntDipItem *self)
 {
-  static const AntDipLook looks[ANT_N_CLASSES] = {
-    [ANT_CLASS_UNDECIDED] = ANT_LOOK_UNDECIDED, [ANT_CLASS_PLANET] = ANT_LOOK_PLANET,
-    [ANT_CLASS_PLANET_SHAPED] = ANT_LOOK_PLANET_SHAPED, [ANT_CLASS_SPOT] = ANT_LOOK_SPOT,
-    [ANT_CLASS_ECLIPSE] = ANT_LOOK_ECLIPSE, [ANT_CLASS_INSTRUMENT] = ANT_LOOK_INSTRUMENT,
-    [ANT_CLASS_NOISE] = ANT_LOOK_NOISE,
-  };
-  return looks[self->class];
+  return ant_dip_look_of (self->class);
 }
 
 static void

@@ -15,6 +15,7 @@ const AntShortcut ant_shortcut_table[] = {
   { "win.save-list", N_("Save the list of dips as CSV, FITS or VOTable"), FILES, { "<Control>e" } },
   { "win.save-flags", N_("Save the flags of left-out rows as CSV or FITS"), FILES, { "<Control><Shift>e" } },
   { "win.save-series", N_("Save the detrended series as CSV or FITS"), FILES, { "<Control><Alt>e" } },
+  { "win.save-report", N_("Save the report as PDF"), FILES, { "<Control>p" } },
   { "app.new-window", N_("New window"), FILES, { "<Control>n" } },
   { "win.close", N_("Close the window"), FILES, { "<Control>w" } },
   { "app.quit", N_("Quit"), FILES, { "<Control>q" } },

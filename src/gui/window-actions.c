@@ -294,6 +294,12 @@ save_series (AntWindow *self, GVariant *parameter)
 }
 
 static void
+save_report (AntWindow *self, GVariant *parameter)
+{
+  ant_window_save_report (self);
+}
+
+static void
 show_shortcuts (AntWindow *self, GVariant *parameter)
 {
   GtkWidget *window = ant_shortcuts_window_new ();
@@ -317,6 +323,7 @@ static const Action actions[] = {
   { "save-list", NULL, NULL, save_list, NEEDS_RESULTS },
   { "save-flags", NULL, NULL, save_flags, NEEDS_RECORD },
   { "save-series", NULL, NULL, save_series, NEEDS_SLOW_PART },
+  { "save-report", NULL, NULL, save_report, NEEDS_RESULTS },
   { "scan", NULL, NULL, scan, NEEDS_RECORD | NEEDS_NO_SCAN },
   { "stop", NULL, NULL, stop, NEEDS_WORK },
   { "measure", NULL, NULL, measure, NEEDS_RECORD | NEEDS_NO_SCAN },

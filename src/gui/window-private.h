@@ -42,3 +42,4 @@ void ant_window_complain (AntWindow *self, const char *sentence);
 void ant_window_save_list (AntWindow *self);   /* dips or brightenings, whichever the list shows; wants results */
 void ant_window_save_flags (AntWindow *self);  /* wants a record */
 void ant_window_save_series (AntWindow *self); /* wants results with a slow part */
+void ant_window_save_report (AntWindow *self); /* wants results */

@@ -3,6 +3,7 @@
 
 #include "gui/file-prompt.h"
 #include "gui/window-private.h"
+#include "jobs/report.h"
 #include "jobs/save-task.h"
 #include "writers/flags-table.h"
 #include "writers/result-files.h"
@@ -16,12 +17,17 @@ typedef struct
   AntScanResults *results; /* or NULL */
   AntResultTable which;
   AntTableFormat format;
+  AntPaper paper;
+  AntReportWord *word;     /* of a report, else NULL */
 } Order;
 
 static void
 order_free (gpointer data)
 {
   Order *order = data;
+  for (gsize i = 0; order->word && i < order->results->n_dips; i++)
+    g_free ((char *) (gsize) order->word[i].note);
+  g_free (order->word);
   ant_record_unref (order->record);
   ant_scan_results_unref (order->results);
   g_clear_object (&order->window);
@@ -52,19 +58,34 @@ saved_cb (GObject *source, GAsyncResult *result, gpointer data)
 }
 
 static void
-chosen_cb (const char *path, gpointer data)
+start (Order *order, const char *path)
+{
+  g_application_hold (g_application_get_default ());
+  ant_save_task_async (path, order->make, order, order_free, saved_cb, g_steal_pointer (&order->window));
+}
+
+static void
+table_chosen_cb (const char *path, gpointer data)
 {
   Order *order = data;
   g_autoptr (GError) error = NULL;
   if (path && ant_table_format_of (path, &order->format, &error))
     {
-      g_application_hold (g_application_get_default ());
-      ant_save_task_async (path, order->make, order, order_free, saved_cb, g_steal_pointer (&order->window));
+      start (order, path);
       return;
     }
   if (error)
     ant_window_complain (order->window, error->message);
   order_free (order);
+}
+
+static void
+report_chosen_cb (const char *path, gpointer data)
+{
+  if (path)
+    start (data, path);
+  else
+    order_free (data);
 }
 
 static GBytes *
@@ -93,13 +114,13 @@ ant_window_save_list (AntWindow *self)
   Order *order = order_new (self, make_table);
   order->which = brightenings ? ANT_RESULT_BRIGHTENINGS : ANT_RESULT_DIPS;
   ant_file_prompt_save (GTK_WINDOW (self), _("Save the List as CSV, FITS or VOTable"), brightenings ? "brightenings.csv" : "dips.csv",
-                        chosen_cb, order);
+                        table_chosen_cb, order);
 }
 
 void
 ant_window_save_flags (AntWindow *self)
 {
-  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Flags as CSV or FITS"), "flags.csv", chosen_cb, order_new (self, make_flags));
+  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Flags as CSV or FITS"), "flags.csv", table_chosen_cb, order_new (self, make_flags));
 }
 
 void
@@ -107,5 +128,37 @@ ant_window_save_series (AntWindow *self)
 {
   Order *order = order_new (self, make_table);
   order->which = ANT_RESULT_SERIES;
-  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Detrended Series as CSV or FITS"), "series.csv", chosen_cb, order);
+  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Detrended Series as CSV or FITS"), "series.csv", table_chosen_cb, order);
+}
+
+static GBytes *
+make_report (gconstpointer data, GError **error)
+{
+  const Order *order = data;
+  return ant_report_bytes (order->results, order->word, order->paper, error);
+}
+
+/* What is said of each dip; brightenings and asked dips are not in the report's list. */
+static AntReportWord *
+words_of (AntDesk *desk, gsize n_dips)
+{
+  AntReportWord *word = g_new0 (AntReportWord, n_dips + 1);
+  GListModel *items = ant_desk_get_items (desk);
+  for (guint i = 0; i < g_list_model_get_n_items (items); i++)
+    {
+      g_autoptr (AntDipItem) item = g_list_model_get_item (items, i);
+      guint number = ant_dip_item_get_number (item);
+      if (ant_dip_item_get_kind (item) == ANT_KIND_DIP && number >= 1 && number <= n_dips)
+        word[number - 1] = (AntReportWord) { ant_dip_item_get_class (item), g_strdup (ant_dip_item_get_note (item)) };
+    }
+  return word;
+}
+
+void
+ant_window_save_report (AntWindow *self)
+{
+  Order *order = order_new (self, make_report);
+  order->paper = (AntPaper) ant_desk_get_settings (self->desk)->paper;
+  order->word = words_of (self->desk, order->results->n_dips);
+  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Report as PDF"), "report.pdf", report_chosen_cb, order);
 }

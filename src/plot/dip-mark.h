@@ -2,6 +2,7 @@
 #pragma once
 
 #include <stddef.h>
+#include "data/judgement.h"
 #include "plot/theme.h"
 
 typedef struct
@@ -14,3 +15,6 @@ typedef struct
 } AntDipMark;
 
 #define ANT_NO_DIP ((size_t) -1)
+
+/* Shape and colour of a class. */
+AntDipLook ant_dip_look_of (AntDipClass class);

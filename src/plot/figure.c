@@ -1,11 +1,11 @@
 /* figure.c - surfaces for paper and screen, and their one way out. */
 #include "plot/figure.h"
-#include <cairo-pdf.h>
 #include <cairo-svg.h>
 #include <glib/gi18n.h>
 #include <math.h>
 #include <string.h>
 #include "data/error.h"
+#include "plot/pdf.h"
 
 #define PAPER_SCALE 2 /* columns of half a unit: fine on paper, small in bytes */
 
@@ -64,24 +64,6 @@ number_anew (GByteArray *svg)
   g_byte_array_append (svg, (const guint8 *) text, (guint) strlen (text));
 }
 
-/* The date of the source if the builder states one, so that a figure made twice is the same file. */
-static void
-set_pdf_metadata (cairo_surface_t *surface, const char *title)
-{
-  const char *epoch = g_getenv ("SOURCE_DATE_EPOCH");
-  gint64 seconds;
-  if (epoch && g_ascii_string_to_signed (epoch, 10, 0, G_MAXINT32 * (gint64) 16, &seconds, NULL))
-    {
-      g_autoptr (GDateTime) date = g_date_time_new_from_unix_utc (seconds);
-      g_autofree char *text = date ? g_date_time_format (date, "%Y-%m-%dT%H:%M:%SZ") : NULL;
-      if (text)
-        cairo_pdf_surface_set_metadata (surface, CAIRO_PDF_METADATA_CREATE_DATE, text);
-    }
-  if (title)
-    cairo_pdf_surface_set_metadata (surface, CAIRO_PDF_METADATA_TITLE, title);
-  cairo_pdf_surface_set_metadata (surface, CAIRO_PDF_METADATA_CREATOR, "Antumbra");
-}
-
 static cairo_surface_t *
 surface_new (const AntFigureOptions *options, GByteArray *bytes)
 {
@@ -97,11 +79,7 @@ surface_new (const AntFigureOptions *options, GByteArray *bytes)
         return surface;
       }
     case ANT_FIGURE_PDF:
-      {
-        cairo_surface_t *surface = cairo_pdf_surface_create_for_stream (append, bytes, options->width, options->height);
-        set_pdf_metadata (surface, options->title);
-        return surface;
-      }
+      return ant_pdf_surface_new (bytes, options->width, options->height, options->title);
     }
   g_return_val_if_reached (NULL);
 }

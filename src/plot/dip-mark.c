@@ -1,0 +1,14 @@
+/* dip-mark.c - how a dip looks. */
+#include "plot/dip-mark.h"
+
+AntDipLook
+ant_dip_look_of (AntDipClass class)
+{
+  static const AntDipLook looks[ANT_N_CLASSES] = {
+    [ANT_CLASS_UNDECIDED] = ANT_LOOK_UNDECIDED, [ANT_CLASS_PLANET] = ANT_LOOK_PLANET,
+    [ANT_CLASS_PLANET_SHAPED] = ANT_LOOK_PLANET_SHAPED, [ANT_CLASS_SPOT] = ANT_LOOK_SPOT,
+    [ANT_CLASS_ECLIPSE] = ANT_LOOK_ECLIPSE, [ANT_CLASS_INSTRUMENT] = ANT_LOOK_INSTRUMENT,
+    [ANT_CLASS_NOISE] = ANT_LOOK_NOISE,
+  };
+  return looks[class];
+}
