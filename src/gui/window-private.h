@@ -43,3 +43,4 @@ void ant_window_save_list (AntWindow *self);   /* dips or brightenings, whicheve
 void ant_window_save_flags (AntWindow *self);  /* wants a record */
 void ant_window_save_series (AntWindow *self); /* wants results with a slow part */
 void ant_window_save_report (AntWindow *self); /* wants results */
+void ant_window_write_report (AntWindow *self, const char *path); /* likewise, without asking */

@@ -54,13 +54,15 @@ saved_cb (GObject *source, GAsyncResult *result, gpointer data)
   g_autoptr (GError) error = NULL;
   if (!ant_save_task_finish (result, &error))
     ant_window_complain (self, error->message);
-  g_application_release (g_application_get_default ());
+  if (g_application_get_default ())
+    g_application_release (g_application_get_default ());
 }
 
 static void
 start (Order *order, const char *path)
 {
-  g_application_hold (g_application_get_default ());
+  if (g_application_get_default ())
+    g_application_hold (g_application_get_default ());
   ant_save_task_async (path, order->make, order, order_free, saved_cb, g_steal_pointer (&order->window));
 }
 
@@ -77,15 +79,6 @@ table_chosen_cb (const char *path, gpointer data)
   if (error)
     ant_window_complain (order->window, error->message);
   order_free (order);
-}
-
-static void
-report_chosen_cb (const char *path, gpointer data)
-{
-  if (path)
-    start (data, path);
-  else
-    order_free (data);
 }
 
 static GBytes *
@@ -155,10 +148,24 @@ words_of (AntDesk *desk, gsize n_dips)
 }
 
 void
-ant_window_save_report (AntWindow *self)
+ant_window_write_report (AntWindow *self, const char *path)
 {
   Order *order = order_new (self, make_report);
   order->paper = (AntPaper) ant_desk_get_settings (self->desk)->paper;
   order->word = words_of (self->desk, order->results->n_dips);
-  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Report as PDF"), "report.pdf", report_chosen_cb, order);
+  start (order, path);
+}
+
+static void
+report_chosen_cb (const char *path, gpointer data)
+{
+  g_autoptr (AntWindow) self = data;
+  if (path && ant_desk_get_results (self->desk))
+    ant_window_write_report (self, path);
+}
+
+void
+ant_window_save_report (AntWindow *self)
+{
+  ant_file_prompt_save (GTK_WINDOW (self), _("Save the Report as PDF"), "report.pdf", report_chosen_cb, g_object_ref (self));
 }

@@ -9,10 +9,13 @@
 #include "plot/spectrum-chart.h"
 #include "plot/strip.h"
 
-#define STRIP_HEIGHT 118
-#define LAST_STRIP_HEIGHT 142 /* it carries the axis of time */
+#define STACK_HEIGHT 270
+#define STACK_LEAST 190
+#define STACK_SHARE 0.45 /* of the upper strip: the lower one carries the axis of time */
 #define CHART_HEIGHT 206
 #define FLOOR_HEIGHT 236
+#define FLOOR_LEAST 165
+#define HEADING 64 /* a heading, and a few lines beside the figure */
 #define AVERAGES_ACROSS 250 /* of which a strip should have at least so many */
 #define MOST_REMARKS 12
 
@@ -91,10 +94,11 @@ ant_report_time (const AntReport *report, AntPages *pages)
 {
   g_autofree AntDipMark *marks = marks_of (report);
   Drawing drawing = { .report = report, .theme = ant_pages_theme (pages), .marks = marks };
-  ant_pages_heading (pages, 1, _("The whole record"), STRIP_HEIGHT + LAST_STRIP_HEIGHT);
-  ant_pages_figure (pages, STRIP_HEIGHT, paint_strip, &drawing);
+  double height = ant_pages_fit (pages, HEADING, STACK_LEAST, STACK_HEIGHT);
+  ant_pages_heading (pages, 1, _("The whole record"), height);
+  ant_pages_figure (pages, floor (STACK_SHARE * height), paint_strip, &drawing);
   drawing.residual = TRUE;
-  ant_pages_figure (pages, LAST_STRIP_HEIGHT, paint_strip, &drawing);
+  ant_pages_figure (pages, floor ((1 - STACK_SHARE) * height) - 4, paint_strip, &drawing);
   ant_pages_text (pages, ANT_PAGES_QUIET,
                   _("The rotation curve is drawn to guide the eye. The search does not use it: it weighs every dip against the noise model, "
                     "slow parts included."));
@@ -191,7 +195,8 @@ ant_report_noise (const AntReport *report, AntPages *pages)
     return;
   ant_pages_heading (pages, 1, _("The noise"), CHART_HEIGHT + 40);
   tell_model (report, pages, &drawing);
-  ant_pages_heading (pages, 2, _("What would have been missed"), FLOOR_HEIGHT + 30);
+  double height = ant_pages_fit (pages, HEADING, FLOOR_LEAST, FLOOR_HEIGHT);
+  ant_pages_heading (pages, 2, _("What would have been missed"), height + 30);
   tell_floor (results, pages);
-  ant_pages_figure (pages, FLOOR_HEIGHT, paint_floor, &drawing);
+  ant_pages_figure (pages, floor (height), paint_floor, &drawing);
 }

@@ -6,7 +6,8 @@
 #include "jobs/closeup-data.h"
 #include "jobs/report-private.h"
 
-#define CLOSEUP_HEIGHT 186
+#define DIPS_A_PAGE 3
+#define HEADING 30 /* with the air around it */
 
 typedef struct
 {
@@ -38,8 +39,9 @@ tell_dip (const AntReport *report, AntPages *pages, gsize i)
   ant_facts_add (facts, _("Verdict"), ant_report_class_title (report, i));
   if (report->word && report->word[i].note && *report->word[i].note)
     ant_facts_add (facts, _("Note"), report->word[i].note);
-  ant_pages_heading (pages, 2, title, CLOSEUP_HEIGHT + 20);
-  ant_pages_figure_facts (pages, CLOSEUP_HEIGHT, paint, &drawing, facts);
+  double height = floor (ant_pages_share (pages, DIPS_A_PAGE) - HEADING);
+  ant_pages_heading (pages, 2, title, height);
+  ant_pages_figure_facts (pages, height, paint, &drawing, facts);
   ant_closeup_data_free (data);
 }
 
@@ -48,7 +50,7 @@ ant_report_dips (const AntReport *report, AntPages *pages)
 {
   if (report->results->n_dips == 0)
     return;
-  ant_pages_heading (pages, 1, _("The dips one by one"), CLOSEUP_HEIGHT + 80);
+  ant_pages_heading (pages, 1, _("The dips one by one"), ant_pages_share (pages, DIPS_A_PAGE) + 50);
   ant_pages_text (pages, ANT_PAGES_QUIET,
                   _("Length: contact I to IV of the fitted crossing. Depth: its greatest depth before the exposure smears it, of the undimmed "
                     "level at that time; mean depth: its average over contact I to IV; radius ratio: that of the dark disc whose crossing is that deep. "

@@ -39,7 +39,7 @@ tell_all (const AntSettings *settings, AntPages *pages)
       g_ptr_array_add (cells, g_strdup (_ (setting->help)));
       n++;
     }
-  ant_pages_table (pages, G_N_ELEMENTS (columns), columns, n, (const char *const *) cells->pdata);
+  ant_pages_table (pages, ANT_PAGES_SMALL, G_N_ELEMENTS (columns), columns, n, (const char *const *) cells->pdata);
 }
 
 static void
@@ -60,7 +60,7 @@ tell_origin (const AntRecord *record, AntPages *pages)
 void
 ant_report_settings (const AntReport *report, AntPages *pages)
 {
-  ant_pages_heading (pages, 1, _("Settings"), 80);
+  ant_pages_heading (pages, 1, _("Settings"), 130);
   tell_changes (&report->results->settings, pages);
   tell_all (&report->results->settings, pages);
   tell_origin (report->results->record, pages);

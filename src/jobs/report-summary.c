@@ -68,7 +68,7 @@ ant_report_list (const AntReport *report, AntPages *pages, gboolean brightenings
       if (!brightenings)
         g_ptr_array_add (cells, g_strdup (ant_report_class_title (report, i)));
     }
-  ant_pages_table (pages, G_N_ELEMENTS (columns) - (brightenings ? 1 : 0), columns, n, (const char *const *) cells->pdata);
+  ant_pages_table (pages, ANT_PAGES_BODY, G_N_ELEMENTS (columns) - (brightenings ? 1 : 0), columns, n, (const char *const *) cells->pdata);
 }
 
 void
@@ -125,5 +125,5 @@ ant_report_passages (const AntReport *report, AntPages *pages)
     }
   ant_pages_heading (pages, 1, _("Passages of spot groups and the like"), 60);
   body (pages, _("Minima of the slow part of the record that last 1 to 14 days. No claim about chance is made: the Sun does this."));
-  ant_pages_table (pages, G_N_ELEMENTS (columns), columns, results->n_passages, (const char *const *) cells->pdata);
+  ant_pages_table (pages, ANT_PAGES_BODY, G_N_ELEMENTS (columns), columns, results->n_passages, (const char *const *) cells->pdata);
 }

@@ -154,6 +154,7 @@ ant_pages_figure_facts (AntPages *pages, double height, AntFigurePaint paint, gp
 typedef struct
 {
   AntPages *pages;
+  Face face;
   gsize n_columns;
   const AntPagesColumn *column;
   double *width;
@@ -166,9 +167,9 @@ share_width (Table *table, gsize n_rows, const char *const *cell)
   double sum = 0, room = ant_pages_width (table->pages) - CELL_GAP * (double) (table->n_columns - 1);
   for (gsize c = 0; c < table->n_columns; c++)
     {
-      table->width[c] = ant_pages_text_width (table->pages, FACE_BODY, table->column[c].title);
+      table->width[c] = ant_pages_text_width (table->pages, table->face, table->column[c].title);
       for (gsize row = 0; row < n_rows; row++)
-        table->width[c] = fmax (table->width[c], ant_pages_text_width (table->pages, FACE_BODY, cell[row * table->n_columns + c]));
+        table->width[c] = fmax (table->width[c], ant_pages_text_width (table->pages, table->face, cell[row * table->n_columns + c]));
       table->width[c] = ceil (table->width[c]) + 1;
       sum += table->width[c];
     }
@@ -190,7 +191,7 @@ table_row (const Table *table, const char *const *cell, AntRole role)
   GPtrArray *layouts = g_ptr_array_new_with_free_func (g_object_unref);
   for (gsize c = 0; c < table->n_columns; c++)
     {
-      PangoLayout *layout = ant_pages_lay_out (table->pages, FACE_BODY, cell[c], fmax (table->width[c], 20), table->column[c].align);
+      PangoLayout *layout = ant_pages_lay_out (table->pages, table->face, cell[c], fmax (table->width[c], 20), table->column[c].align);
       height = fmax (height, ant_pages_layout_height (layout));
       g_ptr_array_add (layouts, layout);
     }
@@ -215,10 +216,10 @@ table_header (const Table *table)
 }
 
 void
-ant_pages_table (AntPages *pages, gsize n_columns, const AntPagesColumn *column, gsize n_rows, const char *const *cell)
+ant_pages_table (AntPages *pages, AntPagesStyle style, gsize n_columns, const AntPagesColumn *column, gsize n_rows, const char *const *cell)
 {
   g_autofree double *width = g_new (double, n_columns);
-  Table table = { pages, n_columns, column, width };
+  Table table = { pages, style == ANT_PAGES_SMALL ? FACE_SMALL : FACE_BODY, n_columns, column, width };
   share_width (&table, n_rows, cell);
   ant_pages_keep (pages, 4 * table_row (&table, cell, ANT_N_ROLES));
   table_header (&table);

@@ -118,6 +118,19 @@ ant_pages_space (AntPages *pages, double height)
     pages->y += height;
 }
 
+double
+ant_pages_fit (const AntPages *pages, double above, double least, double most)
+{
+  double left = ant_pages_left_height (pages) - above;
+  return left < least ? most : MIN (left, most);
+}
+
+double
+ant_pages_share (const AntPages *pages, guint n)
+{
+  return (pages->height - TOP - BOTTOM) / n;
+}
+
 guint
 ant_pages_count (const AntPages *pages)
 {

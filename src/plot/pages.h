@@ -38,6 +38,11 @@ double ant_pages_width (const AntPages *pages); /* of text and figures, points *
 /* Begin a new page unless so much height is left, points. */
 void ant_pages_keep (AntPages *pages, double height);
 void ant_pages_space (AntPages *pages, double height);
+/* A height for what may be higher or lower: what is left on this page below `above`, from `least` to `most`; `most` if that is not
+ * enough, since it will stand on the next page. */
+double ant_pages_fit (const AntPages *pages, double above, double least, double most);
+/* The same share for n blocks that fill a page. */
+double ant_pages_share (const AntPages *pages, guint n);
 
 /* The title of the document, with quiet words under it, or NULL. */
 void ant_pages_title (AntPages *pages, const char *text, const char *below);
@@ -60,7 +65,7 @@ typedef struct
 } AntPagesColumn;
 
 /* cell [n_rows][n_columns]. The header stands again on every page; columns are as wide as they need, the widest give way. */
-void ant_pages_table (AntPages *pages, gsize n_columns, const AntPagesColumn *column, gsize n_rows, const char *const *cell);
+void ant_pages_table (AntPages *pages, AntPagesStyle style, gsize n_columns, const AntPagesColumn *column, gsize n_rows, const char *const *cell);
 
 guint ant_pages_count (const AntPages *pages); /* so far */
 /* The document. NULL with one sentence (ANT_ERROR_WRITE). */

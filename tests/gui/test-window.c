@@ -2,9 +2,12 @@
 #include <math.h>
 #include <string.h>
 
+#include <gio/gio.h>
+
 #include "gui/shortcuts.h"
 #include "gui/strip-view.h"
 #include "gui/time-stack.h"
+#include "gui/window-private.h"
 #include "support.h"
 
 static gboolean
@@ -344,6 +347,38 @@ every_key_has_its_action (void)
   test_gui_close (window);
 }
 
+static gboolean
+is_there (gpointer path)
+{
+  return g_file_test (path, G_FILE_TEST_EXISTS);
+}
+
+/* Same input, same pages: with no verdict given, what the window saves is the file that a scan by the command leaves. */
+static void
+its_report_is_that_of_the_command (void)
+{
+  g_autofree char *folder = g_dir_make_tmp (NULL, NULL), *mine = g_build_filename (folder, "mine.pdf", NULL);
+  g_autofree char *out = g_build_filename (folder, "out", NULL), *theirs = g_build_filename (out, "report.pdf", NULL);
+  g_autofree char *one = NULL, *two = NULL, *tidy = g_strdup_printf ("rm -r '%s'", folder);
+  gsize n_one = 0, n_two = 0;
+  g_autoptr (GError) error = NULL;
+  g_setenv ("SOURCE_DATE_EPOCH", "2240000000", TRUE);
+  AntWindow *window = test_gui_window_scanned ();
+  ant_window_write_report (window, mine);
+  test_gui_wait (is_there, mine, 20);
+  g_autoptr (GSubprocess) command = g_subprocess_new (G_SUBPROCESS_FLAGS_STDOUT_SILENCE, &error, g_getenv ("ANT_CLI"), "scan",
+                                                      test_gui_record (), "--out", out, NULL);
+  g_assert_no_error (error);
+  g_assert_true (g_subprocess_wait_check (command, NULL, &error));
+  g_assert_true (g_file_get_contents (mine, &one, &n_one, &error));
+  g_assert_true (g_file_get_contents (theirs, &two, &n_two, &error));
+  g_assert_cmpmem (one, n_one, two, n_two);
+  g_unsetenv ("SOURCE_DATE_EPOCH");
+  test_gui_settle (100); /* the last of the saving lets go of the window */
+  test_gui_close (window);
+  g_assert_true (g_spawn_command_line_sync (tidy, NULL, NULL, NULL, NULL));
+}
+
 static void
 the_shortcuts_window_is_made_from_the_table (void)
 {
@@ -376,6 +411,7 @@ add (void)
   g_test_add_func ("/gui/window/dark-and-light-are-followed-live", dark_and_light_are_followed_live);
   g_test_add_func ("/gui/window/it-fits-a-small-screen", it_fits_a_small_screen);
   g_test_add_func ("/gui/window/every-key-has-its-action", every_key_has_its_action);
+  g_test_add_func ("/gui/window/its-report-is-that-of-the-command", its_report_is_that_of_the_command);
   g_test_add_func ("/gui/window/the-shortcuts-window-is-made-from-the-table",
                    the_shortcuts_window_is_made_from_the_table);
 }
