@@ -68,10 +68,65 @@ ant_judgements_free (AntJudgements *judgements)
   g_free (judgements);
 }
 
+static int
+by_time (gconstpointer a, gconstpointer b)
+{
+  const Judgement *one = *(Judgement *const *) a, *other = *(Judgement *const *) b;
+  return (one->mid_d > other->mid_d) - (one->mid_d < other->mid_d);
+}
+
+static Judgement *
+add (AntJudgements *judgements, double mid_d, double duration_d, AntDipClass class, const char *note)
+{
+  Judgement *one = g_new (Judgement, 1);
+  *one = (Judgement) { mid_d, duration_d, class, g_strdup (note) };
+  g_ptr_array_add (judgements->given, one);
+  return one;
+}
+
+void
+ant_judgements_add (AntJudgements *judgements, const AntJudgement *judgement)
+{
+  add (judgements, judgement->mid_d, judgement->duration_d, judgement->class, judgement->note);
+  g_ptr_array_sort (judgements->given, by_time);
+}
+
+AntJudgements *
+ant_judgements_copy (const AntJudgements *judgements)
+{
+  AntJudgements *copy = ant_judgements_new ();
+  for (guint i = 0; i < judgements->given->len; i++)
+    {
+      const Judgement *one = g_ptr_array_index (judgements->given, i);
+      add (copy, one->mid_d, one->duration_d, one->class, one->note);
+    }
+  return copy;
+}
+
 gsize
 ant_judgements_count (const AntJudgements *judgements)
 {
   return judgements->given->len;
+}
+
+AntJudgement
+ant_judgements_get (const AntJudgements *judgements, gsize i)
+{
+  const Judgement *one = g_ptr_array_index (judgements->given, i);
+  return (AntJudgement) { one->mid_d, one->duration_d, one->class, one->note };
+}
+
+void
+ant_judgements_shift (AntJudgements *judgements, double shift_d)
+{
+  for (guint i = 0; i < judgements->given->len; i++)
+    ((Judgement *) g_ptr_array_index (judgements->given, i))->mid_d += shift_d;
+}
+
+gboolean
+ant_judgement_is_of (const AntJudgement *judgement, double mid_d, double duration_d)
+{
+  return fabs (judgement->mid_d - mid_d) < 0.5 * fmax (judgement->duration_d, duration_d);
 }
 
 /* The nearest of those that mean the same dip. */
@@ -82,8 +137,9 @@ find (const AntJudgements *judgements, double mid_d, double duration_d)
   for (guint i = 0; i < judgements->given->len; i++)
     {
       Judgement *one = g_ptr_array_index (judgements->given, i);
-      double off_d = fabs (one->mid_d - mid_d);
-      if (off_d < 0.5 * fmax (one->duration_d, duration_d) && (!nearest || off_d < fabs (nearest->mid_d - mid_d)))
+      AntJudgement given = { one->mid_d, one->duration_d, one->class, one->note };
+      if (ant_judgement_is_of (&given, mid_d, duration_d)
+          && (!nearest || fabs (one->mid_d - mid_d) < fabs (nearest->mid_d - mid_d)))
         nearest = one;
     }
   return nearest;
@@ -109,9 +165,8 @@ find_or_add (AntJudgements *judgements, double mid_d, double duration_d)
   Judgement *judgement = find (judgements, mid_d, duration_d);
   if (judgement)
     return judgement;
-  judgement = g_new0 (Judgement, 1);
-  *judgement = (Judgement) { mid_d, duration_d, ANT_CLASS_UNDECIDED, g_strdup ("") };
-  g_ptr_array_add (judgements->given, judgement);
+  judgement = add (judgements, mid_d, duration_d, ANT_CLASS_UNDECIDED, "");
+  g_ptr_array_sort (judgements->given, by_time);
   return judgement;
 }
 

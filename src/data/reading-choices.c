@@ -6,18 +6,30 @@
 
 #include "data/error.h"
 
+#define WORD(member) { #member, G_STRUCT_OFFSET (AntReadingChoices, member) }
+const AntReadingWord ant_reading_word_table[] = {
+  WORD (time_column), WORD (value_column), WORD (error_column), WORD (quality_column), WORD (time_format), WORD (time_scale),
+  WORD (time_zone), WORD (epoch), WORD (hdu),
+};
+const gsize ant_n_reading_words = G_N_ELEMENTS (ant_reading_word_table);
+
+char **
+ant_reading_choices_word (AntReadingChoices *choices, const AntReadingWord *word)
+{
+  return G_STRUCT_MEMBER_P (choices, word->offset);
+}
+
+static const char *
+word_of (const AntReadingChoices *choices, gsize i)
+{
+  return *(char *const *) ((const char *) choices + ant_reading_word_table[i].offset);
+}
+
 void
 ant_reading_choices_clear (AntReadingChoices *choices)
 {
-  g_free (choices->time_column);
-  g_free (choices->value_column);
-  g_free (choices->error_column);
-  g_free (choices->quality_column);
-  g_free (choices->time_format);
-  g_free (choices->time_scale);
-  g_free (choices->time_zone);
-  g_free (choices->epoch);
-  g_free (choices->hdu);
+  for (gsize i = 0; i < ant_n_reading_words; i++)
+    g_free (*ant_reading_choices_word (choices, &ant_reading_word_table[i]));
   g_clear_pointer (&choices->fill_values, g_array_unref);
   memset (choices, 0, sizeof *choices);
 }
@@ -25,18 +37,21 @@ ant_reading_choices_clear (AntReadingChoices *choices)
 void
 ant_reading_choices_copy (const AntReadingChoices *choices, AntReadingChoices *copy)
 {
-  *copy = (AntReadingChoices){
-    .time_column = g_strdup (choices->time_column),
-    .value_column = g_strdup (choices->value_column),
-    .error_column = g_strdup (choices->error_column),
-    .quality_column = g_strdup (choices->quality_column),
-    .time_format = g_strdup (choices->time_format),
-    .time_scale = g_strdup (choices->time_scale),
-    .time_zone = g_strdup (choices->time_zone),
-    .epoch = g_strdup (choices->epoch),
-    .hdu = g_strdup (choices->hdu),
-    .fill_values = choices->fill_values ? g_array_copy (choices->fill_values) : NULL,
-  };
+  *copy = (AntReadingChoices) { .fill_values = choices->fill_values ? g_array_copy (choices->fill_values) : NULL };
+  for (gsize i = 0; i < ant_n_reading_words; i++)
+    *ant_reading_choices_word (copy, &ant_reading_word_table[i]) = g_strdup (word_of (choices, i));
+}
+
+gboolean
+ant_reading_choices_same (const AntReadingChoices *one, const AntReadingChoices *other)
+{
+  for (gsize i = 0; i < ant_n_reading_words; i++)
+    if (g_strcmp0 (word_of (one, i), word_of (other, i)) != 0)
+      return FALSE;
+  gsize n = one->fill_values ? one->fill_values->len : 0;
+  if (n != (other->fill_values ? other->fill_values->len : 0))
+    return FALSE;
+  return n == 0 || memcmp (one->fill_values->data, other->fill_values->data, n * sizeof (double)) == 0;
 }
 
 gboolean

@@ -15,8 +15,20 @@ typedef struct
   GArray *fill_values; /* of double: these and the usual ones count as missing; NULL = only the usual ones */
 } AntReadingChoices;
 
+/* The members that are words, with the names that files know them by; copies, comparison and the analysis file follow
+ * this table. */
+typedef struct
+{
+  const char *name;
+  gsize offset; /* of a char * in AntReadingChoices */
+} AntReadingWord;
+extern const AntReadingWord ant_reading_word_table[];
+extern const gsize ant_n_reading_words;
+char **ant_reading_choices_word (AntReadingChoices *choices, const AntReadingWord *word);
+
 void ant_reading_choices_clear (AntReadingChoices *choices);
 /* A copy of its own; clear it. */
 void ant_reading_choices_copy (const AntReadingChoices *choices, AntReadingChoices *copy);
+gboolean ant_reading_choices_same (const AntReadingChoices *one, const AntReadingChoices *other);
 /* Parse "time=1,value=tsi,error=4,quality=flag". */
 gboolean ant_reading_choices_parse_columns (AntReadingChoices *choices, const char *text, GError **error);

@@ -86,6 +86,7 @@ typedef struct
   gint64 good_mask;         /* 0 with good_values NULL: good = 0 */
   double from_d, to_d;      /* scan limits, elapsed days; NaN = none */
   GArray *excluded;         /* of AntSpan, or NULL */
+  GArray *masked;           /* the same, masked by the analyst */
 } AntGridOptions;
 #define ANT_GRID_OPTIONS_INIT { .dark_fraction = 0.01, .from_d = NAN, .to_d = NAN }
 

@@ -162,15 +162,16 @@ compare_spans (gconstpointer a, gconstpointer b)
   return start_a < start_b ? -1 : start_a > start_b;
 }
 
-void
-ant_row_order_judge_spans (const AntRowOrder *order, AntRecord *record, const AntGridOptions *options)
+/* Flag the rows inside any of the spans, which may overlap. */
+static gsize
+flag_inside (const AntRowOrder *order, AntRecord *record, const GArray *of_spans, AntFlag flag)
 {
+  if (!of_spans)
+    return 0;
   g_autoptr (GArray) spans = g_array_new (FALSE, FALSE, sizeof (AntSpan));
-  if (options->excluded)
-    g_array_append_vals (spans, options->excluded->data, options->excluded->len);
+  g_array_append_vals (spans, of_spans->data, of_spans->len);
   g_array_sort (spans, compare_spans);
-
-  gsize n_outside = 0, n_inside = 0;
+  gsize n_inside = 0;
   guint next = 0;
   double covered_to_d = -HUGE_VAL; /* the farthest end of the spans begun so far */
   for (gsize k = 0; k < order->n; k++)
@@ -178,17 +179,32 @@ ant_row_order_judge_spans (const AntRowOrder *order, AntRecord *record, const An
       double time_d = order->time_d[k];
       for (; next < spans->len && g_array_index (spans, AntSpan, next).start_d <= time_d; next++)
         covered_to_d = fmax (covered_to_d, g_array_index (spans, AntSpan, next).end_d);
-      gboolean outside = time_d < options->from_d || time_d > options->to_d; /* NaN limits compare false */
-      gboolean inside = time_d <= covered_to_d;
-      if (outside || inside)
-        record->flags[order->row[k]] |= ANT_FLAG_EXCLUDED;
-      n_outside += outside;
-      n_inside += inside;
+      if (time_d > covered_to_d)
+        continue;
+      record->flags[order->row[k]] |= flag;
+      n_inside++;
     }
+  return n_inside;
+}
+
+void
+ant_row_order_judge_spans (const AntRowOrder *order, AntRecord *record, const AntGridOptions *options)
+{
+  gsize n_outside = 0;
+  for (gsize k = 0; k < order->n; k++)
+    if (order->time_d[k] < options->from_d || order->time_d[k] > options->to_d) /* NaN limits compare false */
+      {
+        record->flags[order->row[k]] |= ANT_FLAG_EXCLUDED;
+        n_outside++;
+      }
+  gsize n_excluded = flag_inside (order, record, options->excluded, ANT_FLAG_EXCLUDED);
+  gsize n_masked = flag_inside (order, record, options->masked, ANT_FLAG_HAND);
   if (n_outside > 0)
     ant_record_say (record, _("Rows outside the limits of the scan: %zu."), n_outside);
-  if (n_inside > 0)
-    ant_record_say (record, _("Rows inside excluded spans: %zu."), n_inside);
+  if (n_excluded > 0)
+    ant_record_say (record, _("Rows inside excluded spans: %zu."), n_excluded);
+  if (n_masked > 0)
+    ant_record_say (record, _("Rows masked by hand: %zu."), n_masked);
 }
 
 void

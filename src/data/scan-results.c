@@ -85,14 +85,54 @@ median_floor (AntScanResults *results)
 }
 
 static void
-add_spike_flags (AntScanResults *results, const AntScan *scan)
+find_spike_rows (AntScanResults *results, const AntScan *scan)
 {
   const AntRecord *record = results->record;
   const guint8 *spike = ant_scan_spikes (scan);
+  g_autoptr (GArray) rows = g_array_new (FALSE, FALSE, sizeof (guint32));
+  for (guint32 row = 0; row < record->n_rows; row++)
+    if (record->place[row] >= 0 && spike[record->place[row]] == ANT_SPIKE_FOUND && !record->flags[row])
+      g_array_append_val (rows, row);
+  results->spike_row = (guint32 *) (gpointer) g_array_steal (rows, &results->n_spikes);
+}
+
+static void
+add_spike_flags (AntScanResults *results)
+{
+  const AntRecord *record = results->record;
   results->flags = g_memdup2 (record->flags, record->n_rows * sizeof *record->flags);
-  for (gsize row = 0; row < record->n_rows; row++)
-    if (record->place[row] >= 0 && spike[record->place[row]] == ANT_SPIKE_FOUND && !results->flags[row])
-      results->flags[row] |= ANT_FLAG_SPIKE;
+  for (gsize i = 0; i < results->n_spikes; i++)
+    results->flags[results->spike_row[i]] |= ANT_FLAG_SPIKE;
+}
+
+static gboolean
+dips_fit (const AntScanResults *results, const AntSeries *series, gsize n, const AntDip *dip)
+{
+  for (gsize i = 0; i < n; i++)
+    {
+      double place = ant_series_place (series, dip[i].mid_d);
+      if (!(place > -1e6 && place < (double) series->n + 1e6) || dip[i].chunk >= results->n_chunks)
+        return FALSE;
+    }
+  return TRUE;
+}
+
+gboolean
+ant_scan_results_join (AntScanResults *results, AntRecord *record)
+{
+  const AntSeries *series = &record->series;
+  for (gsize i = 0; i < results->n_chunks; i++)
+    if (results->chunk[i].n > series->n || results->chunk[i].first > series->n - results->chunk[i].n)
+      return FALSE;
+  for (gsize i = 0; i < results->n_spikes; i++)
+    if (results->spike_row[i] >= record->n_rows)
+      return FALSE;
+  if (!dips_fit (results, series, results->n_dips, results->dip)
+      || !dips_fit (results, series, results->n_brightenings, results->brightening))
+    return FALSE;
+  results->record = ant_record_ref (record);
+  add_spike_flags (results);
+  return TRUE;
 }
 
 static gsize
@@ -202,7 +242,7 @@ ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntS
   results->record = ant_record_ref (record);
   results->settings = *settings;
   results->settings.grid.good_values = NULL;
-  results->settings.grid.excluded = NULL;
+  results->settings.grid.excluded = results->settings.grid.masked = NULL;
   results->reach = ant_scan_reach (scan);
   results->said = g_ptr_array_new_with_free_func (g_free);
   results->n_dips = ant_scan_dips (scan, &dip);
@@ -219,7 +259,8 @@ ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntS
   results->n_mirrored = count_short (results->n_brightenings, results->brightening);
   copy_chunks (results, scan);
   median_floor (results);
-  add_spike_flags (results, scan);
+  find_spike_rows (results, scan);
+  add_spike_flags (results);
   say_reach (results);
   say_surrogates (results);
   say_health (results);
@@ -247,6 +288,7 @@ ant_scan_results_unref (AntScanResults *results)
   g_free (results->brightening);
   g_free (results->passage);
   g_free (results->slow_ppm);
+  g_free (results->spike_row);
   g_free (results->flags);
   g_ptr_array_unref (results->said);
   ant_record_unref (results->record);

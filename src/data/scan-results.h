@@ -10,14 +10,15 @@
 
 typedef struct
 {
-  AntRecord *record;         /* owned reference */
+  AntRecord *record;         /* owned reference; NULL: read from a file, their record not yet (no flags then) */
   AntSettings settings;      /* those of the scan; its array pointers are not kept */
   AntScanReach reach;        /* below ANT_SCAN_COMPLETE: the scan was stopped */
   gsize n_dips, n_brightenings;
   AntDip *dip, *brightening; /* by time, numbered from 1 in this order */
   gsize n_passages;
   AntPassage *passage;       /* by time, numbered from 1 in this order */
-  float *slow_ppm;           /* [record->series.n] the slow part, dips taken out, gaps bridged; NULL unless complete */
+  float *slow_ppm;           /* [record->series.n] the slow part, dips taken out, gaps bridged; NULL unless complete,
+                                or not kept by the file that they were read from */
   gsize n_chunks;
   AntChunk *chunk;           /* frequency_cd and power_unmasked owned */
   gsize n_floor;             /* points of the median floor over chunks */
@@ -28,6 +29,8 @@ typedef struct
   double observed_d;
   gsize n_refits;
   gsize n_mirror_dips, n_mirrored;  /* dips and brightenings of 9 h and less: the mirror's check */
+  gsize n_spikes;
+  guint32 *spike_row;        /* rows (from 0) that were found to be spikes */
   guint16 *flags;            /* [record->n_rows] the record's flags with the spikes found */
   GPtrArray *said;           /* char*: what the scan found out about the noise, one sentence each */
   gint ref_count;
@@ -41,6 +44,9 @@ AntScanResults *ant_scan_results_new (AntRecord *record, const AntSettings *sett
 AntScanResults *ant_scan_results_ref (AntScanResults *results);
 void ant_scan_results_unref (AntScanResults *results); /* NULL is fine */
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntScanResults, ant_scan_results_unref)
+
+/* Results that were read from a file get their record, once. FALSE if they do not fit it; they are as they were then. */
+gboolean ant_scan_results_join (AntScanResults *results, AntRecord *record);
 
 /* The options of a search as the settings and the record's exposure give them. */
 AntScanOptions ant_scan_results_options (const AntRecord *record, const AntSettings *settings);

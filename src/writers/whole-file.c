@@ -132,6 +132,16 @@ ant_whole_file_commit (AntWholeFile *file, GError **error)
   return good;
 }
 
+gboolean
+ant_whole_file_write (const char *path, const char *bytes, gsize length, gboolean replace, GError **error)
+{
+  AntWholeFile *file = ant_whole_file_open (path, replace, error);
+  if (!file)
+    return FALSE;
+  fwrite (bytes, 1, length, file->stream); /* the stream keeps what went wrong */
+  return ant_whole_file_commit (file, error);
+}
+
 void
 ant_whole_file_abandon (AntWholeFile *file)
 {

@@ -18,6 +18,8 @@ FILE *ant_whole_file_stream (AntWholeFile *file);
 gboolean ant_whole_file_finish (AntWholeFile *file, GError **error);
 /* Finish it, bring it to its place and free it; on FALSE nothing is left behind. */
 gboolean ant_whole_file_commit (AntWholeFile *file, GError **error);
+/* All of it at once: these bytes are the file, or nothing has changed. */
+gboolean ant_whole_file_write (const char *path, const char *bytes, gsize length, gboolean replace, GError **error);
 /* Forget what was written and free it; NULL is fine. */
 void ant_whole_file_abandon (AntWholeFile *file);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntWholeFile, ant_whole_file_abandon)
