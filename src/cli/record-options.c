@@ -1,4 +1,4 @@
-/* record-options.c - --column, --time-format, --time-scale, --fill and --good. */
+/* record-options.c - the options of reading. */
 #include "cli/record-options.h"
 
 #include <glib/gi18n.h>
@@ -21,6 +21,8 @@ ant_record_options_add (GOptionContext *context, AntRecordOptions *options)
       N_("TIME") },
     { "hdu", 0, 0, G_OPTION_ARG_STRING, &options->hdu, N_("table of a FITS file, 0 the primary one; without it the first with a time"),
       N_("NAME|NUMBER") },
+    { "index", 0, 0, G_OPTION_ARG_STRING, &options->index, N_("NetCDF: which place along a further dimension, counted from 1"),
+      N_("DIMENSION=NUMBER,…") },
     { "fill", 0, 0, G_OPTION_ARG_STRING, &options->fill, N_("values that count as missing, besides the usual ones"),
       N_("NUMBER,…") },
     { "good", 0, 0, G_OPTION_ARG_STRING, &options->good,
@@ -39,6 +41,7 @@ ant_record_options_clear (AntRecordOptions *options)
   g_free (options->time_zone);
   g_free (options->epoch);
   g_free (options->hdu);
+  g_free (options->index);
   g_free (options->fill);
   g_free (options->good);
   *options = (AntRecordOptions){ 0 };
@@ -67,7 +70,7 @@ ant_record_options_read (const AntRecordOptions *options, const char *path, GCan
 {
   AntReadingChoices choices = { .time_format = g_strdup (options->time_format), .time_scale = g_strdup (options->time_scale),
                                 .time_zone = g_strdup (options->time_zone), .epoch = g_strdup (options->epoch),
-                                .hdu = g_strdup (options->hdu) };
+                                .hdu = g_strdup (options->hdu), .index = g_strdup (options->index) };
   AntRecord *record = NULL;
   if (options->fill)
     choices.fill_values = g_array_new (FALSE, FALSE, sizeof (double));

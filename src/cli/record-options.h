@@ -11,6 +11,7 @@ typedef struct
   char *time_scale;  /* --time-scale */
   char *time_zone;   /* --time-zone */
   char *epoch;       /* --epoch */
+  char *index;       /* --index wavelength=3 */
   char *hdu;         /* --hdu */
   char *fill;        /* --fill -99,-999 */
   char *good;        /* --good 0,2 or 0x10042 */

@@ -9,7 +9,7 @@
 #define WORD(member) { #member, G_STRUCT_OFFSET (AntReadingChoices, member) }
 const AntReadingWord ant_reading_word_table[] = {
   WORD (time_column), WORD (value_column), WORD (error_column), WORD (quality_column), WORD (time_format), WORD (time_scale),
-  WORD (time_zone), WORD (epoch), WORD (hdu),
+  WORD (time_zone), WORD (epoch), WORD (hdu), WORD (index),
 };
 const gsize ant_n_reading_words = G_N_ELEMENTS (ant_reading_word_table);
 

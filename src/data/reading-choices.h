@@ -12,6 +12,7 @@ typedef struct
   char *time_zone;   /* of a local clock, hours ahead of UTC: "+01:00", "-7" */
   char *epoch;       /* what plain numbers count from: an ISO time or a JD, in the times' own scale */
   char *hdu;         /* of a FITS file: its name, or its number, 0 the primary one */
+  char *index;       /* of a NetCDF file: where along further dimensions, "wavelength=3,band=1", from 1 */
   GArray *fill_values; /* of double: these and the usual ones count as missing; NULL = only the usual ones */
 } AntReadingChoices;
 

@@ -37,6 +37,12 @@ instant (const AntTimeReference *reference, double time_d, double *jd1, double *
          && ant_time_after (reference->scale, reference->origin_jd1, reference->origin_jd2, time_d, jd1, jd2) == ANT_OK;
 }
 
+static double
+elapsed (const AntTimeReference *reference, double jd1, double jd2)
+{
+  return ant_time_elapsed_d (reference->scale, reference->origin_jd1, reference->origin_jd2, jd1, jd2);
+}
+
 double
 ant_time_reference_jd (const AntTimeReference *reference, double time_d)
 {
@@ -59,12 +65,38 @@ number_text (double number, int decimals)
   return g_strdup (g_ascii_formatd (text, sizeof text, format, number));
 }
 
+/* Days of 86400 s since the origin: fewer than elapsed where the numbers leave leap seconds out. */
+static double
+even_days (const AntTimeReference *reference, double time_d)
+{
+  double jd1, jd2;
+  if (!reference->own_skips_leaps || reference->scale != ANT_SCALE_UTC || !instant (reference, time_d, &jd1, &jd2)
+      || ant_time_convert (ANT_SCALE_UTC, jd1, jd2, ANT_SCALE_UNIX, &jd1, &jd2) != ANT_OK)
+    return time_d;
+  return (jd1 - reference->origin_jd1) + (jd2 - reference->origin_jd2);
+}
+
+/* The way back: elapsed days of so many even ones. */
+static double
+from_even_days (const AntTimeReference *reference, double days)
+{
+  double jd1, jd2, whole = floor (days);
+  if (!reference->own_skips_leaps || reference->scale != ANT_SCALE_UTC || !reference->origin_known)
+    return days;
+  if (ant_time_convert (ANT_SCALE_UNIX, reference->origin_jd1 + whole, reference->origin_jd2 + (days - whole), ANT_SCALE_UTC,
+                        &jd1, &jd2) != ANT_OK)
+    return (double) NAN;
+  return elapsed (reference, jd1, jd2);
+}
+
 /* The record's own number, for number styles. */
 static double
 own_number (const AntTimeReference *reference, double time_d)
 {
   double jd1, jd2;
-  if (reference->style == ANT_STAMP_DAYS || !instant (reference, time_d, &jd1, &jd2))
+  if (reference->style == ANT_STAMP_DAYS)
+    return reference->own_zero + even_days (reference, time_d) / reference->own_unit_d;
+  if (!instant (reference, time_d, &jd1, &jd2))
     return reference->own_zero + time_d / reference->own_unit_d;
   if (reference->style == ANT_STAMP_UNIX)
     return ((jd1 - UNIX_EPOCH_JD) + jd2) * ANT_SECONDS_PER_DAY;
@@ -120,12 +152,6 @@ ant_time_reference_utc_text (const AntTimeReference *reference, double time_d, i
   return g_strdup (text);
 }
 
-static double
-elapsed (const AntTimeReference *reference, double jd1, double jd2)
-{
-  return ant_time_elapsed_d (reference->scale, reference->origin_jd1, reference->origin_jd2, jd1, jd2);
-}
-
 /* A typed number: the record's own if it writes numbers and this is not plainly a JD; else a JD. NaN if neither. */
 static double
 from_number (const AntTimeReference *reference, double number)
@@ -137,7 +163,7 @@ from_number (const AntTimeReference *reference, double number)
     return elapsed (reference, floor (number), number - floor (number));
   switch (reference->style)
     {
-    case ANT_STAMP_DAYS: return (number - reference->own_zero) * reference->own_unit_d;
+    case ANT_STAMP_DAYS: return from_even_days (reference, (number - reference->own_zero) * reference->own_unit_d);
     case ANT_STAMP_JD: return elapsed (reference, floor (number) + reference->own_offset, number - floor (number));
     case ANT_STAMP_UNIX:
       return elapsed (reference, UNIX_EPOCH_JD + floor (number / ANT_SECONDS_PER_DAY),

@@ -28,6 +28,7 @@ typedef struct
   double own_zero;         /* the record's own number at time 0, for number styles */
   double own_unit_d;       /* days per unit of the record's own numbers (ANT_STAMP_DAYS: 1, 1/24, 1/86400) */
   double own_offset;       /* ANT_STAMP_JD: JD minus the record's number */
+  gboolean own_skips_leaps;/* ANT_STAMP_DAYS with a known origin: the numbers count days of 86400 s, as POSIX does */
   char *place;             /* where the clock stood if the record says ("geocentre", "heliocentre", "observer"), or NULL */
 } AntTimeReference;
 

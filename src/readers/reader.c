@@ -7,6 +7,7 @@
 #include "data/error.h"
 #include "readers/byte-source.h"
 #include "readers/fits-reader.h"
+#include "readers/netcdf-reader.h"
 #include "readers/text-reader.h"
 
 typedef struct
@@ -22,8 +23,7 @@ static const struct
 {
   const char *magic, *name;
 } binaries[] = {
-  { "\211HDF", "HDF5" }, { "CDF\001", "NetCDF" }, { "CDF\002", "NetCDF" }, { "PK\003\004", "zip" },
-  { "%PDF", "PDF" },       { "\211PNG", "PNG" },  { "BZh", "bzip2" },      { "\3757zXZ", "xz" },
+  { "PK\003\004", "zip" }, { "%PDF", "PDF" }, { "\211PNG", "PNG" }, { "BZh", "bzip2" }, { "\3757zXZ", "xz" },
 };
 
 static const char *
@@ -49,6 +49,7 @@ sniff_fits (const guint8 *head, gsize n)
 
 static const AntFormat formats[] = {
   { "FITS", sniff_fits, ant_fits_reader_read },
+  { "NetCDF", ant_netcdf_reader_sniff, ant_netcdf_reader_read },
   { "text", sniff_text, ant_text_reader_read },
 };
 
@@ -74,7 +75,7 @@ read_source (AntByteSource *source, const char *path, const AntReadingChoices *c
       record->sha256 = ant_byte_source_sha256 (source);
       return g_steal_pointer (&record);
     }
-  g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: line 1: found a %s file, expected a table of text or a FITS file"),
+  g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: line 1: found a %s file, expected a table of text, FITS or NetCDF"),
                ant_byte_source_name (source), binary_name (head, n));
   return NULL;
 }
