@@ -1,10 +1,10 @@
 /* verb-info.c - `antumbra-cli info`: what is in a record, what was assumed and what was found, for people and programs. */
 #include <gio/gio.h>
 #include <glib/gi18n.h>
-#include <json-glib/json-glib.h>
 #include <math.h>
 
 #include "cli/exit-code.h"
+#include "cli/json-values.h"
 #include "cli/record-options.h"
 #include "cli/settings-options.h"
 #include "cli/verbs.h"
@@ -156,88 +156,55 @@ print_plain (const AntRecord *record, const AntRecordSummary *summary, gboolean 
 }
 
 static void
-add_text (JsonBuilder *json, const char *name, const char *text)
-{
-  json_builder_set_member_name (json, name);
-  if (text && *text)
-    json_builder_add_string_value (json, text);
-  else
-    json_builder_add_null_value (json);
-}
-
-/* JSON has no NaN. */
-static void
-add_number (JsonBuilder *json, const char *name, double number)
-{
-  json_builder_set_member_name (json, name);
-  if (isfinite (number))
-    json_builder_add_double_value (json, number);
-  else
-    json_builder_add_null_value (json);
-}
-
-static void
-add_count (JsonBuilder *json, const char *name, gsize n)
-{
-  json_builder_add_int_value (json_builder_set_member_name (json, name), (gint64) n);
-}
-
-static void
-add_truth (JsonBuilder *json, const char *name, gboolean truth)
-{
-  json_builder_add_boolean_value (json_builder_set_member_name (json, name), truth);
-}
-
-static void
 add_time (JsonBuilder *json, const AntRecord *record, const char *name, double time_d)
 {
   g_autofree char *own = ant_time_reference_own_text (&record->time, time_d);
   g_autofree char *utc = ant_time_reference_utc_text (&record->time, time_d, 3);
   json_builder_begin_object (json_builder_set_member_name (json, name));
-  add_text (json, "own", own);
-  add_number (json, "jd", ant_time_reference_jd (&record->time, time_d));
-  add_text (json, "utc", utc);
+  ant_json_text (json, "own", own);
+  ant_json_number (json, "jd", ant_time_reference_jd (&record->time, time_d));
+  ant_json_text (json, "utc", utc);
   json_builder_end_object (json);
 }
 
 static void
 add_rows (JsonBuilder *json, const AntRecord *record, const AntRecordSummary *summary)
 {
-  add_count (json, "rows", record->n_rows);
-  add_count (json, "good_rows", summary->n_good);
+  ant_json_count (json, "rows", record->n_rows);
+  ant_json_count (json, "good_rows", summary->n_good);
   json_builder_begin_object (json_builder_set_member_name (json, "flags"));
   for (unsigned bit = 0; bit < ANT_N_FLAGS; bit++)
-    add_count (json, ant_flag_name (bit), summary->n_flagged[bit]);
+    ant_json_count (json, ant_flag_name (bit), summary->n_flagged[bit]);
   json_builder_end_object (json);
   if (summary->has_times)
     {
       add_time (json, record, "first", summary->first_d);
       add_time (json, record, "last", summary->last_d);
-      add_number (json, "span_d", summary->last_d - summary->first_d);
+      ant_json_number (json, "span_d", summary->last_d - summary->first_d);
     }
 }
 
 static void
 add_columns (JsonBuilder *json, const AntRecord *record)
 {
-  add_text (json, "time_column", record->time_name);
-  add_text (json, "value_column", record->value_name);
-  add_text (json, "error_column", record->error_name);
-  add_text (json, "quality_column", record->quality_name);
-  add_text (json, "unit", record->value_unit);
-  add_text (json, "time_format", style_names[record->time.style]);
-  add_text (json, "time_scale", ant_time_scale_name (record->time.scale));
-  add_truth (json, "time_scale_assumed", record->time.scale_assumed);
-  add_text (json, "time_place", record->time.place);
-  add_truth (json, "origin_known", record->time.origin_known);
+  ant_json_text (json, "time_column", record->time_name);
+  ant_json_text (json, "value_column", record->value_name);
+  ant_json_text (json, "error_column", record->error_name);
+  ant_json_text (json, "quality_column", record->quality_name);
+  ant_json_text (json, "unit", record->value_unit);
+  ant_json_text (json, "time_format", style_names[record->time.style]);
+  ant_json_text (json, "time_scale", ant_time_scale_name (record->time.scale));
+  ant_json_truth (json, "time_scale_assumed", record->time.scale_assumed);
+  ant_json_text (json, "time_place", record->time.place);
+  ant_json_truth (json, "origin_known", record->time.origin_known);
   json_builder_begin_array (json_builder_set_member_name (json, "columns"));
   for (guint i = 0; i < record->columns->len; i++)
     {
       const AntColumn *column = g_ptr_array_index (record->columns, i);
       json_builder_begin_object (json);
-      add_text (json, "name", column->name);
-      add_text (json, "unit", column->unit);
-      add_count (json, "values", record->n_rows - column->n_missing);
+      ant_json_text (json, "name", column->name);
+      ant_json_text (json, "unit", column->unit);
+      ant_json_count (json, "values", record->n_rows - column->n_missing);
       json_builder_end_object (json);
     }
   json_builder_end_array (json);
@@ -260,21 +227,21 @@ add_spans (JsonBuilder *json, const AntRecord *record, const char *name, const G
 static void
 add_grid (JsonBuilder *json, const AntRecord *record, const AntRecordSummary *summary)
 {
-  add_number (json, "median", record->median);
-  add_number (json, "cadence_s", record->cadence_d * ANT_SECONDS_PER_DAY);
-  add_number (json, "jitter_rms_s", summary->jitter_rms_d * ANT_SECONDS_PER_DAY);
-  add_number (json, "jitter_most_s", summary->jitter_most_d * ANT_SECONDS_PER_DAY);
-  add_number (json, "exposure_s", record->exposure_d * ANT_SECONDS_PER_DAY);
-  add_truth (json, "exposure_known", record->exposure_known);
-  add_text (json, "stamp", place_names[record->stamp]);
-  add_count (json, "places", summary->n_places);
-  add_count (json, "observed", summary->n_observed);
-  add_number (json, "duty_cycle", (double) summary->n_observed / (double) summary->n_places);
-  add_count (json, "gaps", record->gaps->len);
-  add_number (json, "longest_gap_h", summary->longest_gap_d * ANT_HOURS_PER_DAY);
+  ant_json_number (json, "median", record->median);
+  ant_json_number (json, "cadence_s", record->cadence_d * ANT_SECONDS_PER_DAY);
+  ant_json_number (json, "jitter_rms_s", summary->jitter_rms_d * ANT_SECONDS_PER_DAY);
+  ant_json_number (json, "jitter_most_s", summary->jitter_most_d * ANT_SECONDS_PER_DAY);
+  ant_json_number (json, "exposure_s", record->exposure_d * ANT_SECONDS_PER_DAY);
+  ant_json_truth (json, "exposure_known", record->exposure_known);
+  ant_json_text (json, "stamp", place_names[record->stamp]);
+  ant_json_count (json, "places", summary->n_places);
+  ant_json_count (json, "observed", summary->n_observed);
+  ant_json_number (json, "duty_cycle", (double) summary->n_observed / (double) summary->n_places);
+  ant_json_count (json, "gaps", record->gaps->len);
+  ant_json_number (json, "longest_gap_h", summary->longest_gap_d * ANT_HOURS_PER_DAY);
   add_spans (json, record, "dark_spans", record->dark_spans);
-  add_number (json, "scatter_ppm", summary->scatter_ppm);
-  add_number (json, "sample_scatter_ppm", summary->sample_scatter_ppm);
+  ant_json_number (json, "scatter_ppm", summary->scatter_ppm);
+  ant_json_number (json, "sample_scatter_ppm", summary->sample_scatter_ppm);
 }
 
 static void
@@ -282,23 +249,21 @@ print_json (const AntRecord *record, const AntRecordSummary *summary, gboolean g
 {
   g_autoptr (JsonBuilder) json = json_builder_new ();
   json_builder_begin_object (json);
-  add_text (json, "path", record->path);
-  add_text (json, "format", record->format);
-  add_text (json, "part", record->part);
-  add_text (json, "sha256", record->sha256);
+  ant_json_text (json, "path", record->path);
+  ant_json_text (json, "format", record->format);
+  ant_json_text (json, "part", record->part);
+  ant_json_text (json, "sha256", record->sha256);
   add_columns (json, record);
   add_rows (json, record, summary);
   if (gridded)
     add_grid (json, record, summary);
-  add_text (json, "refused", refusal ? refusal->message : NULL);
+  ant_json_text (json, "refused", refusal ? refusal->message : NULL);
   json_builder_begin_array (json_builder_set_member_name (json, "said"));
   for (guint i = 0; i < record->said->len; i++)
     json_builder_add_string_value (json, g_ptr_array_index (record->said, i));
   json_builder_end_array (json);
   json_builder_end_object (json);
-  g_autoptr (JsonNode) root = json_builder_get_root (json);
-  g_autofree char *text = json_to_string (root, TRUE);
-  g_print ("%s\n", text);
+  ant_json_print (json);
 }
 
 /* A record that no grid can be laid on is told about as far as it was read; the exit code tells the rest. */

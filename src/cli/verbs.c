@@ -5,6 +5,7 @@
 
 const AntVerb ant_verb_table[] = {
   { "info", N_("tell what is in a record, and what was assumed"), ant_verb_info },
+  { "predict", N_("tell what crosses the Sun for an observer, and what a record shows of it"), ant_verb_predict },
   { "scan", N_("search a record for dips, or measure one"), ant_verb_scan },
   { "settings", N_("print the table of settings"), ant_verb_settings },
   { "simulate", N_("make a record from a recipe, with the truth beside it"), ant_verb_simulate },

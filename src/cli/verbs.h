@@ -21,6 +21,7 @@ const AntVerb *ant_verb_find (const char *name);
 char *ant_verbs_help (void);
 
 int ant_verb_info (int argc, char **argv);
+int ant_verb_predict (int argc, char **argv);
 int ant_verb_scan (int argc, char **argv);
 int ant_verb_settings (int argc, char **argv);
 int ant_verb_simulate (int argc, char **argv);

@@ -7,11 +7,13 @@
 
 #include "data/error.h"
 #include "data/near-word.h"
+#include "sky/places.h"
 
 static const char *const stamp_words[] = { [ANT_AT_UNKNOWN] = "unknown", [ANT_AT_START] = "start",
                                            [ANT_AT_MIDDLE] = "middle", [ANT_AT_END] = "end", NULL };
 
 static const char *const paper_words[] = { "A4", "letter", NULL };
+static const char *const radii_words[] = { [ANT_RADII_ALMANAC] = "almanac", [ANT_RADII_IAU] = "iau", NULL };
 
 #define AT(field) G_STRUCT_OFFSET (AntSettings, field)
 #define REAL ANT_SETTING_REAL
@@ -58,6 +60,9 @@ const AntSetting ant_setting_table[] = {
     N_("Least dip SNR listed; 0 = from false-alarms-per-year") },
   { "surrogates", "", WHOLE, 0, 0, 10000, 1, AT (surrogates), NULL, N_("False alarms"),
     N_("Noise-only records drawn from the fitted noise and searched, to refit the false-alarm law; each takes as long as a scan; 0 = the built-in law") },
+
+  { "radii", "", WORD, ANT_RADII_ALMANAC, ANT_RADII_ALMANAC, ANT_RADII_IAU, 1, AT (radii), radii_words, N_("Sky"),
+    N_("Radii of the Sun and of what crosses it: almanac (959.63″ and such, which published contact times assume) or iau (km, for depths)") },
 
   { "rotation-window", "d", REAL, 27.275232, 2, 365.25, 1, AT (rotation_window_d), NULL, N_("Display"),
     N_("Period and window of the rotation curve that is drawn") },

@@ -19,6 +19,7 @@ typedef struct
   double chunk_overlap_d;
   double line_period_h;    /* 0 = no line */
   double line_harmonics;
+  double radii;            /* an AntRadiiSet */
   double rotation_window_d;
   double rotation_harmonics;
   double seed;

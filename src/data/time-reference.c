@@ -8,6 +8,7 @@
 
 #include "core/units.h"
 #include "data/error.h"
+#include "sky/places.h"
 #include "sky/iso-time.h"
 
 #define UNIX_EPOCH_JD 2440587.5
@@ -216,4 +217,15 @@ ant_time_reference_parse (const AntTimeReference *reference, const char *text, d
     g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE,
                  _("“%s” is no time of this record; expected its own numbers, since its origin is not known"), text);
   return FALSE;
+}
+
+double
+ant_time_reference_tt_origin (const AntTimeReference *reference)
+{
+  double jd1, jd2;
+  AntTimeScale scale = reference->scale == ANT_SCALE_UNKNOWN ? ANT_SCALE_UTC : reference->scale;
+  if (!reference->origin_known
+      || ant_time_convert (scale, reference->origin_jd1, reference->origin_jd2, ANT_SCALE_TT, &jd1, &jd2) != ANT_OK)
+    return NAN;
+  return (jd1 - ANT_J2000_JD) + jd2;
 }

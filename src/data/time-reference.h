@@ -42,3 +42,6 @@ char *ant_time_reference_own_text (const AntTimeReference *reference, double tim
 char *ant_time_reference_utc_text (const AntTimeReference *reference, double time_d, int decimals);
 /* Understand a time that a person typed: own numbers, JD, or ISO 8601. */
 gboolean ant_time_reference_parse (const AntTimeReference *reference, const char *text, double *time_d, GError **error);
+/* Days of TT from J2000.0 at time 0: a time's TT is this and the elapsed days together. An unknown scale counts as UTC. NaN if
+ * the origin is unknown. */
+double ant_time_reference_tt_origin (const AntTimeReference *reference);

@@ -80,3 +80,15 @@ const float *ant_scan_slow (const AntScan *scan);
  * dip->snr etc. are filled; expected_false is NaN. ANT_NO_DATA if less than `least_coverage` of it is observed. */
 AntStatus ant_scan_asked (const AntSeries *series, const AntScanOptions *options, double mid_d, double duration_d,
                           AntDip *dip);
+
+typedef struct
+{
+  double depth_ppm, sigma_ppm, snr;
+  double coverage; /* observed fraction of the shape, weighted by it */
+} AntAmplitude;
+
+/* The same for a shape that is known: loss [n] is the mean over the exposure of place first + i of the series, scaled so
+ * that the amplitude sought is the depth. Only the depth is free. Places outside the series count as not observed; on
+ * ANT_NO_DATA (too little of it observed) found->coverage holds what there is, if it could be told. */
+AntStatus ant_scan_asked_shape (const AntSeries *series, const AntScanOptions *options, ptrdiff_t first, size_t n,
+                                const double *loss, AntAmplitude *found);

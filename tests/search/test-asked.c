@@ -8,6 +8,7 @@
 #define STEP_D (300 / ANT_SECONDS_PER_DAY)
 #define N ((size_t) (12 / STEP_D))
 #define SEEDS 40
+#define SHAPE_SEEDS 16
 
 static const Planted crossing = { 5.96, 6, 20, ANT_SHAPE_IMPACT, 150 }; /* of a sigma of 10 to 20 ppm */
 static const AntScanOptions options = ANT_SCAN_OPTIONS_INIT;
@@ -129,12 +130,75 @@ a_long_record_is_asked_at_its_ends_too (void)
   g_free (value);
 }
 
+/* A known shape, here one that no crossing has: a ramp over six hours, of which only the depth is free. */
+static void
+the_depth_of_a_known_shape_is_unbiased (void)
+{
+  size_t n = (size_t) (0.25 / STEP_D);
+  ptrdiff_t first = (ptrdiff_t) (N / 2);
+  float *value = g_new (float, N);
+  double *loss = g_new (double, n), sum = 0, squares = 0, sigma = 0;
+  for (size_t i = 0; i < n; i++)
+    loss[i] = (double) (i + 1) / (double) n;
+  for (unsigned long seed = 0, measured = 0; measured < SHAPE_SEEDS; seed++)
+    {
+      AntAmplitude found;
+      AntSeries series = ant_study_record ('C', ANT_MASK_LOW_ORBIT, N, STEP_D, 8600 + seed, value);
+      for (size_t i = 0; i < n; i++)
+        value[(size_t) first + i] -= (float) (120 * loss[i]);
+      AntStatus status = ant_scan_asked_shape (&series, &options, first, n, loss, &found);
+      g_assert_cmpuint (seed, <, 2 * SHAPE_SEEDS);
+      if (status == ANT_NO_DATA)
+        continue;
+      g_assert_cmpint (status, ==, ANT_OK);
+      g_assert_cmpfloat_with_epsilon (found.snr * found.sigma_ppm, found.depth_ppm, 1e-9);
+      double pull = (found.depth_ppm - 120) / found.sigma_ppm;
+      sum += pull / SHAPE_SEEDS;
+      squares += pull * pull / SHAPE_SEEDS;
+      sigma = found.sigma_ppm;
+      measured++;
+    }
+  g_test_message ("mean pull %.2f, scatter %.2f, sigma about %.1f ppm", sum, sqrt (squares), sigma);
+  g_assert_cmpfloat_with_epsilon (sum, 0, 3 / sqrt (SHAPE_SEEDS));
+  g_assert_cmpfloat_with_epsilon (sqrt (squares), 1, 3 / sqrt (2.0 * SHAPE_SEEDS));
+  g_free (loss);
+  g_free (value);
+}
+
+/* Half of the shape's light falls into a gap or beside the record: the observed part is told, measured or not. */
+static void
+the_observed_part_of_a_shape_is_told (void)
+{
+  enum { LENGTH = 60 };
+  double loss[LENGTH];
+  float *value = g_new (float, N);
+  AntAmplitude found;
+  AntSeries series = ant_study_record ('C', ANT_MASK_L1, N, STEP_D, 8700, value);
+  for (size_t i = 0; i < LENGTH; i++)
+    {
+      loss[i] = 1;
+      value[1000 + i] = i < 30 ? NAN : isfinite (value[1000 + i]) ? value[1000 + i] : 0;
+      value[2000 + i] = NAN;
+    }
+  g_assert_cmpint (ant_scan_asked_shape (&series, &options, 1000, LENGTH, loss, &found), ==, ANT_OK);
+  g_assert_cmpfloat_with_epsilon (found.coverage, 0.5, 1e-12);
+  g_assert_cmpint (ant_scan_asked_shape (&series, &options, 2000 - 6, LENGTH, loss, &found), ==, ANT_NO_DATA);
+  g_assert_cmpfloat (found.coverage, <=, 0.1 + 1e-12);
+  g_assert_true (isnan (found.depth_ppm));
+  g_assert_cmpint (ant_scan_asked_shape (&series, &options, -LENGTH - 5, LENGTH, loss, &found), ==, ANT_NO_DATA);
+  g_assert_cmpfloat (found.coverage, ==, 0);
+  g_assert_cmpint (ant_scan_asked_shape (&series, &options, 100, 0, loss, &found), ==, ANT_BAD_ARGUMENT);
+  g_free (value);
+}
+
 int
 main (int argc, char **argv)
 {
   g_test_init (&argc, &argv, NULL);
 #define TEST(path, function) g_test_add_func ("/search/asked/" path, function)
   TEST ("the-depth-is-unbiased", the_depth_is_unbiased);
+  TEST ("the-depth-of-a-known-shape-is-unbiased", the_depth_of_a_known_shape_is_unbiased);
+  TEST ("the-observed-part-of-a-shape-is-told", the_observed_part_of_a_shape_is_told);
   g_test_add_func ("/search/asked/a-deep-dip-elsewhere-does-no-harm", a_deep_dip_elsewhere_does_no_harm);
   TEST ("a-deep-dip-does-not-widen-its-own-error", a_deep_dip_does_not_widen_its_own_error);
   TEST ("what-is-told-is-what-was-asked", what_is_told_is_what_was_asked);
