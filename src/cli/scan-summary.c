@@ -5,6 +5,7 @@
 #include <math.h>
 
 #include "core/units.h"
+#include "data/verdict-words.h"
 
 #define MOST_LINES 40
 #define MOST_SENTENCES 12
@@ -18,17 +19,19 @@ middle_text (const AntRecord *record, double mid_d)
 }
 
 static void
-print_dips (const AntRecord *record, gsize n, const AntDip *dip)
+print_dips (const AntRecord *record, gsize n, const AntDip *dip, const AntVerdict *verdict)
 {
   if (n == 0)
     return;
-  g_print (_("  no  middle                length   depth              SNR  first  by chance  edges\n"));
+  g_print (_("  no  middle                length   depth              SNR  first  by chance  edges    class\n"));
   for (gsize i = 0; i < MIN (n, MOST_LINES); i++)
     {
       g_autofree char *middle = middle_text (record, dip[i].mid_d);
-      g_print (_("%4zu  %-20s %5.2f h %7.1f ± %-5.1f ppm %6.1f %6.1f   %8.2g  %s\n"), i + 1, middle,
+      g_autofree char *likely = verdict ? ant_probability_words (ant_verdict_probability (&verdict[i])) : g_strdup ("");
+      g_print (_("%4zu  %-20s %5.2f h %7.1f ± %-5.1f ppm %6.1f %6.1f   %8.2g  %-7s  %s %s\n"), i + 1, middle,
                dip[i].duration_d * ANT_HOURS_PER_DAY, dip[i].depth_ppm, dip[i].depth_sigma_ppm, dip[i].snr, dip[i].first_snr,
-               dip[i].expected_false, ant_edges_text (dip[i].edges));
+               dip[i].expected_false, ant_edges_text (dip[i].edges),
+               verdict ? ant_dip_class_title (ant_verdict_class (&verdict[i])) : "", likely);
     }
   if (n > MOST_LINES)
     g_print (_("      and %zu more in the table\n"), n - MOST_LINES);
@@ -74,10 +77,10 @@ ant_scan_summary_print (const AntScanResults *results)
   g_print (g_dngettext (NULL, "%zu dip at or above SNR %.2f; noise alone is expected to show %.2g.\n",
                         "%zu dips at or above SNR %.2f; noise alone is expected to show %.2g.\n", results->n_dips),
            results->n_dips, results->threshold_snr, results->expected_at_threshold);
-  print_dips (record, results->n_dips, results->dip);
+  print_dips (record, results->n_dips, results->dip, results->dip_verdict);
   g_print (_("The same search for brightenings lists %zu (of 9 h or less: %zu, beside %zu of the dips).\n"),
            results->n_brightenings, results->n_mirrored, results->n_mirror_dips);
-  print_dips (record, results->n_brightenings, results->brightening);
+  print_dips (record, results->n_brightenings, results->brightening, results->brightening_verdict);
   print_passages (results);
   for (guint i = 0; i < MIN (results->said->len, MOST_SENTENCES); i++)
     g_print ("%s.\n", (const char *) g_ptr_array_index (results->said, i));

@@ -4,6 +4,7 @@
 
 #include <glib.h>
 #include "search/dip.h"
+#include "verdict/verdict.h"
 
 typedef struct
 {
@@ -11,6 +12,7 @@ typedef struct
   const char *incomplete;        /* what a stopped scan lacks, as a sentence; NULL: nothing */
   gsize n;
   const AntDip *dip;             /* [n] in the order in which they are numbered */
+  const AntVerdict *verdict;     /* [n], or NULL if none were made */
   double limb_u1, limb_u2;       /* quadratic limb darkening of the templates */
   double threshold_snr;          /* NaN for an asked dip: there was no search */
   double false_alarms;           /* dips of this sign expected by chance at that threshold in the record; NaN unknown */

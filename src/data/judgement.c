@@ -17,9 +17,9 @@ struct _AntJudgements
 };
 
 static const char *const class_names[] = { "undecided", "planet",     "planet-shaped", "spot",
-                                           "eclipse",   "instrument", "noise" };
+                                           "eclipse",   "instrument", "noise",         "flare" };
 static const char *const class_titles[] = { N_("undecided"), N_("planet"),     N_("planet-shaped"), N_("spot"),
-                                            N_("eclipse"),   N_("instrument"), N_("noise") };
+                                            N_("eclipse"),   N_("instrument"), N_("noise"),         N_("flare") };
 G_STATIC_ASSERT (G_N_ELEMENTS (class_names) == ANT_N_CLASSES && G_N_ELEMENTS (class_titles) == ANT_N_CLASSES);
 
 const char *

@@ -13,6 +13,7 @@ typedef enum
   ANT_CLASS_ECLIPSE,
   ANT_CLASS_INSTRUMENT,
   ANT_CLASS_NOISE,
+  ANT_CLASS_FLARE,         /* of the Sun: brightenings only */
   ANT_N_CLASSES,
 } AntDipClass;
 

@@ -286,6 +286,8 @@ ant_scan_results_unref (AntScanResults *results)
   g_free (results->chunk);
   g_free (results->dip);
   g_free (results->brightening);
+  g_free (results->dip_verdict);
+  g_free (results->brightening_verdict);
   g_free (results->passage);
   g_free (results->slow_ppm);
   g_free (results->spike_row);
@@ -293,6 +295,33 @@ ant_scan_results_unref (AntScanResults *results)
   g_ptr_array_unref (results->said);
   ant_record_unref (results->record);
   g_free (results);
+}
+
+AntVerdictInput
+ant_scan_results_verdict_input (const AntScanResults *results)
+{
+  const AntSettings *settings = &results->settings;
+  return (AntVerdictInput) {
+    .series = &results->record->series,
+    .exposure_d = results->record->exposure_d,
+    .limb_darkening = settings->bank.limb_darkening,
+    .n_chunks = results->n_chunks,
+    .chunk = results->chunk,
+    .n_dips = results->n_dips,
+    .n_brightenings = results->n_brightenings,
+    .dip = results->dip,
+    .brightening = results->brightening,
+    .line_period_d = settings->line_period_h / ANT_HOURS_PER_DAY,
+    .options = { .target_star = settings->target == ANT_TARGET_STAR, .rates = settings->rates },
+  };
+}
+
+void
+ant_scan_results_add_verdicts (AntScanResults *results, const AntVerdictWork *work)
+{
+  results->dip_verdict = g_memdup2 (ant_verdict_work_dips (work), results->n_dips * sizeof (AntVerdict));
+  results->brightening_verdict
+      = g_memdup2 (ant_verdict_work_brightenings (work), results->n_brightenings * sizeof (AntVerdict));
 }
 
 AntDipList
@@ -303,6 +332,7 @@ ant_scan_results_list (const AntScanResults *results, gboolean brightenings)
     .incomplete = ant_scan_reach_words (results->reach),
     .n = brightenings ? results->n_brightenings : results->n_dips,
     .dip = brightenings ? results->brightening : results->dip,
+    .verdict = brightenings ? results->brightening_verdict : results->dip_verdict,
     .limb_u1 = results->settings.bank.limb_darkening.u1,
     .limb_u2 = results->settings.bank.limb_darkening.u2,
     .threshold_snr = results->threshold_snr,

@@ -7,6 +7,7 @@
 #include "data/record.h"
 #include "data/settings.h"
 #include "search/scan.h"
+#include "verdict/verdict-work.h"
 
 typedef struct
 {
@@ -15,6 +16,7 @@ typedef struct
   AntScanReach reach;        /* below ANT_SCAN_COMPLETE: the scan was stopped */
   gsize n_dips, n_brightenings;
   AntDip *dip, *brightening; /* by time, numbered from 1 in this order */
+  AntVerdict *dip_verdict, *brightening_verdict; /* [n_dips], [n_brightenings]; NULL if the scan was stopped before */
   gsize n_passages;
   AntPassage *passage;       /* by time, numbered from 1 in this order */
   float *slow_ppm;           /* [record->series.n] the slow part, dips taken out, gaps bridged; NULL unless complete,
@@ -47,6 +49,10 @@ G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntScanResults, ant_scan_results_unref)
 
 /* Results that were read from a file get their record, once. FALSE if they do not fit it; they are as they were then. */
 gboolean ant_scan_results_join (AntScanResults *results, AntRecord *record);
+/* What verdicts on these results need to know; borrows from them. */
+AntVerdictInput ant_scan_results_verdict_input (const AntScanResults *results);
+/* Copies the verdicts of a work that has run to its end: once, before the results are shared. */
+void ant_scan_results_add_verdicts (AntScanResults *results, const AntVerdictWork *work);
 
 /* The options of a search as the settings and the record's exposure give them. */
 AntScanOptions ant_scan_results_options (const AntRecord *record, const AntSettings *settings);

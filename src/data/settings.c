@@ -14,6 +14,7 @@ static const char *const stamp_words[] = { [ANT_AT_UNKNOWN] = "unknown", [ANT_AT
 
 static const char *const paper_words[] = { "A4", "letter", NULL };
 static const char *const radii_words[] = { [ANT_RADII_ALMANAC] = "almanac", [ANT_RADII_IAU] = "iau", NULL };
+static const char *const target_words[] = { [ANT_TARGET_SUN] = "sun", [ANT_TARGET_STAR] = "star", NULL };
 
 #define AT(field) G_STRUCT_OFFSET (AntSettings, field)
 #define REAL ANT_SETTING_REAL
@@ -63,6 +64,21 @@ const AntSetting ant_setting_table[] = {
 
   { "radii", "", WORD, ANT_RADII_ALMANAC, ANT_RADII_ALMANAC, ANT_RADII_IAU, 1, AT (radii), radii_words, N_("Sky"),
     N_("Radii of the Sun and of what crosses it: almanac (959.63″ and such, which published contact times assume) or iau (km, for depths)") },
+
+  { "target", "", WORD, ANT_TARGET_SUN, ANT_TARGET_SUN, ANT_TARGET_STAR, 1, AT (target), target_words, N_("Verdicts"),
+    N_("What shines: on the Sun a planet needs a predicted crossing, of a star every crossing shape is one") },
+  { "rate-planet", "1/yr", REAL, 1, 1e-6, 10000, 1, AT (rates.per_year[ANT_CAUSE_PLANET]), NULL, N_("Verdicts"),
+    N_("Crossings a year, of all depths, before the record is looked at; on the Sun of those not predicted, for the probability of the shape") },
+  { "rate-planet-shaped", "1/yr", REAL, 0.2, 1e-6, 10000, 1, AT (rates.per_year[ANT_CAUSE_PLANET_SHAPED]), NULL, N_("Verdicts"),
+    N_("Dips shaped like crossings with no body known a year (target sun)") },
+  { "rate-spot", "1/yr", REAL, 1, 1e-6, 10000, 1, AT (rates.per_year[ANT_CAUSE_SPOT]), NULL, N_("Verdicts"),
+    N_("Spots a year whose passage makes a dip as short as those looked for") },
+  { "rate-eclipse", "1/yr", REAL, 0.5, 1e-6, 10000, 1, AT (rates.per_year[ANT_CAUSE_ECLIPSE]), NULL, N_("Verdicts"),
+    N_("Eclipses a year that no almanac tells of") },
+  { "rate-flare", "1/yr", REAL, 10, 1e-6, 10000, 1, AT (rates.per_year[ANT_CAUSE_FLARE]), NULL, N_("Verdicts"),
+    N_("Flares a year (brightenings)") },
+  { "rate-instrument", "1/yr", REAL, 12, 1e-6, 10000, 1, AT (rates.per_year[ANT_CAUSE_INSTRUMENT]), NULL, N_("Verdicts"),
+    N_("Faults of the instrument a year: steps, recoveries, gradual falls, spikes") },
 
   { "rotation-window", "d", REAL, 27.275232, 2, 365.25, 1, AT (rotation_window_d), NULL, N_("Display"),
     N_("Period and window of the rotation curve that is drawn") },

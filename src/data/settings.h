@@ -6,6 +6,14 @@
 #include <glib.h>
 #include "data/record.h"
 #include "search/template-bank.h"
+#include "verdict/priors.h"
+
+/* What shines. */
+typedef enum
+{
+  ANT_TARGET_SUN,  /* a planet needs a predicted crossing */
+  ANT_TARGET_STAR,
+} AntTarget;
 
 typedef struct
 {
@@ -20,6 +28,8 @@ typedef struct
   double line_period_h;    /* 0 = no line */
   double line_harmonics;
   double radii;            /* an AntRadiiSet */
+  double target;           /* an AntTarget */
+  AntCauseRates rates;     /* events of each cause a year */
   double rotation_window_d;
   double rotation_harmonics;
   double seed;

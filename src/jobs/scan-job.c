@@ -5,9 +5,52 @@
 #include <math.h>
 
 #include "data/error.h"
+#include "jobs/verdict-job.h"
 
 /* Phi^-1(0.95): a Gaussian exceeds its mean by this many sigma with probability 5 %. */
 #define ONE_SIDED_95 1.6448536269514722
+
+/* Search and verdicts are told as one run. */
+typedef struct
+{
+  AntProgressFunc progress;
+  gpointer data;
+  gsize stages_before;
+  gsize n_stages;
+  double elapsed_before_s, elapsed_s;
+} Whole;
+
+static void
+tell_whole (const AntProgress *progress, gpointer data)
+{
+  Whole *whole = data;
+  AntProgress told = *progress;
+  told.stage += whole->stages_before;
+  told.n_stages = whole->n_stages;
+  told.elapsed_s += whole->elapsed_before_s;
+  whole->elapsed_s = told.elapsed_s;
+  whole->progress (&told, whole->data);
+}
+
+/* A scan that was stopped keeps its dips without verdicts. */
+static AntScanResults *
+judged (AntScanResults *results, gboolean keep_part, GCancellable *cancellable, Whole *whole, GError **error)
+{
+  GError *cause = NULL;
+  whole->stages_before = ant_scan_stages ()->n_stages;
+  whole->elapsed_before_s = whole->elapsed_s;
+  if (results->reach < ANT_SCAN_COMPLETE
+      || ant_verdict_job_run (results, cancellable, whole->progress ? tell_whole : NULL, whole, &cause))
+    return results;
+  if (keep_part && g_error_matches (cause, G_IO_ERROR, G_IO_ERROR_CANCELLED))
+    {
+      g_error_free (cause);
+      return results;
+    }
+  g_propagate_error (error, cause);
+  ant_scan_results_unref (results);
+  return NULL;
+}
 
 static AntScanResults *
 run (AntRecord *record, const AntSettings *settings, gboolean keep_part, GCancellable *cancellable,
@@ -16,15 +59,16 @@ run (AntRecord *record, const AntSettings *settings, gboolean keep_part, GCancel
   AntStatus status;
   AntScanOptions options = ant_scan_results_options (record, settings);
   AntScan *scan = ant_scan_new (&record->series, &options, &status);
+  Whole whole = { progress, data, 0, ant_scan_stages ()->n_stages + ANT_VERDICT_STAGES, 0, 0 };
   if (scan)
-    status = ant_pool_run (ant_scan_stages (), scan, (guint) settings->threads, cancellable, progress, data);
+    status = ant_pool_run (ant_scan_stages (), scan, (guint) settings->threads, cancellable, progress ? tell_whole : NULL, &whole);
   if (keep_part && status == ANT_STOPPED && ant_scan_reach (scan) > ANT_SCAN_NOTHING)
     status = ant_scan_conclude (scan);
   AntScanResults *results = NULL;
   if (ant_status_to_error (status, _("searching for dips"), error))
     results = ant_scan_results_new (record, settings, scan);
   ant_scan_free (scan);
-  return results;
+  return results ? judged (results, keep_part, cancellable, &whole, error) : NULL;
 }
 
 AntScanResults *

@@ -1,4 +1,5 @@
-/* scan-job.h - run the search of single dips on a record over the pool: the one way that command and window use. */
+/* scan-job.h - run the search of single dips on a record, and verdicts on what it finds, over the pool: the one way that
+ * command and window use. */
 #pragma once
 
 #include <gio/gio.h>

@@ -343,7 +343,8 @@ settle (Integral *it)
 }
 
 AntStatus
-ant_evidence_integral (size_t n, AntLogFunction f, void *data, size_t n_starts, const double *start, AntIntegral *result)
+ant_evidence_integral (size_t n, AntLogFunction f, AntQuantities quantities, void *data, size_t n_starts,
+                       const double *start, AntIntegral *result)
 {
   Integral it = { .n = n, .f = f, .data = data, .result = result };
   double sum;
@@ -360,6 +361,13 @@ ant_evidence_integral (size_t n, AntLogFunction f, void *data, size_t n_starts, 
   double highest = highest_weight (&it, FINAL_SAMPLES);
   result->effective = effective (&it, FINAL_SAMPLES, 1, highest, &sum);
   result->log_integral = highest + log (sum / FINAL_SAMPLES);
+  for (size_t s = 0; s < FINAL_SAMPLES && quantities; s++)
+    if (it.log_weight[s] > -HUGE_VAL)
+      {
+        double quantity[N] = { 0 };
+        quantities (data, it.point + s * n, quantity);
+        memcpy (it.point + s * n, quantity, n * sizeof *quantity);
+      }
   moments (&it, FINAL_SAMPLES, 1, highest, sum, result->mean, result->covariance);
   return isfinite (result->log_integral) ? ANT_OK : ANT_NO_DATA;
 }

@@ -16,11 +16,14 @@
 /* ln f at n_points <= ANT_INTEGRAL_BATCH points of the cube, u [n_points][n]; -HUGE_VAL where f is 0. */
 typedef void (*AntLogFunction) (void *data, size_t n_points, const double *u, double *value);
 
+/* What means and covariances are to be of, n quantities at one point; NULL: the point itself. */
+typedef void (*AntQuantities) (void *data, const double *u, double *quantity);
+
 typedef struct
 {
   size_t n;
   double best[ANT_INTEGRAL_DIMENSIONS], best_value; /* the highest point met */
-  double mean[ANT_INTEGRAL_DIMENSIONS];             /* under f as a density */
+  double mean[ANT_INTEGRAL_DIMENSIONS];             /* of the quantities, under f as a density */
   double covariance[ANT_INTEGRAL_DIMENSIONS * ANT_INTEGRAL_DIMENSIONS];
   double log_integral;
   double log_laplace; /* what the Gaussian alone gives; NaN if the curvature is none */
@@ -28,5 +31,5 @@ typedef struct
 } AntIntegral;
 
 /* start [n_starts][n], at most ANT_INTEGRAL_STARTS; 1 <= n <= 4. ANT_NO_DATA if f is 0 at all starts. */
-AntStatus ant_evidence_integral (size_t n, AntLogFunction f, void *data, size_t n_starts, const double *start,
-                                 AntIntegral *result);
+AntStatus ant_evidence_integral (size_t n, AntLogFunction f, AntQuantities quantities, void *data, size_t n_starts,
+                                 const double *start, AntIntegral *result);

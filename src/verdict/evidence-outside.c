@@ -42,6 +42,23 @@ known_number (double measured, double sigma, double predicted, double spread, do
   return fmax (NEVER, log_normal (log (measured / predicted), total) + log (range));
 }
 
+AntPredictedEvent
+ant_predicted_nearest (int asked, size_t n, const AntPredictedEvent *event, const AntDip *dip)
+{
+  AntPredictedEvent nearest = { .asked = asked };
+  double least_d = HUGE_VAL;
+  for (size_t i = 0; i < n && asked; i++)
+    {
+      double away_d = fabs (event[i].mid_d - dip->mid_d);
+      if (away_d > 1 + 0.5 * event[i].t14_d || away_d >= least_d)
+        continue;
+      nearest = event[i];
+      nearest.asked = nearest.found = 1;
+      least_d = away_d;
+    }
+  return nearest;
+}
+
 void
 ant_evidence_predicted (const AntPredictedEvent *predicted, double rate_d, const AntDip *dip, AntEvidence *evidence)
 {

@@ -35,7 +35,7 @@ gap_places (const AntSeries *series)
 }
 
 void
-ant_record_facts (const AntSeries *series, AntRecordFacts *facts)
+ant_surroundings_measure (const AntSeries *series, AntSurroundings *facts)
 {
   size_t least = gap_places (series), after = (size_t) ceil (GAP_AFTER_D / series->step_d), near = 0, run = 0, follow = 0;
   size_t observed = 0;
@@ -58,7 +58,7 @@ ant_record_facts (const AntSeries *series, AntRecordFacts *facts)
 }
 
 void
-ant_evidence_gap (const AntSeries *series, const AntRecordFacts *facts, const AntDip *dip, AntEvidence *evidence)
+ant_evidence_gap (const AntSeries *series, const AntSurroundings *facts, const AntDip *dip, AntEvidence *evidence)
 {
   *evidence = begin (ANT_EVIDENCE_GAP);
   size_t least = gap_places (series), run = 0;
@@ -110,7 +110,7 @@ ant_evidence_local_noise (const AntWhitener *whitener, const AntSeries *window, 
 }
 
 void
-ant_evidence_twin (size_t n, const AntDip *other, const AntRecordFacts *facts, const AntDip *dip, AntEvidence *evidence)
+ant_evidence_twin (size_t n, const AntDip *other, const AntSurroundings *facts, const AntDip *dip, AntEvidence *evidence)
 {
   double nearest = HUGE_VAL, reach_d = 0.5 * dip->duration_d + TWIN_REACH_D;
   size_t twin = 0;

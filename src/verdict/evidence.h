@@ -41,21 +41,21 @@ typedef struct
 {
   double near_gap;      /* share of its time that lies in a gap or just after one */
   double observed_d;
-} AntRecordFacts;
-void ant_record_facts (const AntSeries *series, AntRecordFacts *facts);
+} AntSurroundings;
+void ant_surroundings_measure (const AntSeries *series, AntSurroundings *facts);
 
-void ant_evidence_gap (const AntSeries *series, const AntRecordFacts *facts, const AntDip *dip, AntEvidence *evidence);
+void ant_evidence_gap (const AntSeries *series, const AntSurroundings *facts, const AntDip *dip, AntEvidence *evidence);
 void ant_evidence_edges (const AntDip *dip, AntEvidence *evidence);
 /* The scatter of the innovations within 2 d of the dip and outside it; z-like pull [observed of the whitener]. */
 void ant_evidence_local_noise (const AntWhitener *whitener, const AntSeries *window, const double *innovation,
                                const AntDip *dip, AntEvidence *evidence);
 /* Events of the other sign. */
-void ant_evidence_twin (size_t n, const AntDip *other, const AntRecordFacts *facts, const AntDip *dip,
+void ant_evidence_twin (size_t n, const AntDip *other, const AntSurroundings *facts, const AntDip *dip,
                         AntEvidence *evidence);
 /* The speed that a crossing's T14, impact and radius ratio ask of a body before the Sun. */
 void ant_evidence_chord (double t14_d, double impact, double radius_ratio, AntEvidence *evidence);
 
-/* What an almanac says of the time of an event: the nearest predicted crossing, if there is one. */
+/* What an almanac says of the time of an event: the nearest predicted crossing or eclipse, if there is one. */
 typedef struct
 {
   int asked;           /* the almanac could be asked: times, scale and observer are known */
@@ -63,6 +63,8 @@ typedef struct
   double mid_d, t14_d, depth_ppm; /* of the predicted crossing, days from the record's origin */
   double tolerance_d;  /* how far it may be off: 10 min for a low orbit whose positions are not known */
 } AntPredictedEvent;
+/* The one nearest to an event, of n; asked and found are filled in, near is within a day of its contacts. */
+AntPredictedEvent ant_predicted_nearest (int asked, size_t n, const AntPredictedEvent *event, const AntDip *dip);
 /* rate_d: crossings a day that were assumed before the almanac was asked. */
 void ant_evidence_predicted (const AntPredictedEvent *predicted, double rate_d, const AntDip *dip, AntEvidence *evidence);
 void ant_evidence_eclipsed (const AntPredictedEvent *predicted, double rate_d, const AntDip *dip, AntEvidence *evidence);

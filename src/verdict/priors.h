@@ -18,6 +18,8 @@ typedef struct
   int logarithmic; /* uniform in ln instead of uniform */
 } AntPriorRange;
 
+/* Lengths of crossing and trapezoid are limited between the middles of their edges: the data pin those down, whatever the
+ * edges are. */
 typedef struct
 {
   const char *name; /* "crossing": untranslated, static */

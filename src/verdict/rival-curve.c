@@ -69,7 +69,7 @@ static void
 tabulate (AntRivalCurve *curve, AntLimbDarkening ld)
 {
   const double *p = curve->parameter;
-  AntCrossing crossing = { .radius_ratio = p[3], .impact = p[2] * (1 + p[3]), .t14_d = p[1] };
+  AntCrossing crossing = { .radius_ratio = p[3], .impact = p[2], .t14_d = p[1] };
   ant_crossing_shape_of (&curve->table, &crossing, ld);
   curve->tied_depth_ppm = ant_transit_loss (crossing.radius_ratio, crossing.impact, ld) / ANT_PPM;
 }

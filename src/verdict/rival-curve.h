@@ -8,7 +8,7 @@
 
 typedef enum
 {
-  ANT_RIVAL_CROSSING,  /* middle, T14, impact over 1 + k, k: a dark disc crosses; its depth follows from k */
+  ANT_RIVAL_CROSSING,  /* middle, T14, impact, radius ratio k: a dark disc crosses; its depth follows from k */
   ANT_RIVAL_TRAPEZOID, /* middle, length, edge over length: flat between straight edges */
   ANT_RIVAL_STEP,      /* onset: the level changes and stays */
   ANT_RIVAL_RECOVERY,  /* onset, time: a step that returns exponentially */

@@ -16,6 +16,14 @@ typedef struct
   double epoch_low_d, epoch_high_d;
 } Cube;
 
+/* Share of a crossing's or trapezoid's length that one edge takes; 0 for the others. */
+static double
+edge_share (AntRivalKind kind, const double *parameter)
+{
+  AntCrossing crossing = { .radius_ratio = parameter[3], .impact = parameter[2], .t14_d = 1 };
+  return kind == ANT_RIVAL_CROSSING ? ant_crossing_ingress_d (&crossing) : kind == ANT_RIVAL_TRAPEZOID ? parameter[2] : 0;
+}
+
 static void
 from_cube (const Cube *cube, const double *u, double *parameter)
 {
@@ -26,6 +34,8 @@ from_cube (const Cube *cube, const double *u, double *parameter)
       parameter[i + 1] = range->logarithmic ? range->low * pow (range->high / range->low, u[i + 1])
                                             : range->low + u[i + 1] * (range->high - range->low);
     }
+  if (cube->prior->n > 1)
+    parameter[1] /= 1 - edge_share (cube->kind, parameter);
 }
 
 /* Kept off the faces, so that a start is always inside. */
@@ -36,8 +46,9 @@ to_cube (const Cube *cube, const double *parameter, double *u)
   for (size_t i = 0; i < cube->prior->n; i++)
     {
       const AntPriorRange *range = &cube->prior->range[i];
-      u[i + 1] = range->logarithmic ? log (parameter[i + 1] / range->low) / log (range->high / range->low)
-                                    : (parameter[i + 1] - range->low) / (range->high - range->low);
+      double value = i == 0 ? parameter[1] * (1 - edge_share (cube->kind, parameter)) : parameter[i + 1];
+      u[i + 1] = range->logarithmic ? log (value / range->low) / log (range->high / range->low)
+                                    : (value - range->low) / (range->high - range->low);
     }
   for (size_t i = 0; i <= cube->prior->n; i++)
     u[i] = fmax (0.002, fmin (u[i], 0.998));
@@ -173,6 +184,17 @@ ant_rival_chi2_of_nothing (const AntRivalBench *bench, const AntDip *dip)
   return chi2_around (bench, dip, NULL, 0);
 }
 
+/* What means and spreads are taken of: the parameters, logarithms where the prior has them. */
+static void
+quantities (void *data, const double *u, double *quantity)
+{
+  const Cube *cube = data;
+  from_cube (cube, u, quantity);
+  for (size_t i = 0; i < cube->prior->n; i++)
+    if (cube->prior->range[i].logarithmic)
+      quantity[i + 1] = log (quantity[i + 1]);
+}
+
 /* The best parameters, their spread, and the depth there. */
 static void
 describe (const Cube *cube, const AntDip *dip, const AntIntegral *integral, AntRivalFit *fit)
@@ -182,13 +204,10 @@ describe (const Cube *cube, const AntDip *dip, const AntIntegral *integral, AntR
   double energy[ANT_LANES], moment[ANT_LANES], unit_d = cube->epoch_high_d - cube->epoch_low_d;
   int drawn = 1;
   from_cube (cube, integral->best, fit->parameter);
-  from_cube (cube, integral->mean, fit->mean);
-  fit->sigma[0] = sqrt (integral->covariance[0]) * unit_d;
-  for (size_t i = 1; i <= cube->prior->n; i++)
+  for (size_t i = 0; i <= cube->prior->n; i++)
     {
-      const AntPriorRange *range = &cube->prior->range[i - 1];
-      double width = range->logarithmic ? log (range->high / range->low) : range->high - range->low;
-      fit->sigma[i] = sqrt (integral->covariance[i * integral->n + i]) * width;
+      fit->mean[i] = i > 0 && cube->prior->range[i - 1].logarithmic ? exp (integral->mean[i]) : integral->mean[i];
+      fit->sigma[i] = sqrt (integral->covariance[i * integral->n + i]);
     }
   ant_rival_curve_init (&curve, fit->kind, fit->parameter, bench->limb_darkening, &bench->eclipse);
   project (bench, 1, &curve, &drawn, energy, moment);
@@ -215,7 +234,7 @@ ant_rival_fit (const AntRivalBench *bench, const AntDip *dip, AntRivalKind kind,
   size_t n_starts = ant_rival_starts (kind, dip, bench->limb_darkening, parameter);
   for (size_t i = 0; i < n_starts; i++)
     to_cube (&cube, parameter[i], start + i * (prior->n + 1));
-  AntStatus status = ant_evidence_integral (prior->n + 1, log_likelihoods, &cube, n_starts, start, &integral);
+  AntStatus status = ant_evidence_integral (prior->n + 1, log_likelihoods, quantities, &cube, n_starts, start, &integral);
   if (status)
     return status;
   describe (&cube, dip, &integral, fit);

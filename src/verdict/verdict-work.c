@@ -16,7 +16,7 @@ enum { REFIT, COMPARE, N_STAGES };
 struct _AntVerdictWork
 {
   AntVerdictInput input;
-  AntRecordFacts facts;
+  AntSurroundings facts;
   AntStop stop;
   AntNoiseModel *model; /* [n_chunks] */
   AntVerdict *verdict;  /* dips, then brightenings */
@@ -46,7 +46,7 @@ ant_verdict_work_new (const AntVerdictInput *input, AntStatus *status)
       ant_verdict_work_free (work);
       return NULL;
     }
-  ant_record_facts (input->series, &work->facts);
+  ant_surroundings_measure (input->series, &work->facts);
   work->input.options.observed_d = work->facts.observed_d;
   *status = ANT_OK;
   return work;
@@ -171,9 +171,25 @@ bench_lay (Bench *bench, const AntVerdictWork *work, size_t index)
   return status ? status : ant_whitener_solve (bench->whitener, bench->value, bench->z);
 }
 
+/* Take the shape that fits best out of the values: what is left around it is noise. */
+static void
+subtract_best (const AntRivalBench *rivals, const AntVerdict *verdict, float *value)
+{
+  const AntRivalFit *best = NULL;
+  AntRivalCurve curve;
+  for (int kind = 0; kind < ANT_N_RIVALS; kind++)
+    if (verdict->rival[kind].fitted && (!best || verdict->rival[kind].log_gain > best->log_gain))
+      best = &verdict->rival[kind];
+  if (!best)
+    return;
+  ant_rival_curve_init (&curve, best->kind, best->parameter, rivals->limb_darkening, &rivals->eclipse);
+  for (size_t i = 0; i < rivals->window.n; i++)
+    value[i] += (float) (best->depth_ppm * ant_rival_curve_mean (&curve, ant_series_time (&rivals->window, (double) i), rivals->exposure_d));
+}
+
 /* What the event's own record says besides its shape. */
 static void
-look_around (const AntVerdictWork *work, const Bench *bench, const AntDip *dip, AntVerdict *verdict)
+look_around (const AntVerdictWork *work, const Bench *bench, const AntRivalBench *rivals, const AntDip *dip, AntVerdict *verdict)
 {
   const AntVerdictInput *in = &work->input;
   int bright = verdict->sign < 0;
@@ -182,6 +198,10 @@ look_around (const AntVerdictWork *work, const Bench *bench, const AntDip *dip, 
   ant_verdict_add (verdict, &evidence);
   ant_evidence_edges (dip, &evidence);
   ant_verdict_add (verdict, &evidence);
+  subtract_best (rivals, verdict, bench->value);
+  double level = ant_whitener_level (bench->whitener, bench->value);
+  for (size_t i = 0; i < bench->window.n; i++)
+    bench->value[i] -= (float) level;
   ant_whitener_innovations (bench->whitener, bench->value, bench->innovation);
   ant_evidence_local_noise (bench->whitener, &bench->window, bench->innovation, dip, &evidence);
   ant_verdict_add (verdict, &evidence);
@@ -206,9 +226,25 @@ compare (AntVerdictWork *work, size_t index)
   if (!status)
     status = ant_verdict_compare (&rivals, dip, &work->stop, verdict);
   if (!status)
-    look_around (work, &bench, dip, verdict);
+    look_around (work, &bench, &rivals, dip, verdict);
   bench_clear (&bench);
   return status;
+}
+
+/* What the almanac says; a star has none. */
+static void
+look_up (const AntVerdictInput *in, const AntDip *dip, AntVerdict *verdict)
+{
+  if (in->options.target_star || verdict->sign < 0)
+    return;
+  AntEvidence evidence;
+  const double *rate = in->options.rates.per_year;
+  AntPredictedEvent crossing = ant_predicted_nearest (in->almanac, in->n_crossings, in->crossing, dip);
+  AntPredictedEvent eclipse = ant_predicted_nearest (in->almanac, in->n_eclipses, in->eclipse, dip);
+  ant_evidence_predicted (&crossing, rate[ANT_CAUSE_PLANET] / 365.25, dip, &evidence);
+  ant_verdict_add (verdict, &evidence);
+  ant_evidence_eclipsed (&eclipse, rate[ANT_CAUSE_ECLIPSE] / 365.25, dip, &evidence);
+  ant_verdict_add (verdict, &evidence);
 }
 
 /* Onsets crowd at one phase of the orbit only when all are seen together. */
@@ -227,6 +263,7 @@ decide (AntVerdictWork *work)
       ant_evidence_orbit (n, onset_d, work->input.line_period_d, event_of (work, i), &evidence);
       if (!isnan (evidence.number[1]))
         ant_verdict_add (&work->verdict[i], &evidence);
+      look_up (&work->input, event_of (work, i), &work->verdict[i]);
       ant_verdict_decide (&work->verdict[i], event_of (work, i), &work->input.options);
     }
   free (onset_d);

@@ -19,6 +19,9 @@ typedef struct
   size_t n_dips, n_brightenings;
   const AntDip *dip, *brightening;
   double line_period_d;      /* orbit that events may be locked to; 0: none known */
+  int almanac;               /* crossings and eclipses over the whole record are known: those listed, and no others */
+  size_t n_crossings, n_eclipses;
+  const AntPredictedEvent *crossing, *eclipse;
   AntVerdictOptions options; /* observed_d is filled in */
 } AntVerdictInput;
 

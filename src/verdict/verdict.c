@@ -21,7 +21,7 @@ ant_verdict_compare (const AntRivalBench *bench, const AntDip *dip, const AntSto
   if (crossing->fitted)
     {
       AntEvidence chord;
-      ant_evidence_chord (crossing->mean[1], crossing->mean[2] * (1 + crossing->mean[3]), crossing->mean[3], &chord);
+      ant_evidence_chord (crossing->mean[1], crossing->mean[2], crossing->mean[3], &chord);
       ant_verdict_add (verdict, &chord);
     }
   return ANT_OK;

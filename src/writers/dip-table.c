@@ -4,6 +4,7 @@
 #include <math.h>
 
 #include "core/units.h"
+#include "data/verdict-words.h"
 
 typedef struct
 {
@@ -45,9 +46,9 @@ NUMBER (first_snr, dip->first_snr)
 NUMBER (expected_false, dip->expected_false)
 NUMBER (coverage, dip->coverage)
 TEXT (edges, g_strdup (ant_edges_text (dip->edges)))
-TEXT (class, g_strdup ("undecided"))
-NUMBER (probability, NAN)
-TEXT (evidence, g_strdup (""))
+TEXT (class, g_strdup (ant_dip_class_name (rows->list.verdict ? ant_verdict_class (&rows->list.verdict[row]) : ANT_CLASS_UNDECIDED)))
+NUMBER (probability, rows->list.verdict ? ant_verdict_probability (&rows->list.verdict[row]) : NAN)
+TEXT (evidence, rows->list.verdict ? ant_verdict_table_text (&rows->list.verdict[row]) : g_strdup (""))
 TEXT (asked, g_strdup ("asked"))
 NUMBER (upper_limit_ppm, rows->list.upper_limit_ppm[row])
 
@@ -78,8 +79,8 @@ static const AntTableColumn columns[] = {
   { "coverage", ANT_CELL_REAL, "%.4f", NULL, "stat.filling", "observed fraction of the dip, weighted by its shape", FALSE, coverage, NULL },
   { "edges", ANT_CELL_TEXT, NULL, NULL, "meta.code", "which of ingress and egress were observed: both, ingress, egress, none", FALSE, NULL, edges },
   { "class", ANT_CELL_TEXT, NULL, NULL, "meta.code.class", "what the dip is taken for", FALSE, NULL, class },
-  { "probability", ANT_CELL_REAL, "%.4f", NULL, "stat.probability", "of that class", FALSE, probability, NULL },
-  { "evidence", ANT_CELL_TEXT, NULL, NULL, "meta.note", "what speaks for it", FALSE, NULL, evidence },
+  { "probability", ANT_CELL_REAL, "%.4f", NULL, "stat.probability", "of that class; of the likeliest where it is undecided", FALSE, probability, NULL },
+  { "evidence", ANT_CELL_TEXT, NULL, NULL, "meta.note", "shapes with their probabilities, then each piece of evidence with its number and, in brackets, the ln odds it gives the class", FALSE, NULL, evidence },
 };
 
 static const AntTableColumn asked_columns[] = {

@@ -27,9 +27,9 @@ test_gap_starts_it (void)
 {
   g_autofree float *value = g_new (float, 7200);
   AntSeries series = gapped (value);
-  AntRecordFacts facts;
+  AntSurroundings facts;
   AntEvidence evidence;
-  ant_record_facts (&series, &facts);
+  ant_surroundings_measure (&series, &facts);
   g_assert_cmpfloat_with_epsilon (facts.near_gap, (30 + 8) / 7200.0, 2e-4);
   g_assert_cmpfloat_with_epsilon (facts.observed_d, 7170 * STEP_D, 1e-9);
   AntDip after = dip_at (5 + 1.05 / 24 + 0.1, 0.2), within = dip_at (5.02 + 0.1, 0.2), later = dip_at (5.3 + 0.1, 0.2),
@@ -51,7 +51,7 @@ test_gap_is_nothing_where_all_is_gaps (void)
 {
   g_autofree float *value = g_new (float, 7200);
   AntSeries series = gapped (value);
-  AntRecordFacts facts = { .near_gap = 0.4, .observed_d = 5 };
+  AntSurroundings facts = { .near_gap = 0.4, .observed_d = 5 };
   AntEvidence evidence;
   AntDip dip = dip_at (5.02 + 0.1, 0.2);
   ant_evidence_gap (&series, &facts, &dip, &evidence);
@@ -61,7 +61,7 @@ test_gap_is_nothing_where_all_is_gaps (void)
 static void
 test_twin (void)
 {
-  AntRecordFacts facts = { .observed_d = 100 };
+  AntSurroundings facts = { .observed_d = 100 };
   AntDip dip = dip_at (50, 0.2), near = dip_at (50.4, 0.2), far = dip_at (60, 0.2);
   AntEvidence evidence;
   ant_evidence_twin (1, &near, &facts, &dip, &evidence);

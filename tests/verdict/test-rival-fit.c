@@ -114,7 +114,7 @@ check_recovered (AntRivalKind kind, const double *planted, double depth_ppm, dou
 static void
 test_each_shape_wins_its_own (void)
 {
-  double k = ant_crossing_radius_for_depth (0.4 * 1.03, ANT_LIMB_DARKENING_SUN, 1000e-6);
+  double k = ant_crossing_radius_for_depth (0.4, ANT_LIMB_DARKENING_SUN, 1000e-6);
   check_recovered (ANT_RIVAL_CROSSING, (double[4]) { 6, 0.25, 0.4, k }, 1000, 0.25, 6);
   check_recovered (ANT_RIVAL_TRAPEZOID, (double[4]) { 6, 0.25, 0.2 }, 1000, 0.25, 6);
   check_recovered (ANT_RIVAL_STEP, (double[4]) { 6 }, 600, 0.3, 6.15);
