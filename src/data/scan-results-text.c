@@ -7,6 +7,7 @@
 #include "core/units.h"
 #include "data/error.h"
 #include "data/json-fields.h"
+#include "data/verdict-text.h"
 
 #define MOST_DIPS 100000
 #define MOST_CHUNKS 10000
@@ -124,6 +125,23 @@ get_brightenings (JsonObject *object, AntScanResults *results, GError **error)
   return ant_json_get_records (object, "brightenings", TABLE (dip_fields), sizeof (AntDip), MOST_DIPS,
                                &results->n_brightenings, (gpointer *) &results->brightening, error)
          && check_dips ("brightenings", results->n_brightenings, results->brightening, results->n_chunks, error);
+}
+
+static void
+put_verdicts (JsonObject *object, const AntScanResults *results)
+{
+  if (results->dip_verdict)
+    json_object_set_array_member (object, "dip_verdicts", ant_verdicts_to_json (results->n_dips, results->dip_verdict));
+  if (results->brightening_verdict)
+    json_object_set_array_member (object, "brightening_verdicts",
+                                  ant_verdicts_to_json (results->n_brightenings, results->brightening_verdict));
+}
+
+static gboolean
+get_verdicts (JsonObject *object, AntScanResults *results, GError **error)
+{
+  return ant_verdicts_from_json (object, "dip_verdicts", results->n_dips, &results->dip_verdict, error)
+         && ant_verdicts_from_json (object, "brightening_verdicts", results->n_brightenings, &results->brightening_verdict, error);
 }
 
 static void
@@ -376,6 +394,7 @@ static const struct
   gboolean (*get) (JsonObject *object, AntScanResults *results, GError **error);
 } parts[] = {
   { put_chunks, get_chunks },     { put_dips, get_dips },   { put_brightenings, get_brightenings },
+  { put_verdicts, get_verdicts },
   { put_passages, get_passages }, { put_floor, get_median_floor }, { put_spikes, get_spikes },
   { put_said, get_said },
 };
