@@ -5,7 +5,7 @@
 #include <math.h>
 
 #include "data/error.h"
-#include "readers/reader.h"
+#include "jobs/record-open.h"
 
 void
 ant_record_options_add (GOptionContext *context, AntRecordOptions *options)
@@ -76,7 +76,7 @@ ant_record_options_read (const AntRecordOptions *options, const char *path, GCan
     choices.fill_values = g_array_new (FALSE, FALSE, sizeof (double));
   if ((!options->columns || ant_reading_choices_parse_columns (&choices, options->columns, error))
       && (!options->fill || parse_fill (options->fill, choices.fill_values, error)))
-    record = ant_reader_open (path, &choices, cancellable, error);
+    record = ant_record_open (path, &choices, 0, cancellable, error);
   ant_reading_choices_clear (&choices);
   return record;
 }

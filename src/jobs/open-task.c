@@ -1,6 +1,8 @@
 /* open-task.c - a thread that opens a record. */
 #include "jobs/open-task.h"
 
+#include "jobs/record-open.h"
+
 typedef struct
 {
   char *path;
@@ -18,7 +20,7 @@ order_free (gpointer data)
 static AntLayers *
 open_record (const Order *order, GCancellable *cancellable, GError **error)
 {
-  g_autoptr (AntRecord) record = ant_reader_open (order->path, NULL, cancellable, error);
+  g_autoptr (AntRecord) record = ant_record_open (order->path, NULL, 0, cancellable, error);
   AntGridOptions grid = ant_settings_grid (&order->settings);
   if (!record || g_cancellable_set_error_if_cancelled (cancellable, error))
     return NULL;

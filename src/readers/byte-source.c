@@ -23,12 +23,13 @@ struct _AntByteSource
   char *name;
   int fd; /* -1 for memory */
   const guint8 *bytes;
-  gsize n_bytes, at;
+  gsize n_bytes, at, file_size;
   struct sha256_ctx sha256; /* GLib's own sum takes longer than reading the rows */
   guint64 n_stored, n_unpacked;
 
   guint8 head[2]; /* read to tell gzip, not yet handed out */
   gsize n_head;
+  gboolean hash_is_left; /* to the reader */
   gboolean is_file, looked, packed, member_open, at_end;
   z_stream inflater;
   guint8 *block;
@@ -69,6 +70,7 @@ ant_byte_source_open (const char *path, GError **error)
     }
   AntByteSource *source = new_source (path, fd);
   source->is_file = S_ISREG (status.st_mode);
+  source->file_size = source->is_file ? (gsize) status.st_size : 0;
   return source;
 }
 
@@ -139,7 +141,8 @@ read_stored (AntByteSource *source, guint8 *buffer, gsize n, GError **error)
       g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: cannot be read on: %s"), source->name, g_strerror (errno));
       return -1;
     }
-  sha256_update (&source->sha256, (gsize) got, buffer);
+  if (!source->hash_is_left)
+    sha256_update (&source->sha256, (gsize) got, buffer);
   source->n_stored += (guint64) got;
   return got;
 }
@@ -281,6 +284,19 @@ ant_byte_source_read (AntByteSource *source, void *buffer, gsize n, GError **err
 }
 
 gboolean
+ant_byte_source_leave_hashing (AntByteSource *source)
+{
+  source->hash_is_left = !source->packed;
+  return source->hash_is_left;
+}
+
+void
+ant_byte_source_hash (AntByteSource *source, const void *bytes, gsize n)
+{
+  sha256_update (&source->sha256, n, bytes);
+}
+
+gboolean
 ant_byte_source_drain (AntByteSource *source, gsize *n, GCancellable *cancellable, GError **error)
 {
   g_autofree char *buffer = g_malloc (BLOCK);
@@ -318,4 +334,10 @@ const char *
 ant_byte_source_path (const AntByteSource *source)
 {
   return source->is_file && !source->packed ? source->name : NULL;
+}
+
+gsize
+ant_byte_source_file_size (const AntByteSource *source)
+{
+  return source->file_size;
 }

@@ -16,13 +16,25 @@
 #define MOST_HDUS 1000
 #define MOST_NAMED 8
 
-/* The file for CFITSIO: on the disk where it stands plain, else in memory. */
+/* The file for CFITSIO: on the disk where it stands plain, not hashed yet; else in memory. */
 typedef struct
 {
   fitsfile *file;
   void *bytes; /* ours to free, or NULL */
   size_t n_bytes;
 } Input;
+
+/* Rows are read and the file is hashed at the same time. */
+typedef struct
+{
+  AntByteSource *source; /* to hash, or NULL */
+  AntFitsTable *table;
+  AntTimeForm *form;
+  const AntValueColumns *columns;
+  GCancellable *cancellable;
+  AntTableRows rows;
+  GError *row_error, *hash_error;
+} Work;
 
 static gboolean
 input_open (Input *input, AntByteSource *source, GCancellable *cancellable, GError **error)
@@ -33,8 +45,7 @@ input_open (Input *input, AntByteSource *source, GCancellable *cancellable, GErr
   *input = (Input){ 0 };
   if (path)
     {
-      if (!ant_byte_source_drain (source, &n, cancellable, error))
-        return FALSE;
+      n = ant_byte_source_file_size (source);
       fits_open_diskfile (&input->file, path, READONLY, &status);
     }
   else
@@ -324,27 +335,77 @@ read_rows (AntFitsTable *table, AntTimeForm *form, const AntValueColumns *column
   return good;
 }
 
+static const char *
+title (void *work, size_t stage)
+{
+  return "reading rows";
+}
+
+static size_t
+count (void *work, size_t stage)
+{
+  return 2;
+}
+
+static AntStatus
+run_slice (void *data, size_t stage, size_t slice)
+{
+  Work *work = data;
+  gsize n;
+  if (slice == 1)
+    read_rows (work->table, work->form, work->columns, work->cancellable, &work->rows, &work->row_error);
+  else if (work->source)
+    ant_byte_source_drain (work->source, &n, work->cancellable, &work->hash_error);
+  return ANT_OK;
+}
+
+static AntStatus
+finish (void *work, size_t stage)
+{
+  return ANT_OK;
+}
+
+static gboolean
+read_and_hash (Work *work, const AntSliceRunner *runner, GError **error)
+{
+  static const AntStages stages = { .n_stages = 1, .title = title, .count = count, .run_slice = run_slice, .finish = finish };
+  if (runner && work->source)
+    runner->run (&stages, work, NULL, runner->data); /* both slices look at the cancellable themselves */
+  else
+    for (size_t slice = 0; slice < 2; slice++)
+      run_slice (work, 0, slice);
+  GError **first = work->row_error ? &work->row_error : &work->hash_error;
+  if (*first)
+    g_propagate_error (error, g_steal_pointer (first));
+  else
+    return TRUE;
+  g_clear_error (&work->hash_error);
+  return FALSE;
+}
+
 gboolean
-ant_fits_reader_read (AntByteSource *source, const AntReadingChoices *choices, GCancellable *cancellable, AntRecord *record,
-                      GError **error)
+ant_fits_reader_read (AntByteSource *source, const AntReadingChoices *choices, const AntSliceRunner *runner,
+                      GCancellable *cancellable, AntRecord *record, GError **error)
 {
   Input input;
   AntTimeForm form;
   AntValueColumns columns;
-  AntTableRows rows = { 0 };
+  Work work = { .form = &form, .columns = &columns, .cancellable = cancellable };
   gboolean done = FALSE;
   if (input_open (&input, source, cancellable, error))
     {
       g_autoptr (AntFitsTable) table = choose_table (&input, record->path, choices, record, &form, &columns, error);
       if (table)
         {
+          work.table = table;
+          work.source = input.bytes ? NULL : source;
           say_table (table, ant_byte_source_is_packed (source), choices && choices->hdu, record);
           ant_table_record_say_time (table->layout, &form, record);
-          done = read_rows (table, &form, &columns, cancellable, &rows, error)
-                 && ant_table_record_fill (&rows, table->layout, &form, &columns, choices, record, error);
+          done = read_and_hash (&work, runner, error)
+                 && ant_table_record_fill (&work.rows, table->layout, &form, &columns, choices, record, error);
         }
     }
-  ant_table_rows_clear (&rows);
+  ant_table_rows_clear (&work.rows);
   input_close (&input);
   return done;
 }

@@ -14,8 +14,8 @@ typedef struct
 {
   const char *name;
   gboolean (*sniff) (const guint8 *head, gsize n);
-  gboolean (*read) (AntByteSource *source, const AntReadingChoices *choices, GCancellable *cancellable, AntRecord *record,
-                    GError **error);
+  gboolean (*read) (AntByteSource *source, const AntReadingChoices *choices, const AntSliceRunner *runner,
+                    GCancellable *cancellable, AntRecord *record, GError **error);
 } AntFormat;
 
 /* Known kinds of binary files, so that the sentence can name what was found. */
@@ -54,8 +54,8 @@ static const AntFormat formats[] = {
 };
 
 static AntRecord *
-read_source (AntByteSource *source, const char *path, const AntReadingChoices *choices, GCancellable *cancellable,
-             GError **error)
+read_source (AntByteSource *source, const char *path, const AntReadingChoices *choices, const AntSliceRunner *runner,
+             GCancellable *cancellable, GError **error)
 {
   gsize n;
   const guint8 *head = ant_byte_source_peek (source, &n, error);
@@ -68,7 +68,7 @@ read_source (AntByteSource *source, const char *path, const AntReadingChoices *c
       g_autoptr (AntRecord) record = ant_record_new ();
       record->path = g_strdup (ant_byte_source_name (source));
       record->format = g_strdup (formats[i].name);
-      if (!formats[i].read (source, choices, cancellable, record, error))
+      if (!formats[i].read (source, choices, runner, cancellable, record, error))
         return NULL;
       g_free (record->path);
       record->path = g_strdup (path);
@@ -81,15 +81,22 @@ read_source (AntByteSource *source, const char *path, const AntReadingChoices *c
 }
 
 AntRecord *
-ant_reader_open (const char *path, const AntReadingChoices *choices, GCancellable *cancellable, GError **error)
+ant_reader_open_with (const char *path, const AntReadingChoices *choices, const AntSliceRunner *runner, GCancellable *cancellable,
+                      GError **error)
 {
   g_autoptr (AntByteSource) source = ant_byte_source_open (path, error);
-  return source ? read_source (source, path, choices, cancellable, error) : NULL;
+  return source ? read_source (source, path, choices, runner, cancellable, error) : NULL;
+}
+
+AntRecord *
+ant_reader_open (const char *path, const AntReadingChoices *choices, GCancellable *cancellable, GError **error)
+{
+  return ant_reader_open_with (path, choices, NULL, cancellable, error);
 }
 
 AntRecord *
 ant_reader_read_bytes (const char *name, const void *bytes, gsize n, const AntReadingChoices *choices, GError **error)
 {
   g_autoptr (AntByteSource) source = ant_byte_source_new_bytes (name, bytes, n);
-  return read_source (source, name, choices, NULL, error);
+  return read_source (source, name, choices, NULL, NULL, error);
 }

@@ -5,11 +5,22 @@
 
 #include <gio/gio.h>
 #include "data/reading-choices.h"
+#include "core/stages.h"
 #include "data/record.h"
+
+/* Who runs the slices of a long table: jobs/ gives one that drives its pool (jobs/record-open.h). Without one they run here, one
+ * after another; the digits are the same. */
+typedef struct
+{
+  AntStatus (*run) (const AntStages *stages, gpointer work, GCancellable *cancellable, gpointer data);
+  gpointer data;
+} AntSliceRunner;
 
 /* Read a file ("-" = standard input). The rows are filled, the grid is not made. NULL with one sentence that names the
  * place, what was found and what was expected (domain ANT_ERROR, ANT_ERROR_READ). Cancellable between blocks. */
 AntRecord *ant_reader_open (const char *path, const AntReadingChoices *choices, GCancellable *cancellable, GError **error);
+AntRecord *ant_reader_open_with (const char *path, const AntReadingChoices *choices, const AntSliceRunner *runner,
+                                 GCancellable *cancellable, GError **error);
 /* The same from memory, for tests and fuzzing: `name` stands for the path. */
 AntRecord *ant_reader_read_bytes (const char *name, const void *bytes, gsize n, const AntReadingChoices *choices,
                                   GError **error);

@@ -5,6 +5,7 @@
 #include <math.h>
 #include <string.h>
 
+#include "readers/line-source.h"
 #include "readers/text-cell.h"
 #include "readers/text-names.h"
 
@@ -17,6 +18,14 @@ typedef struct
   guint values[ANT_MOST_CANDIDATES], times[ANT_MOST_TIME_PARTS], further[ANT_MOST_FURTHER];
   AntCell cells[ANT_MOST_CANDIDATES + ANT_MOST_TIME_PARTS + ANT_MOST_FURTHER + 2];
 } Slots;
+
+struct _AntRowParser
+{
+  const AntTableLayout *layout;
+  const AntValueColumns *columns;
+  AntTimeForm form;
+  Slots slots;
+};
 
 static guint
 slot_of (Slots *slots, guint column)
@@ -45,11 +54,11 @@ make_slots (Slots *slots, const AntTableLayout *layout, const AntTimeForm *form,
 }
 
 static void
-make_room (AntTableRows *rows, const AntValueColumns *columns)
+make_room (AntTableRows *rows, const AntValueColumns *columns, gsize n_more)
 {
-  if (rows->n < rows->room)
+  if (rows->n + n_more <= rows->room)
     return;
-  rows->room = rows->room ? 2 * rows->room : 4096;
+  rows->room = MAX (rows->n + n_more, rows->room ? 2 * rows->room : 4096);
   rows->time_d = g_renew (double, rows->time_d, rows->room);
   rows->line = g_renew (guint32, rows->line, rows->room);
   for (guint i = 0; i < columns->n_values; i++)
@@ -124,32 +133,125 @@ add_row (AntTableRows *rows, const Slots *slots, AntTimeForm *form, const AntVal
     }
 }
 
-gboolean
-ant_table_rows_read (AntTableRows *rows, AntLineSource *lines, const AntTableLayout *layout, AntTimeForm *form,
-                     const AntValueColumns *columns, GError **error)
+AntRowParser *
+ant_row_parser_new (const AntTableLayout *layout, const AntTimeForm *form, const AntValueColumns *columns)
 {
-  g_autofree Slots *slots = g_new (Slots, 1);
-  const char *start, *end;
-  guint n_cells;
-  int more;
-  make_slots (slots, layout, form, columns);
-  while ((more = ant_line_source_next (lines, &start, &end, error)) == 1)
+  AntRowParser *parser = g_new (AntRowParser, 1);
+  parser->layout = layout;
+  parser->columns = columns;
+  parser->form = *form;
+  make_slots (&parser->slots, layout, form, columns);
+  return parser;
+}
+
+void
+ant_row_parser_free (AntRowParser *parser)
+{
+  g_free (parser);
+}
+
+void
+ant_row_parser_set_form (AntRowParser *parser, const AntTimeForm *form)
+{
+  parser->form = *form;
+}
+
+/* The cells of a line of data, [start, end) without its line end: 1 if there are as many as columns, 0 if not, -1 for a blank
+ * line or a comment. */
+static int
+cut_line (AntRowParser *parser, const char *start, const char *end, guint *n_cells)
+{
+  const char *at = ant_cell_skip_blanks (start, end);
+  if (at == end || ant_cell_is_comment_mark (*at))
+    return -1;
+  return cut (&parser->slots, parser->layout, parser->layout->separator == '\t' ? start : at, end, n_cells);
+}
+
+AntRowsFault
+ant_table_rows_parse (AntTableRows *rows, AntRowParser *parser, const char *start, const char *end)
+{
+  const char *nul = memchr (start, 0, (gsize) (end - start));
+  guint n_cells = 0;
+  for (const char *next; start < end; start = next)
     {
-      if (lines->line < layout->first_row)
-        continue;
-      const char *at = ant_cell_skip_blanks (start, end);
-      if (at == end || ant_cell_is_comment_mark (*at))
-        continue;
-      make_room (rows, columns);
-      if (cut (slots, layout, layout->separator == '\t' ? start : at, end, &n_cells))
-        add_row (rows, slots, form, columns, lines->line);
-      else if (rows->n_other_width++ == 0)
+      const char *newline = memchr (start, '\n', (gsize) (end - start));
+      next = newline + 1;
+      if (nul && nul < next)
+        return ANT_ROWS_NUL;
+      if (next - start > ANT_LONGEST_LINE)
+        return ANT_ROWS_LONG_LINE;
+      rows->n_lines++;
+      make_room (rows, parser->columns, 1);
+      int whole = cut_line (parser, start, newline > start && newline[-1] == '\r' ? newline - 1 : newline, &n_cells);
+      if (whole > 0)
+        add_row (rows, &parser->slots, &parser->form, parser->columns, rows->n_lines);
+      else if (whole == 0 && rows->n_other_width++ == 0)
         {
-          rows->first_other_width = lines->line;
+          rows->first_other_width = rows->n_lines;
           rows->other_width = n_cells;
         }
     }
-  return more == 0;
+  return ANT_ROWS_GOOD;
+}
+
+void
+ant_row_parser_start_form (AntRowParser *parser, const char *start, const char *end, AntTimeForm *form)
+{
+  const AntCell *times[ANT_MOST_TIME_PARTS];
+  guint n_cells;
+  for (guint i = 0; i < form->n_parts; i++)
+    times[i] = &parser->slots.cells[parser->slots.times[i]];
+  for (const char *newline; start < end && !form->started; start = newline + 1)
+    {
+      newline = memchr (start, '\n', (gsize) (end - start));
+      if (cut_line (parser, start, newline, &n_cells) > 0)
+        ant_time_form_read (form, times);
+    }
+}
+
+static void
+take_first (guint32 *first, char **text, gsize n_before, guint32 n_lines, guint32 *more_first, char **more_text)
+{
+  if (n_before == 0 && *more_first > 0)
+    {
+      *first = n_lines + *more_first;
+      if (text)
+        *text = g_steal_pointer (more_text);
+    }
+  if (more_text)
+    g_clear_pointer (more_text, g_free);
+  *more_first = 0;
+}
+
+void
+ant_table_rows_append (AntTableRows *rows, AntTableRows *more, const AntValueColumns *columns)
+{
+  gsize n = more->n;
+  make_room (rows, columns, n);
+  memcpy (rows->time_d + rows->n, more->time_d, n * sizeof (double));
+  for (gsize i = 0; i < n; i++)
+    rows->line[rows->n + i] = rows->n_lines + more->line[i];
+  for (guint v = 0; v < columns->n_values; v++)
+    memcpy (rows->values[v] + rows->n, more->values[v], n * sizeof (double));
+  for (guint f = 0; f < columns->n_further; f++)
+    memcpy (rows->further[f] + rows->n, more->further[f], n * sizeof (float));
+  if (columns->error >= 0)
+    memcpy (rows->error + rows->n, more->error, n * sizeof (double));
+  if (columns->quality >= 0)
+    memcpy (rows->quality + rows->n, more->quality, n * sizeof (gint64));
+  take_first (&rows->first_no_time, &rows->no_time_text, rows->n_no_time, rows->n_lines, &more->first_no_time, &more->no_time_text);
+  take_first (&rows->first_text_value, &rows->text_value, rows->n_text_values, rows->n_lines, &more->first_text_value, &more->text_value);
+  if (rows->n_other_width == 0)
+    rows->other_width = more->other_width;
+  take_first (&rows->first_other_width, NULL, rows->n_other_width, rows->n_lines, &more->first_other_width, NULL);
+  rows->n += n;
+  rows->n_lines += more->n_lines;
+  rows->n_no_time += more->n_no_time;
+  rows->n_text_values += more->n_text_values;
+  rows->n_no_quality += more->n_no_quality;
+  rows->n_other_width += more->n_other_width;
+  more->n = more->n_no_time = more->n_text_values = more->n_no_quality = more->n_other_width = 0;
+  more->n_lines = 0;
 }
 
 void

@@ -7,6 +7,7 @@
 #include "data/error.h"
 #include "readers/table-record.h"
 #include "readers/text-layout.h"
+#include "readers/text-slices.h"
 #include "readers/time-columns.h"
 
 /* The first lines of the file, whole ones, and what they show. */
@@ -49,8 +50,8 @@ say_layout (const AntTableLayout *layout, gboolean packed, AntRecord *record)
 }
 
 gboolean
-ant_text_reader_read (AntByteSource *source, const AntReadingChoices *choices, GCancellable *cancellable, AntRecord *record,
-                      GError **error)
+ant_text_reader_read (AntByteSource *source, const AntReadingChoices *choices, const AntSliceRunner *runner,
+                      GCancellable *cancellable, AntRecord *record, GError **error)
 {
   AntLineSource lines;
   AntTableRows rows = { 0 };
@@ -65,7 +66,7 @@ ant_text_reader_read (AntByteSource *source, const AntReadingChoices *choices, G
       && ant_value_columns_find (layout, &form, choices, record->path, &columns, error))
     {
       ant_table_record_say_time (layout, &form, record);
-      done = ant_table_rows_read (&rows, &lines, layout, &form, &columns, error)
+      done = ant_text_slices_read (&rows, &lines, layout, &form, &columns, runner, error)
              && ant_table_record_fill (&rows, layout, &form, &columns, choices, record, error);
     }
   ant_table_rows_clear (&rows);

@@ -5,5 +5,5 @@
 #include "readers/reader.h"
 
 /* Everything but path and SHA-256, which the registry sets. */
-gboolean ant_text_reader_read (AntByteSource *source, const AntReadingChoices *choices, GCancellable *cancellable,
-                               AntRecord *record, GError **error);
+gboolean ant_text_reader_read (AntByteSource *source, const AntReadingChoices *choices, const AntSliceRunner *runner,
+                               GCancellable *cancellable, AntRecord *record, GError **error);
