@@ -192,6 +192,24 @@ ant_dip_facts (const AntRecord *record, const AntDip *dip, double upper_limit_pp
 }
 
 char *
+ant_passage_width_words (const AntDip *passage)
+{
+  return g_strdup_printf (_("%.1f d"), passage->duration_d);
+}
+
+GPtrArray *
+ant_passage_facts (const AntRecord *record, const AntDip *passage, AntDepthUnit unit)
+{
+  GPtrArray *facts = g_ptr_array_new_with_free_func (ant_fact_free);
+  add_taking (facts, _("Depth"), ant_depth_words (record, passage, unit));
+  add_taking (facts, _("Middle"), ant_instant_words (record, passage->mid_d));
+  add_taking (facts, _("Width"), g_strdup_printf (_("%.1f d at half depth"), passage->duration_d));
+  add_taking (facts, _("Observed"), g_strdup_printf ("%.0f %%", 100 * passage->coverage));
+  add_taking (facts, _("No claim"), g_strdup (_("minima of this width are the Sun's own: spot groups above all")));
+  return facts;
+}
+
+char *
 ant_facts_text (const GPtrArray *facts)
 {
   GString *text = g_string_new (NULL);

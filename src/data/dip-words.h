@@ -37,5 +37,8 @@ char *ant_radius_words (const AntDip *dip);
 
 /* Everything about a dip, as AntFact. upper_limit_ppm NaN: the dip was found, not asked for. Caller unrefs. */
 GPtrArray *ant_dip_facts (const AntRecord *record, const AntDip *dip, double upper_limit_ppm, AntDepthUnit unit);
+/* Likewise about a passage (ant_passage_as_dip). */
+char *ant_passage_width_words (const AntDip *passage); /* "5.4 d" */
+GPtrArray *ant_passage_facts (const AntRecord *record, const AntDip *passage, AntDepthUnit unit);
 /* Facts as lines "label<tab>value", for the clipboard. */
 char *ant_facts_text (const GPtrArray *facts);

@@ -59,7 +59,7 @@ ant_noise_health_facts (const AntScanResults *results, gsize index)
   if (!isnan (health->loudest))
     add (facts, _("Loudest, quietest"), _("%.2f, %.2f of the stated size"), health->loudest, health->quietest);
   add (facts, _("Samples"), _("%zu, %zu spikes left out"), health->observed, health->spikes);
-  add (facts, _("Mirror"), _("%zu dips, %zu brightenings of 9 h and less"), results->n_mirror_dips,
+  add (facts, _("Mirror"), _("dips %zu, brightenings %zu, of 9 h and less"), results->n_mirror_dips,
        results->n_mirrored);
   for (guint i = 0; i < MIN (results->said->len, 12); i++)
     add (facts, i == 0 ? _("Remarks") : "", "%s", (const char *) g_ptr_array_index (results->said, i));

@@ -253,6 +253,7 @@ ant_scan_results_new (AntRecord *record, const AntSettings *settings, const AntS
   results->threshold_snr = ant_scan_threshold (scan);
   results->n_surrogates = ant_scan_surrogates (scan, &results->n_surrogate_events);
   results->expected_at_threshold = ant_scan_expected_false (scan, results->threshold_snr);
+  results->chance = ant_scan_chance_law (scan);
   results->observed_d = ant_scan_chance_field (scan).observed_d;
   results->n_refits = ant_scan_refits (scan);
   results->n_mirror_dips = count_short (results->n_dips, results->dip);
@@ -322,6 +323,16 @@ ant_scan_results_add_verdicts (AntScanResults *results, const AntVerdictWork *wo
   results->dip_verdict = g_memdup2 (ant_verdict_work_dips (work), results->n_dips * sizeof (AntVerdict));
   results->brightening_verdict
       = g_memdup2 (ant_verdict_work_brightenings (work), results->n_brightenings * sizeof (AntVerdict));
+}
+
+AntDip
+ant_passage_as_dip (const AntPassage *passage)
+{
+  return (AntDip) { .mid_d = passage->mid_d, .duration_d = passage->end_d - passage->start_d, .edge_d = NAN,
+                    .depth_ppm = passage->depth_ppm, .depth_sigma_ppm = passage->depth_sigma_ppm, .mean_depth_ppm = NAN,
+                    .radius_ratio = NAN, .snr = passage->depth_ppm / passage->depth_sigma_ppm, .first_snr = NAN,
+                    .mid_sigma_d = NAN, .duration_sigma_d = NAN, .expected_false = NAN, .coverage = passage->coverage,
+                    .chunk = passage->chunk };
 }
 
 AntDipList

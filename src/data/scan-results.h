@@ -28,6 +28,7 @@ typedef struct
   double threshold_snr;
   double expected_at_threshold;     /* noise-only dips of one sign expected at the threshold in this record */
   gsize n_surrogates, n_surrogate_events; /* that the false-alarm law was refitted to; 0: the built-in law */
+  AntChanceLaw chance;              /* what noise alone is expected to show; all 0: not known */
   double observed_d;
   gsize n_refits;
   gsize n_mirror_dips, n_mirrored;  /* dips and brightenings of 9 h and less: the mirror's check */
@@ -56,6 +57,8 @@ void ant_scan_results_add_verdicts (AntScanResults *results, const AntVerdictWor
 
 /* The options of a search as the settings and the record's exposure give them. */
 AntScanOptions ant_scan_results_options (const AntRecord *record, const AntSettings *settings);
+/* A passage as lists and plots take it beside dips: start to end as its duration, depth over its uncertainty as its SNR. */
+AntDip ant_passage_as_dip (const AntPassage *passage);
 /* What a stopped scan lacks, as a sentence; NULL if it is complete. Static. */
 const char *ant_scan_reach_words (AntScanReach reach);
 /* The dips (or brightenings) as the view that tables take; valid as long as the results. */

@@ -24,8 +24,11 @@ ant_closeup_view_desk_changed (AntPlotView *plot, AntDeskChange what)
   g_clear_pointer (&self->data, ant_closeup_data_free);
   if (!item || !ant_desk_get_layers (desk))
     return;
-  self->data =
-      ant_closeup_data_new (ant_desk_get_layers (desk), ant_desk_get_settings (desk), ant_dip_item_get_dip (item));
+  if (ant_dip_item_get_kind (item) == ANT_KIND_PASSAGE)
+    self->data = ant_closeup_data_new_passage (ant_desk_get_results (desk), ant_dip_item_get_dip (item));
+  else
+    self->data =
+        ant_closeup_data_new (ant_desk_get_layers (desk), ant_desk_get_settings (desk), ant_dip_item_get_dip (item));
   g_autofree char *title = ant_dip_item_title (item);
   ant_plot_view_set_title (plot, title);
 }
@@ -50,6 +53,9 @@ ant_closeup_view_describe (AntPlotView *plot)
     return g_strdup (_("No dip is selected"));
   g_autofree char *depth = ant_depth_words (ant_desk_get_record (desk), ant_dip_item_get_dip (item), ANT_DEPTH_PPM);
   g_autofree char *length = ant_length_words (ant_dip_item_get_dip (item)->duration_d);
+  if (ant_dip_item_get_kind (item) == ANT_KIND_PASSAGE)
+    return g_strdup_printf (_("The passage's values with the slow part over them: %s, %s long at half depth"), depth,
+                            length);
   return g_strdup_printf (_("The dip's samples with the fitted crossing over them: %s, %s long"), depth, length);
 }
 

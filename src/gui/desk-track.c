@@ -90,7 +90,8 @@ wanted_d (AntDesk *self)
 {
   if (self->snr_choice_d > 0)
     return self->snr_choice_d;
-  return self->selected ? ant_dip_item_get_dip (self->selected)->duration_d : self->snr_wanted_d;
+  gboolean dip = self->selected && ant_dip_item_get_kind (self->selected) != ANT_KIND_PASSAGE;
+  return dip ? ant_dip_item_get_dip (self->selected)->duration_d : self->snr_wanted_d;
 }
 
 void

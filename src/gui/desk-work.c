@@ -181,6 +181,10 @@ take_outcome (AntDesk *self, AntScanOutcome *outcome)
   add_items (self, ANT_KIND_BRIGHTENING, self->results->n_brightenings, self->results->brightening);
   for (guint i = 0; i < asked->len; i++)
     g_list_store_append (self->items, g_ptr_array_index (asked, i));
+  g_autofree AntDip *passage = g_new (AntDip, self->results->n_passages + 1);
+  for (gsize i = 0; i < self->results->n_passages; i++)
+    passage[i] = ant_passage_as_dip (&self->results->passage[i]);
+  add_items (self, ANT_KIND_PASSAGE, self->results->n_passages, passage);
   ant_desk_make_marks (self);
   select_again (self, selected_d);
 }
@@ -248,7 +252,7 @@ asked_cb (GObject *source, GAsyncResult *result, gpointer data)
       g_autoptr (AntDipItem) item
           = ant_dip_item_new (ANT_KIND_ASKED, next_asked_number (self), &asked->dip, asked->upper_limit_ppm);
       g_list_store_append (self->items, item);
-      self->shown |= ANT_KIND_ASKED;
+      self->shown = self->shown == ANT_KIND_PASSAGE ? ANT_KIND_DIP | ANT_KIND_ASKED : self->shown | ANT_KIND_ASKED;
       ant_desk_make_marks (self);
       g_set_object (&self->selected, item);
     }

@@ -45,8 +45,7 @@ show (AntDipInspector *self)
     return;
   const AntDip *dip = ant_dip_item_get_dip (item);
   g_autofree char *title = ant_dip_item_title (item), *span = ant_span_words (record, dip);
-  g_autoptr (GPtrArray) facts
-      = ant_dip_facts (record, dip, ant_dip_item_get_upper_limit_ppm (item), ant_desk_get_unit (self->desk));
+  g_autoptr (GPtrArray) facts = ant_dip_item_facts (item, record, ant_desk_get_unit (self->desk));
   gtk_label_set_text (self->title, title);
   gtk_label_set_text (self->span, span);
   gtk_widget_set_tooltip_text (GTK_WIDGET (self->span), span);

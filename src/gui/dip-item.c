@@ -82,6 +82,13 @@ ant_dip_item_judge (AntDipItem *self, AntDipClass class, const char *note)
   g_object_notify_by_pspec (G_OBJECT (self), properties[PROP_JUDGEMENT]);
 }
 
+GPtrArray *
+ant_dip_item_facts (AntDipItem *self, const AntRecord *record, AntDepthUnit unit)
+{
+  return self->kind == ANT_KIND_PASSAGE ? ant_passage_facts (record, &self->dip, unit)
+                                        : ant_dip_facts (record, &self->dip, self->upper_limit_ppm, unit);
+}
+
 char *
 ant_dip_item_title (AntDipItem *self)
 {
@@ -91,6 +98,8 @@ ant_dip_item_title (AntDipItem *self)
       return g_strdup_printf (_("Brightening %u"), self->number);
     case ANT_KIND_ASKED:
       return g_strdup_printf (_("Asked dip %u"), self->number);
+    case ANT_KIND_PASSAGE:
+      return g_strdup_printf (_("Passage %u"), self->number);
     case ANT_KIND_DIP:
     default:
       return g_strdup_printf (_("Dip %u"), self->number);

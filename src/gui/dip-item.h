@@ -1,7 +1,8 @@
-/* dip-item.h - one row of the list of dips: a dip, a brightening or an asked dip, with the analyst's word on it. */
+/* dip-item.h - one row of the list of dips: a dip, a brightening, an asked dip or a passage, with the analyst's word on it. */
 #pragma once
 
 #include <gio/gio.h>
+#include "data/dip-words.h"
 #include "data/judgement.h"
 #include "plot/dip-mark.h"
 #include "search/dip.h"
@@ -11,6 +12,7 @@ typedef enum
   ANT_KIND_DIP = 1 << 0,
   ANT_KIND_BRIGHTENING = 1 << 1,
   ANT_KIND_ASKED = 1 << 2,
+  ANT_KIND_PASSAGE = 1 << 3, /* its dip is ant_passage_as_dip's; never shown beside the others */
 } AntDipKind;
 
 #define ANT_TYPE_DIP_ITEM (ant_dip_item_get_type ())
@@ -28,6 +30,8 @@ AntDipClass ant_dip_item_get_class (AntDipItem *self);
 const char *ant_dip_item_get_note (AntDipItem *self);
 void ant_dip_item_judge (AntDipItem *self, AntDipClass class, const char *note);
 
+/* What is known of it; caller unrefs. */
+GPtrArray *ant_dip_item_facts (AntDipItem *self, const AntRecord *record, AntDepthUnit unit);
 /* "Dip 3", "Brightening 1", "Asked dip 2". Caller frees. */
 char *ant_dip_item_title (AntDipItem *self);
 /* The same as short as a list has it: "3", "+1", "?2". Caller frees. */

@@ -29,7 +29,7 @@ struct _AntDipTable
 G_DEFINE_FINAL_TYPE (AntDipTable, ant_dip_table, GTK_TYPE_WIDGET)
 
 static const guint kind_choices[] = { ANT_KIND_DIP | ANT_KIND_ASKED, ANT_KIND_BRIGHTENING,
-                                      ANT_KIND_DIP | ANT_KIND_ASKED | ANT_KIND_BRIGHTENING };
+                                      ANT_KIND_DIP | ANT_KIND_ASKED | ANT_KIND_BRIGHTENING, ANT_KIND_PASSAGE };
 
 /* Columns */
 
@@ -56,7 +56,9 @@ depth_text (AntDesk *desk, AntDipItem *item)
 static char *
 length_text (AntDesk *desk, AntDipItem *item)
 {
-  return ant_length_words (ant_dip_item_get_dip (item)->duration_d);
+  const AntDip *dip = ant_dip_item_get_dip (item);
+  return ant_dip_item_get_kind (item) == ANT_KIND_PASSAGE ? ant_passage_width_words (dip)
+                                                          : ant_length_words (dip->duration_d);
 }
 
 static char *
@@ -240,10 +242,12 @@ show_emptiness (AntDipTable *self)
   const AntScanResults *results = ant_desk_get_results (self->desk);
   gboolean empty = g_list_model_get_n_items (G_LIST_MODEL (self->selection)) == 0;
   gboolean filtered = *gtk_editable_get_text (GTK_EDITABLE (self->search)) != '\0';
+  gboolean passages = ant_desk_get_shown (self->desk) == ANT_KIND_PASSAGE;
   g_autofree char *text =
-      filtered || !results
-          ? g_strdup (filtered ? _("Nothing fits these words.") : "")
-          : g_strdup_printf (_("Nothing reaches SNR %.1f. The chart shows what depth would have been seen."),
+      filtered || !results ? g_strdup (filtered ? _("Nothing fits these words.") : "")
+      : passages           ? g_strdup (results->reach < ANT_SCAN_COMPLETE ? _("Passages were not traced.")
+                                                                          : _("No spot group or the like stands out."))
+                           : g_strdup_printf (_("Nothing reaches SNR %.1f. The chart shows what depth would have been seen."),
                              results->threshold_snr);
   gtk_label_set_text (self->empty, text);
   gtk_stack_set_visible_child_name (self->stack, empty ? "empty" : "list");

@@ -27,7 +27,7 @@ make_chart (AntFloorView *self)
       chart.n_floor = one ? results->chunk[self->chunk].n_floor : results->n_floor;
       chart.threshold_snr = results->threshold_snr;
     }
-  if (!self->bare)
+  if (!self->bare && ant_desk_get_shown (desk) != ANT_KIND_PASSAGE) /* days wide: no place on it */
     {
       chart.n_dips = ant_desk_get_marks (desk, &chart.dip);
       chart.selected = ant_desk_get_selected_mark (desk);

@@ -1,5 +1,5 @@
-/* noise-page.c - the page Noise. A record that was cut into pieces has a noise model for each; one is shown at a time.
- */
+/* noise-page.c - the page Noise: spectrum, floor or counts, and the fitted model. A record that was cut into pieces has a
+ * model for each; one is shown at a time. */
 #include "gui/noise-page.h"
 
 #include <glib/gi18n.h>
@@ -8,6 +8,7 @@
 #include "gui/fact-list.h"
 #include "gui/floor-view.h"
 #include "gui/spectrum-view.h"
+#include "gui/tail-view.h"
 #include "data/noise-words.h"
 
 struct _AntNoisePage
@@ -19,6 +20,7 @@ struct _AntNoisePage
   AntColumns *columns;
   AntSpectrumView *spectrum;
   AntFloorView *floor;
+  AntTailView *tail;
   AntFactList *parts, *health;
   GtkDropDown *chunk;
 
@@ -83,6 +85,7 @@ ant_noise_page_set_desk (AntNoisePage *self, AntDesk *desk)
   g_set_object (&self->desk, desk);
   ant_plot_view_set_desk (ANT_PLOT_VIEW (self->spectrum), desk);
   ant_plot_view_set_desk (ANT_PLOT_VIEW (self->floor), desk);
+  ant_plot_view_set_desk (ANT_PLOT_VIEW (self->tail), desk);
   g_signal_connect_object (desk, "changed", G_CALLBACK (desk_changed_cb), self, 0);
   desk_changed_cb (desk, ANT_DESK_EVERYTHING, self);
 }
@@ -104,12 +107,14 @@ ant_noise_page_class_init (AntNoisePageClass *klass)
   g_type_ensure (ANT_TYPE_FACT_LIST);
   g_type_ensure (ANT_TYPE_FLOOR_VIEW);
   g_type_ensure (ANT_TYPE_SPECTRUM_VIEW);
+  g_type_ensure (ANT_TYPE_TAIL_VIEW);
   gtk_widget_class_set_template_from_resource (widget_class, "/org/antumbra/Antumbra/noise-page.ui");
   gtk_widget_class_set_layout_manager_type (widget_class, GTK_TYPE_BIN_LAYOUT);
   gtk_widget_class_bind_template_child (widget_class, AntNoisePage, stack);
   gtk_widget_class_bind_template_child (widget_class, AntNoisePage, columns);
   gtk_widget_class_bind_template_child (widget_class, AntNoisePage, spectrum);
   gtk_widget_class_bind_template_child (widget_class, AntNoisePage, floor);
+  gtk_widget_class_bind_template_child (widget_class, AntNoisePage, tail);
   gtk_widget_class_bind_template_child (widget_class, AntNoisePage, parts);
   gtk_widget_class_bind_template_child (widget_class, AntNoisePage, health);
   gtk_widget_class_bind_template_child (widget_class, AntNoisePage, chunk);

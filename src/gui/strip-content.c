@@ -66,7 +66,7 @@ fill_series (AntDesk *desk, AntStripKind kind, AntStrip *strip)
   if (average >= 0)
     strip->averages = residual ? layers->residual_averages[average] : layers->value_averages[average];
   strip->curve = residual ? NULL : layers->curve_ppm;
-  strip->brackets = residual;
+  strip->brackets = residual == (ant_desk_get_shown (desk) != ANT_KIND_PASSAGE); /* passages are in the curve */
   if (in_own_unit (desk, kind))
     {
       strip->label_zero = residual ? 0 : layers->record->median;

@@ -7,7 +7,7 @@
 /* From top to bottom. */
 typedef enum
 {
-  ANT_STRIP_IRRADIANCE, /* with its rotation curve */
+  ANT_STRIP_IRRADIANCE, /* with its rotation curve; passages bracketed, when they are shown */
   ANT_STRIP_RESIDUAL,   /* what that leaves, dips bracketed */
   ANT_STRIP_SNR,        /* dip SNR of one duration, with the threshold; on demand */
   ANT_N_STRIPS,

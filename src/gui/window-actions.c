@@ -266,8 +266,8 @@ static void
 copy_dip (AntWindow *self, GVariant *parameter)
 {
   AntDipItem *item = ant_desk_get_selected (self->desk);
-  g_autoptr (GPtrArray) facts = ant_dip_facts (ant_desk_get_record (self->desk), ant_dip_item_get_dip (item),
-                                               ant_dip_item_get_upper_limit_ppm (item), ant_desk_get_unit (self->desk));
+  g_autoptr (GPtrArray) facts
+      = ant_dip_item_facts (item, ant_desk_get_record (self->desk), ant_desk_get_unit (self->desk));
   ant_facts_add (facts, _("Verdict"), ant_dip_class_title (ant_dip_item_get_class (item)));
   if (*ant_dip_item_get_note (item))
     ant_facts_add (facts, _("Note"), ant_dip_item_get_note (item));

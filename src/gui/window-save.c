@@ -103,11 +103,15 @@ make_flags (gconstpointer data, GError **error)
 void
 ant_window_save_list (AntWindow *self)
 {
-  gboolean brightenings = ant_desk_get_shown (self->desk) == ANT_KIND_BRIGHTENING;
+  guint shown = ant_desk_get_shown (self->desk);
   Order *order = order_new (self, make_table);
-  order->which = brightenings ? ANT_RESULT_BRIGHTENINGS : ANT_RESULT_DIPS;
-  ant_file_prompt_save (GTK_WINDOW (self), _("Save the List as CSV, FITS or VOTable"), brightenings ? "brightenings.csv" : "dips.csv",
-                        table_chosen_cb, order);
+  const char *name = "dips.csv";
+  order->which = ANT_RESULT_DIPS;
+  if (shown == ANT_KIND_BRIGHTENING)
+    order->which = ANT_RESULT_BRIGHTENINGS, name = "brightenings.csv";
+  else if (shown == ANT_KIND_PASSAGE)
+    order->which = ANT_RESULT_PASSAGES, name = "passages.csv";
+  ant_file_prompt_save (GTK_WINDOW (self), _("Save the List as CSV, FITS or VOTable"), name, table_chosen_cb, order);
 }
 
 void

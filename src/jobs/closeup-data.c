@@ -11,6 +11,7 @@
 #define MOST_POINTS 160
 #define SHAPE_POINTS 241
 #define HALF_WIDTH 1.4 /* of a close-up, in durations */
+#define PASSAGE_HALF_WIDTH 2.0 /* its duration is that at half depth */
 
 static void
 draw_shape (AntCloseupData *data, const AntSettings *settings, const AntDip *dip, double exposure_d)
@@ -49,14 +50,21 @@ level (AntCloseupData *data, const AntSettings *settings, const AntDip *dip, dou
     ppm[i] -= median;
 }
 
+static AntCloseupData *
+data_new (void)
+{
+  AntCloseupData *data = g_new0 (AntCloseupData, 1);
+  data->points = g_new (double, 3 * MOST_POINTS);
+  data->curve = g_new (double, 2 * SHAPE_POINTS);
+  return data;
+}
+
 AntCloseupData *
 ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, const AntDip *dip)
 {
   const AntSeries *series = &layers->record->series;
   double exposure_d = layers->record->exposure_d > 0 ? layers->record->exposure_d : series->step_d;
-  AntCloseupData *data = g_new0 (AntCloseupData, 1);
-  data->points = g_new (double, 3 * MOST_POINTS);
-  data->curve = g_new (double, 2 * SHAPE_POINTS);
+  AntCloseupData *data = data_new ();
   double *hours = data->points, *ppm = hours + MOST_POINTS, *error = ppm + MOST_POINTS;
   gsize n = ant_dip_closeup_points (series->n, layers->residual_ppm, series->start_d, series->step_d, dip->mid_d,
                                     HALF_WIDTH * dip->duration_d, NAN, MOST_POINTS, hours, ppm, error);
@@ -65,6 +73,42 @@ ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, cons
                                     .shape = data->shape, .contact_h = { -half_h, half_h } };
   draw_shape (data, settings, dip, exposure_d);
   level (data, settings, dip, exposure_d);
+  return data;
+}
+
+/* The slow part at even steps through the close-up, as far as the record goes. */
+static gsize
+draw_slow (AntCloseupData *data, const AntScanResults *results, const AntDip *passage)
+{
+  const AntSeries *series = &results->record->series;
+  double *hours = data->curve, *ppm = data->curve + SHAPE_POINTS;
+  gsize n = 0;
+  for (int i = 0; i < SHAPE_POINTS; i++)
+    {
+      double time_d = PASSAGE_HALF_WIDTH * passage->duration_d * (2.0 * i / (SHAPE_POINTS - 1) - 1);
+      double place = round (ant_series_place (series, passage->mid_d + time_d));
+      if (!(place >= 0 && place < (double) series->n))
+        continue;
+      hours[n] = time_d * ANT_HOURS_PER_DAY;
+      ppm[n++] = (double) results->slow_ppm[(gsize) place];
+    }
+  return n;
+}
+
+AntCloseupData *
+ant_closeup_data_new_passage (const AntScanResults *results, const AntDip *passage)
+{
+  const AntSeries *series = &results->record->series;
+  AntCloseupData *data = data_new ();
+  double *hours = data->points, *ppm = hours + MOST_POINTS, *error = ppm + MOST_POINTS;
+  gsize n = ant_dip_closeup_points (series->n, series->value_ppm, series->start_d, series->step_d, passage->mid_d,
+                                    PASSAGE_HALF_WIDTH * passage->duration_d, NAN, MOST_POINTS, hours, ppm, error);
+  double half_h = passage->duration_d / 2 * ANT_HOURS_PER_DAY;
+  data->closeup = (AntDipCloseup) { .title = _("Irradiance, ppm"), .n = n, .hours = hours, .ppm = ppm,
+                                    .error_ppm = error, .n_shapes = 1, .shape = data->shape,
+                                    .contact_h = { -half_h, half_h } };
+  data->shape[0] = (AntShapeLine) { _("slow part"), draw_slow (data, results, passage), data->curve,
+                                    data->curve + SHAPE_POINTS };
   return data;
 }
 

@@ -241,8 +241,8 @@ ant_dip_closeup_paint (cairo_t *cr, const AntBox *box, const AntDipCloseup *clos
   draw_residual (&pen, &lower, view, closeup, &x);
   ant_axes_bottom (&pen, &area, view, &x, TRUE);
   ant_axes_left (&pen, &upper, view, &y);
-  ant_axes_titles (&pen, &area, _("Residual, ppm"), _("Hours from the middle"));
-  draw_key (&pen, &upper, closeup,
-            1.5 * theme->font_px + ant_pen_measure (&pen, _("Residual, ppm"), ANT_TEXT_LABEL).width);
+  const char *title = closeup->title ? closeup->title : _("Residual, ppm");
+  ant_axes_titles (&pen, &area, title, _("Hours from the middle"));
+  draw_key (&pen, &upper, closeup, 1.5 * theme->font_px + ant_pen_measure (&pen, title, ANT_TEXT_LABEL).width);
   ant_pen_end (&pen);
 }

@@ -21,6 +21,7 @@ typedef struct
   size_t n_shapes;
   const AntShapeLine *shape; /* the first is the fitted one, drawn strongest; the residual is taken from it */
   double contact_h[2];     /* contacts I and IV, hours; NaN: not marked */
+  const char *title;       /* of the values; NULL: "Residual, ppm" */
 } AntDipCloseup;
 
 /* x: hours from the middle, y: ppm; linear. Holds points and shapes. */

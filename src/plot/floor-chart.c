@@ -231,7 +231,7 @@ block_dips (Canvas *canvas)
 {
   for (size_t d = 0; d < canvas->chart->n_dips; d++)
     {
-      double x, y, r = DIP_PX + 1;
+      double x, y, r = DIP_PX + (d == canvas->chart->selected ? 7 : 2); /* with its ring */
       place_of_dip (&canvas->area, canvas->view, &canvas->chart->dip[d], &x, &y);
       AntBox box = { x - r, y - r, 2 * r, 2 * r };
       ant_labels_block (&canvas->field, &box);

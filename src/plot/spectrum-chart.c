@@ -138,16 +138,18 @@ curve_set (Curve *curve, const AntBox *area, const AntView *view, const AntSpect
     }
 }
 
-/* "hours, 8.2 h": what the part is and its time. */
+/* "hours, 8.2 h": what the part is and, if there is room, its time. */
 static void
-title_of (const AntNoisePart *part, size_t size, char *text)
+title_of (const AntNoisePart *part, gboolean with_time, size_t size, char *text)
 {
   char number[48];
   const char *name = ant_part_title (part);
   double hours = part->time_d * ANT_HOURS_PER_DAY;
   double value = hours >= 36 ? part->time_d : hours >= 1.5 ? hours : 60 * hours;
   ant_plot_number_text (value, value < 9.95 ? 1 : 0, sizeof number, number);
-  if (hours >= 36)
+  if (!with_time)
+    g_strlcpy (text, name, size);
+  else if (hours >= 36)
     g_snprintf (text, size, _("%s, %s d"), name, number);
   else if (hours >= 1.5)
     g_snprintf (text, size, _("%s, %s h"), name, number);
@@ -207,47 +209,60 @@ draw_model (AntPen *pen, const AntBox *area, const AntSpectrumChart *chart, cons
   curve_clear (&curve);
 }
 
+typedef char Name[96];
+
+/* Names of the fit, its parts and the white noise; returns the width of the widest. */
+static double
+name_rows (AntPen *pen, const AntSpectrumChart *chart, gboolean with_times, size_t rows, Name *name)
+{
+  size_t n = chart->model->n_parts;
+  double widest = 0;
+  g_strlcpy (name[0], _("fit"), sizeof (Name));
+  g_strlcpy (name[n + 1], _("white"), sizeof (Name));
+  for (size_t p = 0; p < n; p++)
+    title_of (&chart->model->part[p], with_times, sizeof (Name), name[p + 1]);
+  for (size_t r = 0; r < rows; r++)
+    widest = MAX (widest, ant_pen_measure (pen, name[r], ANT_TEXT_SMALL).width);
+  return widest;
+}
+
+static void
+draw_row (AntPen *pen, size_t r, size_t n_parts, const char *name, double x, double y)
+{
+  double font = pen->theme->font_px;
+  double line_x[] = { x - 2.6 * font, x - 0.4 * font }, line_y[] = { y, y };
+  cairo_save (pen->cr);
+  if (r == 0)
+    ant_pen_colour (pen, ANT_ROLE_CURVE);
+  else
+    set_component (pen, r - 1, n_parts);
+  ant_pen_polyline (pen, 2, line_x, line_y, r == 0 ? pen->theme->trace_px + 0.3 : 1.3);
+  cairo_restore (pen->cr);
+  ant_pen_colour (pen, ANT_ROLE_QUIET);
+  ant_pen_text (pen, name, ANT_TEXT_SMALL, x, y, 0, 0.5);
+}
+
 /* Spectra of the Sun fall: the upper right corner is free for the names, the fit first. Rows that find no room below
- * the middle of the area are left out. */
+ * the middle of the area are left out; in a small chart the times, then all, to keep its room for the curves. */
 static void
 draw_key (AntPen *pen, const AntBox *area, const AntSpectrumChart *chart)
 {
-  double font = pen->theme->font_px, row = round (1.35 * font), sample = 2.2 * font, widest = 0;
+  double font = pen->theme->font_px, row = round (1.35 * font), most = 0.45 * area->width, beside = 3.8 * font;
   size_t n = chart->model->n_parts, rows = MIN (n + 2, (size_t) (0.62 * area->height / row));
-  char (*name)[96] = g_malloc (96 * (n + 2));
-  g_strlcpy (name[0], _("fit"), 96);
-  g_strlcpy (name[n + 1], _("white"), 96);
-  for (size_t p = 0; p < n; p++)
-    title_of (&chart->model->part[p], 96, name[p + 1]);
-  for (size_t r = 0; r < rows; r++)
-    widest = MAX (widest, ant_pen_measure (pen, name[r], ANT_TEXT_SMALL).width);
+  g_autofree Name *name = g_new (Name, n + 2);
+  double widest = name_rows (pen, chart, TRUE, rows, name);
+  if (widest + beside > most)
+    widest = name_rows (pen, chart, FALSE, rows, name);
+  if (widest + beside > most)
+    return;
   double x = area->x + area->width - widest - 0.6 * font, top = area->y + 2.2 * font;
-  double back_width = area->x + area->width - x + sample + font;
-  if (back_width > 0.45 * area->width) /* a small chart keeps its room for the curves */
-    {
-      g_free (name);
-      return;
-    }
   AntColour ground = pen->theme->role[ANT_ROLE_PAPER];
   ground.alpha = 0.8;
   ant_pen_set (pen, ground);
-  AntBox back = { x - sample - font, top, back_width, (double) rows * row };
+  AntBox back = { x - 3.2 * font, top, widest + beside, (double) rows * row };
   ant_pen_fill_box (pen, &back);
   for (size_t r = 0; r < rows; r++)
-    {
-      double y = top + ((double) r + 0.5) * row, line_x[] = { x - sample - 0.4 * font, x - 0.4 * font },
-             line_y[] = { y, y };
-      cairo_save (pen->cr);
-      if (r == 0)
-        ant_pen_colour (pen, ANT_ROLE_CURVE);
-      else
-        set_component (pen, r - 1, n);
-      ant_pen_polyline (pen, 2, line_x, line_y, r == 0 ? pen->theme->trace_px + 0.3 : 1.3);
-      cairo_restore (pen->cr);
-      ant_pen_colour (pen, ANT_ROLE_QUIET);
-      ant_pen_text (pen, name[r], ANT_TEXT_SMALL, x, y, 0, 0.5);
-    }
-  g_free (name);
+    draw_row (pen, r, n, name[r], x, top + ((double) r + 0.5) * row);
 }
 
 void

@@ -145,7 +145,7 @@ draw_key (Canvas *canvas)
       named[k] = styles[k];
       named[k].name = _(styles[k].name);
     }
-  double keep = ant_pen_measure (&canvas->pen, _("Count at or above"), ANT_TEXT_LABEL).width;
+  double keep = ant_pen_measure (&canvas->pen, _("At or above"), ANT_TEXT_LABEL).width;
   ant_key_paint (&canvas->pen, &canvas->area, G_N_ELEMENTS (named), named, keep + canvas->pen.theme->font_px);
 }
 
@@ -173,7 +173,7 @@ ant_tail_chart_paint (cairo_t *cr, const AntBox *box, const AntTailChart *chart,
   cairo_restore (cr);
   ant_axes_bottom (pen, area, view, &x, TRUE);
   ant_axes_left (pen, area, view, &y);
-  ant_axes_titles (pen, area, _("Count at or above"), _("Dip SNR"));
+  ant_axes_titles (pen, area, _("At or above"), _("Dip SNR"));
   draw_key (canvas);
   ant_pen_end (pen);
 }

@@ -48,6 +48,8 @@ ant_scan_surrogates (const AntScan *scan, size_t *n_events)
   return scan->n_finished > ANT_STAGE_CHANCE ? scan->options.surrogates : 0;
 }
 
+AntChanceLaw ant_scan_chance_law (const AntScan *scan) { return scan->chance; }
+
 AntChanceField ant_scan_chance_field (const AntScan *scan) { return scan->chance.field; }
 
 size_t

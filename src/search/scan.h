@@ -62,7 +62,8 @@ size_t ant_scan_brightenings (const AntScan *scan, const AntDip **dip);
 double ant_scan_threshold (const AntScan *scan);
 /* Dips of one sign expected from noise alone in this record with a final SNR of at least `snr`. */
 double ant_scan_expected_false (const AntScan *scan, double snr);
-/* What the chance law is computed from. */
+/* The law that this comes from, and what it is computed from. */
+AntChanceLaw ant_scan_chance_law (const AntScan *scan);
 AntChanceField ant_scan_chance_field (const AntScan *scan);
 /* Surrogates that the chance law was refitted to (0: none), and the events of both signs in them (SNR 4 and more). */
 size_t ant_scan_surrogates (const AntScan *scan, size_t *n_events);

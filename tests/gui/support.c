@@ -51,8 +51,9 @@ make_record (void)
       for (int k = 0; k < 6; k++)
         noise += (double) (state = state * 1664525u + 1013904223u) / 4294967296.0 - 0.5;
       double depth = 900 * ant_crossing_shape_mean (&shape, time_d - TEST_DIP_D, 1 / 144.0);
+      double spot = 400 * exp (-pow ((time_d - TEST_SPOT_D) / 1.5, 2));
       g_string_append_printf (text, "%.8f,%.6f\n", 2466583.5 + time_d,
-                              1361 * (1 + (20 * noise - depth + 60 * sin (time_d / 3)) * 1e-6));
+                              1361 * (1 + (20 * noise - depth - spot + 60 * sin (time_d / 3)) * 1e-6));
     }
   return write_text ("record.csv", text->str);
 }

@@ -6,11 +6,12 @@
 /* GTK, GSL and FFTW made ready, then the tests. */
 int test_gui_run (int *argc, char ***argv, void (*add) (void));
 
-/* A record of 16 days at 10 min with a crossing-like dip of 900 ppm, 6 h, at day 8; and one of seven rows that is none.
+/* A record of 16 days at 10 min with a crossing-like dip of 900 ppm, 6 h, at day 8, and a spot group's passage at day 3; and one of seven rows that is none.
  * Paths live as long as the program. */
 const char *test_gui_record (void);
 const char *test_gui_bad_record (void);
 #define TEST_DIP_D 8.0
+#define TEST_SPOT_D 3.0
 
 /* Run the main loop until the condition holds; fails the test after `seconds`. */
 void test_gui_wait (gboolean (*holds) (gpointer data), gpointer data, double seconds);

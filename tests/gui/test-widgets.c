@@ -14,6 +14,7 @@
 #include "gui/settings-row.h"
 #include "gui/spectrum-view.h"
 #include "gui/strip-view.h"
+#include "gui/tail-view.h"
 #include "gui/time-stack.h"
 #include "support.h"
 
@@ -23,7 +24,7 @@ every_widget_can_be_made_and_dropped_without_a_desk (void)
   const GType types[] = { ANT_TYPE_CLOSEUP_VIEW, ANT_TYPE_COLUMNS, ANT_TYPE_DIP_INSPECTOR, ANT_TYPE_DIP_TABLE,
                           ANT_TYPE_FLOOR_VIEW, ANT_TYPE_NOISE_PAGE, ANT_TYPE_RECORD_PAGE, ANT_TYPE_RIBBON_VIEW,
                           ANT_TYPE_SETTINGS_PANEL, ANT_TYPE_SETTINGS_ROW, ANT_TYPE_SPECTRUM_VIEW, ANT_TYPE_STRIP_VIEW,
-                          ANT_TYPE_TIME_STACK };
+                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_TIME_STACK };
   for (gsize i = 0; i < G_N_ELEMENTS (types); i++)
     {
       GtkWidget *widget = g_object_ref_sink (g_object_new (types[i], NULL));
@@ -36,7 +37,7 @@ static void
 every_plot_has_a_name_and_says_what_it_shows (void)
 {
   const GType types[] = { ANT_TYPE_STRIP_VIEW, ANT_TYPE_RIBBON_VIEW, ANT_TYPE_FLOOR_VIEW, ANT_TYPE_SPECTRUM_VIEW,
-                          ANT_TYPE_CLOSEUP_VIEW };
+                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_CLOSEUP_VIEW };
   AntWindow *window = test_gui_window_scanned ();
   ant_desk_select_mark (ant_window_get_desk (window), 0);
   for (gsize i = 0; i < G_N_ELEMENTS (types); i++)
@@ -54,7 +55,7 @@ static void
 every_plot_is_saved_in_every_format (void)
 {
   const GType types[] = { ANT_TYPE_STRIP_VIEW, ANT_TYPE_RIBBON_VIEW, ANT_TYPE_FLOOR_VIEW, ANT_TYPE_SPECTRUM_VIEW,
-                          ANT_TYPE_CLOSEUP_VIEW };
+                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_CLOSEUP_VIEW };
   const char *const endings[] = { "png", "svg", "pdf" };
   const char *const starts[] = { "\211PNG", "<?xml", "%PDF" };
   g_autofree char *folder = g_dir_make_tmp (NULL, NULL);

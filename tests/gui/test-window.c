@@ -172,6 +172,32 @@ stopping_keeps_what_was_found_so_far_and_says_so (void)
   test_gui_close (window);
 }
 
+static void
+passages_are_listed_and_bracketed_instead_of_dips (void)
+{
+  AntWindow *window = test_gui_window_scanned ();
+  AntDesk *desk = ant_window_get_desk (window);
+  const AntScanResults *results = ant_desk_get_results (desk);
+  const AntDipMark *mark;
+  g_assert_cmpuint (results->n_passages, >, 0);
+  ant_desk_set_shown (desk, ANT_KIND_PASSAGE);
+  g_assert_cmpuint (ant_desk_get_marks (desk, &mark), ==, results->n_passages);
+  g_assert_cmpfloat (mark[0].duration_d, ==, results->passage[0].end_d - results->passage[0].start_d);
+  ant_desk_select_next (desk, 1);
+  AntDipItem *item = ant_desk_get_selected (desk);
+  g_assert_cmpint (ant_dip_item_get_kind (item), ==, ANT_KIND_PASSAGE);
+  AntStrip strip;
+  char text[128];
+  ant_strip_fill (desk, ANT_STRIP_IRRADIANCE, &strip, sizeof text, text);
+  g_assert_true (strip.brackets);
+  ant_strip_fill (desk, ANT_STRIP_RESIDUAL, &strip, sizeof text, text);
+  g_assert_false (strip.brackets);
+  g_autoptr (GPtrArray) facts = ant_dip_item_facts (item, ant_desk_get_record (desk), ANT_DEPTH_PPM);
+  g_assert_cmpuint (facts->len, >, 0);
+  test_gui_settle (200); /* drawn, close-up and all */
+  test_gui_close (window);
+}
+
 static gboolean
 follows_snr (gpointer desk)
 {
@@ -403,6 +429,8 @@ add (void)
   g_test_add_func ("/gui/window/stopping-keeps-what-was-found-before", stopping_keeps_what_was_found_before);
   g_test_add_func ("/gui/window/stopping-keeps-what-was-found-so-far-and-says-so",
                    stopping_keeps_what_was_found_so_far_and_says_so);
+  g_test_add_func ("/gui/window/passages-are-listed-and-bracketed-instead-of-dips",
+                   passages_are_listed_and_bracketed_instead_of_dips);
   g_test_add_func ("/gui/window/the-dip-snr-is-followed-on-demand", the_dip_snr_is_followed_on_demand);
   g_test_add_func ("/gui/window/the-dip-snr-may-be-overtaken-at-any-moment", the_dip_snr_may_be_overtaken_at_any_moment);
   g_test_add_func ("/gui/window/it-may-be-closed-while-it-scans", a_window_may_be_closed_while_it_scans);
