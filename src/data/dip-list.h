@@ -19,5 +19,6 @@ typedef struct
   gsize n_surrogates, n_surrogate_events; /* that the chance law was refitted to, and their events; 0: the built-in law */
   gboolean mirror_known;         /* the mirrored search was run: */
   gsize n_found, n_mirrored;     /*   dips at or above the threshold, and brightenings, of the durations it checks */
-  const double *upper_limit_ppm; /* [n] 95 % upper limits of asked dips, or NULL if found by a search */
+  const double *upper_limit_ppm; /* [n] 95 % upper limits of asked dips, NaN beside dips that a search found; NULL: all were */
+  const char *const *analyst_class, *const *analyst_note; /* [n] what the analyst said of each; NULL: nothing of any */
 } AntDipList;

@@ -27,6 +27,13 @@ static const AntJsonField result_fields[] = {
   ANT_JSON_REAL_OF (AntScanResults, observed_d),      ANT_JSON_COUNT_OF (AntScanResults, n_refits),
   ANT_JSON_COUNT_OF (AntScanResults, n_mirror_dips),  ANT_JSON_COUNT_OF (AntScanResults, n_mirrored),
 };
+/* Named as the law's own members; files written before them have none. */
+static const AntJsonField chance_fields[] = {
+  { "crossings", ANT_JSON_REAL, G_STRUCT_OFFSET (AntChanceLaw, field.crossings), NULL, TRUE },
+  { "observed_d", ANT_JSON_REAL, G_STRUCT_OFFSET (AntChanceLaw, field.observed_d), NULL, TRUE },
+  { "yield", ANT_JSON_REAL, G_STRUCT_OFFSET (AntChanceLaw, yield), NULL, TRUE },
+  { "softness", ANT_JSON_REAL, G_STRUCT_OFFSET (AntChanceLaw, softness), NULL, TRUE },
+};
 static const AntJsonField dip_fields[] = {
   ANT_JSON_REAL_OF (AntDip, mid_d),           ANT_JSON_REAL_OF (AntDip, duration_d),
   ANT_JSON_REAL_OF (AntDip, edge_d),          ANT_JSON_REAL_OF (AntDip, depth_ppm),
@@ -387,6 +394,25 @@ get_said (JsonObject *object, AntScanResults *results, GError **error)
   return array != NULL;
 }
 
+static void
+put_chance (JsonObject *object, const AntScanResults *results)
+{
+  JsonObject *chance = json_object_new ();
+  ant_json_put_fields (chance, TABLE (chance_fields), &results->chance);
+  json_object_set_object_member (object, "chance", chance);
+}
+
+static gboolean
+get_chance (JsonObject *object, AntScanResults *results, GError **error)
+{
+  if (!json_object_has_member (object, "chance"))
+    return TRUE;
+  JsonObject *chance = ant_json_get_object (object, "chance", error);
+  return chance
+         && (ant_json_get_fields (chance, TABLE (chance_fields), &results->chance, error)
+             || ant_json_within (error, "chance", -1));
+}
+
 /* The parts, in the order in which they are read: dips and passages name their chunks. */
 static const struct
 {
@@ -396,7 +422,7 @@ static const struct
   { put_chunks, get_chunks },     { put_dips, get_dips },   { put_brightenings, get_brightenings },
   { put_verdicts, get_verdicts },
   { put_passages, get_passages }, { put_floor, get_median_floor }, { put_spikes, get_spikes },
-  { put_said, get_said },
+  { put_said, get_said },         { put_chance, get_chance },
 };
 
 JsonObject *

@@ -5,8 +5,17 @@
 #include "gui/window-private.h"
 #include "jobs/report.h"
 #include "jobs/save-task.h"
+#include "writers/dip-table.h"
 #include "writers/flags-table.h"
 #include "writers/result-files.h"
+
+/* The rows of the list, copied. */
+typedef struct
+{
+  GArray *dip, *upper_limit_ppm;  /* of AntDip, double */
+  GPtrArray *class_name, *note;   /* char*; the notes are owned */
+  gboolean asked, judged;         /* there is an asked dip; the analyst has said something */
+} Rows;
 
 /* What is to be saved, as it stood when the user asked; later changes of the window do not touch it. */
 typedef struct
@@ -19,7 +28,39 @@ typedef struct
   AntTableFormat format;
   AntPaper paper;
   AntReportWord *word;     /* of a report, else NULL */
+  Rows rows;               /* of a list of dips */
 } Order;
+
+static void
+rows_clear (Rows *rows)
+{
+  g_clear_pointer (&rows->dip, g_array_unref);
+  g_clear_pointer (&rows->upper_limit_ppm, g_array_unref);
+  g_clear_pointer (&rows->class_name, g_ptr_array_unref);
+  g_clear_pointer (&rows->note, g_ptr_array_unref);
+}
+
+/* Those of the kinds that the list shows, in its own order. */
+static void
+rows_take (Rows *rows, AntDesk *desk)
+{
+  GListModel *items = ant_desk_get_items (desk);
+  *rows = (Rows) { g_array_new (FALSE, FALSE, sizeof (AntDip)), g_array_new (FALSE, FALSE, sizeof (double)),
+                   g_ptr_array_new (), g_ptr_array_new_with_free_func (g_free), FALSE, FALSE };
+  for (guint i = 0; i < g_list_model_get_n_items (items); i++)
+    {
+      g_autoptr (AntDipItem) item = g_list_model_get_item (items, i);
+      double upper_limit_ppm = ant_dip_item_get_upper_limit_ppm (item);
+      if (!(ant_dip_item_get_kind (item) & ant_desk_get_shown (desk)))
+        continue;
+      g_array_append_vals (rows->dip, ant_dip_item_get_dip (item), 1);
+      g_array_append_val (rows->upper_limit_ppm, upper_limit_ppm);
+      g_ptr_array_add (rows->class_name, (gpointer) (gsize) ant_dip_class_name (ant_dip_item_get_class (item)));
+      g_ptr_array_add (rows->note, g_strdup (ant_dip_item_get_note (item)));
+      rows->asked |= ant_dip_item_get_kind (item) == ANT_KIND_ASKED;
+      rows->judged |= ant_dip_item_get_class (item) != ANT_CLASS_UNDECIDED || *ant_dip_item_get_note (item);
+    }
+}
 
 static void
 order_free (gpointer data)
@@ -31,6 +72,7 @@ order_free (gpointer data)
   ant_record_unref (order->record);
   ant_scan_results_unref (order->results);
   g_clear_object (&order->window);
+  rows_clear (&order->rows);
   g_free (order);
 }
 
@@ -89,6 +131,26 @@ make_table (gconstpointer data, GError **error)
   return ant_table_bytes (table, order->format, error);
 }
 
+/* As the command writes it, but for what the analyst has added: asked dips, classes and notes. */
+static GBytes *
+make_list (gconstpointer data, GError **error)
+{
+  const Order *order = data;
+  const Rows *rows = &order->rows;
+  AntDipList list = ant_scan_results_list (order->results, order->which == ANT_RESULT_BRIGHTENINGS);
+  list.n = rows->dip->len;
+  list.dip = (const AntDip *) (gpointer) rows->dip->data;
+  if (rows->asked)
+    list.upper_limit_ppm = (const double *) (gpointer) rows->upper_limit_ppm->data;
+  if (rows->judged)
+    {
+      list.analyst_class = (const char *const *) rows->class_name->pdata;
+      list.analyst_note = (const char *const *) rows->note->pdata;
+    }
+  g_autoptr (AntTable) table = ant_dip_table_new (order->record, &list);
+  return ant_table_bytes (table, order->format, error);
+}
+
 static GBytes *
 make_flags (gconstpointer data, GError **error)
 {
@@ -104,13 +166,14 @@ void
 ant_window_save_list (AntWindow *self)
 {
   guint shown = ant_desk_get_shown (self->desk);
-  Order *order = order_new (self, make_table);
+  Order *order = order_new (self, shown == ANT_KIND_PASSAGE ? make_table : make_list);
   const char *name = "dips.csv";
   order->which = ANT_RESULT_DIPS;
   if (shown == ANT_KIND_BRIGHTENING)
     order->which = ANT_RESULT_BRIGHTENINGS, name = "brightenings.csv";
   else if (shown == ANT_KIND_PASSAGE)
     order->which = ANT_RESULT_PASSAGES, name = "passages.csv";
+  rows_take (&order->rows, self->desk);
   ant_file_prompt_save (GTK_WINDOW (self), _("Save the List as CSV, FITS or VOTable"), name, table_chosen_cb, order);
 }
 

@@ -83,7 +83,7 @@ draw_slow (AntCloseupData *data, const AntScanResults *results, const AntDip *pa
   const AntSeries *series = &results->record->series;
   double *hours = data->curve, *ppm = data->curve + SHAPE_POINTS;
   gsize n = 0;
-  for (int i = 0; i < SHAPE_POINTS; i++)
+  for (int i = 0; results->slow_ppm && i < SHAPE_POINTS; i++)
     {
       double time_d = PASSAGE_HALF_WIDTH * passage->duration_d * (2.0 * i / (SHAPE_POINTS - 1) - 1);
       double place = round (ant_series_place (series, passage->mid_d + time_d));
@@ -105,8 +105,8 @@ ant_closeup_data_new_passage (const AntScanResults *results, const AntDip *passa
                                     PASSAGE_HALF_WIDTH * passage->duration_d, NAN, MOST_POINTS, hours, ppm, error);
   double half_h = passage->duration_d / 2 * ANT_HOURS_PER_DAY;
   data->closeup = (AntDipCloseup) { .title = _("Irradiance, ppm"), .n = n, .hours = hours, .ppm = ppm,
-                                    .error_ppm = error, .n_shapes = 1, .shape = data->shape,
-                                    .contact_h = { -half_h, half_h } };
+                                    .error_ppm = error, .n_shapes = results->slow_ppm != NULL,
+                                    .shape = data->shape, .contact_h = { -half_h, half_h } };
   data->shape[0] = (AntShapeLine) { _("slow part"), draw_slow (data, results, passage), data->curve,
                                     data->curve + SHAPE_POINTS };
   return data;

@@ -15,6 +15,7 @@ typedef struct
 
 /* A millisecond of work. Never NULL; no points where nothing was observed. */
 AntCloseupData *ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, const AntDip *dip);
-/* Likewise of a passage (ant_passage_as_dip): the record's values, and the slow part drawn over them. */
+/* Likewise of a passage (ant_passage_as_dip): the record's values, and the slow part drawn over them, if the results
+ * have it. */
 AntCloseupData *ant_closeup_data_new_passage (const AntScanResults *results, const AntDip *passage);
 void ant_closeup_data_free (AntCloseupData *data); /* NULL is fine */

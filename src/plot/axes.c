@@ -99,3 +99,23 @@ ant_axes_area (const AntBox *box, const AntTheme *theme, int title_below)
   return (AntBox) { box->x + left, box->y + top, MAX (1, box->width - left - right),
                    MAX (1, box->height - top - bottom) };
 }
+
+void
+ant_frame_begin (AntFrame *frame, AntPen *pen, const AntBox *box, const AntView *view, int grid_across)
+{
+  double font = pen->theme->font_px;
+  frame->area = ant_axes_area (box, pen->theme, TRUE);
+  AntRuler across = ant_axes_ruler_x (pen, &frame->area, font, font), up = ant_axes_ruler_y (pen, &frame->area);
+  ant_ticks_log (view->from, view->to, &across, &frame->x);
+  ant_ticks_log (view->low, view->high, &up, &frame->y);
+  ant_pen_colour (pen, ANT_ROLE_PAPER);
+  ant_pen_fill_box (pen, box);
+  ant_axes_grid (pen, &frame->area, view, &frame->x, grid_across ? &frame->y : NULL);
+}
+
+void
+ant_frame_axes (const AntFrame *frame, AntPen *pen, const AntView *view)
+{
+  ant_axes_bottom (pen, &frame->area, view, &frame->x, TRUE);
+  ant_axes_left (pen, &frame->area, view, &frame->y);
+}

@@ -19,3 +19,14 @@ void ant_axes_titles (AntPen *pen, const AntBox *area, const char *above, const 
 /* The area that axes leave of a box: titles above, labels left and below, and `title_below` nonzero a title there too.
  */
 AntBox ant_axes_area (const AntBox *box, const AntTheme *theme, int title_below);
+
+/* The frame of a chart with two logarithmic axes: what lies under the data, and what stands around them. */
+typedef struct
+{
+  AntBox area;
+  AntTicks x, y;
+} AntFrame;
+
+/* Paper and grid; with `grid_across` zero only the vertical lines. The pen has begun. */
+void ant_frame_begin (AntFrame *frame, AntPen *pen, const AntBox *box, const AntView *view, int grid_across);
+void ant_frame_axes (const AntFrame *frame, AntPen *pen, const AntView *view);

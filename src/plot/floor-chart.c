@@ -284,26 +284,20 @@ ant_floor_chart_paint (cairo_t *cr, const AntBox *box, const AntFloorChart *char
                        const AntTheme *theme, double scale)
 {
   g_autofree Canvas *canvas = g_new0 (Canvas, 1);
-  AntTicks x, y;
+  AntFrame frame;
   AntPen *pen = &canvas->pen;
   ant_pen_begin (pen, cr, theme, scale);
-  canvas->area = ant_axes_area (box, theme, TRUE);
+  ant_frame_begin (&frame, pen, box, view, FALSE);
+  canvas->area = frame.area;
   canvas->chart = chart;
   canvas->view = view;
   AntBox *area = &canvas->area;
   ant_labels_begin (&canvas->field, area);
-  AntRuler across = ant_axes_ruler_x (pen, area, theme->font_px, theme->font_px), up = ant_axes_ruler_y (pen, area);
-  ant_ticks_log (view->from, view->to, &across, &x);
-  ant_ticks_log (view->low, view->high, &up, &y);
-  ant_pen_colour (pen, ANT_ROLE_PAPER);
-  ant_pen_fill_box (pen, box);
-  ant_axes_grid (pen, area, view, &x, NULL);
   block_dips (canvas);
   ant_pen_clip (pen, area);
   draw_levels (canvas);
   cairo_restore (cr);
-  ant_axes_bottom (pen, area, view, &x, TRUE);
-  ant_axes_left (pen, area, view, &y);
+  ant_frame_axes (&frame, pen, view);
   draw_dips (canvas);
   ant_axes_titles (pen, area, _("Depth, ppm"), _("Duration, hours"));
   ant_pen_end (pen);

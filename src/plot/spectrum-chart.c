@@ -270,15 +270,10 @@ ant_spectrum_chart_paint (cairo_t *cr, const AntBox *box, const AntSpectrumChart
                           const AntTheme *theme, double scale)
 {
   AntPen pen;
-  AntTicks x, y;
+  AntFrame frame;
   ant_pen_begin (&pen, cr, theme, scale);
-  AntBox area = ant_axes_area (box, theme, TRUE);
-  AntRuler across = ant_axes_ruler_x (&pen, &area, theme->font_px, theme->font_px), up = ant_axes_ruler_y (&pen, &area);
-  ant_ticks_log (view->from, view->to, &across, &x);
-  ant_ticks_log (view->low, view->high, &up, &y);
-  ant_pen_colour (&pen, ANT_ROLE_PAPER);
-  ant_pen_fill_box (&pen, box);
-  ant_axes_grid (&pen, &area, view, &x, &y);
+  ant_frame_begin (&frame, &pen, box, view, TRUE);
+  AntBox area = frame.area;
   ant_pen_clip (&pen, &area);
   draw_measured (&pen, &area, chart, view);
   cairo_restore (cr);
@@ -288,8 +283,7 @@ ant_spectrum_chart_paint (cairo_t *cr, const AntBox *box, const AntSpectrumChart
       draw_model (&pen, &area, chart, view);
       draw_key (&pen, &area, chart);
     }
-  ant_axes_bottom (&pen, &area, view, &x, TRUE);
-  ant_axes_left (&pen, &area, view, &y);
+  ant_frame_axes (&frame, &pen, view);
   ant_axes_titles (&pen, &area, _("Power, ppm² per cycle/day"), _("Frequency, cycles per day"));
   ant_pen_end (&pen);
 }

@@ -154,25 +154,19 @@ ant_tail_chart_paint (cairo_t *cr, const AntBox *box, const AntTailChart *chart,
                       const AntTheme *theme, double scale)
 {
   g_autofree Canvas *canvas = g_new0 (Canvas, 1);
-  AntTicks x, y;
+  AntFrame frame;
   AntPen *pen = &canvas->pen;
   ant_pen_begin (pen, cr, theme, scale);
-  canvas->area = ant_axes_area (box, theme, TRUE);
+  ant_frame_begin (&frame, pen, box, view, TRUE);
+  canvas->area = frame.area;
   canvas->view = view;
   AntBox *area = &canvas->area;
   ant_labels_begin (&canvas->field, area);
-  AntRuler across = ant_axes_ruler_x (pen, area, theme->font_px, theme->font_px), up = ant_axes_ruler_y (pen, area);
-  ant_ticks_log (view->from, view->to, &across, &x);
-  ant_ticks_log (view->low, view->high, &up, &y);
-  ant_pen_colour (pen, ANT_ROLE_PAPER);
-  ant_pen_fill_box (pen, box);
-  ant_axes_grid (pen, area, view, &x, &y);
   ant_pen_clip (pen, area);
   draw_tails (canvas, chart);
   draw_threshold (canvas, chart->threshold_snr);
   cairo_restore (cr);
-  ant_axes_bottom (pen, area, view, &x, TRUE);
-  ant_axes_left (pen, area, view, &y);
+  ant_frame_axes (&frame, pen, view);
   ant_axes_titles (pen, area, _("At or above"), _("Dip SNR"));
   draw_key (canvas);
   ant_pen_end (pen);

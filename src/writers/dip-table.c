@@ -49,8 +49,10 @@ TEXT (edges, g_strdup (ant_edges_text (dip->edges)))
 TEXT (class, g_strdup (ant_dip_class_name (rows->list.verdict ? ant_verdict_class (&rows->list.verdict[row]) : ANT_CLASS_UNDECIDED)))
 NUMBER (probability, rows->list.verdict ? ant_verdict_probability (&rows->list.verdict[row]) : NAN)
 TEXT (evidence, rows->list.verdict ? ant_verdict_table_text (&rows->list.verdict[row]) : g_strdup (""))
-TEXT (asked, g_strdup ("asked"))
+TEXT (asked, g_strdup (isnan (rows->list.upper_limit_ppm[row]) ? "" : "asked"))
 NUMBER (upper_limit_ppm, rows->list.upper_limit_ppm[row])
+TEXT (analyst_class, g_strdup (rows->list.analyst_class[row]))
+TEXT (analyst_note, g_strdup (rows->list.analyst_note[row]))
 
 #define PPM "10**-6"
 static const AntTableColumn columns[] = {
@@ -89,6 +91,11 @@ static const AntTableColumn asked_columns[] = {
     FALSE, upper_limit_ppm, NULL },
 };
 
+static const AntTableColumn analyst_columns[] = {
+  { "analyst_class", ANT_CELL_TEXT, NULL, NULL, "meta.code.class", "what the analyst takes it for", FALSE, NULL, analyst_class },
+  { "analyst_note", ANT_CELL_TEXT, NULL, NULL, "meta.note", "the analyst's note", FALSE, NULL, analyst_note },
+};
+
 static void
 tell_search (AntTable *table, const AntDipList *list)
 {
@@ -100,7 +107,8 @@ tell_search (AntTable *table, const AntDipList *list)
   if (list->upper_limit_ppm)
     {
       ant_table_note (table, "asked: snr is not to be held against the threshold of a search");
-      return;
+      if (isnan (list->threshold_snr)) /* there was none */
+        return;
     }
   char snr_text[G_ASCII_DTOSTR_BUF_SIZE], false_alarms[G_ASCII_DTOSTR_BUF_SIZE];
   ant_table_note (
@@ -131,6 +139,8 @@ ant_dip_table_new (const AntRecord *record, const AntDipList *list)
   ant_table_add_columns (table, G_N_ELEMENTS (columns), columns);
   if (list->upper_limit_ppm)
     ant_table_add_columns (table, G_N_ELEMENTS (asked_columns), asked_columns);
+  if (list->analyst_class)
+    ant_table_add_columns (table, G_N_ELEMENTS (analyst_columns), analyst_columns);
   ant_table_set_rows (table, list->n, rows, g_free);
   return table;
 }

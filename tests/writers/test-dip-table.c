@@ -148,6 +148,23 @@ test_same_bytes (void)
 }
 
 static void
+test_analyst (void)
+{
+  g_autoptr (AntRecord) record = record_in_utc ();
+  AntDipList list = list_of (2);
+  const double upper_limit_ppm[] = { NAN, 210.5 };
+  const char *const class[] = { "planet", "undecided" }, *const note[] = { "Venus, as predicted", "" };
+  list.upper_limit_ppm = upper_limit_ppm;
+  list.analyst_class = class;
+  list.analyst_note = note;
+  g_autoptr (GString) table = ant_dip_table_text (record, &list);
+  g_assert_nonnull (strstr (table->str, HEADER ",asked,upper_limit_ppm,analyst_class,analyst_note\n"));
+  g_assert_nonnull (strstr (table->str, ",,,planet,\"Venus, as predicted\"\n2,"));
+  g_assert_true (g_str_has_suffix (table->str, ",asked,210.5,undecided,\n"));
+  g_assert_nonnull (strstr (table->str, "# threshold: SNR 5.2")); /* of those that were found */
+}
+
+static void
 test_incomplete (void)
 {
   g_autoptr (AntRecord) record = record_in_utc ();
@@ -171,5 +188,6 @@ main (int argc, char **argv)
   g_test_add_func ("/writers/dip-table/asked-dips-have-an-upper-limit", test_asked);
   g_test_add_func ("/writers/dip-table/same-record-same-bytes", test_same_bytes);
   g_test_add_func ("/writers/dip-table/a-stopped-scan-says-what-it-lacks", test_incomplete);
+  g_test_add_func ("/writers/dip-table/asked-dips-and-the-analysts-words-are-told-beside-dips-found", test_analyst);
   return g_test_run ();
 }
