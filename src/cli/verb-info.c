@@ -8,8 +8,10 @@
 #include "cli/record-options.h"
 #include "cli/settings-options.h"
 #include "cli/verbs.h"
+#include "cli/witness-options.h"
 #include "core/units.h"
 #include "data/record-summary.h"
+#include "data/record-words.h"
 #include "jobs/stop.h"
 
 #define MOST_COLUMNS 16
@@ -135,6 +137,8 @@ print_grid (const AntRecord *record, const AntRecordSummary *summary)
   print_dark (record);
   print_line (_("level"), _("median %.8g%s%s"), record->median, record->value_unit ? " " : "",
               record->value_unit ? record->value_unit : "");
+  g_autofree char *distance = ant_record_distance_words (record);
+  print_line (_("distance"), "%s", distance);
   print_line (_("scatter"), _("%.4g ppm about the median, %.4g ppm from sample to sample"), summary->scatter_ppm,
               summary->sample_scatter_ppm);
 }
@@ -240,12 +244,46 @@ add_grid (JsonBuilder *json, const AntRecord *record, const AntRecordSummary *su
   ant_json_count (json, "gaps", record->gaps->len);
   ant_json_number (json, "longest_gap_h", summary->longest_gap_d * ANT_HOURS_PER_DAY);
   add_spans (json, record, "dark_spans", record->dark_spans);
+  ant_json_text (json, "distance", record->distance == ANT_DISTANCE_ONE_AU ? "1 au" : record->distance == ANT_DISTANCE_OBSERVER ? "observer" : "unknown");
+  ant_json_number (json, "yearly_swing", record->swing);
+  ant_json_number (json, "yearly_swing_sigma", record->swing_sigma);
   ant_json_number (json, "scatter_ppm", summary->scatter_ppm);
   ant_json_number (json, "sample_scatter_ppm", summary->sample_scatter_ppm);
 }
 
 static void
-print_json (const AntRecord *record, const AntRecordSummary *summary, gboolean gridded, const GError *refusal)
+add_witnesses (JsonBuilder *json, const GPtrArray *witnesses)
+{
+  json_builder_begin_array (json_builder_set_member_name (json, "witnesses"));
+  for (guint i = 0; i < witnesses->len; i++)
+    {
+      const AntComparison *comparison = g_ptr_array_index (witnesses, i);
+      json_builder_begin_object (json);
+      ant_json_text (json, "path", comparison->witness->path);
+      ant_json_text (json, "sha256", comparison->witness->sha256);
+      ant_json_number (json, "step_s", comparison->step_d * ANT_SECONDS_PER_DAY);
+      ant_json_count (json, "in_common", comparison->n_both);
+      ant_json_number (json, "level_ratio", comparison->level_ratio);
+      ant_json_number (json, "ratio_scatter_ppm", comparison->ratio_scatter_ppm);
+      json_builder_begin_array (json_builder_set_member_name (json, "common_noise"));
+      for (int k = 0; k < ANT_N_COMMON_SCALES; k++)
+        {
+          json_builder_begin_object (json);
+          ant_json_number (json, "hours", ant_common_scales_h[k]);
+          ant_json_number (json, "correlation", comparison->common[k].correlation);
+          ant_json_number (json, "sigma", comparison->common[k].sigma);
+          ant_json_number (json, "record_ppm", comparison->common[k].rms_a_ppm);
+          ant_json_number (json, "witness_ppm", comparison->common[k].rms_b_ppm);
+          json_builder_end_object (json);
+        }
+      json_builder_end_array (json);
+      json_builder_end_object (json);
+    }
+  json_builder_end_array (json);
+}
+
+static void
+print_json (const AntRecord *record, const AntRecordSummary *summary, gboolean gridded, const GPtrArray *witnesses, const GError *refusal)
 {
   g_autoptr (JsonBuilder) json = json_builder_new ();
   json_builder_begin_object (json);
@@ -257,6 +295,8 @@ print_json (const AntRecord *record, const AntRecordSummary *summary, gboolean g
   add_rows (json, record, summary);
   if (gridded)
     add_grid (json, record, summary);
+  if (witnesses && witnesses->len > 0)
+    add_witnesses (json, witnesses);
   ant_json_text (json, "refused", refusal ? refusal->message : NULL);
   json_builder_begin_array (json_builder_set_member_name (json, "said"));
   for (guint i = 0; i < record->said->len; i++)
@@ -268,7 +308,8 @@ print_json (const AntRecord *record, const AntRecordSummary *summary, gboolean g
 
 /* A record that no grid can be laid on is told about as far as it was read; the exit code tells the rest. */
 static int
-tell (const char *path, const AntRecordOptions *reading, const AntSettingsOptions *given, gboolean as_json)
+tell (const char *path, const AntRecordOptions *reading, const AntWitnessOptions *witness, const AntSettingsOptions *given,
+      gboolean as_json)
 {
   g_autoptr (GError) error = NULL;
   AntSettings settings;
@@ -281,14 +322,17 @@ tell (const char *path, const AntRecordOptions *reading, const AntSettingsOption
   if (ant_record_options_good (reading, &grid, &error)
       && (record = ant_record_options_read (reading, path, ant_stop_on_signals (), &error)))
     gridded = ant_record_make_grid (record, &grid, &error);
+  g_autoptr (GPtrArray) witnesses = gridded ? ant_witness_options_open (witness, record, &settings, ant_stop_on_signals (), &error) : NULL;
   g_clear_pointer (&grid.good_values, g_array_unref);
   if (record)
     {
       ant_record_summarise (record, gridded, &summary);
       if (as_json)
-        print_json (record, &summary, gridded, error);
+        print_json (record, &summary, gridded, witnesses, error);
       else
         print_plain (record, &summary, gridded);
+      if (witnesses && !as_json)
+        ant_witness_options_print (witnesses);
     }
   return error ? ant_cli_fail (error) : ANT_EXIT_DONE;
 }
@@ -298,12 +342,14 @@ ant_verb_info (int argc, char **argv)
 {
   gboolean as_json = FALSE;
   AntRecordOptions reading = { 0 };
+  AntWitnessOptions witness = { 0 };
   AntSettingsOptions given = { 0 };
   const GOptionEntry entries[] = { { "json", 0, 0, G_OPTION_ARG_NONE, &as_json, N_("print JSON"), NULL }, { NULL } };
   g_autoptr (GOptionContext) context = g_option_context_new (_("RECORD"));
   g_option_context_set_summary (context, _("Tells what is in a record (“-”: standard input), and what was assumed to read it."));
   g_option_context_add_main_entries (context, entries, NULL);
   ant_record_options_add (context, &reading);
+  ant_witness_options_add (context, &witness);
   ant_settings_options_add (context, &given);
 
   g_autoptr (GError) error = NULL;
@@ -313,8 +359,9 @@ ant_verb_info (int argc, char **argv)
   else if (argc != 2)
     code = ant_cli_fail_usage (_("info: found %d files, expected one record"), argc - 1);
   else
-    code = tell (argv[1], &reading, &given, as_json);
+    code = tell (argv[1], &reading, &witness, &given, as_json);
   ant_record_options_clear (&reading);
+  ant_witness_options_clear (&witness);
   ant_settings_options_clear (&given);
   return code;
 }

@@ -9,6 +9,7 @@
 #include "cli/scan-summary.h"
 #include "cli/settings-options.h"
 #include "cli/verbs.h"
+#include "cli/witness-options.h"
 #include "data/error.h"
 #include "data/exclusions.h"
 #include "jobs/report.h"
@@ -17,6 +18,7 @@
 #include "writers/dip-table.h"
 #include "writers/output-dir.h"
 #include "writers/result-files.h"
+#include "writers/witness-table.h"
 
 typedef struct
 {
@@ -26,6 +28,7 @@ typedef struct
   gboolean force, progress, no_report;
   AntResultChoice choice;
   AntRecordOptions reading;
+  AntWitnessOptions witness;
   AntSettingsOptions given;
 } Options;
 
@@ -39,6 +42,7 @@ options_clear (Options *options)
   g_free (options->exclude);
   g_free (options->at);
   ant_record_options_clear (&options->reading);
+  ant_witness_options_clear (&options->witness);
   ant_settings_options_clear (&options->given);
 }
 
@@ -74,28 +78,48 @@ load (const Options *options, const char *path, const AntSettings *settings, GCa
 
 #define REPORT "report.pdf"
 
+static void
+append_names (char ***names, const char *const *more)
+{
+  guint n = g_strv_length (*names), n_more = g_strv_length ((char **) (gsize) more);
+  *names = g_renew (char *, *names, n + n_more + 1);
+  for (guint i = 0; i <= n_more; i++)
+    (*names)[n + i] = g_strdup (more[i]);
+}
+
 /* All that a search may write. */
 static char **
 names_of (const Options *options)
 {
   char **names = ant_result_file_names (&options->choice);
-  if (options->no_report)
-    return names;
-  guint n = g_strv_length (names);
-  names = g_renew (char *, names, n + 2);
-  names[n] = g_strdup (REPORT);
-  names[n + 1] = NULL;
+  g_auto (GStrv) witnesses = ant_witness_options_names (&options->witness);
+  append_names (&names, (const char *const *) witnesses);
+  if (!options->no_report)
+    append_names (&names, (const char *const[]){ REPORT, NULL });
   return names;
 }
 
 static gboolean
-write_all (const Options *options, AntOutputDir *dir, const AntScanResults *results, GError **error)
+add_witnesses (const Options *options, AntOutputDir *dir, const GPtrArray *witnesses, GError **error)
+{
+  g_auto (GStrv) names = ant_witness_options_names (&options->witness);
+  for (guint i = 0; i < witnesses->len; i++)
+    {
+      g_autoptr (GString) text = ant_witness_table_text (g_ptr_array_index (witnesses, i));
+      if (!ant_output_dir_add (dir, names[i], text->str, text->len, error))
+        return FALSE;
+    }
+  return TRUE;
+}
+
+static gboolean
+write_all (const Options *options, AntOutputDir *dir, const AntScanResults *results, const GPtrArray *witnesses, GError **error)
 {
   gsize size = 0;
   g_autoptr (GBytes) report = options->no_report ? NULL : ant_report_bytes (results, NULL, (AntPaper) results->settings.paper, error);
   const char *pages = report ? g_bytes_get_data (report, &size) : NULL;
   return (report || options->no_report) && ant_result_files_add (dir, results, &options->choice, error)
-         && (!report || ant_output_dir_add (dir, REPORT, pages, size, error)) && ant_output_dir_commit (dir, error);
+         && (!report || ant_output_dir_add (dir, REPORT, pages, size, error)) && add_witnesses (options, dir, witnesses, error) && ant_output_dir_commit (dir, error);
 }
 
 static void
@@ -110,12 +134,16 @@ static gboolean
 search (const Options *options, AntRecord *record, const AntSettings *settings, AntOutputDir *dir, GCancellable *stop,
         GError **error)
 {
+  g_autoptr (GPtrArray) witnesses = ant_witness_options_open (&options->witness, record, settings, stop, error);
+  if (!witnesses)
+    return FALSE;
   AntProgressLine *line = ant_progress_line_new (options->progress);
   g_autoptr (AntScanResults) results = ant_scan_job_run (record, settings, stop, ant_progress_line_show, line, error);
   ant_progress_line_end (line);
-  if (!results || (dir && !write_all (options, dir, results, error)))
+  if (!results || (dir && !write_all (options, dir, results, witnesses, error)))
     return FALSE;
   ant_scan_summary_print (results);
+  ant_witness_options_print (witnesses);
   if (dir)
     print_names (options);
   return TRUE;
@@ -124,11 +152,12 @@ search (const Options *options, AntRecord *record, const AntSettings *settings, 
 static const char *const asked_names[] = { "dips.csv", NULL };
 
 static gboolean
-ask (const Options *options, AntRecord *record, const AntSettings *settings, AntOutputDir *dir, GError **error)
+ask (const Options *options, AntRecord *record, const AntSettings *settings, AntOutputDir *dir, GCancellable *stop, GError **error)
 {
+  g_autoptr (GPtrArray) witnesses = ant_witness_options_open (&options->witness, record, settings, stop, error);
   AntDip dip;
   double at_d, upper_limit_ppm;
-  if (!ant_time_reference_parse (&record->time, options->at, &at_d, error)
+  if (!witnesses || !ant_time_reference_parse (&record->time, options->at, &at_d, error)
       || !ant_scan_job_ask (record, settings, at_d, options->hours / 24, &dip, &upper_limit_ppm, error))
     return FALSE;
   AntDipList list = { .n = 1, .dip = &dip, .limb_u1 = settings->bank.limb_darkening.u1, .threshold_snr = NAN,
@@ -137,6 +166,7 @@ ask (const Options *options, AntRecord *record, const AntSettings *settings, Ant
   if (dir && !(ant_output_dir_add (dir, asked_names[0], text->str, text->len, error) && ant_output_dir_commit (dir, error)))
     return FALSE;
   ant_scan_summary_print_asked (record, &dip, upper_limit_ppm);
+  ant_witness_options_print_dip (witnesses, settings, &dip);
   return TRUE;
 }
 
@@ -156,7 +186,7 @@ run (const Options *options, const char *path)
   if (record && options->out)
     dir = ant_output_dir_open (options->out, (const char *const *) names, options->force, &error);
   gboolean good = record && (dir || !options->out)
-                  && (options->at ? ask (options, record, &settings, dir, &error)
+                  && (options->at ? ask (options, record, &settings, dir, stop, &error)
                                   : search (options, record, &settings, dir, stop, &error));
   return good ? ANT_EXIT_DONE : ant_cli_fail (error);
 }
@@ -185,6 +215,7 @@ ant_verb_scan (int argc, char **argv)
   g_option_context_set_summary (context, _("Searches a record (“-”: standard input) for dips and weighs each against the Sun's own noise."));
   g_option_context_add_main_entries (context, entries, NULL);
   ant_record_options_add (context, &options.reading);
+  ant_witness_options_add (context, &options.witness);
   ant_settings_options_add (context, &options.given);
 
   g_autoptr (GError) error = NULL;

@@ -6,6 +6,7 @@
 #include "data/error.h"
 #include "data/grid-values.h"
 #include "data/plain-text.h"
+#include "data/record-distance.h"
 
 #define MOST_PLACES 2e8
 #define SNAP_STEPS 0.25
@@ -158,6 +159,8 @@ lay_grid (AntRecord *record, AntRowOrder *order, const AntGridOptions *options, 
     return FALSE;
   ant_row_order_judge_spans (order, record, options);
   if (!ant_row_order_require_good (order, record, error))
+    return FALSE;
+  if (!ant_record_settle_distance (record, order, options, error))
     return FALSE;
   ant_row_order_trim (order, record);
   if (!ant_cadence_find (order->n, order->time_d, options->cadence_d, &cadence))

@@ -41,6 +41,16 @@ add_columns (GPtrArray *facts, const AntRecord *record)
     add (facts, "", _("and %u more"), record->columns->len - MOST_COLUMNS);
 }
 
+char *
+ant_record_distance_words (const AntRecord *record)
+{
+  static const char *const places[] = { N_("unknown"), N_("as the observer saw them"), N_("at 1 au") };
+  const char *place = _ (places[record->distance]);
+  if (!isfinite (record->swing))
+    return g_strdup (place);
+  return g_strdup_printf (_("%s (of the yearly swing %.3f +- %.3f in the file)"), place, record->swing, record->swing_sigma);
+}
+
 static void
 add_grid (GPtrArray *facts, const AntRecord *record, const AntRecordSummary *summary)
 {
@@ -59,6 +69,8 @@ add_grid (GPtrArray *facts, const AntRecord *record, const AntRecordSummary *sum
     add (facts, _("Gaps"), _("%u, the longest %s"), record->gaps->len, gap);
   add (facts, _("Level"), _("%.8g%s%s, the median: 0 ppm"), record->median, record->value_unit ? " " : "",
        record->value_unit ? record->value_unit : "");
+  g_autofree char *distance = ant_record_distance_words (record);
+  add (facts, _("Distance"), "%s", distance);
   add (facts, _("Scatter"), _("%.4g ppm, %.4g ppm from sample to sample"), summary->scatter_ppm,
        summary->sample_scatter_ppm);
 }

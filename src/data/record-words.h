@@ -8,5 +8,7 @@
 GPtrArray *ant_record_facts (const AntRecord *record, const AntRecordSummary *summary);
 /* What is left out: for each flag that was set its name and count and, after a line break, what it means. */
 GPtrArray *ant_record_left_out (const AntRecordSummary *summary);
+/* "at 1 au (0.002 +- 0.004 of the yearly swing was in them)": where the values stand. Caller frees. */
+char *ant_record_distance_words (const AntRecord *record);
 /* "41.6 d · 60 s · 52 304 samples · 12 % missing". Caller frees. */
 char *ant_record_headline (const AntRecord *record, const AntRecordSummary *summary);

@@ -43,6 +43,7 @@ ant_record_new (void)
   record->dark_spans = g_array_new (FALSE, FALSE, sizeof (AntSpan));
   record->gaps = g_array_new (FALSE, FALSE, sizeof (AntSpan));
   record->time.own_unit_d = 1.0;
+  record->swing = record->swing_sigma = (double) NAN;
   record->ref_count = 1;
   return record;
 }
@@ -81,6 +82,7 @@ ant_record_unref (AntRecord *record)
   g_free (record->error_name);
   g_free (record->quality_name);
   g_free (record->value_unit);
+  g_free (record->value_remark);
   ant_time_reference_clear (&record->time);
   g_ptr_array_unref (record->columns);
   g_ptr_array_unref (record->said);

@@ -9,6 +9,7 @@
 #include "data/time-reference.h"
 #include "core/span.h"
 #include "noise/series.h"
+#include "sky/observer.h"
 
 /* Why a row is left out (bits; 0 = used). ANT_FLAG_SPIKE alone still means searched. */
 typedef enum
@@ -25,6 +26,11 @@ typedef enum
 #define ANT_N_FLAGS 8
 const char *ant_flag_name (unsigned bit_index);        /* "fill", "quality" ... */
 const char *ant_flag_description (unsigned bit_index); /* one translated sentence */
+
+/* Where irradiances stand: as the instrument saw them, or as they would be 1 au from the Sun. */
+typedef enum { ANT_DISTANCE_UNKNOWN, ANT_DISTANCE_OBSERVER, ANT_DISTANCE_ONE_AU } AntDistance;
+/* What is to be made of that; values of the setting distance. */
+typedef enum { ANT_DISTANCE_AS_IS, ANT_DISTANCE_TO_ONE_AU, ANT_DISTANCE_TO_OBSERVER } AntDistanceWish;
 
 typedef enum { ANT_AT_UNKNOWN, ANT_AT_START, ANT_AT_MIDDLE, ANT_AT_END } AntStampPlace;
 
@@ -45,12 +51,16 @@ typedef struct
   char *part;       /* which part of the file, "HDU 1 (FLUXES)"; NULL where the file is one table of text lines */
   char *time_name, *value_name, *error_name, *quality_name; /* column names or "column 3"; NULL if absent */
   char *value_unit; /* "W/m2", "relative", or NULL if unknown */
+  char *value_remark; /* what the file says of the value beside its name, or NULL */
   AntTimeReference time;
   GPtrArray *columns; /* AntColumn*: the file's other numbers, in its order; empty if there are none */
   GPtrArray *said;  /* char*: what the reader and the grid assumed or found, one sentence each */
 
   /* Set by ant_record_make_grid. */
   double median;        /* value that 0 ppm stands for */
+  AntDistance distance; /* where the values stand now */
+  double swing, swing_sigma; /* so much of the yearly swing of 6.9 % by the Earth's distance was in them as read: 1 at the
+                                observer's distance, 0 at 1 au; NaN where it cannot be told */
   double cadence_d;     /* fitted slope of time against index */
   double exposure_d;    /* boxcar of one sample */
   gboolean exposure_known;
@@ -84,6 +94,9 @@ typedef struct
   gboolean quality_is_list; /* good_values holds the good ones; else good = (quality & good_mask) == 0 */
   GArray *good_values;      /* of gint64, or NULL: only 0 is good */
   gint64 good_mask;         /* 0 with good_values NULL: good = 0 */
+  double distance;          /* an AntDistanceWish */
+  double no_doppler;        /* nonzero: convert by the distance alone */
+  const AntObserver *observer; /* whose distance; borrowed; NULL: the Earth's centre */
   double from_d, to_d;      /* scan limits, elapsed days; NaN = none */
   GArray *excluded;         /* of AntSpan, or NULL */
   GArray *masked;           /* the same, masked by the analyst */

@@ -16,6 +16,10 @@ static const char *const paper_words[] = { "A4", "letter", NULL };
 static const char *const radii_words[] = { [ANT_RADII_ALMANAC] = "almanac", [ANT_RADII_IAU] = "iau", NULL };
 static const char *const target_words[] = { [ANT_TARGET_SUN] = "sun", [ANT_TARGET_STAR] = "star", NULL };
 
+static const char *const distance_words[] = { [ANT_DISTANCE_AS_IS] = "as-is", [ANT_DISTANCE_TO_ONE_AU] = "to-1au",
+                                              [ANT_DISTANCE_TO_OBSERVER] = "to-observer", NULL };
+static const char *const doppler_words[] = { "yes", "no", NULL };
+
 #define AT(field) G_STRUCT_OFFSET (AntSettings, field)
 #define REAL ANT_SETTING_REAL
 #define WHOLE ANT_SETTING_WHOLE
@@ -30,6 +34,10 @@ const AntSetting ant_setting_table[] = {
     N_("Time from sample to sample; 0 = found from the time stamps") },
   { "dark-fraction", "%", REAL, 1, 0.01, 100, 100, AT (grid.dark_fraction), NULL, N_("Record"),
     N_("Samples farther than this from the running 5-day median are set aside as dark or covered") },
+  { "distance", "", WORD, ANT_DISTANCE_AS_IS, ANT_DISTANCE_AS_IS, ANT_DISTANCE_TO_OBSERVER, 1, AT (grid.distance), distance_words, N_("Record"),
+    N_("Bring irradiances to 1 au or to the observer's distance from the Sun, or leave them as the file has them") },
+  { "doppler", "", WORD, 0, 0, 1, 1, AT (grid.no_doppler), doppler_words, N_("Record"),
+    N_("Take the Doppler shift by the observer's motion along with the distance") },
 
   { "chunk-length", "d", REAL, 0, 0, 36525, 1, AT (chunk_d), NULL, N_("Noise"),
     N_("Length of the pieces that get a noise model each; 0 = 90 d below a 10-min cadence, else 180 d") },
@@ -84,6 +92,9 @@ const AntSetting ant_setting_table[] = {
     N_("Period and window of the rotation curve that is drawn") },
   { "rotation-harmonics", "", WHOLE, 4, 1, 12, 1, AT (rotation_harmonics), NULL, N_("Display"),
     N_("Harmonics of that period in the rotation curve") },
+
+  { "witness-drift", "d", REAL, 0, 0, 36525, 1, AT (witness_drift_d), NULL, N_("Witness"),
+    N_("Length of the running median that is taken out of ratio and difference to a witness; 0 = nothing is") },
 
   { "seed", "", WHOLE, 1, 0, 4294967295.0, 1, AT (seed), NULL, N_("Run"),
     N_("Start of the random numbers of surrogates; same seed, same numbers") },

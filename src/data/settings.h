@@ -32,6 +32,7 @@ typedef struct
   AntCauseRates rates;     /* events of each cause a year */
   double rotation_window_d;
   double rotation_harmonics;
+  double witness_drift_d;  /* 0 = none */
   double seed;
   double threads;          /* 0 = as many as processors */
   double paper;            /* of the report: 0 A4, 1 letter */

@@ -309,6 +309,7 @@ name_columns (const AntTableLayout *layout, const AntValueColumns *columns, guin
   g_autofree char *place = named_place (layout, value);
   ant_record_say (record, _("Value is %s%s, in %s."), record->value_name, place,
                   record->value_unit ? record->value_unit : _("a unit that is not named"));
+  record->value_remark = g_strdup (layout->columns[value].remark);
   if (layout->columns[value].remark)
     ant_record_say (record, _("The header says of it: %s"), layout->columns[value].remark);
   if (columns->error >= 0)
