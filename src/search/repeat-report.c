@@ -1,0 +1,152 @@
+/* repeat-report.c - a train that was measured, as a repeat: period and epoch with errors, its events, its aliases. */
+#include <math.h>
+#include <stdlib.h>
+#include "search/repeat-work.h"
+
+static const int alias_ratio[ANT_REPEAT_ALIASES][2] = { { 1, 2 }, { 2, 1 }, { 1, 3 }, { 3, 1 }, { 3, 2 } };
+
+/* The step along period (slip of the record's ends) or epoch over which SNR^2/2 falls by a half on the mean of both sides. */
+static double
+error_of (const AntRepeatTrain *train, const AntTrainTrial *at, long middle, int of_period)
+{
+  double best = ant_repeat_train_snr (train, at, 0), low = 0, high = 0.01 * at->duration;
+  double per = of_period ? fmax (0.5 * (double) train->n / at->period, 1) : 1;
+  for (int round = 0; round < 60; round++)
+    {
+      double h = low > 0 || round > 30 ? 0.5 * (low + high) : high, fall = best * best;
+      for (int side = -1; side <= 1; side += 2)
+        {
+          AntTrainTrial moved = *at;
+          moved.period += of_period ? side * h / per : 0;
+          moved.mid = at->mid + (of_period ? -(double) middle * (moved.period - at->period) : side * h);
+          double snr = ant_repeat_train_snr (train, &moved, 0);
+          fall -= 0.5 * snr * fabs (snr);
+        }
+      if (0.5 * fall >= 0.5)
+        high = h;
+      else if (high > h || low > 0)
+        low = h;
+      else
+        high *= 1.5;
+      if (low > 0 && high - low < 0.01 * high)
+        break;
+    }
+  return high / per;
+}
+
+static ptrdiff_t
+dip_at (const AntRepeats *repeats, double mid_d, double duration_d)
+{
+  for (size_t i = 0; i < repeats->options.n_dips; i++)
+    if (fabs (repeats->options.dip[i].mid_d - mid_d) < 0.5 * fmax (duration_d, repeats->options.dip[i].duration_d))
+      return (ptrdiff_t) i;
+  return -1;
+}
+
+/* One event: from the crossing fitted to it, or from its box in white noise. den 0: nothing of it is observed. */
+static AntRepeatEvent
+event_of (const AntRepeats *repeats, const AntRepeatFinalist *finalist, long number, double *num, double *den)
+{
+  const AntRepeatTrain *train = &repeats->side[0].train;
+  AntTrainEvent event = ant_repeat_train_event (train, &finalist->trial, number);
+  const AntShapeFit *fit = &finalist->fit[number - finalist->first];
+  *num = event.num;
+  *den = event.den;
+  if (!train->box)
+    {
+      *den = fit->sigma_ppm > 0 && isfinite (fit->sigma_ppm) ? 1 / (fit->sigma_ppm * fit->sigma_ppm) : 0;
+      *num = *den > 0 ? fit->depth_ppm * *den : 0;
+    }
+  double mid_d = ant_series_time (&repeats->series, event.mid);
+  return (AntRepeatEvent){ .mid_d = mid_d, .depth_ppm = *num / *den, .sigma_ppm = 1 / sqrt (*den), .snr = *num / sqrt (*den),
+                           .coverage = fmin (event.den / event.full, 1), .number = number,
+                           .dip = dip_at (repeats, mid_d, finalist->trial.duration * repeats->series.step_d) };
+}
+
+/* Sums of a train, kept apart in what it takes for each test. */
+typedef struct
+{
+  double num, den;
+} Sum;
+
+static double
+snr_of (const AntRepeats *repeats, Sum sum)
+{
+  double total = repeats->options.white ? repeats->side[0].box.total : HUGE_VAL, e = sum.den - sum.den * sum.den / total;
+  return e > 0 ? sum.num / sqrt (e) : 0;
+}
+
+static void
+add_events (const AntRepeats *repeats, const AntRepeatFinalist *finalist, AntRepeat *repeat)
+{
+  Sum all = { 0, 0 }, unlisted = { 0, 0 }, parity[2] = { { 0, 0 }, { 0, 0 } }, largest = { -HUGE_VAL, 0 };
+  for (long j = finalist->first; j < finalist->end; j++)
+    {
+      double num, den;
+      AntRepeatEvent event = event_of (repeats, finalist, j, &num, &den);
+      if (!(den > 0))
+        continue;
+      repeat->event[repeat->n_events++] = event;
+      repeat->n_observed += event.coverage >= 0.5;
+      all = (Sum){ all.num + num, all.den + den };
+      parity[j & 1] = (Sum){ parity[j & 1].num + num, parity[j & 1].den + den };
+      if (event.dip < 0)
+        unlisted = (Sum){ unlisted.num + num, unlisted.den + den };
+      if (num > largest.num)
+        largest = (Sum){ num, den };
+    }
+  double total = repeats->options.white ? repeats->side[0].box.total : HUGE_VAL, effective = all.den - all.den * all.den / total;
+  double common = all.num / all.den;
+  repeat->snr = snr_of (repeats, all);
+  repeat->depth_ppm = all.num / effective;
+  repeat->depth_sigma_ppm = 1 / sqrt (effective);
+  repeat->snr_unlisted = snr_of (repeats, unlisted);
+  repeat->snr_without_largest = snr_of (repeats, (Sum){ all.num - largest.num, all.den - largest.den });
+  if (parity[0].den > 0 && parity[1].den > 0)
+    repeat->odd_even = fabs (parity[0].num / parity[0].den - parity[1].num / parity[1].den)
+                       / sqrt (1 / parity[0].den + 1 / parity[1].den);
+  for (size_t e = 0; e < repeat->n_events; e++)
+    if (repeat->event[e].coverage >= 0.5)
+      repeat->chi2 += pow ((repeat->event[e].depth_ppm - common) / repeat->event[e].sigma_ppm, 2);
+}
+
+/* The best SNR at a simple ratio of the period, over those phases that share events with it. */
+static void
+find_aliases (const AntRepeats *repeats, const AntTrainTrial *trial, AntRepeat *repeat)
+{
+  for (size_t k = 0; k < ANT_REPEAT_ALIASES; k++)
+    {
+      AntRepeatAlias alias = { .numerator = alias_ratio[k][0], .denominator = alias_ratio[k][1] };
+      AntTrainTrial other = *trial;
+      other.period = trial->period * alias.numerator / alias.denominator;
+      alias.period_d = other.period * repeats->series.step_d;
+      for (int j = 0; j < alias.numerator; j++)
+        {
+          other.mid = trial->mid + j * trial->period;
+          alias.snr = fmax (alias.snr, ant_repeat_train_snr (&repeats->side[0].train, &other, 0));
+        }
+      repeat->alias[k] = alias;
+    }
+}
+
+AntStatus
+ant_repeats_report (const AntRepeats *repeats, const AntRepeatFinalist *finalist, AntRepeat *repeat)
+{
+  const AntRepeatTrain *train = &repeats->side[0].train;
+  const AntTrainTrial *trial = &finalist->trial;
+  double step_d = repeats->series.step_d;
+  long middle = (long) floor ((0.5 * (double) repeats->series.n - trial->mid) / trial->period + 0.5);
+  *repeat = (AntRepeat){ .period_d = trial->period * step_d, .duration_d = trial->duration * step_d,
+                         .epoch_d = ant_series_time (&repeats->series, trial->mid + (double) middle * trial->period),
+                         .period_sigma_d = error_of (train, trial, middle, 1) * step_d,
+                         .epoch_sigma_d = error_of (train, trial, middle, 0) * step_d };
+  repeat->event = malloc ((size_t) (finalist->end - finalist->first) * sizeof *repeat->event);
+  if (!repeat->event)
+    return ANT_NO_MEMORY;
+  add_events (repeats, finalist, repeat);
+  for (size_t e = 0; e < repeat->n_events; e++)
+    repeat->event[e].number -= middle;
+  repeat->expected_false = ant_repeat_chance_expected (&repeats->chance, repeat->snr);
+  find_aliases (repeats, trial, repeat);
+  return ANT_OK;
+}
