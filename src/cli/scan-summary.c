@@ -55,6 +55,29 @@ print_passages (const AntScanResults *results)
 }
 
 static void
+print_repeats (const AntScanResults *results)
+{
+  const AntRepeatResults *repeats = &results->repeats;
+  if (!repeats->searched)
+    return;
+  g_print (g_dngettext (NULL, "%zu repeat at or above SNR %.2f, periods %.4g to %.4g d; noise alone is expected to show %.2g, brightenings show %zu.\n",
+                        "%zu repeats at or above SNR %.2f, periods %.4g to %.4g d; noise alone is expected to show %.2g, brightenings show %zu.\n",
+                        repeats->n),
+           repeats->n, repeats->threshold_snr, repeats->period_min_d, repeats->period_max_d, repeats->expected_at_threshold,
+           repeats->n_mirrored);
+  for (gsize i = 0; i < repeats->n; i++)
+    {
+      const AntRepeat *repeat = &repeats->repeat[i];
+      g_autofree char *epoch = middle_text (results->record, repeat->epoch_d);
+      g_print (g_dngettext (NULL, "%4zu  every %.6f ± %.6f d, one at %s, %.2f h, %.1f ± %.1f ppm, SNR %.1f, %zu event, by chance %.2g\n",
+                            "%4zu  every %.6f ± %.6f d, one at %s, %.2f h, %.1f ± %.1f ppm, SNR %.1f, %zu events, by chance %.2g\n",
+                            repeat->n_observed),
+               i + 1, repeat->period_d, repeat->period_sigma_d, epoch, repeat->duration_d * ANT_HOURS_PER_DAY, repeat->depth_ppm,
+               repeat->depth_sigma_ppm, repeat->snr, repeat->n_observed, repeat->expected_false);
+    }
+}
+
+static void
 print_floor (const AntScanResults *results)
 {
   const double hours[] = { 0.5, 2, 6, 13 };
@@ -82,6 +105,7 @@ ant_scan_summary_print (const AntScanResults *results)
            results->n_brightenings, results->n_mirrored, results->n_mirror_dips);
   print_dips (record, results->n_brightenings, results->brightening, results->brightening_verdict);
   print_passages (results);
+  print_repeats (results);
   for (guint i = 0; i < MIN (results->said->len, MOST_SENTENCES); i++)
     g_print ("%s.\n", (const char *) g_ptr_array_index (results->said, i));
   if (results->said->len > MOST_SENTENCES)

@@ -25,7 +25,7 @@ typedef struct
   char *out, *also, *from, *to, *exclude, *at;
   double hours;
   int threads;
-  gboolean force, progress, no_report;
+  gboolean force, progress, no_report, no_repeats;
   AntResultChoice choice;
   AntRecordOptions reading;
   AntWitnessOptions witness;
@@ -130,6 +130,13 @@ print_names (const Options *options)
   g_print (_("In %s: %s.\n"), options->out, all);
 }
 
+/* Whether a stop cut the search for repeats short: what was found is kept, and the exit code tells. */
+static gboolean
+was_stopped (const AntScanResults *results)
+{
+  return results->repeats.searched && results->repeats.done < 1;
+}
+
 static gboolean
 search (const Options *options, AntRecord *record, const AntSettings *settings, AntOutputDir *dir, GCancellable *stop,
         GError **error)
@@ -146,7 +153,9 @@ search (const Options *options, AntRecord *record, const AntSettings *settings, 
   ant_witness_options_print (witnesses);
   if (dir)
     print_names (options);
-  return TRUE;
+  if (was_stopped (results))
+    g_set_error_literal (error, G_IO_ERROR, G_IO_ERROR_CANCELLED, _("stopped while searching for repeats; what was found until then is kept"));
+  return !was_stopped (results);
 }
 
 static const char *const asked_names[] = { "dips.csv", NULL };
@@ -181,6 +190,8 @@ run (const Options *options, const char *path)
     return ant_cli_fail (error);
   if (options->threads)
     settings.threads = options->threads;
+  if (options->no_repeats)
+    settings.repeats = 0;
   g_autoptr (AntRecord) record = load (options, path, &settings, stop, &error);
   g_auto (GStrv) names = options->at ? g_strdupv ((char **) (gsize) asked_names) : names_of (options);
   if (record && options->out)
@@ -200,6 +211,7 @@ ant_verb_scan (int argc, char **argv)
     { "also", 0, 0, G_OPTION_ARG_STRING, &options.also, N_("write the tables as fits, votable or fits,votable too"), N_("FORMATS") },
     { "series", 0, 0, G_OPTION_ARG_NONE, &options.choice.series, N_("write the detrended series, row by row, too"), NULL },
     { "no-report", 0, 0, G_OPTION_ARG_NONE, &options.no_report, N_("leave out report.pdf"), NULL },
+    { "no-repeats", 0, 0, G_OPTION_ARG_NONE, &options.no_repeats, N_("leave out the search for dips that recur"), NULL },
     { "force", 0, 0, G_OPTION_ARG_NONE, &options.force, N_("replace results that are there"), NULL },
     { "from", 0, 0, G_OPTION_ARG_STRING, &options.from, N_("use the record from this time"), N_("TIME") },
     { "to", 0, 0, G_OPTION_ARG_STRING, &options.to, N_("use the record up to this time"), N_("TIME") },

@@ -7,6 +7,7 @@
 #include "core/units.h"
 #include "data/error.h"
 #include "data/json-fields.h"
+#include "data/repeat-results-text.h"
 #include "data/verdict-text.h"
 
 #define MOST_DIPS 100000
@@ -344,6 +345,18 @@ get_median_floor (JsonObject *object, AntScanResults *results, GError **error)
 /* The rest */
 
 static void
+put_repeats (JsonObject *object, const AntScanResults *results)
+{
+  ant_repeat_results_put (object, &results->repeats);
+}
+
+static gboolean
+get_repeats (JsonObject *object, AntScanResults *results, GError **error)
+{
+  return ant_repeat_results_get (object, &results->repeats, error);
+}
+
+static void
 put_spikes (JsonObject *object, const AntScanResults *results)
 {
   JsonArray *array = json_array_sized_new ((guint) results->n_spikes);
@@ -422,7 +435,7 @@ static const struct
   { put_chunks, get_chunks },     { put_dips, get_dips },   { put_brightenings, get_brightenings },
   { put_verdicts, get_verdicts },
   { put_passages, get_passages }, { put_floor, get_median_floor }, { put_spikes, get_spikes },
-  { put_said, get_said },         { put_chance, get_chance },
+  { put_said, get_said },         { put_chance, get_chance }, { put_repeats, get_repeats },
 };
 
 JsonObject *

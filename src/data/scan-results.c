@@ -290,6 +290,7 @@ ant_scan_results_unref (AntScanResults *results)
   g_free (results->dip_verdict);
   g_free (results->brightening_verdict);
   g_free (results->passage);
+  ant_repeat_results_clear (&results->repeats);
   g_free (results->slow_ppm);
   g_free (results->spike_row);
   g_free (results->flags);

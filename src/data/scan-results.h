@@ -5,6 +5,7 @@
 #include <glib.h>
 #include "data/dip-list.h"
 #include "data/record.h"
+#include "data/repeat-results.h"
 #include "data/settings.h"
 #include "search/scan.h"
 #include "verdict/verdict-work.h"
@@ -21,6 +22,7 @@ typedef struct
   AntPassage *passage;       /* by time, numbered from 1 in this order */
   float *slow_ppm;           /* [record->series.n] the slow part, dips taken out, gaps bridged; NULL unless complete,
                                 or not kept by the file that they were read from */
+  AntRepeatResults repeats;  /* dips that recur */
   gsize n_chunks;
   AntChunk *chunk;           /* frequency_cd and power_unmasked owned */
   gsize n_floor;             /* points of the median floor over chunks */

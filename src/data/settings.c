@@ -20,6 +20,10 @@ static const char *const distance_words[] = { [ANT_DISTANCE_AS_IS] = "as-is", [A
                                               [ANT_DISTANCE_TO_OBSERVER] = "to-observer", NULL };
 static const char *const doppler_words[] = { "yes", "no", NULL };
 
+static const char *const yes_words[] = { "no", "yes", NULL };
+static const char *const repeat_duration_words[] = { "physical", "any", NULL };
+static const char *const repeat_noise_words[] = { "fitted", "white", NULL };
+
 #define AT(field) G_STRUCT_OFFSET (AntSettings, field)
 #define REAL ANT_SETTING_REAL
 #define WHOLE ANT_SETTING_WHOLE
@@ -87,6 +91,25 @@ const AntSetting ant_setting_table[] = {
     N_("Flares a year (brightenings)") },
   { "rate-instrument", "1/yr", REAL, 12, 1e-6, 10000, 1, AT (rates.per_year[ANT_CAUSE_INSTRUMENT]), NULL, N_("Verdicts"),
     N_("Faults of the instrument a year: steps, recoveries, gradual falls, spikes") },
+
+  { "repeats", "", WORD, 1, 0, 1, 1, AT (repeats), yes_words, N_("Repeats"),
+    N_("Look for dips that recur, at every period") },
+  { "repeat-period-min", "d", REAL, 0.5, 0.01, 36525, 1, AT (repeat_period_min_d), NULL, N_("Repeats"),
+    N_("Shortest period looked for") },
+  { "repeat-period-max", "d", REAL, 0, 0, 36525, 1, AT (repeat_period_max_d), NULL, N_("Repeats"),
+    N_("Longest period looked for; 0 = as long as the record has room for the events asked") },
+  { "repeat-durations", "", WORD, 0, 0, 1, 1, AT (repeat_durations), repeat_duration_words, N_("Repeats"),
+    N_("Lengths of dips that recur: physical = about the time in which a body with that period crosses a Sun, any = duration-min to duration-max") },
+  { "repeat-shortest", "", REAL, 0.2, 0.01, 10, 1, AT (repeat_shortest), NULL, N_("Repeats"),
+    N_("Shortest of the physical lengths, in times of a central crossing, 13 h (period / 1 yr)^(1/3)") },
+  { "repeat-longest", "", REAL, 2, 0.02, 20, 1, AT (repeat_longest), NULL, N_("Repeats"),
+    N_("Longest of the physical lengths, likewise") },
+  { "repeat-events", "", WHOLE, 3, 2, 1000, 1, AT (repeat_events), NULL, N_("Repeats"),
+    N_("Fewest observed events of a repeat; two are marked, since nothing tells their period from a fraction of it") },
+  { "repeat-noise", "", WORD, 0, 0, 1, 1, AT (repeat_noise), repeat_noise_words, N_("Repeats"),
+    N_("Noise in the search for repeats: fitted = that of the record, white = a plain box search, for records without slow variation") },
+  { "repeat-false-alarms-per-record", "", REAL, 0.01, 1e-9, 100, 1, AT (repeat_false_alarms), NULL, N_("Repeats"),
+    N_("Noise-only repeats accepted per record; sets their threshold") },
 
   { "rotation-window", "d", REAL, 27.275232, 2, 365.25, 1, AT (rotation_window_d), NULL, N_("Display"),
     N_("Period and window of the rotation curve that is drawn") },

@@ -30,6 +30,13 @@ typedef struct
   double radii;            /* an AntRadiiSet */
   double target;           /* an AntTarget */
   AntCauseRates rates;     /* events of each cause a year */
+  double repeats;          /* 1: look for dips that recur */
+  double repeat_period_min_d, repeat_period_max_d; /* 0: as long as the record allows */
+  double repeat_durations; /* 0: as a crossing takes at each period; 1: duration-min to duration-max at every period */
+  double repeat_shortest, repeat_longest; /* in crossing times */
+  double repeat_events;
+  double repeat_noise;     /* 0: as fitted; 1: white */
+  double repeat_false_alarms;
   double rotation_window_d;
   double rotation_harmonics;
   double witness_drift_d;  /* 0 = none */

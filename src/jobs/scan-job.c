@@ -5,51 +5,31 @@
 #include <math.h>
 
 #include "data/error.h"
+#include "jobs/progress-part.h"
+#include "jobs/repeat-job.h"
 #include "jobs/verdict-job.h"
 
 /* Phi^-1(0.95): a Gaussian exceeds its mean by this many sigma with probability 5 %. */
 #define ONE_SIDED_95 1.6448536269514722
 
-/* Search and verdicts are told as one run. */
-typedef struct
-{
-  AntProgressFunc progress;
-  gpointer data;
-  gsize stages_before;
-  gsize n_stages;
-  double elapsed_before_s, elapsed_s;
-} Whole;
-
-static void
-tell_whole (const AntProgress *progress, gpointer data)
-{
-  Whole *whole = data;
-  AntProgress told = *progress;
-  told.stage += whole->stages_before;
-  told.n_stages = whole->n_stages;
-  told.elapsed_s += whole->elapsed_before_s;
-  whole->elapsed_s = told.elapsed_s;
-  whole->progress (&told, whole->data);
-}
-
-/* A scan that was stopped keeps its dips without verdicts. */
-static AntScanResults *
-judged (AntScanResults *results, gboolean keep_part, GCancellable *cancellable, Whole *whole, GError **error)
+/* What follows the search of a scan that ran to its end: verdicts, then repeats. FALSE if the scan is to be given up;
+ * with keep_part a stop only leaves out what had not been made. */
+static gboolean
+go_on (AntScanResults *results, gboolean keep_part, GCancellable *cancellable, AntProgressPart *part, GError **error)
 {
   GError *cause = NULL;
-  whole->stages_before = ant_scan_stages ()->n_stages;
-  whole->elapsed_before_s = whole->elapsed_s;
-  if (results->reach < ANT_SCAN_COMPLETE
-      || ant_verdict_job_run (results, cancellable, whole->progress ? tell_whole : NULL, whole, &cause))
-    return results;
-  if (keep_part && g_error_matches (cause, G_IO_ERROR, G_IO_ERROR_CANCELLED))
+  ant_progress_part_next (part, ant_scan_stages ()->n_stages);
+  if (!ant_verdict_job_run (results, cancellable, ant_progress_part_show, part, &cause))
     {
-      g_error_free (cause);
-      return results;
+      gboolean kept = keep_part && g_error_matches (cause, G_IO_ERROR, G_IO_ERROR_CANCELLED);
+      if (kept)
+        g_error_free (cause);
+      else
+        g_propagate_error (error, cause);
+      return kept;
     }
-  g_propagate_error (error, cause);
-  ant_scan_results_unref (results);
-  return NULL;
+  ant_progress_part_next (part, ANT_VERDICT_STAGES);
+  return ant_repeat_job_run (results, cancellable, ant_progress_part_show, part, error);
 }
 
 static AntScanResults *
@@ -58,17 +38,23 @@ run (AntRecord *record, const AntSettings *settings, gboolean keep_part, GCancel
 {
   AntStatus status;
   AntScanOptions options = ant_scan_results_options (record, settings);
+  if (!ant_repeat_results_check (record, settings, error))
+    return NULL;
   AntScan *scan = ant_scan_new (&record->series, &options, &status);
-  Whole whole = { progress, data, 0, ant_scan_stages ()->n_stages + ANT_VERDICT_STAGES, 0, 0 };
+  AntProgressPart part = { .progress = progress, .data = data };
+  part.n_stages = ant_scan_stages ()->n_stages + ANT_VERDICT_STAGES
+                  + (settings->repeats > 0 ? ant_repeats_stages ()->n_stages : 0);
   if (scan)
-    status = ant_pool_run (ant_scan_stages (), scan, (guint) settings->threads, cancellable, progress ? tell_whole : NULL, &whole);
+    status = ant_pool_run (ant_scan_stages (), scan, (guint) settings->threads, cancellable, ant_progress_part_show, &part);
   if (keep_part && status == ANT_STOPPED && ant_scan_reach (scan) > ANT_SCAN_NOTHING)
     status = ant_scan_conclude (scan);
   AntScanResults *results = NULL;
   if (ant_status_to_error (status, _("searching for dips"), error))
     results = ant_scan_results_new (record, settings, scan);
   ant_scan_free (scan);
-  return results ? judged (results, keep_part, cancellable, &whole, error) : NULL;
+  if (results && results->reach == ANT_SCAN_COMPLETE && !go_on (results, keep_part, cancellable, &part, error))
+    g_clear_pointer (&results, ant_scan_results_unref);
+  return results;
 }
 
 AntScanResults *

@@ -6,6 +6,8 @@
 #include "data/scan-results.h"
 #include "jobs/pool.h"
 
+/* Dips first, then (settings->repeats) dips that recur. Stopped during the latter, both functions give all that was found,
+ * with results->repeats.done below 1. Settings of repeats that cannot be are refused before anything is searched. */
 /* Blocks until done; progress is called on this thread. NULL with one sentence; G_IO_ERROR_CANCELLED if stopped. The
  * record must be gridded. Safe from any thread. */
 AntScanResults *ant_scan_job_run (AntRecord *record, const AntSettings *settings, GCancellable *cancellable,

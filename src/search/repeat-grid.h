@@ -10,6 +10,7 @@
 #define ANT_REPEAT_CROSSING_H 13.0 /* of a central crossing at a period of a year */
 #define ANT_REPEAT_BINS 20000      /* at most */
 #define ANT_REPEAT_BIN_LN 2e-4     /* finest */
+#define ANT_REPEAT_FLOOR 16.0      /* SNR^2 below which bins may stay empty */
 
 typedef struct
 {

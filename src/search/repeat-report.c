@@ -34,13 +34,13 @@ error_of (const AntRepeatTrain *train, const AntTrainTrial *at, long middle, int
   return high / per;
 }
 
-static ptrdiff_t
+static size_t
 dip_at (const AntRepeats *repeats, double mid_d, double duration_d)
 {
   for (size_t i = 0; i < repeats->options.n_dips; i++)
     if (fabs (repeats->options.dip[i].mid_d - mid_d) < 0.5 * fmax (duration_d, repeats->options.dip[i].duration_d))
-      return (ptrdiff_t) i;
-  return -1;
+      return i + 1;
+  return 0;
 }
 
 /* One event: from the crossing fitted to it, or from its box in white noise. den 0: nothing of it is observed. */
@@ -90,7 +90,7 @@ add_events (const AntRepeats *repeats, const AntRepeatFinalist *finalist, AntRep
       repeat->n_observed += event.coverage >= 0.5;
       all = (Sum){ all.num + num, all.den + den };
       parity[j & 1] = (Sum){ parity[j & 1].num + num, parity[j & 1].den + den };
-      if (event.dip < 0)
+      if (!event.dip)
         unlisted = (Sum){ unlisted.num + num, unlisted.den + den };
       if (num > largest.num)
         largest = (Sum){ num, den };
@@ -110,22 +110,32 @@ add_events (const AntRepeats *repeats, const AntRepeatFinalist *finalist, AntRep
       repeat->chi2 += pow ((repeat->event[e].depth_ppm - common) / repeat->event[e].sigma_ppm, 2);
 }
 
+void
+ant_repeat_name_aliases (AntRepeat *repeat)
+{
+  for (size_t k = 0; k < ANT_REPEAT_ALIASES; k++)
+    {
+      AntRepeatAlias *alias = &repeat->alias[k];
+      alias->numerator = alias_ratio[k][0];
+      alias->denominator = alias_ratio[k][1];
+      alias->period_d = repeat->period_d * alias->numerator / alias->denominator;
+    }
+}
+
 /* The best SNR at a simple ratio of the period, over those phases that share events with it. */
 static void
 find_aliases (const AntRepeats *repeats, const AntTrainTrial *trial, AntRepeat *repeat)
 {
   for (size_t k = 0; k < ANT_REPEAT_ALIASES; k++)
     {
-      AntRepeatAlias alias = { .numerator = alias_ratio[k][0], .denominator = alias_ratio[k][1] };
+      AntRepeatAlias *alias = &repeat->alias[k];
       AntTrainTrial other = *trial;
-      other.period = trial->period * alias.numerator / alias.denominator;
-      alias.period_d = other.period * repeats->series.step_d;
-      for (int j = 0; j < alias.numerator; j++)
+      other.period = trial->period * alias->numerator / alias->denominator;
+      for (int j = 0; j < alias->numerator; j++)
         {
           other.mid = trial->mid + j * trial->period;
-          alias.snr = fmax (alias.snr, ant_repeat_train_snr (&repeats->side[0].train, &other, 0));
+          alias->snr = fmax (alias->snr, ant_repeat_train_snr (&repeats->side[0].train, &other, 0));
         }
-      repeat->alias[k] = alias;
     }
 }
 
@@ -147,6 +157,7 @@ ant_repeats_report (const AntRepeats *repeats, const AntRepeatFinalist *finalist
   for (size_t e = 0; e < repeat->n_events; e++)
     repeat->event[e].number -= middle;
   repeat->expected_false = ant_repeat_chance_expected (&repeats->chance, repeat->snr);
+  ant_repeat_name_aliases (repeat);
   find_aliases (repeats, trial, repeat);
   return ANT_OK;
 }

@@ -12,8 +12,6 @@
 #include "search/repeat-pairs.h"
 #include "search/repeat-tree.h"
 
-#define ANT_REPEAT_FLOOR 16.0 /* SNR^2 below which bins stay empty */
-
 typedef struct
 {
   const AntRepeatEdges *edges; /* borrowed */

@@ -44,7 +44,7 @@ typedef struct
   double depth_ppm, sigma_ppm, snr;
   double coverage;           /* observed part of its energy */
   long number;               /* event 0 is the one at epoch_d */
-  ptrdiff_t dip;             /* of the known single dips, or -1 */
+  size_t dip;                /* which of the known single dips this is, from 1; 0: none */
 } AntRepeatEvent;
 
 typedef struct
@@ -70,6 +70,9 @@ typedef struct
   AntRepeatEvent *event;     /* [n_events] by time */
   AntRepeatAlias alias[ANT_REPEAT_ALIASES];
 } AntRepeat;
+
+/* Set numerator, denominator and period of the aliases of a period; their SNRs stay. */
+void ant_repeat_name_aliases (AntRepeat *repeat);
 
 typedef struct _AntRepeats AntRepeats;
 

@@ -7,6 +7,7 @@
 #include "writers/dip-table.h"
 #include "writers/flags-table.h"
 #include "writers/passage-table.h"
+#include "writers/repeat-table.h"
 #include "writers/scan-tables.h"
 #include "writers/series-table.h"
 
@@ -18,6 +19,8 @@ static const struct
   [ANT_RESULT_DIPS] = { "dips", FALSE, TRUE },
   [ANT_RESULT_BRIGHTENINGS] = { "brightenings", FALSE, TRUE },
   [ANT_RESULT_PASSAGES] = { "passages", FALSE, TRUE },
+  [ANT_RESULT_REPEATS] = { "repeats", FALSE, TRUE },
+  [ANT_RESULT_PERIODS] = { "periods", FALSE, FALSE },
   [ANT_RESULT_SERIES] = { "series", TRUE, FALSE },
 };
 
@@ -103,6 +106,8 @@ ant_result_table_new (AntResultTable which, const AntScanResults *results)
     case ANT_RESULT_DIPS: return list_table (results, FALSE);
     case ANT_RESULT_BRIGHTENINGS: return list_table (results, TRUE);
     case ANT_RESULT_PASSAGES: return ant_passage_table_new (results);
+    case ANT_RESULT_REPEATS: return ant_repeat_table_new (results);
+    case ANT_RESULT_PERIODS: return ant_period_table_new (results);
     case ANT_RESULT_SERIES: return ant_series_table_new (results);
     case ANT_N_RESULT_TABLES: break;
     }

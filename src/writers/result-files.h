@@ -8,7 +8,7 @@
 /* CSV is always written. */
 typedef struct
 {
-  gboolean fits, votable; /* the tables of dips, brightenings and passages so too; fits: the mask of flags likewise */
+  gboolean fits, votable; /* the tables of dips, brightenings, passages and repeats so too; fits: those of periods and flags likewise */
   gboolean series;        /* the detrended series as well */
 } AntResultChoice;
 
@@ -26,6 +26,8 @@ typedef enum
   ANT_RESULT_DIPS,
   ANT_RESULT_BRIGHTENINGS,
   ANT_RESULT_PASSAGES,
+  ANT_RESULT_REPEATS,
+  ANT_RESULT_PERIODS,
   ANT_RESULT_SERIES,
   ANT_N_RESULT_TABLES,
 } AntResultTable;

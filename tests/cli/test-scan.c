@@ -6,7 +6,7 @@
 #include <string.h>
 #include <unistd.h>
 
-static const char *const tables[] = { "dips.csv", "brightenings.csv", "passages.csv", "floor.csv", "spectrum.csv", "chunks.csv", "flags.csv" };
+static const char *const tables[] = { "dips.csv", "brightenings.csv", "passages.csv", "repeats.csv", "periods.csv", "floor.csv", "spectrum.csv", "chunks.csv", "flags.csv" };
 
 typedef struct
 {

@@ -295,7 +295,7 @@ test_known_dips (void)
   size_t named = 0;
   g_assert_cmpuint (ant_repeats_list (repeats, &repeat), ==, 1);
   for (size_t e = 0; e < repeat->n_events; e++)
-    named += repeat->event[e].dip == 0;
+    named += repeat->event[e].dip == 1;
   g_assert_cmpuint (named, ==, 1);
   g_assert_cmpfloat (repeat->snr_unlisted, <, repeat->snr);
   g_assert_cmpfloat (repeat->snr_unlisted, >, 0.8 * repeat->snr);
