@@ -38,7 +38,7 @@ marks_of (const AntReport *report)
     {
       const AntDip *dip = &results->dip[i];
       marks[i] = (AntDipMark) { dip->mid_d, dip->duration_d, dip->depth_ppm, (unsigned) i + 1,
-                                ant_dip_look_of (report->word ? report->word[i].class : ANT_CLASS_UNDECIDED) };
+                                ant_dip_look_of (ant_report_class (report, i)) };
     }
   return marks;
 }

@@ -22,6 +22,9 @@ void ant_report_settings (const AntReport *report, AntPages *pages);     /* sett
 
 /* The dips (or brightenings) as a table. */
 void ant_report_list (const AntReport *report, AntPages *pages, gboolean brightenings);
-const char *ant_report_class_title (const AntReport *report, gsize dip);
+/* What a dip is taken for: the analyst's word, else the program's. */
+AntDipClass ant_report_class (const AntReport *report, gsize dip);
+/* "planet-shaped, 97 %", "spot (analyst)". Caller frees. */
+char *ant_report_verdict_words (const AntReport *report, gsize dip);
 /* The last part of a record's path. Caller frees. */
 char *ant_report_record_name (const AntRecord *record);

@@ -66,7 +66,7 @@ ant_report_list (const AntReport *report, AntPages *pages, gboolean brightenings
       g_ptr_array_add (cells, ant_chance_words (dip->expected_false));
       g_ptr_array_add (cells, g_strdup_printf (_("%.0f %%"), 100 * dip->coverage));
       if (!brightenings)
-        g_ptr_array_add (cells, g_strdup (ant_report_class_title (report, i)));
+        g_ptr_array_add (cells, ant_report_verdict_words (report, i));
     }
   ant_pages_table (pages, ANT_PAGES_BODY, G_N_ELEMENTS (columns) - (brightenings ? 1 : 0), columns, n, (const char *const *) cells->pdata);
 }

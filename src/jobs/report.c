@@ -4,6 +4,7 @@
 #include <glib/gi18n.h>
 
 #include "config.h"
+#include "data/verdict-words.h"
 #include "jobs/report-private.h"
 
 static void (*const sections[]) (const AntReport *report, AntPages *pages) = {
@@ -19,10 +20,26 @@ ant_report_record_name (const AntRecord *record)
   return g_filename_display_basename (record->path);
 }
 
-const char *
-ant_report_class_title (const AntReport *report, gsize dip)
+AntDipClass
+ant_report_class (const AntReport *report, gsize dip)
 {
-  return ant_dip_class_title (report->word ? report->word[dip].class : ANT_CLASS_UNDECIDED);
+  const AntVerdict *verdict = report->results->dip_verdict;
+  if (report->word && report->word[dip].class != ANT_CLASS_UNDECIDED)
+    return report->word[dip].class;
+  return verdict ? ant_verdict_class (&verdict[dip]) : ANT_CLASS_UNDECIDED;
+}
+
+char *
+ant_report_verdict_words (const AntReport *report, gsize dip)
+{
+  const AntVerdict *verdict = report->results->dip_verdict;
+  const char *title = ant_dip_class_title (ant_report_class (report, dip));
+  if (report->word && report->word[dip].class != ANT_CLASS_UNDECIDED)
+    return g_strdup_printf (_("%s (analyst)"), title);
+  if (!verdict || ant_verdict_class (&verdict[dip]) == ANT_CLASS_UNDECIDED)
+    return g_strdup (title);
+  g_autofree char *probability = ant_probability_words (ant_verdict_probability (&verdict[dip]));
+  return g_strdup_printf ("%s, %s", title, probability);
 }
 
 GBytes *

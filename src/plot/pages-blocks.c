@@ -215,6 +215,19 @@ table_header (const Table *table)
   table->pages->y += ROW_AIR / 2;
 }
 
+double
+ant_pages_table_height (AntPages *pages, AntPagesStyle style, gsize n_columns, const AntPagesColumn *column, gsize n_rows,
+                        const char *const *cell)
+{
+  g_autofree double *width = g_new (double, n_columns);
+  Table table = { pages, style == ANT_PAGES_SMALL ? FACE_SMALL : FACE_BODY, n_columns, column, width };
+  double height = ROW_AIR / 2 + PARAGRAPH;
+  share_width (&table, n_rows, cell);
+  for (gsize row = 0; row < n_rows; row++)
+    height += table_row (&table, cell + row * n_columns, ANT_N_ROLES) * (row == 0 ? 2 : 1); /* the header is as high as a row of one line */
+  return height;
+}
+
 void
 ant_pages_table (AntPages *pages, AntPagesStyle style, gsize n_columns, const AntPagesColumn *column, gsize n_rows, const char *const *cell)
 {

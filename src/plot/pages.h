@@ -67,6 +67,10 @@ typedef struct
 /* cell [n_rows][n_columns]. The header stands again on every page; columns are as wide as they need, the widest give way. */
 void ant_pages_table (AntPages *pages, AntPagesStyle style, gsize n_columns, const AntPagesColumn *column, gsize n_rows, const char *const *cell);
 
+/* How high it would be on one page. */
+double ant_pages_table_height (AntPages *pages, AntPagesStyle style, gsize n_columns, const AntPagesColumn *column, gsize n_rows,
+                               const char *const *cell);
+
 guint ant_pages_count (const AntPages *pages); /* so far */
 /* The document. NULL with one sentence (ANT_ERROR_WRITE). */
 GBytes *ant_pages_finish (AntPages *pages, GError **error);
