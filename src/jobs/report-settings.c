@@ -15,31 +15,36 @@ tell_changes (const AntSettings *settings, AntPages *pages)
       double value = ant_setting_get (setting, settings);
       g_autofree char *text = ant_setting_format (setting, value);
       if (ant_setting_matters (setting) && value != setting->fallback)
-        g_string_append_printf (changed, "%s%s = %s%s%s", changed->len ? "; " : "", setting->key, text, *setting->unit ? " " : "", setting->unit);
+        g_string_append_printf (changed, "%s%s = %s%s%s", changed->len ? "; " : "", setting->key, text, *setting->unit ? " " : "",
+                                setting->unit);
     }
   g_autofree char *line = changed->len ? g_strdup_printf (_("Changed from their defaults: %s."), changed->str) : g_strdup (_("All have their defaults."));
   ant_pages_text (pages, ANT_PAGES_BODY, line);
 }
 
+/* "9 h (default 13)": the default stands beside what was changed. */
+static char *
+value_words (const AntSetting *setting, double value)
+{
+  g_autofree char *text = ant_setting_format (setting, value), *fallback = ant_setting_format (setting, setting->fallback);
+  const char *blank = *setting->unit ? " " : "";
+  return value == setting->fallback ? g_strdup_printf ("%s%s%s", text, blank, setting->unit)
+                                    : g_strdup_printf (_("%s%s%s (default %s)"), text, blank, setting->unit, fallback);
+}
+
 static void
 tell_all (const AntSettings *settings, AntPages *pages)
 {
-  const AntPagesColumn columns[] = { { _("Setting"), 0 }, { _("Value"), 1 }, { _("Unit"), 0 }, { _("Default"), 1 }, { _("Meaning"), 0 } };
-  g_autoptr (GPtrArray) cells = g_ptr_array_new_with_free_func (g_free);
-  gsize n = 0;
+  g_autoptr (GPtrArray) facts = g_ptr_array_new_with_free_func (ant_fact_free);
   for (gsize i = 0; i < ant_n_settings; i++)
     {
       const AntSetting *setting = &ant_setting_table[i];
-      if (!ant_setting_matters (setting))
-        continue;
-      g_ptr_array_add (cells, g_strdup (setting->key));
-      g_ptr_array_add (cells, ant_setting_format (setting, ant_setting_get (setting, settings)));
-      g_ptr_array_add (cells, g_strdup (setting->unit));
-      g_ptr_array_add (cells, ant_setting_format (setting, setting->fallback));
-      g_ptr_array_add (cells, g_strdup (_ (setting->help)));
-      n++;
+      g_autofree char *value = value_words (setting, ant_setting_get (setting, settings));
+      if (ant_setting_matters (setting))
+        ant_facts_add (facts, setting->key, value);
     }
-  ant_pages_table (pages, ANT_PAGES_SMALL, G_N_ELEMENTS (columns), columns, n, (const char *const *) cells->pdata);
+  ant_pages_facts (pages, facts, 2);
+  ant_pages_text (pages, ANT_PAGES_QUIET, _("“antumbra-cli settings” tells what each of them means; 0 often stands for “found from the record”."));
 }
 
 static void
@@ -60,7 +65,7 @@ tell_origin (const AntRecord *record, AntPages *pages)
 void
 ant_report_settings (const AntReport *report, AntPages *pages)
 {
-  ant_pages_heading (pages, 1, _("Settings"), 130);
+  ant_pages_heading (pages, 1, _("Settings"), 210); /* all of it */
   tell_changes (&report->results->settings, pages);
   tell_all (&report->results->settings, pages);
   tell_origin (report->results->record, pages);

@@ -9,7 +9,7 @@
 #define INDENT 10.0
 #define COLUMN_GAP 22.0
 #define LABEL_GAP 10.0
-#define LABEL_SHARE 0.42 /* of a column of facts, at most */
+#define LABEL_SHARE 0.46 /* of a column of facts, at most */
 #define FIGURE_SHARE 0.56
 #define CELL_GAP 9.0
 #define CELL_AIR 16.0 /* by which a column of a table may grow */
