@@ -10,6 +10,7 @@
 #define DIPS_A_PAGE 3
 #define JUDGED_A_PAGE 2 /* with their evidence */
 #define MOST_EVIDENCE 7
+#define CLOSEUP_LEAST 150
 #define HEADING 30 /* with the air around it */
 
 typedef struct
@@ -77,7 +78,8 @@ tell_dip (const AntReport *report, AntPages *pages, gsize i)
   gsize n_evidence = evidence ? evidence->len / 2 : 0;
   const char *const *cells = n_evidence ? (const char *const *) evidence->pdata : NULL;
   double below = n_evidence ? ant_pages_table_height (pages, ANT_PAGES_SMALL, 2, columns, n_evidence, cells) : 0;
-  double height = floor (ant_pages_share (pages, n_evidence ? JUDGED_A_PAGE : DIPS_A_PAGE) - HEADING - below);
+  double most = ant_pages_share (pages, n_evidence ? JUDGED_A_PAGE : DIPS_A_PAGE) - HEADING - below;
+  double height = floor (ant_pages_fit (pages, HEADING + below, CLOSEUP_LEAST, most));
   tell_verdict (report, i, facts);
   ant_pages_heading (pages, 2, title, height + below);
   ant_pages_figure_facts (pages, height, paint, &drawing, facts);

@@ -41,14 +41,16 @@ def filled(path, page):
     return (max(inked) - top) / (foot - top) if inked else 0
 
 
+def scan(folder, out, paper):
+    said(os.environ["ANT_CLI"], "scan", folder / "record.csv", "--out", folder / out, "--set", "paper=" + paper)
+
+
 def check(checks, folder, n_dips):
-    cli, name = os.environ["ANT_CLI"], "%d planted" % n_dips
+    name = "%d planted" % n_dips
     (folder / "small.recipe").write_text(recipe(n_dips))
-    said(cli, "simulate", folder / "small.recipe", "--out", folder / "record.csv", "--force")
-    for out, paper in (("one", "A4"), ("two", "A4"), ("letter", "letter")):
-        said(cli, "scan", folder / "record.csv", "--out", folder / out, "--set", "paper=" + paper)
+    said(os.environ["ANT_CLI"], "simulate", folder / "small.recipe", "--out", folder / "record.csv", "--force")
+    scan(folder, "one", "A4")
     path = folder / "one" / "report.pdf"
-    checks.within("%s: two reports have the same bytes: differ" % name, path.read_bytes() != (folder / "two" / "report.pdf").read_bytes(), 0)
     fonts = [line.split() for line in said("pdffonts", path).split("\n")[2:] if line]
     checks.within("%s: every font is embedded: not" % name, sum(line[-5] != "yes" for line in fonts) + (not fonts), 0)
     text, info = said("pdftotext", "-layout", path, "-"), said("pdfinfo", path)
@@ -63,21 +65,32 @@ def check(checks, folder, n_dips):
     checks.within("%s: the headings are in the outline: missing" % name, sum(h not in outline for h in HEADINGS), 0)
     pages = int(re.search(r"Pages:\s+(\d+)", info).group(1))
     checks.within("%s: every page is numbered: missing" % name, sum("%d of %d" % (p, pages) not in text for p in range(1, pages + 1)), 0)
-    for out in ("one", "letter"):
-        report = folder / out / "report.pdf"
-        n = int(re.search(r"Pages:\s+(\d+)", said("pdfinfo", report)).group(1))
-        emptiest = min(filled(report, p) for p in range(1, n))
-        checks.within("%s, %s: no page but the last is half empty: emptiest part" % (name, out), 1 - emptiest, 0.5)
-    checks.within("%s: A4 is A4, letter is letter: not" % name,
-                  ("595.276 x 841.89" not in info) + ("612 x 792" not in said("pdfinfo", folder / "letter" / "report.pdf")), 0)
+    checks.within("%s: A4 is A4: not" % name, "595.276 x 841.89" not in info, 0)
+    check_filled(checks, name, path)
+
+
+def check_filled(checks, name, report):
+    n = int(re.search(r"Pages:\s+(\d+)", said("pdfinfo", report)).group(1))
+    checks.within("%s: no page but the last is half empty: emptiest part" % name, 1 - min(filled(report, p) for p in range(1, n)), 0.5)
+
+
+def check_again(checks, folder):
+    scan(folder, "two", "A4")
+    scan(folder, "letter", "letter")
+    one, two, letter = (folder / out / "report.pdf" for out in ("one", "two", "letter"))
+    checks.within("two reports have the same bytes: differ", one.read_bytes() != two.read_bytes(), 0)
+    checks.within("letter is letter: not", "612 x 792" not in said("pdfinfo", letter), 0)
+    check_filled(checks, "on letter paper", letter)
 
 
 def main():
     os.environ["SOURCE_DATE_EPOCH"] = "2240000000"
     checks = Checks()
-    for n_dips in (0, 1, 20):
+    for n_dips in (0, 1, 13):
         with tempfile.TemporaryDirectory() as folder:
             check(checks, pathlib.Path(folder), n_dips)
+            if n_dips > 1:
+                check_again(checks, pathlib.Path(folder))
     checks.end()
 
 
