@@ -99,6 +99,28 @@ ant_sky_job_curve (const AntObserverChoice *choice, const AntSettings *settings,
 }
 
 gboolean
+ant_sky_job_path (const AntObserverChoice *choice, const AntSettings *settings, const AntSkyEvent *event, gsize n,
+                  double *east, double *north, GError **error)
+{
+  AntWatch watch;
+  AntLook look;
+  AntStatus status = ANT_OK;
+  double step_d = (event->end_tt_d - event->start_tt_d) / (double) (n - 1);
+  ant_watch_init (&watch, event->body, &choice->observer, (AntRadiiSet) settings->radii);
+  G_LOCK (lane);
+  for (gsize i = 0; i < n && !status; i++)
+    {
+      status = ant_watch_look (&watch, MIN (event->start_tt_d + (double) i * step_d, event->end_tt_d), &look);
+      if (status)
+        break;
+      east[i] = look.east / look.sun_radius;
+      north[i] = look.north / look.sun_radius;
+    }
+  G_UNLOCK (lane);
+  return ant_status_to_error (status, _("following a body before the Sun"), error);
+}
+
+gboolean
 ant_sky_job_measure (const AntRecord *record, const AntObserverChoice *choice, const AntSettings *settings,
                      AntSighting *sighting, GError **error)
 {

@@ -19,6 +19,9 @@ GArray *ant_sky_job_sightings (const AntRecord *record, const AntObserverChoice 
 /* The predicted loss of an event against time; clear it. */
 gboolean ant_sky_job_curve (const AntObserverChoice *choice, const AntSettings *settings, const AntSkyEvent *event,
                             AntSkyCurve *curve, GError **error);
+/* The body's way before the Sun at n even times from the event's start to its end: the centre's offset in solar radii. */
+gboolean ant_sky_job_path (const AntObserverChoice *choice, const AntSettings *settings, const AntSkyEvent *event, gsize n,
+                           double *east, double *north, GError **error);
 /* Measure what the record shows of one: the predicted shape under the record's noise, only its depth free. Fills the second
  * half of the sighting. The Earth's shadow is only looked at, not measured. */
 gboolean ant_sky_job_measure (const AntRecord *record, const AntObserverChoice *choice, const AntSettings *settings,
