@@ -15,8 +15,8 @@ ant_sky_event_title (const AntSkyEvent *event)
     {
     case ANT_BODY_MERCURY: return _("Mercury before the Sun");
     case ANT_BODY_VENUS: return _("Venus before the Sun");
-    case ANT_BODY_MOON: return _("the Moon before the Sun");
-    default: return _("in the Earth's shadow");
+    case ANT_BODY_MOON: return _("Moon before the Sun");
+    default: return _("In the Earth's shadow");
     }
 }
 
@@ -110,6 +110,39 @@ ant_sighting_words (const AntSighting *sighting)
       return g_strdup_printf (_("no evidence either way, the observer's place is not known: %s"), measured);
     default: return g_strdup (_("not looked at"));
     }
+}
+
+static void
+add_time (GPtrArray *facts, const char *label, double tt_d, const AntSkyEvent *event)
+{
+  g_autofree char *text = ant_sky_time_text (tt_d, event->uncertain);
+  ant_facts_add (facts, label, text);
+}
+
+static void
+add_number (GPtrArray *facts, const char *label, double number, int decimals, const char *unit)
+{
+  g_autofree char *figures = ant_number_words (number, decimals), *text = g_strdup_printf ("%s%s", figures, unit);
+  ant_facts_add (facts, label, text);
+}
+
+GPtrArray *
+ant_sighting_facts (const AntSighting *sighting)
+{
+  const AntSkyEvent *event = &sighting->event;
+  GPtrArray *facts = g_ptr_array_new_with_free_func (ant_fact_free);
+  if (event->uncertain)
+    ant_facts_add (facts, _("Certainty"), event->possible ? _("possible") : _("likely; times are to the hour"));
+  add_time (facts, _("Contact I (UTC)"), event->contact_tt_d[ANT_CONTACT_1], event);
+  add_time (facts, _("Contact II"), event->contact_tt_d[ANT_CONTACT_2], event);
+  add_time (facts, _("Greatest"), event->greatest_tt_d, event);
+  add_time (facts, _("Contact III"), event->contact_tt_d[ANT_CONTACT_3], event);
+  add_time (facts, _("Contact IV"), event->contact_tt_d[ANT_CONTACT_4], event);
+  add_number (facts, _("Least separation"), event->separation_arcsec, 1, "\"");
+  add_number (facts, _("Impact"), event->impact, 4, "");
+  add_number (facts, _("Radius ratio"), event->radius_ratio, 5, "");
+  add_number (facts, _("Expected depth"), event->depth_ppm, 1, _(" ppm"));
+  return facts;
 }
 
 const char *

@@ -2,6 +2,7 @@
 #pragma once
 
 #include <glib.h>
+#include "data/dip-words.h"
 #include "data/observer-choice.h"
 #include "data/sighting.h"
 
@@ -18,6 +19,8 @@ char *ant_sky_clock_text (double tt_d, double day_tt_d, gboolean hour);
 const char *ant_shown_name (AntShown shown);
 /* What the record shows of an event, one sentence without a full stop. Caller frees. */
 char *ant_sighting_words (const AntSighting *sighting);
+/* What is predicted of an event, as AntFact. Caller unrefs. */
+GPtrArray *ant_sighting_facts (const AntSighting *sighting);
 /* Never look at the Sun ...: translated, static. */
 const char *ant_sky_caution (void);
 /* Days of TT from J2000.0 that a person typed: ISO 8601 (UTC unless it says otherwise) or a JD. FALSE with one sentence. */

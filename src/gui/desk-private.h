@@ -49,6 +49,15 @@ struct _AntDesk
   GCancellable *snr_stop;   /* owned; NULL: nothing is being computed */
   double snr_done;
 
+  /* The sky over the record */
+  AntObserverChoice *observer; /* owned */
+  AntSkyList *sky;          /* owned; NULL: none yet */
+  char *sky_said;           /* owned */
+  GCancellable *sky_stop;   /* owned; NULL: nothing is being worked out */
+  gboolean sky_wanted;      /* somebody has looked */
+  gsize sky_selected;
+  GArray *ticks;            /* of double: predicted contacts */
+
   AntDepthUnit unit;
   int average;
   guint shown;
@@ -64,4 +73,7 @@ void ant_desk_begin_views (AntDesk *self);
 void ant_desk_follow_snr (AntDesk *self);
 void ant_desk_drop_snr (AntDesk *self);
 void ant_desk_bring_into_view (AntDesk *self, const AntDip *dip);
+/* Work out the sky over the record anew. */
+void ant_desk_follow_sky (AntDesk *self);
+void ant_desk_drop_sky (AntDesk *self);
 AntSpan ant_desk_whole (AntDesk *self);

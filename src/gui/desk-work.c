@@ -110,7 +110,10 @@ opened_cb (GObject *source, GAsyncResult *result, gpointer data)
       return;
     }
   if (layers)
-    take_record (self, layers);
+    {
+      take_record (self, layers);
+      ant_desk_follow_sky (self);
+    }
   ant_desk_tell (self, layers ? ANT_DESK_EVERYTHING : ANT_DESK_BUSY);
   if (!layers)
     ant_desk_fail (self, error->message);

@@ -82,22 +82,36 @@ ant_desk_get_settings (AntDesk *self)
   return &self->settings;
 }
 
+/* The sky goes by the radii and the limb darkening. */
+static void
+settings_changed (AntDesk *self, const AntSettings *was)
+{
+  gboolean another_sky = was->radii != self->settings.radii
+                         || was->bank.limb_darkening.u1 != self->settings.bank.limb_darkening.u1
+                         || was->bank.limb_darkening.u2 != self->settings.bank.limb_darkening.u2;
+  if (another_sky)
+    ant_desk_follow_sky (self);
+  ant_desk_tell (self, another_sky ? ANT_DESK_SETTINGS | ANT_DESK_SKY : ANT_DESK_SETTINGS);
+}
+
 gboolean
 ant_desk_set_setting (AntDesk *self, const AntSetting *setting, const char *text, GError **error)
 {
   double before = ant_setting_get (setting, &self->settings);
+  AntSettings was = self->settings;
   if (!ant_setting_set_text (setting, &self->settings, text, error))
     return FALSE;
   if (ant_setting_get (setting, &self->settings) != before)
-    ant_desk_tell (self, ANT_DESK_SETTINGS);
+    settings_changed (self, &was);
   return TRUE;
 }
 
 void
 ant_desk_reset_settings (AntDesk *self)
 {
+  AntSettings was = self->settings;
   ant_settings_init (&self->settings);
-  ant_desk_tell (self, ANT_DESK_SETTINGS);
+  settings_changed (self, &was);
 }
 
 AntDipItem *
@@ -257,6 +271,7 @@ ant_desk_dispose (GObject *object)
   AntDesk *self = ANT_DESK (object);
   ant_desk_abandon (self);
   ant_desk_drop_snr (self);
+  ant_desk_drop_sky (self);
   g_clear_object (&self->selected);
   g_ptr_array_set_size (self->mark_items, 0);
   g_list_store_remove_all (self->items);
@@ -270,6 +285,8 @@ ant_desk_finalize (GObject *object)
   g_clear_object (&self->stop);
   g_object_unref (self->items);
   g_array_unref (self->marks);
+  g_array_unref (self->ticks);
+  ant_observer_choice_unref (self->observer);
   g_ptr_array_unref (self->mark_items);
   ant_judgements_free (self->judgements);
   ant_scan_results_unref (self->results);
@@ -296,6 +313,9 @@ ant_desk_init (AntDesk *self)
   self->items = g_list_store_new (ANT_TYPE_DIP_ITEM);
   self->marks = g_array_new (FALSE, TRUE, sizeof (AntDipMark));
   self->mark_items = g_ptr_array_new ();
+  self->ticks = g_array_new (FALSE, TRUE, sizeof (double));
+  self->observer = ant_observer_choice_new_earth ();
+  self->sky_selected = ANT_NO_EVENT;
   self->judgements = ant_judgements_new ();
   self->shown = ANT_KIND_DIP | ANT_KIND_ASKED;
   self->pointer_d = NAN;

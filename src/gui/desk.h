@@ -10,7 +10,9 @@
 #include "data/dip-words.h"
 #include "gui/dip-item.h"
 #include "jobs/layers.h"
+#include "jobs/observer-task.h"
 #include "jobs/scan-task.h"
+#include "jobs/sky-list.h"
 #include "jobs/snr-task.h"
 #include "plot/view.h"
 
@@ -26,8 +28,9 @@ typedef enum
   ANT_DESK_POINTER = 1 << 7,   /* time under the pointer, or span being drawn */
   ANT_DESK_LOOK = 1 << 8,      /* units, averages, which kinds are shown */
   ANT_DESK_SNR = 1 << 9,       /* the dip SNR against time: shown or not, of which duration, computed */
+  ANT_DESK_SKY = 1 << 14,      /* who watched, what crossed the Sun, which of it is selected */
 } AntDeskChange;
-#define ANT_DESK_EVERYTHING ((AntDeskChange) 0x3ff)
+#define ANT_DESK_EVERYTHING ((AntDeskChange) 0xffff)
 
 typedef enum
 {
@@ -114,3 +117,16 @@ void ant_desk_set_snr_duration (AntDesk *self, double duration_d); /* 0: that of
 double ant_desk_get_snr_duration (AntDesk *self); /* of what is shown, else of what will be */
 const AntSnrStrip *ant_desk_get_snr (AntDesk *self);    /* NULL: none yet. Borrowed */
 double ant_desk_get_snr_progress (AntDesk *self);       /* 0..1 while it is being computed, else -1 */
+
+/* The sky over the record, predicted as soon as there is one. The observer is chosen once, for all that is done here. */
+#define ANT_NO_EVENT ((gsize) -1)
+const AntObserverChoice *ant_desk_get_observer (AntDesk *self);
+void ant_desk_set_observer (AntDesk *self, const char *text); /* as of --observer; "failed" if it cannot be */
+const AntSkyList *ant_desk_get_sky (AntDesk *self);  /* NULL: none yet */
+const char *ant_desk_get_sky_said (AntDesk *self);   /* why there is none, or NULL */
+gboolean ant_desk_is_watching (AntDesk *self);       /* it is being worked out */
+void ant_desk_measure_sky (AntDesk *self);           /* somebody looks: what the record shows of each event is wanted */
+gsize ant_desk_get_sky_selected (AntDesk *self);     /* or ANT_NO_EVENT */
+void ant_desk_select_sky (AntDesk *self, gsize index); /* brings it into view */
+/* Predicted contacts, days, for the time stack; valid until the next change. */
+gsize ant_desk_get_ticks (AntDesk *self, const double **tick_d);

@@ -334,7 +334,7 @@ ant_strip_view_class_init (AntStripViewClass *klass)
   AntPlotViewClass *plot_class = ANT_PLOT_VIEW_CLASS (klass);
   G_OBJECT_CLASS (klass)->finalize = ant_strip_view_finalize;
   plot_class->watches = ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT
-                        | ANT_DESK_LOOK | ANT_DESK_SNR;
+                        | ANT_DESK_LOOK | ANT_DESK_SNR | ANT_DESK_SKY;
   plot_class->paint = ant_strip_view_paint;
   plot_class->overlay = ant_strip_view_overlay;
   plot_class->describe = ant_strip_view_describe;

@@ -5,6 +5,7 @@
 #include "gui/noise-page.h"
 #include "gui/record-page.h"
 #include "gui/settings-panel.h"
+#include "gui/sky-page.h"
 #include "gui/time-stack.h"
 #include "gui/window.h"
 
@@ -27,6 +28,7 @@ struct _AntWindow
   AntRecordPage *record_page;
   AntNoisePage *noise_page;
   AntDipsPage *dips_page;
+  AntSkyPage *sky_page;
   GtkRevealer *settings_revealer;
   AntSettingsPanel *settings_panel;
 

@@ -220,6 +220,21 @@ draw_line (AntPen *pen, const AntBox *area, const AntView *view, double level)
   cairo_restore (pen->cr);
 }
 
+/* Short marks from both edges: they say when something should have happened without covering what did. */
+static void
+draw_ticks (AntPen *pen, const AntBox *area, const AntStrip *strip, const AntView *view)
+{
+  double length = MIN (0.6 * pen->theme->font_px, area->height / 4);
+  ant_pen_colour (pen, ANT_ROLE_TEXT);
+  for (size_t i = 0; i < strip->n_ticks; i++)
+    if (strip->tick_d[i] >= view->from && strip->tick_d[i] <= view->to)
+      {
+        double x = ant_view_x (view, area, strip->tick_d[i]);
+        ant_pen_down (pen, x, area->y, area->y + length);
+        ant_pen_down (pen, x, area->y + area->height - length, area->y + area->height);
+      }
+}
+
 /* Ticks of the labels' own unit, brought back to the values'. */
 static void
 value_ticks (AntPen *pen, const AntBox *area, const AntStrip *strip, const AntView *view, AntTicks *ticks)
@@ -258,6 +273,7 @@ ant_strip_paint (cairo_t *cr, const AntBox *box, const AntStrip *strip, const An
   if (strip->curve)
     ant_strip_data_curve (&pen, &area, &data, view);
   draw_line (&pen, &area, view, strip->line);
+  draw_ticks (&pen, &area, strip, view);
   cairo_restore (cr);
 
   ant_axes_bottom (&pen, &area, view, &x, strip->time_axis);

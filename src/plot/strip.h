@@ -28,6 +28,8 @@ typedef struct
   size_t n_dips;
   const AntDipMark *dip;
   size_t selected;               /* index, or ANT_NO_DIP */
+  size_t n_ticks;
+  const double *tick_d;          /* times to mark at the edges: predicted contacts */
   int brackets;                  /* nonzero: bracket and number the dips; else only the selected one's wash */
   int time_axis;                 /* nonzero: this strip carries the labels of time */
 } AntStrip;

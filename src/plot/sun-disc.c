@@ -83,6 +83,7 @@ draw_way (AntPen *pen, const Place *place, const AntSunDisc *disc)
   cairo_set_line_width (pen->cr, pen->theme->trace_px);
   if (disc->uncertain)
     cairo_set_dash (pen->cr, dashes, 2, 0);
+  cairo_new_path (pen->cr);
   for (size_t i = 0; i < disc->n; i++)
     cairo_line_to (pen->cr, x_of (place, disc->east[i]), y_of (place, disc->north[i]));
   cairo_stroke (pen->cr);
