@@ -141,8 +141,8 @@ keep_in_memory (AntByteSource *source, GCancellable *cancellable, GError **error
 }
 
 gboolean
-ant_netcdf_reader_read (AntByteSource *source, const AntReadingChoices *choices, GCancellable *cancellable, AntRecord *record,
-                        GError **error)
+ant_netcdf_reader_read (AntByteSource *source, const AntReadingChoices *choices, const AntSliceRunner *runner,
+                        GCancellable *cancellable, AntRecord *record, GError **error)
 {
   const char *path = ant_byte_source_path (source);
   int file = path ? open (path, O_RDONLY | O_CLOEXEC) : keep_in_memory (source, cancellable, error);

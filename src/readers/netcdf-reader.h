@@ -6,5 +6,5 @@
 
 gboolean ant_netcdf_reader_sniff (const guint8 *head, gsize n);
 /* Everything but path and SHA-256, which the registry sets. Packed files and pipes are first kept in memory. */
-gboolean ant_netcdf_reader_read (AntByteSource *source, const AntReadingChoices *choices, GCancellable *cancellable,
-                                 AntRecord *record, GError **error);
+gboolean ant_netcdf_reader_read (AntByteSource *source, const AntReadingChoices *choices, const AntSliceRunner *runner,
+                                 GCancellable *cancellable, AntRecord *record, GError **error);
