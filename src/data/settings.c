@@ -152,7 +152,8 @@ ant_settings_grid (const AntSettings *settings)
 gboolean
 ant_setting_matters (const AntSetting *setting)
 {
-  return !g_str_equal (setting->key, "threads") && !g_str_equal (setting->key, "paper");
+  return !g_str_equal (setting->key, "threads") && !g_str_equal (setting->key, "paper")
+         && !g_str_equal (setting->key, "witness-drift");
 }
 
 const AntSetting *

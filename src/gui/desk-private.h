@@ -58,6 +58,12 @@ struct _AntDesk
   gsize sky_selected;
   GArray *ticks;            /* of double: predicted contacts */
 
+  /* The witness */
+  char *witness_path, *witness_of;  /* owned; its file, and that of the record it was opened beside; NULL: none */
+  AntWitnessStrips *witness;        /* owned; NULL: none yet */
+  GCancellable *witness_stop;       /* owned; NULL: nothing is being read */
+  AntWitnessLook witness_look;
+
   AntDepthUnit unit;
   int average;
   guint shown;
@@ -72,6 +78,8 @@ void ant_desk_begin_views (AntDesk *self);
 /* Compute the dip SNR that is wanted now, if it is not there; drop what belongs to other results. */
 void ant_desk_follow_snr (AntDesk *self);
 void ant_desk_drop_snr (AntDesk *self);
+/* Compare anew, or close the witness, where record or settings are others than it was compared with. */
+void ant_desk_follow_witness (AntDesk *self);
 void ant_desk_bring_into_view (AntDesk *self, const AntDip *dip);
 /* Work out the sky over the record anew. */
 void ant_desk_follow_sky (AntDesk *self);

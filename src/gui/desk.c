@@ -18,6 +18,8 @@ ant_desk_tell (AntDesk *self, AntDeskChange what)
 {
   if (what & (ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION))
     ant_desk_follow_snr (self);
+  if (what & (ANT_DESK_RECORD | ANT_DESK_SETTINGS))
+    ant_desk_follow_witness (self);
   g_signal_emit (self, signals[CHANGED], 0, (guint) what);
 }
 
@@ -272,6 +274,7 @@ ant_desk_dispose (GObject *object)
   ant_desk_abandon (self);
   ant_desk_drop_snr (self);
   ant_desk_drop_sky (self);
+  ant_desk_close_witness (self);
   g_clear_object (&self->selected);
   g_ptr_array_set_size (self->mark_items, 0);
   g_list_store_remove_all (self->items);
@@ -320,6 +323,7 @@ ant_desk_init (AntDesk *self)
   self->shown = ANT_KIND_DIP | ANT_KIND_ASKED;
   self->pointer_d = NAN;
   self->snr_wanted_d = ANT_USUAL_SNR_D;
+  self->witness_look = ANT_WITNESS_RATIO;
   self->span = (AntSpan) { NAN, NAN };
   self->progress.stage_left_s = NAN;
   ant_settings_init (&self->settings);

@@ -14,6 +14,7 @@
 #include "jobs/scan-task.h"
 #include "jobs/sky-list.h"
 #include "jobs/snr-task.h"
+#include "jobs/witness-task.h"
 #include "plot/view.h"
 
 typedef enum
@@ -29,6 +30,7 @@ typedef enum
   ANT_DESK_LOOK = 1 << 8,      /* units, averages, which kinds are shown */
   ANT_DESK_SNR = 1 << 9,       /* the dip SNR against time: shown or not, of which duration, computed */
   ANT_DESK_SKY = 1 << 14,      /* who watched, what crossed the Sun, which of it is selected */
+  ANT_DESK_WITNESS = 1 << 13,  /* the witness: another, none, or another look at it */
 } AntDeskChange;
 #define ANT_DESK_EVERYTHING ((AntDeskChange) 0xffff)
 
@@ -130,3 +132,11 @@ gsize ant_desk_get_sky_selected (AntDesk *self);     /* or ANT_NO_EVENT */
 void ant_desk_select_sky (AntDesk *self, gsize index); /* brings it into view */
 /* Predicted contacts, days, for the time stack; valid until the next change. */
 gsize ant_desk_get_ticks (AntDesk *self, const double **tick_d);
+
+/* The witness: another instrument's record beside this one. It stays while the record is read anew, and goes with it. */
+void ant_desk_open_witness (AntDesk *self, const char *path);
+void ant_desk_close_witness (AntDesk *self);
+const char *ant_desk_get_witness_path (AntDesk *self);          /* NULL: none. While it is being read there are no strips */
+const AntWitnessStrips *ant_desk_get_witness (AntDesk *self);   /* NULL: none yet. Borrowed */
+AntWitnessLook ant_desk_get_witness_look (AntDesk *self);
+void ant_desk_set_witness_look (AntDesk *self, AntWitnessLook look);

@@ -8,6 +8,8 @@
 gboolean
 ant_strip_wanted (AntDesk *desk, AntStripKind kind)
 {
+  if (kind == ANT_STRIP_WITNESS)
+    return ant_desk_get_witness_path (desk) != NULL;
   return kind != ANT_STRIP_SNR || ant_desk_get_snr_shown (desk);
 }
 
@@ -30,6 +32,9 @@ ant_strip_title (AntDesk *desk, AntStripKind kind)
       g_autofree char *length = ant_length_words (ant_desk_get_snr_duration (desk));
       return g_strdup_printf (_("SNR of dips %s long"), length);
     }
+  static const char *const looks[] = { N_("Witness, ppm"), N_("Record over witness, ppm"), N_("Record less witness, ppm") };
+  if (kind == ANT_STRIP_WITNESS)
+    return g_strdup (_ (looks[ant_desk_get_witness_look (desk)]));
   const char *what = kind == ANT_STRIP_RESIDUAL ? _("Residual") : _("Irradiance");
   if (!record)
     return g_strdup (what);
@@ -54,6 +59,29 @@ fill_snr (AntDesk *desk, AntStrip *strip, gsize size, char *text)
   else
     g_snprintf (text, size, _("threshold %.1f"), results->threshold_snr);
   strip->caption = text;
+}
+
+static void
+fill_witness (AntDesk *desk, AntStrip *strip, gsize size, char *text)
+{
+  const AntWitnessStrips *witness = ant_desk_get_witness (desk);
+  g_autofree char *name = g_path_get_basename (ant_desk_get_witness_path (desk));
+  strip->caption = text;
+  if (!witness)
+    {
+      g_snprintf (text, size, _("reading %s"), name);
+      return;
+    }
+  const AntComparison *comparison = witness->comparison;
+  AntWitnessLook look = ant_desk_get_witness_look (desk);
+  g_autofree char *step = ant_length_words (comparison->step_d), *drift = ant_length_words (comparison->drift_d);
+  strip->pyramid = witness->pyramid[look];
+  strip->start_d = comparison->start_d;
+  strip->step_d = comparison->step_d;
+  if (look != ANT_WITNESS_ITSELF && comparison->drift_d > 0)
+    g_snprintf (text, size, _("%s, averages of %s, running median of %s taken out"), name, step, drift);
+  else
+    g_snprintf (text, size, _("%s, averages of %s"), name, step);
 }
 
 static void
@@ -88,6 +116,8 @@ ant_strip_fill (AntDesk *desk, AntStripKind kind, AntStrip *strip, gsize size, c
   strip->n_ticks = ant_desk_get_ticks (desk, &strip->tick_d);
   if (kind == ANT_STRIP_SNR)
     fill_snr (desk, strip, size, text);
+  else if (kind == ANT_STRIP_WITNESS)
+    fill_witness (desk, strip, size, text);
   else
     fill_series (desk, kind, strip);
 }

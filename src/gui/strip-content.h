@@ -10,6 +10,7 @@ typedef enum
   ANT_STRIP_IRRADIANCE, /* with its rotation curve; passages bracketed, when they are shown */
   ANT_STRIP_RESIDUAL,   /* what that leaves, dips bracketed */
   ANT_STRIP_SNR,        /* dip SNR of one duration, with the threshold; on demand */
+  ANT_STRIP_WITNESS,    /* another instrument, or the record over or less it; while one is open */
   ANT_N_STRIPS,
 } AntStripKind;
 

@@ -25,8 +25,10 @@ enum
   NEEDS_PLACE = 1 << 7, /* a span or a selection to go to */
   NEEDS_NO_SCAN = 1 << 8,
   NEEDS_SLOW_PART = 1 << 9, /* a scan has run to its end */
+  NEEDS_WITNESS = 1 << 10,
 };
 
+static const char *const witness_looks[ANT_N_WITNESS_LOOKS] = { "itself", "ratio", "difference" };
 static const char *const average_names[] = { "none", "10min", "1h", "6h", "1d" };
 
 /* Durations of dips whose SNR can be followed; 0: the selected dip's. */
@@ -56,6 +58,42 @@ static void
 open_named (AntWindow *self, GVariant *parameter)
 {
   ant_window_open (self, g_variant_get_string (parameter, NULL));
+}
+
+static void
+open_witness_cb (const char *path, gpointer data)
+{
+  AntWindow *self = data;
+  if (path)
+    ant_desk_open_witness (self->desk, path);
+  g_object_unref (self);
+}
+
+static void
+open_witness (AntWindow *self, GVariant *parameter)
+{
+  ant_file_prompt_open (GTK_WINDOW (self), _("Open a Witness"), open_witness_cb, g_object_ref (self));
+}
+
+static void
+close_witness (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_close_witness (self->desk);
+}
+
+static void
+choose_witness_look (AntWindow *self, GVariant *state)
+{
+  for (guint i = 0; i < ANT_N_WITNESS_LOOKS; i++)
+    if (g_str_equal (witness_looks[i], g_variant_get_string (state, NULL)))
+      ant_desk_set_witness_look (self->desk, (AntWitnessLook) i);
+}
+
+static void
+next_witness_look (AntWindow *self, GVariant *parameter)
+{
+  guint next = ((guint) ant_desk_get_witness_look (self->desk) + 1) % ANT_N_WITNESS_LOOKS;
+  g_action_group_change_action_state (G_ACTION_GROUP (self), "witness-look", g_variant_new_string (witness_looks[next]));
 }
 
 static void
@@ -318,6 +356,10 @@ typedef struct
 static const Action actions[] = {
   { "open", NULL, NULL, open_record, 0 },
   { "open-recent", "s", NULL, open_named, 0 },
+  { "open-witness", NULL, NULL, open_witness, NEEDS_RECORD },
+  { "close-witness", NULL, NULL, close_witness, NEEDS_WITNESS },
+  { "witness-look", "s", "'ratio'", choose_witness_look, NEEDS_WITNESS },
+  { "next-witness-look", NULL, NULL, next_witness_look, NEEDS_WITNESS },
   { "reload", NULL, NULL, reload, NEEDS_RECORD | NEEDS_NO_SCAN },
   { "close", NULL, NULL, close_window, 0 },
   { "save-list", NULL, NULL, save_list, NEEDS_RESULTS },
@@ -403,7 +445,7 @@ present_state (AntDesk *desk)
          | (busy != ANT_BUSY_NO && busy != ANT_BUSY_STOPPING ? NEEDS_WORK : 0u) | (ant_desk_can_go (desk, -1) ? NEEDS_BACK : 0u)
          | (ant_desk_can_go (desk, 1) ? NEEDS_FORWARD : 0u)
          | (selection || (record && ant_desk_get_span (desk, &span)) ? NEEDS_PLACE : 0u)
-         | (busy == ANT_BUSY_NO ? NEEDS_NO_SCAN : 0u);
+         | (busy == ANT_BUSY_NO ? NEEDS_NO_SCAN : 0u) | (ant_desk_get_witness_path (desk) ? NEEDS_WITNESS : 0u);
 }
 
 void

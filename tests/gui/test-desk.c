@@ -1,5 +1,6 @@
 /* test-desk.c - views, selection and spans, without a window. */
 #include <math.h>
+#include <string.h>
 
 #include "support.h"
 
@@ -67,6 +68,64 @@ a_long_drag_is_one_step_back (void)
     ant_desk_set_view (desk, 0.01 * i, 3 + 0.01 * i);
   ant_desk_go (desk, -1);
   g_assert_false (ant_desk_can_go (desk, -1));
+}
+
+static gboolean
+has_witness (gpointer desk)
+{
+  return ant_desk_get_witness (desk) || !ant_desk_get_witness_path (desk);
+}
+
+/* The record as its own witness: the ratio is one throughout. */
+static void
+a_witness_is_compared_and_goes_with_the_record (void)
+{
+  g_autoptr (AntDesk) desk = desk_with_record ();
+  ant_desk_open_witness (desk, test_gui_record ());
+  g_assert_null (ant_desk_get_witness (desk));
+  test_gui_wait (has_witness, desk, 20);
+  const AntWitnessStrips *witness = ant_desk_get_witness (desk);
+  g_assert_nonnull (witness);
+  g_assert_cmpuint (witness->comparison->n, ==, ant_desk_get_record (desk)->series.n);
+  for (gsize i = 0; i < witness->comparison->n; i++)
+    g_assert_true (isnan (witness->comparison->ratio_ppm[i]) || fabsf (witness->comparison->ratio_ppm[i]) < 0.01f);
+  ant_desk_close_witness (desk);
+  g_assert_null (ant_desk_get_witness (desk));
+  g_assert_null (ant_desk_get_witness_path (desk));
+}
+
+static void
+another_drift_compares_anew (void)
+{
+  g_autoptr (AntDesk) desk = desk_with_record ();
+  ant_desk_open_witness (desk, test_gui_record ());
+  test_gui_wait (has_witness, desk, 20);
+  g_assert_true (ant_desk_set_setting (desk, ant_setting_find ("witness-drift"), "3", NULL));
+  const AntWitnessStrips *before = ant_desk_get_witness (desk);
+  for (int i = 0; i < 200 && ant_desk_get_witness (desk) == before; i++)
+    g_main_context_iteration (NULL, TRUE);
+  g_assert_cmpfloat (ant_desk_get_witness (desk)->comparison->drift_d, ==, 3.0);
+  g_assert_false (ant_desk_is_stale (desk));
+}
+
+static void
+failed_cb (AntDesk *desk, const char *sentence, char **said)
+{
+  g_free (*said);
+  *said = g_strdup (sentence);
+}
+
+static void
+what_is_no_witness_is_told (void)
+{
+  g_autoptr (AntDesk) desk = desk_with_record ();
+  g_autofree char *said = NULL;
+  g_signal_connect (desk, "failed", G_CALLBACK (failed_cb), &said);
+  ant_desk_open_witness (desk, "/nowhere/record.csv");
+  test_gui_wait (has_witness, desk, 20);
+  g_assert_null (ant_desk_get_witness_path (desk));
+  g_assert_nonnull (said);
+  g_assert_nonnull (strstr (said, "the witness: "));
 }
 
 static gboolean
@@ -144,6 +203,9 @@ add (void)
   g_test_add_func ("/gui/desk/the-readout-tells-time-value-and-residual", the_readout_tells_time_value_and_residual);
   g_test_add_func ("/gui/desk/a-span-grows-by-keys-about-the-middle-of-the-view",
                    a_span_grows_by_keys_about_the_middle_of_the_view);
+  g_test_add_func ("/gui/desk/a-witness-is-compared-and-goes-with-the-record", a_witness_is_compared_and_goes_with_the_record);
+  g_test_add_func ("/gui/desk/another-drift-compares-anew", another_drift_compares_anew);
+  g_test_add_func ("/gui/desk/what-is-no-witness-is-told", what_is_no_witness_is_told);
 }
 
 int
