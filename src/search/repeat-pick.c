@@ -1,11 +1,11 @@
-/* repeat-pick.c - from the bins of a round to its peaks, from peaks to finalists, and from those to the repeat that stands. */
+/* repeat-pick.c - from the bins of a round to its peaks, from peaks to finalist, and from that to the repeat that stands. */
 #include <math.h>
 #include <stdlib.h>
 #include <string.h>
 #include "search/repeat-work.h"
 
 #define WORST_FOLD 0.82      /* a fold keeps this much of the refined SNR at least (docs/search.md) */
-#define NEAR_THRESHOLD 0.9   /* exact energies and the crossing's own shape may lift a finalist by so much */
+#define STRONG_SNR 8.0       /* known dips of this and more may hide trains */
 #define MOST_SCATTER 0.5     /* of the events' depths, in units of their mean, beyond the noise */
 #define SURE_CHI2 4.0        /* sigma beyond which the scatter is not noise */
 #define AS_GOOD 0.9995       /* a multiple of a period with this much of its SNR has all of its events */
@@ -56,11 +56,8 @@ pick_from (AntRepeats *repeats, int side)
 AntStatus
 ant_repeats_pick_peaks (AntRepeats *repeats)
 {
-  AntStatus status = ANT_OK;
   repeats->n_peaks = 0;
-  for (int s = 0; s < 2 && !status; s++)
-    status = pick_from (repeats, s);
-  return status;
+  return pick_from (repeats, repeats->now);
 }
 
 int
@@ -132,33 +129,27 @@ best_peak (const AntRepeats *repeats, int side, double least)
 static AntStatus
 add_finalist (AntRepeats *repeats, const AntRepeatPeak *peak)
 {
-  AntRepeatFinalist *finalist = &repeats->finalist[repeats->n_finalists];
-  *finalist = (AntRepeatFinalist){ .trial = peak->trial };
+  AntRepeatFinalist *finalist = &repeats->finalist;
+  *finalist = (AntRepeatFinalist){ .trial = peak->trial, .sums = peak->sums };
   ant_repeat_train_range (&repeats->side[0].train, &peak->trial, &finalist->first, &finalist->end);
   finalist->fit = calloc ((size_t) (finalist->end - finalist->first), sizeof *finalist->fit);
   if (!finalist->fit)
     return ANT_NO_MEMORY;
-  repeats->n_finalists++;
+  repeats->has_finalist = 1;
   return ANT_OK;
 }
 
 AntStatus
 ant_repeats_choose (AntRepeats *repeats)
 {
-  AntStatus status = ANT_OK;
-  /* Of the last round: strong dips lift their surroundings, until they are out. */
-  ptrdiff_t mirrored = best_peak (repeats, 1, 0);
-  repeats->best_mirrored = mirrored < 0 ? 0 : repeats->peak[mirrored].sums.snr;
-  repeats->n_mirrored = repeats->best_mirrored >= repeats->threshold;
-  while (repeats->n_finalists < ANT_REPEAT_FINALISTS && !status)
+  if (repeats->now) /* in the last round: strong dips lift their surroundings, until they are out */
     {
-      ptrdiff_t best = best_peak (repeats, 0, NEAR_THRESHOLD * repeats->threshold);
-      if (best < 0)
-        break;
-      repeats->peak[best].passes = 0;
-      status = add_finalist (repeats, &repeats->peak[best]);
+      ptrdiff_t mirrored = best_peak (repeats, 1, 0);
+      repeats->best_mirrored = mirrored < 0 ? 0 : repeats->peak[mirrored].sums.snr;
+      repeats->n_mirrored = repeats->best_mirrored >= repeats->threshold;
     }
-  return status;
+  ptrdiff_t best = best_peak (repeats, 0, repeats->threshold);
+  return best < 0 ? ANT_OK : add_finalist (repeats, &repeats->peak[best]);
 }
 
 static AntShapeFit
@@ -169,7 +160,7 @@ shape_of (const AntRepeats *repeats, const AntRepeatFinalist *finalist, long num
                         .edge_d = fmin (repeats->ramp * repeats->series.step_d, 0.5 * duration_d), .impact = ANT_SHAPE_IMPACT };
 }
 
-/* Every finalist's events of one chunk, as crossings under its exact noise. */
+/* The finalist's events of one chunk, as crossings under its exact noise. */
 AntStatus
 ant_repeats_measure (AntRepeats *repeats, size_t i)
 {
@@ -182,10 +173,9 @@ ant_repeats_measure (AntRepeats *repeats, size_t i)
   double *z = malloc (part.n * sizeof *z);
   AntWhitener *whitener = !z || !ant_series_observed (&part, 0) ? NULL : ant_whitener_new_free_level (&chunk->model, &part, &status);
   status = !z ? ANT_NO_MEMORY : whitener ? ant_whitener_solve (whitener, part.value_ppm, z) : status;
-  for (size_t k = 0; k < repeats->n_finalists && whitener && !status; k++)
-    for (long j = repeats->finalist[k].first; j < repeats->finalist[k].end; j++)
+  for (long j = repeats->finalist.first; j < repeats->finalist.end && whitener && !status; j++)
       {
-        AntShapeFit fit = shape_of (repeats, &repeats->finalist[k], j), *kept = &repeats->finalist[k].fit[j - repeats->finalist[k].first];
+        AntShapeFit fit = shape_of (repeats, &repeats->finalist, j), *kept = &repeats->finalist.fit[j - repeats->finalist.first];
         double place = fmin (fmax (fit.centre, 0), (double) repeats->series.n - 1);
         if (place < chunk->own_from || place >= chunk->own_to)
           continue;
@@ -202,56 +192,50 @@ ant_repeats_measure (AntRepeats *repeats, size_t i)
 static void
 take_out (AntRepeats *repeats, double mid, double duration)
 {
-  double reach = MASK_REACH * duration;
+  double reach = MASK_REACH * duration + repeats->ramp;
   for (double p = ceil (fmax (mid - reach, 0)); p <= mid + reach && p < (double) repeats->series.n; p++)
     repeats->value[(size_t) p] = NAN;
 }
 
-static void
+/* Known strong dips become gaps. Returns whether there are any that are none yet. */
+static int
 take_out_dips (AntRepeats *repeats)
 {
-  for (size_t i = 0; i < repeats->options.n_dips; i++)
+  int any = 0;
+  for (size_t i = 0; i < repeats->options.n_dips && !repeats->dips_out; i++)
+    any |= repeats->options.dip[i].snr >= STRONG_SNR;
+  for (size_t i = 0; i < repeats->options.n_dips && any; i++)
     take_out (repeats, ant_series_place (&repeats->series, repeats->options.dip[i].mid_d),
               repeats->options.dip[i].duration_d / repeats->series.step_d);
-  repeats->dips_out = 1;
+  repeats->dips_out |= any;
+  return any;
 }
 
+/* The finalist becomes a repeat, its events gaps. */
 static AntStatus
-stand (AntRepeats *repeats, int *found)
+stand (AntRepeats *repeats)
 {
-  AntStatus status = ANT_OK;
-  *found = 0;
-  for (size_t k = 0; k < repeats->n_finalists && !*found && !status; k++)
-    {
-      AntRepeat *repeat = &repeats->repeat[repeats->n_repeats];
-      status = ant_repeats_report (repeats, &repeats->finalist[k], repeat);
-      AntTrainSums sums = { .snr = repeat->snr, .n_events = repeat->n_observed, .without_largest = repeat->snr_without_largest,
-                            .chi2 = repeat->chi2 };
-      *found = !status && repeat->snr >= repeats->threshold && repeat->n_observed >= repeats->options.least_events
-               && ant_repeats_consistent (&sums);
-      if (*found)
-        for (size_t e = 0; e < repeat->n_events; e++)
-          take_out (repeats, ant_series_place (&repeats->series, repeat->event[e].mid_d), repeat->duration_d / repeats->series.step_d);
-      else
-        free (repeat->event);
-    }
-  repeats->n_repeats += (size_t) *found;
-  return status;
+  AntRepeat *repeat = &repeats->repeat[repeats->n_repeats];
+  AntStatus status = ant_repeats_report (repeats, &repeats->finalist, repeat);
+  if (status)
+    return status;
+  for (size_t e = 0; e < repeat->n_events; e++)
+    take_out (repeats, ant_series_place (&repeats->series, repeat->event[e].mid_d), repeat->duration_d / repeats->series.step_d);
+  repeats->n_repeats++;
+  return ANT_OK;
 }
 
 AntStatus
 ant_repeats_settle (AntRepeats *repeats)
 {
-  int found;
-  AntStatus status = stand (repeats, &found);
+  int found = repeats->has_finalist > 0, again = found && repeats->n_repeats + 1 < ANT_MOST_REPEATS;
+  AntStatus status = found ? stand (repeats) : ANT_OK;
   ant_repeats_forget (repeats);
-  if (!found && !repeats->dips_out && repeats->options.n_dips)
-    take_out_dips (repeats);
-  else if (!found)
-    repeats->active = 0;
-  repeats->active = repeats->active && repeats->n_repeats < ANT_MOST_REPEATS;
+  repeats->active = !repeats->now && !status;
+  if (!again && (found || !take_out_dips (repeats)))
+    repeats->now = 1;
   repeats->round++;
-  if (repeats->active && !status && !repeats->options.white)
+  if (repeats->active && !repeats->options.white)
     {
       double longest = ant_repeat_grid_longest (&repeats->options.grid) / repeats->series.step_d;
       memset (repeats->z, 0, repeats->series.n * sizeof *repeats->z);

@@ -76,38 +76,27 @@ snr_of (const AntRepeats *repeats, Sum sum)
   return e > 0 ? sum.num / sqrt (e) : 0;
 }
 
+/* Events, and what rests on the crossings fitted to them: the common depth. */
 static void
 add_events (const AntRepeats *repeats, const AntRepeatFinalist *finalist, AntRepeat *repeat)
 {
-  Sum all = { 0, 0 }, unlisted = { 0, 0 }, parity[2] = { { 0, 0 }, { 0, 0 } }, largest = { -HUGE_VAL, 0 };
+  Sum all = { 0, 0 }, unlisted = { 0, 0 };
   for (long j = finalist->first; j < finalist->end; j++)
     {
       double num, den;
       AntRepeatEvent event = event_of (repeats, finalist, j, &num, &den);
       if (!(den > 0))
         continue;
+      AntTrainEvent train = ant_repeat_train_event (&repeats->side[0].train, &finalist->trial, j);
       repeat->event[repeat->n_events++] = event;
-      repeat->n_observed += event.coverage >= 0.5;
       all = (Sum){ all.num + num, all.den + den };
-      parity[j & 1] = (Sum){ parity[j & 1].num + num, parity[j & 1].den + den };
       if (!event.dip)
-        unlisted = (Sum){ unlisted.num + num, unlisted.den + den };
-      if (num > largest.num)
-        largest = (Sum){ num, den };
+        unlisted = (Sum){ unlisted.num + train.num, unlisted.den + train.den };
     }
   double total = repeats->options.white ? repeats->side[0].box.total : HUGE_VAL, effective = all.den - all.den * all.den / total;
-  double common = all.num / all.den;
-  repeat->snr = snr_of (repeats, all);
   repeat->depth_ppm = all.num / effective;
   repeat->depth_sigma_ppm = 1 / sqrt (effective);
   repeat->snr_unlisted = snr_of (repeats, unlisted);
-  repeat->snr_without_largest = snr_of (repeats, (Sum){ all.num - largest.num, all.den - largest.den });
-  if (parity[0].den > 0 && parity[1].den > 0)
-    repeat->odd_even = fabs (parity[0].num / parity[0].den - parity[1].num / parity[1].den)
-                       / sqrt (1 / parity[0].den + 1 / parity[1].den);
-  for (size_t e = 0; e < repeat->n_events; e++)
-    if (repeat->event[e].coverage >= 0.5)
-      repeat->chi2 += pow ((repeat->event[e].depth_ppm - common) / repeat->event[e].sigma_ppm, 2);
 }
 
 void
@@ -153,6 +142,12 @@ ant_repeats_report (const AntRepeats *repeats, const AntRepeatFinalist *finalist
   repeat->event = malloc ((size_t) (finalist->end - finalist->first) * sizeof *repeat->event);
   if (!repeat->event)
     return ANT_NO_MEMORY;
+  const AntTrainSums *sums = &finalist->sums;
+  repeat->snr = sums->snr;
+  repeat->snr_without_largest = sums->without_largest;
+  repeat->odd_even = sums->odd_even;
+  repeat->chi2 = sums->chi2;
+  repeat->n_observed = sums->n_events;
   add_events (repeats, finalist, repeat);
   for (size_t e = 0; e < repeat->n_events; e++)
     repeat->event[e].number -= middle;

@@ -191,8 +191,8 @@ ant_repeats_plan (AntRepeats *repeats)
   if (repeats->round == 0)
     init_chance (repeats);
   repeats->n_slices = 0;
-  for (int s = 0; s < 2 && !status; s++)
-    status = plan_side (repeats, s);
+  if (!status)
+    status = plan_side (repeats, repeats->now);
   if (repeats->round == 0)
     repeats->n_first = repeats->n_slices;
   return status;
@@ -248,8 +248,9 @@ ant_repeats_forget (AntRepeats *repeats)
       ant_repeat_bins_clear (&side->bins);
       *side = (AntRepeatSide){ 0 };
     }
-  for (size_t k = 0; k < repeats->n_finalists; k++)
-    free (repeats->finalist[k].fit);
+  free (repeats->finalist.fit);
+  repeats->finalist.fit = NULL;
   ant_repeat_pairs_clear (&repeats->pairs);
-  repeats->n_slices = repeats->n_peaks = repeats->n_finalists = 0;
+  repeats->n_slices = repeats->n_peaks = 0;
+  repeats->has_finalist = 0;
 }

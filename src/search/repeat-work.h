@@ -10,7 +10,6 @@
 
 #define ANT_REPEAT_TREES 64     /* most durations with a tree of their own */
 #define ANT_REPEAT_PEAKS 400    /* most peaks of one sign that are climbed from */
-#define ANT_REPEAT_FINALISTS 3  /* measured exactly in one round */
 #define ANT_WITHOUT_LARGEST 5.0 /* least SNR without the largest event */
 
 /* Dips (0) or brightenings (1). */
@@ -45,6 +44,7 @@ typedef struct
 typedef struct
 {
   AntTrainTrial trial;
+  AntTrainSums sums;
   long first, end;        /* numbers of its events */
   AntShapeFit *fit;       /* [end - first] depth, sigma, coverage of each */
 } AntRepeatFinalist;
@@ -70,9 +70,10 @@ struct _AntRepeats
   size_t n_done, n_first; /* slices of the first round: done, all */
   size_t n_peaks;
   AntRepeatPeak *peak;
-  size_t n_finalists;
-  AntRepeatFinalist finalist[ANT_REPEAT_FINALISTS];
+  int has_finalist;
+  AntRepeatFinalist finalist; /* what this round has found */
   int active, dips_out;   /* whether this round runs; known dips are gaps by now */
+  int now;                /* the side that this round looks at: the last one is for brightenings */
   size_t round;
   AntRepeatBins spectrum; /* of the first round's dips */
   size_t n_repeats;

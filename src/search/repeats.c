@@ -6,7 +6,7 @@
 #include "search/repeat-work.h"
 
 enum { WHITEN, FOLD, CLIMB, MEASURE, N_KINDS };
-#define ROUNDS (ANT_MOST_REPEATS + 2) /* one for each repeat, one without known dips, one that finds nothing */
+#define ROUNDS (ANT_MOST_REPEATS + 2) /* three repeats and a round that finds nothing, one without known dips, brightenings */
 
 /* Time from the first observed sample to the last, in places; 0 if nothing is observed. */
 static double
@@ -119,7 +119,7 @@ stage_count (void *work, size_t stage)
   if (!repeats->active)
     return 0;
   size_t chunks = repeats->options.white ? 0 : repeats->n_chunks;
-  size_t count[N_KINDS] = { chunks, repeats->n_slices, repeats->n_peaks, repeats->n_finalists ? chunks : 0 };
+  size_t count[N_KINDS] = { chunks, repeats->n_slices, repeats->n_peaks, repeats->has_finalist ? chunks : 0 };
   return count[stage % N_KINDS];
 }
 
