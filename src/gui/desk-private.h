@@ -49,6 +49,11 @@ struct _AntDesk
   GCancellable *snr_stop;   /* owned; NULL: nothing is being computed */
   double snr_done;
 
+  /* What is folded */
+  AntFold fold;             /* period 0: nothing */
+  gsize repeat;             /* that it is of, or ANT_NO_DIP */
+  AntFoldData *fold_data;   /* owned; NULL: not yet asked for */
+
   /* The sky over the record */
   AntObserverChoice *observer; /* owned */
   AntSkyList *sky;          /* owned; NULL: none yet */
@@ -78,6 +83,9 @@ void ant_desk_begin_views (AntDesk *self);
 /* Compute the dip SNR that is wanted now, if it is not there; drop what belongs to other results. */
 void ant_desk_follow_snr (AntDesk *self);
 void ant_desk_drop_snr (AntDesk *self);
+/* Nothing is folded; fold on the strongest repeat, if there is one. */
+void ant_desk_drop_fold (AntDesk *self);
+void ant_desk_begin_fold (AntDesk *self);
 /* Compare anew, or close the witness, where record or settings are others than it was compared with. */
 void ant_desk_follow_witness (AntDesk *self);
 void ant_desk_bring_into_view (AntDesk *self, const AntDip *dip);

@@ -81,6 +81,7 @@ drop_results (AntDesk *self)
   g_array_set_size (self->marks, 0);
   g_list_store_remove_all (self->items);
   g_clear_pointer (&self->results, ant_scan_results_unref);
+  ant_desk_drop_fold (self);
 }
 
 static void
@@ -190,6 +191,7 @@ take_outcome (AntDesk *self, AntScanOutcome *outcome)
   add_items (self, ANT_KIND_PASSAGE, self->results->n_passages, passage);
   ant_desk_make_marks (self);
   select_again (self, selected_d);
+  ant_desk_begin_fold (self);
 }
 
 static void

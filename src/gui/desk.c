@@ -273,6 +273,7 @@ ant_desk_dispose (GObject *object)
   AntDesk *self = ANT_DESK (object);
   ant_desk_abandon (self);
   ant_desk_drop_snr (self);
+  ant_desk_drop_fold (self);
   ant_desk_drop_sky (self);
   ant_desk_close_witness (self);
   g_clear_object (&self->selected);
@@ -313,6 +314,7 @@ ant_desk_class_init (AntDeskClass *klass)
 static void
 ant_desk_init (AntDesk *self)
 {
+  self->repeat = ANT_NO_DIP;
   self->items = g_list_store_new (ANT_TYPE_DIP_ITEM);
   self->marks = g_array_new (FALSE, TRUE, sizeof (AntDipMark));
   self->mark_items = g_ptr_array_new ();

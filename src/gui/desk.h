@@ -9,6 +9,7 @@
 
 #include "data/dip-words.h"
 #include "gui/dip-item.h"
+#include "jobs/fold-data.h"
 #include "jobs/layers.h"
 #include "jobs/observer-task.h"
 #include "jobs/scan-task.h"
@@ -29,6 +30,7 @@ typedef enum
   ANT_DESK_POINTER = 1 << 7,   /* time under the pointer, or span being drawn */
   ANT_DESK_LOOK = 1 << 8,      /* units, averages, which kinds are shown */
   ANT_DESK_SNR = 1 << 9,       /* the dip SNR against time: shown or not, of which duration, computed */
+  ANT_DESK_FOLD = 1 << 10,     /* the period that is folded */
   ANT_DESK_SKY = 1 << 14,      /* who watched, what crossed the Sun, which of it is selected */
   ANT_DESK_WITNESS = 1 << 13,  /* the witness: another, none, or another look at it */
 } AntDeskChange;
@@ -111,6 +113,15 @@ int ant_desk_get_average (AntDesk *self); /* index of ant_average_lengths_d, or 
 void ant_desk_set_average (AntDesk *self, int average);
 guint ant_desk_get_shown (AntDesk *self); /* AntDipKind bits */
 void ant_desk_set_shown (AntDesk *self, guint kinds);
+
+/* The period that the record is folded on: a repeat's, or one that was chosen. NULL: none. */
+const AntFold *ant_desk_get_fold (AntDesk *self);
+gsize ant_desk_get_repeat (AntDesk *self); /* whose period it is, or ANT_NO_DIP */
+const AntFoldData *ant_desk_get_fold_data (AntDesk *self); /* borrowed until the next change; NULL without a fold */
+void ant_desk_select_repeat (AntDesk *self, gsize i);
+void ant_desk_fold_on (AntDesk *self, double period_d);
+void ant_desk_nudge_fold (AntDesk *self, int steps); /* by what the fold just shows */
+void ant_desk_view_event (AntDesk *self, gsize i);   /* of the fold */
 
 /* The dip SNR of one duration against time, computed after a scan while it is shown. */
 gboolean ant_desk_get_snr_shown (AntDesk *self);

@@ -44,6 +44,7 @@ const AntShortcut ant_shortcut_table[] = {
   { "win.page::record", N_("Page Record"), VIEW, { "<Alt>1" } },
   { "win.page::noise", N_("Page Noise"), VIEW, { "<Alt>2" } },
   { "win.page::dips", N_("Page Dips"), VIEW, { "<Alt>3" } },
+  { "win.page::repeats", N_("Page Repeats"), VIEW, { "<Alt>4" } },
   { "win.page::sky", N_("Page Sky"), VIEW, { "<Alt>5" } },
 
   { "win.next-dip", N_("Next dip"), DIPS, { "<Alt>Down" } },

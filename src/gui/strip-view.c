@@ -4,6 +4,7 @@
 #include <glib/gi18n.h>
 #include <math.h>
 
+#define BRACKETS_APART_PX 6
 #define WHEEL_ZOOM 1.25
 #define KEY_ZOOM 1.5
 #define WHEEL_PAN 0.08
@@ -64,6 +65,31 @@ rgba (AntColour colour, double alpha)
   return (GdkRGBA) { (float) colour.red, (float) colour.green, (float) colour.blue, (float) (colour.alpha * alpha) };
 }
 
+/* A bracket over every event of the selected repeat, as long as they stand apart. */
+static void
+bracket_events (AntStripView *self, GtkSnapshot *snapshot, const AntBox *area, const AntTheme *theme)
+{
+  AntDesk *desk = desk_of (self);
+  const AntView *view = ant_desk_get_view (desk);
+  const AntFold *fold = ant_desk_get_fold (desk);
+  if (!fold || ant_desk_get_repeat (desk) == ANT_NO_DIP
+      || fold->period_d / (view->to - view->from) * area->width < BRACKETS_APART_PX)
+    return;
+  GdkRGBA colour = rgba (theme->role[ANT_ROLE_SHAPE], 1);
+  double mid_d = fold->epoch_d + fold->period_d * ceil ((view->from - fold->epoch_d - fold->duration_d) / fold->period_d);
+  for (; mid_d - fold->duration_d < view->to; mid_d += fold->period_d)
+    {
+      double from = floor (fmax (ant_view_x (view, area, mid_d - 0.5 * fold->duration_d), area->x));
+      double to = floor (fmin (ant_view_x (view, area, mid_d + 0.5 * fold->duration_d), area->x + area->width));
+      if (to < area->x || from > area->x + area->width)
+        continue;
+      float left = (float) from, width = (float) fmax (to - from, 1), foot = (float) (area->y + area->height);
+      gtk_snapshot_append_color (snapshot, &colour, &GRAPHENE_RECT_INIT (left, foot - 2, width, 2));
+      gtk_snapshot_append_color (snapshot, &colour, &GRAPHENE_RECT_INIT (left, foot - 7, 1, 5));
+      gtk_snapshot_append_color (snapshot, &colour, &GRAPHENE_RECT_INIT (left + width - 1, foot - 7, 1, 5));
+    }
+}
+
 static void
 ant_strip_view_overlay (AntPlotView *plot, GtkSnapshot *snapshot, const AntBox *box, const AntTheme *theme)
 {
@@ -88,6 +114,7 @@ ant_strip_view_overlay (AntPlotView *plot, GtkSnapshot *snapshot, const AntBox *
                                      &GRAPHENE_RECT_INIT ((float) to - 1, (float) area.y, 1, (float) area.height));
         }
     }
+  bracket_events (self, snapshot, &area, theme);
   double pointer_d = ant_desk_get_pointer (desk);
   if (pointer_d >= view->from && pointer_d <= view->to)
     {
@@ -334,7 +361,7 @@ ant_strip_view_class_init (AntStripViewClass *klass)
   AntPlotViewClass *plot_class = ANT_PLOT_VIEW_CLASS (klass);
   G_OBJECT_CLASS (klass)->finalize = ant_strip_view_finalize;
   plot_class->watches = ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT
-                        | ANT_DESK_LOOK | ANT_DESK_SNR | ANT_DESK_SKY | ANT_DESK_WITNESS;
+                        | ANT_DESK_LOOK | ANT_DESK_SNR | ANT_DESK_FOLD | ANT_DESK_SKY | ANT_DESK_WITNESS;
   plot_class->paint = ant_strip_view_paint;
   plot_class->overlay = ant_strip_view_overlay;
   plot_class->describe = ant_strip_view_describe;

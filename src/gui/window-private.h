@@ -3,6 +3,7 @@
 
 #include "gui/dips-page.h"
 #include "gui/noise-page.h"
+#include "gui/repeats-page.h"
 #include "gui/record-page.h"
 #include "gui/settings-panel.h"
 #include "gui/sky-page.h"
@@ -28,6 +29,7 @@ struct _AntWindow
   AntRecordPage *record_page;
   AntNoisePage *noise_page;
   AntDipsPage *dips_page;
+  AntRepeatsPage *repeats_page;
   AntSkyPage *sky_page;
   GtkRevealer *settings_revealer;
   AntSettingsPanel *settings_panel;

@@ -5,10 +5,14 @@
 #include "gui/columns.h"
 #include "gui/dip-inspector.h"
 #include "gui/dip-table.h"
+#include "gui/fold-events.h"
 #include "gui/floor-view.h"
+#include "gui/fold-view.h"
 #include "gui/noise-page.h"
+#include "gui/period-view.h"
 #include "gui/preferences.h"
 #include "gui/record-page.h"
+#include "gui/repeats-page.h"
 #include "gui/ribbon-view.h"
 #include "gui/settings-panel.h"
 #include "gui/settings-row.h"
@@ -24,7 +28,8 @@ every_widget_can_be_made_and_dropped_without_a_desk (void)
   const GType types[] = { ANT_TYPE_CLOSEUP_VIEW, ANT_TYPE_COLUMNS, ANT_TYPE_DIP_INSPECTOR, ANT_TYPE_DIP_TABLE,
                           ANT_TYPE_FLOOR_VIEW, ANT_TYPE_NOISE_PAGE, ANT_TYPE_RECORD_PAGE, ANT_TYPE_RIBBON_VIEW,
                           ANT_TYPE_SETTINGS_PANEL, ANT_TYPE_SETTINGS_ROW, ANT_TYPE_SPECTRUM_VIEW, ANT_TYPE_STRIP_VIEW,
-                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_TIME_STACK };
+                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_TIME_STACK, ANT_TYPE_FOLD_EVENTS, ANT_TYPE_FOLD_VIEW,
+                          ANT_TYPE_PERIOD_VIEW, ANT_TYPE_REPEATS_PAGE };
   for (gsize i = 0; i < G_N_ELEMENTS (types); i++)
     {
       GtkWidget *widget = g_object_ref_sink (g_object_new (types[i], NULL));
