@@ -15,6 +15,7 @@
 #include "jobs/report.h"
 #include "jobs/scan-job.h"
 #include "jobs/stop.h"
+#include "readers/observer-reader.h"
 #include "writers/dip-table.h"
 #include "writers/output-dir.h"
 #include "writers/result-files.h"
@@ -26,6 +27,8 @@ typedef struct
   double hours;
   int threads;
   gboolean force, progress, no_report, no_repeats;
+  char *observer_text;
+  AntObserverChoice *observer; /* owned; NULL: nobody knows who took the record */
   AntResultChoice choice;
   AntRecordOptions reading;
   AntWitnessOptions witness;
@@ -41,6 +44,8 @@ options_clear (Options *options)
   g_free (options->to);
   g_free (options->exclude);
   g_free (options->at);
+  g_free (options->observer_text);
+  ant_observer_choice_unref (options->observer);
   ant_record_options_clear (&options->reading);
   ant_witness_options_clear (&options->witness);
   ant_settings_options_clear (&options->given);
@@ -145,7 +150,7 @@ search (const Options *options, AntRecord *record, const AntSettings *settings, 
   if (!witnesses)
     return FALSE;
   AntProgressLine *line = ant_progress_line_new (options->progress);
-  g_autoptr (AntScanResults) results = ant_scan_job_run (record, settings, stop, ant_progress_line_show, line, error);
+  g_autoptr (AntScanResults) results = ant_scan_job_run (record, settings, options->observer, stop, ant_progress_line_show, line, error);
   ant_progress_line_end (line);
   if (!results || (dir && !write_all (options, dir, results, witnesses, error)))
     return FALSE;
@@ -217,6 +222,8 @@ ant_verb_scan (int argc, char **argv)
     { "to", 0, 0, G_OPTION_ARG_STRING, &options.to, N_("use the record up to this time"), N_("TIME") },
     { "exclude", 0, 0, G_OPTION_ARG_FILENAME, &options.exclude,
       N_("leave out spans: lines of start, end, reason, or an earlier flags.csv"), N_("FILE") },
+    { "observer", 0, 0, G_OPTION_ARG_FILENAME, &options.observer_text,
+      N_("who took the record: what crossed the Sun there and then is evidence for the verdicts"), N_("earth|l1|site:LON,LAT,HEIGHT_M|FILE") },
     { "at", 0, 0, G_OPTION_ARG_STRING, &options.at, N_("measure a dip with this middle, without a search"), N_("TIME") },
     { "hours", 0, 0, G_OPTION_ARG_DOUBLE, &options.hours, N_("length of the dip of --at, contact I to IV"), N_("H") },
     { "threads", 0, 0, G_OPTION_ARG_INT, &options.threads, N_("threads to work with; the results do not depend on it"), N_("N") },
@@ -246,6 +253,8 @@ ant_verb_scan (int argc, char **argv)
     code = ant_cli_fail_usage (_("scan: found --also or --series %s, expected them where a search writes its tables"),
                                options.at ? _("with --at") : _("without --out"));
   else if (options.also && !ant_result_choice_parse (&options.choice, options.also, &error))
+    code = ant_cli_fail (error);
+  else if (options.observer_text && !(options.observer = ant_observer_open (options.observer_text, &error)))
     code = ant_cli_fail (error);
   else
     code = run (&options, argv[1]);

@@ -48,7 +48,7 @@ run_scan (gpointer data)
   GError *error = NULL;
   g_autoptr (AntScanOutcome) outcome = g_new0 (AntScanOutcome, 1);
   outcome->results =
-      ant_scan_job_run_partly (record, &order->settings, g_task_get_cancellable (task), ant_progress_relay_note,
+      ant_scan_job_run_partly (record, &order->settings, NULL, g_task_get_cancellable (task), ant_progress_relay_note,
                                order->relay, &error);
   if (outcome->results && outcome->results->reach < ANT_SCAN_COMPLETE) /* who stops does not want to wait */
     outcome->layers = ant_layers_ref (order->layers);

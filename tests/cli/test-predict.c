@@ -148,6 +148,42 @@ the_observer_decides_what_is_expected (Place *place, gconstpointer unused)
   g_assert_cmpstr (json_object_get_string_member (event, "certainty"), ==, "certain");
 }
 
+/* The verdict of the only dip that a scan finds, with one more pair of arguments. */
+static char *
+class_by_scan (const Place *place, const char *option, const char *value)
+{
+  g_autofree char *out = NULL, *err = NULL, *table = NULL, *results = g_build_filename (place->folder, "found", NULL);
+  g_autofree char *dips = g_build_filename (results, "dips.csv", NULL);
+  const char *const arguments[] = { g_getenv ("ANT_CLI"), "scan", place->record, "--out", results, "--no-report", "--no-repeats", option, value, NULL };
+  run (arguments, 0, &out, &err);
+  g_assert_true (g_file_get_contents (dips, &table, NULL, NULL));
+  g_auto (GStrv) lines = g_strsplit (table, "\n", -1);
+  guint header = 0;
+  while (g_str_has_prefix (lines[header], "#"))
+    header++;
+  g_auto (GStrv) names = g_strsplit (lines[header], ",", -1), cells = g_strsplit (lines[header + 1], ",", -1);
+  g_autoptr (GDir) folder = g_dir_open (results, 0, NULL);
+  for (const char *name = g_dir_read_name (folder); name; name = g_dir_read_name (folder))
+    {
+      g_autofree char *file = g_build_filename (results, name, NULL);
+      g_unlink (file);
+    }
+  g_rmdir (results);
+  for (guint i = 0; names[i]; i++)
+    if (g_str_equal (names[i], "class"))
+      return g_strdup (cells[i]);
+  return NULL;
+}
+
+/* On the Sun a planet needs a predicted crossing; where nobody knows who watched, it is only shaped like one. */
+static void
+a_scan_told_the_observer_names_the_planet (Place *place, gconstpointer unused)
+{
+  g_autofree char *placed = class_by_scan (place, "--observer", "earth"), *unplaced = class_by_scan (place, "--observer", "l1");
+  g_assert_cmpstr (placed, ==, "planet");
+  g_assert_cmpstr (unplaced, !=, "planet");
+}
+
 static void
 a_gap_is_told_with_what_is_covered (Place *place, gconstpointer unused)
 {
@@ -225,6 +261,7 @@ main (int argc, char **argv)
   g_test_add_func ("/cli/predict/times-have-tenths-of-a-second", times_have_tenths_of_a_second);
   RECORD_TEST ("a-record-shows-what-crossed", a_record_shows_what_crossed);
   RECORD_TEST ("the-observer-decides-what-is-expected", the_observer_decides_what_is_expected);
+  RECORD_TEST ("a-scan-told-the-observer-names-the-planet", a_scan_told_the_observer_names_the_planet);
   RECORD_TEST ("a-gap-is-told-with-what-is-covered", a_gap_is_told_with_what_is_covered);
   RECORD_TEST ("about-l1-nothing-is-evidence", about_l1_nothing_is_evidence);
   RECORD_TEST ("what-cannot-be-predicted-is-refused-in-one-line", what_cannot_be_predicted_is_refused_in_one_line);
