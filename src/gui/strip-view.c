@@ -181,10 +181,13 @@ pinch_begin_cb (GtkGesture *gesture, GdkEventSequence *sequence, AntStripView *s
 static void
 pinch_cb (GtkGestureZoom *gesture, double scale, AntStripView *self)
 {
-  double x, y;
-  if (!gtk_gesture_get_bounding_box_center (GTK_GESTURE (gesture), &x, &y) || !(scale > 0))
+  double x, y, at_d = ant_desk_get_pointer (desk_of (self));
+  if (!ant_desk_get_layers (desk_of (self)) || !(scale > 0))
     return;
-  ant_desk_zoom (desk_of (self), scale / self->pinch, time_at (self, x));
+  if (gtk_gesture_is_active (GTK_GESTURE (gesture))
+      && gtk_gesture_get_bounding_box_center (GTK_GESTURE (gesture), &x, &y))
+    at_d = time_at (self, x);
+  ant_desk_zoom (desk_of (self), scale / self->pinch, at_d);
   self->pinch = scale;
 }
 

@@ -198,6 +198,66 @@ passages_are_listed_and_bracketed_instead_of_dips (void)
   test_gui_close (window);
 }
 
+/* A widget's own controller of a type. */
+static gpointer
+controller_of (gpointer widget, GType type)
+{
+  g_autoptr (GListModel) all = gtk_widget_observe_controllers (widget);
+  for (guint i = 0; i < g_list_model_get_n_items (all); i++)
+    {
+      g_autoptr (GObject) one = g_list_model_get_item (all, i);
+      if (G_TYPE_CHECK_INSTANCE_TYPE (one, type))
+        return one; /* the widget holds it */
+    }
+  return NULL;
+}
+
+static double
+view_length (AntDesk *desk)
+{
+  return ant_desk_get_view (desk)->to - ant_desk_get_view (desk)->from;
+}
+
+/* GTK 4 takes no made events, so the controllers are spoken to where GTK would. */
+static void
+a_touchpad_zooms_by_pinching_and_pans_by_two_fingers (void)
+{
+  AntWindow *window = test_gui_window_with_record ();
+  AntDesk *desk = ant_window_get_desk (window);
+  GtkWidget *strip = test_gui_find (window, ANT_TYPE_STRIP_VIEW);
+  gpointer pinch = controller_of (strip, GTK_TYPE_GESTURE_ZOOM), scroll = controller_of (strip, GTK_TYPE_EVENT_CONTROLLER_SCROLL);
+  double whole = view_length (desk);
+  gboolean taken = FALSE;
+  g_signal_emit_by_name (pinch, "begin", NULL);
+  g_signal_emit_by_name (pinch, "scale-changed", 1.5);
+  g_signal_emit_by_name (pinch, "scale-changed", 2.0);
+  g_assert_cmpfloat_with_epsilon (view_length (desk), whole / 2, 1e-6);
+  double from = ant_desk_get_view (desk)->from;
+  g_signal_emit_by_name (scroll, "scroll", 0.5, 0.0, &taken);
+  g_assert_true (taken);
+  g_assert_cmpfloat (ant_desk_get_view (desk)->from, >, from);
+  g_assert_cmpfloat_with_epsilon (view_length (desk), whole / 2, 1e-6);
+  g_signal_emit_by_name (scroll, "scroll", 0.0, -0.25, &taken);
+  g_assert_cmpfloat (view_length (desk), <, whole / 2);
+  test_gui_close (window);
+}
+
+static void
+a_record_is_dropped_on_the_window (void)
+{
+  AntWindow *window = test_gui_window ();
+  gpointer target = controller_of (window, GTK_TYPE_DROP_TARGET);
+  g_auto (GValue) value = G_VALUE_INIT;
+  gboolean taken = FALSE;
+  g_value_init (&value, G_TYPE_FILE);
+  g_value_take_object (&value, g_file_new_for_path (test_gui_record ()));
+  g_signal_emit_by_name (target, "drop", &value, 10.0, 10.0, &taken);
+  g_assert_true (taken);
+  test_gui_wait (test_gui_idle, ant_window_get_desk (window), 20);
+  g_assert_nonnull (ant_desk_get_record (ant_window_get_desk (window)));
+  test_gui_close (window);
+}
+
 static gboolean
 follows_snr (gpointer desk)
 {
@@ -431,6 +491,9 @@ add (void)
                    stopping_keeps_what_was_found_so_far_and_says_so);
   g_test_add_func ("/gui/window/passages-are-listed-and-bracketed-instead-of-dips",
                    passages_are_listed_and_bracketed_instead_of_dips);
+  g_test_add_func ("/gui/window/a-touchpad-zooms-by-pinching-and-pans-by-two-fingers",
+                   a_touchpad_zooms_by_pinching_and_pans_by_two_fingers);
+  g_test_add_func ("/gui/window/a-record-is-dropped-on-it", a_record_is_dropped_on_the_window);
   g_test_add_func ("/gui/window/the-dip-snr-is-followed-on-demand", the_dip_snr_is_followed_on_demand);
   g_test_add_func ("/gui/window/the-dip-snr-may-be-overtaken-at-any-moment", the_dip_snr_may_be_overtaken_at_any_moment);
   g_test_add_func ("/gui/window/it-may-be-closed-while-it-scans", a_window_may_be_closed_while_it_scans);

@@ -1,4 +1,6 @@
 /* test-scan-job.c - a scan over the pool: the same results with any number of threads, stopped without a trace, asked dips. */
+#include <fftw3.h>
+#include <gsl/gsl_errno.h>
 #include <math.h>
 #include <string.h>
 #include "core/units.h"
@@ -229,6 +231,8 @@ int
 main (int argc, char **argv)
 {
   g_test_init (&argc, &argv, NULL);
+  gsl_set_error_handler_off ();
+  fftw_make_planner_thread_safe (); /* slices plan on several threads */
 #define TEST(path, function) g_test_add ("/jobs/scan-job/" path, Fixture, NULL, set_up, function, tear_down)
   TEST ("any-number-of-threads-gives-the-same-digits", any_number_of_threads_gives_the_same_digits);
   TEST ("what-was-planted-is-in-the-results", what_was_planted_is_in_the_results);
