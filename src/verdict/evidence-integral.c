@@ -28,6 +28,7 @@ typedef struct
   AntRandom random;
   AntIntegral *result;
   double centre[N], factor[N * N]; /* of the proposal: a Student t with 4 degrees of freedom, scale L L' */
+  double quantity[FINAL_SAMPLES * ANT_INTEGRAL_QUANTITIES];
   double point[FINAL_SAMPLES * N], value[FINAL_SAMPLES], log_weight[FINAL_SAMPLES];
 } Integral;
 
@@ -274,18 +275,18 @@ effective (const Integral *it, size_t count, double power, double highest, doubl
   return squares > 0 ? *sum * *sum / squares : 0;
 }
 
-/* Mean and covariance of the weighted samples. */
+/* Mean [n] and covariance [n][n] of n numbers for each weighted sample. */
 static void
-moments (const Integral *it, size_t count, double power, double highest, double sum, double *mean, double *covariance)
+moments (const Integral *it, size_t count, double power, double highest, double sum, size_t n, const double *number,
+         double *mean, double *covariance)
 {
-  size_t n = it->n;
-  memset (mean, 0, N * sizeof *mean);
-  memset (covariance, 0, N * N * sizeof *covariance);
+  memset (mean, 0, n * sizeof *mean);
+  memset (covariance, 0, n * n * sizeof *covariance);
   for (int pass = 0; pass < 2; pass++)
     for (size_t s = 0; s < count; s++)
       {
         double weight = exp (power * (it->log_weight[s] - highest)) / sum;
-        const double *u = it->point + s * n;
+        const double *u = number + s * n;
         if (!(weight > 0)) /* outside the cube */
           continue;
         for (size_t i = 0; i < n; i++)
@@ -315,7 +316,7 @@ adapt (Integral *it)
     return;
   while (effective (it, ADAPT_SAMPLES, power, highest, &sum) < LEAST_EFFECTIVE && power > 1e-3)
     power *= 0.7;
-  moments (it, ADAPT_SAMPLES, power, highest, sum, mean, covariance);
+  moments (it, ADAPT_SAMPLES, power, highest, sum, it->n, it->point, mean, covariance);
   propose (it, mean, covariance);
 }
 
@@ -361,13 +362,10 @@ ant_evidence_integral (size_t n, AntLogFunction f, AntQuantities quantities, voi
   double highest = highest_weight (&it, FINAL_SAMPLES);
   result->effective = effective (&it, FINAL_SAMPLES, 1, highest, &sum);
   result->log_integral = highest + log (sum / FINAL_SAMPLES);
-  for (size_t s = 0; s < FINAL_SAMPLES && quantities; s++)
+  for (size_t s = 0; s < FINAL_SAMPLES && quantities.tell; s++)
     if (it.log_weight[s] > -HUGE_VAL)
-      {
-        double quantity[N] = { 0 };
-        quantities (data, it.point + s * n, quantity);
-        memcpy (it.point + s * n, quantity, n * sizeof *quantity);
-      }
-  moments (&it, FINAL_SAMPLES, 1, highest, sum, result->mean, result->covariance);
+      quantities.tell (data, it.point + s * n, it.quantity + s * quantities.count);
+  result->n = quantities.tell ? quantities.count : n;
+  moments (&it, FINAL_SAMPLES, 1, highest, sum, result->n, quantities.tell ? it.quantity : it.point, result->mean, result->covariance);
   return isfinite (result->log_integral) ? ANT_OK : ANT_NO_DATA;
 }

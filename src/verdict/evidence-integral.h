@@ -10,21 +10,26 @@
 #include "core/status.h"
 
 #define ANT_INTEGRAL_DIMENSIONS 4
+#define ANT_INTEGRAL_QUANTITIES 5
 #define ANT_INTEGRAL_BATCH 8
 #define ANT_INTEGRAL_STARTS 256
 
 /* ln f at n_points <= ANT_INTEGRAL_BATCH points of the cube, u [n_points][n]; -HUGE_VAL where f is 0. */
 typedef void (*AntLogFunction) (void *data, size_t n_points, const double *u, double *value);
 
-/* What means and covariances are to be of, n quantities at one point; NULL: the point itself. */
-typedef void (*AntQuantities) (void *data, const double *u, double *quantity);
+/* What means and covariances are to be of: `count` quantities at one point; tell NULL: the point itself. */
+typedef struct
+{
+  size_t count; /* at most ANT_INTEGRAL_QUANTITIES */
+  void (*tell) (void *data, const double *u, double *quantity);
+} AntQuantities;
 
 typedef struct
 {
-  size_t n;
+  size_t n;                                         /* quantities: rows of the covariance */
   double best[ANT_INTEGRAL_DIMENSIONS], best_value; /* the highest point met */
-  double mean[ANT_INTEGRAL_DIMENSIONS];             /* of the quantities, under f as a density */
-  double covariance[ANT_INTEGRAL_DIMENSIONS * ANT_INTEGRAL_DIMENSIONS];
+  double mean[ANT_INTEGRAL_QUANTITIES];             /* of the quantities, under f as a density */
+  double covariance[ANT_INTEGRAL_QUANTITIES * ANT_INTEGRAL_QUANTITIES];
   double log_integral;
   double log_laplace; /* what the Gaussian alone gives; NaN if the curvature is none */
   double effective;   /* number of independent samples that the integral rests on */
@@ -33,3 +38,4 @@ typedef struct
 /* start [n_starts][n], at most ANT_INTEGRAL_STARTS; 1 <= n <= 4. ANT_NO_DATA if f is 0 at all starts. */
 AntStatus ant_evidence_integral (size_t n, AntLogFunction f, AntQuantities quantities, void *data, size_t n_starts,
                                  const double *start, AntIntegral *result);
+#define ANT_NO_QUANTITIES ((AntQuantities){ 0, NULL })

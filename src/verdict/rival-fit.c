@@ -184,15 +184,17 @@ ant_rival_chi2_of_nothing (const AntRivalBench *bench, const AntDip *dip)
   return chi2_around (bench, dip, NULL, 0);
 }
 
-/* What means and spreads are taken of: the parameters, logarithms where the prior has them. */
+/* What means and spreads are taken of: the parameters, logarithms where the prior has them, and a crossing's depth. */
 static void
-quantities (void *data, const double *u, double *quantity)
+tell_quantities (void *data, const double *u, double *quantity)
 {
   const Cube *cube = data;
-  from_cube (cube, u, quantity);
-  for (size_t i = 0; i < cube->prior->n; i++)
-    if (cube->prior->range[i].logarithmic)
-      quantity[i + 1] = log (quantity[i + 1]);
+  double parameter[ANT_RIVAL_PARAMETERS] = { 0 };
+  from_cube (cube, u, parameter);
+  for (size_t i = 0; i <= cube->prior->n; i++)
+    quantity[i] = i > 0 && cube->prior->range[i - 1].logarithmic ? log (parameter[i]) : parameter[i];
+  if (cube->kind == ANT_RIVAL_CROSSING)
+    quantity[4] = ant_transit_loss (parameter[3], parameter[2], cube->bench->limb_darkening) / ANT_PPM;
 }
 
 /* The best parameters, their spread, and the depth there. */
@@ -211,10 +213,12 @@ describe (const Cube *cube, const AntDip *dip, const AntIntegral *integral, AntR
     }
   ant_rival_curve_init (&curve, fit->kind, fit->parameter, bench->limb_darkening, &bench->eclipse);
   project (bench, 1, &curve, &drawn, energy, moment);
-  fit->depth_sigma_ppm = 1 / sqrt (energy[0]);
-  fit->depth_ppm = bench->sign * (fit->kind == ANT_RIVAL_CROSSING ? curve.tied_depth_ppm : moment[0] / energy[0]);
-  fit->log_gain = log_tied_depth (moment[0], energy[0], bench->sign * fit->depth_ppm);
-  fit->chi2 = chi2_around (bench, dip, &curve, fit->depth_ppm);
+  int tied = fit->kind == ANT_RIVAL_CROSSING;
+  double best = tied ? curve.tied_depth_ppm : moment[0] / energy[0];
+  fit->depth_ppm = bench->sign * (tied ? integral->mean[4] : best);
+  fit->depth_sigma_ppm = tied ? sqrt (integral->covariance[4 * integral->n + 4]) : 1 / sqrt (energy[0]);
+  fit->log_gain = log_tied_depth (moment[0], energy[0], best);
+  fit->chi2 = chi2_around (bench, dip, &curve, bench->sign * best);
   fit->log_evidence = integral->log_integral + log (unit_d);
 }
 
@@ -234,6 +238,7 @@ ant_rival_fit (const AntRivalBench *bench, const AntDip *dip, AntRivalKind kind,
   size_t n_starts = ant_rival_starts (kind, dip, bench->limb_darkening, parameter);
   for (size_t i = 0; i < n_starts; i++)
     to_cube (&cube, parameter[i], start + i * (prior->n + 1));
+  AntQuantities quantities = { kind == ANT_RIVAL_CROSSING ? 5 : prior->n + 1, tell_quantities };
   AntStatus status = ant_evidence_integral (prior->n + 1, log_likelihoods, quantities, &cube, n_starts, start, &integral);
   if (status)
     return status;

@@ -34,7 +34,7 @@ check_bell (size_t n, double mixing, double tolerance)
   Bell b = { .n = n, .centre = { 0.4, 0.55, 0.5, 0.6 }, .scale = { 0.003, 0.02, 0.01, 0.03 }, .mixing = mixing };
   AntIntegral result;
   double start[4] = { 0.42, 0.5, 0.52, 0.55 }, expected = 0;
-  g_assert_cmpint (ant_evidence_integral (n, bell, NULL, &b, 1, start, &result), ==, ANT_OK);
+  g_assert_cmpint (ant_evidence_integral (n, bell, ANT_NO_QUANTITIES, &b, 1, start, &result), ==, ANT_OK);
   for (size_t k = 0; k < n; k++)
     expected += log (b.scale[k] * sqrt (ANT_TAU));
   g_assert_cmpfloat_with_epsilon (result.log_integral, expected, tolerance);
@@ -74,7 +74,7 @@ test_flat_top (void)
 {
   AntIntegral result;
   double start[2] = { 0.546, 0.5 }, expected = log ((0.1 + 0.001 * sqrt (ANT_TAU)) * 0.02 * sqrt (ANT_TAU));
-  g_assert_cmpint (ant_evidence_integral (2, box, NULL, NULL, 1, start, &result), ==, ANT_OK);
+  g_assert_cmpint (ant_evidence_integral (2, box, ANT_NO_QUANTITIES, NULL, 1, start, &result), ==, ANT_OK);
   g_assert_cmpfloat_with_epsilon (result.log_integral, expected, 0.2);
 }
 
@@ -91,7 +91,7 @@ test_face (void)
 {
   AntIntegral result;
   double start = 0.3;
-  g_assert_cmpint (ant_evidence_integral (1, slope, NULL, NULL, 1, &start, &result), ==, ANT_OK);
+  g_assert_cmpint (ant_evidence_integral (1, slope, ANT_NO_QUANTITIES, NULL, 1, &start, &result), ==, ANT_OK);
   g_assert_cmpfloat_with_epsilon (result.log_integral, log (1.0 / 30), 0.15);
 }
 
@@ -107,7 +107,7 @@ test_nothing_to_integrate (void)
 {
   AntIntegral result;
   double start = 0.3;
-  g_assert_cmpint (ant_evidence_integral (1, nowhere, NULL, NULL, 1, &start, &result), ==, ANT_NO_DATA);
+  g_assert_cmpint (ant_evidence_integral (1, nowhere, ANT_NO_QUANTITIES, NULL, 1, &start, &result), ==, ANT_NO_DATA);
 }
 
 static void
@@ -116,8 +116,8 @@ test_same_digits (void)
   Bell b = { .n = 2, .centre = { 0.4, 0.5 }, .scale = { 0.01, 0.02 } };
   AntIntegral one, two;
   double start[2] = { 0.45, 0.45 };
-  ant_evidence_integral (2, bell, NULL, &b, 1, start, &one);
-  ant_evidence_integral (2, bell, NULL, &b, 1, start, &two);
+  ant_evidence_integral (2, bell, ANT_NO_QUANTITIES, &b, 1, start, &one);
+  ant_evidence_integral (2, bell, ANT_NO_QUANTITIES, &b, 1, start, &two);
   g_assert_cmpfloat (one.log_integral, ==, two.log_integral);
 }
 
