@@ -53,6 +53,27 @@ ant_probability_words (double probability)
   return g_strdup_printf (probability > 0.99 || probability < 0.1 ? "%.1f %%" : "%.0f %%", 100 * probability);
 }
 
+char *
+ant_class_words (AntDipClass analyst, const AntVerdict *verdict)
+{
+  if (analyst != ANT_CLASS_UNDECIDED || !verdict)
+    return g_strdup (ant_dip_class_title (analyst));
+  g_autofree char *likely = ant_probability_words (ant_verdict_probability (verdict));
+  AntDipClass class = ant_verdict_class (verdict);
+  return class == ANT_CLASS_UNDECIDED ? g_strdup (ant_dip_class_title (class)) : g_strdup_printf ("%s %s", ant_dip_class_title (class), likely);
+}
+
+void
+ant_verdict_facts (const AntVerdict *verdict, GPtrArray *facts)
+{
+  g_autofree char *likely = ant_probability_words (ant_verdict_probability (verdict));
+  g_autofree char *shape_likely = ant_probability_words (ant_verdict_shape_probability (verdict));
+  g_autofree char *class = g_strdup_printf ("%s, %s", ant_dip_class_title (ant_cause_class (verdict->cause)), likely);
+  g_autofree char *shape = g_strdup_printf ("%s, %s", ant_dip_class_title (ant_cause_class (verdict->shape)), shape_likely);
+  ant_facts_add (facts, _("Taken for"), class);
+  ant_facts_add (facts, _("By shape alone"), shape);
+}
+
 const char *
 ant_rival_title (AntRivalKind kind)
 {
@@ -207,6 +228,15 @@ sentence (const AntEvidence *evidence)
     default:
       return NULL;
     }
+}
+
+char *
+ant_weight_words (double weight)
+{
+  if (fabs (weight) < 0.05)
+    return g_strdup ("0");
+  g_autofree char *number = ant_number_words (weight, fabs (weight) < 10 ? 1 : 0);
+  return g_strconcat (weight > 0 ? "+" : "", number, NULL);
 }
 
 static void

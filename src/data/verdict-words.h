@@ -16,6 +16,10 @@ double ant_verdict_probability (const AntVerdict *verdict);
 double ant_verdict_shape_probability (const AntVerdict *verdict);
 /* "97 %", "> 99.9 %", "< 0.1 %". Caller frees. */
 char *ant_probability_words (double probability);
+/* What a list shows: the analyst's word as it is, the program's with its probability, "planet-shaped 97 %". Caller frees. */
+char *ant_class_words (AntDipClass analyst, const AntVerdict *verdict);
+/* The program's verdict and the shape's as AntFact (data/dip-words.h), added to facts. */
+void ant_verdict_facts (const AntVerdict *verdict, GPtrArray *facts);
 /* "crossing", translated. Static. */
 const char *ant_rival_title (AntRivalKind kind);
 
@@ -26,6 +30,8 @@ typedef struct
   double weight;
 } AntEvidenceLine;
 
+/* "+12.3", "0": for a column of weights. Caller frees. */
+char *ant_weight_words (double weight);
 /* Of AntEvidenceLine, heaviest first: the shapes, then everything else. Caller unrefs. */
 GPtrArray *ant_verdict_lines (const AntVerdict *verdict);
 /* For tables, never translated: "shape crossing 0.981 trapezoid 0.012; chance 2.1e-12 (-24.1); gap none (-0.4)".

@@ -28,7 +28,8 @@ ant_closeup_view_desk_changed (AntPlotView *plot, AntDeskChange what)
     self->data = ant_closeup_data_new_passage (ant_desk_get_results (desk), ant_dip_item_get_dip (item));
   else
     self->data =
-        ant_closeup_data_new (ant_desk_get_layers (desk), ant_desk_get_settings (desk), ant_dip_item_get_dip (item));
+        ant_closeup_data_new (ant_desk_get_layers (desk), ant_desk_get_settings (desk), ant_dip_item_get_dip (item),
+                              ant_dip_item_get_verdict (item));
   g_autofree char *title = ant_dip_item_title (item);
   ant_plot_view_set_title (plot, title);
 }

@@ -135,11 +135,12 @@ ant_desk_open (AntDesk *self, const char *path)
 }
 
 static void
-add_items (AntDesk *self, AntDipKind kind, gsize n, const AntDip *dip)
+add_items (AntDesk *self, AntDipKind kind, gsize n, const AntDip *dip, const AntVerdict *verdict)
 {
   for (gsize i = 0; i < n; i++)
     {
       g_autoptr (AntDipItem) item = ant_dip_item_new (kind, (guint) i + 1, &dip[i], NAN);
+      ant_dip_item_set_verdict (item, verdict ? &verdict[i] : NULL);
       ant_dip_item_judge (item, ant_judgements_class (self->judgements, dip[i].mid_d, dip[i].duration_d),
                           ant_judgements_note (self->judgements, dip[i].mid_d, dip[i].duration_d));
       g_list_store_append (self->items, item);
@@ -181,8 +182,9 @@ take_outcome (AntDesk *self, AntScanOutcome *outcome)
   g_clear_pointer (&self->layers, ant_layers_unref);
   self->layers = g_steal_pointer (&outcome->layers);
   self->results = g_steal_pointer (&outcome->results);
-  add_items (self, ANT_KIND_DIP, self->results->n_dips, self->results->dip);
-  add_items (self, ANT_KIND_BRIGHTENING, self->results->n_brightenings, self->results->brightening);
+  add_items (self, ANT_KIND_DIP, self->results->n_dips, self->results->dip, self->results->dip_verdict);
+  add_items (self, ANT_KIND_BRIGHTENING, self->results->n_brightenings, self->results->brightening,
+             self->results->brightening_verdict);
   for (guint i = 0; i < asked->len; i++)
     g_list_store_append (self->items, g_ptr_array_index (asked, i));
   g_autofree AntDip *passage = g_new (AntDip, self->results->n_passages + 1);

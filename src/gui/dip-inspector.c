@@ -3,6 +3,7 @@
 
 #include <glib/gi18n.h>
 
+#include "data/verdict-words.h"
 #include "gui/closeup-view.h"
 #include "gui/fact-list.h"
 
@@ -14,7 +15,8 @@ struct _AntDipInspector
   GtkStack *stack;
   GtkLabel *title, *span;
   AntCloseupView *closeup;
-  AntFactList *facts;
+  AntFactList *facts, *evidence;
+  GtkLabel *evidence_title;
   GtkDropDown *verdict;
   GtkEntry *note;
 
@@ -35,6 +37,22 @@ show_judgement (AntDipInspector *self, AntDipItem *item)
   self->filling = FALSE;
 }
 
+/* Why the program takes it for what it does, heaviest first: ln odds for its class, then the sentence. */
+static void
+show_evidence (AntDipInspector *self, const AntVerdict *verdict)
+{
+  g_autoptr (GPtrArray) facts = g_ptr_array_new_with_free_func (ant_fact_free);
+  g_autoptr (GPtrArray) lines = verdict ? ant_verdict_lines (verdict) : NULL;
+  for (guint i = 0; lines && i < lines->len; i++)
+    {
+      const AntEvidenceLine *line = g_ptr_array_index (lines, i);
+      g_autofree char *weight = ant_weight_words (line->weight);
+      ant_facts_add (facts, weight, line->text);
+    }
+  ant_fact_list_set_facts (self->evidence, facts);
+  gtk_widget_set_visible (GTK_WIDGET (self->evidence_title), facts->len > 0);
+}
+
 static void
 show (AntDipInspector *self)
 {
@@ -49,7 +67,10 @@ show (AntDipInspector *self)
   gtk_label_set_text (self->title, title);
   gtk_label_set_text (self->span, span);
   gtk_widget_set_tooltip_text (GTK_WIDGET (self->span), span);
+  if (ant_dip_item_get_verdict (item))
+    ant_verdict_facts (ant_dip_item_get_verdict (item), facts);
   ant_fact_list_set_facts (self->facts, facts);
+  show_evidence (self, ant_dip_item_get_verdict (item));
   show_judgement (self, item);
 }
 
@@ -114,6 +135,8 @@ ant_dip_inspector_class_init (AntDipInspectorClass *klass)
   gtk_widget_class_bind_template_child (widget_class, AntDipInspector, span);
   gtk_widget_class_bind_template_child (widget_class, AntDipInspector, closeup);
   gtk_widget_class_bind_template_child (widget_class, AntDipInspector, facts);
+  gtk_widget_class_bind_template_child (widget_class, AntDipInspector, evidence);
+  gtk_widget_class_bind_template_child (widget_class, AntDipInspector, evidence_title);
   gtk_widget_class_bind_template_child (widget_class, AntDipInspector, verdict);
   gtk_widget_class_bind_template_child (widget_class, AntDipInspector, note);
   gtk_widget_class_bind_template_callback (widget_class, verdict_chosen_cb);

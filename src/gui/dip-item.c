@@ -3,6 +3,8 @@
 
 #include <glib/gi18n.h>
 
+#include "data/verdict-words.h"
+
 struct _AntDipItem
 {
   GObject parent_instance;
@@ -10,6 +12,7 @@ struct _AntDipItem
   guint number;
   AntDip dip;
   double upper_limit_ppm;
+  AntVerdict *verdict; /* owned, or NULL */
   AntDipClass class;
   char *note;
 };
@@ -57,6 +60,25 @@ double
 ant_dip_item_get_upper_limit_ppm (AntDipItem *self)
 {
   return self->upper_limit_ppm;
+}
+
+void
+ant_dip_item_set_verdict (AntDipItem *self, const AntVerdict *verdict)
+{
+  g_free (self->verdict);
+  self->verdict = g_memdup2 (verdict, verdict ? sizeof *verdict : 0);
+}
+
+const AntVerdict *
+ant_dip_item_get_verdict (AntDipItem *self)
+{
+  return self->verdict;
+}
+
+AntDipClass
+ant_dip_item_get_shown_class (AntDipItem *self)
+{
+  return self->class == ANT_CLASS_UNDECIDED && self->verdict ? ant_verdict_class (self->verdict) : self->class;
 }
 
 AntDipClass
@@ -116,12 +138,13 @@ ant_dip_item_label (AntDipItem *self)
 AntDipLook
 ant_dip_item_look (AntDipItem *self)
 {
-  return ant_dip_look_of (self->class);
+  return ant_dip_look_of (ant_dip_item_get_shown_class (self));
 }
 
 static void
 ant_dip_item_finalize (GObject *object)
 {
+  g_free (ANT_DIP_ITEM (object)->verdict);
   g_free (ANT_DIP_ITEM (object)->note);
   G_OBJECT_CLASS (ant_dip_item_parent_class)->finalize (object);
 }

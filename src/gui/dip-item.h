@@ -6,6 +6,7 @@
 #include "data/judgement.h"
 #include "plot/dip-mark.h"
 #include "search/dip.h"
+#include "verdict/verdict.h"
 
 typedef enum
 {
@@ -25,7 +26,13 @@ guint ant_dip_item_get_number (AntDipItem *self);
 const AntDip *ant_dip_item_get_dip (AntDipItem *self);
 double ant_dip_item_get_upper_limit_ppm (AntDipItem *self);
 
-/* Property "judgement" (int, read) is notified when either changes. */
+/* The program's own verdict, copied; NULL where there is none. */
+void ant_dip_item_set_verdict (AntDipItem *self, const AntVerdict *verdict);
+const AntVerdict *ant_dip_item_get_verdict (AntDipItem *self);
+/* What it is shown as: the analyst's word, else the program's. */
+AntDipClass ant_dip_item_get_shown_class (AntDipItem *self);
+
+/* The analyst's word. Property "judgement" (int, read) is notified when either changes. */
 AntDipClass ant_dip_item_get_class (AntDipItem *self);
 const char *ant_dip_item_get_note (AntDipItem *self);
 void ant_dip_item_judge (AntDipItem *self, AntDipClass class, const char *note);

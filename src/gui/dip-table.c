@@ -5,6 +5,7 @@
 #include <math.h>
 #include <string.h>
 
+#include "data/verdict-words.h"
 #include "gui/look-icon.h"
 
 struct _AntDipTable
@@ -71,7 +72,8 @@ static char *
 class_text (AntDesk *desk, AntDipItem *item)
 {
   gboolean noted = *ant_dip_item_get_note (item) != '\0';
-  return g_strconcat (ant_dip_class_title (ant_dip_item_get_class (item)), noted ? " ✎" : "", NULL);
+  g_autofree char *words = ant_class_words (ant_dip_item_get_class (item), ant_dip_item_get_verdict (item));
+  return g_strconcat (words, noted ? " ✎" : "", NULL);
 }
 
 static double
@@ -107,7 +109,7 @@ snr_key (AntDipItem *item)
 static double
 class_key (AntDipItem *item)
 {
-  return ant_dip_item_get_class (item);
+  return ant_dip_item_get_shown_class (item);
 }
 
 static const Column columns[] = {
@@ -222,7 +224,10 @@ kept_cb (gpointer object, gpointer data)
   g_autofree char *wanted = g_utf8_casefold (gtk_editable_get_text (GTK_EDITABLE (self->search)), -1);
   g_autofree char *title = ant_dip_item_title (item),
                   *middle = ant_instant_words (ant_desk_get_record (self->desk), ant_dip_item_get_dip (item)->mid_d);
-  g_autofree char *all = g_strjoin ("\n", title, middle, ant_dip_class_title (ant_dip_item_get_class (item)),
+  const AntVerdict *verdict = ant_dip_item_get_verdict (item);
+  AntRivalKind ranking[ANT_N_RIVALS];
+  const char *shape = verdict && ant_verdict_ranking (verdict, ranking) > 0 ? ant_rival_title (ranking[0]) : "";
+  g_autofree char *all = g_strjoin ("\n", title, middle, shape, ant_dip_class_title (ant_dip_item_get_shown_class (item)),
                                     ant_dip_item_get_note (item), NULL);
   g_autofree char *folded = g_utf8_casefold (all, -1);
   return strstr (folded, wanted) != NULL;

@@ -6,6 +6,7 @@
 
 #include "core/robust.h"
 #include "core/units.h"
+#include "data/verdict-words.h"
 #include "search/crossing-shape.h"
 
 #define MOST_POINTS 160
@@ -27,6 +28,29 @@ draw_shape (AntCloseupData *data, const AntSettings *settings, const AntDip *dip
       ppm[i] = -dip->depth_ppm * ant_crossing_shape_mean (&shape, time_d, exposure_d);
     }
   data->shape[0] = (AntShapeLine) { _("fitted crossing"), SHAPE_POINTS, hours, ppm };
+}
+
+/* The likeliest other shapes, as they were fitted. */
+static gsize
+draw_rivals (AntCloseupData *data, const AntSettings *settings, const AntDip *dip, const AntVerdict *verdict, double exposure_d)
+{
+  AntRivalKind ranking[ANT_N_RIVALS];
+  AntCrossingShape eclipse;
+  gsize n = verdict ? ant_verdict_ranking (verdict, ranking) : 0, drawn = 0;
+  ant_rival_eclipse (settings->bank.limb_darkening, dip->depth_ppm, &eclipse);
+  for (gsize r = 0; r < n && drawn < ANT_CLOSEUP_RIVALS; r++)
+    {
+      const AntRivalFit *rival = &verdict->rival[ranking[r]];
+      double *hours = data->curve, *ppm = data->curve + (2 + drawn) * SHAPE_POINTS;
+      AntRivalCurve curve;
+      if (ranking[r] == ANT_RIVAL_CROSSING)
+        continue; /* the search's own is there */
+      ant_rival_curve_init (&curve, rival->kind, rival->parameter, settings->bank.limb_darkening, &eclipse);
+      for (int i = 0; i < SHAPE_POINTS; i++)
+        ppm[i] = -rival->depth_ppm * ant_rival_curve_mean (&curve, dip->mid_d + hours[i] / ANT_HOURS_PER_DAY, exposure_d);
+      data->shape[1 + drawn++] = (AntShapeLine) { ant_rival_title (ranking[r]), SHAPE_POINTS, hours, ppm };
+    }
+  return drawn;
 }
 
 /* The rotation curve is for looking only: what it leaves beside the dip is not quite zero, and the shape stands on
@@ -55,12 +79,12 @@ data_new (void)
 {
   AntCloseupData *data = g_new0 (AntCloseupData, 1);
   data->points = g_new (double, 3 * MOST_POINTS);
-  data->curve = g_new (double, 2 * SHAPE_POINTS);
+  data->curve = g_new (double, (2 + ANT_CLOSEUP_RIVALS) * SHAPE_POINTS);
   return data;
 }
 
 AntCloseupData *
-ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, const AntDip *dip)
+ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, const AntDip *dip, const AntVerdict *verdict)
 {
   const AntSeries *series = &layers->record->series;
   double exposure_d = layers->record->exposure_d > 0 ? layers->record->exposure_d : series->step_d;
@@ -72,6 +96,7 @@ ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, cons
   data->closeup = (AntDipCloseup) { .n = n, .hours = hours, .ppm = ppm, .error_ppm = error, .n_shapes = 1,
                                     .shape = data->shape, .contact_h = { -half_h, half_h } };
   draw_shape (data, settings, dip, exposure_d);
+  data->closeup.n_shapes += draw_rivals (data, settings, dip, verdict, exposure_d);
   level (data, settings, dip, exposure_d);
   return data;
 }

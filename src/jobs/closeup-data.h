@@ -5,16 +5,21 @@
 #include "data/settings.h"
 #include "jobs/layers.h"
 #include "plot/dip-closeup.h"
+#include "verdict/verdict.h"
+
+#define ANT_CLOSEUP_RIVALS 2
 
 typedef struct
 {
   AntDipCloseup closeup; /* its arrays belong to this struct */
-  AntShapeLine shape[1];
+  AntShapeLine shape[1 + ANT_CLOSEUP_RIVALS];
   double *points, *curve;
 } AntCloseupData;
 
-/* A millisecond of work. Never NULL; no points where nothing was observed. */
-AntCloseupData *ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, const AntDip *dip);
+/* A millisecond of work. Never NULL; no points where nothing was observed. With a verdict (may be NULL) the likeliest rivals
+ * of the fitted crossing are drawn too. */
+AntCloseupData *ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, const AntDip *dip,
+                                      const AntVerdict *verdict);
 /* Likewise of a passage (ant_passage_as_dip): the record's values, and the slow part drawn over them, if the results
  * have it. */
 AntCloseupData *ant_closeup_data_new_passage (const AntScanResults *results, const AntDip *passage);

@@ -70,7 +70,8 @@ tell_dip (const AntReport *report, AntPages *pages, gsize i)
   const AntPagesColumn columns[] = { { _("ln odds"), 1 }, { _("Evidence"), 0 } };
   const AntScanResults *results = report->results;
   const AntDip *dip = &results->dip[i];
-  AntCloseupData *data = ant_closeup_data_new (report->layers, &results->settings, dip);
+  AntCloseupData *data = ant_closeup_data_new (report->layers, &results->settings, dip,
+                                               results->dip_verdict ? &results->dip_verdict[i] : NULL);
   Drawing drawing = { &data->closeup, ant_pages_theme (pages) };
   g_autoptr (GPtrArray) facts = ant_dip_facts (results->record, dip, NAN, ANT_DEPTH_PPM), evidence = evidence_of (results, i);
   g_autofree char *middle = ant_instant_words (results->record, dip->mid_d);
