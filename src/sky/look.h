@@ -10,7 +10,7 @@
 #include "sky/observer.h"
 #include "sky/places.h"
 
-#define ANT_TRACK_NODES 7
+#define ANT_TRACK_NODES 6
 
 typedef struct
 {

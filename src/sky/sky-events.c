@@ -9,7 +9,6 @@
 #define ROUGH_MARGIN (180 * ARCSEC)  /* three times what rough separations are wrong by */
 #define BEHIND 0.26                  /* radians: a planet behind the Sun must pass an elongation of 15 degrees first */
 #define EARTH_SPEED_KM_S 30.3
-#define NEARER 0.2                   /* a step may change the body's distance by so much of it */
 #define FINEST 0.05                  /* of the sum of radii: the shortest step */
 #define LEAD_D 1.0                   /* no event lasts longer */
 #define INSIDE 256                   /* samples of an event, for its inner contacts and least separation */
@@ -55,10 +54,13 @@ apart (March *march, double tt_d, double *step_d)
     }
   if (!step_d)
     return gap;
-  double rate = march->speed_km_s / look.body_km + (EARTH_SPEED_KM_S + march->speed_km_s) / look.sun_km;
+  /* The Sun is covered when the line to it passes the body's centre within the body's radius: how far that is from being
+   * so, and how fast it can come about by the body's motion and the Sun's. */
+  double line = fmin (fmax (look.separation - look.sun_radius - look.halo - ROUGH_MARGIN, 0), 0.5 * ANT_PI);
+  double away_km = look.body_km * sin (line) - march->watch.radii.body_km[march->watch.body];
+  double speed_km_s = march->speed_km_s + (EARTH_SPEED_KM_S + march->speed_km_s) * look.body_km / look.sun_km;
   march->finest = FINEST * touch;
-  double step_s = fmin (fmax (gap, march->finest) / rate, NEARER * look.body_km / fmax (march->speed_km_s, 1e-3));
-  *step_d = step_s / ANT_SECONDS_PER_DAY;
+  *step_d = fmax (away_km, march->finest * look.body_km) / speed_km_s / ANT_SECONDS_PER_DAY;
   return gap;
 }
 
