@@ -190,7 +190,7 @@ take_outcome (AntDesk *self, AntScanOutcome *outcome)
   g_autofree AntDip *passage = g_new (AntDip, self->results->n_passages + 1);
   for (gsize i = 0; i < self->results->n_passages; i++)
     passage[i] = ant_passage_as_dip (&self->results->passage[i]);
-  add_items (self, ANT_KIND_PASSAGE, self->results->n_passages, passage);
+  add_items (self, ANT_KIND_PASSAGE, self->results->n_passages, passage, NULL);
   ant_desk_make_marks (self);
   select_again (self, selected_d);
   ant_desk_begin_fold (self);
