@@ -16,6 +16,7 @@ void ant_report_summary (const AntReport *report, AntPages *pages);      /* reco
 void ant_report_time (const AntReport *report, AntPages *pages);         /* the time stack */
 void ant_report_noise (const AntReport *report, AntPages *pages);        /* spectrum, parts, floor */
 void ant_report_dips (const AntReport *report, AntPages *pages);         /* one by one */
+void ant_report_repeats (const AntReport *report, AntPages *pages);      /* what recurs, event by event */
 void ant_report_brightenings (const AntReport *report, AntPages *pages);
 void ant_report_passages (const AntReport *report, AntPages *pages);
 void ant_report_settings (const AntReport *report, AntPages *pages);     /* settings, and how to do it again */

@@ -9,7 +9,7 @@
 
 static void (*const sections[]) (const AntReport *report, AntPages *pages) = {
   ant_report_summary, ant_report_time,         ant_report_noise,    ant_report_dips,
-  ant_report_brightenings, ant_report_passages, ant_report_settings,
+  ant_report_repeats,      ant_report_brightenings, ant_report_passages, ant_report_settings,
 };
 
 char *

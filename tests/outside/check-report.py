@@ -14,7 +14,7 @@ for tool in ("pdffonts", "pdftotext", "pdfinfo", "pdftohtml", "pdftoppm"):
     if not shutil.which(tool):
         skip(tool)
 
-HEADINGS = ["The record", "What was found", "The whole record", "The noise", "What would have been missed", "Settings", "Where this comes from"]
+HEADINGS = ["The record", "What was found", "The whole record", "The noise", "What would have been missed", "Repeats", "Settings", "Where this comes from"]
 
 
 def recipe(n_dips):

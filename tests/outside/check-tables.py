@@ -41,8 +41,8 @@ depth_ppm = 500
 impact = 0.1
 duration_h = 4
 """
-FITS_TABLES = ["dips", "brightenings", "passages", "series"]
-VOTABLES = ["dips", "brightenings", "passages"]
+FITS_TABLES = ["dips", "brightenings", "passages", "repeats", "periods", "series"]
+VOTABLES = ["dips", "brightenings", "passages", "repeats"]
 DIP_UCDS = {"depth_ppm": "phot.flux.bol;arith.ratio;stat.max", "mean_depth_ppm": "phot.flux.bol;arith.ratio;stat.mean",
             "radius_ratio": "phys.size.radius;arith.ratio", "depth_sigma_ppm": "stat.error;phot.flux.bol;arith.ratio;stat.max",
             "snr": "stat.snr;meta.main", "class": "meta.code.class", "start_jd": "time.start", "end_jd": "time.end"}
@@ -154,7 +154,7 @@ def check_votable(checks, form, out):
         checks.within("%s: %s.vot holds the digits of the CSV: departures" % (form, name), wrong, 0)
         checks.within("%s: %s.vot passes the validator: faults" % (form, name), 0 if valid(path) else 1, 0)
         systems = list(file.resources[0].time_systems)
-        refers = fields["mid_jd"].ref is not None
+        refers = any(field.ref for field in table.fields)
         checks.within("%s: %s.vot has its time system just if it is known" % (form, name), (len(systems) == 1 and refers) != (form == "utc"), 0)
         if systems:
             told = (systems[0].timescale, systems[0].timeorigin, systems[0].refposition)
