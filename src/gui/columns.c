@@ -2,8 +2,8 @@
 #include "gui/columns.h"
 
 #define GAP 10
-#define WIDE 900  /* room for all */
-#define MIDDLE 560 /* room for two */
+#define WIDE 1000 /* room for all */
+#define MIDDLE 700 /* room for two */
 #define FIRST_SHARE 1.2 /* the first is wider than each other by this */
 
 struct _AntColumns
