@@ -54,8 +54,18 @@ ant_snr_track_free (AntSnrTrack *track)
   free (track);
 }
 
-/* Each place of the chunk's own part takes the start whose middle is nearest. Member 0 stands on a place; others are
- * its sub-sample phases. */
+/* SNR of a start, NaN where it is none or covered too little. Member 0 stands on a place; others are its sub-sample
+ * phases. */
+static float
+snr_of (const AntFamilyMap *family, size_t n_members, double start)
+{
+  if (!(start >= 0 && start < (double) family->n_starts))
+    return NAN;
+  size_t cell = (size_t) start * n_members;
+  return isnan (family->sigma_ppm[cell]) ? NAN : family->snr[cell];
+}
+
+/* Each place of the chunk's own part lies between two starts, whose middles are half an edge apart. */
 static void
 read_map (AntSnrTrack *track, const AntChunk *chunk, const AntDipMap *map)
 {
@@ -65,11 +75,12 @@ read_map (AntSnrTrack *track, const AntChunk *chunk, const AntDipMap *map)
   size_t from = (size_t) fmax (ceil (chunk->own_from), 0), to = (size_t) fmin (ceil (chunk->own_to), (double) track->series.n);
   for (size_t p = from; p < to; p++)
     {
-      double start = round (((double) p - first) / (double) stride);
-      if (!(start >= 0 && start < (double) family->n_starts))
-        continue;
-      size_t cell = (size_t) start * members;
-      track->snr[p] = isnan (family->sigma_ppm[cell]) ? NAN : family->snr[cell];
+      double start = ((double) p - first) / (double) stride, before = floor (start), part = start - before;
+      float left = snr_of (family, members, before), right = part > 0 ? snr_of (family, members, before + 1) : left;
+      if (isnan (left) || isnan (right))
+        track->snr[p] = part < 0.5 ? left : right;
+      else
+        track->snr[p] = (float) ((1 - part) * (double) left + part * (double) right);
     }
 }
 

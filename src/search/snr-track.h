@@ -19,6 +19,6 @@ AntSnrTrack *ant_snr_track_new (const AntSeries *series, const AntBankOptions *b
                                 double duration_d, size_t n_chunks, const AntChunk *chunk, AntStatus *status);
 void ant_snr_track_free (AntSnrTrack *track); /* NULL is fine */
 const AntStages *ant_snr_track_stages (void);
-/* [series->n] SNR of the dip whose middle is nearest to each place (they are half an edge apart); NaN where too little of
- * it is observed. Valid after the last stage. */
+/* [series->n] SNR of the dip with its middle at each place, read between middles half an edge apart; NaN where too little
+ * of it is observed. Valid after the last stage. */
 const float *ant_snr_track_snr (const AntSnrTrack *track);
