@@ -5,6 +5,7 @@
 
 #include "cli/exit-code.h"
 #include "cli/json-values.h"
+#include "cli/fold-options.h"
 #include "cli/record-options.h"
 #include "cli/settings-options.h"
 #include "cli/verbs.h"
@@ -308,8 +309,8 @@ print_json (const AntRecord *record, const AntRecordSummary *summary, gboolean g
 
 /* A record that no grid can be laid on is told about as far as it was read; the exit code tells the rest. */
 static int
-tell (const char *path, const AntRecordOptions *reading, const AntWitnessOptions *witness, const AntSettingsOptions *given,
-      gboolean as_json)
+tell (const char *path, const AntRecordOptions *reading, const AntWitnessOptions *witness, const AntFoldWish *fold,
+      const AntSettingsOptions *given, gboolean as_json)
 {
   g_autoptr (GError) error = NULL;
   AntSettings settings;
@@ -324,7 +325,9 @@ tell (const char *path, const AntRecordOptions *reading, const AntWitnessOptions
     gridded = ant_record_make_grid (record, &grid, &error);
   g_autoptr (GPtrArray) witnesses = gridded ? ant_witness_options_open (witness, record, &settings, ant_stop_on_signals (), &error) : NULL;
   g_clear_pointer (&grid.good_values, g_array_unref);
-  if (record)
+  if (gridded && fold->clock && !error)
+    ant_fold_options_print (fold, record, &settings, &error);
+  else if (record)
     {
       ant_record_summarise (record, gridded, &summary);
       if (as_json)
@@ -343,6 +346,7 @@ ant_verb_info (int argc, char **argv)
   gboolean as_json = FALSE;
   AntRecordOptions reading = { 0 };
   AntWitnessOptions witness = { 0 };
+  AntFoldWish fold = { 0 };
   AntSettingsOptions given = { 0 };
   const GOptionEntry entries[] = { { "json", 0, 0, G_OPTION_ARG_NONE, &as_json, N_("print JSON"), NULL }, { NULL } };
   g_autoptr (GOptionContext) context = g_option_context_new (_("RECORD"));
@@ -350,6 +354,7 @@ ant_verb_info (int argc, char **argv)
   g_option_context_add_main_entries (context, entries, NULL);
   ant_record_options_add (context, &reading);
   ant_witness_options_add (context, &witness);
+  ant_fold_options_add (context, &fold);
   ant_settings_options_add (context, &given);
 
   g_autoptr (GError) error = NULL;
@@ -359,9 +364,10 @@ ant_verb_info (int argc, char **argv)
   else if (argc != 2)
     code = ant_cli_fail_usage (_("info: found %d files, expected one record"), argc - 1);
   else
-    code = tell (argv[1], &reading, &witness, &given, as_json);
+    code = tell (argv[1], &reading, &witness, &fold, &given, as_json);
   ant_record_options_clear (&reading);
   ant_witness_options_clear (&witness);
+  ant_fold_options_clear (&fold);
   ant_settings_options_clear (&given);
   return code;
 }
