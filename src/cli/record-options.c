@@ -65,17 +65,39 @@ parse_fill (const char *text, GArray *values, GError **error)
   return TRUE;
 }
 
+static void
+choose (char **place, const char *chosen)
+{
+  if (!chosen)
+    return;
+  g_free (*place);
+  *place = g_strdup (chosen);
+}
+
+gboolean
+ant_record_options_choose (const AntRecordOptions *options, AntReadingChoices *choices, GError **error)
+{
+  choose (&choices->time_format, options->time_format);
+  choose (&choices->time_scale, options->time_scale);
+  choose (&choices->time_zone, options->time_zone);
+  choose (&choices->epoch, options->epoch);
+  choose (&choices->hdu, options->hdu);
+  choose (&choices->index, options->index);
+  if (options->fill)
+    {
+      g_clear_pointer (&choices->fill_values, g_array_unref);
+      choices->fill_values = g_array_new (FALSE, FALSE, sizeof (double));
+    }
+  return (!options->columns || ant_reading_choices_parse_columns (choices, options->columns, error))
+         && (!options->fill || parse_fill (options->fill, choices->fill_values, error));
+}
+
 AntRecord *
 ant_record_options_read (const AntRecordOptions *options, const char *path, GCancellable *cancellable, GError **error)
 {
-  AntReadingChoices choices = { .time_format = g_strdup (options->time_format), .time_scale = g_strdup (options->time_scale),
-                                .time_zone = g_strdup (options->time_zone), .epoch = g_strdup (options->epoch),
-                                .hdu = g_strdup (options->hdu), .index = g_strdup (options->index) };
+  AntReadingChoices choices = { 0 };
   AntRecord *record = NULL;
-  if (options->fill)
-    choices.fill_values = g_array_new (FALSE, FALSE, sizeof (double));
-  if ((!options->columns || ant_reading_choices_parse_columns (&choices, options->columns, error))
-      && (!options->fill || parse_fill (options->fill, choices.fill_values, error)))
+  if (ant_record_options_choose (options, &choices, error))
     record = ant_record_open (path, &choices, 0, cancellable, error);
   ant_reading_choices_clear (&choices);
   return record;
@@ -84,32 +106,5 @@ ant_record_options_read (const AntRecordOptions *options, const char *path, GCan
 gboolean
 ant_record_options_good (const AntRecordOptions *options, AntGridOptions *grid, GError **error)
 {
-  guint64 mask;
-  if (!options->good)
-    return TRUE;
-  if (g_ascii_strncasecmp (options->good, "0x", 2) == 0)
-    {
-      if (!g_ascii_string_to_unsigned (options->good + 2, 16, 1, G_MAXUINT64, &mask, NULL))
-        {
-          g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("--good: found “%s”, expected a mask of up to 64 bits such as 0x10042"),
-                       options->good);
-          return FALSE;
-        }
-      grid->good_mask = (gint64) mask;
-      return TRUE;
-    }
-  grid->quality_is_list = TRUE;
-  grid->good_values = g_array_new (FALSE, FALSE, sizeof (gint64));
-  g_auto (GStrv) parts = g_strsplit (options->good, ",", -1);
-  for (guint i = 0; parts[i]; i++)
-    {
-      gint64 value;
-      if (!g_ascii_string_to_signed (g_strstrip (parts[i]), 10, G_MININT64, G_MAXINT64, &value, NULL))
-        {
-          g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("--good: found “%s”, expected whole numbers or a mask 0x…"), parts[i]);
-          return FALSE;
-        }
-      g_array_append_val (grid->good_values, value);
-    }
-  return TRUE;
+  return !options->good || ant_grid_options_parse_good (grid, "--good", options->good, error);
 }

@@ -2,7 +2,7 @@
 #pragma once
 
 #include <gio/gio.h>
-#include "data/settings.h"
+#include "data/treatment.h"
 
 typedef struct
 {
@@ -20,6 +20,8 @@ typedef struct
 /* Add the options to a context; parsing fills `options` (start it as { 0 }). */
 void ant_record_options_add (GOptionContext *context, AntRecordOptions *options);
 void ant_record_options_clear (AntRecordOptions *options);
+/* Put what was asked for into choices, which keep what they had else. FALSE with one sentence. */
+gboolean ant_record_options_choose (const AntRecordOptions *options, AntReadingChoices *choices, GError **error);
 /* Read the rows of a record ("-" = standard input) as the options say. NULL with one sentence. */
 AntRecord *ant_record_options_read (const AntRecordOptions *options, const char *path, GCancellable *cancellable,
                                     GError **error);

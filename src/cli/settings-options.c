@@ -15,15 +15,21 @@ ant_settings_options_add (GOptionContext *context, AntSettingsOptions *options)
 }
 
 gboolean
-ant_settings_options_apply (const AntSettingsOptions *options, AntSettings *settings, GError **error)
+ant_settings_options_add_to (const AntSettingsOptions *options, AntSettings *settings, GError **error)
 {
-  ant_settings_init (settings);
   if (options->file && !ant_settings_load (settings, options->file, error))
     return FALSE;
   for (char **set = options->set; set && *set; set++)
     if (!ant_settings_assign (settings, *set, error))
       return g_prefix_error (error, "--set: "), FALSE;
   return TRUE;
+}
+
+gboolean
+ant_settings_options_apply (const AntSettingsOptions *options, AntSettings *settings, GError **error)
+{
+  ant_settings_init (settings);
+  return ant_settings_options_add_to (options, settings, error);
 }
 
 void

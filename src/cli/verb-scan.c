@@ -5,34 +5,34 @@
 
 #include "cli/exit-code.h"
 #include "cli/progress.h"
-#include "cli/record-options.h"
 #include "cli/scan-summary.h"
-#include "cli/settings-options.h"
+#include "cli/scan-work.h"
 #include "cli/verbs.h"
 #include "cli/witness-options.h"
+#include "data/analysis-text.h"
 #include "data/error.h"
-#include "data/exclusions.h"
 #include "jobs/report.h"
 #include "jobs/scan-job.h"
 #include "jobs/stop.h"
 #include "readers/observer-reader.h"
+#include "writers/analysis-file.h"
 #include "writers/dip-table.h"
 #include "writers/output-dir.h"
 #include "writers/result-files.h"
+#include "writers/whole-file.h"
 #include "writers/witness-table.h"
 
 typedef struct
 {
-  char *out, *also, *from, *to, *exclude, *at;
+  char *out, *also, *save, *at;
   double hours;
   int threads;
   gboolean force, progress, no_report, no_repeats;
   char *observer_text;
   AntObserverChoice *observer; /* owned; NULL: nobody knows who took the record */
   AntResultChoice choice;
-  AntRecordOptions reading;
+  AntScanWork work;
   AntWitnessOptions witness;
-  AntSettingsOptions given;
 } Options;
 
 static void
@@ -40,45 +40,12 @@ options_clear (Options *options)
 {
   g_free (options->out);
   g_free (options->also);
-  g_free (options->from);
-  g_free (options->to);
-  g_free (options->exclude);
+  g_free (options->save);
   g_free (options->at);
   g_free (options->observer_text);
   ant_observer_choice_unref (options->observer);
-  ant_record_options_clear (&options->reading);
+  ant_scan_work_clear (&options->work);
   ant_witness_options_clear (&options->witness);
-  ant_settings_options_clear (&options->given);
-}
-
-/* The limits and excluded spans, in the record's own time. */
-static gboolean
-limit_grid (const Options *options, const AntRecord *record, AntGridOptions *grid, GError **error)
-{
-  if (options->from && !ant_time_reference_parse (&record->time, options->from, &grid->from_d, error))
-    return FALSE;
-  if (options->to && !ant_time_reference_parse (&record->time, options->to, &grid->to_d, error))
-    return FALSE;
-  if (options->exclude)
-    {
-      grid->excluded = ant_exclusions_read (options->exclude, &record->time, error);
-      return grid->excluded != NULL;
-    }
-  return TRUE;
-}
-
-static AntRecord *
-load (const Options *options, const char *path, const AntSettings *settings, GCancellable *stop, GError **error)
-{
-  g_autoptr (AntRecord) record = ant_record_options_read (&options->reading, path, stop, error);
-  if (!record)
-    return NULL;
-  AntGridOptions grid = ant_settings_grid (settings);
-  gboolean good = ant_record_options_good (&options->reading, &grid, error) && limit_grid (options, record, &grid, error)
-                  && ant_record_make_grid (record, &grid, error);
-  g_clear_pointer (&grid.good_values, g_array_unref);
-  g_clear_pointer (&grid.excluded, g_array_unref);
-  return good ? g_steal_pointer (&record) : NULL;
 }
 
 #define REPORT "report.pdf"
@@ -117,14 +84,29 @@ add_witnesses (const Options *options, AntOutputDir *dir, const GPtrArray *witne
   return TRUE;
 }
 
-static gboolean
-write_all (const Options *options, AntOutputDir *dir, const AntScanResults *results, const GPtrArray *witnesses, GError **error)
+/* The analysis as it will stand in the folder. */
+static char *
+text_for_folder (const AntAnalysis *analysis, const char *folder)
 {
+  g_autofree char *whole = g_canonicalize_filename (folder, NULL);
+  g_autofree char *path = g_build_filename (whole, ANT_ANALYSIS_FILE_NAME, NULL);
+  return ant_analysis_to_text (analysis, path);
+}
+
+static gboolean
+write_all (const Options *options, AntOutputDir *dir, const AntAnalysis *analysis, const GPtrArray *witnesses, GError **error)
+{
+  const AntScanResults *results = ant_analysis_get_results (analysis);
+  const AntJudgements *judgements = ant_analysis_get_judgements (analysis);
+  g_autofree char *text = text_for_folder (analysis, options->out);
+  AntFindings findings = { results, judgements, text };
   gsize size = 0;
-  g_autoptr (GBytes) report = options->no_report ? NULL : ant_report_bytes (results, NULL, (AntPaper) results->settings.paper, error);
+  g_autofree AntReportWord *word = ant_report_words (results, judgements);
+  g_autoptr (GBytes) report = options->no_report ? NULL : ant_report_bytes (results, word, (AntPaper) results->settings.paper, error);
   const char *pages = report ? g_bytes_get_data (report, &size) : NULL;
-  return (report || options->no_report) && ant_result_files_add (dir, results, &options->choice, error)
-         && (!report || ant_output_dir_add (dir, REPORT, pages, size, error)) && add_witnesses (options, dir, witnesses, error) && ant_output_dir_commit (dir, error);
+  return (report || options->no_report) && ant_result_files_add (dir, &findings, &options->choice, error)
+         && (!report || ant_output_dir_add (dir, REPORT, pages, size, error)) && add_witnesses (options, dir, witnesses, error)
+         && ant_output_dir_commit (dir, error);
 }
 
 static void
@@ -143,8 +125,8 @@ was_stopped (const AntScanResults *results)
 }
 
 static gboolean
-search (const Options *options, AntRecord *record, const AntSettings *settings, AntOutputDir *dir, GCancellable *stop,
-        GError **error)
+search (const Options *options, AntAnalysis *analysis, AntRecord *record, const AntSettings *settings, AntOutputDir *dir,
+        GCancellable *stop, GError **error)
 {
   g_autoptr (GPtrArray) witnesses = ant_witness_options_open (&options->witness, record, settings, stop, error);
   if (!witnesses)
@@ -152,12 +134,21 @@ search (const Options *options, AntRecord *record, const AntSettings *settings, 
   AntProgressLine *line = ant_progress_line_new (options->progress);
   g_autoptr (AntScanResults) results = ant_scan_job_run (record, settings, options->observer, stop, ant_progress_line_show, line, error);
   ant_progress_line_end (line);
-  if (!results || (dir && !write_all (options, dir, results, witnesses, error)))
+  if (!results)
+    return FALSE;
+  ant_analysis_set_results (analysis, results, ant_analysis_get_treatment (analysis));
+  if ((dir && !write_all (options, dir, analysis, witnesses, error))
+      || (options->save && !ant_analysis_file_save (analysis, options->save, options->force, error)))
     return FALSE;
   ant_scan_summary_print (results);
+  g_autofree char *carried = ant_analysis_carried_words (analysis);
+  if (carried)
+    g_print ("%s.\n", carried);
   ant_witness_options_print (witnesses);
   if (dir)
     print_names (options);
+  if (options->save)
+    g_print (_("The analysis is in %s.\n"), options->save);
   if (was_stopped (results))
     g_set_error_literal (error, G_IO_ERROR, G_IO_ERROR_CANCELLED, _("stopped while searching for repeats; what was found until then is kept"));
   return !was_stopped (results);
@@ -184,27 +175,55 @@ ask (const Options *options, AntRecord *record, const AntSettings *settings, Ant
   return TRUE;
 }
 
+/* That the analysis can be saved there is known before a long scan. */
+static gboolean
+try_save (const Options *options, GError **error)
+{
+  g_autoptr (AntWholeFile) trial = options->save ? ant_whole_file_open (options->save, options->force, error) : NULL;
+  return trial || !options->save;
+}
+
 static int
 run (const Options *options, const char *path)
 {
   g_autoptr (GError) error = NULL;
   g_autoptr (AntOutputDir) dir = NULL;
-  AntSettings settings;
+  g_autoptr (AntRecord) record = NULL;
   GCancellable *stop = ant_stop_on_signals ();
-  if (!ant_settings_options_apply (&options->given, &settings, &error))
+  g_autoptr (AntAnalysis) analysis = ant_scan_work_begin (&options->work, path, options->no_repeats, stop, &record, &error);
+  if (!analysis)
     return ant_cli_fail (error);
+  AntSettings settings = ant_analysis_get_treatment (analysis)->settings;
   if (options->threads)
     settings.threads = options->threads;
-  if (options->no_repeats)
-    settings.repeats = 0;
-  g_autoptr (AntRecord) record = load (options, path, &settings, stop, &error);
   g_auto (GStrv) names = options->at ? g_strdupv ((char **) (gsize) asked_names) : names_of (options);
-  if (record && options->out)
+  if (options->out)
     dir = ant_output_dir_open (options->out, (const char *const *) names, options->force, &error);
-  gboolean good = record && (dir || !options->out)
+  gboolean good = (dir || !options->out) && try_save (options, &error)
                   && (options->at ? ask (options, record, &settings, dir, stop, &error)
-                                  : search (options, record, &settings, dir, stop, &error));
+                                  : search (options, analysis, record, &settings, dir, stop, &error));
   return good ? ANT_EXIT_DONE : ant_cli_fail (error);
+}
+
+/* What the options together ask for; NULL if it makes sense, else a sentence. */
+static char *
+find_fault (const Options *options, int n_files)
+{
+  gboolean file = ant_scan_work_file (&options->work) != NULL;
+  if (n_files != 1 && !(file && n_files == 0))
+    return g_strdup_printf (_("scan: found %d files, expected one record, or --from with an analysis file"), n_files);
+  if (options->threads < 0)
+    return g_strdup_printf (_("scan: found --threads %d, expected 1 or more"), options->threads);
+  if (!options->at != isnan (options->hours))
+    return g_strdup (_("scan: found only one of --at and --hours, expected both"));
+  if (options->at && !(options->hours > 0 && options->hours < 1000))
+    return g_strdup_printf (_("scan: found --hours %g, expected more than 0 and less than 1000"), options->hours);
+  if (options->at && options->save)
+    return g_strdup (_("scan: found --save with --at, expected it where something is searched"));
+  if ((options->also || options->choice.series) && (options->at || !options->out))
+    return g_strdup_printf (_("scan: found --also or --series %s, expected them where a search writes its tables"),
+                            options->at ? _("with --at") : _("without --out"));
+  return NULL;
 }
 
 int
@@ -217,11 +236,8 @@ ant_verb_scan (int argc, char **argv)
     { "series", 0, 0, G_OPTION_ARG_NONE, &options.choice.series, N_("write the detrended series, row by row, too"), NULL },
     { "no-report", 0, 0, G_OPTION_ARG_NONE, &options.no_report, N_("leave out report.pdf"), NULL },
     { "no-repeats", 0, 0, G_OPTION_ARG_NONE, &options.no_repeats, N_("leave out the search for dips that recur"), NULL },
+    { "save", 0, 0, G_OPTION_ARG_FILENAME, &options.save, N_("write the analysis into this file, which the window opens"), N_("FILE.antumbra") },
     { "force", 0, 0, G_OPTION_ARG_NONE, &options.force, N_("replace results that are there"), NULL },
-    { "from", 0, 0, G_OPTION_ARG_STRING, &options.from, N_("use the record from this time"), N_("TIME") },
-    { "to", 0, 0, G_OPTION_ARG_STRING, &options.to, N_("use the record up to this time"), N_("TIME") },
-    { "exclude", 0, 0, G_OPTION_ARG_FILENAME, &options.exclude,
-      N_("leave out spans: lines of start, end, reason, or an earlier flags.csv"), N_("FILE") },
     { "observer", 0, 0, G_OPTION_ARG_FILENAME, &options.observer_text,
       N_("who took the record: what crossed the Sun there and then is evidence for the verdicts"), N_("earth|l1|site:LON,LAT,HEIGHT_M|FILE") },
     { "at", 0, 0, G_OPTION_ARG_STRING, &options.at, N_("measure a dip with this middle, without a search"), N_("TIME") },
@@ -233,31 +249,22 @@ ant_verb_scan (int argc, char **argv)
   g_autoptr (GOptionContext) context = g_option_context_new (_("RECORD"));
   g_option_context_set_summary (context, _("Searches a record (“-”: standard input) for dips and weighs each against the Sun's own noise."));
   g_option_context_add_main_entries (context, entries, NULL);
-  ant_record_options_add (context, &options.reading);
+  ant_scan_work_add (context, &options.work);
   ant_witness_options_add (context, &options.witness);
-  ant_settings_options_add (context, &options.given);
 
   g_autoptr (GError) error = NULL;
+  g_autofree char *fault = NULL;
   int code;
   if (!g_option_context_parse (context, &argc, &argv, &error))
     code = ant_cli_fail (error);
-  else if (argc != 2)
-    code = ant_cli_fail_usage (_("scan: found %d files, expected one record"), argc - 1);
-  else if (options.threads < 0)
-    code = ant_cli_fail_usage (_("scan: found --threads %d, expected 1 or more"), options.threads);
-  else if (!options.at != isnan (options.hours))
-    code = ant_cli_fail_usage (_("scan: found only one of --at and --hours, expected both"));
-  else if (options.at && !(options.hours > 0 && options.hours < 1000))
-    code = ant_cli_fail_usage (_("scan: found --hours %g, expected more than 0 and less than 1000"), options.hours);
-  else if ((options.also || options.choice.series) && (options.at || !options.out))
-    code = ant_cli_fail_usage (_("scan: found --also or --series %s, expected them where a search writes its tables"),
-                               options.at ? _("with --at") : _("without --out"));
+  else if ((fault = find_fault (&options, argc - 1)))
+    code = ant_cli_fail_usage ("%s", fault);
   else if (options.also && !ant_result_choice_parse (&options.choice, options.also, &error))
     code = ant_cli_fail (error);
   else if (options.observer_text && !(options.observer = ant_observer_open (options.observer_text, &error)))
     code = ant_cli_fail (error);
   else
-    code = run (&options, argv[1]);
+    code = run (&options, argc > 1 ? argv[1] : NULL);
   options_clear (&options);
   return code;
 }

@@ -10,7 +10,7 @@ struct _AntAnalysis
   char *record_path, *record_sha256;
   double origin_jd;
 
-  /* Counted (g_rc_box), never changed: an AntTreatment and an AntJudgements, shared with the changes around them. */
+  /* Counted (g_atomic_rc_box), never changed: an AntTreatment and an AntJudgements, shared with the changes around them. */
   struct _AntPart *treatment, *judgements;
   GPtrArray *done, *undone; /* of Change, latest last */
   GPtrArray *history;       /* of AntAnalysisEvent */
@@ -22,6 +22,7 @@ struct _AntAnalysis
   guint64 state, saved_state;   /* numbers of states of the parts: equal numbers are equal parts */
   guint64 others, saved_others; /* grows with what cannot be undone */
   guint64 revision;
+  gboolean recovered;           /* holds unsaved work of an earlier run */
   gint64 changed_us;            /* when the latest change was made, for joining those of one hand movement */
 
   JsonObject *read;                   /* as read from a file: what this program does not know is written again; or NULL */

@@ -27,7 +27,7 @@ typedef struct
 static Part *
 part_new (gpointer value, GDestroyNotify free_value)
 {
-  Part *part = g_rc_box_new (Part);
+  Part *part = g_atomic_rc_box_new (Part);
   *part = (Part) { value, free_value };
   return part;
 }
@@ -42,7 +42,7 @@ part_clear (gpointer data)
 static void
 part_unref (Part *part)
 {
-  g_rc_box_release_full (part, part_clear);
+  g_atomic_rc_box_release_full (part, part_clear);
 }
 
 static Part *
@@ -111,6 +111,30 @@ ant_analysis_free (AntAnalysis *analysis)
   g_free (analysis->record_path);
   g_free (analysis->record_sha256);
   g_free (analysis);
+}
+
+AntAnalysis *
+ant_analysis_snapshot (const AntAnalysis *analysis)
+{
+  AntAnalysis *copy = ant_analysis_new ();
+  part_unref (copy->treatment);
+  part_unref (copy->judgements);
+  copy->treatment = g_atomic_rc_box_acquire (analysis->treatment);
+  copy->judgements = g_atomic_rc_box_acquire (analysis->judgements);
+  for (guint i = 0; i < analysis->history->len; i++)
+    {
+      const AntAnalysisEvent *event = g_ptr_array_index (analysis->history, i);
+      AntAnalysisEvent *own = g_new0 (AntAnalysisEvent, 1);
+      *own = (AntAnalysisEvent) { g_strdup (event->time), g_strdup (event->who), g_strdup (event->what), event->serial };
+      g_ptr_array_add (copy->history, own);
+    }
+  ant_analysis_set_path (copy, analysis->path);
+  ant_analysis_set_record (copy, analysis->record_path, analysis->record_sha256, analysis->origin_jd);
+  copy->results = analysis->results ? ant_scan_results_ref (analysis->results) : NULL;
+  copy->scanned_with = analysis->scanned_with ? ant_treatment_copy (analysis->scanned_with) : NULL;
+  copy->read = analysis->read ? json_object_ref (analysis->read) : NULL;
+  copy->results_read = analysis->results_read;
+  return copy;
 }
 
 void
@@ -252,9 +276,9 @@ change (AntAnalysis *analysis, const char *name, const char *about, Part *treatm
       *step = (Change) { g_strdup (name), g_strdup (about), analysis->treatment, analysis->judgements, analysis->state,
                          analysis->serial + 1, NULL };
       if (treatment)
-        g_rc_box_acquire (analysis->judgements);
+        g_atomic_rc_box_acquire (analysis->judgements);
       else
-        g_rc_box_acquire (analysis->treatment);
+        g_atomic_rc_box_acquire (analysis->treatment);
       g_ptr_array_add (analysis->done, step);
       if (analysis->done->len > ANT_MOST_UNDONE)
         g_ptr_array_remove_index (analysis->done, 0);
@@ -268,6 +292,15 @@ change (AntAnalysis *analysis, const char *name, const char *about, Part *treatm
   analysis->state = analysis->serial;
   analysis->changed_us = g_get_monotonic_time ();
   analysis->revision++;
+}
+
+void
+ant_analysis_begin_with (AntAnalysis *analysis, const AntSettings *settings)
+{
+  AntTreatment *treatment = ant_treatment_new ();
+  treatment->settings = *settings;
+  part_unref (analysis->treatment);
+  analysis->treatment = treatment_part (treatment);
 }
 
 void
@@ -313,6 +346,18 @@ ant_analysis_mask (AntAnalysis *analysis, AntSpan span, const char *reason)
   AntTreatment *treatment = ant_treatment_copy (ant_analysis_get_treatment (analysis));
   ant_treatment_mask (treatment, span, ANT_MASK_HAND, reason);
   ant_analysis_treat (analysis, _("Mask a span"), treatment);
+}
+
+void
+ant_analysis_set_reason (AntAnalysis *analysis, guint i, const char *reason)
+{
+  g_autoptr (AntTreatment) treatment = ant_treatment_copy (ant_analysis_get_treatment (analysis));
+  AntMask *mask = i < treatment->masks->len ? g_ptr_array_index (treatment->masks, i) : NULL;
+  if (!mask || g_str_equal (mask->reason, reason))
+    return;
+  g_free (mask->reason);
+  mask->reason = g_strdup (reason);
+  ant_analysis_treat (analysis, _("Reason of a mask"), g_steal_pointer (&treatment));
 }
 
 gboolean
@@ -425,7 +470,18 @@ ant_analysis_set_saved (AntAnalysis *analysis)
 void
 ant_analysis_set_unsaved (AntAnalysis *analysis)
 {
+  analysis->recovered = TRUE;
   note_other (analysis, NULL);
+}
+
+gboolean
+ant_analysis_would_lose (const AntAnalysis *analysis)
+{
+  if (analysis->path || analysis->recovered)
+    return ant_analysis_is_changed (analysis);
+  return analysis->state != analysis->saved_state
+         && (ant_judgements_count (ant_analysis_get_judgements (analysis)) > 0
+             || ant_analysis_get_treatment (analysis)->masks->len > 0);
 }
 
 guint64
@@ -440,6 +496,12 @@ AntScanResults *
 ant_analysis_get_results (const AntAnalysis *analysis)
 {
   return analysis->results && analysis->results->record ? analysis->results : NULL;
+}
+
+AntScanResults *
+ant_analysis_get_found (const AntAnalysis *analysis)
+{
+  return analysis->results;
 }
 
 const AntTreatment *
@@ -470,7 +532,7 @@ ant_analysis_set_results (AntAnalysis *analysis, AntScanResults *results, const 
   analysis->results = held;
   analysis->scanned_with = treatment;
   g_autofree char *what =
-      g_strdup_printf (g_dngettext (NULL, "Scan: %zu dip", "Scan: %zu dips", results->n_dips), results->n_dips);
+      g_strdup_printf (_("Scan; dips found: %zu"), results->n_dips);
   note_other (analysis, what);
 }
 
@@ -519,10 +581,11 @@ char *
 ant_analysis_take_record (AntAnalysis *analysis, AntRecord *record)
 {
   double origin_jd = ant_time_reference_jd (&record->time, 0);
-  g_autofree char *name = g_path_get_basename (record->path);
+  g_autofree char *name = ant_record_name (record);
+  g_autofree char *path = g_str_equal (record->path, "-") ? g_strdup ("-") : g_canonicalize_filename (record->path, NULL);
   gboolean fresh = !analysis->record_path;
   gboolean same = !fresh && g_strcmp0 (analysis->record_sha256, record->sha256) == 0;
-  gboolean moved = !fresh && g_strcmp0 (analysis->record_path, record->path) != 0;
+  gboolean moved = !fresh && g_strcmp0 (analysis->record_path, path) != 0;
   char *sentence = NULL;
   if (!fresh && !same)
     {
@@ -534,7 +597,7 @@ ant_analysis_take_record (AntAnalysis *analysis, AntRecord *record)
       sentence = g_strdup_printf (_("%s: what the analysis tells does not fit the record and is left out; scan again"), name);
       forget_results (analysis);
     }
-  ant_analysis_set_record (analysis, record->path, record->sha256, origin_jd);
+  ant_analysis_set_record (analysis, path, record->sha256, origin_jd);
   g_autofree char *what = sentence || moved ? g_strdup_printf (_("Record is now %s"), name) : NULL;
   if (what)
     note_other (analysis, what);
@@ -573,9 +636,7 @@ ant_analysis_carried_words (const AntAnalysis *analysis)
   ant_analysis_count_carried (analysis, &n_given, &n_lost);
   if (n_given == 0)
     return NULL;
-  g_autofree char *carried = g_strdup_printf (
-      g_dngettext (NULL, "Verdict or note carried over: %zu", "Verdicts and notes carried over: %zu", n_given - n_lost),
-      n_given - n_lost);
+  g_autofree char *carried = g_strdup_printf (_("Verdicts and notes carried over: %zu"), n_given - n_lost);
   return n_lost ? g_strdup_printf (_("%s; kept of dips that are no longer found: %zu"), carried, n_lost)
                 : g_steal_pointer (&carried);
 }

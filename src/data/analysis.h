@@ -21,6 +21,9 @@ AntAnalysis *ant_analysis_new (void);
 void ant_analysis_free (AntAnalysis *analysis); /* NULL is fine */
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntAnalysis, ant_analysis_free)
 
+/* As it is now, for another thread to write: shares what is never changed, cannot be undone. */
+AntAnalysis *ant_analysis_snapshot (const AntAnalysis *analysis);
+
 /* Where it is kept (absolute); NULL: nowhere yet. */
 const char *ant_analysis_get_path (const AntAnalysis *analysis);
 void ant_analysis_set_path (AntAnalysis *analysis, const char *path);
@@ -40,8 +43,10 @@ char *ant_analysis_take_record (AntAnalysis *analysis, AntRecord *record);
 const AntTreatment *ant_analysis_get_treatment (const AntAnalysis *analysis);
 const AntJudgements *ant_analysis_get_judgements (const AntAnalysis *analysis);
 
-/* What was found, NULL if nothing or if its record is not at hand; and the treatment that gave it. */
+/* What was found, NULL if nothing or if its record is not at hand; the same without regard to the record; and the
+ * treatment that gave it. */
 AntScanResults *ant_analysis_get_results (const AntAnalysis *analysis);
+AntScanResults *ant_analysis_get_found (const AntAnalysis *analysis);
 const AntTreatment *ant_analysis_get_scanned_with (const AntAnalysis *analysis);
 /* A scan of the record with the present treatment has ended; takes a reference. */
 void ant_analysis_set_results (AntAnalysis *analysis, AntScanResults *results, const AntTreatment *scanned_with);
@@ -52,6 +57,9 @@ void ant_analysis_count_carried (const AntAnalysis *analysis, gsize *n_given, gs
 /* The same as a sentence; NULL if nothing was given. Caller frees. */
 char *ant_analysis_carried_words (const AntAnalysis *analysis);
 
+/* Of a new one: settings to begin with, which is no change. */
+void ant_analysis_begin_with (AntAnalysis *analysis, const AntSettings *settings);
+
 /* Changes: each can be undone, and is in the history under its name. What changes nothing is not a change. `dip` names
  * the dip for people, "dip 3". */
 gboolean ant_analysis_set_setting (AntAnalysis *analysis, const AntSetting *setting, const char *text, GError **error);
@@ -61,6 +69,8 @@ void ant_analysis_treat (AntAnalysis *analysis, const char *name, AntTreatment *
 void ant_analysis_judge (AntAnalysis *analysis, const char *dip, double mid_d, double duration_d, AntDipClass class);
 void ant_analysis_note (AntAnalysis *analysis, const char *dip, double mid_d, double duration_d, const char *note);
 void ant_analysis_mask (AntAnalysis *analysis, AntSpan span, const char *reason);
+/* Why the i-th span is left out. */
+void ant_analysis_set_reason (AntAnalysis *analysis, guint i, const char *reason);
 gboolean ant_analysis_unmask (AntAnalysis *analysis, AntSpan span); /* FALSE: nothing was masked there */
 
 /* Undo and redo. Names are those of the changes, NULL if there is none. */
@@ -84,5 +94,8 @@ gboolean ant_analysis_is_changed (const AntAnalysis *analysis);
 void ant_analysis_set_saved (AntAnalysis *analysis);
 /* As recovered work is: changed until it is saved. */
 void ant_analysis_set_unsaved (AntAnalysis *analysis);
+/* Whether closing it now would lose what nobody can compute again: any unsaved change of an analysis with a file; of one
+ * without a file yet a verdict, a note, a mask, or what was recovered. */
+gboolean ant_analysis_would_lose (const AntAnalysis *analysis);
 /* Grows with everything that a file would tell; for autosave. */
 guint64 ant_analysis_get_revision (const AntAnalysis *analysis);

@@ -3,6 +3,7 @@
 #pragma once
 
 #include <glib.h>
+#include "data/judgement.h"
 #include "search/dip.h"
 #include "verdict/verdict.h"
 
@@ -21,4 +22,5 @@ typedef struct
   gsize n_found, n_mirrored;     /*   dips at or above the threshold, and brightenings, of the durations it checks */
   const double *upper_limit_ppm; /* [n] 95 % upper limits of asked dips, NaN beside dips that a search found; NULL: all were */
   const char *const *analyst_class, *const *analyst_note; /* [n] what the analyst said of each; NULL: nothing of any */
+  const AntJudgements *judgements; /* the same by the dips' times, where these are NULL; NULL: nothing was said */
 } AntDipList;

@@ -130,6 +130,13 @@ ant_record_refuse (const AntRecord *record, GError **error, const char *format, 
   return FALSE;
 }
 
+char *
+ant_record_name (const AntRecord *record)
+{
+  g_autofree char *name = g_path_get_basename (record->path ? record->path : "-");
+  return g_filename_display_name (name);
+}
+
 double
 ant_record_value (const AntRecord *record, double ppm)
 {

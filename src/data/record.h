@@ -110,5 +110,7 @@ gboolean ant_record_make_grid (AntRecord *record, const AntGridOptions *options,
 /* A further column on the record's grid: means of the rows that share a place, NaN where there is none. The row's flags do not
  * matter: temperatures go on in the dark. Allocated [series.n]; the caller frees. The record must be gridded. */
 float *ant_record_column_on_grid (const AntRecord *record, const AntColumn *column);
+/* Its name without the folder, "-" for standard input: what tables say, wherever it lies. Caller frees. */
+char *ant_record_name (const AntRecord *record);
 /* Value on the record's own scale for a level in ppm. */
 double ant_record_value (const AntRecord *record, double ppm);

@@ -298,6 +298,10 @@ get_chunk (JsonObject *object, AntChunk *chunk, GError **error)
     return ant_json_within (error, "health", -1);
   if (!ant_json_get_fields (fit, TABLE (fit_fields), &chunk->fit, error))
     return ant_json_within (error, "fit", -1);
+  if (isnan (chunk->own_from)) /* the first and the last piece reach without end */
+    chunk->own_from = -INFINITY;
+  if (isnan (chunk->own_to))
+    chunk->own_to = INFINITY;
   return get_floor (object, &chunk->n_floor, chunk->floor, error) && get_spectrum (object, chunk, error);
 }
 

@@ -144,7 +144,7 @@ same_settings (const AntSettings *one, const AntSettings *other, const char *gro
   for (gsize i = 0; i < ant_n_settings; i++)
     {
       const AntSetting *setting = &ant_setting_table[i];
-      if ((!group || g_str_equal (setting->group, group)) && !g_str_equal (setting->key, "threads")
+      if ((!group || g_str_equal (setting->group, group)) && ant_setting_matters (setting)
           && ant_setting_get (setting, one) != ant_setting_get (setting, other))
         return FALSE;
     }

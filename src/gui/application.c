@@ -6,6 +6,7 @@
 #include "config.h"
 #include "gui/shortcuts.h"
 #include "gui/window.h"
+#include "writers/analysis-file.h"
 
 struct _AntApplication
 {
@@ -21,10 +22,27 @@ ant_application_new (GApplicationFlags flags)
                        G_APPLICATION_HANDLES_OPEN | flags, NULL);
 }
 
+/* Each window that an empty start opens offers one piece of work that an earlier run left without a file. */
+static void
+offer_left_behind (GApplication *application)
+{
+  g_auto (GStrv) left = ant_unsaved_left_behind ();
+  for (char **path = left; *path; path++)
+    {
+      GtkWindow *window = GTK_WINDOW (ant_window_new (GTK_APPLICATION (application)));
+      ant_desk_offer_left_behind (ant_window_get_desk (ANT_WINDOW (window)), *path);
+      gtk_window_present (window);
+    }
+}
+
 static void
 ant_application_activate (GApplication *application)
 {
   GtkWindow *window = gtk_application_get_active_window (GTK_APPLICATION (application));
+  if (!window)
+    offer_left_behind (application);
+  if (!window)
+    window = gtk_application_get_active_window (GTK_APPLICATION (application));
   gtk_window_present (window ? window : GTK_WINDOW (ant_window_new (GTK_APPLICATION (application))));
 }
 

@@ -13,17 +13,26 @@ struct _AntDesk
 
   /* Owned: what is on the desk */
   AntLayers *layers;
-  AntScanResults *results;
+  AntAnalysis *analysis;   /* never NULL */
+  AntScanResults *results; /* the analysis's, borrowed; NULL while there are none */
   GListStore *items;
-  AntJudgements *judgements;
-  AntSettings settings;
-  AntSettings read_with, opening_with; /* those the present record, and the one being opened, are read with */
+  AntTreatment *read_with; /* that the layers are made with; NULL without layers */
+
+  /* Owned: what is being opened */
+  AntAnalysis *incoming;        /* takes the place of the present one; NULL: that stays */
+  AntTreatment *opening_with, *scanning_with;
+
+  /* Keeping */
+  gboolean saving, keeping, keep_failed;
+  guint keep_timer, number;     /* of the desk, for unsaved work without a file */
+  guint64 kept_revision;        /* that unsaved work was last written at */
+  char *left_behind, *left_behind_of; /* unsaved work of an earlier run, and the file it belongs to (NULL: none) */
+  char *recovering;             /* such work that is being opened; NULL: none is */
 
   /* Owned: work that is going on */
   AntBusy busy;
   GCancellable *stop;
   char *opening;
-  gboolean scan_after; /* the record is read again for a scan */
   AntTaskProgress progress;
 
   /* Owned: selection and its picture for the plots */
@@ -39,7 +48,8 @@ struct _AntDesk
 
   double pointer_d;
   AntSpan span;          /* NaN: none */
-  gboolean measuring;
+  AntDragPurpose purpose;
+  GArray *mask_spans;    /* of AntSpan: the analysis's masks, for the plots */
 
   /* The dip SNR of one duration */
   gboolean snr_shown;
@@ -76,6 +86,26 @@ struct _AntDesk
 
 void ant_desk_tell (AntDesk *self, AntDeskChange what);
 void ant_desk_fail (AntDesk *self, const char *sentence);
+/* Something of the analysis has changed: bring the items and what is kept in step, then tell `what`. */
+void ant_desk_changed (AntDesk *self, AntDeskChange what);
+/* Put another analysis onto the desk, taken over; layers NULL: its record was not found. */
+void ant_desk_adopt (AntDesk *self, AntAnalysis *analysis, AntLayers *layers);
+/* Items of what was found, judged; asked ones stay. */
+void ant_desk_make_items (AntDesk *self);
+void ant_desk_clear_items (AntDesk *self);
+/* Work has a cancellable of its own; whoever is not the present one has been overtaken (FALSE). */
+GCancellable *ant_desk_begin (AntDesk *self, AntBusy busy);
+gboolean ant_desk_end (AntDesk *self, GAsyncResult *result);
+void ant_desk_start_scan (AntDesk *self, AntLayers *layers);
+void ant_desk_read_for_scan (AntDesk *self); /* the record with the present treatment, then scan it */
+void ant_desk_open_analysis (AntDesk *self, const char *path);
+/* What has been read is unsaved work of an earlier run: give it its place. */
+void ant_desk_place_recovered (AntDesk *self);
+void ant_desk_judge_items (AntDesk *self);
+void ant_desk_keep_soon (AntDesk *self);
+/* Look whether an earlier run left unsaved work beside the file; keep the changes from here on. */
+void ant_desk_begin_keeping (AntDesk *self);
+void ant_desk_stop_keeping (AntDesk *self);
 /* Marks from items; needed after items, judgements or what is shown have changed. */
 void ant_desk_make_marks (AntDesk *self);
 /* The record is another: begin its views anew. */

@@ -99,7 +99,7 @@ static void
 start (AntDesk *self, gboolean measure)
 {
   self->sky_stop = g_cancellable_new ();
-  ant_sky_list_async (self->layers->record, self->observer, &self->settings, measure, self->sky_stop, sky_cb, g_object_ref (self));
+  ant_sky_list_async (self->layers->record, self->observer, ant_desk_get_settings (self), measure, self->sky_stop, sky_cb, g_object_ref (self));
 }
 
 void

@@ -212,17 +212,35 @@ ant_desk_widen_span (AntDesk *self, int steps)
   ant_desk_set_span (self, &span);
 }
 
-gboolean
-ant_desk_get_measuring (AntDesk *self)
+AntDragPurpose
+ant_desk_get_purpose (AntDesk *self)
 {
-  return self->measuring;
+  return self->purpose;
 }
 
 void
-ant_desk_set_measuring (AntDesk *self, gboolean measuring)
+ant_desk_set_purpose (AntDesk *self, AntDragPurpose purpose)
 {
-  self->measuring = measuring;
+  self->purpose = purpose;
   ant_desk_tell (self, ANT_DESK_POINTER);
+}
+
+void
+ant_desk_use_span (AntDesk *self)
+{
+  AntSpan span;
+  AntDragPurpose purpose = self->purpose;
+  if (!ant_desk_get_span (self, &span))
+    return;
+  ant_desk_set_purpose (self, ANT_DRAG_VIEW);
+  if (purpose == ANT_DRAG_MASK)
+    ant_desk_mask (self, &span);
+  else if (purpose == ANT_DRAG_UNMASK)
+    ant_desk_unmask (self, &span);
+  if (purpose == ANT_DRAG_MASK || purpose == ANT_DRAG_UNMASK)
+    ant_desk_set_span (self, NULL);
+  else
+    ant_desk_ask (self, span.start_d, span.end_d);
 }
 
 static void

@@ -1,10 +1,7 @@
-/* desk-work.c - the desk's long work: opening, scanning, asking. A late answer to work that was abandoned is dropped. */
+/* desk-work.c - the desk's long work: scanning, asking. A late answer to work that was abandoned is dropped. */
 #include "gui/desk-private.h"
 
 #include <math.h>
-#include <string.h>
-
-#include "jobs/open-task.h"
 
 AntBusy
 ant_desk_get_busy (AntDesk *self)
@@ -24,9 +21,8 @@ ant_desk_get_progress (AntDesk *self)
   return &self->progress;
 }
 
-/* Work gets a cancellable of its own; whoever is not the present one has been overtaken. */
-static GCancellable *
-begin (AntDesk *self, AntBusy busy)
+GCancellable *
+ant_desk_begin (AntDesk *self, AntBusy busy)
 {
   ant_desk_abandon (self);
   self->busy = busy;
@@ -35,8 +31,8 @@ begin (AntDesk *self, AntBusy busy)
   return self->stop;
 }
 
-static gboolean
-end (AntDesk *self, GAsyncResult *result)
+gboolean
+ant_desk_end (AntDesk *self, GAsyncResult *result)
 {
   if (g_task_get_cancellable (G_TASK (result)) != self->stop)
     return FALSE;
@@ -54,8 +50,8 @@ ant_desk_abandon (AntDesk *self)
   g_cancellable_cancel (self->stop);
   g_clear_object (&self->stop);
   g_clear_pointer (&self->opening, g_free);
+  g_clear_pointer (&self->incoming, ant_analysis_free);
   self->busy = ANT_BUSY_NO;
-  self->scan_after = FALSE;
   ant_desk_tell (self, ANT_DESK_BUSY);
 }
 
@@ -73,65 +69,24 @@ ant_desk_stop (AntDesk *self)
   ant_desk_tell (self, ANT_DESK_BUSY);
 }
 
+/* What the analysis says of it. */
 static void
-drop_results (AntDesk *self)
+judge_item (AntDesk *self, AntDipItem *item)
 {
-  g_clear_object (&self->selected);
-  g_ptr_array_set_size (self->mark_items, 0);
-  g_array_set_size (self->marks, 0);
-  g_list_store_remove_all (self->items);
-  g_clear_pointer (&self->results, ant_scan_results_unref);
-  ant_desk_drop_fold (self);
-}
-
-static void
-take_record (AntDesk *self, AntLayers *layers)
-{
-  gboolean same = self->layers && g_strcmp0 (self->layers->record->sha256, layers->record->sha256) == 0;
-  drop_results (self);
-  g_clear_pointer (&self->layers, ant_layers_unref);
-  self->layers = layers;
-  self->read_with = self->opening_with;
-  if (same)
-    return;
-  ant_judgements_free (self->judgements);
-  self->judgements = ant_judgements_new ();
-  ant_desk_begin_views (self);
-}
-
-static void
-opened_cb (GObject *source, GAsyncResult *result, gpointer data)
-{
-  g_autoptr (AntDesk) self = data;
-  g_autoptr (GError) error = NULL;
-  AntLayers *layers = ant_open_task_finish (result, &error);
-  if (!end (self, result))
-    {
-      ant_layers_unref (layers);
-      return;
-    }
-  if (layers)
-    {
-      take_record (self, layers);
-      ant_desk_follow_sky (self);
-    }
-  ant_desk_tell (self, layers ? ANT_DESK_EVERYTHING : ANT_DESK_BUSY);
-  if (!layers)
-    ant_desk_fail (self, error->message);
-  else if (self->scan_after)
-    ant_desk_scan (self);
-  self->scan_after = FALSE;
+  const AntJudgements *judgements = ant_analysis_get_judgements (self->analysis);
+  const AntDip *dip = ant_dip_item_get_dip (item);
+  ant_dip_item_judge (item, ant_judgements_class (judgements, dip->mid_d, dip->duration_d),
+                      ant_judgements_note (judgements, dip->mid_d, dip->duration_d));
 }
 
 void
-ant_desk_open (AntDesk *self, const char *path)
+ant_desk_judge_items (AntDesk *self)
 {
-  g_autofree char *kept = g_strdup (path); /* it may be the present record's own */
-  GCancellable *stop = begin (self, ANT_BUSY_OPENING);
-  self->opening = g_steal_pointer (&kept);
-  self->opening_with = self->settings;
-  ant_open_task_async (self->opening, &self->settings, stop, opened_cb, g_object_ref (self));
-  ant_desk_tell (self, ANT_DESK_BUSY);
+  for (guint i = 0; i < g_list_model_get_n_items (G_LIST_MODEL (self->items)); i++)
+    {
+      g_autoptr (AntDipItem) item = g_list_model_get_item (G_LIST_MODEL (self->items), i);
+      judge_item (self, item);
+    }
 }
 
 static void
@@ -141,8 +96,7 @@ add_items (AntDesk *self, AntDipKind kind, gsize n, const AntDip *dip, const Ant
     {
       g_autoptr (AntDipItem) item = ant_dip_item_new (kind, (guint) i + 1, &dip[i], NAN);
       ant_dip_item_set_verdict (item, verdict ? &verdict[i] : NULL);
-      ant_dip_item_judge (item, ant_judgements_class (self->judgements, dip[i].mid_d, dip[i].duration_d),
-                          ant_judgements_note (self->judgements, dip[i].mid_d, dip[i].duration_d));
+      judge_item (self, item);
       g_list_store_append (self->items, item);
     }
 }
@@ -173,27 +127,55 @@ select_again (AntDesk *self, double mid_d)
     }
 }
 
-static void
-take_outcome (AntDesk *self, AntScanOutcome *outcome)
+void
+ant_desk_clear_items (AntDesk *self)
+{
+  g_clear_object (&self->selected);
+  g_ptr_array_set_size (self->mark_items, 0);
+  g_array_set_size (self->marks, 0);
+  g_list_store_remove_all (self->items);
+  ant_desk_drop_fold (self);
+}
+
+void
+ant_desk_make_items (AntDesk *self)
 {
   double selected_d = self->selected ? ant_dip_item_get_dip (self->selected)->mid_d : NAN;
   g_autoptr (GPtrArray) asked = asked_items (self);
-  drop_results (self);
-  g_clear_pointer (&self->layers, ant_layers_unref);
-  self->layers = g_steal_pointer (&outcome->layers);
-  self->results = g_steal_pointer (&outcome->results);
-  add_items (self, ANT_KIND_DIP, self->results->n_dips, self->results->dip, self->results->dip_verdict);
-  add_items (self, ANT_KIND_BRIGHTENING, self->results->n_brightenings, self->results->brightening,
-             self->results->brightening_verdict);
+  ant_desk_clear_items (self);
+  self->results = ant_analysis_get_results (self->analysis);
+  if (self->results)
+    {
+      add_items (self, ANT_KIND_DIP, self->results->n_dips, self->results->dip, self->results->dip_verdict);
+      add_items (self, ANT_KIND_BRIGHTENING, self->results->n_brightenings, self->results->brightening,
+                 self->results->brightening_verdict);
+      g_autofree AntDip *passage = g_new (AntDip, self->results->n_passages + 1);
+      for (gsize i = 0; i < self->results->n_passages; i++)
+        passage[i] = ant_passage_as_dip (&self->results->passage[i]);
+      add_items (self, ANT_KIND_PASSAGE, self->results->n_passages, passage, NULL);
+    }
   for (guint i = 0; i < asked->len; i++)
     g_list_store_append (self->items, g_ptr_array_index (asked, i));
-  g_autofree AntDip *passage = g_new (AntDip, self->results->n_passages + 1);
-  for (gsize i = 0; i < self->results->n_passages; i++)
-    passage[i] = ant_passage_as_dip (&self->results->passage[i]);
-  add_items (self, ANT_KIND_PASSAGE, self->results->n_passages, passage, NULL);
   ant_desk_make_marks (self);
   select_again (self, selected_d);
   ant_desk_begin_fold (self);
+}
+
+/* The bytes may have been read anew for the scan; that they are others is said. */
+static AntDeskChange
+take_outcome (AntDesk *self, AntScanOutcome *outcome)
+{
+  gboolean read_again = self->layers && self->layers->record != outcome->results->record;
+  g_autofree char *changed = ant_analysis_take_record (self->analysis, outcome->results->record);
+  g_clear_pointer (&self->layers, ant_layers_unref);
+  g_clear_pointer (&self->read_with, ant_treatment_free);
+  self->layers = g_steal_pointer (&outcome->layers);
+  self->read_with = ant_treatment_copy (self->scanning_with);
+  ant_analysis_set_results (self->analysis, outcome->results, self->scanning_with);
+  ant_desk_make_items (self);
+  if (changed)
+    ant_desk_fail (self, changed);
+  return ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_BUSY | (read_again ? ANT_DESK_RECORD : 0);
 }
 
 static void
@@ -202,12 +184,13 @@ scanned_cb (GObject *source, GAsyncResult *result, gpointer data)
   g_autoptr (AntDesk) self = data;
   g_autoptr (GError) error = NULL;
   g_autoptr (AntScanOutcome) outcome = ant_scan_task_finish (result, &error);
-  if (!end (self, result))
+  if (!ant_desk_end (self, result))
     return;
   gboolean better = outcome && (!self->results || outcome->results->reach >= self->results->reach);
   if (better)
-    take_outcome (self, outcome);
-  ant_desk_tell (self, better ? ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_BUSY : ANT_DESK_BUSY);
+    ant_desk_changed (self, take_outcome (self, outcome));
+  else
+    ant_desk_tell (self, ANT_DESK_BUSY);
   if (!outcome && !g_error_matches (error, G_IO_ERROR, G_IO_ERROR_CANCELLED))
     ant_desk_fail (self, error->message);
 }
@@ -223,20 +206,25 @@ progress_cb (const AntTaskProgress *progress, gpointer data)
 }
 
 void
+ant_desk_start_scan (AntDesk *self, AntLayers *layers)
+{
+  AntTreatment *treatment = ant_treatment_copy (ant_analysis_get_treatment (self->analysis));
+  GCancellable *stop = ant_desk_begin (self, ANT_BUSY_SCANNING);
+  g_clear_pointer (&self->scanning_with, ant_treatment_free);
+  self->scanning_with = treatment;
+  ant_scan_task_async (layers, &treatment->settings, stop, progress_cb, scanned_cb, g_object_ref (self));
+  ant_desk_tell (self, ANT_DESK_BUSY);
+}
+
+void
 ant_desk_scan (AntDesk *self)
 {
   if (!self->layers)
     return;
-  if (memcmp (&self->read_with.grid, &self->settings.grid, sizeof self->settings.grid) != 0
-      || self->read_with.stamp != self->settings.stamp)
-    {
-      ant_desk_open (self, self->layers->record->path);
-      self->scan_after = TRUE;
-      return;
-    }
-  GCancellable *stop = begin (self, ANT_BUSY_SCANNING);
-  ant_scan_task_async (self->layers, &self->settings, stop, progress_cb, scanned_cb, g_object_ref (self));
-  ant_desk_tell (self, ANT_DESK_BUSY);
+  if (ant_treatment_same_grid (self->read_with, ant_analysis_get_treatment (self->analysis)))
+    ant_desk_start_scan (self, self->layers);
+  else
+    ant_desk_read_for_scan (self);
 }
 
 static guint
@@ -252,12 +240,13 @@ asked_cb (GObject *source, GAsyncResult *result, gpointer data)
   g_autoptr (AntDesk) self = data;
   g_autoptr (GError) error = NULL;
   g_autofree AntAskedDip *asked = ant_ask_task_finish (result, &error);
-  if (!end (self, result))
+  if (!ant_desk_end (self, result))
     return;
   if (asked)
     {
       g_autoptr (AntDipItem) item
           = ant_dip_item_new (ANT_KIND_ASKED, next_asked_number (self), &asked->dip, asked->upper_limit_ppm);
+      judge_item (self, item);
       g_list_store_append (self->items, item);
       self->shown = self->shown == ANT_KIND_PASSAGE ? ANT_KIND_DIP | ANT_KIND_ASKED : self->shown | ANT_KIND_ASKED;
       ant_desk_make_marks (self);
@@ -275,8 +264,8 @@ ant_desk_ask (AntDesk *self, double from_d, double to_d)
 {
   if (!self->layers || !(to_d > from_d))
     return;
-  GCancellable *stop = begin (self, ANT_BUSY_ASKING);
-  ant_ask_task_async (self->layers, &self->settings, (from_d + to_d) / 2, to_d - from_d, stop, asked_cb,
+  GCancellable *stop = ant_desk_begin (self, ANT_BUSY_ASKING);
+  ant_ask_task_async (self->layers, ant_desk_get_settings (self), (from_d + to_d) / 2, to_d - from_d, stop, asked_cb,
                       g_object_ref (self));
   ant_desk_tell (self, ANT_DESK_BUSY);
 }

@@ -53,23 +53,32 @@ ant_desk_get_results (AntDesk *self)
   return self->results;
 }
 
-static gboolean
-settings_differ (const AntSettings *a, const AntSettings *b, const char *group)
-{
-  for (gsize i = 0; i < ant_n_settings; i++)
-    {
-      const AntSetting *setting = &ant_setting_table[i];
-      if ((!group || g_str_equal (setting->group, group)) && ant_setting_matters (setting)
-          && ant_setting_get (setting, a) != ant_setting_get (setting, b))
-        return TRUE;
-    }
-  return FALSE;
-}
-
 gboolean
 ant_desk_is_stale (AntDesk *self)
 {
-  return self->results && settings_differ (&self->settings, &self->results->settings, NULL);
+  return self->results && ant_analysis_is_stale (self->analysis);
+}
+
+const AntAnalysis *
+ant_desk_get_analysis (AntDesk *self)
+{
+  return self->analysis;
+}
+
+char *
+ant_desk_get_name (AntDesk *self)
+{
+  const char *path = ant_analysis_get_path (self->analysis);
+  if (!path)
+    path = ant_analysis_get_record_path (self->analysis);
+  g_autofree char *name = path ? g_path_get_basename (path) : NULL;
+  return name ? g_filename_display_name (name) : NULL;
+}
+
+gboolean
+ant_desk_lacks_record (AntDesk *self)
+{
+  return !self->layers && ant_analysis_get_record_path (self->analysis) != NULL;
 }
 
 GListModel *
@@ -81,39 +90,7 @@ ant_desk_get_items (AntDesk *self)
 const AntSettings *
 ant_desk_get_settings (AntDesk *self)
 {
-  return &self->settings;
-}
-
-/* The sky goes by the radii and the limb darkening. */
-static void
-settings_changed (AntDesk *self, const AntSettings *was)
-{
-  gboolean another_sky = was->radii != self->settings.radii
-                         || was->bank.limb_darkening.u1 != self->settings.bank.limb_darkening.u1
-                         || was->bank.limb_darkening.u2 != self->settings.bank.limb_darkening.u2;
-  if (another_sky)
-    ant_desk_follow_sky (self);
-  ant_desk_tell (self, another_sky ? ANT_DESK_SETTINGS | ANT_DESK_SKY : ANT_DESK_SETTINGS);
-}
-
-gboolean
-ant_desk_set_setting (AntDesk *self, const AntSetting *setting, const char *text, GError **error)
-{
-  double before = ant_setting_get (setting, &self->settings);
-  AntSettings was = self->settings;
-  if (!ant_setting_set_text (setting, &self->settings, text, error))
-    return FALSE;
-  if (ant_setting_get (setting, &self->settings) != before)
-    settings_changed (self, &was);
-  return TRUE;
-}
-
-void
-ant_desk_reset_settings (AntDesk *self)
-{
-  AntSettings was = self->settings;
-  ant_settings_init (&self->settings);
-  settings_changed (self, &was);
+  return &ant_analysis_get_treatment (self->analysis)->settings;
 }
 
 AntDipItem *
@@ -144,34 +121,6 @@ ant_desk_select_next (AntDesk *self, int step)
   else
     at = step > 0 ? MIN (at + 1, n - 1) : at - (at > 0);
   ant_desk_select_mark (self, at);
-}
-
-static void
-judge (AntDesk *self, AntDipClass class, const char *note)
-{
-  const AntDip *dip = ant_dip_item_get_dip (self->selected);
-  ant_judgements_set_class (self->judgements, dip->mid_d, dip->duration_d, class);
-  ant_judgements_set_note (self->judgements, dip->mid_d, dip->duration_d, note);
-  ant_dip_item_judge (self->selected, class, note);
-  ant_desk_make_marks (self);
-  ant_desk_tell (self, ANT_DESK_JUDGEMENT);
-}
-
-void
-ant_desk_judge (AntDesk *self, AntDipClass class)
-{
-  if (self->selected && ant_dip_item_get_class (self->selected) != class)
-    {
-      g_autofree char *note = g_strdup (ant_dip_item_get_note (self->selected));
-      judge (self, class, note);
-    }
-}
-
-void
-ant_desk_note (AntDesk *self, const char *note)
-{
-  if (self->selected && !g_str_equal (ant_dip_item_get_note (self->selected), note))
-    judge (self, ant_dip_item_get_class (self->selected), note);
 }
 
 static int
@@ -276,6 +225,7 @@ ant_desk_dispose (GObject *object)
   ant_desk_drop_fold (self);
   ant_desk_drop_sky (self);
   ant_desk_close_witness (self);
+  ant_desk_stop_keeping (self);
   g_clear_object (&self->selected);
   g_ptr_array_set_size (self->mark_items, 0);
   g_list_store_remove_all (self->items);
@@ -292,9 +242,16 @@ ant_desk_finalize (GObject *object)
   g_array_unref (self->ticks);
   ant_observer_choice_unref (self->observer);
   g_ptr_array_unref (self->mark_items);
-  ant_judgements_free (self->judgements);
-  ant_scan_results_unref (self->results);
+  g_array_unref (self->mask_spans);
   ant_layers_unref (self->layers);
+  ant_analysis_free (self->analysis);
+  ant_analysis_free (self->incoming);
+  ant_treatment_free (self->read_with);
+  ant_treatment_free (self->opening_with);
+  ant_treatment_free (self->scanning_with);
+  g_free (self->left_behind);
+  g_free (self->left_behind_of);
+  g_free (self->recovering);
   g_free (self->opening);
   G_OBJECT_CLASS (ant_desk_parent_class)->finalize (object);
 }
@@ -321,13 +278,14 @@ ant_desk_init (AntDesk *self)
   self->ticks = g_array_new (FALSE, TRUE, sizeof (double));
   self->observer = ant_observer_choice_new_earth ();
   self->sky_selected = ANT_NO_EVENT;
-  self->judgements = ant_judgements_new ();
+  self->mask_spans = g_array_new (FALSE, FALSE, sizeof (AntSpan));
+  static guint number; /* each desk of the program keeps its unsaved work under a number of its own */
+  self->number = ++number;
+  self->analysis = ant_analysis_new ();
   self->shown = ANT_KIND_DIP | ANT_KIND_ASKED;
   self->pointer_d = NAN;
   self->snr_wanted_d = ANT_USUAL_SNR_D;
   self->witness_look = ANT_WITNESS_RATIO;
   self->span = (AntSpan) { NAN, NAN };
   self->progress.stage_left_s = NAN;
-  ant_settings_init (&self->settings);
-  self->read_with = self->settings;
 }

@@ -1,4 +1,4 @@
-/* desk.h - what one window works on: the record, what the scan found, what is selected and seen. Every widget of the
+/* desk.h - what one window works on: an analysis and its record, what is selected and seen. Every widget of the
  * window looks at it and is told by one signal when it changes:
  *
  *   "changed" (AntDeskChange what)   several bits at once where several things changed
@@ -7,6 +7,7 @@
  * Long work runs in jobs/; the desk only starts and stops it. For the main loop alone. */
 #pragma once
 
+#include "data/analysis.h"
 #include "data/dip-words.h"
 #include "gui/dip-item.h"
 #include "jobs/fold-data.h"
@@ -30,9 +31,11 @@ typedef enum
   ANT_DESK_POINTER = 1 << 7,   /* time under the pointer, or span being drawn */
   ANT_DESK_LOOK = 1 << 8,      /* units, averages, which kinds are shown */
   ANT_DESK_SNR = 1 << 9,       /* the dip SNR against time: shown or not, of which duration, computed */
-  ANT_DESK_FOLD = 1 << 10,     /* the period that is folded */
-  ANT_DESK_SKY = 1 << 14,      /* who watched, what crossed the Sun, which of it is selected */
+  ANT_DESK_MASKS = 1 << 10,    /* spans that are left out */
+  ANT_DESK_KEPT = 1 << 11,     /* the analysis: whether it is saved, where, what can be undone */
+  ANT_DESK_FOLD = 1 << 12,     /* the period that is folded */
   ANT_DESK_WITNESS = 1 << 13,  /* the witness: another, none, or another look at it */
+  ANT_DESK_SKY = 1 << 14,      /* who watched, what crossed the Sun, which of it is selected */
 } AntDeskChange;
 #define ANT_DESK_EVERYTHING ((AntDeskChange) 0xffff)
 
@@ -52,7 +55,9 @@ AntDesk *ant_desk_new (void);
 
 /* Work. Each abandons what was running before. Results of an earlier scan stay until a new one is complete, or was stopped
  * no earlier than it. */
-void ant_desk_open (AntDesk *self, const char *path);
+void ant_desk_open (AntDesk *self, const char *path); /* a record, for a new analysis; or an analysis file */
+void ant_desk_reload (AntDesk *self); /* the record again */
+void ant_desk_locate (AntDesk *self, const char *path); /* the record of the analysis is there now */
 void ant_desk_scan (AntDesk *self); /* reads the record again first if the settings of its grid have changed */
 void ant_desk_ask (AntDesk *self, double from_d, double to_d); /* measure the dip that fills this span */
 void ant_desk_stop (AntDesk *self);    /* what a scan has found so far is kept */
@@ -67,6 +72,31 @@ const AntRecord *ant_desk_get_record (AntDesk *self);
 const AntScanResults *ant_desk_get_results (AntDesk *self);
 gboolean ant_desk_is_stale (AntDesk *self); /* the settings differ from those of the results */
 GListModel *ant_desk_get_items (AntDesk *self); /* of AntDipItem */
+
+/* The analysis; change it only by the functions below. Borrowed until another is opened. */
+const AntAnalysis *ant_desk_get_analysis (AntDesk *self);
+/* "larkspur.antumbra", or the record's name as long as there is no file; NULL if there is neither. Caller frees. */
+char *ant_desk_get_name (AntDesk *self);
+gboolean ant_desk_lacks_record (AntDesk *self); /* the analysis is about a record that was not found */
+gboolean ant_desk_undo (AntDesk *self);
+gboolean ant_desk_redo (AntDesk *self);
+/* Hand masks take effect with the next scan. */
+gsize ant_desk_get_masks (AntDesk *self, const AntSpan **spans); /* all that are left out; until the next change */
+void ant_desk_mask (AntDesk *self, const AntSpan *span);
+void ant_desk_set_mask_reason (AntDesk *self, guint i, const char *reason);
+void ant_desk_unmask (AntDesk *self, const AntSpan *span);
+void ant_desk_change (AntDesk *self, const char *name, AntTreatment *treatment); /* takes it over */
+
+/* Keeping. Saving is done off the main loop: ANT_DESK_KEPT tells of success, "failed" of failure. path NULL: where it is
+ * kept already. */
+void ant_desk_save (AntDesk *self, const char *path);
+gboolean ant_desk_is_saving (AntDesk *self);
+/* Unsaved changes are kept beside the file some seconds later. Work that an earlier run left unsaved, found beside the
+ * file that was opened or offered by the caller (untitled): its path, or NULL. */
+const char *ant_desk_get_left_behind (AntDesk *self);
+void ant_desk_offer_left_behind (AntDesk *self, const char *unsaved_path);
+void ant_desk_take_left_behind (AntDesk *self, gboolean wanted); /* open it, or throw it away */
+void ant_desk_forget_unsaved (AntDesk *self); /* the user lets changes go */
 
 /* The settings. A change is told only if the value differs. */
 const AntSettings *ant_desk_get_settings (AntDesk *self);
@@ -101,8 +131,18 @@ void ant_desk_set_pointer (AntDesk *self, double time_d);
 gboolean ant_desk_get_span (AntDesk *self, AntSpan *span);
 void ant_desk_set_span (AntDesk *self, const AntSpan *span); /* NULL: none */
 void ant_desk_widen_span (AntDesk *self, int steps); /* about the middle of the view, for keys */
-gboolean ant_desk_get_measuring (AntDesk *self); /* the next drag on a strip draws a span */
-void ant_desk_set_measuring (AntDesk *self, gboolean measuring);
+/* What the next drag on a strip is for. */
+typedef enum
+{
+  ANT_DRAG_VIEW, /* it moves the view */
+  ANT_DRAG_MEASURE,
+  ANT_DRAG_MASK,
+  ANT_DRAG_UNMASK,
+} AntDragPurpose;
+AntDragPurpose ant_desk_get_purpose (AntDesk *self);
+void ant_desk_set_purpose (AntDesk *self, AntDragPurpose purpose);
+/* Do with the span that was drawn what it was drawn for; without a purpose it is measured. */
+void ant_desk_use_span (AntDesk *self);
 /* "2041-03-14 07:12 · 1360.52 W/m² · residual −871 ppm" for the pointer, "" for none. Caller frees. */
 char *ant_desk_readout (AntDesk *self);
 

@@ -41,6 +41,14 @@ ant_file_prompt_open (GtkWindow *parent, const char *title, AntFilePromptFunc ca
 }
 
 void
+ant_file_prompt_folder (GtkWindow *parent, const char *title, AntFilePromptFunc callback, gpointer data)
+{
+  GtkFileChooserNative *dialog
+      = prompt_new (parent, title, GTK_FILE_CHOOSER_ACTION_SELECT_FOLDER, _("_Save Here"), callback, data);
+  gtk_native_dialog_show (GTK_NATIVE_DIALOG (dialog));
+}
+
+void
 ant_file_prompt_save (GtkWindow *parent, const char *title, const char *suggested, AntFilePromptFunc callback,
                       gpointer data)
 {

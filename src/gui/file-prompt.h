@@ -7,6 +7,7 @@
 typedef void (*AntFilePromptFunc) (const char *path, gpointer data);
 
 void ant_file_prompt_open (GtkWindow *parent, const char *title, AntFilePromptFunc callback, gpointer data);
+void ant_file_prompt_folder (GtkWindow *parent, const char *title, AntFilePromptFunc callback, gpointer data);
 /* suggested: a name without folder. The dialog itself asks before it replaces a file. */
 void ant_file_prompt_save (GtkWindow *parent, const char *title, const char *suggested, AntFilePromptFunc callback,
                            gpointer data);

@@ -26,6 +26,7 @@ make_ribbon (AntPlotView *plot)
   AntRibbon ribbon = { .pyramid = layers->values, .start_d = layers->record->series.start_d,
                        .step_d = layers->record->series.step_d, .selected = ant_desk_get_selected_mark (desk) };
   ribbon.n_dips = ant_desk_get_marks (desk, &ribbon.dip);
+  ribbon.n_masks = ant_desk_get_masks (desk, &ribbon.mask);
   return ribbon;
 }
 
@@ -137,7 +138,8 @@ ant_ribbon_view_class_init (AntRibbonViewClass *klass)
   GtkWidgetClass *widget_class = GTK_WIDGET_CLASS (klass);
   AntPlotViewClass *plot_class = ANT_PLOT_VIEW_CLASS (klass);
   plot_class->watches =
-      ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT | ANT_DESK_LOOK;
+      ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT | ANT_DESK_LOOK
+      | ANT_DESK_MASKS;
   plot_class->paint = ant_ribbon_view_paint;
   plot_class->describe = ant_ribbon_view_describe;
   widget_class->measure = ant_ribbon_view_measure;

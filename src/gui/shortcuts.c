@@ -10,8 +10,14 @@
 #define GENERAL N_("General")
 
 const AntShortcut ant_shortcut_table[] = {
-  { "win.open", N_("Open a record"), FILES, { "<Control>o" } },
+  { "win.open", N_("Open a record or an analysis"), FILES, { "<Control>o" } },
   { "win.reload", N_("Read the record again"), FILES, { "<Control>r" } },
+  { "win.save", N_("Save the analysis"), FILES, { "<Control>s" } },
+  { "win.save-as", N_("Save the analysis under another name"), FILES, { "<Control><Shift>a" } },
+  { "win.save-tables", N_("Save all tables into a folder"), FILES, { "<Control><Alt>s" } },
+  { "win.find-record", N_("Say where the record of the analysis is now"), FILES, { "<Control><Shift>o" } },
+  { "win.undo", N_("Undo the last change"), FILES, { "<Control>z" } },
+  { "win.redo", N_("Do it again"), FILES, { "<Control><Shift>z", "<Control>y" } },
   { "win.save-list", N_("Save the list of dips as CSV, FITS or VOTable"), FILES, { "<Control>e" } },
   { "win.save-flags", N_("Save the flags of left-out rows as CSV or FITS"), FILES, { "<Control><Shift>e" } },
   { "win.save-series", N_("Save the detrended series as CSV or FITS"), FILES, { "<Control><Alt>e" } },
@@ -25,6 +31,8 @@ const AntShortcut ant_shortcut_table[] = {
   { "win.scan", N_("Scan for dips"), SEARCH, { "<Control>Return", "F5" } },
   { "win.stop", N_("Stop what is running"), SEARCH, { "<Control>period" } },
   { "win.measure", N_("Measure a dip: drag across it"), SEARCH, { "<Control>m" } },
+  { "win.mask", N_("Leave out a span: drag across it"), SEARCH, { "<Control>k" } },
+  { "win.unmask", N_("Use a span again that was left out"), SEARCH, { "<Control><Shift>k" } },
   { "win.settings", N_("Settings of the search"), SEARCH, { "F9" } },
   { "win.reset-settings", N_("All settings back to default"), SEARCH, { "<Control><Shift>F9" } },
 
@@ -71,6 +79,7 @@ static const AntShortcut on_plots[] = {
   { NULL, N_("Next dip, previous dip"), N_("On a strip"), { "n", "p" } },
   { NULL, N_("Begin or widen a span, narrow it"), N_("On a strip"), { "<Shift>Right", "<Shift>Left" } },
   { NULL, N_("Measure the dip in the span, forget the span"), N_("On a strip"), { "Return", "Escape" } },
+  { NULL, N_("Leave out the span, use it again"), N_("On a strip"), { "m", "u" } },
   { NULL, N_("Save the figure as PNG, SVG or PDF"), N_("On a plot"), { "<Control><Shift>s" } },
   { NULL, N_("Copy the figure"), N_("On a plot"), { "<Control>c" } },
   { NULL, N_("Menu of the plot"), N_("On a plot"), { "<Shift>F10", "Menu" } },

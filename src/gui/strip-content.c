@@ -114,6 +114,7 @@ ant_strip_fill (AntDesk *desk, AntStripKind kind, AntStrip *strip, gsize size, c
   strip->n_dips = ant_desk_get_marks (desk, &strip->dip);
   strip->selected = ant_desk_get_selected_mark (desk);
   strip->n_ticks = ant_desk_get_ticks (desk, &strip->tick_d);
+  strip->n_masks = ant_desk_get_masks (desk, &strip->mask);
   if (kind == ANT_STRIP_SNR)
     fill_snr (desk, strip, size, text);
   else if (kind == ANT_STRIP_WITNESS)

@@ -200,7 +200,7 @@ drag_begin_cb (GtkGestureDrag *gesture, double x, double y, AntStripView *self)
     return;
   GdkModifierType state = gtk_event_controller_get_current_event_state (GTK_EVENT_CONTROLLER (gesture));
   self->dragging = FALSE;
-  self->drawing = (state & GDK_SHIFT_MASK) || ant_desk_get_measuring (desk);
+  self->drawing = (state & GDK_SHIFT_MASK) || ant_desk_get_purpose (desk) != ANT_DRAG_VIEW;
   self->drag_view = *ant_desk_get_view (desk);
   self->drag_at_d = time_at (self, x);
 }
@@ -222,21 +222,10 @@ drag_update_cb (GtkGestureDrag *gesture, double dx, double dy, AntStripView *sel
 }
 
 static void
-measure_span (AntStripView *self)
-{
-  AntDesk *desk = desk_of (self);
-  AntSpan span;
-  if (!ant_desk_get_span (desk, &span))
-    return;
-  ant_desk_set_measuring (desk, FALSE);
-  ant_desk_ask (desk, span.start_d, span.end_d);
-}
-
-static void
 drag_end_cb (GtkGestureDrag *gesture, double dx, double dy, AntStripView *self)
 {
   if (self->dragging && self->drawing)
-    measure_span (self);
+    ant_desk_use_span (desk_of (self));
   self->dragging = self->drawing = FALSE;
 }
 
@@ -265,7 +254,7 @@ typedef struct
   const char *name;
   guint key;
   GdkModifierType modifiers;
-  enum { ZOOM, PAN, WHOLE, SPAN, MEASURE, FORGET, NEXT } what;
+  enum { ZOOM, PAN, WHOLE, SPAN, MEASURE, MASK, UNMASK, FORGET, NEXT } what;
   double by;
 } Move;
 
@@ -278,6 +267,8 @@ static const Move moves[] = {
   { "strip.narrow-span", GDK_KEY_Left, GDK_SHIFT_MASK, SPAN, -1 },
   { "strip.widen-span", GDK_KEY_Right, GDK_SHIFT_MASK, SPAN, 1 },
   { "strip.measure-span", GDK_KEY_Return, 0, MEASURE, 0 },
+  { "strip.mask-span", GDK_KEY_m, 0, MASK, 0 },
+  { "strip.unmask-span", GDK_KEY_u, 0, UNMASK, 0 },
   { "strip.forget-span", GDK_KEY_Escape, 0, FORGET, 0 },
   { "strip.next", GDK_KEY_n, 0, NEXT, 1 },
   { "strip.previous", GDK_KEY_p, 0, NEXT, -1 },
@@ -305,7 +296,7 @@ move_action (GtkWidget *widget, const char *name, GVariant *parameter)
           ant_desk_widen_span (desk, (int) moves[i].by);
           break;
         case MEASURE:
-          measure_span (self);
+          ant_desk_use_span (desk_of (self));
           break;
         case NEXT:
           ant_desk_select_next (desk, (int) moves[i].by);
@@ -313,7 +304,7 @@ move_action (GtkWidget *widget, const char *name, GVariant *parameter)
         case FORGET:
         default:
           ant_desk_set_span (desk, NULL);
-          ant_desk_set_measuring (desk, FALSE);
+          ant_desk_set_purpose (desk, ANT_DRAG_VIEW);
         }
 }
 
@@ -331,7 +322,7 @@ ant_strip_view_desk_changed (AntPlotView *plot, AntDeskChange what)
   if (what & (ANT_DESK_RECORD | ANT_DESK_LOOK | ANT_DESK_SNR | ANT_DESK_WITNESS))
     name (ANT_STRIP_VIEW (plot));
   gtk_widget_set_cursor_from_name (GTK_WIDGET (plot),
-                                   ant_desk_get_measuring (ant_plot_view_get_desk (plot)) ? "crosshair" : NULL);
+                                   ant_desk_get_purpose (ant_plot_view_get_desk (plot)) != ANT_DRAG_VIEW ? "crosshair" : NULL);
 }
 
 void
@@ -364,7 +355,7 @@ ant_strip_view_class_init (AntStripViewClass *klass)
   AntPlotViewClass *plot_class = ANT_PLOT_VIEW_CLASS (klass);
   G_OBJECT_CLASS (klass)->finalize = ant_strip_view_finalize;
   plot_class->watches = ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT
-                        | ANT_DESK_LOOK | ANT_DESK_SNR | ANT_DESK_FOLD | ANT_DESK_SKY | ANT_DESK_WITNESS;
+                        | ANT_DESK_LOOK | ANT_DESK_MASKS | ANT_DESK_SNR | ANT_DESK_FOLD | ANT_DESK_SKY | ANT_DESK_WITNESS;
   plot_class->paint = ant_strip_view_paint;
   plot_class->overlay = ant_strip_view_overlay;
   plot_class->describe = ant_strip_view_describe;

@@ -26,6 +26,10 @@ enum
   NEEDS_NO_SCAN = 1 << 8,
   NEEDS_SLOW_PART = 1 << 9, /* a scan has run to its end */
   NEEDS_WITNESS = 1 << 10,
+  NEEDS_ANALYSIS = 1 << 11, /* of some record, be it there or not */
+  NEEDS_UNDO = 1 << 12,
+  NEEDS_REDO = 1 << 13,
+  NEEDS_MASKS = 1 << 14,
 };
 
 static const char *const witness_looks[ANT_N_WITNESS_LOOKS] = { "itself", "ratio", "difference" };
@@ -99,8 +103,7 @@ next_witness_look (AntWindow *self, GVariant *parameter)
 static void
 reload (AntWindow *self, GVariant *parameter)
 {
-  g_autofree char *path = g_strdup (ant_desk_get_record (self->desk)->path);
-  ant_desk_open (self->desk, path);
+  ant_desk_reload (self->desk);
 }
 
 static void
@@ -122,13 +125,77 @@ stop (AntWindow *self, GVariant *parameter)
 }
 
 static void
+toggle_purpose (AntWindow *self, AntDragPurpose purpose)
+{
+  ant_desk_set_purpose (self->desk, ant_desk_get_purpose (self->desk) == purpose ? ANT_DRAG_VIEW : purpose);
+}
+
+/* A span that is drawn already is taken; else the next one is. */
+static void
+draw_for (AntWindow *self, AntDragPurpose purpose)
+{
+  AntSpan span;
+  toggle_purpose (self, purpose);
+  if (ant_desk_get_purpose (self->desk) == purpose && ant_desk_get_span (self->desk, &span))
+    ant_desk_use_span (self->desk);
+}
+
+static void
+mask (AntWindow *self, GVariant *parameter)
+{
+  draw_for (self, ANT_DRAG_MASK);
+}
+
+static void
+unmask (AntWindow *self, GVariant *parameter)
+{
+  draw_for (self, ANT_DRAG_UNMASK);
+}
+
+static void
+undo (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_undo (self->desk);
+}
+
+static void
+redo (AntWindow *self, GVariant *parameter)
+{
+  ant_desk_redo (self->desk);
+}
+
+static void
+save (AntWindow *self, GVariant *parameter)
+{
+  ant_window_save (self);
+}
+
+static void
+save_as (AntWindow *self, GVariant *parameter)
+{
+  ant_window_save_as (self);
+}
+
+static void
+save_tables (AntWindow *self, GVariant *parameter)
+{
+  ant_window_save_tables (self);
+}
+
+static void
+find_record (AntWindow *self, GVariant *parameter)
+{
+  ant_window_find_record (self);
+}
+
+static void
 measure (AntWindow *self, GVariant *parameter)
 {
   AntSpan span;
   if (ant_desk_get_span (self->desk, &span))
     ant_desk_ask (self->desk, span.start_d, span.end_d);
   else
-    ant_desk_set_measuring (self->desk, !ant_desk_get_measuring (self->desk));
+    toggle_purpose (self, ANT_DRAG_MEASURE);
 }
 
 static void
@@ -362,6 +429,14 @@ static const Action actions[] = {
   { "next-witness-look", NULL, NULL, next_witness_look, NEEDS_WITNESS },
   { "reload", NULL, NULL, reload, NEEDS_RECORD | NEEDS_NO_SCAN },
   { "close", NULL, NULL, close_window, 0 },
+  { "save", NULL, NULL, save, NEEDS_ANALYSIS },
+  { "save-as", NULL, NULL, save_as, NEEDS_ANALYSIS },
+  { "save-tables", NULL, NULL, save_tables, NEEDS_RESULTS },
+  { "find-record", NULL, NULL, find_record, NEEDS_ANALYSIS | NEEDS_NO_SCAN },
+  { "undo", NULL, NULL, undo, NEEDS_UNDO },
+  { "redo", NULL, NULL, redo, NEEDS_REDO },
+  { "mask", NULL, NULL, mask, NEEDS_RECORD },
+  { "unmask", NULL, NULL, unmask, NEEDS_RECORD | NEEDS_MASKS },
   { "save-list", NULL, NULL, save_list, NEEDS_RESULTS },
   { "save-flags", NULL, NULL, save_flags, NEEDS_RECORD },
   { "save-series", NULL, NULL, save_series, NEEDS_SLOW_PART },
@@ -435,11 +510,15 @@ static unsigned
 present_state (AntDesk *desk)
 {
   const AntDipMark *marks;
+  const AntAnalysis *analysis = ant_desk_get_analysis (desk);
+  const AntSpan *masks;
   AntSpan span;
   const AntScanResults *results = ant_desk_get_results (desk);
   AntBusy busy = ant_desk_get_busy (desk);
   gboolean record = ant_desk_get_record (desk) != NULL, selection = ant_desk_get_selected (desk) != NULL;
-  return (record ? NEEDS_RECORD : 0u) | (results ? NEEDS_RESULTS : 0u)
+  return (ant_analysis_get_record_path (analysis) ? NEEDS_ANALYSIS : 0u) | (ant_analysis_undo_name (analysis) ? NEEDS_UNDO : 0u)
+         | (ant_analysis_redo_name (analysis) ? NEEDS_REDO : 0u) | (ant_desk_get_masks (desk, &masks) > 0 ? NEEDS_MASKS : 0u)
+         | (record ? NEEDS_RECORD : 0u) | (results ? NEEDS_RESULTS : 0u)
          | (results && results->slow_ppm ? NEEDS_SLOW_PART : 0u)
          | (ant_desk_get_marks (desk, &marks) > 0 ? NEEDS_MARKS : 0u) | (selection ? NEEDS_SELECTION : 0u)
          | (busy != ANT_BUSY_NO && busy != ANT_BUSY_STOPPING ? NEEDS_WORK : 0u) | (ant_desk_can_go (desk, -1) ? NEEDS_BACK : 0u)

@@ -20,7 +20,10 @@ struct _AntWindow
   GtkButton *scan, *banner_button;
   GtkWidget *welcome_open;
   GtkSpinner *spinner;
-  GtkInfoBar *banner;
+  GtkInfoBar *banner, *offer;
+  GtkLabel *offer_text;
+  GtkButton *offer_yes, *offer_no;
+  GMenu *edit_section;
   GtkStack *stack, *pages;
   GtkListBox *recent;
   GtkPaned *paned;
@@ -36,12 +39,29 @@ struct _AntWindow
 
   /* Owned */
   AntDesk *desk;
+
+  /* Leaving the analysis, once it is saved: for this path (owned), or to close */
+  gboolean asking, leave_when_saved, may_close;
+  char *going_to;
 };
 
 /* Install the actions on a new window, and grey out those that make no sense now. */
 void ant_window_add_actions (AntWindow *self);
 void ant_window_update_actions (AntWindow *self);
 void ant_window_complain (AntWindow *self, const char *sentence);
+/* Keeping the work. window-keep.c. */
+void ant_window_save (AntWindow *self);
+void ant_window_save_as (AntWindow *self);
+void ant_window_save_tables (AntWindow *self);
+void ant_window_save_tables_into (AntWindow *self, const char *folder, gboolean replace);
+void ant_window_find_record (AntWindow *self);
+void ant_window_accept_offer (AntWindow *self);
+void ant_window_decline_offer (AntWindow *self);
+/* Leave for another file, or (NULL) close: TRUE if nothing stands against it. Else the user is asked, and it is done after
+ * the answer. */
+gboolean ant_window_leave (AntWindow *self, const char *path);
+void ant_window_stay (AntWindow *self);
+void ant_window_show_kept (AntWindow *self);
 /* Save what the window shows, as it stands now; asks where. window-save.c. */
 void ant_window_save_list (AntWindow *self);   /* dips or brightenings, whichever the list shows; wants results */
 void ant_window_save_flags (AntWindow *self);  /* wants a record */

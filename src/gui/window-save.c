@@ -24,10 +24,10 @@ typedef struct
   AntSaveMake make;
   AntRecord *record;
   AntScanResults *results; /* or NULL */
+  AntJudgements *judgements;
   AntResultTable which;
   AntTableFormat format;
   AntPaper paper;
-  AntReportWord *word;     /* of a report, else NULL */
   Rows rows;               /* of a list of dips */
 } Order;
 
@@ -66,11 +66,9 @@ static void
 order_free (gpointer data)
 {
   Order *order = data;
-  for (gsize i = 0; order->word && i < order->results->n_dips; i++)
-    g_free ((char *) (gsize) order->word[i].note);
-  g_free (order->word);
   ant_record_unref (order->record);
   ant_scan_results_unref (order->results);
+  ant_judgements_free (order->judgements);
   g_clear_object (&order->window);
   rows_clear (&order->rows);
   g_free (order);
@@ -84,6 +82,7 @@ order_new (AntWindow *self, AntSaveMake make)
   order->window = g_object_ref (self);
   order->make = make;
   order->record = ant_record_ref ((AntRecord *) (gsize) ant_desk_get_record (self->desk));
+  order->judgements = ant_judgements_copy (ant_analysis_get_judgements (ant_desk_get_analysis (self->desk)));
   order->results = results ? ant_scan_results_ref ((AntScanResults *) (gsize) results) : NULL;
   return order;
 }
@@ -127,7 +126,7 @@ static GBytes *
 make_table (gconstpointer data, GError **error)
 {
   const Order *order = data;
-  g_autoptr (AntTable) table = ant_result_table_new (order->which, order->results);
+  g_autoptr (AntTable) table = ant_result_table_new (order->which, order->results, order->judgements);
   return ant_table_bytes (table, order->format, error);
 }
 
@@ -195,23 +194,8 @@ static GBytes *
 make_report (gconstpointer data, GError **error)
 {
   const Order *order = data;
-  return ant_report_bytes (order->results, order->word, order->paper, error);
-}
-
-/* What is said of each dip; brightenings and asked dips are not in the report's list. */
-static AntReportWord *
-words_of (AntDesk *desk, gsize n_dips)
-{
-  AntReportWord *word = g_new0 (AntReportWord, n_dips + 1);
-  GListModel *items = ant_desk_get_items (desk);
-  for (guint i = 0; i < g_list_model_get_n_items (items); i++)
-    {
-      g_autoptr (AntDipItem) item = g_list_model_get_item (items, i);
-      guint number = ant_dip_item_get_number (item);
-      if (ant_dip_item_get_kind (item) == ANT_KIND_DIP && number >= 1 && number <= n_dips)
-        word[number - 1] = (AntReportWord) { ant_dip_item_get_class (item), g_strdup (ant_dip_item_get_note (item)) };
-    }
-  return word;
+  g_autofree AntReportWord *word = ant_report_words (order->results, order->judgements);
+  return ant_report_bytes (order->results, word, order->paper, error);
 }
 
 void
@@ -219,7 +203,6 @@ ant_window_write_report (AntWindow *self, const char *path)
 {
   Order *order = order_new (self, make_report);
   order->paper = (AntPaper) ant_desk_get_settings (self->desk)->paper;
-  order->word = words_of (self->desk, order->results->n_dips);
   start (order, path);
 }
 

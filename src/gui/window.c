@@ -60,8 +60,7 @@ banner_closed_cb (AntWindow *self)
 void
 ant_window_open (AntWindow *self, const char *path)
 {
-  gtk_info_bar_set_revealed (self->banner, FALSE);
-  ant_desk_open (self->desk, path);
+  ant_window_leave (self, path);
 }
 
 /* Recent records */
@@ -111,9 +110,8 @@ static void
 show_record (AntWindow *self)
 {
   const AntLayers *layers = ant_desk_get_layers (self->desk);
-  g_autofree char *name = layers ? g_path_get_basename (layers->record->path) : g_strdup (_("Antumbra"));
+  const char *path = ant_analysis_get_path (ant_desk_get_analysis (self->desk));
   g_autofree char *headline = layers ? ant_record_headline (layers->record, &layers->summary) : g_strdup ("");
-  gtk_label_set_text (self->title, name);
   gtk_label_set_text (self->subtitle, headline);
   gtk_widget_set_visible (GTK_WIDGET (self->subtitle), layers != NULL);
   gtk_stack_set_visible_child_name (self->stack, layers ? "work" : "welcome");
@@ -121,7 +119,7 @@ show_record (AntWindow *self)
     return;
   gtk_widget_child_focus (GTK_WIDGET (self->time_stack), GTK_DIR_TAB_FORWARD);
   gtk_info_bar_set_revealed (self->banner, FALSE);
-  ant_preferences_add_recent (layers->record->path);
+  ant_preferences_add_recent (path ? path : layers->record->path);
   show_recent (self);
 }
 
@@ -154,8 +152,13 @@ show_status (AntWindow *self)
   AntBusy busy = ant_desk_get_busy (self->desk);
   const AntScanResults *results = ant_desk_get_results (self->desk);
   g_autofree char *text = busy != ANT_BUSY_NO                   ? progress_text (self->desk)
-                          : ant_desk_is_stale (self->desk)      ? g_strdup (_("The settings have changed: scan again"))
-                          : ant_desk_get_measuring (self->desk) ? g_strdup (_("Drag across the dip to measure it"))
+                          : ant_desk_is_stale (self->desk)      ? g_strdup (_("Settings or masks have changed: scan again"))
+                          : ant_desk_get_purpose (self->desk) == ANT_DRAG_MEASURE
+                              ? g_strdup (_("Drag across the dip to measure it"))
+                          : ant_desk_get_purpose (self->desk) == ANT_DRAG_MASK
+                              ? g_strdup (_("Drag across what is to be left out"))
+                          : ant_desk_get_purpose (self->desk) == ANT_DRAG_UNMASK
+                              ? g_strdup (_("Drag across what is to be used again"))
                           : results                             ? ant_scan_headline (results)
                                                                 : g_strdup (_("Not scanned yet"));
   gtk_label_set_text (self->status, text);
@@ -169,14 +172,17 @@ show_status (AntWindow *self)
   gtk_spinner_set_spinning (self->spinner, busy == ANT_BUSY_OPENING);
 }
 
-/* The desktop's list of windows tells from afar whether the scan is over. */
+/* The desktop's list of windows tells from afar whether the scan is over; a dot, that there is something to save. */
 static void
 show_title (AntWindow *self)
 {
-  const AntRecord *record = ant_desk_get_record (self->desk);
-  g_autofree char *name = record ? g_path_get_basename (record->path) : g_strdup (_("Antumbra"));
+  g_autofree char *kept = ant_desk_get_name (self->desk), *name = kept ? g_steal_pointer (&kept) : g_strdup (_("Antumbra"));
+  gboolean changed = ant_analysis_is_changed (ant_desk_get_analysis (self->desk));
+  g_autofree char *marked = g_strconcat (changed ? "• " : "", name, NULL);
   gboolean scanning = ant_desk_get_busy (self->desk) == ANT_BUSY_SCANNING;
-  g_autofree char *title = scanning ? g_strdup_printf (_("%s – scanning"), name) : g_strdup (name);
+  g_autofree char *title = scanning ? g_strdup_printf (_("%s – scanning"), marked) : g_strdup (marked);
+  gtk_label_set_text (self->title, marked);
+  gtk_widget_set_tooltip_text (GTK_WIDGET (self->title), changed ? _("Not saved since the last change") : NULL);
   if (g_strcmp0 (title, gtk_window_get_title (GTK_WINDOW (self))) != 0)
     gtk_window_set_title (GTK_WINDOW (self), title);
 }
@@ -208,12 +214,16 @@ desk_changed_cb (AntDesk *desk, guint what, AntWindow *self)
     show_record (self);
   if (what & (ANT_DESK_RESULTS | ANT_DESK_RECORD))
     show_completeness (self);
-  if (what & (ANT_DESK_BUSY | ANT_DESK_RESULTS | ANT_DESK_RECORD | ANT_DESK_SETTINGS | ANT_DESK_POINTER))
+  if (what & (ANT_DESK_BUSY | ANT_DESK_RESULTS | ANT_DESK_RECORD | ANT_DESK_SETTINGS | ANT_DESK_POINTER | ANT_DESK_MASKS))
     show_status (self);
   if (what & (ANT_DESK_BUSY | ANT_DESK_RESULTS | ANT_DESK_RECORD | ANT_DESK_SETTINGS))
     {
       show_scan_button (self);
+    }
+  if (what & (ANT_DESK_BUSY | ANT_DESK_RESULTS | ANT_DESK_RECORD | ANT_DESK_KEPT))
+    {
       show_title (self);
+      ant_window_show_kept (self);
     }
   ant_window_update_actions (self);
 }
@@ -269,6 +279,8 @@ ant_window_new (GtkApplication *application)
 static gboolean
 ant_window_close_request (GtkWindow *window)
 {
+  if (!ant_window_leave (ANT_WINDOW (window), NULL))
+    return TRUE;
   if (!gtk_window_is_maximized (window))
     {
       int width, height;
@@ -289,6 +301,7 @@ ant_window_dispose (GObject *object)
       ant_desk_abandon (self->desk);
     }
   g_clear_object (&self->desk);
+  g_clear_pointer (&self->going_to, g_free);
   gtk_widget_dispose_template (GTK_WIDGET (object), ANT_TYPE_WINDOW);
   G_OBJECT_CLASS (ant_window_parent_class)->dispose (object);
 }
@@ -308,6 +321,11 @@ bind_children (GtkWidgetClass *widget_class)
   gtk_widget_class_bind_template_child (widget_class, AntWindow, scan);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, spinner);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, banner);
+  gtk_widget_class_bind_template_child (widget_class, AntWindow, offer);
+  gtk_widget_class_bind_template_child (widget_class, AntWindow, offer_text);
+  gtk_widget_class_bind_template_child (widget_class, AntWindow, offer_yes);
+  gtk_widget_class_bind_template_child (widget_class, AntWindow, offer_no);
+  gtk_widget_class_bind_template_child (widget_class, AntWindow, edit_section);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, stack);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, pages);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, recent);
@@ -339,6 +357,8 @@ ant_window_class_init (AntWindowClass *klass)
   gtk_widget_class_set_template_from_resource (widget_class, "/org/antumbra/Antumbra/window.ui");
   bind_children (widget_class);
   gtk_widget_class_bind_template_callback (widget_class, banner_closed_cb);
+  gtk_widget_class_bind_template_callback (widget_class, ant_window_accept_offer);
+  gtk_widget_class_bind_template_callback (widget_class, ant_window_decline_offer);
   gtk_widget_class_bind_template_callback (widget_class, page_shown_cb);
   gtk_widget_class_bind_template_callback (widget_class, recent_chosen_cb);
 }

@@ -42,6 +42,19 @@ ant_report_verdict_words (const AntReport *report, gsize dip)
   return g_strdup_printf ("%s, %s", title, probability);
 }
 
+AntReportWord *
+ant_report_words (const AntScanResults *results, const AntJudgements *judgements)
+{
+  AntReportWord *word = g_new0 (AntReportWord, results->n_dips + 1);
+  for (gsize i = 0; i < results->n_dips; i++)
+    {
+      const AntDip *dip = &results->dip[i];
+      word[i] = (AntReportWord) { ant_judgements_class (judgements, dip->mid_d, dip->duration_d),
+                                  ant_judgements_note (judgements, dip->mid_d, dip->duration_d) };
+    }
+  return word;
+}
+
 GBytes *
 ant_report_bytes (const AntScanResults *results, const AntReportWord *word, AntPaper paper, GError **error)
 {

@@ -13,6 +13,9 @@ typedef struct
   const char *note; /* "" or NULL: none */
 } AntReportWord;
 
+/* [results->n_dips] of what an analysis keeps; the notes are borrowed from the judgements. Caller g_frees. */
+AntReportWord *ant_report_words (const AntScanResults *results, const AntJudgements *judgements);
+
 /* The PDF. word [results->n_dips], or NULL: the analyst has said nothing. Takes as long as drawing the record's curve takes
  * (seconds for millions of samples), and some 5 ms for each dip; any thread. NULL with one sentence: the record is too poor for a
  * curve, or what cairo says. */

@@ -3,6 +3,7 @@
 #include <glib.h>
 #include <math.h>
 #include "plot/axes.h"
+#include "plot/masks.h"
 #include "plot/strip-data.h"
 
 #define EDGE_PX 5      /* an edge is caught from this near */
@@ -119,6 +120,7 @@ ant_ribbon_paint (cairo_t *cr, const AntBox *box, const AntRibbon *ribbon, const
   ant_strip_data_gaps (&pen, &area, &data, &whole);
   ant_pen_clip (&pen, &area);
   ant_strip_data_samples (&pen, &inner, &data, &whole, &theme->role[ANT_ROLE_QUIET]);
+  ant_masks_paint (&pen, &area, &whole, ribbon->n_masks, ribbon->mask);
   draw_dips (&pen, &area, ribbon, &whole);
   cairo_restore (cr);
   draw_view_box (&pen, &area, &whole, view);

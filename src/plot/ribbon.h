@@ -1,6 +1,7 @@
 /* ribbon.h - the whole record on one thin band, with the part in view boxed: shows where one is and moves it. */
 #pragma once
 
+#include "core/span.h"
 #include "plot/dip-mark.h"
 #include "plot/pen.h"
 
@@ -8,6 +9,8 @@ typedef struct
 {
   const AntPyramid *pyramid; /* of the whole record; place 0 at start_d */
   double start_d, step_d;
+  size_t n_masks;
+  const AntSpan *mask;       /* spans that are left out: hatched */
   size_t n_dips;
   const AntDipMark *dip;
   size_t selected;           /* or ANT_NO_DIP */

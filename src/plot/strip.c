@@ -4,6 +4,7 @@
 #include <glib/gi18n.h>
 #include <math.h>
 #include "plot/axes.h"
+#include "plot/masks.h"
 #include "plot/labels.h"
 #include "plot/number-text.h"
 #include "plot/strip-data.h"
@@ -274,6 +275,7 @@ ant_strip_paint (cairo_t *cr, const AntBox *box, const AntStrip *strip, const An
     ant_strip_data_curve (&pen, &area, &data, view);
   draw_line (&pen, &area, view, strip->line);
   draw_ticks (&pen, &area, strip, view);
+  ant_masks_paint (&pen, &area, view, strip->n_masks, strip->mask);
   cairo_restore (cr);
 
   ant_axes_bottom (&pen, &area, view, &x, strip->time_axis);

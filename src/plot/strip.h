@@ -9,6 +9,7 @@
 #pragma once
 
 #include <math.h>
+#include "core/span.h"
 #include "data/time-reference.h"
 #include "plot/averages.h"
 #include "plot/dip-mark.h"
@@ -23,6 +24,8 @@ typedef struct
   double start_d, step_d;
   const AntAverages *averages;   /* of the same values, or NULL */
   const float *curve;            /* [samples of the pyramid] drawn over them, or NULL; NaN where there is none */
+  size_t n_masks;
+  const AntSpan *mask;           /* spans that are left out: hatched */
   double line;                   /* a level to draw dashed; NaN: none */
   double label_zero, label_per;  /* labels show label_zero + label_per * value; label_per 0 counts as 0 and 1 */
   size_t n_dips;

@@ -48,12 +48,18 @@ ant_unsaved_path (const char *path, guint number)
 }
 
 gboolean
-ant_unsaved_write (const char *unsaved_path, const char *text, GError **error)
+ant_unsaved_make_folder (const char *unsaved_path)
 {
   g_autofree char *folder = g_path_get_dirname (unsaved_path), *states = unsaved_folder ();
-  if (g_str_equal (folder, states) && g_mkdir_with_parents (folder, 0700) != 0)
+  return !g_str_equal (folder, states) || g_mkdir_with_parents (folder, 0700) == 0;
+}
+
+gboolean
+ant_unsaved_write (const char *unsaved_path, const char *text, GError **error)
+{
+  if (!ant_unsaved_make_folder (unsaved_path))
     {
-      g_set_error (error, ANT_ERROR, ANT_ERROR_WRITE, _("%s: cannot be made: %s"), folder, g_strerror (errno));
+      g_set_error (error, ANT_ERROR, ANT_ERROR_WRITE, _("%s: cannot be made: %s"), unsaved_path, g_strerror (errno));
       return FALSE;
     }
   return ant_analysis_file_write (unsaved_path, text, TRUE, error);
@@ -82,6 +88,17 @@ ant_unsaved_left_behind (void)
       g_strv_builder_add (paths, path);
     }
   return g_strv_builder_end (paths);
+}
+
+char *
+ant_file_time_words (const char *path)
+{
+  GStatBuf status;
+  gint64 seconds = g_stat (path, &status) == 0 ? status.st_mtime : 0;
+  g_autoptr (GDateTime) then = g_date_time_new_from_unix_local (seconds), now = g_date_time_new_now_local ();
+  gboolean today = g_date_time_get_year (then) == g_date_time_get_year (now)
+                   && g_date_time_get_day_of_year (then) == g_date_time_get_day_of_year (now);
+  return g_date_time_format (then, today ? "%H:%M" : "%Y-%m-%d %H:%M");
 }
 
 void

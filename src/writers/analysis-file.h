@@ -16,8 +16,11 @@ gboolean ant_analysis_file_save (AntAnalysis *analysis, const char *path, gboole
 /* Where unsaved work is kept, for an analysis with this path; path NULL: a name in the user's folder of states that is
  * this process's own, the `number`-th. Caller frees. */
 char *ant_unsaved_path (const char *path, guint number);
-/* The folder for unsaved work is made if it is missing, so that a write can succeed. */
+/* Make the user's folder for it if that is where it will stand, so that a write can succeed. */
+gboolean ant_unsaved_make_folder (const char *unsaved_path);
 gboolean ant_unsaved_write (const char *unsaved_path, const char *text, GError **error);
 /* Unsaved work without a file that processes left which are no more. Caller frees (g_strfreev). */
 char **ant_unsaved_left_behind (void);
+/* When a file was last written, in the user's own time: "14:07", or with the day if that is another. Caller frees. */
+char *ant_file_time_words (const char *path);
 void ant_unsaved_remove (const char *unsaved_path);

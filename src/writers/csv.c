@@ -46,7 +46,8 @@ ant_csv_preamble (GString *table, const char *title, const AntRecord *record)
 {
   const AntTimeReference *time = &record->time;
   ant_csv_comment (table, "%s (Antumbra %s)", title, ANT_VERSION);
-  ant_csv_comment (table, "record: %s", record->path ? record->path : "-");
+  g_autofree char *name = ant_record_name (record);
+  ant_csv_comment (table, "record: %s", name);
   ant_csv_comment (table, "SHA-256: %s", record->sha256 ? record->sha256 : "unknown");
   ant_csv_comment (table, "time scale: %s%s; clock at: %s", ant_time_scale_name (time->scale),
                    time->scale != ANT_SCALE_UNKNOWN && time->scale_assumed ? " (assumed)" : "",

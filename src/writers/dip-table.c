@@ -51,8 +51,10 @@ NUMBER (probability, rows->list.verdict ? ant_verdict_probability (&rows->list.v
 TEXT (evidence, rows->list.verdict ? ant_verdict_table_text (&rows->list.verdict[row]) : g_strdup (""))
 TEXT (asked, g_strdup (isnan (rows->list.upper_limit_ppm[row]) ? "" : "asked"))
 NUMBER (upper_limit_ppm, rows->list.upper_limit_ppm[row])
-TEXT (analyst_class, g_strdup (rows->list.analyst_class[row]))
-TEXT (analyst_note, g_strdup (rows->list.analyst_note[row]))
+TEXT (analyst_class, g_strdup (rows->list.analyst_class ? rows->list.analyst_class[row]
+                                : ant_dip_class_name (ant_judgements_class (rows->list.judgements, dip->mid_d, dip->duration_d))))
+TEXT (analyst_note, g_strdup (rows->list.analyst_note ? rows->list.analyst_note[row]
+                               : ant_judgements_note (rows->list.judgements, dip->mid_d, dip->duration_d)))
 
 #define PPM "10**-6"
 static const AntTableColumn columns[] = {
@@ -125,6 +127,17 @@ tell_search (AntTable *table, const AntDipList *list)
     ant_table_note (table, "brightenings have negative depth and snr");
 }
 
+/* Whether the analyst has said anything of one of them. */
+static gboolean
+is_judged (const AntDipList *list)
+{
+  for (gsize i = 0; list->judgements && i < list->n; i++)
+    if (ant_judgements_class (list->judgements, list->dip[i].mid_d, list->dip[i].duration_d) != ANT_CLASS_UNDECIDED
+        || *ant_judgements_note (list->judgements, list->dip[i].mid_d, list->dip[i].duration_d))
+      return TRUE;
+  return FALSE;
+}
+
 AntTable *
 ant_dip_table_new (const AntRecord *record, const AntDipList *list)
 {
@@ -139,7 +152,7 @@ ant_dip_table_new (const AntRecord *record, const AntDipList *list)
   ant_table_add_columns (table, G_N_ELEMENTS (columns), columns);
   if (list->upper_limit_ppm)
     ant_table_add_columns (table, G_N_ELEMENTS (asked_columns), asked_columns);
-  if (list->analyst_class)
+  if (list->analyst_class || is_judged (list))
     ant_table_add_columns (table, G_N_ELEMENTS (analyst_columns), analyst_columns);
   ant_table_set_rows (table, list->n, rows, g_free);
   return table;

@@ -2,6 +2,7 @@
 #include "writers/result-files.h"
 
 #include <glib/gi18n.h>
+#include <string.h>
 
 #include "data/error.h"
 #include "writers/dip-table.h"
@@ -86,25 +87,27 @@ ant_result_file_names (const AntResultChoice *choice)
   g_strv_builder_add (names, "flags.csv");
   if (choice->fits)
     g_strv_builder_add (names, "flags.fits");
+  g_strv_builder_add (names, ANT_ANALYSIS_FILE_NAME);
   char **all = g_strv_builder_end (names);
   g_strv_builder_unref (names);
   return all;
 }
 
 static AntTable *
-list_table (const AntScanResults *results, gboolean brightenings)
+list_table (const AntScanResults *results, const AntJudgements *judgements, gboolean brightenings)
 {
   AntDipList list = ant_scan_results_list (results, brightenings);
+  list.judgements = judgements;
   return ant_dip_table_new (results->record, &list);
 }
 
 AntTable *
-ant_result_table_new (AntResultTable which, const AntScanResults *results)
+ant_result_table_new (AntResultTable which, const AntScanResults *results, const AntJudgements *judgements)
 {
   switch (which)
     {
-    case ANT_RESULT_DIPS: return list_table (results, FALSE);
-    case ANT_RESULT_BRIGHTENINGS: return list_table (results, TRUE);
+    case ANT_RESULT_DIPS: return list_table (results, judgements, FALSE);
+    case ANT_RESULT_BRIGHTENINGS: return list_table (results, judgements, TRUE);
     case ANT_RESULT_PASSAGES: return ant_passage_table_new (results);
     case ANT_RESULT_REPEATS: return ant_repeat_table_new (results);
     case ANT_RESULT_PERIODS: return ant_period_table_new (results);
@@ -141,13 +144,15 @@ add_flags (AntOutputDir *dir, const AntScanResults *results, const AntResultChoi
 }
 
 gboolean
-ant_result_files_add (AntOutputDir *dir, const AntScanResults *results, const AntResultChoice *choice, GError **error)
+ant_result_files_add (AntOutputDir *dir, const AntFindings *findings, const AntResultChoice *choice, GError **error)
 {
+  const AntScanResults *results = findings->results;
+  const char *analysis = findings->analysis;
   for (AntResultTable which = 0; which < ANT_N_RESULT_TABLES; which++)
     {
       if (!wanted (choice, which, ANT_TABLE_CSV))
         continue;
-      g_autoptr (AntTable) table = ant_result_table_new (which, results);
+      g_autoptr (AntTable) table = ant_result_table_new (which, results, findings->judgements);
       for (AntTableFormat format = 0; table && format < ANT_N_TABLE_FORMATS; format++)
         {
           g_autofree char *name = file_name (which, format);
@@ -158,5 +163,6 @@ ant_result_files_add (AntOutputDir *dir, const AntScanResults *results, const An
   for (gsize i = 0; i < G_N_ELEMENTS (texts); i++)
     if (!add_text (dir, texts[i].text (results), texts[i].name, error))
       return FALSE;
-  return add_flags (dir, results, choice, error);
+  return add_flags (dir, results, choice, error)
+         && (!analysis || ant_output_dir_add (dir, ANT_ANALYSIS_FILE_NAME, analysis, strlen (analysis), error));
 }

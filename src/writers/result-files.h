@@ -14,13 +14,22 @@ typedef struct
 
 /* "fits", "votable" or both with a comma between. FALSE with one sentence. */
 gboolean ant_result_choice_parse (AntResultChoice *choice, const char *text, GError **error);
-/* What is written: "dips.csv" ... Caller g_strfreevs. */
+/* What a scan found, and what the analyst says of it. */
+typedef struct
+{
+  const AntScanResults *results;
+  const AntJudgements *judgements; /* or NULL */
+  const char *analysis;            /* the text of analysis.antumbra; NULL: it is not written */
+} AntFindings;
+#define ANT_ANALYSIS_FILE_NAME "analysis.antumbra"
+
+/* What is written: "dips.csv" ..., analysis.antumbra last. Caller g_strfreevs. */
 char **ant_result_file_names (const AntResultChoice *choice);
 /* Add all of them to a folder that is open. */
-gboolean ant_result_files_add (AntOutputDir *dir, const AntScanResults *results, const AntResultChoice *choice, GError **error);
+gboolean ant_result_files_add (AntOutputDir *dir, const AntFindings *findings, const AntResultChoice *choice, GError **error);
 
-/* The tables that come in several formats, by what a scan is asked for; NULL if a stopped scan does not have it. The results
- * must outlive the table. Caller frees. */
+/* The tables that come in several formats, by what a scan is asked for; NULL if a stopped scan does not have it. Results
+ * and judgements (NULL: none) must outlive the table. Caller frees. */
 typedef enum
 {
   ANT_RESULT_DIPS,
@@ -31,4 +40,4 @@ typedef enum
   ANT_RESULT_SERIES,
   ANT_N_RESULT_TABLES,
 } AntResultTable;
-AntTable *ant_result_table_new (AntResultTable which, const AntScanResults *results);
+AntTable *ant_result_table_new (AntResultTable which, const AntScanResults *results, const AntJudgements *judgements);

@@ -157,7 +157,8 @@ put_facts (Fits *fits, const AntTable *table)
 {
   const AntRecord *record = table->record;
   put_text (fits, "CREATOR", "Antumbra " ANT_VERSION, NULL);
-  put_text (fits, "RECORD", record->path ? record->path : "-", NULL);
+  g_autofree char *name = ant_record_name (record);
+  put_text (fits, "RECORD", name, NULL);
   put_text (fits, "SHA256", record->sha256 ? record->sha256 : "unknown", NULL);
   for (guint i = 0; i < table->facts->len; i++)
     {

@@ -41,7 +41,8 @@ append_facts (GString *xml, const AntTable *table)
 {
   const AntRecord *record = table->record;
   append_info (xml, "program", "Antumbra " ANT_VERSION, "what wrote this table");
-  append_info (xml, "record", record->path ? record->path : "-", "the record it tells of");
+  g_autofree char *name = ant_record_name (record);
+  append_info (xml, "record", name, "the record it tells of");
   append_info (xml, "SHA256", record->sha256 ? record->sha256 : "unknown", "of the record's bytes");
   for (guint i = 0; i < table->facts->len; i++)
     {

@@ -419,6 +419,108 @@ an_interrupt_leaves_nothing (Place *place, gconstpointer unused)
   g_assert_false (is_there (place->out));
 }
 
+/* Going on with an analysis */
+
+static void
+expect_same_tables (const Place *place, const char *one, const char *other)
+{
+  for (gsize i = 0; i < G_N_ELEMENTS (tables); i++)
+    {
+      g_autofree char *a = g_build_filename (place->folder, one, tables[i], NULL), *b = g_build_filename (place->folder, other, tables[i], NULL);
+      g_autofree char *text_a = NULL, *text_b = NULL;
+      g_assert_true (g_file_get_contents (a, &text_a, NULL, NULL) && g_file_get_contents (b, &text_b, NULL, NULL));
+      g_assert_cmpstr (text_a, ==, text_b);
+    }
+}
+
+static char *
+beside (const Place *place, const char *name)
+{
+  return g_build_filename (place->folder, name, NULL);
+}
+
+/* What a hand or another program may write into an analysis. */
+static void
+replace_in (const char *path, const char *old, const char *new)
+{
+  g_autofree char *text = NULL;
+  g_assert_true (g_file_get_contents (path, &text, NULL, NULL));
+  g_autoptr (GString) changed = g_string_new (text);
+  g_assert_cmpuint (g_string_replace (changed, old, new, 1), ==, 1);
+  g_assert_true (g_file_set_contents (path, changed->str, -1, NULL));
+}
+
+static void
+an_analysis_gives_the_same_tables (Place *place, gconstpointer unused)
+{
+  g_autofree char *list = beside (place, "out.list"), *again = beside (place, "again");
+  g_assert_true (g_file_set_contents (list, "2043-09-05T00:00:00,2043-09-05T03:00:00,cold\n", -1, NULL));
+  g_autofree char *first = g_strdup_printf ("scan %%R --out %%O --set duration-max=9.7 --set exposure=250.3 --from 2043-09-01T06:00:00 --exclude %s", list);
+  g_autofree char *second = g_strdup_printf ("scan --from %%O/analysis.antumbra --out %s --threads 1", again);
+  g_auto (Run) run = command (place, first, NULL), rerun = command (place, second, NULL);
+  g_assert_cmpint (run.code, ==, 0);
+  g_assert_cmpstr (rerun.complained, ==, "");
+  g_assert_cmpint (rerun.code, ==, 0);
+  expect_same_tables (place, "out", "again");
+}
+
+static void
+verdicts_and_notes_are_carried_over_and_said (Place *place, gconstpointer unused)
+{
+  g_autofree char *saved = beside (place, "work.antumbra"), *save = g_strdup_printf ("scan %%R --save %s", saved);
+  g_auto (Run) run = command (place, save, NULL);
+  g_assert_cmpint (run.code, ==, 0);
+  replace_in (saved, "\"judgements\" : []", "\"judgements\" : [ { \"mid_d\" : 2.7, \"duration_d\" : 0.25, \"class\" : \"planet\", "
+              "\"note\" : \"seen, twice\" }, { \"mid_d\" : 4.5, \"duration_d\" : 0.1, \"class\" : \"noise\", \"note\" : \"\" } ]");
+  g_autofree char *again = g_strdup_printf ("scan --from %s --out %%O --set duration-max=8", saved);
+  g_auto (Run) rerun = command (place, again, NULL);
+  g_assert_cmpint (rerun.code, ==, 0);
+  g_assert_nonnull (strstr (rerun.said, "Verdicts and notes carried over: 1; kept of dips that are no longer found: 1."));
+  g_autofree char *dips = table (place, "dips.csv"), *header = row (dips, 0);
+  g_assert_true (g_str_has_suffix (header, ",analyst_class,analyst_note"));
+  g_assert_nonnull (strstr (dips, ",planet,\"seen, twice\"\n"));
+  g_autofree char *kept = table (place, "analysis.antumbra");
+  g_assert_nonnull (strstr (kept, "\"noise\""));
+}
+
+static void
+a_record_that_changed_or_is_gone_is_said (Place *place, gconstpointer unused)
+{
+  g_autofree char *saved = beside (place, "work.antumbra"), *save = g_strdup_printf ("scan %%R --save %s", saved);
+  g_autofree char *again = g_strdup_printf ("scan --from %s", saved), *named = g_strdup_printf ("scan %%R.moved --from %s", saved);
+  g_autofree char *moved = g_strconcat (place->record, ".moved", NULL);
+  g_auto (Run) run = command (place, save, NULL);
+  g_assert_cmpint (run.code, ==, 0);
+  replace_in (place->record, "# ", "# another ");
+  g_auto (Run) changed = command (place, again, NULL);
+  g_assert_cmpint (changed.code, ==, 0);
+  check_one_line (&changed);
+  g_assert_nonnull (strstr (changed.complained, "the bytes are not those"));
+  g_assert_cmpint (g_rename (place->record, moved), ==, 0);
+  g_auto (Run) gone = command (place, again, NULL);
+  g_assert_cmpint (gone.code, ==, 3);
+  check_one_line (&gone);
+  g_assert_nonnull (strstr (gone.complained, "the record of "));
+  g_auto (Run) found = command (place, named, NULL);
+  g_assert_cmpint (found.code, ==, 0);
+}
+
+static void
+an_analysis_is_saved_over_another_only_by_force (Place *place, gconstpointer unused)
+{
+  g_autofree char *saved = beside (place, "work.antumbra"), *save = g_strdup_printf ("scan %%R --save %s", saved);
+  g_autofree char *force = g_strdup_printf ("%s --force", save), *from = g_strdup_printf ("scan --from %s", saved);
+  g_assert_true (g_file_set_contents (saved, "{}", -1, NULL));
+  g_auto (Run) refused = command (place, save, NULL);
+  g_assert_cmpint (refused.code, ==, 4);
+  check_one_line (&refused);
+  g_auto (Run) wrong = command (place, from, NULL);
+  g_assert_cmpint (wrong.code, ==, 3);
+  check_one_line (&wrong);
+  g_auto (Run) forced = command (place, force, NULL);
+  g_assert_cmpint (forced.code, ==, 0);
+}
+
 int
 main (int argc, char **argv)
 {
@@ -437,5 +539,9 @@ main (int argc, char **argv)
   TEST ("standard-input-is-read-like-a-file", standard_input_is_read_like_a_file);
   TEST ("a-place-that-cannot-be-written-is-told-at-once", a_place_that_cannot_be_written_is_told_at_once);
   TEST ("an-interrupt-leaves-nothing", an_interrupt_leaves_nothing);
+  TEST ("an-analysis-gives-the-same-tables", an_analysis_gives_the_same_tables);
+  TEST ("verdicts-and-notes-are-carried-over-and-said", verdicts_and_notes_are_carried_over_and_said);
+  TEST ("a-record-that-changed-or-is-gone-is-said", a_record_that_changed_or_is_gone_is_said);
+  TEST ("an-analysis-is-saved-over-another-only-by-force", an_analysis_is_saved_over_another_only_by_force);
   return g_test_run ();
 }

@@ -214,6 +214,49 @@ a_span_can_be_unmasked_in_its_middle (void)
 }
 
 static void
+a_reason_can_be_given_and_undone (void)
+{
+  g_autoptr (AntAnalysis) analysis = ant_analysis_new ();
+  ant_analysis_mask (analysis, (AntSpan) { 1, 5 }, "");
+  ant_analysis_set_reason (analysis, 0, "cold");
+  const AntMask *mask = g_ptr_array_index (ant_analysis_get_treatment (analysis)->masks, 0);
+  g_assert_cmpstr (mask->reason, ==, "cold");
+  g_assert_cmpstr (ant_analysis_undo_name (analysis), ==, "Reason of a mask");
+  ant_analysis_undo (analysis);
+  mask = g_ptr_array_index (ant_analysis_get_treatment (analysis)->masks, 0);
+  g_assert_cmpstr (mask->reason, ==, "");
+}
+
+static void
+a_snapshot_stays_as_it_was (void)
+{
+  g_autoptr (AntAnalysis) analysis = test_worked_analysis ();
+  g_autoptr (AntAnalysis) snapshot = ant_analysis_snapshot (analysis);
+  g_autofree char *before = text_of (analysis);
+  ant_analysis_mask (analysis, (AntSpan) { 1, 5 }, "");
+  ant_analysis_drop_results (analysis);
+  g_autofree char *kept = text_of (snapshot);
+  g_assert_cmpstr (kept, ==, before);
+}
+
+static void
+only_what_nobody_can_compute_again_would_be_lost (void)
+{
+  g_autoptr (AntAnalysis) analysis = ant_analysis_new ();
+  g_autoptr (AntScanResults) results = test_results ();
+  ant_analysis_set_results (analysis, results, ant_analysis_get_treatment (analysis));
+  set (analysis, "duration-max", "9");
+  g_assert_true (ant_analysis_is_changed (analysis));
+  g_assert_false (ant_analysis_would_lose (analysis));
+  ant_analysis_judge (analysis, "dip 1", 2, 0.3, ANT_CLASS_SPOT);
+  g_assert_true (ant_analysis_would_lose (analysis));
+  ant_analysis_undo (analysis);
+  g_assert_false (ant_analysis_would_lose (analysis));
+  ant_analysis_set_path (analysis, "/somewhere/work.antumbra"); /* of a file, every change counts */
+  g_assert_true (ant_analysis_would_lose (analysis));
+}
+
+static void
 results_are_stale_once_the_treatment_differs (void)
 {
   g_autoptr (AntAnalysis) analysis = test_worked_analysis ();
@@ -308,6 +351,9 @@ main (int argc, char **argv)
   g_test_add_func ("/data/analysis/a-random-walk-undone-and-done-again-gives-the-same-bytes",
                    a_random_walk_undone_and_done_again_gives_the_same_bytes);
   g_test_add_func ("/data/analysis/a-span-can-be-unmasked-in-its-middle", a_span_can_be_unmasked_in_its_middle);
+  g_test_add_func ("/data/analysis/a-reason-can-be-given-and-undone", a_reason_can_be_given_and_undone);
+  g_test_add_func ("/data/analysis/a-snapshot-stays-as-it-was", a_snapshot_stays_as_it_was);
+  g_test_add_func ("/data/analysis/only-what-nobody-can-compute-again-would-be-lost", only_what_nobody_can_compute_again_would_be_lost);
   g_test_add_func ("/data/analysis/results-are-stale-once-the-treatment-differs", results_are_stale_once_the_treatment_differs);
   g_test_add_func ("/data/analysis/verdicts-are-carried-over-and-counted", verdicts_are_carried_over_and_counted);
   g_test_add_func ("/data/analysis/of-another-record-only-the-words-are-kept", of_another_record_only_the_words_are_kept);

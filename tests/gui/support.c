@@ -147,12 +147,24 @@ is_gone (gpointer data)
   return *(gpointer *) data == NULL;
 }
 
+GtkDialog *
+test_gui_question (void)
+{
+  g_autoptr (GList) windows = gtk_window_list_toplevels ();
+  for (GList *one = windows; one; one = one->next)
+    if (GTK_IS_MESSAGE_DIALOG (one->data) && gtk_widget_get_visible (one->data))
+      return one->data;
+  return NULL;
+}
+
 void
 test_gui_close (AntWindow *window)
 {
   gpointer left = window;
   g_object_add_weak_pointer (G_OBJECT (window), &left);
   gtk_window_close (GTK_WINDOW (window));
+  if (test_gui_question ())
+    gtk_dialog_response (test_gui_question (), GTK_RESPONSE_REJECT);
   test_gui_wait (is_gone, &left, 20);
 }
 

@@ -20,7 +20,9 @@ void test_gui_settle (guint milliseconds);
 AntWindow *test_gui_window (void);
 AntWindow *test_gui_window_with_record (void);
 AntWindow *test_gui_window_scanned (void);
-/* Close it and prove that it is finalised. */
+/* The question that a window asks now, or NULL. */
+GtkDialog *test_gui_question (void);
+/* Close it, letting unsaved work go, and prove that it is finalised. */
 void test_gui_close (AntWindow *window);
 gboolean test_gui_idle (gpointer desk); /* a condition: no work is running */
 /* First descendant of this type that is not in a popover, or NULL. */

@@ -89,9 +89,8 @@ static AntLayers *
 open_record (const char *path)
 {
   Watch watch = { 0 };
-  AntSettings settings;
-  ant_settings_init (&settings);
-  ant_open_task_async (path, &settings, NULL, opened_cb, &watch);
+  g_autoptr (AntTreatment) treatment = ant_treatment_new ();
+  ant_open_task_async (path, treatment, NULL, NULL, NULL, opened_cb, &watch);
   wait_until_done (&watch);
   g_assert_no_error (watch.error);
   return watch.layers;
@@ -115,9 +114,8 @@ static void
 a_missing_file_is_named_in_the_error (void)
 {
   Watch watch = { 0 };
-  AntSettings settings;
-  ant_settings_init (&settings);
-  ant_open_task_async ("no-such-record.csv", &settings, NULL, opened_cb, &watch);
+  g_autoptr (AntTreatment) treatment = ant_treatment_new ();
+  ant_open_task_async ("no-such-record.csv", treatment, NULL, NULL, NULL, opened_cb, &watch);
   wait_until_done (&watch);
   g_assert_null (watch.layers);
   g_assert_nonnull (strstr (watch.error->message, "no-such-record.csv"));

@@ -139,6 +139,22 @@ test_asked (void)
 }
 
 static void
+test_judged (void)
+{
+  g_autoptr (AntRecord) record = record_in_utc ();
+  g_autoptr (AntJudgements) judgements = ant_judgements_new ();
+  AntDipList list = list_of (2);
+  ant_judgements_set_class (judgements, list.dip[0].mid_d, list.dip[0].duration_d, ANT_CLASS_PLANET);
+  ant_judgements_set_note (judgements, list.dip[0].mid_d, list.dip[0].duration_d, "as predicted");
+  list.judgements = judgements;
+  g_autoptr (GString) table = ant_dip_table_text (record, &list);
+  g_auto (GStrv) row = row_fields (table, 1);
+  g_assert_cmpstr (row[16], ==, "undecided"); /* what the program says stays beside it */
+  g_assert_cmpstr (row[19], ==, "planet");
+  g_assert_cmpstr (row[20], ==, "as predicted");
+}
+
+static void
 test_same_bytes (void)
 {
   g_autoptr (AntRecord) record = record_in_utc (), again = record_in_utc ();
@@ -186,6 +202,7 @@ main (int argc, char **argv)
   g_test_add_func ("/writers/dip-table/no-origin-no-jd", test_unknown_origin);
   g_test_add_func ("/writers/dip-table/no-scale-no-utc", test_unknown_scale);
   g_test_add_func ("/writers/dip-table/asked-dips-have-an-upper-limit", test_asked);
+  g_test_add_func ("/writers/dip-table/the-analysts-word-stands-beside-the-programs", test_judged);
   g_test_add_func ("/writers/dip-table/same-record-same-bytes", test_same_bytes);
   g_test_add_func ("/writers/dip-table/a-stopped-scan-says-what-it-lacks", test_incomplete);
   g_test_add_func ("/writers/dip-table/asked-dips-and-the-analysts-words-are-told-beside-dips-found", test_analyst);

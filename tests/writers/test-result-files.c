@@ -17,11 +17,11 @@ static void
 test_names (void)
 {
   g_autofree char *plain = names_of (NULL, FALSE), *fits = names_of ("fits", FALSE), *both = names_of ("votable,fits", TRUE);
-  g_assert_cmpstr (plain, ==, "dips.csv brightenings.csv passages.csv repeats.csv periods.csv floor.csv spectrum.csv chunks.csv flags.csv");
+  g_assert_cmpstr (plain, ==, "dips.csv brightenings.csv passages.csv repeats.csv periods.csv floor.csv spectrum.csv chunks.csv flags.csv analysis.antumbra");
   g_assert_cmpstr (fits, ==, "dips.csv dips.fits brightenings.csv brightenings.fits passages.csv passages.fits repeats.csv repeats.fits periods.csv periods.fits floor.csv spectrum.csv chunks.csv "
-                             "flags.csv flags.fits");
+                             "flags.csv flags.fits analysis.antumbra");
   g_assert_cmpstr (both, ==, "dips.csv dips.fits dips.vot brightenings.csv brightenings.fits brightenings.vot passages.csv passages.fits passages.vot repeats.csv repeats.fits repeats.vot periods.csv periods.fits "
-                             "series.csv series.fits floor.csv spectrum.csv chunks.csv flags.csv flags.fits");
+                             "series.csv series.fits floor.csv spectrum.csv chunks.csv flags.csv flags.fits analysis.antumbra");
 }
 
 static void

@@ -1,0 +1,175 @@
+/* scan-work.c - bring record, analysis and options together. */
+#include "cli/scan-work.h"
+
+#include <glib/gi18n.h>
+#include <math.h>
+
+#include "data/analysis-text.h"
+#include "data/error.h"
+#include "data/exclusions.h"
+#include "jobs/record-open.h"
+
+void
+ant_scan_work_add (GOptionContext *context, AntScanWork *work)
+{
+  const GOptionEntry entries[] = {
+    { "from", 0, 0, G_OPTION_ARG_FILENAME_ARRAY, &work->from,
+      N_("use the record from this time; or an analysis file to go on with: its record, reading, settings and masks"),
+      N_("TIME|FILE.antumbra") },
+    { "to", 0, 0, G_OPTION_ARG_STRING, &work->to, N_("use the record up to this time"), N_("TIME") },
+    { "exclude", 0, 0, G_OPTION_ARG_FILENAME, &work->exclude,
+      N_("leave out spans: lines of start, end, reason, or an earlier flags.csv"), N_("FILE") },
+    { NULL }
+  };
+  g_option_context_add_main_entries (context, entries, NULL);
+  ant_record_options_add (context, &work->reading);
+  ant_settings_options_add (context, &work->given);
+}
+
+void
+ant_scan_work_clear (AntScanWork *work)
+{
+  g_clear_pointer (&work->from, g_strfreev);
+  g_clear_pointer (&work->to, g_free);
+  g_clear_pointer (&work->exclude, g_free);
+  ant_record_options_clear (&work->reading);
+  ant_settings_options_clear (&work->given);
+}
+
+/* A time never names a file that is there and ends so. */
+static gboolean
+is_file (const char *from)
+{
+  return ant_analysis_is_name (from) && g_file_test (from, G_FILE_TEST_EXISTS);
+}
+
+const char *
+ant_scan_work_file (const AntScanWork *work)
+{
+  for (char **from = work->from; from && *from; from++)
+    if (is_file (*from))
+      return *from;
+  return NULL;
+}
+
+/* The analysis of the file with nothing found yet, or a new one. */
+static AntAnalysis *
+begin_analysis (const AntScanWork *work, GError **error)
+{
+  const char *file = ant_scan_work_file (work);
+  g_autofree char *newer = NULL;
+  AntAnalysis *analysis = file ? ant_analysis_load (file, &newer, error) : ant_analysis_new ();
+  if (newer)
+    g_printerr ("antumbra-cli: %s\n", newer);
+  if (analysis)
+    ant_analysis_drop_results (analysis);
+  return analysis;
+}
+
+static AntRecord *
+read_record (const AntScanWork *work, const AntAnalysis *analysis, const char *path, GCancellable *stop, GError **error)
+{
+  AntReadingChoices choices;
+  AntRecord *record = NULL;
+  const char *kept = ant_analysis_get_record_path (analysis);
+  if (!path && !kept)
+    {
+      g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("%s: names no record; expected one as argument"),
+                   ant_scan_work_file (work));
+      return NULL;
+    }
+  ant_reading_choices_copy (&ant_analysis_get_treatment (analysis)->reading, &choices);
+  if (ant_record_options_choose (&work->reading, &choices, error))
+    record = ant_record_open (path ? path : kept, &choices, 0, stop, error);
+  ant_reading_choices_clear (&choices);
+  if (!record && !path)
+    g_prefix_error (error, _("the record of %s: "), ant_scan_work_file (work));
+  return record;
+}
+
+static gboolean
+exclude (AntTreatment *treatment, const char *path, const AntTimeReference *time, GError **error)
+{
+  g_autoptr (GArray) spans = ant_exclusions_read (path, time, error);
+  for (guint i = 0; spans && i < spans->len; i++)
+    ant_treatment_mask (treatment, g_array_index (spans, AntSpan, i), ANT_MASK_EXCLUDED, "");
+  return spans != NULL;
+}
+
+/* The options on top of the analysis's own treatment. */
+static AntTreatment *
+treat (const AntScanWork *work, const AntAnalysis *analysis, const AntRecord *record, GError **error)
+{
+  g_autoptr (AntTreatment) treatment = ant_treatment_copy (ant_analysis_get_treatment (analysis));
+  if (!ant_record_options_choose (&work->reading, &treatment->reading, error)
+      || !ant_settings_options_add_to (&work->given, &treatment->settings, error))
+    return NULL;
+  if (work->reading.good)
+    {
+      g_free (treatment->good);
+      treatment->good = g_strdup (work->reading.good);
+    }
+  for (char **from = work->from; from && *from; from++)
+    if (!is_file (*from) && !ant_time_reference_parse (&record->time, *from, &treatment->from_d, error))
+      return NULL;
+  if (work->to && !ant_time_reference_parse (&record->time, work->to, &treatment->to_d, error))
+    return NULL;
+  if (work->exclude && !exclude (treatment, work->exclude, &record->time, error))
+    return NULL;
+  return g_steal_pointer (&treatment);
+}
+
+static gboolean
+lay_grid (AntRecord *record, const AntTreatment *treatment, GError **error)
+{
+  AntGridOptions grid;
+  if (!ant_treatment_grid (treatment, &grid, error))
+    return FALSE;
+  gboolean good = ant_record_make_grid (record, &grid, error);
+  ant_grid_options_clear (&grid);
+  return good;
+}
+
+/* Options that make no sense are told before a long record is read. */
+static gboolean
+try_options (const AntScanWork *work, GError **error)
+{
+  AntSettings settings;
+  AntGridOptions grid = ANT_GRID_OPTIONS_INIT;
+  gboolean good = ant_settings_options_apply (&work->given, &settings, error)
+                  && ant_record_options_good (&work->reading, &grid, error);
+  ant_grid_options_clear (&grid);
+  return good;
+}
+
+/* Settings that change no result, such as the report's paper, are kept too. */
+static gboolean
+differs (const AntTreatment *one, const AntTreatment *other)
+{
+  for (gsize i = 0; i < ant_n_settings; i++)
+    if (ant_setting_get (&ant_setting_table[i], &one->settings) != ant_setting_get (&ant_setting_table[i], &other->settings))
+      return TRUE;
+  return !ant_treatment_same (one, other);
+}
+
+AntAnalysis *
+ant_scan_work_begin (const AntScanWork *work, const char *path, gboolean no_repeats, GCancellable *stop, AntRecord **record,
+                     GError **error)
+{
+  g_autoptr (AntAnalysis) analysis = try_options (work, error) ? begin_analysis (work, error) : NULL;
+  g_autoptr (AntRecord) read = analysis ? read_record (work, analysis, path, stop, error) : NULL;
+  if (!read)
+    return NULL;
+  g_autofree char *changed = ant_analysis_take_record (analysis, read);
+  if (changed)
+    g_printerr ("antumbra-cli: %s\n", changed);
+  g_autoptr (AntTreatment) treatment = treat (work, analysis, read, error);
+  if (treatment && no_repeats)
+    treatment->settings.repeats = 0;
+  if (!treatment || !lay_grid (read, treatment, error))
+    return NULL;
+  if (differs (treatment, ant_analysis_get_treatment (analysis)))
+    ant_analysis_treat (analysis, _("Options of the command"), g_steal_pointer (&treatment));
+  *record = g_steal_pointer (&read);
+  return g_steal_pointer (&analysis);
+}
