@@ -47,24 +47,6 @@ ant_record_options_clear (AntRecordOptions *options)
   *options = (AntRecordOptions){ 0 };
 }
 
-static gboolean
-parse_fill (const char *text, GArray *values, GError **error)
-{
-  g_auto (GStrv) parts = g_strsplit (text, ",", -1);
-  for (guint i = 0; parts[i]; i++)
-    {
-      char *end;
-      double value = g_ascii_strtod (g_strstrip (parts[i]), &end);
-      if (end == parts[i] || *end || !isfinite (value))
-        {
-          g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("--fill: found “%s”, expected numbers separated by commas"), parts[i]);
-          return FALSE;
-        }
-      g_array_append_val (values, value);
-    }
-  return TRUE;
-}
-
 static void
 choose (char **place, const char *chosen)
 {
@@ -84,12 +66,9 @@ ant_record_options_choose (const AntRecordOptions *options, AntReadingChoices *c
   choose (&choices->hdu, options->hdu);
   choose (&choices->index, options->index);
   if (options->fill)
-    {
-      g_clear_pointer (&choices->fill_values, g_array_unref);
-      choices->fill_values = g_array_new (FALSE, FALSE, sizeof (double));
-    }
+    g_clear_pointer (&choices->fill_values, g_array_unref);
   return (!options->columns || ant_reading_choices_parse_columns (choices, options->columns, error))
-         && (!options->fill || parse_fill (options->fill, choices->fill_values, error));
+         && (!options->fill || ant_reading_choices_parse_fills (choices, options->fill, error));
 }
 
 AntRecord *

@@ -304,6 +304,16 @@ ant_analysis_begin_with (AntAnalysis *analysis, const AntSettings *settings)
 }
 
 void
+ant_analysis_begin_reading (AntAnalysis *analysis, const AntReadingChoices *reading)
+{
+  AntTreatment *treatment = ant_treatment_copy (ant_analysis_get_treatment (analysis));
+  ant_reading_choices_clear (&treatment->reading);
+  ant_reading_choices_copy (reading, &treatment->reading);
+  part_unref (analysis->treatment);
+  analysis->treatment = treatment_part (treatment);
+}
+
+void
 ant_analysis_treat (AntAnalysis *analysis, const char *name, AntTreatment *treatment)
 {
   change (analysis, name, NULL, treatment_part (treatment), NULL);

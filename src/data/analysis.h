@@ -59,6 +59,8 @@ char *ant_analysis_carried_words (const AntAnalysis *analysis);
 
 /* Of a new one: settings to begin with, which is no change. */
 void ant_analysis_begin_with (AntAnalysis *analysis, const AntSettings *settings);
+/* The same of how its record is read. */
+void ant_analysis_begin_reading (AntAnalysis *analysis, const AntReadingChoices *reading);
 
 /* Changes: each can be undone, and is in the history under its name. What changes nothing is not a change. `dip` names
  * the dip for people, "dip 3". */

@@ -2,6 +2,7 @@
 #include "data/reading-choices.h"
 
 #include <glib/gi18n.h>
+#include <math.h>
 #include <string.h>
 
 #include "data/error.h"
@@ -85,4 +86,39 @@ ant_reading_choices_parse_columns (AntReadingChoices *choices, const char *text,
       *place = g_strdup (equals + 1);
     }
   return TRUE;
+}
+
+gboolean
+ant_reading_choices_parse_fills (AntReadingChoices *choices, const char *text, GError **error)
+{
+  g_auto (GStrv) parts = g_strsplit (text, ",", -1);
+  if (!choices->fill_values)
+    choices->fill_values = g_array_new (FALSE, FALSE, sizeof (double));
+  for (guint i = 0; parts[i]; i++)
+    {
+      char *end;
+      double value = g_ascii_strtod (g_strstrip (parts[i]), &end);
+      if (end == parts[i] || *end || !isfinite (value))
+        {
+          g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("fill values: found “%s”, expected numbers separated by commas"), parts[i]);
+          return FALSE;
+        }
+      g_array_append_val (choices->fill_values, value);
+    }
+  return TRUE;
+}
+
+char *
+ant_reading_choices_fills_text (const AntReadingChoices *choices)
+{
+  if (!choices->fill_values || choices->fill_values->len == 0)
+    return NULL;
+  GString *text = g_string_new (NULL);
+  for (guint i = 0; i < choices->fill_values->len; i++)
+    {
+      char number[G_ASCII_DTOSTR_BUF_SIZE];
+      g_ascii_formatd (number, sizeof number, "%.15g", g_array_index (choices->fill_values, double, i));
+      g_string_append_printf (text, "%s%s", i ? ", " : "", number);
+    }
+  return g_string_free (text, FALSE);
 }

@@ -33,3 +33,6 @@ void ant_reading_choices_copy (const AntReadingChoices *choices, AntReadingChoic
 gboolean ant_reading_choices_same (const AntReadingChoices *one, const AntReadingChoices *other);
 /* Parse "time=1,value=tsi,error=4,quality=flag". */
 gboolean ant_reading_choices_parse_columns (AntReadingChoices *choices, const char *text, GError **error);
+/* Add the fill values of "-99, 0". */
+gboolean ant_reading_choices_parse_fills (AntReadingChoices *choices, const char *text, GError **error);
+char *ant_reading_choices_fills_text (const AntReadingChoices *choices); /* the same back; NULL: none. Caller frees */

@@ -112,3 +112,23 @@ ant_record_headline (const AntRecord *record, const AntRecordSummary *summary)
   return g_strdup_printf (_("%s · %s · %zu samples · %.0f %% missing"), span, cadence, summary->n_observed,
                           missing);
 }
+
+char *
+ant_preview_words (const AntRecord *record, gboolean partial)
+{
+  AntRecordSummary summary;
+  double least = HUGE_VAL, greatest = -HUGE_VAL;
+  ant_record_summarise (record, FALSE, &summary);
+  for (gsize i = 0; i < record->n_rows; i++)
+    if (!isnan (record->value[i]))
+      {
+        least = fmin (least, record->value[i]);
+        greatest = fmax (greatest, record->value[i]);
+      }
+  g_autofree char *first = summary.has_times ? ant_instant_words (record, summary.first_d) : g_strdup ("–");
+  g_autofree char *last = summary.has_times ? ant_instant_words (record, summary.last_d) : g_strdup ("–");
+  return g_strdup_printf (partial ? _("The first %zu rows: %s to %s, values %.8g to %.8g%s%s")
+                                  : _("%zu rows: %s to %s, values %.8g to %.8g%s%s"),
+                          record->n_rows, first, last, least, greatest, record->value_unit ? " " : "",
+                          record->value_unit ? record->value_unit : "");
+}

@@ -6,6 +6,8 @@
 
 /* Columns, times, level, cadence and scatter as AntFact. Caller unrefs. */
 GPtrArray *ant_record_facts (const AntRecord *record, const AntRecordSummary *summary);
+/* The rows, the span and the values of a record without a grid, on one line. `partial`: of its first part. Caller frees. */
+char *ant_preview_words (const AntRecord *record, gboolean partial);
 /* What is left out: for each flag that was set its name and count and, after a line break, what it means. */
 GPtrArray *ant_record_left_out (const AntRecordSummary *summary);
 /* "at 1 au (0.002 +- 0.004 of the yearly swing was in them)": where the values stand. Caller frees. */

@@ -5,7 +5,9 @@
 #include <glib/gi18n.h>
 
 #include "data/analysis-text.h"
+#include "gui/reading-memory.h"
 #include "jobs/open-task.h"
+#include "readers/look.h"
 
 static void
 clear_layers (AntDesk *self)
@@ -17,6 +19,7 @@ clear_layers (AntDesk *self)
 static void
 set_layers (AntDesk *self, AntLayers *layers)
 {
+  g_clear_pointer (&self->refused, g_free);
   clear_layers (self);
   self->layers = layers;
   self->read_with = g_steal_pointer (&self->opening_with);
@@ -148,6 +151,20 @@ ant_desk_open_analysis (AntDesk *self, const char *path)
   ant_desk_tell (self, ANT_DESK_BUSY);
 }
 
+static void
+open_fresh (AntDesk *self, const char *path, const AntReadingChoices *reading)
+{
+  AntAnalysis *fresh = ant_analysis_new ();
+  g_autofree char *asked = g_strdup (path);
+  ant_analysis_begin_with (fresh, ant_desk_get_settings (self));
+  ant_analysis_begin_reading (fresh, reading);
+  g_clear_pointer (&self->incoming, ant_analysis_free);
+  self->incoming = fresh;
+  g_free (self->refused);
+  self->refused = g_steal_pointer (&asked);
+  read_record_of (self, fresh, self->refused);
+}
+
 void
 ant_desk_open (AntDesk *self, const char *path)
 {
@@ -157,11 +174,41 @@ ant_desk_open (AntDesk *self, const char *path)
       ant_desk_open_analysis (self, path);
       return;
     }
-  AntAnalysis *fresh = ant_analysis_new ();
-  ant_analysis_begin_with (fresh, ant_desk_get_settings (self));
+  g_autoptr (AntLook) look = ant_look_new (path, NULL);
+  AntReadingChoices reading = { 0 };
+  if (look)
+    ant_reading_memory_recall (look->kind, &reading);
+  open_fresh (self, path, &reading);
+  ant_reading_choices_clear (&reading);
+}
+
+/* Its masks and verdicts stay; what was found was found otherwise. */
+static void
+read_present_as (AntDesk *self, const AntReadingChoices *reading)
+{
+  AntTreatment *treatment = ant_treatment_copy (ant_analysis_get_treatment (self->analysis));
+  ant_reading_choices_clear (&treatment->reading);
+  ant_reading_choices_copy (reading, &treatment->reading);
   g_clear_pointer (&self->incoming, ant_analysis_free);
-  self->incoming = fresh;
-  read_record_of (self, fresh, path);
+  ant_analysis_treat (self->analysis, _("how the record is read"), treatment);
+  ant_analysis_drop_results (self->analysis);
+  read_record (self, ant_analysis_get_record_path (self->analysis), ant_analysis_get_treatment (self->analysis), NULL, NULL, opened_cb);
+}
+
+void
+ant_desk_open_as (AntDesk *self, const char *path, const AntReadingChoices *reading)
+{
+  g_clear_pointer (&self->recovering, g_free);
+  if (ant_desk_get_record (self) && g_strcmp0 (path, ant_analysis_get_record_path (self->analysis)) == 0)
+    read_present_as (self, reading);
+  else
+    open_fresh (self, path, reading);
+}
+
+const char *
+ant_desk_get_refused (AntDesk *self)
+{
+  return self->busy == ANT_BUSY_NO ? self->refused : NULL;
 }
 
 void

@@ -33,6 +33,7 @@ struct _AntDesk
   AntBusy busy;
   GCancellable *stop;
   char *opening;
+  char *refused; /* the record that was asked for last, until it is read; NULL: none */
   AntTaskProgress progress;
 
   /* Owned: selection and its picture for the plots */

@@ -253,6 +253,7 @@ ant_desk_finalize (GObject *object)
   g_free (self->left_behind_of);
   g_free (self->recovering);
   g_free (self->opening);
+  g_free (self->refused);
   G_OBJECT_CLASS (ant_desk_parent_class)->finalize (object);
 }
 

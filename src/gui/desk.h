@@ -56,6 +56,9 @@ AntDesk *ant_desk_new (void);
 /* Work. Each abandons what was running before. Results of an earlier scan stay until a new one is complete, or was stopped
  * no earlier than it. */
 void ant_desk_open (AntDesk *self, const char *path); /* a record, for a new analysis; or an analysis file */
+/* A record with these choices about reading: for a new analysis, or, if it is the present one's, as a change of that. */
+void ant_desk_open_as (AntDesk *self, const char *path, const AntReadingChoices *reading);
+const char *ant_desk_get_refused (AntDesk *self); /* the record asked for last, if it could not be read; else NULL */
 void ant_desk_reload (AntDesk *self); /* the record again */
 void ant_desk_locate (AntDesk *self, const char *path); /* the record of the analysis is there now */
 void ant_desk_scan (AntDesk *self); /* reads the record again first if the settings of its grid have changed */

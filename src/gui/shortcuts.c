@@ -12,6 +12,7 @@
 const AntShortcut ant_shortcut_table[] = {
   { "win.open", N_("Open a record or an analysis"), FILES, { "<Control>o" } },
   { "win.reload", N_("Read the record again"), FILES, { "<Control>r" } },
+  { "win.columns", N_("Choose columns, times and fill values"), FILES, { "<Control><Shift>r" } },
   { "win.save", N_("Save the analysis"), FILES, { "<Control>s" } },
   { "win.save-as", N_("Save the analysis under another name"), FILES, { "<Control><Shift>a" } },
   { "win.save-tables", N_("Save all tables into a folder"), FILES, { "<Control><Alt>s" } },

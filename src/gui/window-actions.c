@@ -4,6 +4,7 @@
 #include <math.h>
 
 #include "core/units.h"
+#include "gui/column-chooser.h"
 #include "gui/file-prompt.h"
 #include "gui/preferences.h"
 #include "gui/shortcuts.h"
@@ -30,6 +31,7 @@ enum
   NEEDS_UNDO = 1 << 12,
   NEEDS_REDO = 1 << 13,
   NEEDS_MASKS = 1 << 14,
+  NEEDS_FILE = 1 << 15, /* a record, read or refused */
 };
 
 static const char *const witness_looks[ANT_N_WITNESS_LOOKS] = { "itself", "ratio", "difference" };
@@ -104,6 +106,18 @@ static void
 reload (AntWindow *self, GVariant *parameter)
 {
   ant_desk_reload (self->desk);
+}
+
+/* For the record that could not be read, else for the present one. */
+static void
+choose_columns (AntWindow *self, GVariant *parameter)
+{
+  const AntAnalysis *analysis = ant_desk_get_analysis (self->desk);
+  const char *refused = ant_desk_get_refused (self->desk), *path = refused ? refused : ant_analysis_get_record_path (analysis);
+  const AntReadingChoices none = { 0 };
+  GtkWidget *chooser = ant_column_chooser_new (GTK_WINDOW (self), self->desk, path,
+                                               refused ? &none : &ant_analysis_get_treatment (analysis)->reading);
+  gtk_window_present (GTK_WINDOW (chooser));
 }
 
 static void
@@ -428,6 +442,7 @@ static const Action actions[] = {
   { "witness-look", "s", "'ratio'", choose_witness_look, NEEDS_WITNESS },
   { "next-witness-look", NULL, NULL, next_witness_look, NEEDS_WITNESS },
   { "reload", NULL, NULL, reload, NEEDS_RECORD | NEEDS_NO_SCAN },
+  { "columns", NULL, NULL, choose_columns, NEEDS_FILE | NEEDS_NO_SCAN },
   { "close", NULL, NULL, close_window, 0 },
   { "save", NULL, NULL, save, NEEDS_ANALYSIS },
   { "save-as", NULL, NULL, save_as, NEEDS_ANALYSIS },
@@ -518,6 +533,7 @@ present_state (AntDesk *desk)
   gboolean record = ant_desk_get_record (desk) != NULL, selection = ant_desk_get_selected (desk) != NULL;
   return (ant_analysis_get_record_path (analysis) ? NEEDS_ANALYSIS : 0u) | (ant_analysis_undo_name (analysis) ? NEEDS_UNDO : 0u)
          | (ant_analysis_redo_name (analysis) ? NEEDS_REDO : 0u) | (ant_desk_get_masks (desk, &masks) > 0 ? NEEDS_MASKS : 0u)
+         | (record || ant_desk_get_refused (desk) ? NEEDS_FILE : 0u)
          | (record ? NEEDS_RECORD : 0u) | (results ? NEEDS_RESULTS : 0u)
          | (results && results->slow_ppm ? NEEDS_SLOW_PART : 0u)
          | (ant_desk_get_marks (desk, &marks) > 0 ? NEEDS_MARKS : 0u) | (selection ? NEEDS_SELECTION : 0u)

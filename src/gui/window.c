@@ -36,7 +36,9 @@ show_banner (AntWindow *self, GtkMessageType type, const char *sentence, const c
 void
 ant_window_complain (AntWindow *self, const char *sentence)
 {
-  show_banner (self, GTK_MESSAGE_ERROR, sentence, _("Open Another…"), "win.open");
+  gboolean choose = ant_desk_get_refused (self->desk) != NULL;
+  show_banner (self, GTK_MESSAGE_ERROR, sentence, choose ? _("Choose Columns…") : _("Open Another…"),
+               choose ? "win.columns" : "win.open");
 }
 
 /* Results of a stopped scan say so as long as they are shown; complete ones take that back. */

@@ -53,6 +53,15 @@ static const AntFormat formats[] = {
   { "text", sniff_text, ant_text_reader_read },
 };
 
+const char *
+ant_reader_format (const guint8 *head, gsize n)
+{
+  for (gsize i = 0; i < G_N_ELEMENTS (formats); i++)
+    if (formats[i].sniff (head, n))
+      return formats[i].name;
+  return NULL;
+}
+
 static AntRecord *
 read_source (AntByteSource *source, const char *path, const AntReadingChoices *choices, const AntSliceRunner *runner,
              GCancellable *cancellable, GError **error)

@@ -16,6 +16,8 @@ typedef struct
   gpointer data;
 } AntSliceRunner;
 
+/* The name of the format that files with this head (at least a kilobyte of it, if there is so much) are read as; NULL for none. */
+const char *ant_reader_format (const guint8 *head, gsize n);
 /* Read a file ("-" = standard input). The rows are filled, the grid is not made. NULL with one sentence that names the
  * place, what was found and what was expected (domain ANT_ERROR, ANT_ERROR_READ). Cancellable between blocks. */
 AntRecord *ant_reader_open (const char *path, const AntReadingChoices *choices, GCancellable *cancellable, GError **error);

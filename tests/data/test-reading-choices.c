@@ -33,11 +33,26 @@ a_copy_stands_alone (void)
   ant_reading_choices_clear (&copy);
 }
 
+static void
+fills_are_parsed_and_told_again (void)
+{
+  AntReadingChoices choices = { 0 };
+  g_autoptr (GError) error = NULL;
+  g_assert_null (ant_reading_choices_fills_text (&choices));
+  g_assert_true (ant_reading_choices_parse_fills (&choices, "-99, 0,1e34,-9999.9", NULL));
+  g_autofree char *text = ant_reading_choices_fills_text (&choices);
+  g_assert_cmpstr (text, ==, "-99, 0, 1e+34, -9999.9");
+  g_assert_false (ant_reading_choices_parse_fills (&choices, "3, x", &error));
+  g_assert_error (error, ANT_ERROR, ANT_ERROR_USAGE);
+  ant_reading_choices_clear (&choices);
+}
+
 int
 main (int argc, char **argv)
 {
   g_test_init (&argc, &argv, NULL);
   g_test_add_func ("/data/reading-choices/malformed-ones-are-refused", malformed_choices_are_refused);
   g_test_add_func ("/data/reading-choices/a-copy-stands-alone", a_copy_stands_alone);
+  g_test_add_func ("/data/reading-choices/fills-are-parsed-and-told-again", fills_are_parsed_and_told_again);
   return g_test_run ();
 }
