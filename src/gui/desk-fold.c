@@ -21,7 +21,7 @@ const AntFoldData *
 ant_desk_get_fold_data (AntDesk *self)
 {
   if (!self->fold_data && self->layers && self->fold.period_d > 0)
-    self->fold_data = ant_fold_data_new (self->layers, &self->settings, &self->fold);
+    self->fold_data = ant_fold_data_new (self->layers, ant_desk_get_settings (self), &self->fold);
   return self->fold_data;
 }
 

@@ -74,7 +74,7 @@ start (AntDesk *self)
 {
   cancel (self);
   self->witness_stop = g_cancellable_new ();
-  ant_witness_task_async (self->layers->record, self->witness_path, &self->settings, self->witness_stop, opened_cb, g_object_ref (self));
+  ant_witness_task_async (self->layers->record, self->witness_path, ant_desk_get_settings (self), self->witness_stop, opened_cb, g_object_ref (self));
 }
 
 void
@@ -101,6 +101,6 @@ ant_desk_follow_witness (AntDesk *self)
     ant_desk_close_witness (self);
   else if (self->witness && !self->witness_stop
            && (self->witness->comparison->record != record
-               || self->witness->comparison->drift_d != self->settings.witness_drift_d))
+               || self->witness->comparison->drift_d != ant_desk_get_settings (self)->witness_drift_d))
     start (self); /* the record was read anew, or another drift is to be taken out */
 }

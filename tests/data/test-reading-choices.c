@@ -1,4 +1,5 @@
 /* test-reading-choices.c - choices about reading are parsed, refused and copied. */
+#include "data/error.h"
 #include "data/reading-choices.h"
 
 static void

@@ -1,4 +1,4 @@
-/* look.h - a file before it is read: its format, its columns and first lines, and which files are of its kind. */
+/* first-look.h - a file before it is read: its format, its columns and first lines, and which files are of its kind. */
 #pragma once
 
 #include <gio/gio.h>
@@ -10,9 +10,9 @@ typedef struct
   GPtrArray *lines;   /* char*: the first lines of a text as they stand */
   /* The same for files of one series: the columns' names, or the name of the file without its digits. */
   char *kind;
-} AntLook;
+} AntFirstLook;
 
 /* Reads no more than the first lines. NULL with one sentence. */
-AntLook *ant_look_new (const char *path, GError **error);
-void ant_look_free (AntLook *look); /* NULL is fine */
-G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntLook, ant_look_free)
+AntFirstLook *ant_first_look_new (const char *path, GError **error);
+void ant_first_look_free (AntFirstLook *look); /* NULL is fine */
+G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntFirstLook, ant_first_look_free)
