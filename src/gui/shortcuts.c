@@ -16,7 +16,7 @@ const AntShortcut ant_shortcut_table[] = {
   { "win.save", N_("Save the analysis"), FILES, { "<Control>s" } },
   { "win.save-as", N_("Save the analysis under another name"), FILES, { "<Control><Shift>a" } },
   { "win.save-tables", N_("Save all tables into a folder"), FILES, { "<Control><Alt>s" } },
-  { "win.find-record", N_("Say where the record of the analysis is now"), FILES, { "<Control><Shift>o" } },
+  { "win.find-record", N_("Say where the record of the analysis is now"), FILES, { "<Control><Alt>o" } },
   { "win.undo", N_("Undo the last change"), FILES, { "<Control>z" } },
   { "win.redo", N_("Do it again"), FILES, { "<Control><Shift>z", "<Control>y" } },
   { "win.save-list", N_("Save the list of dips as CSV, FITS or VOTable"), FILES, { "<Control>e" } },
