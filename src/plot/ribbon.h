@@ -9,11 +9,11 @@ typedef struct
 {
   const AntPyramid *pyramid; /* of the whole record; place 0 at start_d */
   double start_d, step_d;
-  size_t n_masks;
-  const AntSpan *mask;       /* spans that are left out: hatched */
   size_t n_dips;
   const AntDipMark *dip;
   size_t selected;           /* or ANT_NO_DIP */
+  size_t n_masks;
+  const AntSpan *mask;       /* spans that are left out: hatched */
 } AntRibbon;
 
 typedef enum
