@@ -30,10 +30,10 @@ ant_masks_paint (AntPen *pen, const AntBox *area, const AntView *view, size_t n,
   ant_pen_colour (pen, ANT_ROLE_QUIET);
   for (size_t i = 0; i < n; i++)
     {
+      if (mask[i].end_d < view->from || mask[i].start_d > view->to)
+        continue;
       double from = fmax (ant_view_x (view, area, mask[i].start_d), area->x);
       double to = fmin (fmax (ant_view_x (view, area, mask[i].end_d), from + LEAST_PX), area->x + area->width);
-      if (!(to > from))
-        continue;
       AntBox box = { ant_pen_snap (pen, from), area->y, 0, area->height };
       box.width = fmax (ant_pen_snap (pen, to) - box.x, LEAST_PX);
       hatch (pen, &box);
