@@ -14,6 +14,7 @@
 #include "data/record-summary.h"
 #include "data/record-words.h"
 #include "jobs/stop.h"
+#include "readers/observer-reader.h"
 
 #define MOST_COLUMNS 16
 
@@ -310,14 +311,18 @@ print_json (const AntRecord *record, const AntRecordSummary *summary, gboolean g
 /* A record that no grid can be laid on is told about as far as it was read; the exit code tells the rest. */
 static int
 tell (const char *path, const AntRecordOptions *reading, const AntWitnessOptions *witness, const AntFoldWish *fold,
-      const AntSettingsOptions *given, gboolean as_json)
+      const char *observer, const AntSettingsOptions *given, gboolean as_json)
 {
   g_autoptr (GError) error = NULL;
   AntSettings settings;
   AntRecordSummary summary;
   if (!ant_settings_options_apply (given, &settings, &error))
     return ant_cli_fail (error);
+  g_autoptr (AntObserverChoice) choice = observer ? ant_observer_open (observer, &error) : NULL;
+  if (observer && !choice)
+    return ant_cli_fail (error);
   AntGridOptions grid = ant_settings_grid (&settings);
+  grid.observer = choice ? &choice->observer : NULL;
   g_autoptr (AntRecord) record = NULL;
   gboolean gridded = FALSE;
   if (ant_record_options_good (reading, &grid, &error)
@@ -344,11 +349,16 @@ int
 ant_verb_info (int argc, char **argv)
 {
   gboolean as_json = FALSE;
+  g_autofree char *observer = NULL;
   AntRecordOptions reading = { 0 };
   AntWitnessOptions witness = { 0 };
   AntFoldWish fold = { 0 };
   AntSettingsOptions given = { 0 };
-  const GOptionEntry entries[] = { { "json", 0, 0, G_OPTION_ARG_NONE, &as_json, N_("print JSON"), NULL }, { NULL } };
+  const GOptionEntry entries[] = { { "json", 0, 0, G_OPTION_ARG_NONE, &as_json, N_("print JSON"), NULL },
+                                   { "observer", 0, 0, G_OPTION_ARG_FILENAME, &observer,
+                                     N_("whose distance from the Sun the setting distance takes; without it the Earth's centre"),
+                                     N_("earth|l1|site:LON,LAT,HEIGHT_M|FILE") },
+                                   { NULL } };
   g_autoptr (GOptionContext) context = g_option_context_new (_("RECORD"));
   g_option_context_set_summary (context, _("Tells what is in a record (“-”: standard input), and what was assumed to read it."));
   g_option_context_add_main_entries (context, entries, NULL);
@@ -364,7 +374,7 @@ ant_verb_info (int argc, char **argv)
   else if (argc != 2)
     code = ant_cli_fail_usage (_("info: found %d files, expected one record"), argc - 1);
   else
-    code = tell (argv[1], &reading, &witness, &fold, &given, as_json);
+    code = tell (argv[1], &reading, &witness, &fold, observer, &given, as_json);
   ant_record_options_clear (&reading);
   ant_witness_options_clear (&witness);
   ant_fold_options_clear (&fold);

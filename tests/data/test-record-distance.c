@@ -119,6 +119,51 @@ conversion_goes_either_way (void)
   g_assert_true (test_said (left, "already"));
 }
 
+/* A day in a low orbit: 7000 km, 97 min a turn. Without its positions the swing that is locked to the orbit stays, with them it goes. */
+static void
+positions_take_out_the_swing_of_a_low_orbit (void)
+{
+  enum { N = 1440, N_PLACES = 1500 };
+  static double time[N_PLACES], x[N_PLACES], y[N_PLACES], z[N_PLACES];
+  double origin_d = 2453371.5 - ANT_J2000_JD + 64.184 / ANT_SECONDS_PER_DAY, period_d = 97.0 / ANT_MINUTES_PER_DAY;
+  for (int i = 0; i < N_PLACES; i++)
+    {
+      time[i] = origin_d + (i - 30.0) / ANT_MINUTES_PER_DAY;
+      double angle = ANT_TAU * (time[i] - origin_d) / period_d;
+      x[i] = 7000.0 * cos (angle);
+      y[i] = 7000.0 * sin (angle);
+      z[i] = 0.0;
+    }
+  AntObserver orbit = { .kind = ANT_OBSERVER_TABLE, .table = { N_PLACES, time, x, y, z, ANT_FRAME_GSE } };
+  g_assert_cmpint (ant_observer_check (&orbit, NULL, NULL), ==, ANT_OBSERVER_GOOD);
+  AntGridOptions placed = ANT_GRID_OPTIONS_INIT, unplaced = ANT_GRID_OPTIONS_INIT;
+  placed.distance = unplaced.distance = ANT_DISTANCE_TO_ONE_AU;
+  placed.observer = &orbit;
+  g_autoptr (AntRecord) known = daily (N, FALSE), unknown = daily (N, FALSE);
+  AntRecord *const both[] = { known, unknown };
+  for (int i = 0; i < N; i++)
+    for (int k = 0; k < 2; k++)
+      {
+        AntSunDistance distance;
+        both[k]->time_d[i] = i / ANT_MINUTES_PER_DAY;
+        g_assert_cmpint (ant_sun_distance (&orbit, origin_d + both[k]->time_d[i], &distance), ==, ANT_OK);
+        both[k]->value[i] = ANT_TSI_W_M2 * (1.0 + test_wiggle_ppm ((gsize) i) * ANT_PPM) / ant_one_au_factor (&distance, TRUE);
+      }
+  test_grid (known, &placed);
+  test_grid (unknown, &unplaced);
+  double most_known = 0.0, most_unknown = 0.0;
+  for (int i = 0; i < N; i++)
+    {
+      double level = ANT_TSI_W_M2 * (1.0 + test_wiggle_ppm ((gsize) i) * ANT_PPM);
+      most_known = fmax (most_known, fabs (known->value[i] / level - 1.0) / ANT_PPM);
+      most_unknown = fmax (most_unknown, fabs (unknown->value[i] / level - 1.0) / ANT_PPM);
+    }
+  g_assert_cmpfloat (most_known, <, 0.05);
+  g_assert_cmpfloat (most_unknown, >, 90.0);
+  g_assert_cmpfloat (most_unknown, <, 94.0 + 51.0);
+  g_assert_false (test_said (known, "in a low orbit"));
+}
+
 static void
 times_without_an_origin_cannot_be_converted (void)
 {
@@ -151,6 +196,7 @@ main (int argc, char **argv)
   g_test_add_func ("/data/record-distance/names-speak-where-the-swing-does-not", names_speak_where_the_swing_does_not);
   g_test_add_func ("/data/record-distance/the-swing-is-believed-against-a-name", the_swing_is_believed_against_a_name);
   g_test_add_func ("/data/record-distance/conversion-goes-either-way", conversion_goes_either_way);
+  g_test_add_func ("/data/record-distance/positions-take-out-the-swing-of-a-low-orbit", positions_take_out_the_swing_of_a_low_orbit);
   g_test_add_func ("/data/record-distance/times-without-an-origin-cannot-be-converted", times_without_an_origin_cannot_be_converted);
   g_test_add_func ("/data/record-distance/relative-fluxes-stand-nowhere", relative_fluxes_stand_nowhere);
   return g_test_run ();
