@@ -25,6 +25,7 @@ instrument (double level, double step_d, double noise_ppm, AntTimeScale scale, d
   AntRandom random;
   AntRecord *record = test_rows (n, 0.5 * step_d, step_d);
   ant_random_seed (&random, seed, 2);
+  g_free (record->path);
   record->path = g_strdup ("instrument.txt");
   record->time.scale = scale;
   record->time.origin_known = TRUE;
