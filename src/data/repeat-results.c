@@ -7,6 +7,8 @@
 #include "core/units.h"
 #include "data/error.h"
 
+#define MIRROR_MARGIN 1.2 /* a repeat below this many times the best brightening's SNR is told of as such */
+
 AntRepeatOptions
 ant_repeat_results_options (const AntRecord *record, const AntSettings *settings)
 {
@@ -123,6 +125,9 @@ say_repeat (const AntRepeatResults *results, const AntSettings *settings, gsize 
     listed += repeat->event[e].dip > 0;
   if (repeat->n_observed == 2)
     say (said, _("Repeat %zu rests on two events: any whole fraction of its period would do as well where its events fall into gaps"), i + 1);
+  if (results->n_mirrored && repeat->snr < MIRROR_MARGIN * results->best_mirrored_snr)
+    say (said, _("Repeat %zu is hardly stronger than what brightenings show (SNR %.1f): excursions that the noise model does not know can make it"),
+         i + 1, results->best_mirrored_snr);
   if (listed)
     say (said, _("Repeat %zu: %zu of its events stand in the list of dips; without them its SNR is %.1f"), i + 1, listed,
          repeat->snr_unlisted);

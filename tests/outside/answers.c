@@ -10,6 +10,8 @@
  *                                         "-" for what the reader is to find
  *   gls WHITE STEP PARTS (KIND RMS TIME QUALITY)... FIRST LENGTH VALUES...
  *                                         box of unit depth at FIRST: energy, moment; ln likelihood of the values
+ *   train N PERIOD MID DURATION (PLACE VALUE ERROR)...
+ *                                         a train of boxes on N places in white noise: depth, its error, SNR
  */
 #include <math.h>
 #include <stdio.h>
@@ -19,6 +21,7 @@
 #include "noise/spectrum.h"
 #include "noise/whitener.h"
 #include "readers/number-cursor.h"
+#include "search/repeat-train.h"
 #include "readers/reader.h"
 #include "sky/time-scale.h"
 
@@ -186,6 +189,38 @@ answer_record (void)
   ant_reading_choices_clear (&choices);
 }
 
+static void
+answer_train (void)
+{
+  size_t n = (size_t) next_number (), count;
+  double period = next_number (), mid = next_number (), duration = next_number (), *value = rest (&count);
+  AntTrainTrial trial = { .period = period, .mid = mid, .duration = duration };
+  float *ppm = malloc (n * sizeof *ppm);
+  double *weight = calloc (n, sizeof *weight);
+  for (size_t i = 0; i < n; i++)
+    ppm[i] = NAN;
+  for (size_t k = 0; k + 2 < count; k += 3)
+    {
+      ppm[(size_t) value[k]] = (float) value[k + 1];
+      weight[(size_t) value[k]] = 1 / (value[k + 2] * value[k + 2]);
+    }
+  AntSeries series = { .n = n, .step_d = 1, .value_ppm = ppm };
+  AntRepeatBox box;
+  AntTrainSums sums;
+  if (ant_repeat_box_init (&box, &series, weight))
+    printf ("none\n");
+  else
+    {
+      AntRepeatTrain train = { .box = &box, .n = n };
+      ant_repeat_train_sums (&train, &trial, &sums);
+      printf ("%.17g %.17g %.17g\n", sums.depth, sums.depth / sums.snr, sums.snr);
+      ant_repeat_box_clear (&box);
+    }
+  free (ppm);
+  free (weight);
+  free (value);
+}
+
 int
 main (void)
 {
@@ -195,7 +230,7 @@ main (void)
     void (*answer) (void);
   } questions[] = { { "robust", answer_robust },     { "spectrum", answer_spectrum }, { "convert", answer_convert },
                     { "calendar", answer_calendar }, { "number", answer_number },     { "gls", answer_gls },
-                    { "record", answer_record } };
+                    { "record", answer_record },     { "train", answer_train } };
   char *line = NULL;
   size_t room = 0;
   while (getline (&line, &room, stdin) > 0)
