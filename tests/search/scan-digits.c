@@ -5,6 +5,7 @@
 #include "core/units.h"
 #include "models.h"
 #include "planting.h"
+#include "search/repeats.h"
 
 static void
 print_dips (const char *name, size_t n, const AntDip *dip)
@@ -25,6 +26,33 @@ print_chunk (const AntChunk *chunk)
     printf ("floor %a %a %a\n", chunk->floor[i].snr_sd, chunk->floor[i].snr_mean, chunk->floor[i].sigma_ppm);
   for (size_t i = 0; i < chunk->n_bins; i++)
     printf ("power %a %a\n", chunk->frequency_cd[i], chunk->power_unmasked[i]);
+}
+
+/* Every bin of both searches, and what stands. */
+static void
+print_repeats (const AntSeries *series, int white, size_t n_chunks, const AntChunk *chunk)
+{
+  AntRepeatOptions options = { .grid = { .period_min_d = 0.5, .shortest_factor = 0.2, .longest_factor = 2, .shortest_d = 0.5 / 24 },
+                               .least_events = 2, .false_alarms = 0.1, .white = white, .edge_d = 20 / ANT_MINUTES_PER_DAY,
+                               .exposure_d = series->step_d, .limb_darkening = ANT_LIMB_DARKENING_SUN };
+  AntStatus status;
+  const AntStages *stages = ant_repeats_stages ();
+  AntRepeats *repeats = ant_repeats_new (series, &options, n_chunks, chunk, &status);
+  for (size_t stage = 0; stage < stages->n_stages && !status; stage++)
+    {
+      for (size_t i = 0, count = stages->count (repeats, stage); i < count && !status; i++)
+        status = stages->run_slice (repeats, stage, i);
+      status = status ? status : stages->finish (repeats, stage);
+    }
+  const AntRepeatBins *bins = ant_repeats_spectrum (repeats);
+  const AntRepeat *repeat;
+  for (size_t i = 0; i < bins->n; i++)
+    if (bins->cell[i].power > 0)
+      printf ("bin %zu %a %a %a %a\n", i, bins->cell[i].power, bins->cell[i].period_d, bins->cell[i].mid_d, bins->cell[i].duration_d);
+  for (size_t i = 0, n = ant_repeats_list (repeats, &repeat); i < n; i++)
+    printf ("repeat %a %a %a %a\n", repeat[i].period_d, repeat[i].snr, repeat[i].depth_ppm, repeat[i].period_sigma_d);
+  printf ("threshold %a status %d\n", ant_repeats_threshold (repeats), (int) status);
+  ant_repeats_free (repeats);
 }
 
 int
@@ -49,6 +77,9 @@ main (void)
   print_dips ("brightening", n_brightenings, dip);
   for (size_t i = 0, n_chunks = ant_scan_chunks (scan, &chunk); i < n_chunks; i++)
     print_chunk (&chunk[i]);
+  size_t n_chunks = ant_scan_chunks (scan, &chunk);
+  print_repeats (&series, 0, n_chunks, chunk);
+  print_repeats (&series, 1, 0, NULL);
   ant_scan_free (scan);
   free (value);
   return n_dips < 2 || n_brightenings < 1;
