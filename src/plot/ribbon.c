@@ -116,11 +116,13 @@ ant_ribbon_paint (cairo_t *cr, const AntBox *box, const AntRibbon *ribbon, const
   AntStripData data = { ribbon->pyramid, ribbon->start_d, ribbon->step_d, NULL, NULL };
   ant_pen_colour (&pen, ANT_ROLE_PAPER);
   ant_pen_fill_box (&pen, box);
+  ant_strip_data_open (&data, &pen, &area, &whole);
   ant_pen_colour (&pen, ANT_ROLE_GAP);
   ant_strip_data_gaps (&pen, &area, &data, &whole);
   ant_pen_clip (&pen, &area);
   ant_strip_data_samples (&pen, &inner, &data, &whole, &theme->role[ANT_ROLE_QUIET]);
   ant_masks_paint (&pen, &area, &whole, ribbon->n_masks, ribbon->mask);
+  ant_strip_data_close (&data);
   draw_dips (&pen, &area, ribbon, &whole);
   cairo_restore (cr);
   draw_view_box (&pen, &area, &whole, view);

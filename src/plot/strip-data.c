@@ -6,6 +6,7 @@
 #define DOTS_PX 5         /* samples this far apart are drawn as dots too */
 #define LEAST_AVERAGE_PX 1.5
 #define BAR_PX 14         /* averages wider than this are bars, each over its own bin */
+#define CURVE_PX 2        /* between points of a curve: it is smooth */
 #define GUESS_PX 24       /* a curve is not drawn across longer gaps */
 
 static double
@@ -83,24 +84,29 @@ gaps_by_sample (AntPen *pen, const AntBox *area, const AntStripData *data, const
     }
 }
 
-static AntExtent *
-columns_new (AntPen *pen, const AntBox *area, const AntStripData *data, const AntView *view)
+void
+ant_strip_data_open (AntStripData *data, AntPen *pen, const AntBox *area, const AntView *view)
 {
   size_t n_columns = columns_of (pen, area);
-  AntExtent *column = g_new (AntExtent, n_columns);
-  ant_pyramid_columns (data->pyramid, place_of (data, view->from), place_of (data, view->to), n_columns, column);
-  return column;
+  data->column = NULL;
+  if (density (pen, area, data, view) < 1)
+    return;
+  data->column = g_new (AntExtent, n_columns);
+  ant_pyramid_columns (data->pyramid, place_of (data, view->from), place_of (data, view->to), n_columns, data->column);
+}
+
+void
+ant_strip_data_close (AntStripData *data)
+{
+  g_clear_pointer (&data->column, g_free);
 }
 
 void
 ant_strip_data_gaps (AntPen *pen, const AntBox *area, const AntStripData *data, const AntView *view)
 {
   cairo_new_path (pen->cr);
-  if (density (pen, area, data, view) >= 1)
-    {
-      g_autofree AntExtent *column = columns_new (pen, area, data, view);
-      gaps_by_column (pen, area, data, view, columns_of (pen, area), column);
-    }
+  if (data->column)
+    gaps_by_column (pen, area, data, view, columns_of (pen, area), data->column);
   else
     gaps_by_sample (pen, area, data, view);
   ant_pen_fill_added (pen);
@@ -128,7 +134,7 @@ static void
 draw_extents (AntPen *pen, const AntBox *area, const AntStripData *data, const AntView *view)
 {
   size_t n_columns = columns_of (pen, area);
-  g_autofree AntExtent *column = columns_new (pen, area, data, view);
+  AntExtent *column = data->column;
   if (density (pen, area, data, view) < 16)
     bridge (n_columns, column);
   double pixel = 1 / pen->scale, foot = area->y + area->height;
@@ -176,9 +182,9 @@ void
 ant_strip_data_samples (AntPen *pen, const AntBox *area, const AntStripData *data, const AntView *view,
                         const AntColour *colour)
 {
-  gboolean pale = data->averages && density (pen, area, data, view) >= 1;
+  gboolean pale = data->averages && data->column;
   ant_pen_set (pen, colour ? *colour : pen->theme->role[pale ? ANT_ROLE_ENVELOPE : ANT_ROLE_SERIES]);
-  if (density (pen, area, data, view) >= 1)
+  if (data->column)
     draw_extents (pen, area, data, view);
   else
     draw_samples (pen, area, data, view);
@@ -258,7 +264,7 @@ break_at_gaps (size_t n, const guint8 *seen, double *y)
       size_t end = i;
       while (end < n && !seen[end])
         end++;
-      for (size_t k = i; end - i > GUESS_PX && k < end; k++)
+      for (size_t k = i; CURVE_PX * (end - i) > GUESS_PX && k < end; k++)
         y[k] = NAN;
       i = MAX (end, i + 1);
     }
@@ -275,24 +281,37 @@ curve_at (const AntStripData *data, double place)
   return part > 0 ? value + part * ((double) data->curve[next] - value) : value;
 }
 
-/* One point a unit of width: curves are smooth. */
+/* Whether a sample stands near a point of a curve. */
+static gboolean
+is_seen (const AntPen *pen, const AntBox *area, const AntStripData *data, double x, double place)
+{
+  if (!data->column)
+    {
+      double samples = (double) ant_pyramid_samples (data->pyramid);
+      AntExtent extent = ant_pyramid_extent (data->pyramid, (size_t) CLAMP (place - 1, 0, samples),
+                                             (size_t) CLAMP (place + 2, 0, samples));
+      return extent.low <= extent.high;
+    }
+  double n = (double) columns_of (pen, area), from = (x - CURVE_PX) * pen->scale, to = (x + CURVE_PX) * pen->scale;
+  for (size_t c = (size_t) CLAMP (from, 0, n); c < (size_t) CLAMP (to, 0, n); c++)
+    if (data->column[c].low <= data->column[c].high)
+      return TRUE;
+  return FALSE;
+}
+
 void
 ant_strip_data_curve (AntPen *pen, const AntBox *area, const AntStripData *data, const AntView *view)
 {
-  size_t n = (size_t) area->width + 1;
-  double samples = (double) ant_pyramid_samples (data->pyramid);
-  double reach = MAX (1, (view->to - view->from) / data->step_d / area->width);
+  size_t n = (size_t) ceil (area->width / CURVE_PX) + 1;
   g_autofree double *x = g_new (double, n);
   g_autofree double *y = g_new (double, n);
   g_autofree guint8 *seen = g_new (guint8, n);
   for (size_t i = 0; i < n; i++)
     {
-      x[i] = area->x + (double) i;
+      x[i] = area->x + MIN (area->width, CURVE_PX * (double) i);
       double place = place_of (data, ant_view_at_x (view, area, x[i])), value = curve_at (data, place);
       y[i] = isnan (value) ? NAN : ant_view_y (view, area, value);
-      AntExtent extent = ant_pyramid_extent (data->pyramid, (size_t) CLAMP (place - reach, 0, samples),
-                                             (size_t) CLAMP (place + reach + 1, 0, samples));
-      seen[i] = extent.low <= extent.high;
+      seen[i] = is_seen (pen, area, data, x[i] - area->x, place);
     }
   break_at_gaps (n, seen, y);
   ant_pen_colour (pen, ANT_ROLE_CURVE);

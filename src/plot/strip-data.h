@@ -10,7 +10,12 @@ typedef struct
   double start_d, step_d;
   const AntAverages *averages; /* or NULL */
   const float *curve;          /* or NULL */
+  AntExtent *column;           /* while it is open: extents by column of pixels; NULL where samples are drawn one by one */
 } AntStripData;
+
+/* Ask the pyramid once for all that follows; everything is drawn in between, the gaps first. */
+void ant_strip_data_open (AntStripData *data, AntPen *pen, const AntBox *area, const AntView *view);
+void ant_strip_data_close (AntStripData *data);
 
 /* Gaps as boxes in the present colour. */
 void ant_strip_data_gaps (AntPen *pen, const AntBox *area, const AntStripData *data, const AntView *view);

@@ -266,6 +266,7 @@ ant_strip_paint (cairo_t *cr, const AntBox *box, const AntStrip *strip, const An
   ant_pen_fill_box (&pen, box);
   ant_pen_clip (&pen, &area);
   ant_axes_grid (&pen, &area, view, &x, &y);
+  ant_strip_data_open (&data, &pen, &area, view);
   ant_pen_colour (&pen, ANT_ROLE_GAP);
   ant_strip_data_gaps (&pen, &area, &data, view);
   draw_wash (&pen, &area, strip, view);
@@ -273,6 +274,7 @@ ant_strip_paint (cairo_t *cr, const AntBox *box, const AntStrip *strip, const An
   size_t averaged = ant_strip_data_averages (&pen, &area, &data, view);
   if (strip->curve)
     ant_strip_data_curve (&pen, &area, &data, view);
+  ant_strip_data_close (&data);
   draw_line (&pen, &area, view, strip->line);
   draw_ticks (&pen, &area, strip, view);
   ant_masks_paint (&pen, &area, view, strip->n_masks, strip->mask);
