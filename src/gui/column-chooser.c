@@ -250,7 +250,7 @@ columns_of_record (const AntRecord *record)
 static void
 take_look (AntColumnChooser *self, const AntPreview *preview)
 {
-  const AntFirstLook *look = preview->look;
+  const AntFileLook *look = preview->look;
   if (self->kind)
     return;
   g_autoptr (GPtrArray) read = look->columns->len == 0 && preview->record ? columns_of_record (preview->record) : NULL;

@@ -7,7 +7,7 @@
 #include "data/analysis-text.h"
 #include "gui/reading-memory.h"
 #include "jobs/open-task.h"
-#include "readers/first-look.h"
+#include "readers/file-look.h"
 
 static void
 clear_layers (AntDesk *self)
@@ -174,7 +174,7 @@ ant_desk_open (AntDesk *self, const char *path)
       ant_desk_open_analysis (self, path);
       return;
     }
-  g_autoptr (AntFirstLook) look = ant_first_look_new (path, NULL);
+  g_autoptr (AntFileLook) look = g_file_test (path, G_FILE_TEST_IS_REGULAR) ? ant_file_look_new (path, NULL) : NULL; /* a pipe is read once */
   AntReadingChoices reading = { 0 };
   if (look)
     ant_reading_memory_recall (look->kind, &reading);

@@ -28,7 +28,7 @@ ant_preview_free (AntPreview *preview)
 {
   if (!preview)
     return;
-  ant_first_look_free (preview->look);
+  ant_file_look_free (preview->look);
   ant_record_unref (preview->record);
   g_free (preview->refusal);
   g_free (preview);
@@ -59,7 +59,7 @@ make_preview (const Order *order, GCancellable *cancellable, GError **error)
 {
   g_autoptr (AntPreview) preview = g_new0 (AntPreview, 1);
   g_autoptr (GError) refusal = NULL;
-  preview->look = ant_first_look_new (order->path, error);
+  preview->look = ant_file_look_new (order->path, error);
   if (!preview->look)
     return NULL;
   preview->record = g_strcmp0 (preview->look->format, "text") == 0

@@ -4,11 +4,11 @@
 #include <gio/gio.h>
 #include "data/record.h"
 #include "data/reading-choices.h"
-#include "readers/first-look.h"
+#include "readers/file-look.h"
 
 typedef struct
 {
-  AntFirstLook *look;
+  AntFileLook *look;
   AntRecord *record; /* its rows are read, no grid laid; NULL if it is refused */
   char *refusal;     /* the sentence, or NULL */
   gboolean partial;  /* only the first part of the file was read */

@@ -1,5 +1,5 @@
-/* first-look.c - what the first bytes of a file show. */
-#include "readers/first-look.h"
+/* file-look.c - what the first bytes of a file show. */
+#include "readers/file-look.h"
 
 #include <string.h>
 
@@ -27,7 +27,7 @@ kind_of_name (const char *path, const char *format)
 }
 
 static void
-look_at_lines (AntFirstLook *look, const char *bytes, gsize n)
+look_at_lines (AntFileLook *look, const char *bytes, gsize n)
 {
   for (const char *at = bytes; at < bytes + n && look->lines->len < MOST_LINES;)
     {
@@ -40,7 +40,7 @@ look_at_lines (AntFirstLook *look, const char *bytes, gsize n)
 
 /* Columns without a layout are no fault here: reading will say what is wrong. */
 static gboolean
-look_at_text (AntFirstLook *look, AntByteSource *source, const char *path, GError **error)
+look_at_text (AntFileLook *look, AntByteSource *source, const char *path, GError **error)
 {
   AntLineSource lines;
   ant_line_source_init (&lines, source, NULL);
@@ -63,15 +63,15 @@ look_at_text (AntFirstLook *look, AntByteSource *source, const char *path, GErro
   return good;
 }
 
-AntFirstLook *
-ant_first_look_new (const char *path, GError **error)
+AntFileLook *
+ant_file_look_new (const char *path, GError **error)
 {
   gsize n;
   g_autoptr (AntByteSource) source = ant_byte_source_open (path, error);
   const guint8 *head = source ? ant_byte_source_peek (source, &n, error) : NULL;
   if (!head)
     return NULL;
-  g_autoptr (AntFirstLook) look = g_new0 (AntFirstLook, 1);
+  g_autoptr (AntFileLook) look = g_new0 (AntFileLook, 1);
   look->columns = g_ptr_array_new_with_free_func (g_free);
   look->lines = g_ptr_array_new_with_free_func (g_free);
   look->format = ant_reader_format (head, n);
@@ -82,7 +82,7 @@ ant_first_look_new (const char *path, GError **error)
 }
 
 void
-ant_first_look_free (AntFirstLook *look)
+ant_file_look_free (AntFileLook *look)
 {
   if (!look)
     return;
