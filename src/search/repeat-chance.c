@@ -10,7 +10,7 @@
 #define WIDTHS 24
 
 /* The calibration: see docs/search.md. */
-#define YIELD 0.25
+#define YIELD 0.5
 #define WHITE_YIELD 0.024
 
 enum { SHAPE, MOVED, LONGER, WITH_MOVED, WITH_LONGER };
