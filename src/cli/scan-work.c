@@ -8,6 +8,7 @@
 #include "data/error.h"
 #include "data/exclusions.h"
 #include "jobs/record-open.h"
+#include "readers/observer-reader.h"
 
 void
 ant_scan_work_add (GOptionContext *context, AntScanWork *work)
@@ -19,6 +20,8 @@ ant_scan_work_add (GOptionContext *context, AntScanWork *work)
     { "to", 0, 0, G_OPTION_ARG_STRING, &work->to, N_("use the record up to this time"), N_("TIME") },
     { "exclude", 0, 0, G_OPTION_ARG_FILENAME, &work->exclude,
       N_("leave out spans: lines of start, end, reason, or an earlier flags.csv"), N_("FILE") },
+    { "observer", 0, 0, G_OPTION_ARG_FILENAME, &work->observer,
+      N_("who took the record: what crossed the Sun there and then is evidence for the verdicts"), N_("earth|l1|site:LON,LAT,HEIGHT_M|FILE") },
     { NULL }
   };
   g_option_context_add_main_entries (context, entries, NULL);
@@ -32,6 +35,7 @@ ant_scan_work_clear (AntScanWork *work)
   g_clear_pointer (&work->from, g_strfreev);
   g_clear_pointer (&work->to, g_free);
   g_clear_pointer (&work->exclude, g_free);
+  g_clear_pointer (&work->observer, g_free);
   ant_record_options_clear (&work->reading);
   ant_settings_options_clear (&work->given);
 }
@@ -108,6 +112,15 @@ treat (const AntScanWork *work, const AntAnalysis *analysis, const AntRecord *re
     {
       g_free (treatment->good);
       treatment->good = g_strdup (work->reading.good);
+    }
+  if (work->observer)
+    {
+      g_autoptr (AntObserverChoice) choice = ant_observer_open (work->observer, error);
+      if (!choice)
+        return NULL;
+      g_free (treatment->observer);
+      treatment->observer = choice->observer.kind == ANT_OBSERVER_TABLE ? g_canonicalize_filename (work->observer, NULL)
+                                                                       : g_strdup (work->observer);
     }
   for (char **from = work->from; from && *from; from++)
     if (!is_file (*from) && !ant_time_reference_parse (&record->time, *from, &treatment->from_d, error))

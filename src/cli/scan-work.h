@@ -12,6 +12,7 @@ typedef struct
   char **from;     /* --from: a time, an analysis file, or one of each */
   char *to;        /* --to */
   char *exclude;   /* --exclude */
+  char *observer;  /* --observer */
   AntRecordOptions reading;
   AntSettingsOptions given;
 } AntScanWork;

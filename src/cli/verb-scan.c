@@ -11,6 +11,7 @@
 #include "cli/witness-options.h"
 #include "data/analysis-text.h"
 #include "data/error.h"
+#include "jobs/outside-job.h"
 #include "jobs/report.h"
 #include "jobs/scan-job.h"
 #include "jobs/stop.h"
@@ -28,8 +29,6 @@ typedef struct
   double hours;
   int threads;
   gboolean force, progress, no_report, no_repeats;
-  char *observer_text;
-  AntObserverChoice *observer; /* owned; NULL: nobody knows who took the record */
   AntResultChoice choice;
   AntScanWork work;
   AntWitnessOptions witness;
@@ -42,8 +41,6 @@ options_clear (Options *options)
   g_free (options->also);
   g_free (options->save);
   g_free (options->at);
-  g_free (options->observer_text);
-  ant_observer_choice_unref (options->observer);
   ant_scan_work_clear (&options->work);
   ant_witness_options_clear (&options->witness);
 }
@@ -129,12 +126,15 @@ search (const Options *options, AntAnalysis *analysis, AntRecord *record, const 
         GCancellable *stop, GError **error)
 {
   g_autoptr (GPtrArray) witnesses = ant_witness_options_open (&options->witness, record, settings, stop, error);
-  if (!witnesses)
+  const char *who = ant_analysis_get_treatment (analysis)->observer;
+  g_autoptr (AntObserverChoice) observer = witnesses && who ? ant_observer_open (who, error) : NULL;
+  if (!witnesses || (who && !observer))
     return FALSE;
   AntProgressLine *line = ant_progress_line_new (options->progress);
-  g_autoptr (AntScanResults) results = ant_scan_job_run (record, settings, options->observer, stop, ant_progress_line_show, line, error);
+  g_autoptr (AntScanResults) results = ant_scan_job_run (record, settings, stop, ant_progress_line_show, line, error);
   ant_progress_line_end (line);
-  if (!results)
+  /* A stopped scan is held against what is outside it too: that takes no time worth stopping. */
+  if (!results || !ant_outside_job_run (results, observer, witnesses, NULL, error))
     return FALSE;
   ant_analysis_set_results (analysis, results, ant_analysis_get_treatment (analysis));
   if ((dir && !write_all (options, dir, analysis, witnesses, error))
@@ -238,8 +238,6 @@ ant_verb_scan (int argc, char **argv)
     { "no-repeats", 0, 0, G_OPTION_ARG_NONE, &options.no_repeats, N_("leave out the search for dips that recur"), NULL },
     { "save", 0, 0, G_OPTION_ARG_FILENAME, &options.save, N_("write the analysis into this file, which the window opens"), N_("FILE.antumbra") },
     { "force", 0, 0, G_OPTION_ARG_NONE, &options.force, N_("replace results that are there"), NULL },
-    { "observer", 0, 0, G_OPTION_ARG_FILENAME, &options.observer_text,
-      N_("who took the record: what crossed the Sun there and then is evidence for the verdicts"), N_("earth|l1|site:LON,LAT,HEIGHT_M|FILE") },
     { "at", 0, 0, G_OPTION_ARG_STRING, &options.at, N_("measure a dip with this middle, without a search"), N_("TIME") },
     { "hours", 0, 0, G_OPTION_ARG_DOUBLE, &options.hours, N_("length of the dip of --at, contact I to IV"), N_("H") },
     { "threads", 0, 0, G_OPTION_ARG_INT, &options.threads, N_("threads to work with; the results do not depend on it"), N_("N") },
@@ -260,8 +258,6 @@ ant_verb_scan (int argc, char **argv)
   else if ((fault = find_fault (&options, argc - 1)))
     code = ant_cli_fail_usage ("%s", fault);
   else if (options.also && !ant_result_choice_parse (&options.choice, options.also, &error))
-    code = ant_cli_fail (error);
-  else if (options.observer_text && !(options.observer = ant_observer_open (options.observer_text, &error)))
     code = ant_cli_fail (error);
   else
     code = run (&options, argc > 1 ? argv[1] : NULL);

@@ -182,6 +182,7 @@ ant_treatment_to_json (const AntTreatment *treatment)
   JsonObject *object = json_object_new ();
   json_object_set_object_member (object, "reading", put_reading (treatment));
   json_object_set_object_member (object, "settings", put_settings (&treatment->settings));
+  ant_json_put_text (object, "observer", treatment->observer);
   ant_json_put_real (object, "from_d", treatment->from_d);
   ant_json_put_real (object, "to_d", treatment->to_d);
   json_object_set_array_member (object, "masks", put_masks (treatment->masks));
@@ -200,7 +201,8 @@ ant_treatment_from_json (JsonObject *object, GError **error)
     return ant_json_within (error, "reading", -1), NULL;
   if (!get_settings (settings, &treatment->settings, error))
     return ant_json_within (error, "settings", -1), NULL;
-  return get_time (object, "from_d", TRUE, &treatment->from_d, error)
+  return ant_json_get_text (object, "observer", &treatment->observer, error)
+                 && get_time (object, "from_d", TRUE, &treatment->from_d, error)
                  && get_time (object, "to_d", TRUE, &treatment->to_d, error) && get_masks (object, treatment, error)
              ? g_steal_pointer (&treatment)
              : NULL;

@@ -55,6 +55,7 @@ ant_treatment_copy (const AntTreatment *treatment)
   *copy = *treatment;
   ant_reading_choices_copy (&treatment->reading, &copy->reading);
   copy->good = g_strdup (treatment->good);
+  copy->observer = g_strdup (treatment->observer);
   copy->masks = g_ptr_array_new_with_free_func (mask_free);
   for (guint i = 0; i < treatment->masks->len; i++)
     g_ptr_array_add (copy->masks, mask_copy (g_ptr_array_index (treatment->masks, i), NULL));
@@ -68,6 +69,7 @@ ant_treatment_free (AntTreatment *treatment)
     return;
   ant_reading_choices_clear (&treatment->reading);
   g_free (treatment->good);
+  g_free (treatment->observer);
   g_ptr_array_unref (treatment->masks);
   g_free (treatment);
 }
@@ -162,7 +164,8 @@ ant_treatment_same_grid (const AntTreatment *one, const AntTreatment *other)
 gboolean
 ant_treatment_same (const AntTreatment *one, const AntTreatment *other)
 {
-  return same_settings (&one->settings, &other->settings, NULL) && ant_treatment_same_grid (one, other);
+  return same_settings (&one->settings, &other->settings, NULL) && g_strcmp0 (one->observer, other->observer) == 0
+         && ant_treatment_same_grid (one, other);
 }
 
 static GArray *

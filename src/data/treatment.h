@@ -25,6 +25,7 @@ typedef struct
 {
   AntReadingChoices reading;
   char *good;          /* qualities that are good, as of --good; NULL: only 0 */
+  char *observer;      /* who took the record, as of --observer; NULL: nobody said */
   AntSettings settings;
   double from_d, to_d; /* limits, elapsed days; NaN: none */
   GPtrArray *masks;    /* of AntMask, by start */

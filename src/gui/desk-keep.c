@@ -20,13 +20,14 @@ ant_desk_changed (AntDesk *self, AntDeskChange what)
   ant_desk_tell (self, what | ANT_DESK_KEPT);
 }
 
-/* The sky goes by the radii and the limb darkening. */
+/* The sky goes by the observer, the radii and the limb darkening. */
 static void
 settings_changed (AntDesk *self, const AntSettings *was, AntDeskChange what)
 {
   const AntSettings *now = ant_desk_get_settings (self);
   gboolean another_sky = was->radii != now->radii || was->bank.limb_darkening.u1 != now->bank.limb_darkening.u1
-                         || was->bank.limb_darkening.u2 != now->bank.limb_darkening.u2;
+                         || was->bank.limb_darkening.u2 != now->bank.limb_darkening.u2
+                         || ant_desk_observer_differs (self);
   if (another_sky)
     ant_desk_follow_sky (self);
   ant_desk_changed (self, what | ANT_DESK_SETTINGS | (another_sky ? ANT_DESK_SKY : 0));

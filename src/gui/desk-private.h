@@ -122,5 +122,6 @@ void ant_desk_follow_witness (AntDesk *self);
 void ant_desk_bring_into_view (AntDesk *self, const AntDip *dip);
 /* Work out the sky over the record anew. */
 void ant_desk_follow_sky (AntDesk *self);
+gboolean ant_desk_observer_differs (AntDesk *self); /* the analysis names another than the desk has */
 void ant_desk_drop_sky (AntDesk *self);
 AntSpan ant_desk_whole (AntDesk *self);

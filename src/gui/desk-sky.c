@@ -102,11 +102,31 @@ start (AntDesk *self, gboolean measure)
   ant_sky_list_async (self->layers->record, self->observer, ant_desk_get_settings (self), measure, self->sky_stop, sky_cb, g_object_ref (self));
 }
 
+/* Whom the analysis names; where nobody was named, the sky is that of the Earth's centre. */
+static const char *
+wanted_observer (AntDesk *self)
+{
+  const char *named = ant_analysis_get_treatment (self->analysis)->observer;
+  return named ? named : "earth";
+}
+
+gboolean
+ant_desk_observer_differs (AntDesk *self)
+{
+  return !g_str_equal (wanted_observer (self), self->observer->text);
+}
+
+static void observer_cb (GObject *source, GAsyncResult *result, gpointer data);
+
 void
 ant_desk_follow_sky (AntDesk *self)
 {
   ant_desk_drop_sky (self);
-  if (self->layers)
+  if (!self->layers)
+    return;
+  if (ant_desk_observer_differs (self))
+    ant_observer_task_async (wanted_observer (self), observer_cb, g_object_ref (self));
+  else
     start (self, FALSE);
 }
 
@@ -121,6 +141,7 @@ ant_desk_measure_sky (AntDesk *self)
     }
 }
 
+/* A table was read, or could not be: then the sky stays that of who watched before. */
 static void
 observer_cb (GObject *source, GAsyncResult *result, gpointer data)
 {
@@ -131,8 +152,17 @@ observer_cb (GObject *source, GAsyncResult *result, gpointer data)
     {
       ant_observer_choice_unref (self->observer);
       self->observer = choice;
-      ant_desk_follow_sky (self);
     }
+  if (choice && ant_desk_observer_differs (self))
+    {
+      AntTreatment *treatment = ant_treatment_copy (ant_analysis_get_treatment (self->analysis));
+      g_free (treatment->observer);
+      treatment->observer = g_strdup (choice->text);
+      ant_desk_change (self, _("Observer"), treatment);
+    }
+  ant_desk_drop_sky (self);
+  if (self->layers)
+    start (self, FALSE);
   ant_desk_tell (self, ANT_DESK_SKY);
   if (!choice)
     ant_desk_fail (self, error->message);

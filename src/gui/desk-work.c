@@ -212,7 +212,7 @@ ant_desk_start_scan (AntDesk *self, AntLayers *layers)
   GCancellable *stop = ant_desk_begin (self, ANT_BUSY_SCANNING);
   g_clear_pointer (&self->scanning_with, ant_treatment_free);
   self->scanning_with = treatment;
-  ant_scan_task_async (layers, &treatment->settings, stop, progress_cb, scanned_cb, g_object_ref (self));
+  ant_scan_task_async (layers, &treatment->settings, treatment->observer ? self->observer : NULL, stop, progress_cb, scanned_cb, g_object_ref (self));
   ant_desk_tell (self, ANT_DESK_BUSY);
 }
 

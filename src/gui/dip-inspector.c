@@ -67,9 +67,11 @@ show (AntDipInspector *self)
   gtk_label_set_text (self->title, title);
   gtk_label_set_text (self->span, span);
   gtk_widget_set_tooltip_text (GTK_WIDGET (self->span), span);
+  g_autoptr (GPtrArray) all = g_ptr_array_new_with_free_func (ant_fact_free);
   if (ant_dip_item_get_verdict (item))
-    ant_verdict_facts (ant_dip_item_get_verdict (item), facts);
-  ant_fact_list_set_facts (self->facts, facts);
+    ant_verdict_facts (ant_dip_item_get_verdict (item), all);
+  g_ptr_array_extend_and_steal (all, g_steal_pointer (&facts));
+  ant_fact_list_set_facts (self->facts, all);
   show_evidence (self, ant_dip_item_get_verdict (item));
   show_judgement (self, item);
 }

@@ -15,11 +15,11 @@
 /* What follows the search of a scan that ran to its end: verdicts, then repeats. FALSE if the scan is to be given up;
  * with keep_part a stop only leaves out what had not been made. */
 static gboolean
-go_on (AntScanResults *results, const AntObserverChoice *choice, gboolean keep_part, GCancellable *cancellable, AntProgressPart *part, GError **error)
+go_on (AntScanResults *results, gboolean keep_part, GCancellable *cancellable, AntProgressPart *part, GError **error)
 {
   GError *cause = NULL;
   ant_progress_part_next (part, ant_scan_stages ()->n_stages);
-  if (!ant_verdict_job_run (results, choice, cancellable, ant_progress_part_show, part, &cause))
+  if (!ant_verdict_job_run (results, cancellable, ant_progress_part_show, part, &cause))
     {
       gboolean kept = keep_part && g_error_matches (cause, G_IO_ERROR, G_IO_ERROR_CANCELLED);
       if (kept)
@@ -33,8 +33,8 @@ go_on (AntScanResults *results, const AntObserverChoice *choice, gboolean keep_p
 }
 
 static AntScanResults *
-run (AntRecord *record, const AntSettings *settings, const AntObserverChoice *choice, gboolean keep_part,
-     GCancellable *cancellable, AntProgressFunc progress, gpointer data, GError **error)
+run (AntRecord *record, const AntSettings *settings, gboolean keep_part, GCancellable *cancellable,
+     AntProgressFunc progress, gpointer data, GError **error)
 {
   AntStatus status;
   AntScanOptions options = ant_scan_results_options (record, settings);
@@ -52,23 +52,23 @@ run (AntRecord *record, const AntSettings *settings, const AntObserverChoice *ch
   if (ant_status_to_error (status, _("searching for dips"), error))
     results = ant_scan_results_new (record, settings, scan);
   ant_scan_free (scan);
-  if (results && results->reach == ANT_SCAN_COMPLETE && !go_on (results, choice, keep_part, cancellable, &part, error))
+  if (results && results->reach == ANT_SCAN_COMPLETE && !go_on (results, keep_part, cancellable, &part, error))
     g_clear_pointer (&results, ant_scan_results_unref);
   return results;
 }
 
 AntScanResults *
-ant_scan_job_run (AntRecord *record, const AntSettings *settings, const AntObserverChoice *choice, GCancellable *cancellable, AntProgressFunc progress,
+ant_scan_job_run (AntRecord *record, const AntSettings *settings, GCancellable *cancellable, AntProgressFunc progress,
                   gpointer data, GError **error)
 {
-  return run (record, settings, choice, FALSE, cancellable, progress, data, error);
+  return run (record, settings, FALSE, cancellable, progress, data, error);
 }
 
 AntScanResults *
-ant_scan_job_run_partly (AntRecord *record, const AntSettings *settings, const AntObserverChoice *choice, GCancellable *cancellable,
+ant_scan_job_run_partly (AntRecord *record, const AntSettings *settings, GCancellable *cancellable,
                          AntProgressFunc progress, gpointer data, GError **error)
 {
-  return run (record, settings, choice, TRUE, cancellable, progress, data, error);
+  return run (record, settings, TRUE, cancellable, progress, data, error);
 }
 
 /* The asked middle is none of the record's. */

@@ -1,12 +1,14 @@
 /* scan-task.c - threads that scan and measure. */
 #include "jobs/scan-task.h"
 
+#include "jobs/outside-job.h"
 #include "jobs/scan-job.h"
 
 typedef struct
 {
   AntLayers *layers;
   AntSettings settings;
+  AntObserverChoice *choice; /* owned; NULL: nobody knows who took the record */
   double mid_d, duration_d; /* of an asked dip */
   AntProgressRelay *relay;  /* of a scan */
 } Order;
@@ -16,6 +18,7 @@ order_free (gpointer data)
 {
   Order *order = data;
   ant_layers_unref (order->layers);
+  ant_observer_choice_unref (order->choice);
   g_clear_pointer (&order->relay, ant_progress_relay_free);
   g_free (order);
 }
@@ -48,8 +51,11 @@ run_scan (gpointer data)
   GError *error = NULL;
   g_autoptr (AntScanOutcome) outcome = g_new0 (AntScanOutcome, 1);
   outcome->results =
-      ant_scan_job_run_partly (record, &order->settings, NULL, g_task_get_cancellable (task), ant_progress_relay_note,
+      ant_scan_job_run_partly (record, &order->settings, g_task_get_cancellable (task), ant_progress_relay_note,
                                order->relay, &error);
+  if (outcome->results && order->choice
+      && !ant_outside_job_run (outcome->results, order->choice, NULL, NULL, &error))
+    g_clear_pointer (&outcome->results, ant_scan_results_unref);
   if (outcome->results && outcome->results->reach < ANT_SCAN_COMPLETE) /* who stops does not want to wait */
     outcome->layers = ant_layers_ref (order->layers);
   else if (outcome->results)
@@ -62,11 +68,12 @@ run_scan (gpointer data)
 }
 
 void
-ant_scan_task_async (AntLayers *layers, const AntSettings *settings, GCancellable *cancellable,
+ant_scan_task_async (AntLayers *layers, const AntSettings *settings, AntObserverChoice *choice, GCancellable *cancellable,
                      AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data)
 {
   GTask *task = g_task_new (NULL, cancellable, callback, data);
   Order *order = order_new (layers, settings);
+  order->choice = choice ? ant_observer_choice_ref (choice) : NULL;
   g_task_set_source_tag (task, ant_scan_task_async);
   g_task_set_check_cancellable (task, FALSE); /* a stopped scan has results too */
   order->relay = ant_progress_relay_new (task, progress, data);

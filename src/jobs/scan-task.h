@@ -2,6 +2,7 @@
 #pragma once
 
 #include <gio/gio.h>
+#include "data/observer-choice.h"
 #include "data/scan-results.h"
 #include "jobs/layers.h"
 #include "jobs/progress-relay.h"
@@ -16,9 +17,9 @@ void ant_scan_outcome_free (AntScanOutcome *outcome);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntScanOutcome, ant_scan_outcome_free)
 
 /* progress is called in the caller's context, about ten times a second, never after the callback began; `data` goes to
- * both. The task keeps a reference to the layers and a copy of the settings. */
-void ant_scan_task_async (AntLayers *layers, const AntSettings *settings, GCancellable *cancellable,
-                          AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data);
+ * both. The task keeps references to layers and choice (NULL: nobody knows who took the record) and a copy of the settings. */
+void ant_scan_task_async (AntLayers *layers, const AntSettings *settings, AntObserverChoice *choice,
+                          GCancellable *cancellable, AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data);
 /* What a stopped scan found before is kept (reach of its results below ANT_SCAN_COMPLETE). NULL with one sentence;
  * G_IO_ERROR_CANCELLED if it was stopped before it found anything. */
 AntScanOutcome *ant_scan_task_finish (GAsyncResult *result, GError **error);

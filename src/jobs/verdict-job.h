@@ -2,16 +2,13 @@
 #pragma once
 
 #include <gio/gio.h>
-#include "data/observer-choice.h"
 #include "data/scan-results.h"
 #include "jobs/pool.h"
 
 /* Stages that verdicts add to a scan's, for progress. */
 #define ANT_VERDICT_STAGES 2
 
-/* Judge every dip and brightening of results that nobody else has yet. choice: who took the record, NULL if nobody knows;
- * where its place is known well enough for all of the record's time, predicted crossings and eclipses are evidence, and so is their
- * absence. Blocks. FALSE with one sentence;
+/* Judge every dip and brightening of results that nobody else has yet. Blocks. FALSE with one sentence;
  * G_IO_ERROR_CANCELLED if stopped, the results then being as they were. */
-gboolean ant_verdict_job_run (AntScanResults *results, const AntObserverChoice *choice, GCancellable *cancellable,
-                              AntProgressFunc progress, gpointer data, GError **error);
+gboolean ant_verdict_job_run (AntScanResults *results, GCancellable *cancellable, AntProgressFunc progress, gpointer data,
+                              GError **error);

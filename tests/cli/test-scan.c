@@ -56,20 +56,26 @@ command (const Place *place, const char *arguments, const char *input)
   return run;
 }
 
-/* Simulate a record: so many days at a cadence, quiet noise, one planet on its third day. */
 static void
-simulate (const Place *place, double days, int cadence_s)
+simulate_recipe (const Place *place, const char *text)
 {
   g_autofree char *recipe = g_build_filename (place->folder, "small.recipe", NULL);
-  g_autofree char *text = g_strdup_printf ("[record]\nstart = 2043-09-01T00:00:00\ndays = %g\ncadence_s = %d\nseed = 7\n"
-                                           "[noise]\npreset = quiet-sun\nwhite_ppm = 15\n[gaps]\nmask = l1\n[planet crossing]\n"
-                                           "middle = 2043-09-03T17:00:00\ndepth_ppm = 900\nimpact = 0.3\nduration_h = 6\n",
-                                           days, cadence_s);
   g_assert_true (g_file_set_contents (recipe, text, -1, NULL));
   g_autofree char *arguments = g_strdup_printf ("simulate %s --out %%R --force", recipe);
   g_auto (Run) run = command (place, arguments, NULL);
   g_assert_cmpint (run.code, ==, 0);
   g_unlink (recipe);
+}
+
+/* Simulate a record: so many days at a cadence, quiet noise, one planet on its third day. */
+static void
+simulate (const Place *place, double days, int cadence_s)
+{
+  g_autofree char *text = g_strdup_printf ("[record]\nstart = 2043-09-01T00:00:00\ndays = %g\ncadence_s = %d\nseed = 7\n"
+                                           "[noise]\npreset = quiet-sun\nwhite_ppm = 15\n[gaps]\nmask = l1\n[planet crossing]\n"
+                                           "middle = 2043-09-03T17:00:00\ndepth_ppm = 900\nimpact = 0.3\nduration_h = 6\n",
+                                           days, cadence_s);
+  simulate_recipe (place, text);
 }
 
 static void
@@ -173,6 +179,23 @@ all_tables_are_written_with_their_headers (Place *place, gconstpointer unused)
                                       "# mirrored search", "# duration_h: ", "# depth_ppm: " };
   for (gsize i = 0; i < G_N_ELEMENTS (told); i++)
     g_assert_nonnull (strstr (dips, told[i]));
+}
+
+/* Venus in June 2012, and something of its shape two days before. */
+static void
+only_a_predicted_crossing_is_a_planet (Place *place, gconstpointer unused)
+{
+  simulate_recipe (place, "[record]\nstart = 2012-06-02T00:00:00\ndays = 8\ncadence_s = 300\nseed = 5\n"
+                          "[noise]\npreset = sun\nwhite_ppm = 12\n[planet venus]\nmiddle = 2012-06-06T01:29:37\n"
+                          "radius_ratio = 0.030575\nimpact = 0.5865\nduration_h = 6.666\n[planet other]\n"
+                          "middle = 2012-06-04T12:00:00\nradius_ratio = 0.02\nimpact = 0.3\nduration_h = 4\n");
+  g_auto (Run) run = command (place, "scan %R --out %O --no-repeats --no-report --observer earth", NULL);
+  g_assert_cmpint (run.code, ==, 0);
+  g_autofree char *dips = table (place, "dips.csv"), *first = cell (dips, 1, "class"), *second = cell (dips, 2, "class");
+  g_assert_cmpstr (first, ==, "planet-shaped");
+  g_assert_cmpstr (second, ==, "planet");
+  g_auto (Run) wrong = command (place, "scan %R --observer nobody", NULL);
+  g_assert_cmpint (wrong.code, ==, 3);
 }
 
 static void
@@ -527,6 +550,7 @@ main (int argc, char **argv)
   g_test_init (&argc, &argv, NULL);
 #define TEST(path, function) g_test_add ("/cli/scan/" path, Place, NULL, place_make, function, place_clear)
   TEST ("all-tables-are-written-with-their-headers", all_tables_are_written_with_their_headers);
+  TEST ("only-a-predicted-crossing-is-a-planet", only_a_predicted_crossing_is_a_planet);
   TEST ("the-planted-crossing-is-listed", the_planted_crossing_is_listed);
   TEST ("two-runs-and-any-threads-give-the-same-bytes", two_runs_and_any_threads_give_the_same_bytes);
   TEST ("results-that-are-there-stay-unless-forced", results_that_are_there_stay_unless_forced);

@@ -108,6 +108,24 @@ another_observer_has_another_sky (void)
   g_assert_cmpuint (ant_desk_get_ticks (desk, &tick_d), ==, 0); /* nothing is known well enough to mark */
 }
 
+static gboolean
+is_about_earth (gpointer desk)
+{
+  return ant_desk_get_observer (desk)->observer.kind == ANT_OBSERVER_EARTH && is_predicted (desk);
+}
+
+/* The observer is part of the work: kept with it, and a change of it can be undone. */
+static void
+the_choice_of_an_observer_can_be_undone (void)
+{
+  g_autoptr (AntDesk) desk = desk_under_the_sky ();
+  ant_desk_set_observer (desk, "l1");
+  test_gui_wait (is_about_l1, desk, 20);
+  g_assert_true (ant_desk_undo (desk));
+  test_gui_wait (is_about_earth, desk, 20);
+  g_assert_false (ant_desk_get_sky (desk)->sighting[0].event.possible);
+}
+
 static void
 failed_cb (AntDesk *desk, const char *sentence, char **said)
 {
@@ -172,6 +190,7 @@ add (void)
   g_test_add_func ("/gui/sky/opening-a-record-predicts-what-crossed", opening_a_record_predicts_what_crossed);
   g_test_add_func ("/gui/sky/looking-measures-it", looking_measures_it);
   g_test_add_func ("/gui/sky/another-observer-has-another-sky", another_observer_has_another_sky);
+  g_test_add_func ("/gui/sky/the-choice-of-an-observer-can-be-undone", the_choice_of_an_observer_can_be_undone);
   g_test_add_func ("/gui/sky/a-table-that-cannot-be-is-told", a_table_that_cannot_be_is_told);
   g_test_add_func ("/gui/sky/other-radii-change-the-depth", other_radii_change_the_depth);
   g_test_add_func ("/gui/sky/the-page-lists-and-shows-events", the_page_lists_and_shows_events);

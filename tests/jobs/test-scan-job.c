@@ -60,7 +60,7 @@ scan_with (Fixture *f, double threads)
 {
   g_autoptr (GError) error = NULL;
   f->settings.threads = threads;
-  AntScanResults *results = ant_scan_job_run (f->record, &f->settings, NULL, NULL, NULL, NULL, &error);
+  AntScanResults *results = ant_scan_job_run (f->record, &f->settings, NULL, NULL, NULL, &error);
   g_assert_no_error (error);
   return results;
 }
@@ -131,7 +131,7 @@ static void
 progress_goes_forward_through_the_stages (Fixture *f, gconstpointer data)
 {
   g_autoptr (GArray) stages = g_array_new (FALSE, FALSE, sizeof (gsize));
-  g_autoptr (AntScanResults) results = ant_scan_job_run (f->record, &f->settings, NULL, NULL, note_progress, stages, NULL);
+  g_autoptr (AntScanResults) results = ant_scan_job_run (f->record, &f->settings, NULL, note_progress, stages, NULL);
   g_assert_nonnull (results);
   g_assert_cmpuint (stages->len, >=, 3);
   for (guint i = 1; i < stages->len; i++)
@@ -149,7 +149,7 @@ a_stopped_scan_gives_no_results (Fixture *f, gconstpointer data)
 {
   g_autoptr (GCancellable) stop = g_cancellable_new ();
   g_autoptr (GError) error = NULL;
-  g_assert_null (ant_scan_job_run (f->record, &f->settings, NULL, stop, cancel_at_once, stop, &error));
+  g_assert_null (ant_scan_job_run (f->record, &f->settings, stop, cancel_at_once, stop, &error));
   g_assert_error (error, G_IO_ERROR, G_IO_ERROR_CANCELLED);
 }
 
@@ -179,7 +179,7 @@ what_a_stopped_scan_found_can_be_kept (Fixture *f, gconstpointer data)
       g_autoptr (GError) error = NULL;
       StopAt at = { stop, stage };
       g_autoptr (AntScanResults) results
-          = ant_scan_job_run_partly (f->record, &f->settings, NULL, stop, cancel_at_stage, &at, &error);
+          = ant_scan_job_run_partly (f->record, &f->settings, stop, cancel_at_stage, &at, &error);
       if (expected[stage] == ANT_SCAN_NOTHING)
         {
           g_assert_null (results);
