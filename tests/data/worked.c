@@ -83,7 +83,9 @@ AntRecord *
 test_results_record (void)
 {
   AntRecord *record = test_rows (200, 0, STEP_D);
+  g_free (record->path);
   record->path = g_strdup ("/somewhere/records/ten days.txt");
+  g_free (record->sha256);
   record->sha256 = g_strdup ("5f70bf18a086007016e948b04aed3b82103a36bea41755b6cddfaf10ace3c6ef");
   AntGridOptions grid = ANT_GRID_OPTIONS_INIT;
   test_grid (record, &grid);
