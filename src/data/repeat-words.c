@@ -12,6 +12,16 @@ ant_repeat_title (const AntRepeatResults *results, gsize i)
   return g_strdup_printf (_("%zu · every %.6g d · SNR %.1f"), i + 1, results->repeat[i].period_d, results->repeat[i].snr);
 }
 
+/* Whether the coarse search shows a train above the threshold. */
+static gboolean
+has_peak (const AntRepeatResults *results)
+{
+  for (gsize i = 0; i < results->n_periods; i++)
+    if (results->period_snr[i] >= results->threshold_snr)
+      return TRUE;
+  return FALSE;
+}
+
 char *
 ant_repeat_summary (const AntRepeatResults *results)
 {
@@ -22,6 +32,8 @@ ant_repeat_summary (const AntRepeatResults *results)
                           results->n, results->threshold_snr, results->expected_at_threshold, results->n_mirrored);
   if (results->done < 1)
     g_string_append_printf (text, _(" The search was stopped after %.0f %% of its periods."), 100 * results->done);
+  if (results->n == 0 && has_peak (results))
+    g_string_append (text, _(" Peaks above the line fell below it when they were weighed exactly, or rest on a single dip."));
   return g_string_free (text, FALSE);
 }
 

@@ -3,6 +3,8 @@
 
 #include <glib/gi18n.h>
 
+#include "plot/pen.h"
+
 struct _AntFoldView
 {
   AntPlotView parent_instance;
@@ -16,7 +18,10 @@ ant_fold_view_paint (AntPlotView *plot, cairo_t *cr, const AntBox *box, const An
   const AntFoldData *data = ant_desk_get_fold_data (ant_plot_view_get_desk (plot));
   AntView view;
   if (!data)
-    return;
+    {
+      ant_pen_remark (cr, box, _("A repeat, or a period that is typed, is folded here"), theme, scale);
+      return;
+    }
   ant_dip_closeup_view (&data->closeup, &view);
   ant_dip_closeup_paint (cr, box, &data->closeup, &view, theme, scale);
 }

@@ -4,6 +4,7 @@
 #include <glib/gi18n.h>
 
 #include "data/sky-words.h"
+#include "plot/pen.h"
 
 struct _AntSunView
 {
@@ -28,6 +29,8 @@ ant_sun_view_paint (AntPlotView *plot, cairo_t *cr, const AntBox *box, const Ant
   const AntSkyPicture *picture = picture_of (plot);
   if (picture)
     ant_sun_disc_paint (cr, box, &picture->disc, theme, scale);
+  else
+    ant_pen_remark (cr, box, _("What crosses the Sun is drawn here"), theme, scale);
 }
 
 static char *

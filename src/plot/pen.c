@@ -88,6 +88,16 @@ ant_pen_text (AntPen *pen, const char *text, AntTextStyle style, double x, doubl
   pango_cairo_show_layout (pen->cr, pen->layout);
 }
 
+void
+ant_pen_remark (cairo_t *cr, const AntBox *box, const char *text, const AntTheme *theme, double scale)
+{
+  AntPen pen;
+  ant_pen_begin (&pen, cr, theme, scale);
+  ant_pen_colour (&pen, ANT_ROLE_QUIET);
+  ant_pen_text (&pen, text, ANT_TEXT_LABEL, box->x + box->width / 2, box->y + box->height / 2, 0.5, 0.5);
+  ant_pen_end (&pen);
+}
+
 double
 ant_pen_snap (const AntPen *pen, double v)
 {

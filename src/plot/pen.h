@@ -45,6 +45,9 @@ void ant_pen_text (AntPen *pen, const char *text, AntTextStyle style, double x, 
 AntBox ant_pen_text_box (AntPen *pen, const char *text, AntTextStyle style, double x, double y, double align_x,
                          double align_y);
 
+/* A quiet sentence in the middle of a box where there is nothing to paint; needs no pen. */
+void ant_pen_remark (cairo_t *cr, const AntBox *box, const char *text, const AntTheme *theme, double scale);
+
 /* Nearest edge between pixels. */
 double ant_pen_snap (const AntPen *pen, double v);
 /* Lines one pixel wide (two on a doubled display and on paper: half a unit), in the present colour. */

@@ -5,6 +5,7 @@
 
 #include "data/error.h"
 #include "data/repeat-results-text.h"
+#include "data/repeat-words.h"
 
 static AntRepeatResults
 some_results (void)
@@ -123,6 +124,23 @@ test_short_record (void)
   record->series = (AntSeries) { 0 };
 }
 
+static void
+test_peak_above_threshold (void)
+{
+  AntRepeatResults results = some_results ();
+  gsize n = results.n;
+  g_autofree char *listed = ant_repeat_summary (&results);
+  results.n = 0;
+  g_autofree char *peak = ant_repeat_summary (&results); /* its best bin has SNR 16.1 */
+  results.threshold_snr = 17;
+  g_autofree char *none = ant_repeat_summary (&results);
+  g_assert_null (strstr (listed, "Peaks above"));
+  g_assert_nonnull (strstr (peak, "Peaks above"));
+  g_assert_null (strstr (none, "Peaks above"));
+  results.n = n;
+  ant_repeat_results_clear (&results);
+}
+
 int
 main (int argc, char **argv)
 {
@@ -132,5 +150,6 @@ main (int argc, char **argv)
   g_test_add_func ("/data/repeat-results/nonsense-names-its-place", test_nonsense);
   g_test_add_func ("/data/repeat-results/impossible-settings-are-refused", test_settings);
   g_test_add_func ("/data/repeat-results/a-short-record-is-told-in-words", test_short_record);
+  g_test_add_func ("/data/repeat-results/a-peak-that-is-not-listed-is-explained", test_peak_above_threshold);
   return g_test_run ();
 }
