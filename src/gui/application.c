@@ -5,6 +5,7 @@
 
 #include "config.h"
 #include "gui/shortcuts.h"
+#include "gui/style.h"
 #include "gui/window.h"
 #include "writers/analysis-file.h"
 
@@ -96,13 +97,8 @@ ant_application_startup (GApplication *application)
   G_APPLICATION_CLASS (ant_application_parent_class)->startup (application);
   g_action_map_add_action_entries (G_ACTION_MAP (application), entries, G_N_ELEMENTS (entries), application);
   ant_shortcuts_install (GTK_APPLICATION (application));
-  gtk_icon_theme_add_resource_path (gtk_icon_theme_get_for_display (gdk_display_get_default ()),
-                                    "/org/antumbra/Antumbra/icons");
+  ant_style_install ();
   gtk_window_set_default_icon_name ("org.antumbra.Antumbra");
-  g_autoptr (GtkCssProvider) style = gtk_css_provider_new ();
-  gtk_css_provider_load_from_resource (style, "/org/antumbra/Antumbra/style.css");
-  gtk_style_context_add_provider_for_display (gdk_display_get_default (), GTK_STYLE_PROVIDER (style),
-                                              GTK_STYLE_PROVIDER_PRIORITY_APPLICATION);
 }
 
 static void

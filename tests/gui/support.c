@@ -6,6 +6,7 @@
 #include <gsl/gsl_errno.h>
 #include <math.h>
 
+#include "gui/style.h"
 #include "search/crossing-shape.h"
 
 static char *folder;
@@ -14,6 +15,7 @@ int
 test_gui_run (int *argc, char ***argv, void (*add) (void))
 {
   gtk_test_init (argc, argv, NULL);
+  ant_style_install ();
   gsl_set_error_handler_off ();
   fftw_make_planner_thread_safe ();
   folder = g_dir_make_tmp (NULL, NULL);
