@@ -90,7 +90,7 @@ static gsize
 cut_slices (Batch *batch)
 {
   const char *start = batch->buffer, *end = batch->buffer + batch->filled;
-  const char *last = batch->filled ? memrchr (start, '\n', batch->filled) : NULL;
+  const char *last = start && batch->filled ? memrchr (start, '\n', batch->filled) : NULL;
   end = last ? last + 1 : start;
   for (batch->n_slices = 0; start < end; batch->n_slices++)
     {
