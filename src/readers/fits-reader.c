@@ -7,6 +7,7 @@
 #include <string.h>
 
 #include "data/error.h"
+#include "readers/fits-headers.h"
 #include "readers/fits-table.h"
 #include "readers/fits-time.h"
 #include "readers/table-record.h"
@@ -46,11 +47,16 @@ input_open (Input *input, AntByteSource *source, GCancellable *cancellable, GErr
   if (path)
     {
       n = ant_byte_source_file_size (source);
+      g_autoptr (GMappedFile) map = g_mapped_file_new (path, FALSE, error);
+      if (!map || !ant_fits_headers_check (name, g_mapped_file_get_contents (map), g_mapped_file_get_length (map), error))
+        return FALSE;
       fits_open_diskfile (&input->file, path, READONLY, &status);
     }
   else
     {
       if (!(input->bytes = ant_byte_source_take (source, &n, cancellable, error)))
+        return FALSE;
+      if (!ant_fits_headers_check (name, input->bytes, n, error))
         return FALSE;
       input->n_bytes = n;
       fits_open_memfile (&input->file, "memory", READONLY, &input->bytes, &input->n_bytes, 0, NULL, &status);

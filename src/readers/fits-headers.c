@@ -1,0 +1,105 @@
+/* fits-headers.c - the headers of a FITS file, walked from one to the next. */
+#include "readers/fits-headers.h"
+
+#include <glib/gi18n.h>
+#include <string.h>
+
+#include "data/error.h"
+
+#define BLOCK 2880
+#define CARD 80
+#define MOST_FIELDS 999
+#define MOST_AXES 999
+
+typedef struct
+{
+  gint64 bitpix, n_axes, pcount, gcount, fields;
+  guint64 size; /* product of the axes; 0 without any */
+} Header;
+
+/* The whole number of a card "KEY     =     number"; FALSE if it is of another key. */
+static gboolean
+card_is (const char *card, const char *key, gint64 *number)
+{
+  char text[CARD - 9];
+  gsize length = strlen (key);
+  if (strncmp (card, key, length) != 0 || strspn (card + length, " ") < 8 - length || card[8] != '=')
+    return FALSE;
+  memcpy (text, card + 10, CARD - 10);
+  text[CARD - 10] = 0;
+  *number = g_ascii_strtoll (text, NULL, 10);
+  return TRUE;
+}
+
+static void
+take_axis (Header *header, gint64 axis, gint64 length)
+{
+  if (!g_uint64_checked_mul (&header->size, axis == 1 ? 1 : header->size, (guint64) MAX (length, 0)))
+    header->size = G_MAXUINT64;
+}
+
+/* Read the cards up to END. Returns the bytes they take, 0 if there is no END. */
+static gsize
+read_header (const char *bytes, gsize n, Header *header)
+{
+  *header = (Header) { .gcount = 1 };
+  for (gsize at = 0; at + CARD <= n; at += CARD)
+    {
+      const char *card = bytes + at;
+      gint64 number;
+      if (strncmp (card, "END     ", 8) == 0)
+        return at + CARD;
+      if (card_is (card, "BITPIX", &header->bitpix) || card_is (card, "NAXIS", &header->n_axes)
+          || card_is (card, "PCOUNT", &header->pcount) || card_is (card, "GCOUNT", &header->gcount)
+          || card_is (card, "TFIELDS", &header->fields))
+        continue;
+      for (gint64 axis = 1; axis <= MIN (header->n_axes, MOST_AXES) && strncmp (card, "NAXIS", 5) == 0; axis++)
+        {
+          char key[16];
+          g_snprintf (key, sizeof key, "NAXIS%d", (int) axis);
+          if (card_is (card, key, &number))
+            take_axis (header, axis, number);
+        }
+    }
+  return 0;
+}
+
+/* Bytes of the data behind a header, or FALSE if no file can hold them. */
+static gboolean
+data_size (const Header *header, guint64 *size)
+{
+  *size = 0;
+  return header->n_axes <= 0
+         || (header->pcount >= 0 && header->gcount >= 0 && ABS (header->bitpix) <= 64
+             && g_uint64_checked_add (size, header->size, (guint64) header->pcount)
+             && g_uint64_checked_mul (size, *size, (guint64) header->gcount)
+             && g_uint64_checked_mul (size, *size, (guint64) ABS (header->bitpix) / 8));
+}
+
+static guint64
+blocks (guint64 n)
+{
+  return (n / BLOCK + (n % BLOCK != 0)) * BLOCK;
+}
+
+gboolean
+ant_fits_headers_check (const char *name, const char *bytes, gsize n, GError **error)
+{
+  gsize at = 0;
+  for (int hdu = 0; n - at >= CARD; hdu++)
+    {
+      Header header;
+      guint64 data;
+      gsize cards = read_header (bytes + at, n - at, &header);
+      if (header.fields < 0 || header.fields > MOST_FIELDS)
+        {
+          g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: HDU %d: found TFIELDS %lld, expected 0 to 999"), name, hdu,
+                       (long long) header.fields);
+          return FALSE;
+        }
+      if (!cards || !data_size (&header, &data) || blocks (cards) > n - at || blocks (data) > n - at - blocks (cards))
+        break;
+      at += blocks (cards) + blocks (data);
+    }
+  return TRUE;
+}
