@@ -122,6 +122,11 @@ ant_fits_headers_check (const char *name, const char *bytes, gsize n, GError **e
       Header header;
       guint64 data;
       gsize cards = read_header (bytes + at, n - at, &header);
+      if (!cards && strncmp (bytes + at, "XTENSION", 8) == 0)
+        {
+          g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: HDU %d: its header has no END"), name, hdu);
+          return FALSE;
+        }
       if (cards && *header.wrong)
         {
           g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: HDU %d: found a number in %s that no header has"), name, hdu, header.wrong);
