@@ -89,7 +89,7 @@ the_record_is_named_from_the_file (void)
 {
   g_autoptr (AntAnalysis) analysis = test_worked_analysis ();
   const char *const at[][2] = { { "/somewhere/records/a.antumbra", "\"path\" : \"ten days.txt\"" },
-                                { "/somewhere/work/of/a.antumbra", "\"path\" : \"../../records/ten days.txt\"" },
+                                { "/somewhere/notes/of/a.antumbra", "\"path\" : \"../../records/ten days.txt\"" },
                                 { "/elsewhere/a.antumbra", "\"path\" : \"/somewhere/records/ten days.txt\"" } };
   for (gsize i = 0; i < G_N_ELEMENTS (at); i++)
     {
