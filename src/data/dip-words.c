@@ -26,6 +26,16 @@ ant_facts_add (GPtrArray *facts, const char *label, const char *value)
   g_ptr_array_add (facts, fact);
 }
 
+void
+ant_facts_add_format (GPtrArray *facts, const char *label, const char *format, ...)
+{
+  va_list arguments;
+  va_start (arguments, format);
+  g_autofree char *value = g_strdup_vprintf (format, arguments);
+  va_end (arguments);
+  ant_facts_add (facts, label, value);
+}
+
 static void
 add_taking (GPtrArray *facts, const char *label, char *value)
 {

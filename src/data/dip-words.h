@@ -19,6 +19,7 @@ typedef struct
 void ant_fact_free (gpointer fact); /* a GDestroyNotify */
 /* Both are copied. */
 void ant_facts_add (GPtrArray *facts, const char *label, const char *value);
+void ant_facts_add_format (GPtrArray *facts, const char *label, const char *format, ...) G_GNUC_PRINTF (3, 4);
 
 /* All texts are the caller's to free. */
 char *ant_number_words (double value, int decimals);           /* a true minus sign */

@@ -33,3 +33,14 @@ ant_status_to_error (AntStatus status, const char *what, GError **error)
                  status_sentence (status));
   return FALSE;
 }
+
+gboolean
+ant_refuse (GError **error, const char *format, ...)
+{
+  va_list arguments;
+  va_start (arguments, format);
+  g_autofree char *what = g_strdup_vprintf (format, arguments);
+  va_end (arguments);
+  g_set_error_literal (error, ANT_ERROR, ANT_ERROR_READ, what);
+  return FALSE;
+}

@@ -20,3 +20,6 @@ typedef enum
 /* Set *error from a status met while doing `what` ("fitting the noise of chunk 3"); returns FALSE, for `return`.
  * ANT_OK sets nothing and returns TRUE. ANT_STOPPED becomes G_IO_ERROR_CANCELLED. */
 gboolean ant_status_to_error (AntStatus status, const char *what, GError **error);
+
+/* Set *error to ANT_ERROR_READ with a sentence; returns FALSE, for `return`. */
+gboolean ant_refuse (GError **error, const char *format, ...) G_GNUC_PRINTF (2, 3);

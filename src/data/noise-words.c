@@ -4,18 +4,6 @@
 #include <glib/gi18n.h>
 #include <math.h>
 
-static void add (GPtrArray *facts, const char *label, const char *format, ...) G_GNUC_PRINTF (3, 4);
-
-static void
-add (GPtrArray *facts, const char *label, const char *format, ...)
-{
-  va_list arguments;
-  va_start (arguments, format);
-  g_autofree char *value = g_strdup_vprintf (format, arguments);
-  va_end (arguments);
-  ant_facts_add (facts, label, value);
-}
-
 static const char *
 role_title (const AntNoisePart *part)
 {
@@ -40,11 +28,11 @@ ant_noise_part_facts (const AntNoiseModel *model)
       const AntNoisePart *part = &model->part[i];
       g_autofree char *time = ant_length_words (part->time_d);
       if (part->kind == ANT_OSCILLATOR)
-        add (facts, role_title (part), _("%.3g ppm, period %s, quality %.2g"), part->rms_ppm, time, part->quality);
+        ant_facts_add_format (facts, role_title (part), _("%.3g ppm, period %s, quality %.2g"), part->rms_ppm, time, part->quality);
       else
-        add (facts, role_title (part), _("%.3g ppm, forgotten in %s"), part->rms_ppm, time);
+        ant_facts_add_format (facts, role_title (part), _("%.3g ppm, forgotten in %s"), part->rms_ppm, time);
     }
-  add (facts, _("White"), _("%.3g ppm per sample"), model->white_ppm);
+  ant_facts_add_format (facts, _("White"), _("%.3g ppm per sample"), model->white_ppm);
   return facts;
 }
 
@@ -54,15 +42,15 @@ ant_noise_health_facts (const AntScanResults *results, gsize index)
   const AntChunk *chunk = &results->chunk[index];
   const AntChunkHealth *health = &chunk->health;
   GPtrArray *facts = g_ptr_array_new_with_free_func (ant_fact_free);
-  add (facts, _("Forecast errors"), _("%.3f of their stated size (1 if the model holds)"), health->innovation_rms);
-  add (facts, _("Neighbours"), _("correlated by %.3f (0 if the model holds)"), health->lag1);
+  ant_facts_add_format (facts, _("Forecast errors"), _("%.3f of their stated size (1 if the model holds)"), health->innovation_rms);
+  ant_facts_add_format (facts, _("Neighbours"), _("correlated by %.3f (0 if the model holds)"), health->lag1);
   if (!isnan (health->loudest))
-    add (facts, _("Loudest, quietest"), _("%.2f, %.2f of the stated size"), health->loudest, health->quietest);
-  add (facts, _("Samples"), _("%zu, %zu spikes left out"), health->observed, health->spikes);
-  add (facts, _("Mirror"), _("dips %zu, brightenings %zu, of 9 h and less"), results->n_mirror_dips,
+    ant_facts_add_format (facts, _("Loudest, quietest"), _("%.2f, %.2f of the stated size"), health->loudest, health->quietest);
+  ant_facts_add_format (facts, _("Samples"), _("%zu, %zu spikes left out"), health->observed, health->spikes);
+  ant_facts_add_format (facts, _("Mirror"), _("dips %zu, brightenings %zu, of 9 h and less"), results->n_mirror_dips,
        results->n_mirrored);
   for (guint i = 0; i < MIN (results->said->len, 12); i++)
-    add (facts, i == 0 ? _("Remarks") : "", "%s", (const char *) g_ptr_array_index (results->said, i));
+    ant_facts_add_format (facts, i == 0 ? _("Remarks") : "", "%s", (const char *) g_ptr_array_index (results->said, i));
   return facts;
 }
 

@@ -8,37 +8,25 @@
 
 #define MOST_COLUMNS 16
 
-static void add (GPtrArray *facts, const char *label, const char *format, ...) G_GNUC_PRINTF (3, 4);
-
-static void
-add (GPtrArray *facts, const char *label, const char *format, ...)
-{
-  va_list arguments;
-  va_start (arguments, format);
-  g_autofree char *value = g_strdup_vprintf (format, arguments);
-  va_end (arguments);
-  ant_facts_add (facts, label, value);
-}
-
 static void
 add_columns (GPtrArray *facts, const AntRecord *record)
 {
   const AntTimeReference *time = &record->time;
-  add (facts, _("Time"), _("%s, %s%s"), record->time_name, ant_time_scale_name (time->scale),
+  ant_facts_add_format (facts, _("Time"), _("%s, %s%s"), record->time_name, ant_time_scale_name (time->scale),
        time->scale_assumed ? _(" (assumed)") : "");
   if (time->place)
-    add (facts, _("Clock at"), "%s", time->place);
-  add (facts, _("Value"), "%s%s%s", record->value_name, record->value_unit ? ", " : "",
+    ant_facts_add_format (facts, _("Clock at"), "%s", time->place);
+  ant_facts_add_format (facts, _("Value"), "%s%s%s", record->value_name, record->value_unit ? ", " : "",
        record->value_unit ? record->value_unit : "");
-  add (facts, _("Error"), "%s", record->error_name ? record->error_name : _("none"));
-  add (facts, _("Quality"), "%s", record->quality_name ? record->quality_name : _("none"));
+  ant_facts_add_format (facts, _("Error"), "%s", record->error_name ? record->error_name : _("none"));
+  ant_facts_add_format (facts, _("Quality"), "%s", record->quality_name ? record->quality_name : _("none"));
   for (guint i = 0; i < MIN (record->columns->len, MOST_COLUMNS); i++)
     {
       g_autofree char *words = ant_column_words (g_ptr_array_index (record->columns, i), record->n_rows);
-      add (facts, i ? "" : _("Further"), "%s", words);
+      ant_facts_add_format (facts, i ? "" : _("Further"), "%s", words);
     }
   if (record->columns->len > MOST_COLUMNS)
-    add (facts, "", _("and %u more"), record->columns->len - MOST_COLUMNS);
+    ant_facts_add_format (facts, "", _("and %u more"), record->columns->len - MOST_COLUMNS);
 }
 
 char *
@@ -58,20 +46,20 @@ add_grid (GPtrArray *facts, const AntRecord *record, const AntRecordSummary *sum
   g_autofree char *cadence = ant_length_words (record->cadence_d), *exposure = ant_length_words (record->exposure_d);
   g_autofree char *jitter = ant_length_words (summary->jitter_most_d), *gap = ant_length_words (summary->longest_gap_d);
   if (summary->jitter_most_d * ANT_SECONDS_PER_DAY < 0.001)
-    add (facts, _("Cadence"), _("%s, every stamp on the grid"), cadence);
+    ant_facts_add_format (facts, _("Cadence"), _("%s, every stamp on the grid"), cadence);
   else
-    add (facts, _("Cadence"), _("%s, stamps within %s of the grid"), cadence, jitter);
-  add (facts, _("Exposure"), record->exposure_known ? "%s" : _("unknown, %s used"), exposure);
-  add (facts, _("Stamps mark"), "%s", _ (places[record->stamp]));
-  add (facts, _("Samples"), _("%zu of %zu places, duty cycle %.1f %%"), summary->n_observed,
+    ant_facts_add_format (facts, _("Cadence"), _("%s, stamps within %s of the grid"), cadence, jitter);
+  ant_facts_add_format (facts, _("Exposure"), record->exposure_known ? "%s" : _("unknown, %s used"), exposure);
+  ant_facts_add_format (facts, _("Stamps mark"), "%s", _ (places[record->stamp]));
+  ant_facts_add_format (facts, _("Samples"), _("%zu of %zu places, duty cycle %.1f %%"), summary->n_observed,
        summary->n_places, 100.0 * (double) summary->n_observed / (double) summary->n_places);
   if (record->gaps->len > 0)
-    add (facts, _("Gaps"), _("%u, the longest %s"), record->gaps->len, gap);
-  add (facts, _("Level"), _("%.8g%s%s, the median: 0 ppm"), record->median, record->value_unit ? " " : "",
+    ant_facts_add_format (facts, _("Gaps"), _("%u, the longest %s"), record->gaps->len, gap);
+  ant_facts_add_format (facts, _("Level"), _("%.8g%s%s, the median: 0 ppm"), record->median, record->value_unit ? " " : "",
        record->value_unit ? record->value_unit : "");
   g_autofree char *distance = ant_record_distance_words (record);
-  add (facts, _("Distance"), "%s", distance);
-  add (facts, _("Scatter"), _("%.4g ppm, %.4g ppm from sample to sample"), summary->scatter_ppm,
+  ant_facts_add_format (facts, _("Distance"), "%s", distance);
+  ant_facts_add_format (facts, _("Scatter"), _("%.4g ppm, %.4g ppm from sample to sample"), summary->scatter_ppm,
        summary->sample_scatter_ppm);
 }
 
@@ -79,17 +67,17 @@ GPtrArray *
 ant_record_facts (const AntRecord *record, const AntRecordSummary *summary)
 {
   GPtrArray *facts = g_ptr_array_new_with_free_func (ant_fact_free);
-  add (facts, _("Format"), "%s%s%s", record->format, record->part ? ", " : "", record->part ? record->part : "");
+  ant_facts_add_format (facts, _("Format"), "%s%s%s", record->format, record->part ? ", " : "", record->part ? record->part : "");
   if (summary->has_times)
     {
       g_autofree char *first = ant_instant_words (record, summary->first_d),
                       *last = ant_instant_words (record, summary->last_d);
-      add (facts, _("From"), "%s", first);
-      add (facts, _("To"), "%s", last);
+      ant_facts_add_format (facts, _("From"), "%s", first);
+      ant_facts_add_format (facts, _("To"), "%s", last);
     }
   add_columns (facts, record);
   add_grid (facts, record, summary);
-  add (facts, "SHA-256", "%.16s…", record->sha256 ? record->sha256 : "");
+  ant_facts_add_format (facts, "SHA-256", "%.16s…", record->sha256 ? record->sha256 : "");
   return facts;
 }
 
@@ -99,7 +87,7 @@ ant_record_left_out (const AntRecordSummary *summary)
   GPtrArray *facts = g_ptr_array_new_with_free_func (ant_fact_free);
   for (unsigned bit = 0; bit < ANT_N_FLAGS; bit++)
     if (summary->n_flagged[bit] > 0)
-      add (facts, ant_flag_name (bit), _("%zu rows\n%s"), summary->n_flagged[bit], ant_flag_description (bit));
+      ant_facts_add_format (facts, ant_flag_name (bit), _("%zu rows\n%s"), summary->n_flagged[bit], ant_flag_description (bit));
   return facts;
 }
 

@@ -37,18 +37,6 @@ ant_repeat_summary (const AntRepeatResults *results)
   return g_string_free (text, FALSE);
 }
 
-static void add (GPtrArray *facts, const char *label, const char *format, ...) G_GNUC_PRINTF (3, 4);
-
-static void
-add (GPtrArray *facts, const char *label, const char *format, ...)
-{
-  va_list arguments;
-  va_start (arguments, format);
-  g_autofree char *value = g_strdup_vprintf (format, arguments);
-  va_end (arguments);
-  ant_facts_add (facts, label, value);
-}
-
 GPtrArray *
 ant_repeat_facts (const AntRepeatResults *results, gsize i)
 {
@@ -62,14 +50,14 @@ ant_repeat_facts (const AntRepeatResults *results, gsize i)
     g_string_append_printf (aliases, _("%s%.5g d: %.1f"), k ? ", " : "", repeat->alias[k].period_d, repeat->alias[k].snr);
   for (gsize e = 0; e < repeat->n_events; e++)
     listed += repeat->event[e].dip > 0;
-  add (facts, _("Period"), _("%.7g ± %.2g d"), repeat->period_d, repeat->period_sigma_d);
-  add (facts, _("Length"), _("%.2f h"), repeat->duration_d * ANT_HOURS_PER_DAY);
-  add (facts, _("Depth"), _("%.1f ± %.1f ppm"), repeat->depth_ppm, repeat->depth_sigma_ppm);
-  add (facts, _("Train SNR"), _("%.1f; without the largest event %.1f"), repeat->snr, repeat->snr_without_largest);
-  add (facts, _("By chance"), _("%.2g expected"), repeat->expected_false);
-  add (facts, _("Events"), _("%zu observed, %zu of them in the list of dips"), repeat->n_observed, listed);
-  add (facts, _("Odd and even"), _("differ by %.1f sigma"), repeat->odd_even);
-  add (facts, _("Scatter"), _("χ² %.1f for %zu"), repeat->chi2, repeat->n_observed ? repeat->n_observed - 1 : 0);
+  ant_facts_add_format (facts, _("Period"), _("%.7g ± %.2g d"), repeat->period_d, repeat->period_sigma_d);
+  ant_facts_add_format (facts, _("Length"), _("%.2f h"), repeat->duration_d * ANT_HOURS_PER_DAY);
+  ant_facts_add_format (facts, _("Depth"), _("%.1f ± %.1f ppm"), repeat->depth_ppm, repeat->depth_sigma_ppm);
+  ant_facts_add_format (facts, _("Train SNR"), _("%.1f; without the largest event %.1f"), repeat->snr, repeat->snr_without_largest);
+  ant_facts_add_format (facts, _("By chance"), _("%.2g expected"), repeat->expected_false);
+  ant_facts_add_format (facts, _("Events"), _("%zu observed, %zu of them in the list of dips"), repeat->n_observed, listed);
+  ant_facts_add_format (facts, _("Odd and even"), _("differ by %.1f sigma"), repeat->odd_even);
+  ant_facts_add_format (facts, _("Scatter"), _("χ² %.1f for %zu"), repeat->chi2, repeat->n_observed ? repeat->n_observed - 1 : 0);
   ant_facts_add (facts, _("Other periods, SNR"), aliases->str);
   return facts;
 }

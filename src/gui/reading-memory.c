@@ -1,25 +1,11 @@
 /* reading-memory.c - the key file of choices about reading: a group for each kind of file. */
 #include "gui/reading-memory.h"
 
-#include <glib/gstdio.h>
+#include "gui/config-file.h"
 
+#define FILE_NAME "reading.ini"
 #define KIND_KEY "kind"
 #define FILL_KEY "fill"
-
-static char *
-file_path (void)
-{
-  return g_build_filename (g_get_user_config_dir (), "antumbra", "reading.ini", NULL);
-}
-
-static GKeyFile *
-load (void)
-{
-  GKeyFile *file = g_key_file_new ();
-  g_autofree char *path = file_path ();
-  g_key_file_load_from_file (file, path, G_KEY_FILE_NONE, NULL);
-  return file;
-}
 
 /* A kind holds TABs and any words: its sum names the group, the kind itself stands in it. */
 static char *
@@ -32,7 +18,7 @@ group_of (const char *kind)
 gboolean
 ant_reading_memory_recall (const char *kind, AntReadingChoices *choices)
 {
-  g_autoptr (GKeyFile) file = load ();
+  g_autoptr (GKeyFile) file = ant_config_load (FILE_NAME);
   g_autofree char *group = group_of (kind);
   gsize n_fills = 0;
   if (!g_key_file_has_group (file, group))
@@ -53,9 +39,8 @@ ant_reading_memory_recall (const char *kind, AntReadingChoices *choices)
 void
 ant_reading_memory_keep (const char *kind, const AntReadingChoices *choices)
 {
-  g_autoptr (GKeyFile) file = load ();
-  g_autofree char *group = group_of (kind), *path = file_path (), *folder = g_path_get_dirname (path);
-  g_autoptr (GError) error = NULL;
+  g_autoptr (GKeyFile) file = ant_config_load (FILE_NAME);
+  g_autofree char *group = group_of (kind);
   AntReadingChoices none = { 0 }, copy;
   g_key_file_remove_group (file, group, NULL);
   ant_reading_choices_copy (choices, &copy);
@@ -69,7 +54,5 @@ ant_reading_memory_keep (const char *kind, const AntReadingChoices *choices)
         g_key_file_set_double_list (file, group, FILL_KEY, (double *) (void *) copy.fill_values->data, copy.fill_values->len);
     }
   ant_reading_choices_clear (&copy);
-  g_mkdir_with_parents (folder, 0700);
-  if (!g_key_file_save_to_file (file, path, &error))
-    g_debug ("%s", error->message);
+  ant_config_save (file, FILE_NAME);
 }

@@ -32,20 +32,6 @@ static const struct
   { " month months ", 365.242198781 * 86400.0 / 12.0 },
 };
 
-static gboolean
-refuse (GError **error, const char *format, ...) G_GNUC_PRINTF (2, 3);
-
-static gboolean
-refuse (GError **error, const char *format, ...)
-{
-  va_list arguments;
-  va_start (arguments, format);
-  g_autofree char *what = g_strdup_vprintf (format, arguments);
-  va_end (arguments);
-  g_set_error_literal (error, ANT_ERROR, ANT_ERROR_READ, what);
-  return FALSE;
-}
-
 /* Seconds of the unit before " since "; 0 if it is none. *date stands at what follows. */
 static double
 unit_seconds (const char *units, const char **date)
@@ -222,7 +208,7 @@ find_scale (const char *calendar, const char *units_metadata, AntTimeScale named
     }
   if (g_ascii_strcasecmp (calendar, "standard") && g_ascii_strcasecmp (calendar, "gregorian")
       && g_ascii_strcasecmp (calendar, "proleptic_gregorian"))
-    return refuse (error, _("found the calendar “%s”, expected one that clocks keep: standard, proleptic_gregorian, utc or tai"),
+    return ant_refuse (error, _("found the calendar “%s”, expected one that clocks keep: standard, proleptic_gregorian, utc or tai"),
                    calendar);
   if (units_metadata && strstr (units_metadata, "leap_seconds: utc"))
     time->scale_assumed = FALSE;
@@ -245,7 +231,7 @@ ant_cf_time_parse (const char *units, const char *calendar, const char *units_me
   *time = (AntCfTime){ .unit_s = unit_s };
   if (unit_s <= 0.0 || !parse_reference (date, g_ascii_strcasecmp (calendar, "standard") == 0 || g_ascii_strcasecmp (calendar, "gregorian") == 0,
                                          &reference))
-    return refuse (error, _("found the time unit “%s”, expected one such as “days since 2003-02-25 00:00:00”"), units);
+    return ant_refuse (error, _("found the time unit “%s”, expected one such as “days since 2003-02-25 00:00:00”"), units);
   if (!find_scale (calendar, units_metadata, reference.scale, time, error))
     return FALSE;
   if (chosen_scale)
@@ -264,9 +250,9 @@ ant_cf_time_parse (const char *units, const char *calendar, const char *units_me
   time->epoch_second = reference.second - (reference.leap ? 0.0 : days * ANT_SECONDS_PER_DAY);
   length_d = ant_time_elapsed_d (time->scale, time->epoch_jd, 0.0, time->epoch_jd + 1.0, 0.0);
   if (reference.leap && (!time->counts_leaps || time->epoch_second >= length_d * ANT_SECONDS_PER_DAY))
-    return refuse (error, _("found the time unit “%s”, expected no second 60 but a leap second's in the calendar utc"), units);
+    return ant_refuse (error, _("found the time unit “%s”, expected no second 60 but a leap second's in the calendar utc"), units);
   if (time->counts_leaps && !(time->epoch_jd >= 2436204.5)) /* 1958-01-01 */
-    return refuse (error, _("found the time unit “%s” in the calendar utc, expected a date from %d on"), units, UTC_FIRST_YEAR);
+    return ant_refuse (error, _("found the time unit “%s” in the calendar utc, expected a date from %d on"), units, UTC_FIRST_YEAR);
   return TRUE;
 }
 

@@ -12,20 +12,6 @@
 #define UNPACK_ALLOWANCE (64 * 1024 * 1024)
 #define MOST_ROWS 200000000
 
-static gboolean
-refuse (GError **error, const char *format, ...) G_GNUC_PRINTF (2, 3);
-
-static gboolean
-refuse (GError **error, const char *format, ...)
-{
-  va_list arguments;
-  va_start (arguments, format);
-  g_autofree char *what = g_strdup_vprintf (format, arguments);
-  va_end (arguments);
-  g_set_error_literal (error, ANT_ERROR, ANT_ERROR_READ, what);
-  return FALSE;
-}
-
 static const AntNetcdfVariable *
 variable_at (const AntNetcdfContents *contents, guint i)
 {
@@ -178,7 +164,7 @@ static gboolean
 refuse_open (const AntNetcdfVariable *variable, const AntNetcdfDimension *open, GError **error)
 {
   const char *slash = strrchr (open->name, '/'), *bare = slash ? slash + 1 : open->name;
-  return refuse (error, _("found %s with %zu places along %s, expected one of them to be chosen: --index %s=1 (to %zu)"),
+  return ant_refuse (error, _("found %s with %zu places along %s, expected one of them to be chosen: --index %s=1 (to %zu)"),
                  variable->name, (gsize) open->length, bare, bare, (gsize) open->length);
 }
 
@@ -215,7 +201,7 @@ add_columns (const AntNetcdfContents *contents, const AntReadingChoices *choices
   if (columns->n_columns < 2 && open_variable >= 0)
     return refuse_open (variable_at (contents, (guint) open_variable), open_dimension, error);
   if (columns->n_columns < 2)
-    return refuse (error, _("found %u variables of numbers along %s, expected a time and a value"), columns->n_columns,
+    return ant_refuse (error, _("found %u variables of numbers along %s, expected a time and a value"), columns->n_columns,
                    dimension_at (contents, columns->row_dimension)->name);
   return TRUE;
 }
@@ -245,7 +231,7 @@ find_rows (const AntNetcdfContents *contents, const AntReadingChoices *choices, 
   if (row < 0)
     row = longest_dimension (contents);
   if (row < 0)
-    return refuse (error, _("found no variable of numbers in the NetCDF file, expected a time and a value"));
+    return ant_refuse (error, _("found no variable of numbers in the NetCDF file, expected a time and a value"));
   columns->row_dimension = (guint) row;
   columns->bounds = columns->time_column = -1;
   if (columns->time_variable >= 0)
@@ -267,13 +253,13 @@ ant_netcdf_columns_choose (const AntNetcdfContents *contents, const AntReadingCh
     return NULL;
   if (rows->length > MOST_ROWS || rows->length * 8 * columns->n_columns > most)
     {
-      refuse (error, _("found %u variables that claim %zu places along %s, expected no more than a file of %zu bytes can hold"),
+      ant_refuse (error, _("found %u variables that claim %zu places along %s, expected no more than a file of %zu bytes can hold"),
               columns->n_columns, (gsize) rows->length, rows->name, (gsize) file_bytes);
       return NULL;
     }
   if (rows->length < 2)
     {
-      refuse (error, _("found %zu places along %s, expected a record of many"), (gsize) rows->length, rows->name);
+      ant_refuse (error, _("found %zu places along %s, expected a record of many"), (gsize) rows->length, rows->name);
       return NULL;
     }
   columns->n_rows = (gsize) rows->length;
