@@ -1,14 +1,8 @@
-/* pen.c - lines, text and shapes. */
+/* pen.c - text, hairs and the shapes of dips. */
 #include "plot/pen.h"
 #include <glib.h>
 #include <math.h>
 #include <pango/pangocairo.h>
-
-/* cairo's cost grows faster than the length of a path; pieces of these lengths were the cheapest of 8 to 256. */
-#define PIECE 32
-#define MANY 256 /* points: from here up cost matters */
-#define RAGGED 3
-#define BOXES 16
 
 void
 ant_pen_begin (AntPen *pen, cairo_t *cr, const AntTheme *theme, double scale)
@@ -120,30 +114,6 @@ ant_pen_fill_box (AntPen *pen, const AntBox *box)
 }
 
 void
-ant_pen_add_box (AntPen *pen, double left, double top, double right, double foot)
-{
-  cairo_rectangle (pen->cr, left, top, right - left, foot - top);
-  if (++pen->n_added % BOXES == 0)
-    cairo_fill (pen->cr);
-}
-
-void
-ant_pen_add_dot (AntPen *pen, double x, double y, double r)
-{
-  cairo_new_sub_path (pen->cr);
-  cairo_arc (pen->cr, x, y, r, 0, 2 * G_PI);
-  if (++pen->n_added % BOXES == 0)
-    cairo_fill (pen->cr);
-}
-
-void
-ant_pen_fill_added (AntPen *pen)
-{
-  cairo_fill (pen->cr);
-  pen->n_added = 0;
-}
-
-void
 ant_pen_across (AntPen *pen, double x0, double x1, double y)
 {
   double hair = ant_pen_hair (pen), top = floor (y * pen->scale) / pen->scale;
@@ -175,106 +145,6 @@ ant_pen_clip (AntPen *pen, const AntBox *box)
   cairo_save (pen->cr);
   cairo_rectangle (pen->cr, box->x, box->y, box->width, box->height);
   cairo_clip (pen->cr);
-}
-
-/* A line that runs up and down much farther than it runs along is a ragged area: columns of pixels show it as well as
- * antialiased strokes do, at a fraction of their cost. */
-static gboolean
-is_ragged (size_t n, const double *x, const double *y)
-{
-  double travel = 0;
-  for (size_t i = 1; i < n; i++)
-    travel += isnan (y[i]) || isnan (y[i - 1]) ? 0 : fabs (y[i] - y[i - 1]);
-  return n > MANY && x[n - 1] > x[0] && travel > RAGGED * (x[n - 1] - x[0]);
-}
-
-/* Where the line runs within each column of device pixels, from the column of x[0]. */
-static void
-spread_segment (AntPen *pen, double first, size_t n_columns, double x0, double y0, double x1, double y1,
-                AntExtent *column)
-{
-  double slope = x1 > x0 ? (y1 - y0) / (x1 - x0) : 0;
-  double from = CLAMP (floor (x0 * pen->scale) - first, 0, (double) n_columns - 1);
-  double to = CLAMP (floor (x1 * pen->scale) - first, from, (double) n_columns - 1);
-  for (size_t c = (size_t) from; c <= (size_t) to; c++)
-    {
-      double left = MAX (x0, (first + (double) c) / pen->scale), right = MIN (x1, (first + (double) c + 1) / pen->scale);
-      double a = y0 + slope * (left - x0), b = x1 > x0 ? y0 + slope * (right - x0) : y1;
-      column[c].low = MIN (column[c].low, (float) MIN (a, b));
-      column[c].high = MAX (column[c].high, (float) MAX (a, b));
-    }
-}
-
-static void
-fill_columns (AntPen *pen, size_t n, const double *x, const double *y, double width)
-{
-  double first = floor (x[0] * pen->scale), pixel = 1 / pen->scale;
-  size_t n_columns = (size_t) (floor (x[n - 1] * pen->scale) - first) + 1;
-  g_autofree AntExtent *column = g_new (AntExtent, n_columns);
-  for (size_t c = 0; c < n_columns; c++)
-    column[c] = (AntExtent) { INFINITY, -INFINITY };
-  for (size_t i = 0; i < n; i++)
-    if (!isnan (y[i]))
-      {
-        gboolean joined = i + 1 < n && !isnan (y[i + 1]);
-        spread_segment (pen, first, n_columns, x[i], y[i], x[joined ? i + 1 : i], y[joined ? i + 1 : i], column);
-      }
-  for (size_t c = 0; c < n_columns; c++)
-    if (column[c].low <= column[c].high)
-      {
-        double top = ant_pen_snap (pen, (double) column[c].low - width / 2), left = (first + (double) c) * pixel;
-        double foot = MAX (ant_pen_snap (pen, (double) column[c].high + width / 2), top + pixel);
-        ant_pen_add_box (pen, left, top, left + pixel, foot);
-      }
-  ant_pen_fill_added (pen);
-}
-
-static void
-stroke_line (AntPen *pen, size_t n, const double *x, const double *y, double width)
-{
-  cairo_t *cr = pen->cr;
-  gboolean many = n > MANY; /* then no eye sees how its corners are made */
-  cairo_save (cr);
-  cairo_set_antialias (cr, many ? CAIRO_ANTIALIAS_FAST : CAIRO_ANTIALIAS_DEFAULT);
-  cairo_set_line_width (cr, width);
-  cairo_set_line_join (cr, many ? CAIRO_LINE_JOIN_BEVEL : CAIRO_LINE_JOIN_ROUND);
-  cairo_set_line_cap (cr, CAIRO_LINE_CAP_ROUND);
-  size_t in_path = 0;
-  for (size_t i = 0; i < n; i++)
-    if (isnan (y[i]))
-      {
-        cairo_stroke (cr);
-        in_path = 0;
-      }
-    else if (in_path == 0)
-      {
-        cairo_move_to (cr, x[i], y[i]);
-        if (i + 1 == n || isnan (y[i + 1])) /* alone: the round cap makes it a dot */
-          cairo_line_to (cr, x[i], y[i]);
-        in_path = 1;
-      }
-    else
-      {
-        cairo_line_to (cr, x[i], y[i]);
-        if (many && ++in_path % PIECE == 0)
-          {
-            cairo_stroke (cr);
-            cairo_move_to (cr, x[i], y[i]);
-          }
-      }
-  cairo_stroke (cr);
-  cairo_restore (cr);
-}
-
-void
-ant_pen_polyline (AntPen *pen, size_t n, const double *x, const double *y, double width)
-{
-  if (n == 0)
-    return;
-  if (cairo_get_dash_count (pen->cr) == 0 && is_ragged (n, x, y))
-    fill_columns (pen, n, x, y, width);
-  else
-    stroke_line (pen, n, x, y, width);
 }
 
 static void

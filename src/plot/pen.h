@@ -16,7 +16,7 @@ typedef struct
   const AntTheme *theme;
   double scale;        /* pixels of the device per unit: 2 on a doubled display, 4 or so for paper */
   PangoLayout *layout;
-  size_t n_added;      /* boxes and dots on their way */
+  struct _AntCoverage *added; /* boxes and dots on their way; NULL: none, or they are a path of cr */
 } AntPen;
 
 typedef enum
