@@ -27,6 +27,7 @@ ant_scan_work_add (GOptionContext *context, AntScanWork *work)
   g_option_context_add_main_entries (context, entries, NULL);
   ant_record_options_add (context, &work->reading);
   ant_settings_options_add (context, &work->given);
+  ant_witness_options_add (context, &work->witness);
 }
 
 void
@@ -38,6 +39,7 @@ ant_scan_work_clear (AntScanWork *work)
   g_clear_pointer (&work->observer, g_free);
   ant_record_options_clear (&work->reading);
   ant_settings_options_clear (&work->given);
+  ant_witness_options_clear (&work->witness);
 }
 
 /* A time never names a file that is there and ends so. */
@@ -127,17 +129,22 @@ treat (const AntScanWork *work, const AntAnalysis *analysis, const AntRecord *re
       return NULL;
   if (work->to && !ant_time_reference_parse (&record->time, work->to, &treatment->to_d, error))
     return NULL;
+  if (!ant_witness_options_add_to (&work->witness, treatment->witnesses, error))
+    return NULL;
   if (work->exclude && !exclude (treatment, work->exclude, &record->time, error))
     return NULL;
   return g_steal_pointer (&treatment);
 }
 
+/* The values at 1 au or not by the observer's own places. */
 static gboolean
 lay_grid (AntRecord *record, const AntTreatment *treatment, GError **error)
 {
   AntGridOptions grid;
-  if (!ant_treatment_grid (treatment, &grid, error))
+  g_autoptr (AntObserverChoice) choice = treatment->observer ? ant_observer_open (treatment->observer, error) : NULL;
+  if ((treatment->observer && !choice) || !ant_treatment_grid (treatment, &grid, error))
     return FALSE;
+  grid.observer = choice ? &choice->observer : NULL;
   gboolean good = ant_record_make_grid (record, &grid, error);
   ant_grid_options_clear (&grid);
   return good;
@@ -167,7 +174,7 @@ differs (const AntTreatment *one, const AntTreatment *other)
 
 AntAnalysis *
 ant_scan_work_begin (const AntScanWork *work, const char *path, gboolean no_repeats, GCancellable *stop, AntRecord **record,
-                     GError **error)
+                     GPtrArray **comparisons, GError **error)
 {
   g_autoptr (AntAnalysis) analysis = try_options (work, error) ? begin_analysis (work, error) : NULL;
   g_autoptr (AntRecord) read = analysis ? read_record (work, analysis, path, stop, error) : NULL;
@@ -179,10 +186,14 @@ ant_scan_work_begin (const AntScanWork *work, const char *path, gboolean no_repe
   g_autoptr (AntTreatment) treatment = treat (work, analysis, read, error);
   if (treatment && no_repeats)
     treatment->settings.repeats = 0;
-  if (!treatment || !lay_grid (read, treatment, error))
+  g_autoptr (GPtrArray) compared = NULL;
+  if (treatment && lay_grid (read, treatment, error))
+    compared = ant_witnesses_open (treatment->witnesses, read, &treatment->settings, stop, error);
+  if (!compared)
     return NULL;
   if (differs (treatment, ant_analysis_get_treatment (analysis)))
     ant_analysis_treat (analysis, _("Options of the command"), g_steal_pointer (&treatment));
   *record = g_steal_pointer (&read);
+  *comparisons = g_steal_pointer (&compared);
   return g_steal_pointer (&analysis);
 }

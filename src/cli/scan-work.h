@@ -5,6 +5,7 @@
 #include <gio/gio.h>
 #include "cli/record-options.h"
 #include "cli/settings-options.h"
+#include "cli/witness-options.h"
 #include "data/analysis.h"
 
 typedef struct
@@ -15,6 +16,7 @@ typedef struct
   char *observer;  /* --observer */
   AntRecordOptions reading;
   AntSettingsOptions given;
+  AntWitnessOptions witness;
 } AntScanWork;
 
 /* Add the options to a context; parsing fills `work` (start it as { 0 }). */
@@ -24,6 +26,7 @@ void ant_scan_work_clear (AntScanWork *work);
 const char *ant_scan_work_file (const AntScanWork *work);
 /* The analysis that is to be scanned, its treatment being that of the file with the options on top, and its record with
  * the grid laid. path: the record's; NULL: as the file names it. What must be known of both is said on standard error.
- * no_repeats: without the search for dips that recur. NULL with one sentence. */
+ * no_repeats: without the search for dips that recur. *comparisons: of AntComparison, with the file's witnesses and those of
+ * --witness. NULL with one sentence. */
 AntAnalysis *ant_scan_work_begin (const AntScanWork *work, const char *path, gboolean no_repeats, GCancellable *stop,
-                                  AntRecord **record, GError **error);
+                                  AntRecord **record, GPtrArray **comparisons, GError **error);

@@ -328,7 +328,9 @@ tell (const char *path, const AntRecordOptions *reading, const AntWitnessOptions
   if (ant_record_options_good (reading, &grid, &error)
       && (record = ant_record_options_read (reading, path, ant_stop_on_signals (), &error)))
     gridded = ant_record_make_grid (record, &grid, &error);
-  g_autoptr (GPtrArray) witnesses = gridded ? ant_witness_options_open (witness, record, &settings, ant_stop_on_signals (), &error) : NULL;
+  g_autoptr (GPtrArray) named = g_ptr_array_new_with_free_func ((GDestroyNotify) ant_witness_free), witnesses = NULL;
+  if (gridded && ant_witness_options_add_to (witness, named, &error))
+    witnesses = ant_witnesses_open (named, record, &settings, ant_stop_on_signals (), &error);
   g_clear_pointer (&grid.good_values, g_array_unref);
   if (gridded && fold->clock && !error)
     ant_fold_options_print (fold, record, &settings, &error);
@@ -340,7 +342,7 @@ tell (const char *path, const AntRecordOptions *reading, const AntWitnessOptions
       else
         print_plain (record, &summary, gridded);
       if (witnesses && !as_json)
-        ant_witness_options_print (witnesses);
+        ant_witnesses_print (witnesses);
     }
   return error ? ant_cli_fail (error) : ANT_EXIT_DONE;
 }

@@ -8,7 +8,6 @@
 #include "cli/scan-summary.h"
 #include "cli/scan-work.h"
 #include "cli/verbs.h"
-#include "cli/witness-options.h"
 #include "data/analysis-text.h"
 #include "data/error.h"
 #include "jobs/outside-job.h"
@@ -31,7 +30,6 @@ typedef struct
   gboolean force, progress, no_report, no_repeats;
   AntResultChoice choice;
   AntScanWork work;
-  AntWitnessOptions witness;
 } Options;
 
 static void
@@ -42,7 +40,6 @@ options_clear (Options *options)
   g_free (options->save);
   g_free (options->at);
   ant_scan_work_clear (&options->work);
-  ant_witness_options_clear (&options->witness);
 }
 
 #define REPORT "report.pdf"
@@ -58,10 +55,10 @@ append_names (char ***names, const char *const *more)
 
 /* All that a search may write. */
 static char **
-names_of (const Options *options)
+names_of (const Options *options, const GPtrArray *comparisons)
 {
   char **names = ant_result_file_names (&options->choice);
-  g_auto (GStrv) witnesses = ant_witness_options_names (&options->witness);
+  g_auto (GStrv) witnesses = ant_witness_names (comparisons->len);
   append_names (&names, (const char *const *) witnesses);
   if (!options->no_report)
     append_names (&names, (const char *const[]){ REPORT, NULL });
@@ -69,9 +66,9 @@ names_of (const Options *options)
 }
 
 static gboolean
-add_witnesses (const Options *options, AntOutputDir *dir, const GPtrArray *witnesses, GError **error)
+add_witnesses (AntOutputDir *dir, const GPtrArray *witnesses, GError **error)
 {
-  g_auto (GStrv) names = ant_witness_options_names (&options->witness);
+  g_auto (GStrv) names = ant_witness_names (witnesses->len);
   for (guint i = 0; i < witnesses->len; i++)
     {
       g_autoptr (GString) text = ant_witness_table_text (g_ptr_array_index (witnesses, i));
@@ -99,17 +96,17 @@ write_all (const Options *options, AntOutputDir *dir, const AntAnalysis *analysi
   AntFindings findings = { results, judgements, text };
   gsize size = 0;
   g_autofree AntReportWord *word = ant_report_words (results, judgements);
-  g_autoptr (GBytes) report = options->no_report ? NULL : ant_report_bytes (results, word, (AntPaper) results->settings.paper, error);
+  g_autoptr (GBytes) report = options->no_report ? NULL : ant_report_bytes (results, word, witnesses, (AntPaper) results->settings.paper, error);
   const char *pages = report ? g_bytes_get_data (report, &size) : NULL;
   return (report || options->no_report) && ant_result_files_add (dir, &findings, &options->choice, error)
-         && (!report || ant_output_dir_add (dir, REPORT, pages, size, error)) && add_witnesses (options, dir, witnesses, error)
+         && (!report || ant_output_dir_add (dir, REPORT, pages, size, error)) && add_witnesses (dir, witnesses, error)
          && ant_output_dir_commit (dir, error);
 }
 
 static void
-print_names (const Options *options)
+print_names (const Options *options, const GPtrArray *comparisons)
 {
-  g_auto (GStrv) names = names_of (options);
+  g_auto (GStrv) names = names_of (options, comparisons);
   g_autofree char *all = g_strjoinv (", ", names);
   g_print (_("In %s: %s.\n"), options->out, all);
 }
@@ -122,13 +119,12 @@ was_stopped (const AntScanResults *results)
 }
 
 static gboolean
-search (const Options *options, AntAnalysis *analysis, AntRecord *record, const AntSettings *settings, AntOutputDir *dir,
-        GCancellable *stop, GError **error)
+search (const Options *options, AntAnalysis *analysis, AntRecord *record, const GPtrArray *witnesses, const AntSettings *settings,
+        AntOutputDir *dir, GCancellable *stop, GError **error)
 {
-  g_autoptr (GPtrArray) witnesses = ant_witness_options_open (&options->witness, record, settings, stop, error);
   const char *who = ant_analysis_get_treatment (analysis)->observer;
-  g_autoptr (AntObserverChoice) observer = witnesses && who ? ant_observer_open (who, error) : NULL;
-  if (!witnesses || (who && !observer))
+  g_autoptr (AntObserverChoice) observer = who ? ant_observer_open (who, error) : NULL;
+  if (who && !observer)
     return FALSE;
   AntProgressLine *line = ant_progress_line_new (options->progress);
   g_autoptr (AntScanResults) results = ant_scan_job_run (record, settings, stop, ant_progress_line_show, line, error);
@@ -144,9 +140,9 @@ search (const Options *options, AntAnalysis *analysis, AntRecord *record, const 
   g_autofree char *carried = ant_analysis_carried_words (analysis);
   if (carried)
     g_print ("%s.\n", carried);
-  ant_witness_options_print (witnesses);
+  ant_witnesses_print (witnesses);
   if (dir)
-    print_names (options);
+    print_names (options, witnesses);
   if (options->save)
     g_print (_("The analysis is in %s.\n"), options->save);
   if (was_stopped (results))
@@ -157,12 +153,11 @@ search (const Options *options, AntAnalysis *analysis, AntRecord *record, const 
 static const char *const asked_names[] = { "dips.csv", NULL };
 
 static gboolean
-ask (const Options *options, AntRecord *record, const AntSettings *settings, AntOutputDir *dir, GCancellable *stop, GError **error)
+ask (const Options *options, AntRecord *record, const GPtrArray *witnesses, const AntSettings *settings, AntOutputDir *dir, GError **error)
 {
-  g_autoptr (GPtrArray) witnesses = ant_witness_options_open (&options->witness, record, settings, stop, error);
   AntDip dip;
   double at_d, upper_limit_ppm;
-  if (!witnesses || !ant_time_reference_parse (&record->time, options->at, &at_d, error)
+  if (!ant_time_reference_parse (&record->time, options->at, &at_d, error)
       || !ant_scan_job_ask (record, settings, at_d, options->hours / 24, &dip, &upper_limit_ppm, error))
     return FALSE;
   AntDipList list = { .n = 1, .dip = &dip, .limb_u1 = settings->bank.limb_darkening.u1, .threshold_snr = NAN,
@@ -171,7 +166,7 @@ ask (const Options *options, AntRecord *record, const AntSettings *settings, Ant
   if (dir && !(ant_output_dir_add (dir, asked_names[0], text->str, text->len, error) && ant_output_dir_commit (dir, error)))
     return FALSE;
   ant_scan_summary_print_asked (record, &dip, upper_limit_ppm);
-  ant_witness_options_print_dip (witnesses, settings, &dip);
+  ant_witnesses_print_dip (witnesses, settings, &dip);
   return TRUE;
 }
 
@@ -190,18 +185,19 @@ run (const Options *options, const char *path)
   g_autoptr (AntOutputDir) dir = NULL;
   g_autoptr (AntRecord) record = NULL;
   GCancellable *stop = ant_stop_on_signals ();
-  g_autoptr (AntAnalysis) analysis = ant_scan_work_begin (&options->work, path, options->no_repeats, stop, &record, &error);
+  g_autoptr (GPtrArray) witnesses = NULL;
+  g_autoptr (AntAnalysis) analysis = ant_scan_work_begin (&options->work, path, options->no_repeats, stop, &record, &witnesses, &error);
   if (!analysis)
     return ant_cli_fail (error);
   AntSettings settings = ant_analysis_get_treatment (analysis)->settings;
   if (options->threads)
     settings.threads = options->threads;
-  g_auto (GStrv) names = options->at ? g_strdupv ((char **) (gsize) asked_names) : names_of (options);
+  g_auto (GStrv) names = options->at ? g_strdupv ((char **) (gsize) asked_names) : names_of (options, witnesses);
   if (options->out)
     dir = ant_output_dir_open (options->out, (const char *const *) names, options->force, &error);
   gboolean good = (dir || !options->out) && try_save (options, &error)
-                  && (options->at ? ask (options, record, &settings, dir, stop, &error)
-                                  : search (options, analysis, record, &settings, dir, stop, &error));
+                  && (options->at ? ask (options, record, witnesses, &settings, dir, &error)
+                                  : search (options, analysis, record, witnesses, &settings, dir, stop, &error));
   return good ? ANT_EXIT_DONE : ant_cli_fail (error);
 }
 
@@ -248,7 +244,6 @@ ant_verb_scan (int argc, char **argv)
   g_option_context_set_summary (context, _("Searches a record (“-”: standard input) for dips and weighs each against the Sun's own noise."));
   g_option_context_add_main_entries (context, entries, NULL);
   ant_scan_work_add (context, &options.work);
-  ant_witness_options_add (context, &options.witness);
 
   g_autoptr (GError) error = NULL;
   g_autofree char *fault = NULL;

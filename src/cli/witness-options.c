@@ -23,51 +23,55 @@ ant_witness_options_clear (AntWitnessOptions *options)
   g_clear_pointer (&options->files, g_strfreev);
 }
 
-char **
-ant_witness_options_names (const AntWitnessOptions *options)
+gboolean
+ant_witness_options_add_to (const AntWitnessOptions *options, GPtrArray *witnesses, GError **error)
 {
   guint n = options->files ? g_strv_length (options->files) : 0;
+  if (n + witnesses->len > ANT_MOST_WITNESSES)
+    {
+      g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("--witness: found %u files, expected %d at most"), n + witnesses->len, ANT_MOST_WITNESSES);
+      return FALSE;
+    }
+  for (guint i = 0; i < n; i++)
+    {
+      AntWitness *witness = ant_witness_parse (options->files[i], error);
+      if (!witness)
+        return FALSE;
+      g_ptr_array_add (witnesses, witness);
+    }
+  return TRUE;
+}
+
+char **
+ant_witness_names (guint n)
+{
   char **names = g_new0 (char *, n + 1);
   for (guint i = 0; i < n; i++)
     names[i] = g_strdup_printf ("witness-%u.csv", i + 1);
   return names;
 }
 
-static AntComparison *
-open_one (const char *text, AntRecord *record, const AntSettings *settings, GCancellable *cancellable, GError **error)
-{
-  g_autofree char *path = NULL;
-  AntReadingChoices choices;
-  AntComparison *comparison = NULL;
-  if (ant_witness_parse (text, &path, &choices, error))
-    comparison = ant_witness_job_open (record, path, &choices, settings, cancellable, error);
-  ant_reading_choices_clear (&choices);
-  return comparison;
-}
-
 GPtrArray *
-ant_witness_options_open (const AntWitnessOptions *options, AntRecord *record, const AntSettings *settings, GCancellable *cancellable,
-                          GError **error)
+ant_witnesses_open (GPtrArray *witnesses, AntRecord *record, const AntSettings *settings, GCancellable *cancellable, GError **error)
 {
   g_autoptr (GPtrArray) comparisons = g_ptr_array_new_with_free_func ((GDestroyNotify) ant_comparison_unref);
-  if (options->files && g_strv_length (options->files) > ANT_MOST_WITNESSES)
+  for (guint i = 0; i < witnesses->len; i++)
     {
-      g_set_error (error, ANT_ERROR, ANT_ERROR_USAGE, _("--witness: found %u files, expected %d at most"), g_strv_length (options->files),
-                   ANT_MOST_WITNESSES);
-      return NULL;
-    }
-  for (guint i = 0; options->files && options->files[i]; i++)
-    {
-      AntComparison *comparison = open_one (options->files[i], record, settings, cancellable, error);
+      AntWitness *witness = g_ptr_array_index (witnesses, i);
+      AntComparison *comparison = ant_witness_job_open (record, witness, settings, cancellable, error);
       if (!comparison)
         return NULL;
       g_ptr_array_add (comparisons, comparison);
+      if (witness->sha256 && g_strcmp0 (witness->sha256, comparison->witness->sha256) != 0)
+        g_printerr (_("antumbra-cli: %s: the bytes of this witness are not those that the analysis was made with\n"), witness->path);
+      g_free (witness->sha256);
+      witness->sha256 = g_strdup (comparison->witness->sha256);
     }
   return g_steal_pointer (&comparisons);
 }
 
 void
-ant_witness_options_print (const GPtrArray *comparisons)
+ant_witnesses_print (const GPtrArray *comparisons)
 {
   for (guint i = 0; i < comparisons->len; i++)
     {
@@ -80,7 +84,7 @@ ant_witness_options_print (const GPtrArray *comparisons)
 }
 
 void
-ant_witness_options_print_dip (const GPtrArray *comparisons, const AntSettings *settings, const AntDip *dip)
+ant_witnesses_print_dip (const GPtrArray *comparisons, const AntSettings *settings, const AntDip *dip)
 {
   for (guint i = 0; i < comparisons->len; i++)
     {

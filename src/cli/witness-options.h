@@ -13,12 +13,15 @@ typedef struct
 
 void ant_witness_options_add (GOptionContext *context, AntWitnessOptions *options);
 void ant_witness_options_clear (AntWitnessOptions *options);
-/* "witness-1.csv" ... for those that were asked for. Caller g_strfreevs. */
-char **ant_witness_options_names (const AntWitnessOptions *options);
-/* An array of AntComparison, empty without --witness. NULL with one sentence. */
-GPtrArray *ant_witness_options_open (const AntWitnessOptions *options, AntRecord *record, const AntSettings *settings,
-                                     GCancellable *cancellable, GError **error);
+/* Those that were asked for, onto an array of AntWitness. FALSE with one sentence: more than ANT_MOST_WITNESSES in all. */
+gboolean ant_witness_options_add_to (const AntWitnessOptions *options, GPtrArray *witnesses, GError **error);
+/* "witness-1.csv" ... for so many. Caller g_strfreevs. */
+char **ant_witness_names (guint n);
+/* An array of AntComparison of an array of AntWitness, which learn their sums; a file whose bytes are others than they were is told
+ * on standard error. NULL with one sentence. */
+GPtrArray *ant_witnesses_open (GPtrArray *witnesses, AntRecord *record, const AntSettings *settings, GCancellable *cancellable,
+                               GError **error);
 /* What each witness shows of a dip of the record, for people, on standard output. */
-void ant_witness_options_print_dip (const GPtrArray *comparisons, const AntSettings *settings, const AntDip *dip);
+void ant_witnesses_print_dip (const GPtrArray *comparisons, const AntSettings *settings, const AntDip *dip);
 /* What the comparisons came to, likewise. */
-void ant_witness_options_print (const GPtrArray *comparisons);
+void ant_witnesses_print (const GPtrArray *comparisons);

@@ -11,6 +11,7 @@
 #include "data/bounded-json.h"
 #include "data/error.h"
 #include "data/json-fields.h"
+#include "data/kept-path.h"
 #include "data/scan-results-text.h"
 #include "data/treatment-text.h"
 
@@ -24,33 +25,12 @@ ant_analysis_is_name (const char *path)
   return n > suffix && g_ascii_strcasecmp (path + n - suffix, ANT_ANALYSIS_SUFFIX) == 0;
 }
 
-/* The way from a folder to a file: by .. where they share more than the root. Both absolute. */
-static char *
-relative_path (const char *folder, const char *path)
-{
-  g_autofree char *from = g_canonicalize_filename (folder, "/"), *to = g_canonicalize_filename (path, "/");
-  g_auto (GStrv) a = g_strsplit (from, "/", -1), b = g_strsplit (to, "/", -1);
-  guint n_a = g_strv_length (a), same = 1; /* both begin with an empty part before the first slash */
-  while (a[same] && b[same] && b[same + 1] && g_str_equal (a[same], b[same]))
-    same++;
-  if (same < 2)
-    return g_steal_pointer (&to);
-  GString *way = g_string_new (NULL);
-  for (guint i = same; i < n_a; i++)
-    g_string_append (way, "../");
-  g_autofree char *rest = g_strjoinv ("/", b + same);
-  g_string_append (way, rest);
-  return g_string_free (way, FALSE);
-}
-
 static JsonObject *
 put_record (const AntAnalysis *analysis, const char *path)
 {
   JsonObject *object = json_object_new ();
   g_autofree char *folder = g_path_get_dirname (path);
-  const char *record = analysis->record_path;
-  g_autofree char *way = record && g_path_is_absolute (record) ? relative_path (folder, record) : g_strdup (record);
-  g_autofree char *text = way && !g_utf8_validate (way, -1, NULL) ? g_filename_to_uri (record, NULL, NULL) : g_strdup (way);
+  g_autofree char *text = ant_kept_path (folder, analysis->record_path);
   ant_json_put_text (object, "path", text);
   ant_json_put_text (object, "sha256", analysis->record_sha256);
   ant_json_put_real (object, "origin_jd", analysis->origin_jd);
@@ -65,12 +45,7 @@ get_record (JsonObject *object, AntAnalysis *analysis, const char *path, GError 
       || !ant_json_get_text (object, "sha256", &analysis->record_sha256, error)
       || !ant_json_get_real (object, "origin_jd", &analysis->origin_jd, error))
     return FALSE;
-  if (text && g_str_has_prefix (text, "file:"))
-    analysis->record_path = g_filename_from_uri (text, NULL, NULL);
-  else if (text && !g_str_equal (text, "-"))
-    analysis->record_path = g_canonicalize_filename (text, folder);
-  else
-    analysis->record_path = g_strdup (text);
+  analysis->record_path = ant_kept_path_resolve (folder, text);
   return TRUE;
 }
 
@@ -114,7 +89,7 @@ get_history (JsonObject *parent, GError **error)
 }
 
 static void
-put_results (JsonObject *root, const AntAnalysis *analysis)
+put_results (JsonObject *root, const AntAnalysis *analysis, const char *path)
 {
   if (!analysis->results)
     {
@@ -122,12 +97,12 @@ put_results (JsonObject *root, const AntAnalysis *analysis)
       return;
     }
   JsonObject *object = ant_scan_results_to_json (analysis->results);
-  json_object_set_object_member (object, "treatment", ant_treatment_to_json (analysis->scanned_with));
+  json_object_set_object_member (object, "treatment", ant_treatment_to_json (analysis->scanned_with, path));
   json_object_set_object_member (root, "results", object);
 }
 
 static gboolean
-get_results (JsonObject *root, AntAnalysis *analysis, GError **error)
+get_results (JsonObject *root, AntAnalysis *analysis, const char *path, GError **error)
 {
   JsonNode *node = json_object_get_member (root, "results");
   if (!node || JSON_NODE_HOLDS_NULL (node))
@@ -136,7 +111,7 @@ get_results (JsonObject *root, AntAnalysis *analysis, GError **error)
   JsonObject *treatment = object ? ant_json_get_object (object, "treatment", error) : NULL;
   if (!treatment)
     return FALSE;
-  analysis->scanned_with = ant_treatment_from_json (treatment, error);
+  analysis->scanned_with = ant_treatment_from_json (treatment, path, error);
   if (!analysis->scanned_with)
     return ant_json_within (error, "results.treatment", -1);
   analysis->results = ant_scan_results_from_json (object, &analysis->scanned_with->settings, error);
@@ -210,10 +185,10 @@ ant_analysis_to_text (const AntAnalysis *analysis, const char *path)
   json_object_set_int_member (root, VERSION_KEY, ANT_ANALYSIS_VERSION);
   json_object_set_string_member (root, "program", "Antumbra " ANT_VERSION);
   json_object_set_object_member (root, "record", put_record (analysis, path));
-  json_object_set_object_member (root, "treatment", ant_treatment_to_json (ant_analysis_get_treatment (analysis)));
+  json_object_set_object_member (root, "treatment", ant_treatment_to_json (ant_analysis_get_treatment (analysis), path));
   json_object_set_array_member (root, "judgements", ant_judgements_to_json (ant_analysis_get_judgements (analysis)));
   json_object_set_array_member (root, "history", put_history (analysis->history));
-  put_results (root, analysis);
+  put_results (root, analysis, path);
   keep_all_unknown (analysis, root);
   g_autoptr (JsonNode) node = json_node_init_object (json_node_alloc (), root);
   g_autoptr (JsonGenerator) generator = json_generator_new ();
@@ -244,7 +219,7 @@ fill (AntAnalysis *analysis, JsonObject *root, const char *path, GError **error)
     return FALSE;
   if (!get_record (record, analysis, path, error))
     return ant_json_within (error, "record", -1);
-  g_autoptr (AntTreatment) treatment = ant_treatment_from_json (treated, error);
+  g_autoptr (AntTreatment) treatment = ant_treatment_from_json (treated, path, error);
   if (!treatment)
     return ant_json_within (error, "treatment", -1);
   g_autoptr (AntJudgements) judgements = ant_judgements_from_json (root, error);
@@ -252,7 +227,7 @@ fill (AntAnalysis *analysis, JsonObject *root, const char *path, GError **error)
   if (!history)
     return FALSE;
   ant_analysis_fill (analysis, g_steal_pointer (&treatment), g_steal_pointer (&judgements), history);
-  return get_results (root, analysis, error);
+  return get_results (root, analysis, path, error);
 }
 
 AntAnalysis *

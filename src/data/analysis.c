@@ -382,6 +382,50 @@ ant_analysis_unmask (AntAnalysis *analysis, AntSpan span)
   return found;
 }
 
+gboolean
+ant_analysis_add_witness (AntAnalysis *analysis, const AntWitness *witness)
+{
+  const AntTreatment *present = ant_analysis_get_treatment (analysis);
+  if (present->witnesses->len >= ANT_MOST_WITNESSES || ant_treatment_find_witness (present, witness) >= 0)
+    return FALSE;
+  AntTreatment *treatment = ant_treatment_copy (present);
+  g_autofree char *file = ant_witness_name (witness), *name = g_strdup_printf (_("Witness %s"), file);
+  g_ptr_array_add (treatment->witnesses, ant_witness_copy (witness));
+  ant_analysis_treat (analysis, name, treatment);
+  return TRUE;
+}
+
+void
+ant_analysis_remove_witness (AntAnalysis *analysis, guint i)
+{
+  AntTreatment *treatment = ant_treatment_copy (ant_analysis_get_treatment (analysis));
+  if (i >= treatment->witnesses->len)
+    {
+      ant_treatment_free (treatment);
+      return;
+    }
+  g_autofree char *file = ant_witness_name (g_ptr_array_index (treatment->witnesses, i));
+  g_autofree char *name = g_strdup_printf (_("Without witness %s"), file);
+  g_ptr_array_remove_index (treatment->witnesses, i);
+  ant_analysis_treat (analysis, name, treatment);
+}
+
+gboolean
+ant_analysis_update_witness (AntAnalysis *analysis, const AntWitness *witness)
+{
+  const AntTreatment *present = ant_analysis_get_treatment (analysis);
+  int at = ant_treatment_find_witness (present, witness);
+  if (at < 0 || ant_witness_same (g_ptr_array_index (present->witnesses, (guint) at), witness))
+    return FALSE;
+  AntTreatment *treatment = ant_treatment_copy (present);
+  AntWitness *own = g_ptr_array_index (treatment->witnesses, (guint) at);
+  g_autofree char *file = ant_witness_name (witness), *name = g_strdup_printf (_("Other bytes of witness %s"), file);
+  g_free (own->sha256);
+  own->sha256 = g_strdup (witness->sha256);
+  ant_analysis_treat (analysis, name, treatment);
+  return TRUE;
+}
+
 void
 ant_analysis_judge (AntAnalysis *analysis, const char *dip, double mid_d, double duration_d, AntDipClass class)
 {

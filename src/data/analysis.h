@@ -74,6 +74,11 @@ void ant_analysis_mask (AntAnalysis *analysis, AntSpan span, const char *reason)
 /* Why the i-th span is left out. */
 void ant_analysis_set_reason (AntAnalysis *analysis, guint i, const char *reason);
 gboolean ant_analysis_unmask (AntAnalysis *analysis, AntSpan span); /* FALSE: nothing was masked there */
+/* Witnesses: one more (a copy; FALSE if it is among them already or there are ANT_MOST_WITNESSES), or the i-th no more. */
+gboolean ant_analysis_add_witness (AntAnalysis *analysis, const AntWitness *witness);
+void ant_analysis_remove_witness (AntAnalysis *analysis, guint i);
+/* Its file has been read: it has the sum of these bytes now. FALSE if that is known already, or it is none of the witnesses. */
+gboolean ant_analysis_update_witness (AntAnalysis *analysis, const AntWitness *witness);
 
 /* Undo and redo. Names are those of the changes, NULL if there is none. */
 const char *ant_analysis_undo_name (const AntAnalysis *analysis);

@@ -3,6 +3,7 @@
 
 #include <glib/gi18n.h>
 #include <math.h>
+#include <string.h>
 
 AntColumn *
 ant_column_new (const char *name, const char *unit, float *value, gsize n_rows)
@@ -26,10 +27,17 @@ ant_column_free (AntColumn *column)
 }
 
 char *
+ant_column_title (const AntColumn *column)
+{
+  if (!column->unit || !*column->unit || strstr (column->name, column->unit))
+    return g_strdup (column->name);
+  return g_strdup_printf ("%s, %s", column->name, column->unit);
+}
+
+char *
 ant_column_words (const AntColumn *column, gsize n_rows)
 {
-  const char *comma = column->unit ? ", " : "", *unit = column->unit ? column->unit : "";
-  if (column->n_missing == 0)
-    return g_strdup_printf ("%s%s%s", column->name, comma, unit);
-  return g_strdup_printf (_("%s%s%s, %zu of %zu missing"), column->name, comma, unit, column->n_missing, n_rows);
+  g_autofree char *title = ant_column_title (column);
+  return column->n_missing == 0 ? g_steal_pointer (&title)
+                                : g_strdup_printf (_("%s, %zu of %zu missing"), title, column->n_missing, n_rows);
 }

@@ -15,6 +15,8 @@ typedef struct
 
 /* Takes value; the words are copied. */
 AntColumn *ant_column_new (const char *name, const char *unit, float *value, gsize n_rows);
+/* "temperature, K", the unit only where the name does not have it already. Caller frees. */
+char *ant_column_title (const AntColumn *column);
 /* "temperature, K, 120 of 4320 missing". Caller frees. */
 char *ant_column_words (const AntColumn *column, gsize n_rows);
 void ant_column_free (AntColumn *column); /* NULL is fine */

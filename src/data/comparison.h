@@ -6,9 +6,9 @@
 
 #include <gio/gio.h>
 #include "data/record.h"
+#include "data/witness.h"
 #include "noise/rebin.h"
 
-#define ANT_MOST_WITNESSES 4
 #define ANT_N_COMMON_SCALES 3
 extern const double ant_common_scales_h[ANT_N_COMMON_SCALES]; /* 1 h, 6 h, 1 d: of a dip */
 

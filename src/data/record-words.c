@@ -20,6 +20,11 @@ add_columns (GPtrArray *facts, const AntRecord *record)
        record->value_unit ? record->value_unit : "");
   ant_facts_add_format (facts, _("Error"), "%s", record->error_name ? record->error_name : _("none"));
   ant_facts_add_format (facts, _("Quality"), "%s", record->quality_name ? record->quality_name : _("none"));
+}
+
+void
+ant_record_add_further (GPtrArray *facts, const AntRecord *record)
+{
   for (guint i = 0; i < MIN (record->columns->len, MOST_COLUMNS); i++)
     {
       g_autofree char *words = ant_column_words (g_ptr_array_index (record->columns, i), record->n_rows);

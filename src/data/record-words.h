@@ -6,6 +6,8 @@
 
 /* Columns, times, level, cadence and scatter as AntFact. Caller unrefs. */
 GPtrArray *ant_record_facts (const AntRecord *record, const AntRecordSummary *summary);
+/* The record's further columns as one more AntFact, the first few of many. */
+void ant_record_add_further (GPtrArray *facts, const AntRecord *record);
 /* The rows, the span and the values of a record without a grid, on one line. `partial`: of its first part. Caller frees. */
 char *ant_preview_words (const AntRecord *record, gboolean partial);
 /* What is left out: for each flag that was set its name and count and, after a line break, what it means. */

@@ -6,6 +6,7 @@
 
 #include "data/error.h"
 #include "data/json-fields.h"
+#include "data/kept-path.h"
 
 #define MOST_ENTRIES 100000
 #define MOST_FILLS 1000
@@ -48,11 +49,11 @@ exact_text (const AntSetting *setting, const AntSettings *settings)
 }
 
 static JsonObject *
-put_reading (const AntTreatment *treatment)
+put_reading (const AntReadingChoices *reading)
 {
   JsonObject *object = json_object_new ();
-  const GArray *fills = treatment->reading.fill_values;
-  AntReadingChoices words = treatment->reading; /* a shallow copy to look at */
+  const GArray *fills = reading->fill_values;
+  AntReadingChoices words = *reading; /* a shallow copy to look at */
   for (gsize i = 0; i < ant_n_reading_words; i++)
     ant_json_put_text (object, ant_reading_word_table[i].name,
                        *ant_reading_choices_word (&words, &ant_reading_word_table[i]));
@@ -60,7 +61,6 @@ put_reading (const AntTreatment *treatment)
     json_object_set_array_member (object, "fill_values", ant_json_put_reals (fills->len, (const double *) (gpointer) fills->data));
   else
     json_object_set_null_member (object, "fill_values");
-  ant_json_put_text (object, "good", treatment->good);
   return object;
 }
 
@@ -80,14 +80,19 @@ get_fills (JsonObject *object, AntReadingChoices *reading, GError **error)
 }
 
 static gboolean
-get_reading (JsonObject *object, AntTreatment *treatment, GError **error)
+get_reading (JsonObject *object, AntReadingChoices *reading, GError **error)
+{
+  for (gsize i = 0; i < ant_n_reading_words; i++)
+    if (!ant_json_get_text (object, ant_reading_word_table[i].name, ant_reading_choices_word (reading, &ant_reading_word_table[i]), error))
+      return FALSE;
+  return get_fills (object, reading, error);
+}
+
+static gboolean
+get_good (JsonObject *object, AntTreatment *treatment, GError **error)
 {
   AntGridOptions grid = ANT_GRID_OPTIONS_INIT;
-  for (gsize i = 0; i < ant_n_reading_words; i++)
-    if (!ant_json_get_text (object, ant_reading_word_table[i].name,
-                            ant_reading_choices_word (&treatment->reading, &ant_reading_word_table[i]), error))
-      return FALSE;
-  if (!get_fills (object, &treatment->reading, error) || !ant_json_get_text (object, "good", &treatment->good, error))
+  if (!ant_json_get_text (object, "good", &treatment->good, error))
     return FALSE;
   gboolean good = !treatment->good || ant_grid_options_parse_good (&grid, "good", treatment->good, error);
   ant_grid_options_clear (&grid);
@@ -176,34 +181,89 @@ get_masks (JsonObject *parent, AntTreatment *treatment, GError **error)
   return array != NULL;
 }
 
-JsonObject *
-ant_treatment_to_json (const AntTreatment *treatment)
+static JsonArray *
+put_witnesses (const GPtrArray *witnesses, const char *folder)
 {
-  JsonObject *object = json_object_new ();
-  json_object_set_object_member (object, "reading", put_reading (treatment));
+  JsonArray *array = json_array_new ();
+  for (guint i = 0; i < witnesses->len; i++)
+    {
+      const AntWitness *witness = g_ptr_array_index (witnesses, i);
+      JsonObject *object = json_object_new ();
+      g_autofree char *path = ant_kept_path (folder, witness->path);
+      ant_json_put_text (object, "path", path);
+      ant_json_put_text (object, "sha256", witness->sha256);
+      json_object_set_object_member (object, "reading", put_reading (&witness->reading));
+      json_array_add_object_element (array, object);
+    }
+  return array;
+}
+
+static gboolean
+get_witness (JsonObject *object, AntWitness *witness, const char *folder, GError **error)
+{
+  g_autofree char *text = NULL;
+  if (!ant_json_get_text (object, "path", &text, error) || !ant_json_get_text (object, "sha256", &witness->sha256, error))
+    return FALSE;
+  witness->path = ant_kept_path_resolve (folder, text);
+  if (!witness->path || !g_path_is_absolute (witness->path))
+    return ant_json_refuse (error, "path", json_object_get_member (object, "path"), _("a file"));
+  JsonObject *reading = ant_json_get_object (object, "reading", error);
+  if (!reading)
+    return FALSE;
+  return get_reading (reading, &witness->reading, error) || ant_json_within (error, "reading", -1);
+}
+
+/* Files of before there were witnesses lack them. */
+static gboolean
+get_witnesses (JsonObject *parent, AntTreatment *treatment, const char *folder, GError **error)
+{
+  if (!json_object_has_member (parent, "witnesses"))
+    return TRUE;
+  JsonArray *array = ant_json_get_array (parent, "witnesses", ANT_MOST_WITNESSES, error);
+  for (guint i = 0; array && i < json_array_get_length (array); i++)
+    {
+      AntWitness *witness = g_new0 (AntWitness, 1);
+      g_ptr_array_add (treatment->witnesses, witness);
+      JsonObject *object = ant_json_element (array, i, error);
+      if (!object || !get_witness (object, witness, folder, error))
+        return ant_json_within (error, "witnesses", i);
+    }
+  return array != NULL;
+}
+
+JsonObject *
+ant_treatment_to_json (const AntTreatment *treatment, const char *path)
+{
+  JsonObject *object = json_object_new (), *reading = put_reading (&treatment->reading);
+  g_autofree char *folder = g_path_get_dirname (path);
+  ant_json_put_text (reading, "good", treatment->good);
+  json_object_set_object_member (object, "reading", reading);
   json_object_set_object_member (object, "settings", put_settings (&treatment->settings));
   ant_json_put_text (object, "observer", treatment->observer);
   ant_json_put_real (object, "from_d", treatment->from_d);
   ant_json_put_real (object, "to_d", treatment->to_d);
   json_object_set_array_member (object, "masks", put_masks (treatment->masks));
+  json_object_set_array_member (object, "witnesses", put_witnesses (treatment->witnesses, folder));
   return object;
 }
 
 AntTreatment *
-ant_treatment_from_json (JsonObject *object, GError **error)
+ant_treatment_from_json (JsonObject *object, const char *path, GError **error)
 {
   g_autoptr (AntTreatment) treatment = ant_treatment_new ();
+  g_autofree char *folder = g_path_get_dirname (path);
   JsonObject *reading = ant_json_get_object (object, "reading", error);
   JsonObject *settings = reading ? ant_json_get_object (object, "settings", error) : NULL;
   if (!settings)
     return NULL;
-  if (!get_reading (reading, treatment, error))
+  if (!get_reading (reading, &treatment->reading, error) || !get_good (reading, treatment, error))
     return ant_json_within (error, "reading", -1), NULL;
   if (!get_settings (settings, &treatment->settings, error))
     return ant_json_within (error, "settings", -1), NULL;
   return ant_json_get_text (object, "observer", &treatment->observer, error)
                  && get_time (object, "from_d", TRUE, &treatment->from_d, error)
                  && get_time (object, "to_d", TRUE, &treatment->to_d, error) && get_masks (object, treatment, error)
+                 && get_witnesses (object, treatment, folder, error)
              ? g_steal_pointer (&treatment)
              : NULL;
 }

@@ -5,9 +5,9 @@
 #include "data/judgement.h"
 #include "data/treatment.h"
 
-/* What is made is the caller's. Reading gives NULL with one sentence that names what was found and expected. */
-JsonObject *ant_treatment_to_json (const AntTreatment *treatment);
-AntTreatment *ant_treatment_from_json (JsonObject *object, GError **error);
+/* path: of the file it is for; witnesses are named from its folder. What is made is the caller's. Reading gives NULL with one sentence that names what was found and expected. */
+JsonObject *ant_treatment_to_json (const AntTreatment *treatment, const char *path);
+AntTreatment *ant_treatment_from_json (JsonObject *object, const char *path, GError **error);
 /* Whether a key of its "settings" is one that this program knows. */
 gboolean ant_treatment_knows_setting (const char *key);
 

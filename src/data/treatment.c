@@ -45,6 +45,7 @@ ant_treatment_new (void)
   ant_settings_init (&treatment->settings);
   treatment->from_d = treatment->to_d = NAN;
   treatment->masks = g_ptr_array_new_with_free_func (mask_free);
+  treatment->witnesses = g_ptr_array_new_with_free_func ((GDestroyNotify) ant_witness_free);
   return treatment;
 }
 
@@ -59,6 +60,9 @@ ant_treatment_copy (const AntTreatment *treatment)
   copy->masks = g_ptr_array_new_with_free_func (mask_free);
   for (guint i = 0; i < treatment->masks->len; i++)
     g_ptr_array_add (copy->masks, mask_copy (g_ptr_array_index (treatment->masks, i), NULL));
+  copy->witnesses = g_ptr_array_new_with_free_func ((GDestroyNotify) ant_witness_free);
+  for (guint i = 0; i < treatment->witnesses->len; i++)
+    g_ptr_array_add (copy->witnesses, ant_witness_copy (g_ptr_array_index (treatment->witnesses, i)));
   return copy;
 }
 
@@ -71,6 +75,7 @@ ant_treatment_free (AntTreatment *treatment)
   g_free (treatment->good);
   g_free (treatment->observer);
   g_ptr_array_unref (treatment->masks);
+  g_ptr_array_unref (treatment->witnesses);
   g_free (treatment);
 }
 
@@ -106,6 +111,15 @@ ant_treatment_unmask (AntTreatment *treatment, AntSpan span)
   return found;
 }
 
+int
+ant_treatment_find_witness (const AntTreatment *treatment, const AntWitness *witness)
+{
+  for (guint i = 0; i < treatment->witnesses->len; i++)
+    if (ant_witness_same_file (g_ptr_array_index (treatment->witnesses, i), witness))
+      return (int) i;
+  return -1;
+}
+
 void
 ant_treatment_shift (AntTreatment *treatment, double shift_d)
 {
@@ -139,6 +153,17 @@ same_masks (const GPtrArray *one, const GPtrArray *other)
   return TRUE;
 }
 
+static gboolean
+same_witnesses (const GPtrArray *one, const GPtrArray *other)
+{
+  if (one->len != other->len)
+    return FALSE;
+  for (guint i = 0; i < one->len; i++)
+    if (!ant_witness_same (g_ptr_array_index (one, i), g_ptr_array_index (other, i)))
+      return FALSE;
+  return TRUE;
+}
+
 /* group NULL: all that can change a result. */
 static gboolean
 same_settings (const AntSettings *one, const AntSettings *other, const char *group)
@@ -156,6 +181,8 @@ same_settings (const AntSettings *one, const AntSettings *other, const char *gro
 gboolean
 ant_treatment_same_grid (const AntTreatment *one, const AntTreatment *other)
 {
+  if (one->settings.grid.distance != (double) ANT_DISTANCE_AS_IS && g_strcmp0 (one->observer, other->observer) != 0)
+    return FALSE; /* converted by another's distance */
   return same_settings (&one->settings, &other->settings, "Record") && g_strcmp0 (one->good, other->good) == 0
          && ant_reading_choices_same (&one->reading, &other->reading) && same_number (one->from_d, other->from_d)
          && same_number (one->to_d, other->to_d) && same_masks (one->masks, other->masks);
@@ -165,7 +192,7 @@ gboolean
 ant_treatment_same (const AntTreatment *one, const AntTreatment *other)
 {
   return same_settings (&one->settings, &other->settings, NULL) && g_strcmp0 (one->observer, other->observer) == 0
-         && ant_treatment_same_grid (one, other);
+         && same_witnesses (one->witnesses, other->witnesses) && ant_treatment_same_grid (one, other);
 }
 
 static GArray *

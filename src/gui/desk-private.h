@@ -74,11 +74,10 @@ struct _AntDesk
   gsize sky_selected;
   GArray *ticks;            /* of double: predicted contacts */
 
-  /* The witness */
-  char *witness_path, *witness_of;  /* owned; its file, and that of the record it was opened beside; NULL: none */
-  AntWitnessStrips *witness;        /* owned; NULL: none yet */
-  GCancellable *witness_stop;       /* owned; NULL: nothing is being read */
+  /* Witnesses, and columns that are shown */
+  GPtrArray *witnesses;             /* owned; what desk-witness.c holds of each */
   AntWitnessLook witness_look;
+  GPtrArray *shown_columns;         /* owned; what desk-columns.c holds of each */
 
   AntDepthUnit unit;
   int average;
@@ -117,8 +116,15 @@ void ant_desk_drop_snr (AntDesk *self);
 /* Nothing is folded; fold on the strongest repeat, if there is one. */
 void ant_desk_drop_fold (AntDesk *self);
 void ant_desk_begin_fold (AntDesk *self);
-/* Compare anew, or close the witness, where record or settings are others than it was compared with. */
-void ant_desk_follow_witness (AntDesk *self);
+/* Hold the witnesses that the analysis names, and compare anew where record or settings are others than they were compared with.
+ * TRUE if they are others than before. */
+gboolean ant_desk_follow_witnesses (AntDesk *self);
+/* The treatment's witnesses are those of ant_desk_get_comparisons now, in the same order. */
+void ant_desk_name_compared (AntDesk *self, AntTreatment *treatment);
+void ant_desk_held_witness_free (gpointer held);
+/* Columns of the same names again, of the record that is there now. */
+void ant_desk_follow_columns (AntDesk *self);
+void ant_desk_shown_column_free (gpointer shown);
 void ant_desk_bring_into_view (AntDesk *self, const AntDip *dip);
 /* Work out the sky over the record anew. */
 void ant_desk_follow_sky (AntDesk *self);

@@ -210,9 +210,12 @@ ant_desk_start_scan (AntDesk *self, AntLayers *layers)
 {
   AntTreatment *treatment = ant_treatment_copy (ant_analysis_get_treatment (self->analysis));
   GCancellable *stop = ant_desk_begin (self, ANT_BUSY_SCANNING);
+  g_autoptr (GPtrArray) comparisons = ant_desk_get_comparisons (self);
   g_clear_pointer (&self->scanning_with, ant_treatment_free);
   self->scanning_with = treatment;
-  ant_scan_task_async (layers, &treatment->settings, treatment->observer ? self->observer : NULL, stop, progress_cb, scanned_cb, g_object_ref (self));
+  ant_desk_name_compared (self, treatment); /* one that cannot be read is no evidence */
+  ant_scan_task_async (layers, &treatment->settings, treatment->observer ? self->observer : NULL, treatment->witnesses, comparisons, stop,
+                       progress_cb, scanned_cb, g_object_ref (self));
   ant_desk_tell (self, ANT_DESK_BUSY);
 }
 

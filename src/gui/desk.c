@@ -18,8 +18,10 @@ ant_desk_tell (AntDesk *self, AntDeskChange what)
 {
   if (what & (ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION))
     ant_desk_follow_snr (self);
-  if (what & (ANT_DESK_RECORD | ANT_DESK_SETTINGS))
-    ant_desk_follow_witness (self);
+  if ((what & (ANT_DESK_RECORD | ANT_DESK_SETTINGS)) && ant_desk_follow_witnesses (self))
+    what |= ANT_DESK_WITNESS;
+  if (what & ANT_DESK_RECORD)
+    ant_desk_follow_columns (self);
   g_signal_emit (self, signals[CHANGED], 0, (guint) what);
 }
 
@@ -224,7 +226,8 @@ ant_desk_dispose (GObject *object)
   ant_desk_drop_snr (self);
   ant_desk_drop_fold (self);
   ant_desk_drop_sky (self);
-  ant_desk_close_witness (self);
+  g_ptr_array_set_size (self->witnesses, 0);
+  g_ptr_array_set_size (self->shown_columns, 0);
   ant_desk_stop_keeping (self);
   g_clear_object (&self->selected);
   g_ptr_array_set_size (self->mark_items, 0);
@@ -240,6 +243,8 @@ ant_desk_finalize (GObject *object)
   g_object_unref (self->items);
   g_array_unref (self->marks);
   g_array_unref (self->ticks);
+  g_ptr_array_unref (self->witnesses);
+  g_ptr_array_unref (self->shown_columns);
   ant_observer_choice_unref (self->observer);
   g_ptr_array_unref (self->mark_items);
   g_array_unref (self->mask_spans);
@@ -277,6 +282,8 @@ ant_desk_init (AntDesk *self)
   self->marks = g_array_new (FALSE, TRUE, sizeof (AntDipMark));
   self->mark_items = g_ptr_array_new ();
   self->ticks = g_array_new (FALSE, TRUE, sizeof (double));
+  self->witnesses = g_ptr_array_new_with_free_func (ant_desk_held_witness_free);
+  self->shown_columns = g_ptr_array_new_with_free_func (ant_desk_shown_column_free);
   self->observer = ant_observer_choice_new_earth ();
   self->sky_selected = ANT_NO_EVENT;
   self->mask_spans = g_array_new (FALSE, FALSE, sizeof (AntSpan));

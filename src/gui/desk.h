@@ -10,6 +10,7 @@
 #include "data/analysis.h"
 #include "data/dip-words.h"
 #include "gui/dip-item.h"
+#include "jobs/column-strip.h"
 #include "jobs/fold-data.h"
 #include "jobs/layers.h"
 #include "jobs/observer-task.h"
@@ -34,7 +35,8 @@ typedef enum
   ANT_DESK_MASKS = 1 << 10,    /* spans that are left out */
   ANT_DESK_KEPT = 1 << 11,     /* the analysis: whether it is saved, where, what can be undone */
   ANT_DESK_FOLD = 1 << 12,     /* the period that is folded */
-  ANT_DESK_WITNESS = 1 << 13,  /* the witness: another, none, or another look at it */
+  ANT_DESK_WITNESS = 1 << 13,  /* the witnesses: more, fewer, read, or another look at them */
+  ANT_DESK_COLUMNS = 1 << 15,  /* which further columns are shown, and their strips */
   ANT_DESK_SKY = 1 << 14,      /* who watched, what crossed the Sun, which of it is selected */
 } AntDeskChange;
 #define ANT_DESK_EVERYTHING ((AntDeskChange) 0xffff)
@@ -187,10 +189,22 @@ void ant_desk_select_sky (AntDesk *self, gsize index); /* brings it into view */
 /* Predicted contacts, days, for the time stack; valid until the next change. */
 gsize ant_desk_get_ticks (AntDesk *self, const double **tick_d);
 
-/* The witness: another instrument's record beside this one. It stays while the record is read anew, and goes with it. */
+/* Witnesses: other instruments' records beside this one, kept in the analysis. What is opened joins it once it has been read; "failed"
+ * if it cannot be. Numbered from 0; strips are NULL until they are made. Borrowed until the next change. */
 void ant_desk_open_witness (AntDesk *self, const char *path);
-void ant_desk_close_witness (AntDesk *self);
-const char *ant_desk_get_witness_path (AntDesk *self);          /* NULL: none. While it is being read there are no strips */
-const AntWitnessStrips *ant_desk_get_witness (AntDesk *self);   /* NULL: none yet. Borrowed */
+void ant_desk_close_witness (AntDesk *self, guint i);
+guint ant_desk_count_witnesses (AntDesk *self);
+const AntWitness *ant_desk_get_witness (AntDesk *self, guint i); /* NULL: there are not so many */
+const AntWitnessStrips *ant_desk_get_witness_strips (AntDesk *self, guint i);
+const char *ant_desk_get_witness_problem (AntDesk *self, guint i); /* why it could not be read, or NULL */
 AntWitnessLook ant_desk_get_witness_look (AntDesk *self);
-void ant_desk_set_witness_look (AntDesk *self, AntWitnessLook look);
+void ant_desk_set_witness_look (AntDesk *self, AntWitnessLook look); /* of all */
+GPtrArray *ant_desk_get_comparisons (AntDesk *self); /* AntComparison of those that were read; caller unrefs */
+
+/* Further columns of the record (record->columns) as strips, on demand; they stay while a record of columns of these names is there. */
+#define ANT_MOST_SHOWN_COLUMNS 4
+gboolean ant_desk_is_column_shown (AntDesk *self, guint column);
+void ant_desk_show_column (AntDesk *self, guint column, gboolean shown); /* "failed" if there are too many */
+guint ant_desk_count_shown_columns (AntDesk *self);
+const char *ant_desk_get_shown_column (AntDesk *self, guint i);              /* its name; NULL: there are not so many */
+const AntColumnStrip *ant_desk_get_column_strip (AntDesk *self, guint i);    /* NULL: not made yet */

@@ -16,30 +16,119 @@ struct _AntRecordPage
   /* From the template */
   AntColumns *columns;
   AntFactList *facts, *left_out;
-  GtkWidget *said;
+  GtkWidget *said, *further_heading, *further, *witnesses;
   GtkListBox *gaps;
 
   /* Owned */
   AntDesk *desk;
   guint waiting; /* for the rows to be made anew */
+  guint stale;   /* AntDeskChange of those that are */
 };
 
 G_DEFINE_FINAL_TYPE (AntRecordPage, ant_record_page, GTK_TYPE_WIDGET)
 
 static void
-show_said (AntRecordPage *self, const AntRecord *record)
+empty_box (GtkWidget *box)
 {
   GtkWidget *child;
-  while ((child = gtk_widget_get_first_child (self->said)))
-    gtk_box_remove (GTK_BOX (self->said), child);
+  while ((child = gtk_widget_get_first_child (box)))
+    gtk_box_remove (GTK_BOX (box), child);
+}
+
+static GtkWidget *
+sentence_new (const char *text)
+{
+  GtkWidget *label = gtk_label_new (text);
+  gtk_label_set_xalign (GTK_LABEL (label), 0);
+  gtk_label_set_wrap (GTK_LABEL (label), TRUE);
+  gtk_label_set_wrap_mode (GTK_LABEL (label), PANGO_WRAP_WORD_CHAR);
+  return label;
+}
+
+static void
+show_said (AntRecordPage *self, const AntRecord *record)
+{
+  empty_box (self->said);
   for (guint i = 0; i < record->said->len; i++)
+    gtk_box_append (GTK_BOX (self->said), sentence_new (g_ptr_array_index (record->said, i)));
+}
+
+/* Further columns: each can be a strip. */
+
+static void
+further_cb (GtkCheckButton *button, AntRecordPage *self)
+{
+  guint column = GPOINTER_TO_UINT (g_object_get_data (G_OBJECT (button), "column"));
+  ant_desk_show_column (self->desk, column, gtk_check_button_get_active (button));
+  if (ant_desk_is_column_shown (self->desk, column) != gtk_check_button_get_active (button))
+    gtk_check_button_set_active (button, ant_desk_is_column_shown (self->desk, column)); /* there are too many */
+}
+
+static void
+show_further (AntRecordPage *self, const AntRecord *record)
+{
+  empty_box (self->further);
+  gtk_widget_set_visible (self->further_heading, record->columns->len > 0);
+  for (guint i = 0; i < record->columns->len; i++)
     {
-      GtkWidget *label = gtk_label_new (g_ptr_array_index (record->said, i));
-      gtk_label_set_xalign (GTK_LABEL (label), 0);
-      gtk_label_set_wrap (GTK_LABEL (label), TRUE);
-      gtk_label_set_wrap_mode (GTK_LABEL (label), PANGO_WRAP_WORD_CHAR);
-      gtk_box_append (GTK_BOX (self->said), label);
+      g_autofree char *words = ant_column_words (g_ptr_array_index (record->columns, i), record->n_rows);
+      GtkWidget *button = gtk_check_button_new_with_label (words);
+      gtk_check_button_set_active (GTK_CHECK_BUTTON (button), ant_desk_is_column_shown (self->desk, i));
+      g_object_set_data (G_OBJECT (button), "column", GUINT_TO_POINTER (i));
+      g_signal_connect (button, "toggled", G_CALLBACK (further_cb), self);
+      gtk_box_append (GTK_BOX (self->further), button);
     }
+}
+
+/* What is ticked follows the desk. */
+static void
+show_shown (AntRecordPage *self)
+{
+  guint i = 0;
+  for (GtkWidget *button = gtk_widget_get_first_child (self->further); button; button = gtk_widget_get_next_sibling (button))
+    gtk_check_button_set_active (GTK_CHECK_BUTTON (button), ant_desk_is_column_shown (self->desk, i++));
+}
+
+/* Witnesses: what the comparison came to, and away with it. */
+
+static void
+close_witness_cb (GtkButton *button, AntRecordPage *self)
+{
+  ant_desk_close_witness (self->desk, GPOINTER_TO_UINT (g_object_get_data (G_OBJECT (button), "witness")));
+}
+
+static GtkWidget *
+witness_new (AntRecordPage *self, guint i)
+{
+  const AntWitnessStrips *strips = ant_desk_get_witness_strips (self->desk, i);
+  const char *problem = ant_desk_get_witness_problem (self->desk, i);
+  g_autofree char *name = ant_witness_name (ant_desk_get_witness (self->desk, i));
+  g_autofree char *title = g_strdup_printf ("%u · %s", i + 1, name), *what = g_strdup_printf (_("Close witness %s"), name);
+  GtkWidget *box = gtk_box_new (GTK_ORIENTATION_VERTICAL, 2), *line = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 6);
+  GtkWidget *label = sentence_new (title), *button = gtk_button_new_with_label (_("Close"));
+  gtk_widget_set_hexpand (label, TRUE);
+  gtk_widget_add_css_class (button, "flat");
+  gtk_widget_add_css_class (button, "small");
+  gtk_accessible_update_property (GTK_ACCESSIBLE (button), GTK_ACCESSIBLE_PROPERTY_LABEL, what, -1);
+  g_object_set_data (G_OBJECT (button), "witness", GUINT_TO_POINTER (i));
+  g_signal_connect (button, "clicked", G_CALLBACK (close_witness_cb), self);
+  gtk_box_append (GTK_BOX (line), label);
+  gtk_box_append (GTK_BOX (line), button);
+  gtk_box_append (GTK_BOX (box), line);
+  g_autoptr (GPtrArray) words = strips ? ant_comparison_words (strips->comparison) : NULL;
+  for (guint k = 0; words && k < words->len; k++)
+    gtk_box_append (GTK_BOX (box), sentence_new (g_ptr_array_index (words, k)));
+  if (!words)
+    gtk_box_append (GTK_BOX (box), sentence_new (problem ? problem : _("It is being read")));
+  return box;
+}
+
+static void
+show_witnesses (AntRecordPage *self)
+{
+  empty_box (self->witnesses);
+  for (guint i = 0; i < ant_desk_count_witnesses (self->desk); i++)
+    gtk_box_append (GTK_BOX (self->witnesses), witness_new (self, i));
 }
 
 /* A row that leads to its span in the strips. */
@@ -139,21 +228,26 @@ span_chosen_cb (AntRecordPage *self, GtkListBoxRow *row, GtkListBox *list)
 }
 
 static gboolean
-show_spans_cb (gpointer data)
+show_rows_cb (gpointer data)
 {
   AntRecordPage *self = data;
+  const AntRecord *record = ant_desk_get_record (self->desk);
   self->waiting = 0;
-  if (ant_desk_get_record (self->desk))
-    show_spans (self, ant_desk_get_record (self->desk));
+  if (record && (self->stale & (ANT_DESK_RECORD | ANT_DESK_MASKS)))
+    show_spans (self, record);
+  if (record && (self->stale & ANT_DESK_WITNESS))
+    show_witnesses (self);
+  self->stale = 0;
   return G_SOURCE_REMOVE;
 }
 
 /* Not from within a row that has just made the change. */
 static void
-show_spans_soon (AntRecordPage *self)
+show_rows_soon (AntRecordPage *self, AntDeskChange what)
 {
+  self->stale |= what;
   if (!self->waiting)
-    self->waiting = g_idle_add_full (G_PRIORITY_DEFAULT, show_spans_cb, self, NULL);
+    self->waiting = g_idle_add_full (G_PRIORITY_DEFAULT, show_rows_cb, self, NULL);
 }
 
 static void
@@ -162,15 +256,20 @@ desk_changed_cb (AntDesk *desk, guint what, AntRecordPage *self)
   const AntLayers *layers = ant_desk_get_layers (desk);
   if (!layers)
     return;
-  if (what & (ANT_DESK_RECORD | ANT_DESK_MASKS))
-    show_spans_soon (self);
+  if (what & (ANT_DESK_RECORD | ANT_DESK_MASKS | ANT_DESK_WITNESS))
+    show_rows_soon (self, what);
   if (!(what & ANT_DESK_RECORD))
-    return;
+    {
+      if (what & ANT_DESK_COLUMNS)
+        show_shown (self);
+      return;
+    }
   g_autoptr (GPtrArray) facts = ant_record_facts (layers->record, &layers->summary);
   g_autoptr (GPtrArray) left_out = ant_record_left_out (&layers->summary);
   ant_fact_list_set_facts (self->facts, facts);
   ant_fact_list_set_facts (self->left_out, left_out);
   show_said (self, layers->record);
+  show_further (self, layers->record);
 }
 
 void
@@ -204,6 +303,9 @@ ant_record_page_class_init (AntRecordPageClass *klass)
   gtk_widget_class_bind_template_child (widget_class, AntRecordPage, left_out);
   gtk_widget_class_bind_template_child (widget_class, AntRecordPage, said);
   gtk_widget_class_bind_template_child (widget_class, AntRecordPage, gaps);
+  gtk_widget_class_bind_template_child (widget_class, AntRecordPage, further_heading);
+  gtk_widget_class_bind_template_child (widget_class, AntRecordPage, further);
+  gtk_widget_class_bind_template_child (widget_class, AntRecordPage, witnesses);
   gtk_widget_class_bind_template_callback (widget_class, span_chosen_cb);
 }
 

@@ -2,14 +2,36 @@
 #include "gui/strip-content.h"
 
 #include <glib/gi18n.h>
+#include <math.h>
 
 #include "core/units.h"
+
+static gboolean
+is_column (AntStripKind kind)
+{
+  return kind >= ANT_STRIP_COLUMN;
+}
+
+static gboolean
+is_witness (AntStripKind kind)
+{
+  return kind >= ANT_STRIP_WITNESS && !is_column (kind);
+}
+
+/* Which of the columns, or of the witnesses. */
+static guint
+number_of (AntStripKind kind)
+{
+  return (guint) kind - (guint) (is_column (kind) ? ANT_STRIP_COLUMN : ANT_STRIP_WITNESS);
+}
 
 gboolean
 ant_strip_wanted (AntDesk *desk, AntStripKind kind)
 {
-  if (kind == ANT_STRIP_WITNESS)
-    return ant_desk_get_witness_path (desk) != NULL;
+  if (is_column (kind))
+    return ant_desk_get_shown_column (desk, number_of (kind)) != NULL;
+  if (is_witness (kind))
+    return ant_desk_get_witness (desk, number_of (kind)) && !ant_desk_get_witness_problem (desk, number_of (kind));
   return kind != ANT_STRIP_SNR || ant_desk_get_snr_shown (desk);
 }
 
@@ -32,8 +54,14 @@ ant_strip_title (AntDesk *desk, AntStripKind kind)
       g_autofree char *length = ant_length_words (ant_desk_get_snr_duration (desk));
       return g_strdup_printf (_("SNR of dips %s long"), length);
     }
+  if (is_column (kind))
+    {
+      const AntColumnStrip *made = ant_desk_get_column_strip (desk, number_of (kind));
+      const char *name = ant_desk_get_shown_column (desk, number_of (kind));
+      return made ? ant_column_title (made->column) : g_strdup (name ? name : _("Column"));
+    }
   static const char *const looks[] = { N_("Witness, ppm"), N_("Record over witness, ppm"), N_("Record less witness, ppm") };
-  if (kind == ANT_STRIP_WITNESS)
+  if (is_witness (kind))
     return g_strdup (_ (looks[ant_desk_get_witness_look (desk)]));
   const char *what = kind == ANT_STRIP_RESIDUAL ? _("Residual") : _("Irradiance");
   if (!record)
@@ -62,10 +90,21 @@ fill_snr (AntDesk *desk, AntStrip *strip, gsize size, char *text)
 }
 
 static void
-fill_witness (AntDesk *desk, AntStrip *strip, gsize size, char *text)
+fill_column (AntDesk *desk, guint i, AntStrip *strip, gsize size, char *text)
 {
-  const AntWitnessStrips *witness = ant_desk_get_witness (desk);
-  g_autofree char *name = g_path_get_basename (ant_desk_get_witness_path (desk));
+  const AntColumnStrip *made = ant_desk_get_column_strip (desk, i);
+  if (made)
+    strip->pyramid = made->pyramid;
+  else
+    g_strlcpy (text, _("laying it on the grid"), size);
+  strip->caption = text;
+}
+
+static void
+fill_witness (AntDesk *desk, guint i, AntStrip *strip, gsize size, char *text)
+{
+  const AntWitnessStrips *witness = ant_desk_get_witness_strips (desk, i);
+  g_autofree char *name = ant_witness_name (ant_desk_get_witness (desk, i));
   strip->caption = text;
   if (!witness)
     {
@@ -117,8 +156,10 @@ ant_strip_fill (AntDesk *desk, AntStripKind kind, AntStrip *strip, gsize size, c
   strip->n_masks = ant_desk_get_masks (desk, &strip->mask);
   if (kind == ANT_STRIP_SNR)
     fill_snr (desk, strip, size, text);
-  else if (kind == ANT_STRIP_WITNESS)
-    fill_witness (desk, strip, size, text);
+  else if (is_column (kind))
+    fill_column (desk, number_of (kind), strip, size, text);
+  else if (is_witness (kind))
+    fill_witness (desk, number_of (kind), strip, size, text);
   else
     fill_series (desk, kind, strip);
 }
@@ -134,6 +175,26 @@ ant_strip_range (AntDesk *desk, AntStripKind kind, const AntStrip *strip)
   return view;
 }
 
+/* Of a column or a witness: dips are not its business. */
+static char *
+describe_values (AntDesk *desk, AntStripKind kind, const char *from, const char *to)
+{
+  AntStrip strip;
+  char text[128];
+  ant_strip_fill (desk, kind, &strip, sizeof text, text);
+  const AntView *view = ant_desk_get_view (desk);
+  AntExtent extent = { 1, 0 };
+  if (strip.pyramid)
+    {
+      double first = fmax (0, ceil ((view->from - strip.start_d) / strip.step_d));
+      double last = fmax (first, floor ((view->to - strip.start_d) / strip.step_d) + 1);
+      extent = ant_pyramid_extent (strip.pyramid, (gsize) first, (gsize) last);
+    }
+  if (extent.low > extent.high)
+    return g_strdup_printf (_("From %s to %s; nothing observed"), from, to);
+  return g_strdup_printf (_("From %s to %s; values from %.5g to %.5g"), from, to, (double) extent.low, (double) extent.high);
+}
+
 char *
 ant_strip_describe (AntDesk *desk, AntStripKind kind)
 {
@@ -145,6 +206,8 @@ ant_strip_describe (AntDesk *desk, AntStripKind kind)
   for (gsize i = 0; i < n; i++)
     seen += marks[i].mid_d >= view->from && marks[i].mid_d <= view->to;
   g_autofree char *from = ant_instant_words (record, view->from), *to = ant_instant_words (record, view->to);
+  if (kind >= ANT_STRIP_WITNESS && ant_strip_wanted (desk, kind))
+    return describe_values (desk, kind, from, to);
   if (kind == ANT_STRIP_SNR && results)
     return g_strdup_printf (_("From %s to %s; %zu dips in view; threshold %.1f"), from, to, seen,
                             results->threshold_snr);

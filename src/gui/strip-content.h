@@ -10,8 +10,9 @@ typedef enum
   ANT_STRIP_IRRADIANCE, /* with its rotation curve; passages bracketed, when they are shown */
   ANT_STRIP_RESIDUAL,   /* what that leaves, dips bracketed */
   ANT_STRIP_SNR,        /* dip SNR of one duration, with the threshold; on demand */
-  ANT_STRIP_WITNESS,    /* another instrument, or the record over or less it; while one is open */
-  ANT_N_STRIPS,
+  ANT_STRIP_WITNESS,    /* the first other instrument, or the record over or less it; one for each that is open */
+  ANT_STRIP_COLUMN = ANT_STRIP_WITNESS + ANT_MOST_WITNESSES, /* the first further column of the record; one for each that is shown */
+  ANT_N_STRIPS = ANT_STRIP_COLUMN + ANT_MOST_SHOWN_COLUMNS,
 } AntStripKind;
 
 gboolean ant_strip_wanted (AntDesk *desk, AntStripKind kind);

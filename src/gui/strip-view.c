@@ -319,7 +319,7 @@ name (AntStripView *self)
 static void
 ant_strip_view_desk_changed (AntPlotView *plot, AntDeskChange what)
 {
-  if (what & (ANT_DESK_RECORD | ANT_DESK_LOOK | ANT_DESK_SNR | ANT_DESK_WITNESS))
+  if (what & (ANT_DESK_RECORD | ANT_DESK_LOOK | ANT_DESK_SNR | ANT_DESK_WITNESS | ANT_DESK_COLUMNS))
     name (ANT_STRIP_VIEW (plot));
   gtk_widget_set_cursor_from_name (GTK_WIDGET (plot),
                                    ant_desk_get_purpose (ant_plot_view_get_desk (plot)) != ANT_DRAG_VIEW ? "crosshair" : NULL);
@@ -355,7 +355,8 @@ ant_strip_view_class_init (AntStripViewClass *klass)
   AntPlotViewClass *plot_class = ANT_PLOT_VIEW_CLASS (klass);
   G_OBJECT_CLASS (klass)->finalize = ant_strip_view_finalize;
   plot_class->watches = ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_VIEW | ANT_DESK_JUDGEMENT
-                        | ANT_DESK_LOOK | ANT_DESK_MASKS | ANT_DESK_SNR | ANT_DESK_FOLD | ANT_DESK_SKY | ANT_DESK_WITNESS;
+                        | ANT_DESK_LOOK | ANT_DESK_MASKS | ANT_DESK_SNR | ANT_DESK_FOLD | ANT_DESK_SKY | ANT_DESK_WITNESS
+                        | ANT_DESK_COLUMNS;
   plot_class->paint = ant_strip_view_paint;
   plot_class->overlay = ant_strip_view_overlay;
   plot_class->describe = ant_strip_view_describe;

@@ -26,7 +26,7 @@ G_DEFINE_FINAL_TYPE (AntTimeStack, ant_time_stack, GTK_TYPE_WIDGET)
 static void
 desk_changed_cb (AntDesk *desk, guint what, AntTimeStack *self)
 {
-  if (what & (ANT_DESK_SNR | ANT_DESK_WITNESS))
+  if (what & (ANT_DESK_SNR | ANT_DESK_WITNESS | ANT_DESK_COLUMNS | ANT_DESK_RECORD))
     gtk_widget_queue_allocate (GTK_WIDGET (self));
   if (!(what & (ANT_DESK_POINTER | ANT_DESK_RECORD)))
     return;

@@ -84,7 +84,7 @@ open_witness (AntWindow *self, GVariant *parameter)
 static void
 close_witness (AntWindow *self, GVariant *parameter)
 {
-  ant_desk_close_witness (self->desk);
+  ant_desk_close_witness (self->desk, ant_desk_count_witnesses (self->desk) - 1); /* the latest */
 }
 
 static void
@@ -540,7 +540,7 @@ present_state (AntDesk *desk)
          | (busy != ANT_BUSY_NO && busy != ANT_BUSY_STOPPING ? NEEDS_WORK : 0u) | (ant_desk_can_go (desk, -1) ? NEEDS_BACK : 0u)
          | (ant_desk_can_go (desk, 1) ? NEEDS_FORWARD : 0u)
          | (selection || (record && ant_desk_get_span (desk, &span)) ? NEEDS_PLACE : 0u)
-         | (busy == ANT_BUSY_NO ? NEEDS_NO_SCAN : 0u) | (ant_desk_get_witness_path (desk) ? NEEDS_WITNESS : 0u);
+         | (busy == ANT_BUSY_NO ? NEEDS_NO_SCAN : 0u) | (ant_desk_count_witnesses (desk) > 0 ? NEEDS_WITNESS : 0u);
 }
 
 void

@@ -28,6 +28,7 @@ typedef struct
   AntResultTable which;
   AntTableFormat format;
   AntPaper paper;
+  GPtrArray *comparisons;  /* of a report: AntComparison */
   Rows rows;               /* of a list of dips */
 } Order;
 
@@ -69,6 +70,7 @@ order_free (gpointer data)
   ant_record_unref (order->record);
   ant_scan_results_unref (order->results);
   ant_judgements_free (order->judgements);
+  g_clear_pointer (&order->comparisons, g_ptr_array_unref);
   g_clear_object (&order->window);
   rows_clear (&order->rows);
   g_free (order);
@@ -195,13 +197,14 @@ make_report (gconstpointer data, GError **error)
 {
   const Order *order = data;
   g_autofree AntReportWord *word = ant_report_words (order->results, order->judgements);
-  return ant_report_bytes (order->results, word, order->paper, error);
+  return ant_report_bytes (order->results, word, order->comparisons, order->paper, error);
 }
 
 void
 ant_window_write_report (AntWindow *self, const char *path)
 {
   Order *order = order_new (self, make_report);
+  order->comparisons = ant_desk_get_comparisons (self->desk);
   order->paper = (AntPaper) ant_desk_get_settings (self->desk)->paper;
   start (order, path);
 }

@@ -3,6 +3,7 @@
 
 #include "data/analysis-text.h"
 #include "jobs/record-open.h"
+#include "readers/observer-reader.h"
 
 typedef struct
 {
@@ -26,10 +27,14 @@ static AntLayers *
 open_record (const Order *order, GCancellable *cancellable, GError **error)
 {
   g_autoptr (AntRecord) record = ant_record_open (order->path, &order->treatment->reading, 0, cancellable, error);
+  gboolean converts = order->treatment->settings.grid.distance != (double) ANT_DISTANCE_AS_IS;
+  const char *who = converts ? order->treatment->observer : NULL; /* nothing else of the grid is his */
+  g_autoptr (AntObserverChoice) choice = NULL;
   AntGridOptions grid;
   if (!record || g_cancellable_set_error_if_cancelled (cancellable, error)
-      || !ant_treatment_grid (order->treatment, &grid, error))
+      || (who && !(choice = ant_observer_open (who, error))) || !ant_treatment_grid (order->treatment, &grid, error))
     return NULL;
+  grid.observer = choice ? &choice->observer : NULL;
   gboolean good = ant_record_make_grid (record, &grid, error);
   ant_grid_options_clear (&grid);
   if (!good || g_cancellable_set_error_if_cancelled (cancellable, error))

@@ -9,6 +9,7 @@ typedef struct
   const AntScanResults *results;
   const AntLayers *layers;   /* of the same record, drawn with these results */
   const AntReportWord *word; /* [results->n_dips], or NULL */
+  const GPtrArray *comparisons; /* of AntComparison, or NULL */
 } AntReport;
 
 /* Each begins with its heading, and is left out where there is nothing to tell. */
@@ -19,6 +20,7 @@ void ant_report_dips (const AntReport *report, AntPages *pages);         /* one 
 void ant_report_repeats (const AntReport *report, AntPages *pages);      /* what recurs, event by event */
 void ant_report_brightenings (const AntReport *report, AntPages *pages);
 void ant_report_passages (const AntReport *report, AntPages *pages);
+void ant_report_witnesses (const AntReport *report, AntPages *pages);    /* other instruments beside it */
 void ant_report_settings (const AntReport *report, AntPages *pages);     /* settings, and how to do it again */
 
 /* The dips (or brightenings) as a table. */

@@ -78,6 +78,7 @@ ant_report_summary (const AntReport *report, AntPages *pages)
   const AntRecord *record = results->record;
   g_autofree char *name = ant_report_record_name (record), *title = g_strdup_printf (_("Dips in %s"), name), *below = ant_record_headline (record, &report->layers->summary);
   g_autoptr (GPtrArray) facts = ant_record_facts (record, &report->layers->summary), out = ant_record_left_out (&report->layers->summary);
+  ant_record_add_further (facts, record);
   ant_pages_title (pages, title, below);
   ant_pages_heading (pages, 1, _("The record"), 60);
   ant_pages_facts (pages, facts, 2);

@@ -9,7 +9,7 @@
 
 static void (*const sections[]) (const AntReport *report, AntPages *pages) = {
   ant_report_summary, ant_report_time,         ant_report_noise,    ant_report_dips,
-  ant_report_repeats,      ant_report_brightenings, ant_report_passages, ant_report_settings,
+  ant_report_repeats, ant_report_brightenings, ant_report_passages, ant_report_witnesses, ant_report_settings,
 };
 
 char *
@@ -56,12 +56,12 @@ ant_report_words (const AntScanResults *results, const AntJudgements *judgements
 }
 
 GBytes *
-ant_report_bytes (const AntScanResults *results, const AntReportWord *word, AntPaper paper, GError **error)
+ant_report_bytes (const AntScanResults *results, const AntReportWord *word, const GPtrArray *comparisons, AntPaper paper, GError **error)
 {
   g_autoptr (AntLayers) layers = ant_layers_new (results->record, &results->settings, results, NULL, error);
   if (!layers)
     return NULL;
-  AntReport report = { results, layers, word };
+  AntReport report = { results, layers, word, comparisons };
   g_autofree char *name = ant_report_record_name (results->record);
   g_autofree char *title = g_strdup_printf (_("Dips in %s"), name);
   g_autofree char *foot = g_strdup_printf (_("%s · Antumbra %s"), title, ANT_VERSION);

@@ -3,12 +3,14 @@
 
 #include "jobs/outside-job.h"
 #include "jobs/scan-job.h"
+#include "jobs/witness-job.h"
 
 typedef struct
 {
   AntLayers *layers;
   AntSettings settings;
   AntObserverChoice *choice; /* owned; NULL: nobody knows who took the record */
+  GPtrArray *witnesses, *comparisons; /* of AntWitness, AntComparison; NULL: there are none */
   double mid_d, duration_d; /* of an asked dip */
   AntProgressRelay *relay;  /* of a scan */
 } Order;
@@ -19,6 +21,8 @@ order_free (gpointer data)
   Order *order = data;
   ant_layers_unref (order->layers);
   ant_observer_choice_unref (order->choice);
+  g_clear_pointer (&order->witnesses, g_ptr_array_unref);
+  g_clear_pointer (&order->comparisons, g_ptr_array_unref);
   g_clear_pointer (&order->relay, ant_progress_relay_free);
   g_free (order);
 }
@@ -42,6 +46,25 @@ ant_scan_outcome_free (AntScanOutcome *outcome)
   g_free (outcome);
 }
 
+/* Beside the record as it is read now. */
+static gboolean
+compare_anew (Order *order, GCancellable *cancellable, GError **error)
+{
+  AntRecord *record = order->layers->record;
+  for (guint i = 0; order->comparisons && i < order->comparisons->len; i++)
+    {
+      AntComparison *comparison = g_ptr_array_index (order->comparisons, i);
+      if (comparison->record == record)
+        continue;
+      AntComparison *anew = ant_witness_job_open (record, g_ptr_array_index (order->witnesses, i), &order->settings, cancellable, error);
+      if (!anew)
+        return FALSE;
+      order->comparisons->pdata[i] = anew;
+      ant_comparison_unref (comparison);
+    }
+  return TRUE;
+}
+
 static gpointer
 run_scan (gpointer data)
 {
@@ -50,11 +73,13 @@ run_scan (gpointer data)
   AntRecord *record = order->layers->record;
   GError *error = NULL;
   g_autoptr (AntScanOutcome) outcome = g_new0 (AntScanOutcome, 1);
-  outcome->results =
-      ant_scan_job_run_partly (record, &order->settings, g_task_get_cancellable (task), ant_progress_relay_note,
-                               order->relay, &error);
-  if (outcome->results && order->choice
-      && !ant_outside_job_run (outcome->results, order->choice, NULL, NULL, &error))
+  if (compare_anew (order, g_task_get_cancellable (task), &error))
+    outcome->results =
+        ant_scan_job_run_partly (record, &order->settings, g_task_get_cancellable (task), ant_progress_relay_note,
+                                 order->relay, &error);
+  gboolean outside = order->choice || (order->comparisons && order->comparisons->len > 0);
+  if (outcome->results && outside
+      && !ant_outside_job_run (outcome->results, order->choice, order->comparisons, NULL, &error))
     g_clear_pointer (&outcome->results, ant_scan_results_unref);
   if (outcome->results && outcome->results->reach < ANT_SCAN_COMPLETE) /* who stops does not want to wait */
     outcome->layers = ant_layers_ref (order->layers);
@@ -67,13 +92,32 @@ run_scan (gpointer data)
   return NULL;
 }
 
+static gpointer
+copy_witness (gconstpointer witness, gpointer unused)
+{
+  return ant_witness_copy (witness);
+}
+
+static gpointer
+ref_comparison (gconstpointer comparison, gpointer unused)
+{
+  return ant_comparison_ref ((AntComparison *) (gsize) comparison);
+}
+
 void
-ant_scan_task_async (AntLayers *layers, const AntSettings *settings, AntObserverChoice *choice, GCancellable *cancellable,
-                     AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data)
+ant_scan_task_async (AntLayers *layers, const AntSettings *settings, AntObserverChoice *choice, const GPtrArray *witnesses,
+                     const GPtrArray *comparisons, GCancellable *cancellable, AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data)
 {
   GTask *task = g_task_new (NULL, cancellable, callback, data);
   Order *order = order_new (layers, settings);
   order->choice = choice ? ant_observer_choice_ref (choice) : NULL;
+  if (comparisons)
+    {
+      order->witnesses = g_ptr_array_copy ((GPtrArray *) (gsize) witnesses, (GCopyFunc) copy_witness, NULL);
+      g_ptr_array_set_free_func (order->witnesses, (GDestroyNotify) ant_witness_free);
+      order->comparisons = g_ptr_array_copy ((GPtrArray *) (gsize) comparisons, (GCopyFunc) ref_comparison, NULL);
+      g_ptr_array_set_free_func (order->comparisons, (GDestroyNotify) ant_comparison_unref);
+    }
   g_task_set_source_tag (task, ant_scan_task_async);
   g_task_set_check_cancellable (task, FALSE); /* a stopped scan has results too */
   order->relay = ant_progress_relay_new (task, progress, data);

@@ -16,10 +16,13 @@ typedef struct
 void ant_scan_outcome_free (AntScanOutcome *outcome);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntScanOutcome, ant_scan_outcome_free)
 
-/* progress is called in the caller's context, about ten times a second, never after the callback began; `data` goes to
+/* comparisons: of AntComparison, what the verdicts have of other instruments, or NULL; those beside another reading of the record
+ * are made anew of `witnesses` (of AntWitness, in the same order).
+ * progress is called in the caller's context, about ten times a second, never after the callback began; `data` goes to
  * both. The task keeps references to layers and choice (NULL: nobody knows who took the record) and a copy of the settings. */
 void ant_scan_task_async (AntLayers *layers, const AntSettings *settings, AntObserverChoice *choice,
-                          GCancellable *cancellable, AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data);
+                          const GPtrArray *witnesses, const GPtrArray *comparisons, GCancellable *cancellable,
+                          AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data);
 /* What a stopped scan found before is kept (reach of its results below ANT_SCAN_COMPLETE). NULL with one sentence;
  * G_IO_ERROR_CANCELLED if it was stopped before it found anything. */
 AntScanOutcome *ant_scan_task_finish (GAsyncResult *result, GError **error);

@@ -5,34 +5,36 @@
 #include <math.h>
 #include <string.h>
 
+#include "jobs/record-open.h"
 #include "jobs/scan-job.h"
-#include "readers/reader.h"
 
 #define COLUMNS_MARK "::"
 
-gboolean
-ant_witness_parse (const char *text, char **path, AntReadingChoices *choices, GError **error)
+AntWitness *
+ant_witness_parse (const char *text, GError **error)
 {
   const char *mark = g_strrstr (text, COLUMNS_MARK);
-  memset (choices, 0, sizeof *choices);
-  *path = mark ? g_strndup (text, (gsize) (mark - text)) : g_strdup (text);
-  return !mark || ant_reading_choices_parse_columns (choices, mark + strlen (COLUMNS_MARK), error);
+  g_autofree char *path = mark ? g_strndup (text, (gsize) (mark - text)) : g_strdup (text);
+  g_autoptr (AntWitness) witness = ant_witness_new (path, NULL, NULL);
+  if (mark && !ant_reading_choices_parse_columns (&witness->reading, mark + strlen (COLUMNS_MARK), error))
+    return NULL;
+  return g_steal_pointer (&witness);
 }
 
 AntComparison *
-ant_witness_job_open (AntRecord *record, const char *path, const AntReadingChoices *choices, const AntSettings *settings,
-                      GCancellable *cancellable, GError **error)
+ant_witness_job_open (AntRecord *record, const AntWitness *witness, const AntSettings *settings, GCancellable *cancellable,
+                      GError **error)
 {
-  g_autoptr (AntRecord) witness = ant_reader_open (path, choices, cancellable, error);
+  g_autoptr (AntRecord) read = ant_record_open (witness->path, &witness->reading, 0, cancellable, error);
   AntGridOptions grid = ant_settings_grid (settings);
   grid.exposure_d = grid.cadence_d = 0.0;
   grid.stamp = ANT_AT_UNKNOWN;
-  if (!witness || !ant_record_make_grid (witness, &grid, error))
+  if (!read || !ant_record_make_grid (read, &grid, error))
     {
       g_prefix_error (error, _("the witness: "));
       return NULL;
     }
-  return ant_comparison_new (record, witness, settings->witness_drift_d, error);
+  return ant_comparison_new (record, read, settings->witness_drift_d, error);
 }
 
 void

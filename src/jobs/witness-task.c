@@ -6,7 +6,7 @@
 typedef struct
 {
   AntRecord *record;
-  char *path;
+  AntWitness *witness;
   AntSettings settings;
 } Order;
 
@@ -15,7 +15,7 @@ order_free (gpointer data)
 {
   Order *order = data;
   ant_record_unref (order->record);
-  g_free (order->path);
+  ant_witness_free (order->witness);
   g_free (order);
 }
 
@@ -44,7 +44,7 @@ run (gpointer data)
   const Order *order = g_task_get_task_data (task);
   GError *error = NULL;
   AntComparison *comparison
-      = ant_witness_job_open (order->record, order->path, NULL, &order->settings, g_task_get_cancellable (task), &error);
+      = ant_witness_job_open (order->record, order->witness, &order->settings, g_task_get_cancellable (task), &error);
   if (!comparison)
     {
       g_task_return_error (task, error);
@@ -61,12 +61,12 @@ run (gpointer data)
 }
 
 void
-ant_witness_task_async (AntRecord *record, const char *path, const AntSettings *settings, GCancellable *cancellable,
+ant_witness_task_async (AntRecord *record, const AntWitness *witness, const AntSettings *settings, GCancellable *cancellable,
                         GAsyncReadyCallback callback, gpointer data)
 {
   GTask *task = g_task_new (NULL, cancellable, callback, data);
   Order *order = g_new0 (Order, 1);
-  *order = (Order){ ant_record_ref (record), g_strdup (path), *settings };
+  *order = (Order){ ant_record_ref (record), ant_witness_copy (witness), *settings };
   g_task_set_source_tag (task, ant_witness_task_async);
   g_task_set_task_data (task, order, order_free);
   g_thread_unref (g_thread_new ("witness", run, task));

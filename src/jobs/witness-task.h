@@ -25,8 +25,8 @@ typedef struct
 AntWitnessStrips *ant_witness_strips_ref (AntWitnessStrips *strips);
 void ant_witness_strips_unref (AntWitnessStrips *strips); /* NULL is fine */
 
-/* The record is referenced, path and settings are copied; the callback runs in the caller's context. */
-void ant_witness_task_async (AntRecord *record, const char *path, const AntSettings *settings, GCancellable *cancellable,
+/* The record is referenced, witness and settings are copied; the callback runs in the caller's context. */
+void ant_witness_task_async (AntRecord *record, const AntWitness *witness, const AntSettings *settings, GCancellable *cancellable,
                              GAsyncReadyCallback callback, gpointer data);
 /* NULL with one sentence; G_IO_ERROR_CANCELLED if stopped. */
 AntWitnessStrips *ant_witness_task_finish (GAsyncResult *result, GError **error);

@@ -84,6 +84,27 @@ an_asked_dip_is_measured_in_both (Place *place, gconstpointer unused)
 }
 
 static void
+an_analysis_goes_on_with_its_witness (Place *place, gconstpointer unused)
+{
+  g_autofree char *witness = g_strconcat (place->witness, "::value=3", NULL), *out = NULL, *err = NULL, *more = NULL, *text = NULL;
+  g_autofree char *analysis = g_build_filename (place->folder, "work.antumbra", NULL), *tables = g_build_filename (place->folder, "out", NULL);
+  const char *const first[] = { g_getenv ("ANT_CLI"), "scan", place->record, "--no-repeats", "--witness", witness, "--save", analysis, NULL };
+  const char *const again[] = { g_getenv ("ANT_CLI"), "scan", "--no-repeats", "--from", analysis, "--no-report", "--out", tables, NULL };
+  const char *const remove[] = { "rm", "-r", tables, analysis, NULL };
+  g_assert_cmpint (run (&out, &err, first), ==, 0);
+  g_assert_true (g_file_get_contents (analysis, &text, NULL, NULL));
+  g_assert_nonnull (strstr (text, "\"path\" : \"other.csv\""));
+  g_clear_pointer (&out, g_free);
+  g_clear_pointer (&err, g_free);
+  g_assert_cmpint (run (&out, &err, again), ==, 0);
+  g_assert_cmpstr (err, ==, "");
+  g_assert_nonnull (strstr (out, "Witness 1, "));
+  g_assert_nonnull (strstr (out, "witness-1.csv"));
+  g_clear_pointer (&err, g_free);
+  g_assert_cmpint (run (&more, &err, remove), ==, 0);
+}
+
+static void
 what_is_no_witness_is_refused_in_one_line (Place *place, gconstpointer unused)
 {
   g_autofree char *out = NULL, *err = NULL, *missing = g_build_filename (place->folder, "none.csv", NULL);
@@ -104,6 +125,7 @@ main (int argc, char **argv)
   g_test_init (&argc, &argv, NULL);
   g_test_add ("/cli/witness/info-tells-of-the-comparison", Place, NULL, set_up, info_tells_of_the_comparison, tear_down);
   g_test_add ("/cli/witness/an-asked-dip-is-measured-in-both", Place, NULL, set_up, an_asked_dip_is_measured_in_both, tear_down);
+  g_test_add ("/cli/witness/an-analysis-goes-on-with-its-witness", Place, NULL, set_up, an_analysis_goes_on_with_its_witness, tear_down);
   g_test_add ("/cli/witness/what-is-no-witness-is-refused-in-one-line", Place, NULL, set_up, what_is_no_witness_is_refused_in_one_line,
               tear_down);
   return g_test_run ();

@@ -101,6 +101,25 @@ the_record_is_named_from_the_file (void)
 }
 
 static void
+witnesses_come_back_and_may_be_absent (void)
+{
+  g_autoptr (AntAnalysis) analysis = test_worked_analysis ();
+  g_autofree char *newer = NULL, *text = ant_analysis_to_text (analysis, "/somewhere/notes/a.antumbra");
+  g_assert_nonnull (strstr (text, "\"path\" : \"../records/other instrument.nc\""));
+  g_autoptr (AntAnalysis) back = ant_analysis_parse ("/moved/notes/a.antumbra", text, strlen (text), &newer, NULL);
+  const AntTreatment *treatment = ant_analysis_get_treatment (back);
+  g_assert_cmpuint (treatment->witnesses->len, ==, 1);
+  const AntWitness *witness = g_ptr_array_index (treatment->witnesses, 0);
+  g_assert_cmpstr (witness->path, ==, "/moved/records/other instrument.nc");
+  g_assert_cmpstr (witness->sha256, ==, "5f70bf18a086007016e948b04aed3b82103a36bea41755b6cddfaf10ace3c6ef");
+  g_assert_cmpstr (witness->reading.value_column, ==, "tsi");
+  g_assert_cmpuint (witness->reading.fill_values->len, ==, 2);
+  g_autofree char *hidden = changed_text ("\"witnesses\" :", "\"before\" :");
+  g_autoptr (AntAnalysis) older = read_text (hidden);
+  g_assert_cmpuint (ant_analysis_get_treatment (older)->witnesses->len, ==, 0);
+}
+
+static void
 what_is_not_known_is_written_again (void)
 {
   const char *const places[] = { "\"antumbra_analysis\" : 1", "\"sha256\" :", "\"from_d\" : null", "\"stamp\" : \"start\"",
@@ -275,6 +294,7 @@ main (int argc, char **argv)
   g_test_add_func ("/data/analysis-text/what-was-found-comes-back-to-the-last-digit", what_was_found_comes_back_to_the_last_digit);
   g_test_add_func ("/data/analysis-text/settings-come-back-to-the-last-bit", settings_come_back_to_the_last_bit);
   g_test_add_func ("/data/analysis-text/the-record-is-named-from-the-file", the_record_is_named_from_the_file);
+  g_test_add_func ("/data/analysis-text/witnesses-come-back-and-may-be-absent", witnesses_come_back_and_may_be_absent);
   g_test_add_func ("/data/analysis-text/what-is-not-known-is-written-again", what_is_not_known_is_written_again);
   g_test_add_func ("/data/analysis-text/a-setting-back-at-its-default-does-not-come-again",
                    a_setting_back_at_its_default_does_not_come_again);

@@ -55,6 +55,11 @@ every_change_has_its_name (void)
   g_assert_cmpstr (ant_analysis_undo_name (analysis), ==, "Unmask a span");
   ant_analysis_reset_settings (analysis);
   g_assert_cmpstr (ant_analysis_undo_name (analysis), ==, "Reset all settings");
+  g_autoptr (AntWitness) witness = ant_witness_new ("/records/other.csv", NULL, NULL);
+  g_assert_true (ant_analysis_add_witness (analysis, witness));
+  g_assert_cmpstr (ant_analysis_undo_name (analysis), ==, "Witness other.csv");
+  ant_analysis_remove_witness (analysis, 0);
+  g_assert_cmpstr (ant_analysis_undo_name (analysis), ==, "Without witness other.csv");
 }
 
 static void
@@ -145,7 +150,9 @@ step (AntAnalysis *analysis, AntRandom *random, guint number)
   double at_d = floor (20 * ant_random_uniform (random)) / 2;
   g_autofree char *text = g_strdup_printf ("%.3f", 1 + 12 * ant_random_uniform (random));
   g_autofree char *dip = g_strdup_printf ("dip %u", number % 60);
-  switch ((int) (6 * ant_random_uniform (random)))
+  g_autofree char *path = g_strdup_printf ("/records/%u.csv", number % 7);
+  g_autoptr (AntWitness) witness = ant_witness_new (path, number % 3 ? "5f70bf" : NULL, NULL);
+  switch ((int) (8 * ant_random_uniform (random)))
     {
     case 0:
       set (analysis, number % 2 ? "duration-max" : "false-alarms-per-year", text);
@@ -161,6 +168,12 @@ step (AntAnalysis *analysis, AntRandom *random, guint number)
       break;
     case 4:
       ant_analysis_unmask (analysis, (AntSpan) { at_d, at_d + 3 * ant_random_uniform (random) });
+      break;
+    case 5:
+      ant_analysis_add_witness (analysis, witness);
+      break;
+    case 6:
+      ant_analysis_remove_witness (analysis, number % ANT_MOST_WITNESSES);
       break;
     default:
       if (number % 16 == 0)
@@ -271,6 +284,30 @@ results_are_stale_once_the_treatment_differs (void)
 }
 
 static void
+witnesses_are_few_and_none_twice (void)
+{
+  g_autoptr (AntAnalysis) analysis = ant_analysis_new ();
+  const AntTreatment *before = ant_analysis_get_treatment (analysis);
+  g_autoptr (AntTreatment) without = ant_treatment_copy (before);
+  for (int i = 0; i < ANT_MOST_WITNESSES; i++)
+    {
+      g_autofree char *path = g_strdup_printf ("/records/%d.csv", i);
+      g_autoptr (AntWitness) witness = ant_witness_new (path, "5f", NULL), again = ant_witness_new (path, NULL, NULL);
+      g_assert_true (ant_analysis_add_witness (analysis, witness));
+      g_assert_false (ant_analysis_add_witness (analysis, again));
+    }
+  g_autoptr (AntWitness) more = ant_witness_new ("/records/more.csv", NULL, NULL);
+  g_assert_false (ant_analysis_add_witness (analysis, more));
+  g_autoptr (AntWitness) other = ant_witness_new ("/records/2.csv", "60", NULL);
+  g_autoptr (AntTreatment) with = ant_treatment_copy (ant_analysis_get_treatment (analysis));
+  g_assert_true (ant_analysis_update_witness (analysis, other));
+  g_assert_false (ant_analysis_update_witness (analysis, other));
+  g_assert_false (ant_treatment_same (with, ant_analysis_get_treatment (analysis)));
+  g_assert_false (ant_treatment_same (without, ant_analysis_get_treatment (analysis)));
+  g_assert_true (ant_treatment_same_grid (without, ant_analysis_get_treatment (analysis)));
+}
+
+static void
 verdicts_are_carried_over_and_counted (void)
 {
   g_autoptr (AntAnalysis) analysis = test_worked_analysis ();
@@ -355,6 +392,7 @@ main (int argc, char **argv)
   g_test_add_func ("/data/analysis/a-snapshot-stays-as-it-was", a_snapshot_stays_as_it_was);
   g_test_add_func ("/data/analysis/only-what-nobody-can-compute-again-would-be-lost", only_what_nobody_can_compute_again_would_be_lost);
   g_test_add_func ("/data/analysis/results-are-stale-once-the-treatment-differs", results_are_stale_once_the_treatment_differs);
+  g_test_add_func ("/data/analysis/witnesses-are-few-and-none-twice", witnesses_are_few_and_none_twice);
   g_test_add_func ("/data/analysis/verdicts-are-carried-over-and-counted", verdicts_are_carried_over_and_counted);
   g_test_add_func ("/data/analysis/of-another-record-only-the-words-are-kept", of_another_record_only_the_words_are_kept);
   g_test_add_func ("/data/analysis/times-follow-a-record-that-begins-earlier", times_follow_a_record_that_begins_earlier);

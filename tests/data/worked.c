@@ -103,6 +103,10 @@ test_worked_analysis (void)
   g_assert_true (ant_analysis_set_setting (analysis, ant_setting_find ("exposure"), "50.3", NULL));
   g_assert_true (ant_analysis_set_setting (analysis, ant_setting_find ("stamp"), "start", NULL));
   ant_analysis_mask (analysis, (AntSpan) { 3.25, 3.5 }, "shutter test, “cold”");
+  g_autoptr (AntWitness) witness = ant_witness_new ("/somewhere/records/other instrument.nc", record->sha256, NULL);
+  g_assert_true (ant_reading_choices_parse_columns (&witness->reading, "time=1,value=tsi", NULL));
+  g_assert_true (ant_reading_choices_parse_fills (&witness->reading, "-99,0", NULL));
+  g_assert_true (ant_analysis_add_witness (analysis, witness));
   g_assert_true (ant_scan_results_join (results, record));
   ant_analysis_set_results (analysis, results, ant_analysis_get_treatment (analysis));
   ant_analysis_judge (analysis, "dip 1", 2, 0.3, ANT_CLASS_PLANET);

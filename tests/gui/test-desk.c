@@ -1,5 +1,7 @@
 /* test-desk.c - views, selection and spans, without a window. */
+#include <glib/gstdio.h>
 #include <math.h>
+#include <stdio.h>
 #include <string.h>
 
 #include "support.h"
@@ -71,41 +73,72 @@ a_long_drag_is_one_step_back (void)
 }
 
 static gboolean
-has_witness (gpointer desk)
+has_no_witness_to_read (gpointer desk)
 {
-  return ant_desk_get_witness (desk) || !ant_desk_get_witness_path (desk);
+  for (guint i = 0; i < ant_desk_count_witnesses (desk); i++)
+    if (!ant_desk_get_witness_strips (desk, i) && !ant_desk_get_witness_problem (desk, i))
+      return FALSE;
+  return test_gui_idle (desk);
+}
+
+/* The record under another name, so that it is another file. */
+static char *
+copy_record (void)
+{
+  char *path = NULL, *text = NULL;
+  gsize size;
+  g_close (g_file_open_tmp (NULL, &path, NULL), NULL);
+  g_assert_true (g_file_get_contents (test_gui_record (), &text, &size, NULL));
+  g_assert_true (g_file_set_contents (path, text, (gssize) size, NULL));
+  g_free (text);
+  return path;
 }
 
 /* The record as its own witness: the ratio is one throughout. */
 static void
-a_witness_is_compared_and_goes_with_the_record (void)
+a_witness_is_compared_until_it_is_closed (void)
 {
   g_autoptr (AntDesk) desk = desk_with_record ();
   ant_desk_open_witness (desk, test_gui_record ());
-  g_assert_null (ant_desk_get_witness (desk));
-  test_gui_wait (has_witness, desk, 20);
-  const AntWitnessStrips *witness = ant_desk_get_witness (desk);
+  g_assert_nonnull (ant_desk_get_witness (desk, 0));
+  g_assert_null (ant_desk_get_witness_strips (desk, 0));
+  test_gui_wait (has_no_witness_to_read, desk, 20);
+  const AntWitnessStrips *witness = ant_desk_get_witness_strips (desk, 0);
   g_assert_nonnull (witness);
   g_assert_cmpuint (witness->comparison->n, ==, ant_desk_get_record (desk)->series.n);
   for (gsize i = 0; i < witness->comparison->n; i++)
     g_assert_true (isnan (witness->comparison->ratio_ppm[i]) || fabsf (witness->comparison->ratio_ppm[i]) < 0.01f);
-  ant_desk_close_witness (desk);
-  g_assert_null (ant_desk_get_witness (desk));
-  g_assert_null (ant_desk_get_witness_path (desk));
+  ant_desk_close_witness (desk, 0);
+  g_assert_cmpuint (ant_desk_count_witnesses (desk), ==, 0);
+  g_assert_null (ant_desk_get_witness (desk, 0));
 }
 
 static void
-another_drift_compares_anew (void)
+several_witnesses_are_opened_and_undone_one_by_one (void)
 {
   g_autoptr (AntDesk) desk = desk_with_record ();
+  g_autofree char *copy = copy_record ();
   ant_desk_open_witness (desk, test_gui_record ());
-  test_gui_wait (has_witness, desk, 20);
-  g_assert_true (ant_desk_set_setting (desk, ant_setting_find ("witness-drift"), "3", NULL));
-  const AntWitnessStrips *before = ant_desk_get_witness (desk);
-  for (int i = 0; i < 200 && ant_desk_get_witness (desk) == before; i++)
-    g_main_context_iteration (NULL, TRUE);
-  g_assert_cmpfloat (ant_desk_get_witness (desk)->comparison->drift_d, ==, 3.0);
-  g_assert_false (ant_desk_is_stale (desk));
+  ant_desk_open_witness (desk, copy);
+  ant_desk_open_witness (desk, copy); /* it is there already */
+  test_gui_wait (has_no_witness_to_read, desk, 20);
+  g_assert_cmpuint (ant_desk_count_witnesses (desk), ==, 2);
+  g_autoptr (GPtrArray) comparisons = ant_desk_get_comparisons (desk);
+  g_assert_cmpuint (comparisons->len, ==, 2);
+  g_assert_true (ant_desk_undo (desk));
+  g_assert_cmpuint (ant_desk_count_witnesses (desk), ==, 1);
+  g_assert_true (ant_desk_undo (desk));
+  g_assert_cmpuint (ant_desk_count_witnesses (desk), ==, 0);
+  g_assert_true (ant_desk_redo (desk));
+  test_gui_wait (has_no_witness_to_read, desk, 20);
+  g_assert_nonnull (ant_desk_get_witness_strips (desk, 0));
+  g_unlink (copy);
+}
+
+static gboolean
+is_saved (gpointer desk)
+{
+  return !ant_desk_is_saving (desk);
 }
 
 static void
@@ -115,6 +148,47 @@ failed_cb (AntDesk *desk, const char *sentence, char **said)
   *said = g_strdup (sentence);
 }
 
+/* The file that keeps it names the witness; other bytes of it are told, and become the analysis's. */
+static void
+witnesses_come_back_with_the_analysis (void)
+{
+  g_autoptr (AntDesk) desk = desk_with_record (), other = ant_desk_new ();
+  g_autofree char *copy = copy_record (), *folder = g_dir_make_tmp (NULL, NULL), *said = NULL;
+  g_autofree char *path = g_build_filename (folder, "work.antumbra", NULL);
+  ant_desk_open_witness (desk, copy);
+  test_gui_wait (has_no_witness_to_read, desk, 20);
+  ant_desk_save (desk, path);
+  test_gui_wait (is_saved, desk, 20);
+  FILE *file = fopen (copy, "a");
+  g_assert_cmpint (fputs ("# one more remark\n", file), >, 0);
+  fclose (file);
+  g_signal_connect (other, "failed", G_CALLBACK (failed_cb), &said);
+  ant_desk_open (other, path);
+  test_gui_wait (test_gui_idle, other, 20);
+  g_assert_cmpuint (ant_desk_count_witnesses (other), ==, 1);
+  test_gui_wait (has_no_witness_to_read, other, 20);
+  g_assert_nonnull (ant_desk_get_witness_strips (other, 0));
+  g_assert_nonnull (said);
+  g_assert_nonnull (strstr (said, "the bytes of this witness"));
+  g_assert_true (ant_analysis_is_changed (ant_desk_get_analysis (other)));
+  g_unlink (copy);
+  g_unlink (path);
+  g_rmdir (folder);
+}
+
+static void
+another_drift_compares_anew (void)
+{
+  g_autoptr (AntDesk) desk = desk_with_record ();
+  ant_desk_open_witness (desk, test_gui_record ());
+  test_gui_wait (has_no_witness_to_read, desk, 20);
+  g_assert_true (ant_desk_set_setting (desk, ant_setting_find ("witness-drift"), "3", NULL));
+  const AntWitnessStrips *before = ant_desk_get_witness_strips (desk, 0);
+  for (int i = 0; i < 200 && ant_desk_get_witness_strips (desk, 0) == before; i++)
+    g_main_context_iteration (NULL, TRUE);
+  g_assert_cmpfloat (ant_desk_get_witness_strips (desk, 0)->comparison->drift_d, ==, 3.0);
+}
+
 static void
 what_is_no_witness_is_told (void)
 {
@@ -122,10 +196,47 @@ what_is_no_witness_is_told (void)
   g_autofree char *said = NULL;
   g_signal_connect (desk, "failed", G_CALLBACK (failed_cb), &said);
   ant_desk_open_witness (desk, "/nowhere/record.csv");
-  test_gui_wait (has_witness, desk, 20);
-  g_assert_null (ant_desk_get_witness_path (desk));
+  test_gui_wait (has_no_witness_to_read, desk, 20);
+  g_assert_cmpuint (ant_desk_count_witnesses (desk), ==, 0);
+  g_assert_null (ant_analysis_undo_name (ant_desk_get_analysis (desk)));
   g_assert_nonnull (said);
   g_assert_nonnull (strstr (said, "the witness: "));
+}
+
+/* Columns */
+
+static gboolean
+has_column (gpointer desk)
+{
+  return ant_desk_get_column_strip (desk, 0) != NULL && test_gui_idle (desk);
+}
+
+static void
+a_further_column_is_shown_while_there_is_one (void)
+{
+  g_autoptr (AntDesk) desk = ant_desk_new ();
+  g_autofree char *path = NULL;
+  g_autoptr (GString) text = g_string_new ("jd,tsi (W/m2),temperature (K)\n");
+  g_close (g_file_open_tmp (NULL, &path, NULL), NULL);
+  for (int i = 0; i < 500; i++)
+    g_string_append_printf (text, "%.8f,%.4f,%.2f\n", 2466583.5 + i / 288.0, 1361 + 0.01 * sin (i), 290 + 0.5 * cos (i / 20.0));
+  g_assert_true (g_file_set_contents (path, text->str, -1, NULL));
+  ant_desk_open (desk, path);
+  test_gui_wait (test_gui_idle, desk, 20);
+  g_assert_false (ant_desk_is_column_shown (desk, 0));
+  ant_desk_show_column (desk, 0, TRUE);
+  ant_desk_show_column (desk, 7, TRUE); /* there is no such */
+  g_assert_cmpuint (ant_desk_count_shown_columns (desk), ==, 1);
+  test_gui_wait (has_column, desk, 20);
+  const AntColumnStrip *strip = ant_desk_get_column_strip (desk, 0);
+  g_assert_cmpfloat_with_epsilon ((double) strip->value[40], 290 + 0.5 * cos (2.0), 0.01);
+  ant_desk_reload (desk); /* it stays */
+  test_gui_wait (test_gui_idle, desk, 20);
+  g_assert_true (ant_desk_is_column_shown (desk, 0));
+  ant_desk_open (desk, test_gui_record ()); /* which has none */
+  test_gui_wait (test_gui_idle, desk, 20);
+  g_assert_cmpuint (ant_desk_count_shown_columns (desk), ==, 0);
+  g_unlink (path);
 }
 
 static gboolean
@@ -203,7 +314,10 @@ add (void)
   g_test_add_func ("/gui/desk/the-readout-tells-time-value-and-residual", the_readout_tells_time_value_and_residual);
   g_test_add_func ("/gui/desk/a-span-grows-by-keys-about-the-middle-of-the-view",
                    a_span_grows_by_keys_about_the_middle_of_the_view);
-  g_test_add_func ("/gui/desk/a-witness-is-compared-and-goes-with-the-record", a_witness_is_compared_and_goes_with_the_record);
+  g_test_add_func ("/gui/desk/a-witness-is-compared-until-it-is-closed", a_witness_is_compared_until_it_is_closed);
+  g_test_add_func ("/gui/desk/several-witnesses-are-opened-and-undone-one-by-one", several_witnesses_are_opened_and_undone_one_by_one);
+  g_test_add_func ("/gui/desk/witnesses-come-back-with-the-analysis", witnesses_come_back_with_the_analysis);
+  g_test_add_func ("/gui/desk/a-further-column-is-shown-while-there-is-one", a_further_column_is_shown_while_there_is_one);
   g_test_add_func ("/gui/desk/another-drift-compares-anew", another_drift_compares_anew);
   g_test_add_func ("/gui/desk/what-is-no-witness-is-told", what_is_no_witness_is_told);
 }

@@ -131,7 +131,7 @@ progress_rises_and_the_loop_stays_awake (void)
   Watch watch = { .monotone = TRUE };
   AntSettings settings;
   ant_settings_init (&settings);
-  ant_scan_task_async (layers, &settings, NULL, NULL, progress_cb, scanned_cb, &watch);
+  ant_scan_task_async (layers, &settings, NULL, NULL, NULL, NULL, progress_cb, scanned_cb, &watch);
   wait_until_done (&watch);
   g_assert_no_error (watch.error);
   g_assert_true (watch.monotone);
@@ -151,7 +151,7 @@ a_stopped_scan_says_so (void)
   Watch watch = { 0 };
   AntSettings settings;
   ant_settings_init (&settings);
-  ant_scan_task_async (layers, &settings, NULL, stop, NULL, scanned_cb, &watch);
+  ant_scan_task_async (layers, &settings, NULL, NULL, NULL, stop, NULL, scanned_cb, &watch);
   g_cancellable_cancel (stop);
   wait_until_done (&watch);
   g_assert_error (watch.error, G_IO_ERROR, G_IO_ERROR_CANCELLED);
