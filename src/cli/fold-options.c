@@ -5,12 +5,9 @@
 #include <math.h>
 #include <string.h>
 
-#include "core/running-median.h"
 #include "core/units.h"
 #include "data/error.h"
 #include "data/fold.h"
-
-#define DRIFT_PERIODS 3.0 /* the running median that is taken off before folding: so many turns, or reaches */
 
 void
 ant_fold_options_add (GOptionContext *context, AntFoldWish *wish)
@@ -72,20 +69,6 @@ pick (const AntFoldWish *wish, const AntRecord *record, GError **error)
   return NULL;
 }
 
-/* Slow changes would be spread over all bins as scatter: take a running median off. */
-static gboolean
-flatten (const AntRecord *record, const AntFoldOptions *options, float *value, GError **error)
-{
-  double turn_d = options->clock == ANT_FOLD_ORBIT ? options->period_d : options->reach_d;
-  gsize half_width = (gsize) fmin (0.5 * DRIFT_PERIODS * turn_d / record->series.step_d, (double) record->series.n);
-  g_autofree float *slow = g_new (float, record->series.n);
-  if (!ant_status_to_error (ant_running_median (record->series.n, value, half_width, slow), _("the running median"), error))
-    return FALSE;
-  for (gsize i = 0; i < record->series.n; i++)
-    value[i] -= slow[i];
-  return TRUE;
-}
-
 gboolean
 ant_fold_options_print (const AntFoldWish *wish, const AntRecord *record, const AntSettings *settings, GError **error)
 {
@@ -95,12 +78,13 @@ ant_fold_options_print (const AntFoldWish *wish, const AntRecord *record, const 
   if (!wish->clock)
     return TRUE;
   g_autofree float *value = parse (wish, settings, &options, error) ? pick (wish, record, error) : NULL;
-  if (!value || !flatten (record, &options, value, error) || !ant_fold (&record->series, value, &options, bin))
+  if (!value || !ant_status_to_error (ant_fold_flatten (&record->series, &options, value), _("the running median"), error)
+      || !ant_fold (&record->series, value, &options, bin))
     return FALSE;
   double significance = ant_fold_swing (bin, options.n_bins, &swing);
   gboolean by_orbit = options.clock == ANT_FOLD_ORBIT;
   g_print ("# %s by %s, about a running median of %g turns; greatest difference %.5g, %.3g times its error\n",
-           wish->column ? wish->column : "relative irradiance, ppm,", by_orbit ? "phase" : "minutes since a gap", DRIFT_PERIODS, swing,
+           wish->column ? wish->column : "relative irradiance, ppm,", by_orbit ? "phase" : "minutes since a gap", ANT_FOLD_DRIFT_TURNS, swing,
            significance);
   g_print ("%s,mean,sigma,samples\n", by_orbit ? "phase" : "minutes");
   for (guint b = 0; b < options.n_bins; b++)

@@ -4,6 +4,7 @@
 #include <math.h>
 #include <string.h>
 
+#include "core/running-median.h"
 #include "core/units.h"
 
 #define FEWEST 5
@@ -33,6 +34,18 @@ add (AntFoldBin *bin, Sums *sums, double value)
     sums->shift = value;
   sums->sum += value - sums->shift;
   sums->square += (value - sums->shift) * (value - sums->shift);
+}
+
+AntStatus
+ant_fold_flatten (const AntSeries *series, const AntFoldOptions *options, float *value)
+{
+  double turn_d = options->clock == ANT_FOLD_ORBIT ? options->period_d : options->reach_d;
+  gsize half_width = (gsize) fmin (0.5 * ANT_FOLD_DRIFT_TURNS * turn_d / series->step_d, (double) series->n);
+  g_autofree float *slow = g_new (float, series->n);
+  AntStatus status = ant_running_median (series->n, value, half_width, slow);
+  for (gsize i = 0; status == ANT_OK && i < series->n; i++)
+    value[i] -= slow[i];
+  return status;
 }
 
 gboolean

@@ -3,6 +3,7 @@
 #pragma once
 
 #include <glib.h>
+#include "core/status.h"
 #include "noise/series.h"
 
 typedef enum
@@ -29,6 +30,10 @@ typedef struct
   gsize n;
 } AntFoldBin;
 
+#define ANT_FOLD_DRIFT_TURNS 3.0
+/* Take off a running median of so many turns of the orbit (or reaches after a gap): slow changes would be spread over all bins as
+ * scatter. In place. */
+AntStatus ant_fold_flatten (const AntSeries *series, const AntFoldOptions *options, float *value);
 /* Values [series->n] (NaN where there are none) by the series' times; its own values decide where gaps are. bin [n_bins] out.
  * FALSE for a period or reach that is not positive, or more bins than ANT_MOST_FOLD_BINS. Pure. */
 gboolean ant_fold (const AntSeries *series, const float *value, const AntFoldOptions *options, AntFoldBin *bin);

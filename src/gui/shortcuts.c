@@ -55,6 +55,7 @@ const AntShortcut ant_shortcut_table[] = {
   { "win.page::dips", N_("Page Dips"), VIEW, { "<Alt>3" } },
   { "win.page::repeats", N_("Page Repeats"), VIEW, { "<Alt>4" } },
   { "win.page::sky", N_("Page Sky"), VIEW, { "<Alt>5" } },
+  { "win.page::instrument", N_("Page Instrument"), VIEW, { "<Alt>6" } },
 
   { "win.next-dip", N_("Next dip"), DIPS, { "<Alt>Down" } },
   { "win.previous-dip", N_("Previous dip"), DIPS, { "<Alt>Up" } },

@@ -2,6 +2,7 @@
 #pragma once
 
 #include "gui/dips-page.h"
+#include "gui/instrument-page.h"
 #include "gui/noise-page.h"
 #include "gui/repeats-page.h"
 #include "gui/record-page.h"
@@ -34,6 +35,7 @@ struct _AntWindow
   AntDipsPage *dips_page;
   AntRepeatsPage *repeats_page;
   AntSkyPage *sky_page;
+  AntInstrumentPage *instrument_page;
   GtkRevealer *settings_revealer;
   AntSettingsPanel *settings_panel;
 

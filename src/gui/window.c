@@ -337,6 +337,7 @@ bind_children (GtkWidgetClass *widget_class)
   gtk_widget_class_bind_template_child (widget_class, AntWindow, record_page);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, noise_page);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, sky_page);
+  gtk_widget_class_bind_template_child (widget_class, AntWindow, instrument_page);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, dips_page);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, repeats_page);
   gtk_widget_class_bind_template_child (widget_class, AntWindow, settings_revealer);
@@ -354,6 +355,7 @@ ant_window_class_init (AntWindowClass *klass)
   g_type_ensure (ANT_TYPE_NOISE_PAGE);
   g_type_ensure (ANT_TYPE_DIPS_PAGE);
   g_type_ensure (ANT_TYPE_REPEATS_PAGE);
+  g_type_ensure (ANT_TYPE_INSTRUMENT_PAGE);
   g_type_ensure (ANT_TYPE_SKY_PAGE);
   g_type_ensure (ANT_TYPE_SETTINGS_PANEL);
   gtk_widget_class_set_template_from_resource (widget_class, "/org/antumbra/Antumbra/window.ui");
@@ -376,6 +378,7 @@ ant_window_init (AntWindow *self)
   ant_record_page_set_desk (self->record_page, self->desk);
   ant_noise_page_set_desk (self->noise_page, self->desk);
   ant_sky_page_set_desk (self->sky_page, self->desk);
+  ant_instrument_page_set_desk (self->instrument_page, self->desk);
   ant_dips_page_set_desk (self->dips_page, self->desk);
   ant_repeats_page_set_desk (self->repeats_page, self->desk);
   ant_settings_panel_set_desk (self->settings_panel, self->desk);

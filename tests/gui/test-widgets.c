@@ -1,6 +1,8 @@
 /* test-widgets.c - each widget of the window by itself: list, inspector, plots, settings, preferences. */
 #include <glib/gstdio.h>
+#include <string.h>
 
+#include "gui/clock-view.h"
 #include "gui/closeup-view.h"
 #include "gui/columns.h"
 #include "gui/dip-inspector.h"
@@ -8,6 +10,7 @@
 #include "gui/fold-events.h"
 #include "gui/floor-view.h"
 #include "gui/fold-view.h"
+#include "gui/instrument-page.h"
 #include "gui/noise-page.h"
 #include "gui/period-view.h"
 #include "gui/preferences.h"
@@ -25,7 +28,7 @@
 static void
 every_widget_can_be_made_and_dropped_without_a_desk (void)
 {
-  const GType types[] = { ANT_TYPE_CLOSEUP_VIEW, ANT_TYPE_COLUMNS, ANT_TYPE_DIP_INSPECTOR, ANT_TYPE_DIP_TABLE,
+  const GType types[] = { ANT_TYPE_CLOCK_VIEW, ANT_TYPE_INSTRUMENT_PAGE, ANT_TYPE_CLOSEUP_VIEW, ANT_TYPE_COLUMNS, ANT_TYPE_DIP_INSPECTOR, ANT_TYPE_DIP_TABLE,
                           ANT_TYPE_FLOOR_VIEW, ANT_TYPE_NOISE_PAGE, ANT_TYPE_RECORD_PAGE, ANT_TYPE_RIBBON_VIEW,
                           ANT_TYPE_SETTINGS_PANEL, ANT_TYPE_SETTINGS_ROW, ANT_TYPE_SPECTRUM_VIEW, ANT_TYPE_STRIP_VIEW,
                           ANT_TYPE_TAIL_VIEW, ANT_TYPE_TIME_STACK, ANT_TYPE_FOLD_EVENTS, ANT_TYPE_FOLD_VIEW,
@@ -42,7 +45,7 @@ static void
 every_plot_has_a_name_and_says_what_it_shows (void)
 {
   const GType types[] = { ANT_TYPE_STRIP_VIEW, ANT_TYPE_RIBBON_VIEW, ANT_TYPE_FLOOR_VIEW, ANT_TYPE_SPECTRUM_VIEW,
-                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_CLOSEUP_VIEW };
+                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_CLOSEUP_VIEW, ANT_TYPE_CLOCK_VIEW };
   AntWindow *window = test_gui_window_scanned ();
   ant_desk_select_mark (ant_window_get_desk (window), 0);
   for (gsize i = 0; i < G_N_ELEMENTS (types); i++)
@@ -60,7 +63,7 @@ static void
 every_plot_is_saved_in_every_format (void)
 {
   const GType types[] = { ANT_TYPE_STRIP_VIEW, ANT_TYPE_RIBBON_VIEW, ANT_TYPE_FLOOR_VIEW, ANT_TYPE_SPECTRUM_VIEW,
-                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_CLOSEUP_VIEW };
+                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_CLOSEUP_VIEW, ANT_TYPE_CLOCK_VIEW };
   const char *const endings[] = { "png", "svg", "pdf" };
   const char *const starts[] = { "\211PNG", "<?xml", "%PDF" };
   g_autofree char *folder = g_dir_make_tmp (NULL, NULL);
@@ -173,6 +176,43 @@ the_panel_has_a_row_for_every_setting (void)
   test_gui_close (window);
 }
 
+/* Waits until the page says what it found. */
+static gboolean
+has_told (gpointer label)
+{
+  return *gtk_label_get_text (label) != '\0';
+}
+
+static GtkLabel *
+told_by (GtkWidget *page)
+{
+  for (GtkWidget *child = gtk_widget_get_first_child (page); child; child = gtk_widget_get_next_sibling (child))
+    {
+      GtkLabel *inside = GTK_IS_LABEL (child) && gtk_label_get_selectable (GTK_LABEL (child)) ? GTK_LABEL (child) : told_by (child);
+      if (inside)
+        return inside;
+    }
+  return NULL;
+}
+
+/* The dip stands in some phase of any orbit; the page folds once it is looked at, and again by the other clock. */
+static void
+the_instrument_page_folds_what_is_chosen (void)
+{
+  AntWindow *window = test_gui_window_with_record ();
+  AntInstrumentPage *page = test_gui_find (window, ANT_TYPE_INSTRUMENT_PAGE);
+  AntClockView *chart = test_gui_find (window, ANT_TYPE_CLOCK_VIEW);
+  GtkLabel *told = told_by (GTK_WIDGET (page));
+  g_assert_nonnull (told);
+  g_assert_cmpstr (gtk_label_get_text (told), ==, "");
+  gtk_widget_activate_action (GTK_WIDGET (window), "win.page", "s", "instrument");
+  test_gui_wait (has_told, told, 20);
+  g_assert_nonnull (strstr (gtk_label_get_text (told), "Greatest difference"));
+  g_autofree char *shown = ANT_PLOT_VIEW_GET_CLASS (chart)->describe (ANT_PLOT_VIEW (chart));
+  g_assert_true (g_str_has_prefix (shown, "Residual, ppm by phase of the orbit in 48 bins"));
+  test_gui_close (window);
+}
+
 static void
 recent_records_are_kept_latest_first_while_they_exist (void)
 {
@@ -200,6 +240,7 @@ add (void)
   g_test_add_func ("/gui/widgets/a-setting-is-refused-with-its-range-and-reset-by-its-action",
                    a_setting_is_refused_with_its_range_and_reset_by_its_action);
   g_test_add_func ("/gui/widgets/the-panel-has-a-row-for-every-setting", the_panel_has_a_row_for_every_setting);
+  g_test_add_func ("/gui/widgets/the-instrument-page-folds-what-is-chosen", the_instrument_page_folds_what_is_chosen);
   g_test_add_func ("/gui/widgets/recent-records-are-kept-latest-first-while-they-exist",
                    recent_records_are_kept_latest_first_while_they_exist);
 }

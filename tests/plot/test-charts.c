@@ -4,6 +4,7 @@
 #include <math.h>
 #include "canvas.h"
 #include "core/random.h"
+#include "plot/clock-chart.h"
 #include "plot/dip-closeup.h"
 #include "plot/floor-chart.h"
 #include "plot/spectrum-chart.h"
@@ -224,6 +225,34 @@ the_closeup_shows_the_shape_lower_in_the_dip (void)
   ant_canvas_clear (&scene.canvas);
 }
 
+static void
+the_clock_chart_has_a_dot_for_every_bin_with_values (void)
+{
+  Scene scene;
+  AntView view;
+  AntFoldBin bin[8];
+  for (int b = 0; b < 8; b++)
+    bin[b] = (AntFoldBin) { (b + 0.5) / 8, b == 5 ? NAN : b < 4 ? 80 : -80, 4, b == 5 ? 0 : 100 };
+  AntClockChart chart = { "Residual, ppm", ANT_FOLD_ORBIT, 8, bin };
+  scene_open (&scene);
+  ant_clock_chart_view (&chart, &view);
+  g_assert_cmpfloat (view.from, ==, 0);
+  g_assert_cmpfloat_with_epsilon (view.to, 1, 1e-9);
+  g_assert_cmpfloat (view.low, <, -84);
+  g_assert_cmpfloat (view.high, >, 84);
+  ant_clock_chart_paint (scene.canvas.cr, &box, &chart, &view, &scene.theme, 1);
+  guint32 dot = ant_canvas_code (scene.theme.role[ANT_ROLE_TRACE]);
+  int runs = 0, inside = 0;
+  for (int x = 0; x < WIDTH; x++)
+    {
+      int seen = ant_canvas_count_in_column (&scene.canvas, x, dot) > 0;
+      runs += seen && !inside;
+      inside = seen;
+    }
+  g_assert_cmpint (runs, ==, 7);
+  ant_canvas_clear (&scene.canvas);
+}
+
 int
 main (int argc, char **argv)
 {
@@ -235,6 +264,8 @@ main (int argc, char **argv)
   g_test_add_func ("/plot/charts/empty-charts-are-drawn-too", empty_charts_are_drawn_too);
   g_test_add_func ("/plot/charts/the-spectrum-shows-points-fit-and-each-component",
                    the_spectrum_shows_points_fit_and_each_component);
+  g_test_add_func ("/plot/charts/the-clock-chart-has-a-dot-for-every-bin-with-values",
+                   the_clock_chart_has_a_dot_for_every_bin_with_values);
   g_test_add_func ("/plot/charts/a-tail-steps-at-each-snr", a_tail_steps_at_each_snr);
   g_test_add_func ("/plot/charts/closeup-points-average-every-sample-once", closeup_points_average_every_sample_once);
   g_test_add_func ("/plot/charts/closeup-points-are-single-samples-where-there-is-room",
