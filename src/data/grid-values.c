@@ -11,6 +11,8 @@
 #define WILD_RATIO 1e6 /* a value this many times the median is no irradiance, and too large for float ppm */
 #define MOST_DARK 0.25 /* of the good rows; above it the median is not the record's usual level */
 #define DARK_WINDOW_D 5.0
+#define CHOSEN_D 1.0    /* within limits nearer than this, five days tell nothing, and the analyst has said what is to be looked at */
+#define OTHER_RATIO 100 /* a value so many times above or below the median is of another state: night beside day */
 #define DARK_JOIN_D 0.5 /* dark rows with no good row between them and no longer pause are one span */
 
 /* The value that 0 ppm stands for: the median of the good rows. */
@@ -124,6 +126,49 @@ refuse_level (const AntRecord *record, gsize n_off, gsize n_good, double dark_fr
                             ant_number_text (fraction, "%g", dark_fraction));
 }
 
+/* Limits that leave the daylight of one day, say, and in it the Sun's own arc: nothing is taken for dark. */
+static gboolean
+is_chosen (const AntRecord *record, const AntRowOrder *order, const AntGridOptions *options, gsize n_good)
+{
+  gsize n_other = 0;
+  if (!(options->to_d - options->from_d < CHOSEN_D))
+    return FALSE;
+  for (gsize k = 0; k < order->n; k++)
+    {
+      guint32 row = order->row[k];
+      double ratio = record->value[row] / record->median;
+      gboolean good = (record->flags[row] & ~(ANT_FLAG_SPIKE | ANT_FLAG_DARK)) == 0;
+      n_other += good && !(ratio > 1.0 / OTHER_RATIO && ratio < OTHER_RATIO);
+    }
+  return (double) n_other <= MOST_DARK * (double) n_good;
+}
+
+static void
+use_dark (AntRecord *record, gsize n_dark, gsize n_good)
+{
+  char percent[ANT_N_NUMBER_TEXT];
+  for (gsize i = 0; i < record->n_rows; i++)
+    record->flags[i] &= (guint16) ~ANT_FLAG_DARK;
+  ant_record_say (record,
+                  _("%s %% of the good values are far from their median, but less than a day was asked for: nothing is taken for dark or covered."),
+                  ant_number_text (percent, "%.0f", 100.0 * (double) n_dark / (double) n_good));
+}
+
+static void
+say_dark (AntRecord *record, const AntRowOrder *order, const AntGridOptions *options, gsize n_dark, double shift_d)
+{
+  list_dark_spans (record, order, shift_d);
+  AntSpan first = g_array_index (record->dark_spans, AntSpan, 0);
+  char percent[ANT_N_NUMBER_TEXT];
+  g_autofree char *when = ant_time_reference_own_text (&record->time, first.start_d),
+                  *length = ant_length_text (first.end_d - first.start_d);
+  ant_record_say (record,
+                  _("Dark or covered (more than %s %% from the running 5-day median): %zu "
+                    "rows in %u spans set aside; the first begins at %s and lasts %s."),
+                  ant_number_text (percent, "%g", 100.0 * options->dark_fraction), n_dark, record->dark_spans->len,
+                  when, length);
+}
+
 /* Flag the rows far from the running median, before anything is fitted. A median that itself jumps by a factor of two
  * for a good part of the record has flipped between two levels, and what it calls dark means nothing. */
 static gboolean
@@ -149,21 +194,12 @@ set_dark_aside (AntRecord *record, const AntRowOrder *order, const AntGridOption
         }
     }
   gsize n_off = MAX (n_dark, n_flipped);
-  if ((double) n_off > MOST_DARK * (double) n_good)
+  if ((double) n_off > MOST_DARK * (double) n_good && !is_chosen (record, order, options, n_good))
     return refuse_level (record, n_off, n_good, options->dark_fraction, error);
-  if (n_dark == 0)
-    return TRUE;
-
-  list_dark_spans (record, order, shift_d);
-  AntSpan first = g_array_index (record->dark_spans, AntSpan, 0);
-  char percent[ANT_N_NUMBER_TEXT];
-  g_autofree char *when = ant_time_reference_own_text (&record->time, first.start_d),
-                  *length = ant_length_text (first.end_d - first.start_d);
-  ant_record_say (record,
-                  _("Dark or covered (more than %s %% from the running 5-day median): %zu "
-                    "rows in %u spans set aside; the first begins at %s and lasts %s."),
-                  ant_number_text (percent, "%g", 100.0 * options->dark_fraction), n_dark, record->dark_spans->len,
-                  when, length);
+  if ((double) n_off > MOST_DARK * (double) n_good)
+    use_dark (record, n_off, n_good);
+  else if (n_dark > 0)
+    say_dark (record, order, options, n_dark, shift_d);
   return TRUE;
 }
 

@@ -220,6 +220,35 @@ test_night_is_refused (void)
     }
 }
 
+/* The Sun's arc over a ground station between limits of less than a day is what was asked for, half a night in them is not. */
+static void
+test_a_chosen_daylight_is_used (void)
+{
+  for (int night = 0; night < 2; night++)
+    {
+      g_autoptr (AntRecord) record = test_rows (3 * 1440, 0.0, MINUTE);
+      for (gsize i = 0; i < record->n_rows; i++)
+        {
+          double hour = 24.0 * fmod (record->time_d[i], 1.0), arc = cos ((hour - 12.0) * G_PI / 12.0);
+          record->value[i] *= fmax (arc, 0.001);
+        }
+      AntGridOptions options = ANT_GRID_OPTIONS_INIT;
+      options.from_d = 1.0 + (night ? 1.0 : 8.0) / 24.0;
+      options.to_d = 1.0 + 13.0 / 24.0;
+      if (night)
+        {
+          test_refused (record, &options, "not the usual level");
+          continue;
+        }
+      test_grid (record, &options);
+      g_assert_cmpuint (record->series.n, >=, 300);
+      g_assert_cmpuint (record->dark_spans->len, ==, 0);
+      g_assert_true (test_said (record, "less than a day was asked for"));
+      for (gsize i = 0; i < record->series.n; i++)
+        g_assert_false (isnan (record->series.value_ppm[i]));
+    }
+}
+
 /* Nights longer than the window: the running median follows each level, so that nothing is far from it. */
 static void
 test_polar_night_is_refused (void)
@@ -436,6 +465,7 @@ main (int argc, char **argv)
   g_test_add_func ("/data/record-grid/an-eclipse-is-set-aside-as-a-span", test_eclipse);
   g_test_add_func ("/data/record-grid/a-shallow-dip-is-not-dark", test_dip_is_not_dark);
   g_test_add_func ("/data/record-grid/nights-are-refused", test_night_is_refused);
+  g_test_add_func ("/data/record-grid/a-chosen-daylight-is-used-whole", test_a_chosen_daylight_is_used);
   g_test_add_func ("/data/record-grid/polar-nights-are-refused", test_polar_night_is_refused);
   g_test_add_func ("/data/record-grid/fewer-than-fifty-good-rows-are-refused", test_too_few);
   g_test_add_func ("/data/record-grid/no-rows-are-refused", test_no_rows);
