@@ -3,6 +3,7 @@
 
 #include <math.h>
 #include <stdint.h>
+#include <stdlib.h>
 #include <string.h>
 #include "core/dense.h"
 #include "core/random.h"
@@ -16,7 +17,7 @@
 #define HIGHER 1.0         /* in ln f: a point this far above the hill that was sampled is another hill */
 #define ADAPT_ROUNDS 3
 #define ADAPT_SAMPLES 96
-#define FINAL_SAMPLES 256
+#define USUAL_SAMPLES 256
 #define LEAST_EFFECTIVE 20.0 /* fewer samples do not tell a covariance: weights are tempered */
 #define WIDEN 1.25           /* the proposal over the Gaussian it is made from */
 
@@ -28,8 +29,8 @@ typedef struct
   AntRandom random;
   AntIntegral *result;
   double centre[N], factor[N * N]; /* of the proposal: a Student t with 4 degrees of freedom, scale L L' */
-  double quantity[FINAL_SAMPLES * ANT_INTEGRAL_QUANTITIES];
-  double point[FINAL_SAMPLES * N], value[FINAL_SAMPLES], log_weight[FINAL_SAMPLES];
+  double quantity[ANT_INTEGRAL_SAMPLES * ANT_INTEGRAL_QUANTITIES];
+  double point[ANT_INTEGRAL_SAMPLES * N], value[ANT_INTEGRAL_SAMPLES], log_weight[ANT_INTEGRAL_SAMPLES];
 } Integral;
 
 /* f at up to BATCH points, 0 outside the cube; the highest is kept. */
@@ -307,15 +308,24 @@ highest_weight (const Integral *it, size_t count)
   return highest;
 }
 
-/* Learn the proposal from what it showed; too uneven weights are tempered until enough samples count. */
+/* The power of the weights at which enough samples count. */
+static double
+even_out (const Integral *it, size_t count, double highest, double *sum)
+{
+  double power = 1;
+  while (effective (it, count, power, highest, sum) < LEAST_EFFECTIVE && power > 1e-3)
+    power *= 0.7;
+  return power;
+}
+
+/* Learn the proposal from what it showed; too uneven weights are tempered. */
 static void
 adapt (Integral *it)
 {
-  double highest = highest_weight (it, ADAPT_SAMPLES), power = 1, sum, mean[N], covariance[N * N];
+  double highest = highest_weight (it, ADAPT_SAMPLES), power, sum, mean[N], covariance[N * N];
   if (!isfinite (highest))
     return;
-  while (effective (it, ADAPT_SAMPLES, power, highest, &sum) < LEAST_EFFECTIVE && power > 1e-3)
-    power *= 0.7;
+  power = even_out (it, ADAPT_SAMPLES, highest, &sum);
   moments (it, ADAPT_SAMPLES, power, highest, sum, it->n, it->point, mean, covariance);
   propose (it, mean, covariance);
 }
@@ -343,6 +353,52 @@ settle (Integral *it)
     }
 }
 
+typedef struct
+{
+  double quantity, weight;
+} Weighted;
+
+static int
+by_quantity (const void *a, const void *b)
+{
+  double difference = ((const Weighted *) a)->quantity - ((const Weighted *) b)->quantity;
+  return (difference > 0) - (difference < 0);
+}
+
+/* Where the sorted weights have come to a share of their sum. */
+static double
+quantile (size_t count, const Weighted *sorted, double share)
+{
+  double sum = 0;
+  for (size_t s = 0; s < count; s++)
+    {
+      sum += sorted[s].weight;
+      if (sum >= share)
+        return sorted[s].quantity;
+    }
+  return sorted[count - 1].quantity;
+}
+
+/* Medians and central intervals of the same. */
+static void
+intervals (const Integral *it, size_t count, double power, double highest, double sum, size_t n, const double *number)
+{
+  Weighted sorted[ANT_INTEGRAL_SAMPLES];
+  for (size_t k = 0; k < n; k++)
+    {
+      size_t inside = 0;
+      for (size_t s = 0; s < count; s++)
+        {
+          double weight = exp (power * (it->log_weight[s] - highest)) / sum;
+          if (weight > 0)
+            sorted[inside++] = (Weighted){ number[s * n + k], weight };
+        }
+      qsort (sorted, inside, sizeof *sorted, by_quantity);
+      it->result->median[k] = quantile (inside, sorted, 0.5);
+      it->result->half_width[k] = 0.5 * (quantile (inside, sorted, 0.84134) - quantile (inside, sorted, 0.15866));
+    }
+}
+
 AntStatus
 ant_evidence_integral (size_t n, AntLogFunction f, AntQuantities quantities, void *data, size_t n_starts,
                        const double *start, AntIntegral *result)
@@ -358,14 +414,19 @@ ant_evidence_integral (size_t n, AntLogFunction f, AntQuantities quantities, voi
     return ANT_NO_DATA;
   climb_from_starts (&it, n_starts, start, it.value);
   settle (&it);
-  sample (&it, FINAL_SAMPLES);
-  double highest = highest_weight (&it, FINAL_SAMPLES);
-  result->effective = effective (&it, FINAL_SAMPLES, 1, highest, &sum);
-  result->log_integral = highest + log (sum / FINAL_SAMPLES);
-  for (size_t s = 0; s < FINAL_SAMPLES && quantities.tell; s++)
-    if (it.log_weight[s] > -HUGE_VAL)
-      quantities.tell (data, it.point + s * n, it.quantity + s * quantities.count);
+  size_t count = quantities.samples ? quantities.samples : USUAL_SAMPLES;
+  sample (&it, count);
+  double highest = highest_weight (&it, count);
+  result->effective = effective (&it, count, 1, highest, &sum);
+  result->log_integral = highest + log (sum / (double) count);
   result->n = quantities.tell ? quantities.count : n;
-  moments (&it, FINAL_SAMPLES, 1, highest, sum, result->n, quantities.tell ? it.quantity : it.point, result->mean, result->covariance);
+  for (size_t s = 0; s < count && quantities.tell; s++)
+    if (it.log_weight[s] > -HUGE_VAL)
+      it.log_weight[s] += quantities.tell (data, it.point + s * n, it.quantity + s * quantities.count);
+  highest = highest_weight (&it, count);
+  double power = even_out (&it, count, highest, &sum);
+  const double *number = quantities.tell ? it.quantity : it.point;
+  moments (&it, count, power, highest, sum, result->n, number, result->mean, result->covariance);
+  intervals (&it, count, power, highest, sum, result->n, number);
   return isfinite (result->log_integral) ? ANT_OK : ANT_NO_DATA;
 }

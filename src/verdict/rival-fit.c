@@ -5,8 +5,11 @@
 #include <stdlib.h>
 #include <string.h>
 #include "core/units.h"
+#include "verdict/crossing-fit.h"
 #include "verdict/evidence-integral.h"
 #include "verdict/rival-start.h"
+
+#define CROSSING_SAMPLES 1024 /* what is quoted of a crossing rests on them */
 
 typedef struct
 {
@@ -184,8 +187,9 @@ ant_rival_chi2_of_nothing (const AntRivalBench *bench, const AntDip *dip)
   return chi2_around (bench, dip, NULL, 0);
 }
 
-/* What means and spreads are taken of: the parameters, logarithms where the prior has them, and a crossing's depth. */
-static void
+/* What is quoted: the parameters, logarithms where the prior has them, and a crossing's depth, whose prior is flat here: one
+ * uniform in ln pulls a depth of few sigma down. */
+static double
 tell_quantities (void *data, const double *u, double *quantity)
 {
   const Cube *cube = data;
@@ -193,8 +197,26 @@ tell_quantities (void *data, const double *u, double *quantity)
   from_cube (cube, u, parameter);
   for (size_t i = 0; i <= cube->prior->n; i++)
     quantity[i] = i > 0 && cube->prior->range[i - 1].logarithmic ? log (parameter[i]) : parameter[i];
-  if (cube->kind == ANT_RIVAL_CROSSING)
-    quantity[4] = ant_transit_loss (parameter[3], parameter[2], cube->bench->limb_darkening) / ANT_PPM;
+  if (cube->kind != ANT_RIVAL_CROSSING)
+    return 0;
+  quantity[4] = ant_transit_loss (parameter[3], parameter[2], cube->bench->limb_darkening) / ANT_PPM;
+  return log (quantity[4]);
+}
+
+/* A crossing measured so well that its likelihood alone tells its numbers is quoted by that. */
+static void
+quote_likeliest (const AntRivalBench *bench, AntRivalFit *fit)
+{
+  double value[ANT_CROSSING_QUANTITIES], sigma[ANT_CROSSING_QUANTITIES];
+  if (ant_crossing_fit (bench, fit->parameter, value, sigma))
+    return;
+  for (size_t i = 0; i < ANT_RIVAL_PARAMETERS; i++)
+    {
+      fit->mean[i] = i == ANT_CROSSING_T14 || i == ANT_CROSSING_RADIUS ? exp (value[i]) : value[i];
+      fit->sigma[i] = sigma[i];
+    }
+  fit->depth_ppm = bench->sign * value[ANT_CROSSING_DEPTH];
+  fit->depth_sigma_ppm = sigma[ANT_CROSSING_DEPTH];
 }
 
 /* The best parameters, their spread, and the depth there. */
@@ -208,18 +230,20 @@ describe (const Cube *cube, const AntDip *dip, const AntIntegral *integral, AntR
   from_cube (cube, integral->best, fit->parameter);
   for (size_t i = 0; i <= cube->prior->n; i++)
     {
-      fit->mean[i] = i > 0 && cube->prior->range[i - 1].logarithmic ? exp (integral->mean[i]) : integral->mean[i];
-      fit->sigma[i] = sqrt (integral->covariance[i * integral->n + i]);
+      fit->mean[i] = i > 0 && cube->prior->range[i - 1].logarithmic ? exp (integral->median[i]) : integral->median[i];
+      fit->sigma[i] = integral->half_width[i];
     }
   ant_rival_curve_init (&curve, fit->kind, fit->parameter, bench->limb_darkening, &bench->eclipse);
   project (bench, 1, &curve, &drawn, energy, moment);
   int tied = fit->kind == ANT_RIVAL_CROSSING;
   double best = tied ? curve.tied_depth_ppm : moment[0] / energy[0];
-  fit->depth_ppm = bench->sign * (tied ? integral->mean[4] : best);
-  fit->depth_sigma_ppm = tied ? sqrt (integral->covariance[4 * integral->n + 4]) : 1 / sqrt (energy[0]);
+  fit->depth_ppm = bench->sign * (tied ? integral->median[4] : best);
+  fit->depth_sigma_ppm = tied ? integral->half_width[4] : 1 / sqrt (energy[0]);
   fit->log_gain = log_tied_depth (moment[0], energy[0], best);
   fit->chi2 = chi2_around (bench, dip, &curve, bench->sign * best);
   fit->log_evidence = integral->log_integral + log (unit_d);
+  if (tied)
+    quote_likeliest (bench, fit);
 }
 
 AntStatus
@@ -238,7 +262,8 @@ ant_rival_fit (const AntRivalBench *bench, const AntDip *dip, AntRivalKind kind,
   size_t n_starts = ant_rival_starts (kind, dip, bench->limb_darkening, parameter);
   for (size_t i = 0; i < n_starts; i++)
     to_cube (&cube, parameter[i], start + i * (prior->n + 1));
-  AntQuantities quantities = { kind == ANT_RIVAL_CROSSING ? 5 : prior->n + 1, tell_quantities };
+  AntQuantities quantities = { kind == ANT_RIVAL_CROSSING ? 5 : prior->n + 1, tell_quantities,
+                               kind == ANT_RIVAL_CROSSING ? CROSSING_SAMPLES : 0 };
   AntStatus status = ant_evidence_integral (prior->n + 1, log_likelihoods, quantities, &cube, n_starts, start, &integral);
   if (status)
     return status;

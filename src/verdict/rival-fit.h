@@ -27,9 +27,9 @@ typedef struct
   AntRivalKind kind;
   int fitted;             /* 0: not a rival for this sign, or no data */
   double parameter[ANT_RIVAL_PARAMETERS]; /* where the posterior is highest; days from the record's origin */
-  double mean[ANT_RIVAL_PARAMETERS], sigma[ANT_RIVAL_PARAMETERS]; /* of the posterior; logarithmic ones of ln */
-  double depth_ppm, depth_sigma_ppm; /* positive = dark: of a crossing mean and spread of the posterior, of the others at the best
-                                        parameters */
+  double mean[ANT_RIVAL_PARAMETERS], sigma[ANT_RIVAL_PARAMETERS]; /* median and half the central 68 % of the posterior; logarithmic ones of ln. Of a crossing, where
+                                        the data tell the chord, by crossing-fit.h, else under a prior flat in depth */
+  double depth_ppm, depth_sigma_ppm; /* positive = dark: of a crossing likewise, of the others at the best parameters */
   double log_gain;        /* ln likelihood over nothing, at best */
   double log_evidence;    /* ln (odds against nothing per event a day) */
   double chi2;            /* of the residual, per sample, from one duration before to one after the dip */

@@ -1,7 +1,8 @@
 /* study-crossing-fit.c - the fit of a crossing on planted ones: radius ratio, impact, epoch, T14 and depth, their bias and spread.
  * Arguments: venus or mercury, pairs, seed, cadence in seconds. Noise: the Sun's without active regions and 10 ppm of white,
  * L1 gaps; its model is known. Injections come in pairs on one draw of noise and its negative, whose errors of first order
- * cancel: what is left of their mean is bias. Prints one line per quantity. */
+ * cancel: what is left of their mean is bias, told in the pair's mean stated error; the scatter is of errors each in its own. Prints one
+ * line per quantity. */
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -21,8 +22,8 @@ static const char *const name[N_QUANTITIES] = { "epoch", "T14", "impact", "radiu
 
 typedef struct
 {
-  double paired, paired_squares; /* of the means of pairs, in sigma */
-  double sum, squares;           /* of single ones, in sigma */
+  double paired, paired_squares; /* of the means of pairs, in their mean stated error */
+  double sum, squares;           /* of single ones, each in its own sigma */
   size_t pairs, n, covered;
 } Tally;
 
@@ -44,9 +45,9 @@ draw_noise (const AntNoiseModel *noise, size_t n, double step_d, unsigned long s
   free (drawn);
 }
 
-/* Errors of one fit in units of its own sigma; returns its SNR, 0 if there was none. */
+/* Errors of one fit and what it states for them; returns its SNR, 0 if there was none. */
 static double
-fit_one (const AntNoiseModel *noise, const AntSeries *series, const AntTrialPlanet *planet, double *pull)
+fit_one (const AntNoiseModel *noise, const AntSeries *series, const AntTrialPlanet *planet, double *error, double *sigma)
 {
   AntStatus status;
   AntWhitener *whitener = ant_whitener_new_free_level (noise, series, &status);
@@ -58,11 +59,13 @@ fit_one (const AntNoiseModel *noise, const AntSeries *series, const AntTrialPlan
   AntRivalFit fit = { 0 };
   ant_whitener_solve (whitener, series->value_ppm, z);
   ant_rival_fit (&bench, &dip, ANT_RIVAL_CROSSING, &fit);
-  pull[EPOCH] = (fit.mean[0] - planet->mid_d) / fit.sigma[0];
-  pull[T14] = log (fit.mean[1] / planet->crossing.t14_d) / fit.sigma[1];
-  pull[IMPACT] = (fit.mean[2] - planet->crossing.impact) / fit.sigma[2];
-  pull[RADIUS] = log (fit.mean[3] / planet->crossing.radius_ratio) / fit.sigma[3];
-  pull[DEPTH] = (fit.depth_ppm - depth) / fit.depth_sigma_ppm;
+  error[EPOCH] = fit.mean[0] - planet->mid_d;
+  error[T14] = log (fit.mean[1] / planet->crossing.t14_d);
+  error[IMPACT] = fit.mean[2] - planet->crossing.impact;
+  error[RADIUS] = log (fit.mean[3] / planet->crossing.radius_ratio);
+  error[DEPTH] = fit.depth_ppm - depth;
+  memcpy (sigma, fit.sigma, ANT_RIVAL_PARAMETERS * sizeof *sigma);
+  sigma[DEPTH] = fit.depth_sigma_ppm;
   ant_whitener_free (whitener);
   free (z);
   free (buffer);
@@ -70,17 +73,17 @@ fit_one (const AntNoiseModel *noise, const AntSeries *series, const AntTrialPlan
 }
 
 static void
-note (Tally *tally, const double pull[2])
+note (Tally *tally, const double error[2], const double sigma[2])
 {
-  double mean = 0.5 * (pull[0] + pull[1]);
+  double mean = (error[0] + error[1]) / (sigma[0] + sigma[1]);
   tally->paired += mean;
   tally->paired_squares += mean * mean;
   tally->pairs++;
   for (int i = 0; i < 2; i++)
     {
-      tally->sum += pull[i];
-      tally->squares += pull[i] * pull[i];
-      tally->covered += fabs (pull[i]) < 1;
+      tally->sum += error[i] / sigma[i];
+      tally->squares += error[i] * error[i] / (sigma[i] * sigma[i]);
+      tally->covered += fabs (error[i]) < sigma[i];
       tally->n++;
     }
 }
@@ -103,7 +106,7 @@ main (int argc, char **argv)
   Tally tally[N_QUANTITIES] = { 0 };
   for (size_t r = 0; r < pairs; r++)
     {
-      double pull[2][N_QUANTITIES];
+      double error[2][N_QUANTITIES], sigma[2][N_QUANTITIES];
       AntRandom random;
       AntSeries series = { .n = n, .step_d = step_d, .start_d = 0.5 * step_d, .value_ppm = value };
       ant_random_seed (&random, strtoul (argv[3], NULL, 10) + r, 42);
@@ -117,10 +120,10 @@ main (int argc, char **argv)
               double loss = ant_crossing_mean_loss (&planet.crossing, ANT_LIMB_DARKENING_SUN, start_d, start_d + step_d);
               value[i] = (float) ((side ? -1 : 1) * (double) drawn[i] - loss / ANT_PPM);
             }
-          snr += fit_one (&noise, &series, &planet, pull[side]) / (double) (2 * pairs);
+          snr += fit_one (&noise, &series, &planet, error[side], sigma[side]) / (double) (2 * pairs);
         }
       for (int q = 0; q < N_QUANTITIES; q++)
-        note (&tally[q], (double[2]){ pull[0][q], pull[1][q] });
+        note (&tally[q], (double[2]){ error[0][q], error[1][q] }, (double[2]){ sigma[0][q], sigma[1][q] });
     }
   for (int q = 0; q < N_QUANTITIES; q++)
     {
