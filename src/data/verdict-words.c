@@ -5,6 +5,7 @@
 #include <math.h>
 #include <stdlib.h>
 
+#include "core/units.h"
 #include "data/dip-words.h"
 
 AntDipClass
@@ -34,13 +35,15 @@ ant_verdict_shape_probability (const AntVerdict *verdict)
 AntDipClass
 ant_verdict_class (const AntVerdict *verdict)
 {
-  return ant_verdict_probability (verdict) < ANT_VERDICT_LEAST ? ANT_CLASS_UNDECIDED : ant_cause_class (verdict->cause);
+  AntCause named = ant_verdict_named (verdict, verdict->cause, ant_verdict_probability (verdict));
+  return named == ANT_N_CAUSES ? ANT_CLASS_UNDECIDED : ant_cause_class (named);
 }
 
 AntDipClass
 ant_verdict_shape_class (const AntVerdict *verdict)
 {
-  return ant_verdict_shape_probability (verdict) < ANT_VERDICT_LEAST ? ANT_CLASS_UNDECIDED : ant_cause_class (verdict->shape);
+  AntCause named = ant_verdict_named (verdict, verdict->shape, ant_verdict_shape_probability (verdict));
+  return named == ANT_N_CAUSES ? ANT_CLASS_UNDECIDED : ant_cause_class (named);
 }
 
 char *
@@ -63,6 +66,20 @@ ant_class_words (AntDipClass analyst, const AntVerdict *verdict)
   return class == ANT_CLASS_UNDECIDED ? g_strdup (ant_dip_class_title (class)) : g_strdup_printf ("%s %s", ant_dip_class_title (class), likely);
 }
 
+/* What the fit of a crossing gives, where that is what the event looks like. */
+static void
+add_crossing (const AntVerdict *verdict, GPtrArray *facts)
+{
+  const AntRivalFit *fit = &verdict->rival[ANT_RIVAL_CROSSING];
+  if (!fit->fitted || !(verdict->shape_probability[ANT_CAUSE_PLANET] >= 0.1))
+    return;
+  g_autofree char *text
+      = g_strdup_printf (_("radius ratio %.4f ± %.4f, impact %.2f ± %.2f, contact I to IV %.2f ± %.2f h"), fit->mean[3],
+                         fit->mean[3] * fit->sigma[3], fit->mean[2], fit->sigma[2], fit->mean[1] * ANT_HOURS_PER_DAY,
+                         fit->mean[1] * fit->sigma[1] * ANT_HOURS_PER_DAY);
+  ant_facts_add (facts, _("As a crossing"), text);
+}
+
 void
 ant_verdict_facts (const AntVerdict *verdict, GPtrArray *facts)
 {
@@ -72,6 +89,7 @@ ant_verdict_facts (const AntVerdict *verdict, GPtrArray *facts)
   g_autofree char *shape = g_strdup_printf ("%s, %s", ant_dip_class_title (ant_cause_class (verdict->shape)), shape_likely);
   ant_facts_add (facts, _("Taken for"), class);
   ant_facts_add (facts, _("By shape alone"), shape);
+  add_crossing (verdict, facts);
 }
 
 const char *

@@ -7,7 +7,7 @@
 #include "search/dip.h"
 #include "verdict/verdict.h"
 
-/* The class that the likeliest cause gives, undecided below ANT_VERDICT_LEAST; likewise of the shape alone. */
+/* The class that the likeliest cause gives, undecided where ant_verdict_named names none; likewise of the shape alone. */
 AntDipClass ant_verdict_class (const AntVerdict *verdict);
 AntDipClass ant_verdict_shape_class (const AntVerdict *verdict);
 AntDipClass ant_cause_class (AntCause cause);

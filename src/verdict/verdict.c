@@ -94,7 +94,7 @@ likeliest (const double probability[ANT_N_CAUSES])
   return best;
 }
 
-/* What the shape alone says; a crossing is a planet's. */
+/* What the shape alone says; a crossing is a planet's, and its chord is part of its shape. */
 static void
 decide_shape (AntVerdict *verdict, const AntCauseRates *rates, double noise)
 {
@@ -102,6 +102,8 @@ decide_shape (AntVerdict *verdict, const AntCauseRates *rates, double noise)
   for (int kind = 0; kind < ANT_N_RIVALS; kind++)
     p[kind] = log_evidence (verdict, (AntRivalKind) kind)
               + log (rates->per_year[ant_rival_prior ((AntRivalKind) kind)->cause[verdict->sign < 0]] / 365.25);
+  const AntEvidence *chord = ant_verdict_evidence (verdict, ANT_EVIDENCE_CHORD);
+  p[ANT_RIVAL_CROSSING] += chord ? chord->weight[ANT_CAUSE_PLANET] : 0;
   p[ANT_N_RIVALS] = noise;
   normalise (ANT_N_RIVALS + 1, p);
   memset (verdict->shape_probability, 0, sizeof verdict->shape_probability);
@@ -154,4 +156,16 @@ ant_verdict_decide (AntVerdict *verdict, const AntDip *dip, const AntVerdictOpti
   ant_verdict_add (verdict, &chance);
   decide_shape (verdict, &options->rates, noise);
   decide_cause (verdict, options, noise);
+}
+
+AntCause
+ant_verdict_named (const AntVerdict *verdict, AntCause cause, double probability)
+{
+  const AntEvidence *edges = ant_verdict_evidence (verdict, ANT_EVIDENCE_EDGES);
+  const AntEvidence *predicted = ant_verdict_evidence (verdict, ANT_EVIDENCE_PREDICTED);
+  int whole = !edges || (edges->number[0] > 0 && edges->number[1] > 0);
+  int expected = cause == ANT_CAUSE_PLANET && predicted && !isnan (predicted->number[0]);
+  int crossing = cause == ANT_CAUSE_PLANET || cause == ANT_CAUSE_PLANET_SHAPED;
+  double least = crossing && !whole && !expected ? ANT_VERDICT_LEAST_HALF_SEEN : ANT_VERDICT_LEAST;
+  return probability >= least ? cause : ANT_N_CAUSES;
 }

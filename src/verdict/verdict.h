@@ -26,8 +26,10 @@ typedef struct
   AntCause shape, cause;                      /* the likeliest */
 } AntVerdict;
 
-/* Below this no cause is named: undecided. */
-#define ANT_VERDICT_LEAST 0.5
+/* Below these no cause is named: undecided. Half a crossing is told from half an eclipse or half a fault by what was assumed
+ * beforehand alone: where ingress or egress was not observed and no almanac expected it, it takes more. */
+#define ANT_VERDICT_LEAST 0.6
+#define ANT_VERDICT_LEAST_HALF_SEEN 0.99
 
 /* Fit every rival to an event, and what its own record says besides. pull: innovations of the bench's window without
  * the dip's own noise fit. ANT_STOPPED if stop is asked. */
@@ -38,3 +40,5 @@ void ant_verdict_add (AntVerdict *verdict, const AntEvidence *evidence);
 const AntEvidence *ant_verdict_evidence (const AntVerdict *verdict, AntEvidenceKind kind);
 /* Probabilities from all that is there; also fills in the evidence of chance. */
 void ant_verdict_decide (AntVerdict *verdict, const AntDip *dip, const AntVerdictOptions *options);
+/* The cause, if a verdict may be called by it at this probability (of its cause or of its shape); else ANT_N_CAUSES. */
+AntCause ant_verdict_named (const AntVerdict *verdict, AntCause cause, double probability);

@@ -104,6 +104,42 @@ test_evidence_is_replaced (void)
   g_assert_null (ant_verdict_evidence (&verdict, ANT_EVIDENCE_TWIN));
 }
 
+/* Half a crossing looks like half of much else. */
+static void
+test_half_seen_needs_more (void)
+{
+  AntVerdict verdict = with_evidence (60, 40, 30);
+  AntEvidence evidence;
+  AntDip dip = { .edges = ANT_EDGES_BOTH };
+  ant_evidence_edges (&dip, &evidence);
+  ant_verdict_add (&verdict, &evidence);
+  g_assert_cmpint (ant_verdict_named (&verdict, ANT_CAUSE_PLANET, 0.8), ==, ANT_CAUSE_PLANET);
+  g_assert_cmpint (ant_verdict_named (&verdict, ANT_CAUSE_PLANET, 0.55), ==, ANT_N_CAUSES);
+  dip.edges = ANT_EDGES_INGRESS;
+  ant_evidence_edges (&dip, &evidence);
+  ant_verdict_add (&verdict, &evidence);
+  g_assert_cmpint (ant_verdict_named (&verdict, ANT_CAUSE_PLANET, 0.8), ==, ANT_N_CAUSES);
+  g_assert_cmpint (ant_verdict_named (&verdict, ANT_CAUSE_PLANET_SHAPED, 0.995), ==, ANT_CAUSE_PLANET_SHAPED);
+  g_assert_cmpint (ant_verdict_named (&verdict, ANT_CAUSE_INSTRUMENT, 0.8), ==, ANT_CAUSE_INSTRUMENT);
+}
+
+/* No body circles so fast that it would cross in half an hour: that is part of what a dip looks like. */
+static void
+test_chord_counts_in_the_shape (void)
+{
+  AntVerdict slow = with_evidence (20, 18, 21), fast = slow;
+  AntDip dip = { .snr = 8, .expected_false = 1e-12 };
+  AntEvidence chord;
+  ant_evidence_chord (0.5 / 24, 0.1, 0.02, &chord);
+  ant_verdict_add (&fast, &chord);
+  ant_verdict_decide (&slow, &dip, &star);
+  ant_verdict_decide (&fast, &dip, &star);
+  double before = slow.shape_probability[ANT_CAUSE_PLANET] / slow.shape_probability[ANT_CAUSE_INSTRUMENT];
+  double after = fast.shape_probability[ANT_CAUSE_PLANET] / fast.shape_probability[ANT_CAUSE_INSTRUMENT];
+  g_assert_cmpfloat (chord.weight[ANT_CAUSE_PLANET], <, -1);
+  g_assert_cmpfloat_with_epsilon (log (after / before), chord.weight[ANT_CAUSE_PLANET], 1e-9);
+}
+
 int
 main (int argc, char **argv)
 {
@@ -114,5 +150,7 @@ main (int argc, char **argv)
   g_test_add_func ("/verdict/verdict/on-the-sun-a-predicted-crossing-is-a-planet", test_sun_with_prediction);
   g_test_add_func ("/verdict/verdict/agreeing-witness-excludes-the-instrument-not-the-sun", test_agreeing_witness_excludes_the_instrument);
   g_test_add_func ("/verdict/verdict/evidence-of-a-kind-is-replaced", test_evidence_is_replaced);
+  g_test_add_func ("/verdict/verdict/half-a-crossing-is-named-only-when-sure", test_half_seen_needs_more);
+  g_test_add_func ("/verdict/verdict/the-speed-over-the-disc-is-part-of-the-shape", test_chord_counts_in_the_shape);
   return g_test_run ();
 }
