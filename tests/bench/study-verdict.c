@@ -1,7 +1,8 @@
 /* study-verdict.c - what verdicts are worth: records with events of known cause sent through the whole search and judged.
  * Arguments: first seed, records, cadence in seconds. Record r has noise model A, B or C and the L1 or the low-orbit mask in turn.
  * Target star, rates as the events are planted. One line per judged dip:
- *   model mask truth SNR edges shape P(each cause of shape) cause P(cause) P(each rival) */
+ *   model mask truth SNR edges shape P(each cause of shape) cause P(cause) P(each rival) middle length expected_false
+ *   and what the shape is called (7: undecided) */
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -11,7 +12,7 @@
 #include "verdict/verdict-work.h"
 
 #define THRESHOLD 4.7 /* low, so that noise is among what is judged */
-#define ATTRIBUTE_D 1.3
+#define NEAR_D 0.25 /* a dip that begins or ends this near an event is of its making */
 
 /* Rates that the planted shares amount to, over the whole range of depths that the priors allow. */
 static AntCauseRates
@@ -31,13 +32,14 @@ planted_rates (double snr_low, double snr_high)
   return rates;
 }
 
-/* What made a dip: the event that it lies on; for a crossing or an eclipse only between its contacts. */
+/* What made a dip: the event that it lies on. */
 static AntTruth
 truth_of (const AntDip *dip, const AntPlantedEvent *event)
 {
   for (size_t k = 0; k < ANT_POPULATION_EVENTS; k++)
     {
-      double reach_d = event[k].truth == ANT_TRUTH_CROSSING || event[k].truth == ANT_TRUTH_ECLIPSE ? 0.5 * dip->duration_d : ATTRIBUTE_D;
+      int contacts = event[k].truth == ANT_TRUTH_CROSSING || event[k].truth == ANT_TRUTH_ECLIPSE;
+      double reach_d = 0.5 * dip->duration_d + (contacts ? 0 : NEAR_D);
       if (dip->mid_d > event[k].from_d - reach_d && dip->mid_d < event[k].to_d + reach_d)
         return event[k].truth;
     }
@@ -56,7 +58,10 @@ print_verdict (char model, AntMask mask, AntTruth truth, const AntDip *dip, cons
     printf (" %.4f", verdict->probability[cause]);
   for (int kind = 0; kind < ANT_N_RIVALS; kind++)
     printf (" %.2f:%.2f", verdict->rival[kind].log_gain, verdict->rival[kind].log_evidence);
-  printf (" %.3f %.2f %.4f\n", dip->mid_d, dip->duration_d * 24, dip->expected_false);
+  printf (" %.3f %.2f %.4f", dip->mid_d, dip->duration_d * 24, dip->expected_false);
+  printf (" %d", ant_verdict_named (verdict, verdict->shape, verdict->shape_probability[verdict->shape]));
+  printf ("\n");
+  fflush (stdout);
 }
 
 int
@@ -66,7 +71,7 @@ main (int argc, char **argv)
     return 2;
   unsigned long seed = strtoul (argv[1], NULL, 10);
   size_t records = (size_t) atol (argv[2]);
-  double step_d = atof (argv[3]) / 86400, snr_low = 7, snr_high = 120;
+  double step_d = atof (argv[3]) / 86400, snr_low = 7, snr_high = 100;
   size_t n = (size_t) (ANT_POPULATION_DAYS / step_d);
   float *value = malloc (n * sizeof *value);
   AntScanOptions options = ANT_SCAN_OPTIONS_INIT;

@@ -16,7 +16,7 @@
 
 const char *const ant_truth_name[ANT_N_TRUTHS] = { "crossing", "spot",    "step",     "recovery", "spike",
                                                    "thermal",  "eclipse", "gap edge", "noise" };
-const double ant_truth_share[ANT_N_TRUTHS] = { 0.30, 0.08, 0.14, 0.14, 0.06, 0.12, 0.06, 0.10, 0 };
+const double ant_truth_share[ANT_N_TRUTHS] = { 0.25, 0.10, 0.13, 0.13, 0.09, 0.12, 0.09, 0.09, 0 };
 
 static double
 uniform (AntRandom *random, double low, double high)
