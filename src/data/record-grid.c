@@ -7,6 +7,7 @@
 #include "data/grid-values.h"
 #include "data/plain-text.h"
 #include "data/record-distance.h"
+#include "data/record-slip.h"
 
 #define MOST_PLACES 2e8
 #define SNAP_STEPS 0.25
@@ -84,6 +85,11 @@ say_jitter (AntRecord *record, const AntRowOrder *order, const AntCadence *caden
     ant_record_say (record,
                     _("Cadence %s; the times lie within %s rms (%s at most) of an even grid and were snapped to it."),
                     step, rms, most);
+  else if (record->slip_d)
+    ant_record_say (record,
+                    _("Cadence %s; the clock wanders against an even grid, by as much as the steps themselves: %zu of %zu times lie a quarter "
+                      "step or more from it. Each sample went into the nearest bin; times of dips are told by the stamps, not by the bins."),
+                    step, n_coarse, order->n);
   else
     ant_record_say (record,
                     _("Cadence %s; %zu of %zu times lie a quarter step or more from an even grid (%s rms, %s at most): "
@@ -116,6 +122,7 @@ place_rows (AntRecord *record, const AntRowOrder *order, AntCadence *cadence, GE
     record->place[order->row[k]] = place[k] - place[0];
   cadence->start_d += (double) place[0] * cadence->step_d;
   record->series.n = (size_t) (place[order->n - 1] - place[0]) + 1;
+  ant_record_find_slip (record, order, cadence);
   say_jitter (record, order, cadence);
   return TRUE;
 }

@@ -91,6 +91,7 @@ ant_record_unref (AntRecord *record)
   free_view (record->series.bin_count);
   free_view (record->series.spike);
   g_free (record->place);
+  g_free (record->slip_d);
   g_array_unref (record->dark_spans);
   g_array_unref (record->gaps);
   g_free (record);

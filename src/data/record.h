@@ -67,6 +67,7 @@ typedef struct
   AntStampPlace stamp;  /* what the stamps mark; unknown counts as middle */
   AntSeries series;     /* arrays owned by the record; times are middles of exposures */
   gint64 *place;        /* [n_rows] grid place of each row, -1 if it has none */
+  float *slip_d;        /* [series.n] stamp less grid time where stamps wander slowly off the grid (record-slip.h); else NULL */
   GArray *dark_spans;   /* of AntSpan: dark or covered */
   GArray *gaps;         /* of AntSpan: runs of missing places longer than one */
   gint ref_count;

@@ -5,6 +5,7 @@
 #include <math.h>
 
 #include "data/error.h"
+#include "data/record-slip.h"
 #include "jobs/progress-part.h"
 #include "jobs/repeat-job.h"
 #include "jobs/verdict-job.h"
@@ -54,6 +55,11 @@ run (AntRecord *record, const AntSettings *settings, gboolean keep_part, GCancel
   ant_scan_free (scan);
   if (results && results->reach == ANT_SCAN_COMPLETE && !go_on (results, keep_part, cancellable, &part, error))
     g_clear_pointer (&results, ant_scan_results_unref);
+  if (results)
+    {
+      ant_record_unslip (record, results->n_dips, results->dip);
+      ant_record_unslip (record, results->n_brightenings, results->brightening);
+    }
   return results;
 }
 
@@ -88,7 +94,9 @@ ant_scan_job_ask (AntRecord *record, const AntSettings *settings, double mid_d, 
                   double *upper_limit_ppm, GError **error)
 {
   AntScanOptions options = ant_scan_results_options (record, settings);
-  AntStatus status = ant_scan_asked (&record->series, &options, mid_d, duration_d, dip);
+  AntStatus status = ant_scan_asked (&record->series, &options, mid_d - ant_record_slip (record, mid_d), duration_d, dip);
+  if (record->slip_d)
+    dip->mid_d = mid_d;
   *upper_limit_ppm = fmax (0, dip->depth_ppm) + ONE_SIDED_95 * dip->depth_sigma_ppm;
   if (status == ANT_BAD_ARGUMENT && duration_d > 0)
     {

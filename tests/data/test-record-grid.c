@@ -2,6 +2,7 @@
 #include <math.h>
 #include <string.h>
 #include "core/robust.h"
+#include "data/record-slip.h"
 #include "rows.h"
 
 #define MINUTE (1.0 / 1440.0)
@@ -384,6 +385,48 @@ test_coarse_jitter (void)
     }
 }
 
+/* Stamps at the barycentre run 499 s early and late in a year: every sample stays near its place, and grid times go back to
+ * the stamps to a second, wherever the clock slips by a step. */
+static void
+test_a_slipping_clock_is_followed (void)
+{
+  for (int minutes = 1; minutes <= 30; minutes += 29)
+    {
+      gsize n = (gsize) (200.0 / (minutes * MINUTE));
+      g_autoptr (AntRecord) record = test_rows (n, 0.0, minutes * MINUTE);
+      for (gsize i = 0; i < n; i++)
+        record->time_d[i] += 499.0 / 86400.0 * sin (2.0 * G_PI * record->time_d[i] / 365.25);
+      test_grid (record, &plain);
+      if (minutes == 30)
+        {
+          g_assert_null (record->slip_d); /* 499 s of 1800 are a quarter step only at the ends, which the slope takes up */
+          continue;
+        }
+      g_assert_nonnull (record->slip_d);
+      g_assert_true (test_said (record, "the clock wanders"));
+      for (gsize i = 0; i < n; i++)
+        {
+          double grid_d = ant_series_time (&record->series, (double) record->place[i]);
+          g_assert_cmpfloat (fabs (record->time_d[i] - grid_d), <, 0.61 * record->series.step_d);
+        }
+      for (double hours = 20.0; hours < 4780.0; hours += 7.3)
+        {
+          gsize i = (gsize) (hours * 60.0 / minutes), half = 300; /* contacts at rows of which the stamps are known */
+          double first_d = ant_series_time (&record->series, (double) record->place[i - half]);
+          double last_d = ant_series_time (&record->series, (double) record->place[i + half]);
+          AntDip dip = { .mid_d = 0.5 * (first_d + last_d), .duration_d = last_d - first_d };
+          ant_record_unslip (record, 1, &dip);
+          /* A step that is left out or doubled within two places of a contact is met on the way. */
+          gboolean near = fabs (dip.mid_d - 0.5 * (record->time_d[i - half] + record->time_d[i + half])) * 86400.0 < 1.0;
+          gboolean steps = FALSE;
+          for (gsize k = 0; k < 6; k++)
+            steps |= record->place[i - half + k - 2] - record->place[i - half + k - 3] != 1
+                     || record->place[i + half + k - 2] - record->place[i + half + k - 3] != 1;
+          g_assert_true (near || steps);
+        }
+    }
+}
+
 static void
 test_spikes_stay (void)
 {
@@ -465,6 +508,7 @@ main (int argc, char **argv)
   g_test_add_func ("/data/record-grid/an-eclipse-is-set-aside-as-a-span", test_eclipse);
   g_test_add_func ("/data/record-grid/a-shallow-dip-is-not-dark", test_dip_is_not_dark);
   g_test_add_func ("/data/record-grid/nights-are-refused", test_night_is_refused);
+  g_test_add_func ("/data/record-grid/a-slipping-clock-is-followed", test_a_slipping_clock_is_followed);
   g_test_add_func ("/data/record-grid/a-chosen-daylight-is-used-whole", test_a_chosen_daylight_is_used);
   g_test_add_func ("/data/record-grid/polar-nights-are-refused", test_polar_night_is_refused);
   g_test_add_func ("/data/record-grid/fewer-than-fifty-good-rows-are-refused", test_too_few);
