@@ -143,6 +143,7 @@ step (AntDesk *self, gboolean (*go) (AntAnalysis *analysis))
   ant_desk_judge_items (self);
   ant_desk_make_marks (self);
   settings_changed (self, &was, ANT_DESK_MASKS | ANT_DESK_JUDGEMENT);
+  ant_desk_follow_reading (self);
   return TRUE;
 }
 

@@ -182,17 +182,32 @@ ant_desk_open (AntDesk *self, const char *path)
   ant_reading_choices_clear (&reading);
 }
 
-/* Its masks and verdicts stay; what was found was found otherwise. */
+/* What was found was found otherwise. */
+static void
+read_anew (AntDesk *self)
+{
+  g_clear_pointer (&self->incoming, ant_analysis_free);
+  ant_analysis_drop_results (self->analysis);
+  read_record (self, ant_analysis_get_record_path (self->analysis), ant_analysis_get_treatment (self->analysis), NULL, NULL, opened_cb);
+}
+
+void
+ant_desk_follow_reading (AntDesk *self)
+{
+  const AntReadingChoices *wanted = &ant_analysis_get_treatment (self->analysis)->reading;
+  if (self->layers && !ant_reading_choices_same (&self->read_with->reading, wanted))
+    read_anew (self);
+}
+
+/* Its masks and verdicts stay. */
 static void
 read_present_as (AntDesk *self, const AntReadingChoices *reading)
 {
   AntTreatment *treatment = ant_treatment_copy (ant_analysis_get_treatment (self->analysis));
   ant_reading_choices_clear (&treatment->reading);
   ant_reading_choices_copy (reading, &treatment->reading);
-  g_clear_pointer (&self->incoming, ant_analysis_free);
   ant_analysis_treat (self->analysis, _("how the record is read"), treatment);
-  ant_analysis_drop_results (self->analysis);
-  read_record (self, ant_analysis_get_record_path (self->analysis), ant_analysis_get_treatment (self->analysis), NULL, NULL, opened_cb);
+  read_anew (self);
 }
 
 void

@@ -97,6 +97,7 @@ void ant_desk_clear_items (AntDesk *self);
 GCancellable *ant_desk_begin (AntDesk *self, AntBusy busy);
 gboolean ant_desk_end (AntDesk *self, GAsyncResult *result);
 void ant_desk_start_scan (AntDesk *self, AntLayers *layers);
+void ant_desk_follow_reading (AntDesk *self); /* the record anew if it was read by other choices than those of now */
 void ant_desk_read_for_scan (AntDesk *self); /* the record with the present treatment, then scan it */
 void ant_desk_open_analysis (AntDesk *self, const char *path);
 /* What has been read is unsaved work of an earlier run: give it its place. */

@@ -203,6 +203,37 @@ what_is_no_witness_is_told (void)
   g_assert_nonnull (strstr (said, "the witness: "));
 }
 
+/* Reading */
+
+/* The second column is read instead of the first; undone, the first is there again at once. */
+static void
+undoing_a_choice_reads_the_record_again (void)
+{
+  g_autoptr (AntDesk) desk = ant_desk_new ();
+  g_autofree char *path = NULL;
+  g_autoptr (GString) text = g_string_new ("jd,first (W/m2),second (W/m2)\n");
+  g_close (g_file_open_tmp (NULL, &path, NULL), NULL);
+  for (int i = 0; i < 200; i++)
+    g_string_append_printf (text, "%.8f,%.4f,%.4f\n", 2466583.5 + i / 144.0, 1361 + 0.01 * sin (i), 1300 + 0.01 * cos (i));
+  g_assert_true (g_file_set_contents (path, text->str, -1, NULL));
+  ant_desk_open (desk, path);
+  test_gui_wait (test_gui_idle, desk, 20);
+  g_assert_cmpfloat_with_epsilon (ant_desk_get_record (desk)->median, 1361, 0.1);
+  AntReadingChoices reading = { 0 };
+  g_assert_true (ant_reading_choices_parse_columns (&reading, "value=3", NULL));
+  ant_desk_open_as (desk, path, &reading);
+  ant_reading_choices_clear (&reading);
+  test_gui_wait (test_gui_idle, desk, 20);
+  g_assert_cmpfloat_with_epsilon (ant_desk_get_record (desk)->median, 1300, 0.1);
+  g_assert_true (ant_desk_undo (desk));
+  test_gui_wait (test_gui_idle, desk, 20);
+  g_assert_cmpfloat_with_epsilon (ant_desk_get_record (desk)->median, 1361, 0.1);
+  g_assert_true (ant_desk_redo (desk));
+  test_gui_wait (test_gui_idle, desk, 20);
+  g_assert_cmpfloat_with_epsilon (ant_desk_get_record (desk)->median, 1300, 0.1);
+  g_unlink (path);
+}
+
 /* Columns */
 
 static gboolean
@@ -318,6 +349,7 @@ add (void)
   g_test_add_func ("/gui/desk/several-witnesses-are-opened-and-undone-one-by-one", several_witnesses_are_opened_and_undone_one_by_one);
   g_test_add_func ("/gui/desk/witnesses-come-back-with-the-analysis", witnesses_come_back_with_the_analysis);
   g_test_add_func ("/gui/desk/a-further-column-is-shown-while-there-is-one", a_further_column_is_shown_while_there_is_one);
+  g_test_add_func ("/gui/desk/undoing-a-choice-reads-the-record-again", undoing_a_choice_reads_the_record_again);
   g_test_add_func ("/gui/desk/another-drift-compares-anew", another_drift_compares_anew);
   g_test_add_func ("/gui/desk/what-is-no-witness-is-told", what_is_no_witness_is_told);
 }
