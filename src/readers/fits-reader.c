@@ -282,22 +282,6 @@ take_times (TimeBlock *times, AntTimeForm *form, gint64 from, gint64 n, AntTable
     }
 }
 
-static void
-make_room (AntTableRows *rows, const AntValueColumns *columns, gsize n)
-{
-  rows->n = rows->room = n;
-  rows->time_d = g_new (double, n);
-  rows->line = g_new (guint32, n);
-  for (guint v = 0; v < columns->n_values; v++)
-    rows->values[v] = g_new (double, n);
-  for (guint f = 0; f < columns->n_further; f++)
-    rows->further[f] = g_new (float, n);
-  if (columns->error >= 0)
-    rows->error = g_new (double, n);
-  if (columns->quality >= 0)
-    rows->quality = g_new (gint64, n);
-}
-
 static gboolean
 read_block (AntFitsTable *table, const AntValueColumns *columns, gint64 from, gint64 n, double *scratch, AntTableRows *rows,
             GError **error)
@@ -326,7 +310,8 @@ read_rows (AntFitsTable *table, AntTimeForm *form, const AntValueColumns *column
   gint64 block = MIN (ant_fits_table_block (table), MAX (table->n_samples, 1));
   g_autofree double *scratch = g_new (double, block);
   gboolean good = TRUE;
-  make_room (rows, columns, (gsize) table->n_samples);
+  ant_table_rows_expect (rows, columns, MAX ((gsize) table->n_samples, 1));
+  rows->n = (gsize) table->n_samples;
   time_block_init (&times, table, form, block);
   for (gint64 from = 0; from < table->n_samples && good; from += block)
     {

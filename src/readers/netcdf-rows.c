@@ -9,6 +9,7 @@
 #include "core/units.h"
 #include "data/error.h"
 #include "readers/cf-time.h"
+#include "readers/large-array.h"
 #include "readers/netcdf-values.h"
 #include "readers/table-record.h"
 #include "readers/text-names.h"
@@ -193,7 +194,7 @@ static double *
 read_values (Work *work, guint c)
 {
   gsize n = work->columns->n_rows;
-  double *values = g_new (double, n);
+  double *values = ant_large_renew (double, NULL, n);
   AntNetcdfTally tally = { 0 };
   for (gsize i = 0; i < n; i++)
     values[i] = ant_netcdf_unpack (&work->packing[c], ant_netcdf_column_real (&work->column[c], i), &tally);
@@ -205,7 +206,7 @@ static float *
 read_further (const Work *work, guint c)
 {
   gsize n = work->columns->n_rows;
-  float *values = g_new (float, n);
+  float *values = ant_large_renew (float, NULL, n);
   for (gsize i = 0; i < n; i++)
     {
       double value = value_at (work, c, i);
@@ -218,7 +219,7 @@ static gint64 *
 read_quality (const Work *work, guint c, AntTableRows *rows)
 {
   gsize n = work->columns->n_rows;
-  gint64 *quality = g_new (gint64, n);
+  gint64 *quality = ant_large_renew (gint64, NULL, n);
   for (gsize i = 0; i < n; i++)
     {
       gboolean whole = work->column[c].kind == ANT_WIRE_INTEGER && !work->packing[c].scales;
@@ -234,8 +235,8 @@ static void
 read_rows (Work *work, const AntValueColumns *columns, AntCfTime *cf, AntTimeForm *form, AntTableRows *rows)
 {
   rows->n = rows->room = work->columns->n_rows;
-  rows->time_d = g_new (double, rows->n);
-  rows->line = g_new (guint32, rows->n);
+  rows->time_d = ant_large_renew (double, NULL, rows->n);
+  rows->line = ant_large_renew (guint32, NULL, rows->n);
   read_times (work, cf, form, rows);
   for (guint i = 0; i < columns->n_values; i++)
     rows->values[i] = read_values (work, columns->values[i]);

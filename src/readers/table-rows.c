@@ -5,6 +5,7 @@
 #include <math.h>
 #include <string.h>
 
+#include "readers/large-array.h"
 #include "readers/line-source.h"
 #include "readers/text-cell.h"
 #include "readers/text-names.h"
@@ -54,21 +55,33 @@ make_slots (Slots *slots, const AntTableLayout *layout, const AntTimeForm *form,
 }
 
 static void
+set_room (AntTableRows *rows, const AntValueColumns *columns, gsize room)
+{
+  rows->room = room;
+  rows->time_d = ant_large_renew (double, rows->time_d, room);
+  rows->line = ant_large_renew (guint32, rows->line, room);
+  for (guint i = 0; i < columns->n_values; i++)
+    rows->values[i] = ant_large_renew (double, rows->values[i], room);
+  for (guint i = 0; i < columns->n_further; i++)
+    rows->further[i] = ant_large_renew (float, rows->further[i], room);
+  if (columns->error >= 0)
+    rows->error = ant_large_renew (double, rows->error, room);
+  if (columns->quality >= 0)
+    rows->quality = ant_large_renew (gint64, rows->quality, room);
+}
+
+static void
 make_room (AntTableRows *rows, const AntValueColumns *columns, gsize n_more)
 {
-  if (rows->n + n_more <= rows->room)
-    return;
-  rows->room = MAX (rows->n + n_more, rows->room ? 2 * rows->room : 4096);
-  rows->time_d = g_renew (double, rows->time_d, rows->room);
-  rows->line = g_renew (guint32, rows->line, rows->room);
-  for (guint i = 0; i < columns->n_values; i++)
-    rows->values[i] = g_renew (double, rows->values[i], rows->room);
-  for (guint i = 0; i < columns->n_further; i++)
-    rows->further[i] = g_renew (float, rows->further[i], rows->room);
-  if (columns->error >= 0)
-    rows->error = g_renew (double, rows->error, rows->room);
-  if (columns->quality >= 0)
-    rows->quality = g_renew (gint64, rows->quality, rows->room);
+  if (rows->n + n_more > rows->room)
+    set_room (rows, columns, MAX (rows->n + n_more, rows->room ? 2 * rows->room : 4096));
+}
+
+void
+ant_table_rows_expect (AntTableRows *rows, const AntValueColumns *columns, gsize n)
+{
+  if (n > rows->room)
+    set_room (rows, columns, n);
 }
 
 /* Cut a line; TRUE if it has as many cells as there are columns. */

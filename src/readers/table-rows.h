@@ -28,6 +28,9 @@ AntRowParser *ant_row_parser_new (const AntTableLayout *layout, const AntTimeFor
 void ant_row_parser_free (AntRowParser *parser);
 void ant_row_parser_set_form (AntRowParser *parser, const AntTimeForm *form);
 
+/* Room for so many rows in all; they may be more or fewer. */
+void ant_table_rows_expect (AntTableRows *rows, const AntValueColumns *columns, gsize n);
+
 typedef enum { ANT_ROWS_GOOD, ANT_ROWS_NUL, ANT_ROWS_LONG_LINE } AntRowsFault;
 
 /* Add the rows of the whole lines [start, end), each ended by a newline. Line numbers count from rows->n_lines + 1, and n_lines

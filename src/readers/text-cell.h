@@ -21,11 +21,12 @@ typedef struct
 /* Read the cell that begins at `at` and return the place after its separator (after its last character where the line
  * ends: NULL then). `separator` is ',', ';', '\t', or ' ' for runs of blanks. *end must not belong to a number. */
 const char *ant_cell_next (const char *at, const char *end, char separator, AntCell *cell);
-/* The same, with the way of a bare number between separators inlined for the loop over all rows. */
+/* The same, with the way of a bare number between separators inlined for the loop over all rows; the line's memory goes on for eight
+ * characters behind its end. */
 static inline const char *
 ant_cell_next_number (const char *at, const char *end, char separator, AntCell *cell)
 {
-  const char *after = ant_number_read (at, &cell->number);
+  const char *after = ant_number_read_padded (at, &cell->number);
   if (!after || (after != end && *after != separator) || separator == ' ')
     return ant_cell_next (at, end, separator, cell);
   cell->start = at;

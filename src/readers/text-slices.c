@@ -5,10 +5,12 @@
 #include <string.h>
 
 #include "data/error.h"
+#include "readers/large-array.h"
 
 #define SLICE (512 * 1024)
 #define MOST_SLICES 16
 #define BATCH (SLICE * MOST_SLICES) /* bytes in flight: memory does not grow with the file */
+#define PADDING 8                   /* bytes behind the text that numbers may look at */
 #define FIRST_BATCH SLICE           /* a short file needs no more room */
 
 typedef struct
@@ -24,10 +26,11 @@ typedef struct
   AntByteSource *source;
   const AntValueColumns *columns;
   gboolean hashes;       /* here, as one more slice of the batch */
-  char *buffer;          /* [room + 1] */
+  char *buffer;          /* [room + 1 + PADDING] */
   gsize room, filled;    /* of the buffer; the bytes read so far */
   gsize n_hashed;        /* bytes at its start that are hashed already */
-  gboolean at_end;
+  gsize n_taken;         /* bytes of whole lines before the buffer */
+  gboolean at_end, foreseen;
   Slice slices[MOST_SLICES];
   gsize n_slices;
 } Batch;
@@ -144,6 +147,16 @@ gather (Batch *batch, AntTableRows *rows, GError **error)
   return TRUE;
 }
 
+/* The rows of a plain file, by its size and the first of them: arrays that grow a piece at a time are moved again and again. */
+static void
+foresee (Batch *batch, AntTableRows *rows)
+{
+  gsize size = ant_byte_source_is_packed (batch->source) ? 0 : ant_byte_source_file_size (batch->source);
+  if (!batch->foreseen && rows->n > 0 && size > batch->n_taken)
+    ant_table_rows_expect (rows, batch->columns, (gsize) (1.02 * (double) rows->n * ((double) size / (double) batch->n_taken)));
+  batch->foreseen = TRUE;
+}
+
 /* Keep what is behind the last line end, and make the buffer as large as batches are. */
 static gboolean
 go_on (Batch *batch, gsize used, const AntTableRows *rows, GError **error)
@@ -156,7 +169,7 @@ go_on (Batch *batch, gsize used, const AntTableRows *rows, GError **error)
   if (!batch->at_end && batch->room < BATCH)
     {
       batch->room = BATCH;
-      batch->buffer = g_realloc (batch->buffer, batch->room + 1);
+      batch->buffer = ant_large_renew (char, batch->buffer, batch->room + 1 + PADDING);
     }
   return TRUE;
 }
@@ -183,6 +196,9 @@ read_batches (Batch *batch, AntTableRows *rows, AntTimeForm *form, const AntSlic
       if (!run_batch (batch, runner, cancellable, error) || !gather (batch, rows, error))
         return FALSE;
       batch->filled = with_end;
+      batch->n_taken += used;
+      if (!done)
+        foresee (batch, rows);
       if (!done && !go_on (batch, used, rows, error))
         return FALSE;
     }
@@ -199,7 +215,7 @@ ant_text_slices_read (AntTableRows *rows, AntLineSource *lines, const AntTableLa
     if (ant_line_source_next (lines, &start, &end, error) != 1)
       return FALSE; /* cannot be: the layout has seen them */
   batch.filled = batch.n_hashed = lines->filled - lines->at;
-  batch.buffer = g_malloc (batch.room + 1);
+  batch.buffer = g_malloc0 (batch.room + 1 + PADDING);
   memcpy (batch.buffer, lines->buffer + lines->at, batch.filled);
   batch.hashes = ant_byte_source_leave_hashing (lines->source);
   rows->n_lines = lines->line;

@@ -25,6 +25,11 @@ same_as_strtod (const char *text)
   const char *after = ant_number_read (text, &found);
   if (after != end || memcmp (&found, &expected, sizeof found) != 0)
     g_error ("%s: found %.17g up to %zd, expected %.17g up to %zd", text, found, after ? after - text : -1, expected, end - text);
+  /* Whatever stands behind it: more digits beyond the end would be seen. */
+  g_autofree char *padded = g_strconcat (text, "\n", "1.5e7777", NULL);
+  after = ant_number_read_padded (padded, &found);
+  if (after != padded + (end - text) || memcmp (&found, &expected, sizeof found) != 0)
+    g_error ("%s: by eights found %.17g up to %zd, expected %.17g", text, found, after ? after - padded : -1, expected);
 }
 
 static void
@@ -111,7 +116,11 @@ words_are_no_numbers (void)
   static const char *const words[] = { "\n", "-\n", "+\n", ".\n", "-.\n", "e5\n", "nan\n", "inf\n", "abc\n", ",1\n", "--1\n", " 1\n" };
   double value = 0.0;
   for (gsize i = 0; i < G_N_ELEMENTS (words); i++)
-    g_assert_null (ant_number_read (words[i], &value));
+    {
+      g_autofree char *padded = g_strconcat (words[i], "12345678", NULL);
+      g_assert_null (ant_number_read (words[i], &value));
+      g_assert_null (ant_number_read_padded (padded, &value));
+    }
   g_assert_cmpstr (ant_number_read ("0x10\n", &value), ==, "x10\n");
 }
 
