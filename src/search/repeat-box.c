@@ -168,19 +168,25 @@ power_of (float num, float den, float least, float inverse_total)
 }
 
 static inline __attribute__ ((always_inline)) float
+power_at (size_t n_rows, const AntFoldLeaf *leaf, size_t t, float least, float inverse_total)
+{
+  float num = leaf->a[0][t], den = leaf->b[0][t];
+  for (size_t r = 1; r < n_rows; r++)
+    {
+      num += leaf->a[r][t];
+      den += leaf->b[r][t];
+    }
+  return power_of (num, den, least, inverse_total);
+}
+
+static inline __attribute__ ((always_inline)) float
 best_of (size_t n_rows, const AntFoldLeaf *leaf, float least, float inverse_total)
 {
   float best[ANT_FOLD_LANES] = { 0 }, greatest = 0;
   for (size_t t = 0; t < leaf->n_phases; t += ANT_FOLD_LANES)
     for (size_t i = 0; i < ANT_FOLD_LANES; i++)
       {
-        float num = leaf->a[0][t + i], den = leaf->b[0][t + i];
-        for (size_t r = 1; r < n_rows; r++)
-          {
-            num += leaf->a[r][t + i];
-            den += leaf->b[r][t + i];
-          }
-        float power = power_of (num, den, least, inverse_total);
+        float power = power_at (n_rows, leaf, t + i, least, inverse_total);
         best[i] = power > best[i] ? power : best[i];
       }
   for (size_t i = 0; i < ANT_FOLD_LANES; i++)
@@ -204,23 +210,41 @@ best_power (const AntFoldLeaf *leaf, float least, float inverse_total)
     }
 }
 
+/* The first lanes among whose phases one has this power. */
+static inline __attribute__ ((always_inline)) size_t
+lanes_of (size_t n_rows, const AntFoldLeaf *leaf, float wanted, float least, float inverse_total)
+{
+  for (size_t t = 0; t < leaf->n_phases; t += ANT_FOLD_LANES)
+    {
+      int any = 0;
+      for (size_t i = 0; i < ANT_FOLD_LANES; i++)
+        any |= power_at (n_rows, leaf, t + i, least, inverse_total) >= wanted;
+      if (any)
+        return t;
+    }
+  return 0;
+}
+
 /* The first phase that has this power. */
-static size_t
+ANT_SIMD static size_t
 phase_of (const AntFoldLeaf *leaf, float power, float least, float inverse_total)
 {
-  size_t end = (leaf->n_phases + ANT_FOLD_LANES - 1) / ANT_FOLD_LANES * ANT_FOLD_LANES;
-  for (size_t t = 0; t < end; t++)
+  size_t t;
+  switch (leaf->n_rows)
     {
-      float num = leaf->a[0][t], den = leaf->b[0][t];
-      for (size_t r = 1; r < leaf->n_rows; r++)
-        {
-          num += leaf->a[r][t];
-          den += leaf->b[r][t];
-        }
-      if (power_of (num, den, least, inverse_total) >= power)
-        return leaf->first_phase + t;
+    case 1: t = lanes_of (1, leaf, power, least, inverse_total); break;
+    case 2: t = lanes_of (2, leaf, power, least, inverse_total); break;
+    case 3: t = lanes_of (3, leaf, power, least, inverse_total); break;
+    case 4: t = lanes_of (4, leaf, power, least, inverse_total); break;
+    case 5: t = lanes_of (5, leaf, power, least, inverse_total); break;
+    case 6: t = lanes_of (6, leaf, power, least, inverse_total); break;
+    case 7: t = lanes_of (7, leaf, power, least, inverse_total); break;
+    default: t = lanes_of (8, leaf, power, least, inverse_total); break;
     }
-  return leaf->first_phase;
+  for (size_t i = 0; i < ANT_FOLD_LANES; i++)
+    if (power_at (leaf->n_rows, leaf, t + i, least, inverse_total) >= power)
+      return leaf->first_phase + t + i;
+  return leaf->first_phase + t;
 }
 
 static void
@@ -231,7 +255,7 @@ visit (void *data, const AntFoldLeaf *leaf)
   float power = best_power (leaf, v->least, boxes->inverse_total);
   double period_d = leaf->period * boxes->step_d;
   AntRepeatCell *cell = ant_repeat_bins_at (v->bins, period_d);
-  if ((double) power <= cell->power)
+  if ((double) power <= fmax (cell->power, v->bins->floor))
     return;
   double start = (double) phase_of (leaf, power, v->least, boxes->inverse_total) - (double) boxes->lead;
   *cell = (AntRepeatCell){ .power = (double) power, .period_d = period_d, .duration_d = boxes->duration_d,

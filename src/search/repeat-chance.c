@@ -8,10 +8,12 @@
 #define LEAST_COVERAGE 0.3
 #define PERIODS 200
 #define WIDTHS 24
+#define TAIL_STEP 0.05
+#define TAIL_STEPS 40
 
 /* The calibration: see docs/search.md. */
-#define YIELD 0.5
-#define WHITE_YIELD 0.024
+#define YIELD 0.9
+#define WHITE_YIELD 0.08
 
 enum { SHAPE, MOVED, LONGER, WITH_MOVED, WITH_LONGER };
 
@@ -127,32 +129,98 @@ over_durations (const AntRepeatGrid *grid, double period_d, double step_d, const
   return sum;
 }
 
-void
-ant_repeat_chance_init (AntRepeatChance *chance, const AntRepeatGrid *grid, double span_d, double step_d, const double *rate)
+static double
+normal_below (double x)
 {
-  double sum = 0, ratio = log (grid->period_max_d / grid->period_min_d) / PERIODS;
+  return 0.5 * erfc (-x / sqrt (2.0));
+}
+
+/* Mean and variance of the greatest of `events` independent normal numbers. */
+static void
+greatest_of (size_t events, double *mean, double *variance)
+{
+  double first = 0, second = 0, step = 0.05;
+  for (double x = -6; x < 8; x += step)
+    {
+      double share = pow (normal_below (x + step), (double) events) - pow (normal_below (x), (double) events);
+      first += share * (x + 0.5 * step);
+      second += share * (x + 0.5 * step) * (x + 0.5 * step);
+    }
+  *mean = first;
+  *variance = second - first * first;
+}
+
+/* Add what one period has, per unit of its own integral: its epochs see `events` of it or one more. */
+static void
+add_period (AntRepeatChance *chance, size_t least_events, double span_d, double period_d, double weight)
+{
+  double turns = span_d / period_d, fewer = floor (turns), part[2] = { 1 - (turns - fewer), turns - fewer };
+  for (int k = 0; k < 2; k++)
+    {
+      double events = fewer + k;
+      if (events >= (double) least_events)
+        chance->volume[events < ANT_CHANCE_EVENTS ? (size_t) events : ANT_CHANCE_EVENTS]
+          += weight * part[k] * period_d * sqrt ((events * events - 1) / 12);
+    }
+}
+
+void
+ant_repeat_chance_init (AntRepeatChance *chance, const AntRepeatGrid *grid, size_t least_events, double span_d, double step_d,
+                        const double *rate)
+{
+  double ratio = log (grid->period_max_d / grid->period_min_d) / PERIODS;
+  *chance = (AntRepeatChance){ .white = !rate };
+  for (size_t m = 2; m <= ANT_CHANCE_EVENTS; m++)
+    {
+      double variance;
+      greatest_of (m, &chance->mean[m], &variance);
+      chance->stretch[m] = sqrt (variance / (variance - 1 / (double) m));
+    }
   for (int k = 0; k < PERIODS; k++)
     {
       double period_d = grid->period_min_d * exp ((k + 0.5) * ratio);
-      sum += over_durations (grid, period_d, step_d, rate) * period_d * ratio;
+      double integral = over_durations (grid, period_d, step_d, rate) * period_d * ratio;
+      add_period (chance, least_events, span_d, period_d, integral * (rate ? YIELD : WHITE_YIELD));
     }
-  *chance = (AntRepeatChance){ .white = !rate, .volume = sum * span_d * (rate ? YIELD / sqrt (12.0) : WHITE_YIELD) };
+}
+
+/* Maxima above T of a unit volume. */
+static double
+maxima (int white, double snr)
+{
+  double square = snr * snr, tail = exp (-0.5 * square);
+  return white ? square * square * snr * tail / sqrt (ANT_TAU) : fmax (square - 1, 0) * tail / (ANT_TAU * ANT_TAU);
+}
+
+/* The greatest departure from a mean is the greatest number less that mean, whose variance 1/M is independent of it. So it is
+ * spread like the greatest of M independent numbers, but that much less. */
+double
+ant_repeat_chance_keeps_enough (const AntRepeatChance *chance, size_t events, double snr)
+{
+  double m = (double) events, most = sqrt (m - 1) * (snr * sqrt ((m - 1) / m) - ANT_WITHOUT_LARGEST);
+  return pow (normal_below (chance->mean[events] + (most - chance->mean[events]) * chance->stretch[events]), m);
 }
 
 double
 ant_repeat_chance_expected (const AntRepeatChance *chance, double snr)
 {
-  double square = snr * snr, tail = exp (-0.5 * square);
-  if (chance->white)
-    return chance->volume * square * square * snr * tail / sqrt (ANT_TAU);
-  return chance->volume * fmax (square - 1, 0) * tail / (ANT_TAU * ANT_TAU);
+  double sum = 0;
+  for (int i = 0; i < TAIL_STEPS; i++)
+    {
+      double low = snr + i * TAIL_STEP, here = maxima (chance->white, low) - maxima (chance->white, low + TAIL_STEP), pass = 0;
+      for (size_t m = 2; m <= ANT_CHANCE_EVENTS; m++)
+        if (chance->volume[m] > 0)
+          pass += chance->volume[m] * ant_repeat_chance_keeps_enough (chance, m, low + 0.5 * TAIL_STEP);
+      sum += here * pass;
+    }
+  return sum;
 }
 
 double
 ant_repeat_chance_threshold (const AntRepeatChance *chance, double number)
 {
-  double low = 4, high = 40;
-  for (int i = 0; i < 60; i++)
+  double low = ANT_WITHOUT_LARGEST, high = 40; /* below, no train passes */
+  while (high - low > 1e-9)
     {
       double mid = 0.5 * (low + high);
       if (ant_repeat_chance_expected (chance, mid) > number)

@@ -46,7 +46,7 @@ ant_repeat_bins_init (AntRepeatBins *bins, const AntRepeatGrid *grid)
   double step = fmax (ANT_REPEAT_BIN_LN, width / ANT_REPEAT_BINS);
   size_t n = (size_t) ceil (width / step);
   n = n < 1 ? 1 : n > ANT_REPEAT_BINS ? ANT_REPEAT_BINS : n;
-  *bins = (AntRepeatBins){ .from_ln = from, .step_ln = step, .n = n, .cell = calloc (n, sizeof *bins->cell) };
+  *bins = (AntRepeatBins){ .from_ln = from, .step_ln = step, .n = n, .floor = ANT_REPEAT_FLOOR, .cell = calloc (n, sizeof *bins->cell) };
   return bins->cell ? ANT_OK : ANT_NO_MEMORY;
 }
 

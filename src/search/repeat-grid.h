@@ -10,7 +10,7 @@
 #define ANT_REPEAT_CROSSING_H 13.0 /* of a central crossing at a period of a year */
 #define ANT_REPEAT_BINS 20000      /* at most */
 #define ANT_REPEAT_BIN_LN 2e-4     /* finest */
-#define ANT_REPEAT_FLOOR 16.0      /* SNR^2 below which bins may stay empty */
+#define ANT_REPEAT_FLOOR 16.0      /* SNR^2 below which bins stay empty, unless another is asked */
 
 typedef struct
 {
@@ -37,6 +37,7 @@ typedef struct
 typedef struct
 {
   double from_ln, step_ln; /* bin i: ln P from from_ln + i step_ln */
+  double floor;            /* SNR^2 below which bins stay empty */
   size_t first, n;         /* bins first .. first+n-1 of the whole range are held here */
   AntRepeatCell *cell;
 } AntRepeatBins;

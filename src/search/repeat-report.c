@@ -47,12 +47,11 @@ dip_at (const AntRepeats *repeats, double mid_d, double duration_d)
 static AntRepeatEvent
 event_of (const AntRepeats *repeats, const AntRepeatFinalist *finalist, long number, double *num, double *den)
 {
-  const AntRepeatTrain *train = &repeats->side[0].train;
-  AntTrainEvent event = ant_repeat_train_event (train, &finalist->trial, number);
+  AntTrainEvent event = finalist->event[number - finalist->first];
   const AntShapeFit *fit = &finalist->fit[number - finalist->first];
   *num = event.num;
   *den = event.den;
-  if (!train->box)
+  if (!repeats->options.white)
     {
       *den = fit->sigma_ppm > 0 && isfinite (fit->sigma_ppm) ? 1 / (fit->sigma_ppm * fit->sigma_ppm) : 0;
       *num = *den > 0 ? fit->depth_ppm * *den : 0;
@@ -87,7 +86,7 @@ add_events (const AntRepeats *repeats, const AntRepeatFinalist *finalist, AntRep
       AntRepeatEvent event = event_of (repeats, finalist, j, &num, &den);
       if (!(den > 0))
         continue;
-      AntTrainEvent train = ant_repeat_train_event (&repeats->side[0].train, &finalist->trial, j);
+      AntTrainEvent train = finalist->event[j - finalist->first];
       repeat->event[repeat->n_events++] = event;
       all = (Sum){ all.num + num, all.den + den };
       if (!event.dip)

@@ -9,6 +9,7 @@
 #define WORST_MISFIT 0.08    /* of the pair fit; beyond, a tree for each duration */
 #define DURATION_RATIO 1.35  /* from one tree's duration to the next */
 #define STARTS_TO_A_BOX 6.0
+#define BINS_FROM 0.6        /* of the threshold: less is left out of the bins */
 
 AntStatus
 ant_repeats_whiten (AntRepeats *repeats, size_t i)
@@ -56,8 +57,8 @@ init_chance (AntRepeats *repeats)
     }
   for (size_t k = 0; k < ANT_CHANCE_DURATIONS; k++)
     rate[k] /= total > 0 ? total : 1;
-  ant_repeat_chance_init (&repeats->chance, &repeats->options.grid, repeats->span_d, repeats->series.step_d,
-                          repeats->options.white ? NULL : rate);
+  ant_repeat_chance_init (&repeats->chance, &repeats->options.grid, repeats->options.least_events, repeats->span_d,
+                          repeats->series.step_d, repeats->options.white ? NULL : rate);
   repeats->threshold = ant_repeat_chance_threshold (&repeats->chance, repeats->options.false_alarms);
 }
 
@@ -85,6 +86,7 @@ init_data (AntRepeats *repeats, int s)
   side->train = (AntRepeatTrain){ .n = series->n, .least_duration = 0.8 * floor_d / series->step_d,
                                   .longest_duration = 1.2 * ant_repeat_grid_longest (grid) / series->step_d };
   AntStatus status = ant_repeat_bins_init (&side->bins, grid);
+  side->bins.floor = fmax (ANT_REPEAT_FLOOR, pow (BINS_FROM * repeats->threshold, 2));
   if (!status && repeats->options.white)
     {
       status = init_box (repeats, s);
@@ -248,9 +250,7 @@ ant_repeats_forget (AntRepeats *repeats)
       ant_repeat_bins_clear (&side->bins);
       *side = (AntRepeatSide){ 0 };
     }
-  free (repeats->finalist.fit);
-  repeats->finalist.fit = NULL;
+  ant_repeats_forget_finalists (repeats);
   ant_repeat_pairs_clear (&repeats->pairs);
   repeats->n_slices = repeats->n_peaks = 0;
-  repeats->has_finalist = 0;
 }

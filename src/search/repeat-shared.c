@@ -195,21 +195,28 @@ may_exceed (const Visit *v, size_t t, float cut)
   return any;
 }
 
+/* The best of these phases and its width, over all durations; the earliest of the narrowest of equals. */
 static inline __attribute__ ((always_inline)) float
-best_at (const Visit *v, size_t t)
+best_at (const Visit *v, size_t t, size_t *phase, size_t *width)
 {
-  float best[LANES] = { 0 }, greatest = 0;
+  float best[LANES] = { 0 }, best_w[LANES] = { 0 }, greatest = 0;
   for (size_t w = v->narrow; w <= v->wide; w++)
     {
-      float scale = v->shared->scale[w];
+      float scale = v->shared->scale[w], here = (float) w;
       for (size_t i = 0; i < LANES; i++)
         {
           float power = power_of (v->z[t + i], v->z[t + i + w], v->a[t + i], v->a[t + i + w], scale, v->least);
+          best_w[i] = power > best[i] ? here : best_w[i];
           best[i] = power > best[i] ? power : best[i];
         }
     }
   for (size_t i = 0; i < LANES; i++)
-    greatest = best[i] > greatest ? best[i] : greatest;
+    if (best[i] > greatest)
+      {
+        greatest = best[i];
+        *phase = t + i;
+        *width = (size_t) best_w[i];
+      }
   return greatest;
 }
 
@@ -233,26 +240,13 @@ exact_power (const Visit *v, const AntFoldLeaf *leaf, size_t i, size_t w)
   return events >= v->events && num > 0 ? num * num / den : 0;
 }
 
-/* Hold the best of these phases against the table, and keep it if it still is better than the cell. */
+/* Hold a phase and width against the table, and keep it if it still is better than the cell. */
 static void
-settle (const Visit *v, const AntFoldLeaf *leaf, size_t t, AntRepeatCell *cell)
+settle (const Visit *v, const AntFoldLeaf *leaf, size_t phase, size_t width, AntRepeatCell *cell)
 {
   const AntRepeatShared *shared = v->shared;
-  size_t phase = t, width = v->narrow;
-  float best = 0;
-  for (size_t w = v->narrow; w <= v->wide; w++)
-    for (size_t i = t; i < t + LANES; i++)
-      {
-        float power = power_of (v->z[i], v->z[i + w], v->a[i], v->a[i + w], shared->scale[w], v->least);
-        if (power > best)
-          {
-            best = power;
-            phase = i;
-            width = w;
-          }
-      }
   double exact = exact_power (v, leaf, phase, width);
-  if (exact <= fmax (cell->power, ANT_REPEAT_FLOOR))
+  if (exact <= fmax (cell->power, v->bins->floor))
     return;
   double begin_d = ((double) (leaf->first_phase + phase) - (double) shared->lead) * shared->step_d;
   double duration_d = (double) width * shared->step_d + shared->ramp_d;
@@ -260,13 +254,13 @@ settle (const Visit *v, const AntFoldLeaf *leaf, size_t t, AntRepeatCell *cell)
                            .mid_d = begin_d + 0.5 * duration_d };
 }
 
-/* The first block of phases from t on that may hold more than `cut`, or `phases`. The bound is rounded a little to the safe
- * side. */
+/* The first block of phases from t on that holds more than `cut`, its best phase and width, or `phases`. The bound is rounded a
+ * little to the safe side. */
 ANT_SIMD static size_t
-next_block (const Visit *v, size_t t, size_t phases, float cut)
+next_block (const Visit *v, size_t t, size_t phases, float cut, size_t *phase, size_t *width)
 {
   for (; t < phases; t += LANES)
-    if ((v->all || may_exceed (v, t, cut * 0.99999f)) && best_at (v, t) > cut)
+    if ((v->all || may_exceed (v, t, cut * 0.99999f)) && best_at (v, t, phase, width) > cut)
       return t;
   return phases;
 }
@@ -286,13 +280,13 @@ visit (void *data, const AntFoldLeaf *leaf)
 {
   Visit *v = data;
   double period_d = leaf->period * v->shared->step_d;
-  size_t phases = (leaf->n_phases + LANES - 1) / LANES * LANES, t = 0;
+  size_t phases = (leaf->n_phases + LANES - 1) / LANES * LANES, t = 0, phase = 0, width = 0;
   AntRepeatCell *cell = ant_repeat_bins_at (v->bins, period_d);
   set_widths (v, period_d);
   fold_leaf (v, leaf, phases);
-  while ((t = next_block (v, t, phases, (float) fmax (cell->power, ANT_REPEAT_FLOOR))) < phases)
+  while ((t = next_block (v, t, phases, (float) fmax (cell->power, v->bins->floor), &phase, &width)) < phases)
     {
-      settle (v, leaf, t, cell);
+      settle (v, leaf, phase, width, cell);
       t += LANES;
     }
 }

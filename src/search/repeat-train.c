@@ -79,41 +79,72 @@ ant_repeat_train_snr (const AntRepeatTrain *train, const AntTrainTrial *trial, s
   return events >= least_events ? snr_of (train, num, den) : 0;
 }
 
+/* Sums of events as they come; the observed ones apart, for their scatter. */
+typedef struct
+{
+  double num, den, side_num[2], side_den[2], largest, largest_den;
+  double seen_num, seen_den, squares; /* squares: of num^2/den */
+  size_t n_seen;
+} Sums;
+
+static void
+add_event (Sums *sums, const AntTrainEvent *event)
+{
+  sums->num += event->num;
+  sums->den += event->den;
+  sums->side_num[event->number & 1] += event->num;
+  sums->side_den[event->number & 1] += event->den;
+  if (event->num > sums->largest)
+    {
+      sums->largest = event->num;
+      sums->largest_den = event->den;
+    }
+  if (!(event->den >= 0.5 * event->full))
+    return;
+  sums->n_seen++;
+  sums->seen_num += event->num;
+  sums->seen_den += event->den;
+  sums->squares += event->num * event->num / event->den;
+}
+
+static AntTrainSums
+results_of (const AntRepeatTrain *train, const Sums *sums)
+{
+  AntTrainSums results = { .num = sums->num, .den = sums->den, .n_events = sums->n_seen };
+  if (!(sums->den > 0))
+    return results;
+  double common = sums->num / sums->den;
+  results.snr = snr_of (train, sums->num, sums->den);
+  results.depth = sums->num / effective (train, sums->den);
+  results.without_largest = snr_of (train, sums->num - sums->largest, sums->den - sums->largest_den);
+  if (sums->side_den[0] > 0 && sums->side_den[1] > 0)
+    results.odd_even = fabs (sums->side_num[0] / sums->side_den[0] - sums->side_num[1] / sums->side_den[1])
+                       / sqrt (1 / sums->side_den[0] + 1 / sums->side_den[1]);
+  results.chi2 = fmax (sums->squares - 2 * common * sums->seen_num + common * common * sums->seen_den, 0);
+  return results;
+}
+
 void
 ant_repeat_train_sums (const AntRepeatTrain *train, const AntTrainTrial *trial, AntTrainSums *sums)
 {
-  double side_num[2] = { 0 }, side_den[2] = { 0 }, largest = -HUGE_VAL, largest_den = 0;
+  Sums running = { .largest = -HUGE_VAL };
   long first, end;
-  *sums = (AntTrainSums){ 0 };
   ant_repeat_train_range (train, trial, &first, &end);
   for (long j = first; j < end; j++)
     {
       AntTrainEvent event = ant_repeat_train_event (train, trial, j);
-      sums->num += event.num;
-      sums->den += event.den;
-      side_num[j & 1] += event.num;
-      side_den[j & 1] += event.den;
-      sums->n_events += event.den >= 0.5 * event.full;
-      if (event.num > largest)
-        {
-          largest = event.num;
-          largest_den = event.den;
-        }
+      add_event (&running, &event);
     }
-  if (!(sums->den > 0))
-    return;
-  sums->snr = snr_of (train, sums->num, sums->den);
-  sums->depth = sums->num / effective (train, sums->den);
-  sums->without_largest = snr_of (train, sums->num - largest, sums->den - largest_den);
-  if (side_den[0] > 0 && side_den[1] > 0)
-    sums->odd_even = fabs (side_num[0] / side_den[0] - side_num[1] / side_den[1]) / sqrt (1 / side_den[0] + 1 / side_den[1]);
-  double common = sums->num / sums->den;
-  for (long j = first; j < end; j++)
-    {
-      AntTrainEvent event = ant_repeat_train_event (train, trial, j);
-      if (event.den >= 0.5 * event.full)
-        sums->chi2 += (event.num / event.den - common) * (event.num / event.den - common) * event.den;
-    }
+  *sums = results_of (train, &running);
+}
+
+void
+ant_repeat_train_add_up (const AntRepeatTrain *train, size_t n, const AntTrainEvent *event, AntTrainSums *sums)
+{
+  Sums running = { .largest = -HUGE_VAL };
+  for (size_t i = 0; i < n; i++)
+    add_event (&running, &event[i]);
+  *sums = results_of (train, &running);
 }
 
 /* A point of the climb: the event nearest to the record's middle keeps its number, so that period and epoch are independent. */

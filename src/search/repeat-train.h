@@ -41,6 +41,8 @@ typedef struct
 /* SNR alone; 0 with fewer than least_events events half observed. */
 double ant_repeat_train_snr (const AntRepeatTrain *train, const AntTrainTrial *trial, size_t least_events);
 void ant_repeat_train_sums (const AntRepeatTrain *train, const AntTrainTrial *trial, AntTrainSums *sums);
+/* The same of events that are given, with energies better than the table's. */
+void ant_repeat_train_add_up (const AntRepeatTrain *train, size_t n, const AntTrainEvent *event, AntTrainSums *sums);
 /* One event by its number; den 0 if nothing of it is observed. */
 AntTrainEvent ant_repeat_train_event (const AntRepeatTrain *train, const AntTrainTrial *trial, long number);
 /* Numbers of the events that touch the record: first <= j < end. */

@@ -67,6 +67,14 @@ ant_fold_chunk_end (size_t n, double from)
   return rows <= FEW_ROWS && rows > 1 ? (double) n / (double) (rows - 1) : from * (1 + CHUNK);
 }
 
+/* floor (), without a call where the processor has no instruction for it. */
+static inline double
+whole_part (double x)
+{
+  double whole = (double) (ptrdiff_t) x;
+  return whole > x ? whole - 1 : whole;
+}
+
 static size_t
 least (size_t one, size_t other)
 {
@@ -162,12 +170,12 @@ place_window (const Walk *walk, Level *level, size_t k, double low, double high)
   level->round[k] = walk->whole && first_row * (high - low) > 0.5 * low;
   if (level->round[k])
     {
-      level->base[k] = (ptrdiff_t) floor (first_row * level->period) - (ptrdiff_t) level->slack;
+      level->base[k] = (ptrdiff_t) whole_part (first_row * level->period) - (ptrdiff_t) level->slack;
       return level->room;
     }
   double from = first_row * low + half * (low - level->period), to = first_row * high + half * (high - level->period);
-  level->base[k] = (ptrdiff_t) floor (from) + (ptrdiff_t) walk->phase - (ptrdiff_t) level->slack;
-  size_t length = (size_t) (to - floor (from)) + walk->tile + reach + 2 * level->slack + 2;
+  level->base[k] = (ptrdiff_t) whole_part (from) + (ptrdiff_t) walk->phase - (ptrdiff_t) level->slack;
+  size_t length = (size_t) (to - whole_part (from)) + walk->tile + reach + 2 * level->slack + 2;
   return least (length, level->room);
 }
 
@@ -175,12 +183,12 @@ place_window (const Walk *walk, Level *level, size_t k, double low, double high)
 static inline size_t
 index_in (const Level *level, size_t k, double want)
 {
-  double index = floor (want + 0.5) - (double) level->base[k];
+  double index = whole_part (want + 0.5) - (double) level->base[k];
   if (level->round[k])
     {
-      double turns = floor (index / level->period);
-      index -= floor (turns * level->period + 0.5);
-      index = index < 0 ? index + floor (level->period) : index;
+      double turns = whole_part (index / level->period);
+      index -= whole_part (turns * level->period + 0.5);
+      index = index < 0 ? index + whole_part (level->period) : index;
     }
   return k * level->room + (size_t) index;
 }
@@ -191,7 +199,7 @@ source (const Walk *walk, size_t l, size_t k, double want, const float **a, cons
 {
   if (l == 0)
     {
-      ptrdiff_t place = (ptrdiff_t) floor (want + 0.5);
+      ptrdiff_t place = (ptrdiff_t) whole_part (want + 0.5);
       if (place >= (ptrdiff_t) walk->arrays->n)
         return 0;
       *a = walk->arrays->a + place;

@@ -10,7 +10,7 @@
 
 #define ANT_REPEAT_TREES 64     /* most durations with a tree of their own */
 #define ANT_REPEAT_PEAKS 400    /* most peaks of one sign that are climbed from */
-#define ANT_WITHOUT_LARGEST 5.0 /* least SNR without the largest event */
+#define ANT_REPEAT_FINALISTS 12 /* most peaks that are measured with exact energies */
 
 /* Dips (0) or brightenings (1). */
 typedef struct
@@ -35,7 +35,7 @@ typedef struct
 
 typedef struct
 {
-  int side, passes;
+  int side;
   AntRepeatCell cell;
   AntTrainTrial trial;
   AntTrainSums sums;
@@ -46,7 +46,8 @@ typedef struct
   AntTrainTrial trial;
   AntTrainSums sums;
   long first, end;        /* numbers of its events */
-  AntShapeFit *fit;       /* [end - first] depth, sigma, coverage of each */
+  AntTrainEvent *event;   /* [end - first] with exact energies */
+  AntShapeFit *fit;       /* [end - first] depth, sigma, coverage of each; fitted noise */
 } AntRepeatFinalist;
 
 struct _AntRepeats
@@ -70,8 +71,8 @@ struct _AntRepeats
   size_t n_done, n_first; /* slices of the first round: done, all */
   size_t n_peaks;
   AntRepeatPeak *peak;
-  int has_finalist;
-  AntRepeatFinalist finalist; /* what this round has found */
+  size_t n_finalists;
+  AntRepeatFinalist finalist[ANT_REPEAT_FINALISTS]; /* the best peaks of this round, by SNR */
   int active, dips_out;   /* whether this round runs; known dips are gaps by now */
   int now;                /* the side that this round looks at: the last one is for brightenings */
   size_t round;
@@ -91,10 +92,10 @@ void ant_repeats_forget (AntRepeats *repeats);
 /* repeat-pick.c: from bins to peaks, refined, to what stands. */
 AntStatus ant_repeats_pick_peaks (AntRepeats *repeats);
 AntStatus ant_repeats_climb (AntRepeats *repeats, size_t peak);
+/* repeat-finals.c: the best peaks under the exact noise, and the one that stands. */
 AntStatus ant_repeats_choose (AntRepeats *repeats);
 AntStatus ant_repeats_measure (AntRepeats *repeats, size_t chunk);
 AntStatus ant_repeats_settle (AntRepeats *repeats);
-/* Whether a train's events agree with each other and do not rest on one of them. */
-int ant_repeats_consistent (const AntTrainSums *sums);
+void ant_repeats_forget_finalists (AntRepeats *repeats);
 /* repeat-report.c: a finalist as a repeat, with errors, events and aliases. */
 AntStatus ant_repeats_report (const AntRepeats *repeats, const AntRepeatFinalist *finalist, AntRepeat *repeat);

@@ -119,7 +119,7 @@ stage_count (void *work, size_t stage)
   if (!repeats->active)
     return 0;
   size_t chunks = repeats->options.white ? 0 : repeats->n_chunks;
-  size_t count[N_KINDS] = { chunks, repeats->n_slices, repeats->n_peaks, repeats->has_finalist ? chunks : 0 };
+  size_t count[N_KINDS] = { chunks, repeats->n_slices, repeats->n_peaks, repeats->n_finalists ? chunks : 0 };
   return count[stage % N_KINDS];
 }
 

@@ -88,7 +88,7 @@ void ant_repeats_limits (const AntSeries *series, const AntRepeatOptions *option
 
 /* By SNR, strongest first. */
 size_t ant_repeats_list (const AntRepeats *repeats, const AntRepeat **repeat);
-/* Best SNR of every bin of ln P in the first round; power 0: below 4 or not reached. */
+/* Best SNR of every bin of ln P in the first round; power 0: below 4 and 0.6 of the threshold, or not reached. */
 const AntRepeatBins *ant_repeats_spectrum (const AntRepeats *repeats);
 AntRepeatGrid ant_repeats_grid (const AntRepeats *repeats);
 double ant_repeats_threshold (const AntRepeats *repeats);

@@ -1,27 +1,33 @@
-/* bench-repeats.c - what the search for repeats costs on one thread: white noise, by the tree and projected for a plain fold
- * of the same boxes; fitted noise, by the shared fold and projected for a tree for each duration. Prints CPU seconds.
+/* bench-repeats.c - what the search for repeats costs, dips alone and until peaks are refined: in white noise beside plain folds
+ * of the same boxes and periods, under fitted noise beside a tree for each duration, both projected; one thread and more.
  *
- * usage: bench-repeats [DAYS [LONGEST_PERIOD_D]]    (60 s cadence; 730 d, 365 d) */
+ * usage: bench-repeats [DAYS [LONGEST_PERIOD_D [THREADS]]]    (60 s cadence; 730 d, 365 d, 1; THREADS 2 and more: walls too) */
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
+#include <sys/resource.h>
 #include <time.h>
 #include "core/random.h"
 #include "core/simd.h"
 #include "core/units.h"
+#include "jobs/pool.h"
 #include "models.h"
-#include "search/repeat-box.h"
-#include "search/repeat-shared.h"
+#include "search/repeat-work.h"
 
 #define RATIO 1.35
-#define MOST_TREES 64
+
+static double
+seconds (clockid_t clock)
+{
+  struct timespec t;
+  clock_gettime (clock, &t);
+  return (double) t.tv_sec + 1e-9 * (double) t.tv_nsec;
+}
 
 static double
 cpu_s (void)
 {
-  struct timespec t;
-  clock_gettime (CLOCK_THREAD_CPUTIME_ID, &t);
-  return (double) t.tv_sec + 1e-9 * (double) t.tv_nsec;
+  return seconds (CLOCK_THREAD_CPUTIME_ID);
 }
 
 /* One trial period folded row by row; returns something of the sums, so that they are made. */
@@ -61,138 +67,183 @@ plain_cost (const AntRepeatBoxes *boxes, double from_d, double to_d)
   return sum;
 }
 
-/* Search with trees; plain: add up what plain folds would cost; only every `sparse`-th chunk, projected. */
-static double
-trees (const AntRepeatGrid *grid, const AntRepeatBoxes *boxes, double d, int sparse, AntRepeatBins *bins, double *plain)
+/* Range of periods of one of the durations RATIO apart. */
+static void
+periods_of (const AntRepeatGrid *grid, double d, double *from_d, double *to_d)
 {
-  double from_d, to_d, unused, half = sqrt (RATIO), cost = 0;
-  ant_repeat_grid_periods (grid, d / half, &from_d, &unused);
-  ant_repeat_grid_periods (grid, d * half, &unused, &to_d);
-  from_d = fmax (from_d, 3 * d);
-  int k = 0;
-  for (double at = from_d; at < to_d; k++)
+  double unused, half = sqrt (RATIO);
+  ant_repeat_grid_periods (grid, d / half, from_d, &unused);
+  ant_repeat_grid_periods (grid, d * half, &unused, to_d);
+  *from_d = fmax (*from_d, 3 * d);
+}
+
+/* Plain folds of the boxes that the white search has folded, projected from every fifth chunk of periods. */
+static double
+plain_folds (const AntRepeats *repeats)
+{
+  const AntRepeatSide *side = &repeats->side[0];
+  double sum = 0;
+  for (size_t k = 0; k < side->n_trees; k++)
     {
-      double end = fmin (ant_repeat_boxes_chunk_end (boxes, at), to_d), t0 = cpu_s ();
-      if (k % sparse == 0)
+      double from_d, to_d;
+      periods_of (&repeats->options.grid, side->tree[k].duration_d, &from_d, &to_d);
+      int chunk = 0;
+      for (double at = from_d; at < to_d; chunk++)
         {
-          AntRepeatBins part;
-          ant_repeat_bins_part (&part, bins, at, end);
-          ant_repeat_boxes_search (boxes, at, end, 3, NULL, &part);
-          ant_repeat_bins_merge (bins, &part);
-          ant_repeat_bins_clear (&part);
-          cost += sparse * (cpu_s () - t0);
+          double end = fmin (ant_repeat_boxes_chunk_end (&side->tree[k], at), to_d);
+          sum += chunk % 5 ? 0 : 5 * plain_cost (&side->tree[k], at, end);
+          at = end;
         }
-      if (plain && k % 5 == 0)
-        *plain += 5 * plain_cost (boxes, at, end);
-      at = end;
     }
-  return cost;
+  return sum;
+}
+
+/* Trees for durations half an hour apart, projected from one in twelve and every fortieth chunk of periods. */
+static double
+duration_trees (const AntRepeats *repeats)
+{
+  const AntRepeatSide *side = &repeats->side[0];
+  const AntRepeatGrid *grid = &repeats->options.grid;
+  double longest_d = ant_repeat_grid_longest (grid), sum = 0;
+  for (double d = 1 / ANT_HOURS_PER_DAY; d < longest_d; d += 6 / ANT_HOURS_PER_DAY)
+    {
+      AntRepeatBoxes boxes;
+      double from_d, to_d;
+      periods_of (grid, d, &from_d, &to_d);
+      if (ant_repeat_boxes_init_edges (&boxes, &side->edges, &repeats->pairs, repeats->series.step_d, d, 10 / ANT_MINUTES_PER_DAY,
+                                       grid->period_max_d))
+        exit (1);
+      int chunk = 0;
+      for (double at = from_d; at < to_d; chunk++)
+        {
+          double end = fmin (ant_repeat_boxes_chunk_end (&boxes, at), to_d), t0 = cpu_s ();
+          if (chunk % 40 == 0)
+            {
+              AntRepeatBins part;
+              ant_repeat_bins_part (&part, &side->bins, at, end);
+              ant_repeat_boxes_search (&boxes, at, end, 3, NULL, &part);
+              ant_repeat_bins_clear (&part);
+              sum += 12 * 40 * (cpu_s () - t0);
+            }
+          at = end;
+        }
+      ant_repeat_boxes_clear (&boxes);
+    }
+  return sum;
+}
+
+static AntRepeats *
+begin (const AntSeries *series, double longest_d, int white, size_t n_chunks, const AntChunk *chunk)
+{
+  AntRepeatOptions options = { .grid = { .period_min_d = 0.5, .period_max_d = longest_d, .shortest_factor = 0.2, .longest_factor = 2,
+                                         .shortest_d = white ? 2 * series->step_d : 0.5 / ANT_HOURS_PER_DAY },
+                               .least_events = 3, .false_alarms = 0.01, .white = white, .edge_d = 20 / ANT_MINUTES_PER_DAY,
+                               .exposure_d = series->step_d, .limb_darkening = ANT_LIMB_DARKENING_SUN };
+  AntStatus status;
+  AntRepeats *repeats = ant_repeats_new (series, &options, n_chunks, chunk, &status);
+  if (!repeats)
+    exit (1);
+  return repeats;
+}
+
+/* The first three stages: prepare, fold, refine; seconds of each. */
+static void
+search (AntRepeats *repeats, double cost_s[3])
+{
+  const AntStages *stages = ant_repeats_stages ();
+  for (size_t stage = 0; stage < 3; stage++)
+    {
+      double t0 = cpu_s ();
+      for (size_t i = 0, count = stages->count (repeats, stage); i < count; i++)
+        if (stages->run_slice (repeats, stage, i))
+          exit (1);
+      if (stage < 2 && stages->finish (repeats, stage))
+        exit (1);
+      cost_s[stage] = cpu_s () - t0;
+    }
+}
+
+/* Walls of the same on one thread and on several. */
+static void
+tell_threads (const AntSeries *series, double longest_d, int white, size_t n_chunks, const AntChunk *chunk, guint threads)
+{
+  double wall_s[2];
+  for (int k = 0; k < 2; k++)
+    {
+      AntStages stages = *ant_repeats_stages ();
+      AntRepeats *repeats = begin (series, longest_d, white, n_chunks, chunk);
+      stages.n_stages = 3;
+      wall_s[k] = -seconds (CLOCK_MONOTONIC);
+      if (ant_pool_run (&stages, repeats, k ? threads : 1, NULL, NULL, NULL))
+        exit (1);
+      wall_s[k] += seconds (CLOCK_MONOTONIC);
+      ant_repeats_free (repeats);
+    }
+  printf ("  wall on one thread %.2f s, on %u %.2f s: %.2f times as fast\n", wall_s[0], threads, wall_s[1], wall_s[0] / wall_s[1]);
 }
 
 static double
-bench_white (const AntRepeatGrid *grid, const AntSeries *series)
+bench_white (const AntSeries *series, double longest_d, guint threads)
 {
-  double *weight = malloc (series->n * sizeof *weight), plain = 0, shortest_d, longest_d = ant_repeat_grid_longest (grid), unused;
-  AntRepeatBins bins;
-  AntRepeatBox box;
-  double cost = -cpu_s ();
-  ant_repeat_bins_init (&bins, grid);
-  ant_repeat_white_weights (series, weight);
-  ant_repeat_box_init (&box, series, weight);
-  cost += cpu_s ();
-  ant_repeat_grid_durations (grid, grid->period_min_d, &shortest_d, &unused);
-  size_t n = 0;
-  for (double d = shortest_d * sqrt (RATIO); d < longest_d * sqrt (RATIO); d *= RATIO, n++)
-    {
-      AntRepeatBoxes boxes;
-      cost -= cpu_s ();
-      ant_repeat_boxes_init (&boxes, &box, d, 6, grid->period_max_d);
-      cost += cpu_s ();
-      cost += trees (grid, &boxes, d, 1, &bins, &plain);
-      ant_repeat_boxes_clear (&boxes);
-    }
-  printf ("white noise, trees of %zu durations: %.2f s; plain folds of the same boxes and periods: %.1f s, %.1f times as much\n", n, cost,
-          plain, plain / cost);
-  ant_repeat_box_clear (&box);
-  ant_repeat_bins_clear (&bins);
-  free (weight);
-  return cost;
+  double cost_s[3];
+  AntRepeats *repeats = begin (series, longest_d, 1, 0, NULL);
+  search (repeats, cost_s);
+  struct rusage usage;
+  getrusage (RUSAGE_SELF, &usage);
+  double sum_s = cost_s[0] + cost_s[1] + cost_s[2];
+  printf ("white noise, trees of %zu durations: %.2f s (prepare %.2f, fold %.2f, refine %zu peaks %.2f); %.1f bytes a sample at most\n",
+          repeats->side[0].n_trees, sum_s, cost_s[0], cost_s[1], repeats->n_peaks, cost_s[2],
+          (double) usage.ru_maxrss * 1024 / (double) series->n);
+  fflush (stdout);
+  double plain_s = plain_folds (repeats);
+  printf ("  plain folds of the same boxes and periods, projected: %.1f s, %.1f times as much\n", plain_s, plain_s / sum_s);
+  ant_repeats_free (repeats);
+  if (threads > 1)
+    tell_threads (series, longest_d, 1, 0, NULL, threads);
+  fflush (stdout);
+  return sum_s;
 }
 
 static void
-bench_fitted (const AntRepeatGrid *grid, const AntSeries *series, char name, double white_s)
+bench_fitted (const AntSeries *series, char name, double longest_d, guint threads, double white_s)
 {
-  AntNoiseModel model;
-  AntStatus status;
-  AntRepeatEdges edges;
-  AntRepeatPairs pairs;
-  AntRepeatBins bins;
-  double step_d = series->step_d, longest_d = ant_repeat_grid_longest (grid), *z = malloc (series->n * sizeof *z), t0 = cpu_s ();
-  ant_study_model (name, &model);
-  AntWhitener *whitener = ant_whitener_new_free_level (&model, series, &status);
-  ant_whitener_solve (whitener, series->value_ppm, z);
-  ant_repeat_edges_init (&edges, series->n, z, 20);
-  ant_repeat_pairs_init (&pairs, series->n, 20, longest_d / step_d);
-  ant_repeat_pairs_tabulate (&pairs, whitener, 0, -HUGE_VAL, HUGE_VAL, NULL);
-  ant_repeat_pairs_fit (&pairs);
-  double t1 = cpu_s ();
-  ant_repeat_bins_init (&bins, grid);
-  double limit[3] = { grid->period_min_d, 6, grid->period_max_d }, fold_s = 0, drift = series->n > 2700000 ? 4 : 2;
-  for (int i = 0; i < 2; i++)
-    {
-      AntRepeatShared shared;
-      double t2 = cpu_s ();
-      ant_repeat_shared_init (&shared, &edges, &pairs, step_d, i ? 2 : 4, i ? drift : 4, longest_d, limit[i + 1]);
-      for (double at = limit[i]; at < limit[i + 1];)
-        {
-          double end = fmin (ant_repeat_shared_chunk_end (&shared, at), limit[i + 1]);
-          ant_repeat_shared_search (&shared, grid, at, end, 3, 0, NULL, &bins);
-          at = end;
-        }
-      fold_s += cpu_s () - t2;
-      ant_repeat_shared_clear (&shared);
-    }
-  printf ("model %c, shared fold: %.2f s (%.1f times the white search), before it whitening and energies: %.2f s, misfit %.1f %%\n", name,
-          fold_s, fold_s / white_s, t1 - t0, 100 * pairs.misfit);
-  double trees_s = 0;
-  for (double d = 1.0 / 24; d < longest_d; d += 6.0 / 24) /* half-hour spacing needs twelve times as many */
-    {
-      AntRepeatBoxes boxes;
-      ant_repeat_boxes_init_edges (&boxes, &edges, &pairs, step_d, d, 10 / ANT_MINUTES_PER_DAY, grid->period_max_d);
-      trees_s += 12 * trees (grid, &boxes, d, 40, &bins, NULL);
-      ant_repeat_boxes_clear (&boxes);
-    }
-  printf ("model %c, a tree for each duration (30 min apart, steps of 10 min), projected: %.0f s, %.1f times as much\n", name, trees_s,
-          trees_s / fold_s);
-  ant_repeat_bins_clear (&bins);
-  ant_repeat_pairs_clear (&pairs);
-  ant_repeat_edges_clear (&edges);
-  ant_whitener_free (whitener);
-  free (z);
+  AntChunkOptions chunks = { .overlap_d = 20 };
+  size_t room = ant_chunks_room (series, &chunks);
+  AntChunk *chunk = calloc (room, sizeof *chunk);
+  size_t n_chunks = ant_chunks_plan (series, &chunks, room, chunk);
+  for (size_t i = 0; i < n_chunks; i++)
+    ant_study_model (name, &chunk[i].model);
+  double cost_s[3];
+  AntRepeats *repeats = begin (series, longest_d, 0, n_chunks, chunk);
+  search (repeats, cost_s);
+  printf ("model %c, shared fold and %zu peaks refined: %.2f s, %.1f times the white search; before it whitening and energies: %.2f s, "
+          "misfit %.1f %%\n", name, repeats->n_peaks, cost_s[1] + cost_s[2], (cost_s[1] + cost_s[2]) / white_s, cost_s[0],
+          100 * repeats->pairs.misfit);
+  fflush (stdout);
+  double trees_s = duration_trees (repeats);
+  printf ("  a tree for each duration (30 min apart, steps of 10 min), projected: %.0f s, %.1f times as much\n", trees_s, trees_s / cost_s[1]);
+  ant_repeats_free (repeats);
+  if (threads > 1)
+    tell_threads (series, longest_d, 0, n_chunks, chunk, threads);
+  free (chunk);
 }
 
 int
 main (int argc, char **argv)
 {
-  double days = argc > 1 ? atof (argv[1]) : 730, longest = argc > 2 ? atof (argv[2]) : 365, step_d = 1 / ANT_MINUTES_PER_DAY;
+  double days = argc > 1 ? atof (argv[1]) : 730, longest_d = argc > 2 ? atof (argv[2]) : 365, step_d = 1 / ANT_MINUTES_PER_DAY;
+  guint threads = argc > 3 ? (guint) atoi (argv[3]) : 1;
   size_t n = (size_t) (days / step_d);
   float *value = malloc (n * sizeof *value);
-  AntRepeatGrid grid = { .period_min_d = 0.5, .period_max_d = longest, .shortest_factor = 0.2, .longest_factor = 2,
-                         .shortest_d = 2 * step_d };
-  AntSeries series = ant_study_record ('A', ANT_MASK_L1, n, step_d, 1, value);
   AntRandom random;
+  AntSeries series = { .n = n, .step_d = step_d, .value_ppm = value };
   ant_random_seed (&random, 1, 2);
-  float *white = malloc (n * sizeof *white);
   for (size_t i = 0; i < n; i++)
-    white[i] = isnan (value[i]) ? NAN : (float) (100 * ant_random_normal (&random));
-  printf ("%zu samples, periods 0.5 to %g d, durations 0.2 to 2 crossing times\n", n, longest);
-  AntSeries plain = series;
-  plain.value_ppm = white;
-  double white_s = bench_white (&grid, &plain);
-  fflush (stdout);
-  grid.shortest_d = 0.5 / 24;
-  bench_fitted (&grid, &series, 'A', white_s);
+    value[i] = i % 1000 < 20 ? NAN : (float) (100 * ant_random_normal (&random));
+  printf ("%zu samples, periods 0.5 to %g d, durations 0.2 to 2 crossing times\n", n, longest_d);
+  double white_s = bench_white (&series, longest_d, threads);
+  series = ant_study_record ('A', ANT_MASK_L1, n, step_d, 1, value);
+  bench_fitted (&series, 'A', longest_d, threads, white_s);
   free (value);
-  free (white);
   return 0;
 }

@@ -1,7 +1,8 @@
 /* study-repeats.c - records of noise, with or without a planted repeat, through the search for repeats under the true noise
- * model: what noise alone lists at a stated rate, and what of a planted repeat is found.
+ * model: what noise alone lists at a stated rate, what of a planted repeat is found, and what one strong dip raises.
  *
- * usage: study-repeats MODEL MASK DAYS CADENCE_S RECORDS SEED RATE [IDEAL_SNR]    (MODEL A, B, C, or W: white, 100 ppm) */
+ * usage: study-repeats MODEL MASK DAYS CADENCE_S RECORDS SEED RATE [IDEAL_SNR [glitch]]
+ * MODEL A, B, C, or W: white, 100 ppm; glitch: a single dip of that SNR in place of the repeat. */
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -19,6 +20,7 @@ typedef struct
   AntMask mask;
   size_t n;
   double step_d, rate, ideal_snr;
+  int glitch;
 } Study;
 
 typedef struct
@@ -70,37 +72,51 @@ subtract (const Study *study, const AntSeries *series, const Planted *planted, d
     }
 }
 
+/* SNR of a train of unit depth under the true noise, the level fitted with it. */
+static double
+unit_snr (const Study *study, const AntSeries *series, const AntNoiseModel *model, const Planted *planted)
+{
+  float *shape = malloc (series->n * sizeof *shape);
+  double *z = malloc (series->n * sizeof *z), energy = 0, sum = 0, count = 0;
+  AntStatus status;
+  for (size_t i = 0; i < series->n; i++)
+    shape[i] = isnan (series->value_ppm[i]) ? NAN : 0;
+  subtract (study, series, planted, 1, shape);
+  if (study->model != 'W')
+    {
+      AntWhitener *whitener = ant_whitener_new_free_level (model, series, &status);
+      ant_whitener_solve (whitener, shape, z);
+      ant_whitener_free (whitener);
+    }
+  for (size_t i = 0; i < series->n; i++)
+    if (!isnan (shape[i]))
+      {
+        double here = (double) shape[i];
+        energy += study->model == 'W' ? here * here : here * z[i];
+        sum += here;
+        count++;
+      }
+  if (study->model == 'W')
+    energy = (energy - sum * sum / count) / (model->white_ppm * model->white_ppm);
+  free (shape);
+  free (z);
+  return sqrt (energy);
+}
+
 /* Plant a repeat whose ideal SNR under the true noise is that of the study. Period and duration are log-uniform. */
 static Planted
 plant (const Study *study, const AntSeries *series, const AntNoiseModel *model, AntRandom *random, float *value)
 {
   double span_d = (double) series->n * series->step_d;
-  Planted planted = { .period_d = exp (log (0.5) + ant_random_uniform (random) * log (span_d / 3 / 0.5)) };
+  Planted planted = { .period_d = exp (log (0.5) + ant_random_uniform (random) * log (span_d / 3 / 0.5)), .snr = study->ideal_snr };
   planted.duration_d = 13.0 / 24 * cbrt (planted.period_d / 365.25) * exp (log (0.5) + ant_random_uniform (random) * log (3.0));
   planted.duration_d = fmax (planted.duration_d, 0.75 / 24);
-  planted.mid_d = ant_random_uniform (random) * planted.period_d;
-  float *shape = calloc (series->n, sizeof *shape);
-  double *z = malloc (series->n * sizeof *z), energy = 0;
-  for (size_t i = 0; i < series->n; i++)
-    shape[i] = isnan (value[i]) ? NAN : 0;
-  subtract (study, series, &planted, 1, shape);
-  if (study->model == 'W')
-    for (size_t i = 0; i < series->n; i++)
-      energy += isnan (shape[i]) ? 0 : (double) (shape[i] * shape[i]) / 1e4;
-  else
-    {
-      AntStatus status;
-      AntWhitener *whitener = ant_whitener_new_free_level (model, series, &status);
-      ant_whitener_solve (whitener, shape, z);
-      for (size_t i = 0; i < series->n; i++)
-        energy += isnan (shape[i]) ? 0 : (double) shape[i] * z[i];
-      ant_whitener_free (whitener);
-    }
-  planted.depth_ppm = study->ideal_snr / sqrt (energy);
-  planted.snr = study->ideal_snr;
+  planted.mid_d = ant_random_uniform (random) * (study->glitch ? span_d : planted.period_d);
+  planted.period_d = study->glitch ? 10 * span_d : planted.period_d;
+  planted.depth_ppm = study->ideal_snr / unit_snr (study, series, model, &planted);
+  if (!isfinite (planted.depth_ppm)) /* a glitch in a gap */
+    return plant (study, series, model, random, value);
   subtract (study, series, &planted, planted.depth_ppm, value);
-  free (shape);
-  free (z);
   return planted;
 }
 
@@ -145,8 +161,57 @@ tell (unsigned long seed, const AntRepeats *repeats, const Planted *planted, dou
     printf ("; P %.6f +- %.6f D %.2f h depth %.2f +- %.2f snr %.3f (without largest %.2f) events %zu of %zu chi2 %.1f false %.3g",
             repeat[i].period_d, repeat[i].period_sigma_d, repeat[i].duration_d * 24, repeat[i].depth_ppm, repeat[i].depth_sigma_ppm,
             repeat[i].snr, repeat[i].snr_without_largest, repeat[i].n_observed, repeat[i].n_events, repeat[i].chi2, repeat[i].expected_false);
-  printf ("\n");
+  printf ("; expected above the best: dips %.4f, brightenings %.4f\n",
+          n ? ant_repeats_expected_false (repeats, repeat->snr) : HUGE_VAL,
+          n_mirrored ? ant_repeats_expected_false (repeats, mirrored) : HUGE_VAL);
   fflush (stdout);
+}
+
+/* What the records have given. */
+typedef struct
+{
+  size_t records, listed, mirrored, right;
+  double snr, depth, depth2; /* sums of ratios to the planted ones, where the period is right */
+} Totals;
+
+static void
+count_record (const Study *study, const AntRepeats *repeats, const Planted *planted, Totals *totals)
+{
+  const AntRepeat *repeat;
+  double best, events = (double) study->n * study->step_d / planted->period_d;
+  size_t n = ant_repeats_list (repeats, &repeat);
+  totals->records++;
+  totals->listed += n > 0;
+  totals->mirrored += ant_repeats_mirrored (repeats, &best);
+  if (!(planted->snr > 0) || !n || fabs (repeat->period_d - planted->period_d) * events >= 0.5 * planted->duration_d)
+    return;
+  double depth = repeat->depth_ppm / planted->depth_ppm;
+  totals->right++;
+  totals->snr += repeat->snr / planted->snr;
+  totals->depth += depth;
+  totals->depth2 += depth * depth;
+}
+
+static void
+tell_totals (const Study *study, const Totals *totals)
+{
+  double records = (double) totals->records, right = (double) totals->right, share = (double) (totals->listed + totals->mirrored) / 2 / records;
+  printf ("records %zu, with a repeat listed %zu, with a brightening %zu: %.3f +- %.3f of one sign", totals->records, totals->listed,
+          totals->mirrored, -log (1 - share), sqrt (share / (1 - share) / 2 / records));
+  if (study->ideal_snr > 0 && !study->glitch)
+    printf (", period right %zu, mean SNR ratio %.4f, mean depth ratio %.4f +- %.4f", totals->right, totals->snr / right, totals->depth / right,
+            sqrt (fmax (totals->depth2 / right - pow (totals->depth / right, 2), 0) / right));
+  printf ("\n");
+}
+
+static Study
+asked (char **argv, int argc)
+{
+  Study study = { .model = argv[1][0], .mask = strcmp (argv[2], "l1") ? ANT_MASK_LOW_ORBIT : ANT_MASK_L1,
+                  .step_d = atof (argv[4]) / ANT_SECONDS_PER_DAY, .rate = atof (argv[7]), .ideal_snr = argc > 8 ? atof (argv[8]) : 0,
+                  .glitch = argc > 9 };
+  study.n = (size_t) (atof (argv[3]) / study.step_d);
+  return study;
 }
 
 int
@@ -154,46 +219,30 @@ main (int argc, char **argv)
 {
   if (argc < 8)
     return 2;
-  Study study = { .model = argv[1][0], .mask = strcmp (argv[2], "l1") ? ANT_MASK_LOW_ORBIT : ANT_MASK_L1,
-                  .step_d = atof (argv[4]) / ANT_SECONDS_PER_DAY, .rate = atof (argv[7]), .ideal_snr = argc > 8 ? atof (argv[8]) : 0 };
-  study.n = (size_t) (atof (argv[3]) / study.step_d);
+  Study study = asked (argv, argc);
+  Totals totals = { 0 };
   float *value = malloc (study.n * sizeof *value);
-  size_t records = (size_t) atoi (argv[5]), listed = 0, mirrored = 0, right = 0;
-  double ratio_sum = 0, depth_sum = 0;
-  for (size_t r = 0; r < records; r++)
+  for (unsigned long r = 0; r < strtoul (argv[5], NULL, 10); r++)
     {
       unsigned long seed = strtoul (argv[6], NULL, 10) + r;
       AntChunk *chunk = calloc (1, sizeof *chunk);
       AntRandom random;
       ant_random_seed (&random, seed, 79);
       AntSeries series = draw (&study, seed, value, &chunk->model);
-      Planted planted = { 0 };
+      Planted planted = { .period_d = 1 };
       if (study.ideal_snr > 0)
         planted = plant (&study, &series, &chunk->model, &random, value);
       chunk->n = series.n;
       chunk->own_from = -HUGE_VAL;
       chunk->own_to = HUGE_VAL;
-      double t0 = cpu_s (), best;
+      double t0 = cpu_s ();
       AntRepeats *repeats = search (&study, &series, chunk);
-      const AntRepeat *repeat;
-      size_t n = ant_repeats_list (repeats, &repeat);
       tell (seed, repeats, study.ideal_snr > 0 ? &planted : NULL, cpu_s () - t0);
-      listed += n > 0;
-      mirrored += ant_repeats_mirrored (repeats, &best);
-      double events = (double) study.n * study.step_d / planted.period_d;
-      if (study.ideal_snr > 0 && n && fabs (repeat->period_d - planted.period_d) * events < 0.5 * planted.duration_d)
-        {
-          right++;
-          ratio_sum += repeat->snr / planted.snr;
-          depth_sum += repeat->depth_ppm / planted.depth_ppm;
-        }
+      count_record (&study, repeats, &planted, &totals);
       ant_repeats_free (repeats);
       free (chunk);
     }
-  printf ("records %zu, with a repeat listed %zu, with a brightening %zu", records, listed, mirrored);
-  if (study.ideal_snr > 0)
-    printf (", period right %zu, mean SNR ratio %.4f, mean depth ratio %.4f", right, ratio_sum / (double) right, depth_sum / (double) right);
-  printf ("\n");
+  tell_totals (&study, &totals);
   free (value);
   return 0;
 }
