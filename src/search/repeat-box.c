@@ -268,7 +268,7 @@ ant_repeat_boxes_search (const AntRepeatBoxes *boxes, double from_d, double to_d
 {
   AntFoldRange range = { .from = from_d / boxes->step_d, .to = to_d / boxes->step_d, .drift_top = DRIFT_TOP,
                          .drift_inner = DRIFT_INNER, .tile = TILE, .stop = stop };
-  Visit v = { .boxes = boxes, .least = (float) (0.7 * least_events), .bins = bins };
+  Visit v = { .boxes = boxes, .least = (float) (0.5 * least_events), .bins = bins };
   return ant_fold_tree_run (&boxes->arrays, &range, visit, &v);
 }
 

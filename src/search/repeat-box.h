@@ -53,7 +53,7 @@ AntStatus ant_repeat_boxes_init (AntRepeatBoxes *boxes, const AntRepeatBox *box,
 AntStatus ant_repeat_boxes_init_edges (AntRepeatBoxes *boxes, const AntRepeatEdges *edges, const AntRepeatPairs *pairs,
                                        double cadence_d, double duration_d, double step_d, double longest_d);
 void ant_repeat_boxes_clear (AntRepeatBoxes *boxes);
-/* Fold at periods from..to and keep the best in bins (which must hold them). least_events: rows that must be full, about. */
+/* Fold at periods from..to and keep the best in bins (which must hold them). least_events: rows that must be half full, about. */
 AntStatus ant_repeat_boxes_search (const AntRepeatBoxes *boxes, double from_d, double to_d, double least_events,
                                    const AntStop *stop, AntRepeatBins *bins);
 /* Where a range of periods that begins at from_d should end. */

@@ -3,6 +3,9 @@
 #include <stdlib.h>
 #include "search/repeat-work.h"
 
+/* Of SNR^2, that noise adds on the mean to a train whose period, epoch and duration are those of the greatest SNR. */
+#define CHOSEN 3.0
+
 static const int alias_ratio[ANT_REPEAT_ALIASES][2] = { { 1, 2 }, { 2, 1 }, { 1, 3 }, { 3, 1 }, { 3, 2 } };
 
 /* The step along period (slip of the record's ends) or epoch over which SNR^2/2 falls by a half on the mean of both sides. */
@@ -94,6 +97,8 @@ add_events (const AntRepeats *repeats, const AntRepeatFinalist *finalist, AntRep
     }
   double total = repeats->options.white ? repeats->side[0].box.total : HUGE_VAL, effective = all.den - all.den * all.den / total;
   repeat->depth_ppm = all.num / effective;
+  if (!repeats->options.white) /* a box stays what the textbook says */
+    repeat->depth_ppm *= fmax (1 - 0.5 * CHOSEN / (repeat->snr * repeat->snr), 0);
   repeat->depth_sigma_ppm = 1 / sqrt (effective);
   repeat->snr_unlisted = snr_of (repeats, unlisted);
 }

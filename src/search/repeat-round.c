@@ -7,7 +7,7 @@
 #define FINE_BELOW_D 6.0     /* shared fold: four phases to a ramp below this period, two above */
 #define LONG_RECORD_D 1830.0 /* beyond, coarser trial periods */
 #define WORST_MISFIT 0.08    /* of the pair fit; beyond, a tree for each duration */
-#define DURATION_RATIO 1.35  /* from one tree's duration to the next */
+#define DURATION_RATIO 1.5  /* from one tree's duration to the next */
 #define STARTS_TO_A_BOX 6.0
 #define BINS_FROM 0.6        /* of the threshold: less is left out of the bins */
 

@@ -59,7 +59,8 @@ typedef struct
   double epoch_d;            /* middle of the event nearest to the middle of the record */
   double epoch_sigma_d;
   double duration_d;         /* contact I to IV; of the box in white noise */
-  double depth_ppm, depth_sigma_ppm; /* greatest depth of the crossing; of the box in white noise */
+  double depth_ppm, depth_sigma_ppm; /* greatest depth of the crossing, less what the choice of the best
+                                        train adds; of the box in white noise, as it is */
   double snr;                /* train SNR */
   double snr_without_largest, snr_unlisted;
   double odd_even;           /* difference of odd and even events' depths, in sigma */

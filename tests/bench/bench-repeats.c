@@ -14,7 +14,7 @@
 #include "models.h"
 #include "search/repeat-work.h"
 
-#define RATIO 1.35
+#define RATIO 1.5
 
 static double
 seconds (clockid_t clock)

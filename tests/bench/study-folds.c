@@ -15,7 +15,7 @@
 
 #define SNR 7.0          /* small enough that no event of three is cut, large enough for the floor of the bins */
 #define RAMP_D (20 / ANT_MINUTES_PER_DAY)
-#define RATIO 1.35       /* of the durations of trees, as in the search */
+#define RATIO 1.5       /* of the durations of trees, as in the search */
 #define FINE_BELOW_D 6.0
 #define WORST_MISFIT 0.08
 
