@@ -40,17 +40,16 @@ time_left (double seconds)
 char *
 ant_progress_text (const AntProgress *progress)
 {
-  double share = progress->count ? (double) progress->done / (double) progress->count : 1;
+  double share = ant_progress_share (progress);
   GString *text = g_string_new (NULL);
   g_string_printf (text, _("stage %zu of %zu, %s: %.0f %%"), progress->stage + 1,
                    progress->n_stages, progress->title, 100 * share);
   if (progress->stage_s >= LEAST_FOR_RATE_S && progress->done > 0)
+    g_string_append_printf (text, ", %.3g/s", (double) progress->done / progress->stage_s);
+  if (progress->stage_s >= LEAST_FOR_RATE_S && share > 0 && share < 1)
     {
-      double per_s = (double) progress->done / progress->stage_s;
-      g_autofree char *left = time_left ((double) (progress->count - progress->done) / per_s);
-      g_string_append_printf (text, ", %.3g/s", per_s);
-      if (progress->done < progress->count)
-        g_string_append_printf (text, ", %s", left);
+      g_autofree char *left = time_left (progress->stage_s * (1 - share) / share);
+      g_string_append_printf (text, ", %s", left);
     }
   return g_string_free (text, FALSE);
 }

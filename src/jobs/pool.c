@@ -75,6 +75,13 @@ worker (gpointer data)
   return NULL;
 }
 
+double
+ant_progress_share (const AntProgress *progress)
+{
+  double share = progress->count > 0 ? (double) progress->done / (double) progress->count : 1;
+  return MAX (share, progress->part);
+}
+
 static void
 report (Run *run, gsize done)
 {
@@ -87,6 +94,7 @@ report (Run *run, gsize done)
     .n_stages = run->stages->n_stages,
     .done = done,
     .count = run->count,
+    .part = run->stages->part && run->count > 0 ? run->stages->part (run->work, run->stage) : 0,
     .elapsed_s = (double) (now_us - run->began_us) / G_USEC_PER_SEC,
     .stage_s = (double) (now_us - run->stage_began_us) / G_USEC_PER_SEC,
   };

@@ -11,9 +11,12 @@ typedef struct
   const char *title; /* of the stage */
   gsize stage, n_stages;
   gsize done, count; /* slices of this stage */
+  double part;       /* of this stage, 0..1, where its slices tell how far they are; else 0 */
   double elapsed_s;  /* since the run began */
   double stage_s;    /* since this stage began */
 } AntProgress;
+/* How much of the stage is done, 0..1. */
+double ant_progress_share (const AntProgress *progress);
 /* Called on the thread that called ant_pool_run, at most about ten times a second, and once per stage's end. */
 typedef void (*AntProgressFunc) (const AntProgress *progress, gpointer data);
 

@@ -69,7 +69,7 @@ void
 ant_progress_relay_note (const AntProgress *progress, gpointer data)
 {
   AntProgressRelay *relay = data;
-  double part = progress->count > 0 ? (double) progress->done / (double) progress->count : 0;
+  double part = progress->count > 0 ? ant_progress_share (progress) : 0;
   g_mutex_lock (&relay->lock);
   relay->now = (AntTaskProgress) {
     .title = progress->title,

@@ -93,6 +93,7 @@ ant_whitener_energies (const AntWhitener *whitener, const double *z, ptrdiff_t f
                        const double *shape, double energy[ANT_LANES], double moment[ANT_LANES], double weight[ANT_LANES])
 {
   Lanes lanes;
+  ant_pace_on (whitener->pace, n_shape);
   switch (whitener->terms.terms)
     {
     case 4: lanes_run (whitener, 4, z, first, n_shape, shape, &lanes); break;

@@ -3,6 +3,8 @@
 #include <string.h>
 #include "noise/spectrum-private.h"
 
+#define TRANSFORM_COST 2 /* for each sample, on the pace */
+
 AntStatus
 ant_spectrum_work_init (AntSpectrumWork *work, const AntSpectrum *spectrum)
 {
@@ -29,7 +31,8 @@ ant_spectrum_work_clear (AntSpectrumWork *work)
 void
 ant_spectrum_transform (const AntSpectrum *spectrum, double *real, fftw_complex *complex)
 {
-  fftw_execute_dft_r2c (spectrum->forward, real, complex);
+  if (!ant_pace_stopped (spectrum->pace)) /* else nobody will look at it */
+    fftw_execute_dft_r2c (spectrum->forward, real, complex);
 }
 
 void
@@ -63,6 +66,8 @@ cross_with_mean (const AntSpectrum *spectrum, AntSpectrumWork *work)
       work->complex[k][0] = gain * spectrum->taper_transform[k][0];
       work->complex[k][1] = gain * spectrum->taper_transform[k][1];
     }
+  if (ant_pace_stopped (spectrum->pace))
+    return;
   fftw_execute_dft_c2r (spectrum->backward, work->complex, work->real);
   ant_spectrum_pad (spectrum, work->real, spectrum->taper, work->real);
   ant_spectrum_transform (spectrum, work->real, work->cross);
@@ -71,6 +76,7 @@ cross_with_mean (const AntSpectrum *spectrum, AntSpectrumWork *work)
 void
 ant_spectrum_expect (const AntSpectrum *spectrum, AntSpectrumWork *work, int mean, double *out)
 {
+  ant_pace_on (spectrum->pace, (mean ? 4 : 1) * TRANSFORM_COST * spectrum->n);
   if (mean)
     cross_with_mean (spectrum, work);
   pad_even (spectrum, work->covariance, spectrum->overlap, work->real);
@@ -112,7 +118,7 @@ ant_spectrum_expected (const AntSpectrum *spectrum, const AntNoiseModel *model, 
   work.covariance[0] += ant_spectrum_white (spectrum, model);
   ant_spectrum_expect (spectrum, &work, 1, out);
   ant_spectrum_work_clear (&work);
-  return ANT_OK;
+  return ant_pace_stopped (spectrum->pace) ? ANT_STOPPED : ANT_OK;
 }
 
 AntStatus

@@ -5,6 +5,8 @@
 #include "noise/factor.h"
 #include "noise/whitener.h"
 
+#define SAMPLE_COST 4 /* on the pace */
+
 typedef struct
 {
   double quadratic; /* sum of innovation^2 / d */
@@ -39,6 +41,8 @@ run (const AntTerms *terms, size_t fours, const AntNoiseModel *model, const AntS
   double r = ant_noise_model_variance (model, 0, 1);
   for (size_t i = 0; i < series->n; i++)
     {
+      if (i % ANT_PACE_EVERY == 0 && !ant_pace_on (series->pace, SAMPLE_COST * ANT_PACE_EVERY))
+        return ANT_STOPPED;
       double y = (double) series->value_ppm[i];
       if (isnan (y) || (series->spike && series->spike[i]))
         continue;

@@ -7,6 +7,7 @@
 #include "noise/state-space.h"
 #include "noise/whitener.h"
 
+#define LANES_COST 12 /* for each sample, on the pace */
 #define EXACT_EVERY 128
 #define TRIANGLE (ANT_MAX_TERMS * (ANT_MAX_TERMS + 1) / 2)
 
@@ -176,6 +177,8 @@ run (LaneState *state, const LaneTerms *terms, size_t width, size_t n_models, co
   AntEight variance = { 0 };
   for (size_t i = 0; i < series->n; i++)
     {
+      if (i % ANT_PACE_EVERY == 0 && !ant_pace_on (series->pace, LANES_COST * ANT_PACE_EVERY))
+        return;
       double y = (double) series->value_ppm[i];
       if (isnan (y) || (series->spike && series->spike[i]))
         continue;
@@ -225,6 +228,8 @@ ant_noise_log_likelihoods (size_t n, const AntNoiseModel *model, const AntSeries
   if (status)
     return status;
   run_any_width (&state, &lanes, n, model, series);
+  if (ant_pace_stopped (series->pace))
+    return ANT_STOPPED;
   if (!state.n)
     return ANT_NO_DATA;
   settle_product (&state);

@@ -143,6 +143,8 @@ ant_minimise (size_t n, double *x, AntObjective f, void *data, double first_step
   if (n == 0 || n > ANT_MAX_FREE)
     return ANT_BAD_ARGUMENT;
   double fx = value_at (&search, x);
+  if (ant_stop_asked (options->stop))
+    return ANT_STOPPED;
   if (!isfinite (fx))
     return ANT_BAD_ARGUMENT;
   AntStatus status = ANT_NOT_CONVERGED;

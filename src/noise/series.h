@@ -4,6 +4,7 @@
 
 #include <stddef.h>
 #include <stdint.h>
+#include "core/stages.h"
 
 typedef struct
 {
@@ -14,6 +15,7 @@ typedef struct
   const float *error_ppm; /* [n] stated 1-sigma errors, or NULL if the record states none */
   const float *bin_count; /* [n] samples averaged into each place, or NULL if one each */
   const uint8_t *spike;   /* [n] nonzero = observed and searched but left out of noise fits, or NULL */
+  AntPace *pace;          /* long passes over the series count here, and end with ANT_STOPPED where it says so; or NULL */
 } AntSeries;
 
 /* Places first .. first+n-1 as a series of its own; clipped to the series. */

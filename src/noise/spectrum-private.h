@@ -18,6 +18,7 @@ struct _AntSpectrum
   double sum_squares; /* of the taper */
   double mean_error_ppm, mean_count; /* what stands for the measurements in ant_noise_model_variance */
   fftw_plan forward, backward;       /* of 2 length */
+  AntPace *pace;      /* of the series, or NULL */
   AntSpectrum *steps; /* the same of the differences of neighbours, with the same bins; NULL where too few */
 };
 
@@ -37,7 +38,8 @@ ant_squared (const fftw_complex z)
 
 /* value [n] times factor [n] (NULL: 1) into real [2 length], zero beyond. */
 void ant_spectrum_pad (const AntSpectrum *spectrum, const double *value, const double *factor, double *real);
-/* Of real [2 length], into complex [length+1]. */
+/* Of real [2 length], into complex [length+1]. Left out once the pace asks to stop: whoever began the work ends with
+ * ANT_STOPPED. */
 void ant_spectrum_transform (const AntSpectrum *spectrum, double *real, fftw_complex *complex);
 
 AntStatus ant_spectrum_work_init (AntSpectrumWork *work, const AntSpectrum *spectrum);

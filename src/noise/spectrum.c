@@ -184,6 +184,7 @@ study (const AntSeries *series, int bins_per_octave, AntStatus *status)
     return NULL;
   spectrum->n = series->n;
   spectrum->step_d = series->step_d;
+  spectrum->pace = series->pace;
   spectrum->length = smooth_length (series->n);
   AntSpectrumWork work = { NULL };
   *status = cut_bins (spectrum, bins_per_octave);
@@ -215,7 +216,8 @@ study_steps (const AntSeries *series, int bins_per_octave, AntStatus *status)
       int both = i > 0 && is_fit_worthy (series, i) && is_fit_worthy (series, i - 1);
       step[i] = both ? series->value_ppm[i] - series->value_ppm[i - 1] : NAN;
     }
-  AntSeries steps = { .n = series->n, .step_d = series->step_d, .start_d = series->start_d, .value_ppm = step };
+  AntSeries steps = { .n = series->n, .step_d = series->step_d, .start_d = series->start_d, .value_ppm = step,
+                      .pace = series->pace };
   AntSpectrum *spectrum = study (&steps, bins_per_octave, status);
   free (step);
   return spectrum;
@@ -235,6 +237,8 @@ ant_spectrum_new (const AntSeries *series, int bins_per_octave, AntStatus *statu
   spectrum->steps = study_steps (series, bins_per_octave, status);
   if (*status == ANT_NO_DATA) /* no neighbours: the values have to do */
     *status = ANT_OK;
+  if (ant_pace_stopped (series->pace))
+    *status = ANT_STOPPED;
   if (*status == ANT_OK)
     return spectrum;
   ant_spectrum_free (spectrum);

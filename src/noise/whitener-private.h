@@ -16,6 +16,7 @@ struct _AntWhitener
   double *u, *w;    /* [observed][terms] */
   double *tail;     /* [observed/every + 1][terms*terms]: energy that a state entering the checkpoint leaves behind */
   double log_det;
+  AntPace *pace;    /* of the series, or NULL */
   double *level;        /* [n] C^-1 1 on the grid, or NULL where the level is known to be 0 */
   double level_energy;  /* 1' C^-1 1 */
 };

@@ -7,6 +7,8 @@
 #include "noise/factor.h"
 #include "noise/whitener-private.h"
 
+#define SAMPLE_COST 4 /* on the pace */
+
 size_t ant_whitener_n (const AntWhitener *whitener) { return whitener->n; }
 size_t ant_whitener_observed (const AntWhitener *whitener) { return whitener->observed; }
 const unsigned *ant_whitener_places (const AntWhitener *whitener) { return whitener->place; }
@@ -68,6 +70,8 @@ factor (AntWhitener *whitener, size_t width, const AntNoiseModel *model, const A
   for (size_t i = 0; i < whitener->observed; i++)
     {
       size_t place = whitener->place[i];
+      if (i % ANT_PACE_EVERY == 0 && !ant_pace_on (whitener->pace, SAMPLE_COST * ANT_PACE_EVERY))
+        return ANT_STOPPED;
       if (i)
         ant_walk_to (&walk, terms, place);
       ant_walk_vectors (&walk, terms, (double *) state.u, (double *) state.v);
@@ -97,6 +101,8 @@ tails (AntWhitener *whitener, size_t width)
     memset (whitener->tail + m / whitener->every * width * width, 0, bytes);
   for (size_t i = m; i-- > 0;)
     {
+      if (i % ANT_PACE_EVERY == 0 && !ant_pace_on (whitener->pace, SAMPLE_COST * ANT_PACE_EVERY))
+        return;
       if (i + 1 < m)
         ant_terms_decay (&whitener->terms, whitener->place[i + 1] - whitener->place[i], decay);
       const double *uj = whitener->u + i * width, *w = whitener->w + i * width, *qj = (const double *) q;
@@ -135,7 +141,7 @@ factor_any_width (AntWhitener *whitener, const AntNoiseModel *model, const AntSe
     tails (whitener, 16);
   else
     tails (whitener, width);
-  return ANT_OK;
+  return ant_pace_stopped (whitener->pace) ? ANT_STOPPED : ANT_OK;
 }
 
 AntWhitener *
@@ -148,6 +154,7 @@ ant_whitener_new (const AntNoiseModel *model, const AntSeries *series, AntStatus
       return NULL;
     }
   whitener->n = series->n;
+  whitener->pace = series->pace;
   whitener->observed = ant_series_observed (series, 0);
   *status = whitener->observed ? ant_terms_from_model (&whitener->terms, model, series->step_d) : ANT_NO_DATA;
   if (!*status)

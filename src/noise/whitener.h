@@ -4,7 +4,8 @@
  * costs n J^2 for J terms, through any gaps (Foreman-Mackey, Agol, Ambikasaran & Angus 2017, AJ 154, 220; the same as a
  * Kalman filter, Kalman 1960, for these models). Only observed places enter: a gap is one longer step.
  *
- * A whitener is immutable once made and may be used from several threads. It keeps no pointer into the series. */
+ * A whitener is immutable once made and may be used from several threads. It keeps no pointer into the series,
+ * but for its pace. */
 #pragma once
 
 #include <stddef.h>

@@ -150,6 +150,8 @@ build_hats (Whittle *whittle, AntSpectrumWork *work)
   for (size_t g = 0; status == ANT_OK && g < whittle->knots; g++)
     {
       double knot = whittle->knot_cd[g];
+      if (ant_pace_stopped (spectrum->pace))
+        status = ANT_STOPPED;
       if (g + 1 < whittle->knots)
         fill_ramp (knot, whittle->knot_cd[g + 1], spectrum->step_d, n, work->covariance, above);
       else

@@ -62,6 +62,8 @@ struct _AntScan
   AntStop own_stop;
   AntStop *stop;       /* own_stop, or that of the scan whose surrogate this is */
   size_t n_finished;   /* stages */
+  AntPace pace;        /* of all passes over the record, where the scan is not itself a part of another */
+  size_t passed_before; /* its count when the present stage began */
   AntSeries series;
   AntScanOptions options;
   AntRefineOptions refine;

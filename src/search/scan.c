@@ -26,6 +26,9 @@ ant_scan_new (const AntSeries *series, const AntScanOptions *options, AntStatus 
   scan->series = *series;
   scan->options = *options;
   scan->stop = &scan->own_stop;
+  scan->pace.stop = scan->stop;
+  if (!scan->series.pace)
+    scan->series.pace = &scan->pace;
   scan->bank = ant_template_bank_new (&options->bank, series->step_d, status);
   if (scan->bank)
     {
@@ -153,6 +156,7 @@ finish (void *work, size_t stage)
   AntStatus status = merge (scan, stage);
   if (!status)
     scan->n_finished = stage + 1;
+  scan->passed_before = ant_pace_passed (&scan->pace);
   return status;
 }
 
@@ -178,9 +182,41 @@ stop_of (void *work)
   return scan->stop;
 }
 
+/* Of one map, for each sample of the record. */
+static double
+cost_of_map (const AntTemplateBank *bank)
+{
+  double cost = 0;
+  for (size_t f = 0; f < bank->n_families; f++)
+    for (size_t b = 0; b < bank->family[f].n_members / ANT_LANES; b++)
+      cost += (double) bank->family[f].block_length[b] / (double) bank->family[f].stride;
+  return cost;
+}
+
+/* What a slice of a stage costs on the pace for each of its samples, about: as measured on records of many kinds. */
+static double
+part_of (void *work, size_t stage)
+{
+  AntScan *scan = work;
+  double search = 1200 + 2.5 * cost_of_map (scan->bank);
+  double cost[ANT_N_STAGES] = { 2200, search, 2200 + search, 90, 65, 90, 8 };
+  double samples = 0, longest = 0;
+  for (size_t i = 0; i < scan->n_chunks; i++)
+    {
+      samples += (double) scan->chunk[i].n;
+      longest = fmax (longest, (double) scan->chunk[i].n);
+    }
+  double events = (double) scan->n_events / (double) scan->n_chunks;
+  double of_stage[ANT_N_STAGES] = { longest, samples, samples * (double) scan->options.surrogates, samples * events, samples,
+                                    samples * events, samples };
+  if (of_stage[stage] <= 0)
+    return 0;
+  return ant_pace_part ((double) (ant_pace_passed (&scan->pace) - scan->passed_before), cost[stage] * of_stage[stage]);
+}
+
 const AntStages *
 ant_scan_stages (void)
 {
-  static const AntStages stages = { ANT_N_STAGES, stage_title, stage_count, run_slice, finish, stop_of };
+  static const AntStages stages = { ANT_N_STAGES, stage_title, stage_count, run_slice, finish, stop_of, part_of };
   return &stages;
 }

@@ -122,6 +122,7 @@ note_progress (const AntProgress *progress, gpointer data)
 {
   GArray *stages = data;
   g_assert_cmpuint (progress->done, <=, progress->count);
+  g_assert_cmpfloat (ant_progress_share (progress), <=, 1);
   g_assert_cmpuint (progress->stage, <, progress->n_stages);
   g_assert_nonnull (progress->title);
   g_array_append_val (stages, progress->stage);

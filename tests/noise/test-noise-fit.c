@@ -3,6 +3,7 @@
 #include <math.h>
 #include "models.h"
 #include "noise/noise-fit.h"
+#include "noise/spectrum.h"
 #include "noise/surrogate.h"
 #include "noise/whitener.h"
 
@@ -186,6 +187,53 @@ too_few_steps_leave_the_best_point_and_say_so (void)
   g_assert_cmpfloat (value, <, start);
 }
 
+/* The pace of a series is looked at by every pass over it. */
+static void
+a_wish_to_stop_ends_every_pass (void)
+{
+  float value[N], error[N];
+  double log_likelihood[ANT_LANES], on_pace;
+  AntStop stop = { 0 };
+  AntPace pace = { &stop, 0 };
+  AntNoiseModel model[2];
+  AntFitOptions options = ANT_FIT_OPTIONS_INIT;
+  AntSeries series = heteroscedastic (6, 1, 3200, value, error);
+  AntStatus status;
+  ant_noise_model_default (&model[0], STEP_D, 20, 20, 1, 0, NULL);
+  model[1] = model[0];
+  g_assert_cmpint (ant_noise_log_likelihood (model, &series, log_likelihood), ==, ANT_OK);
+  series.pace = &pace;
+  g_assert_cmpint (ant_noise_log_likelihood (model, &series, &on_pace), ==, ANT_OK);
+  g_assert_cmpfloat (on_pace, ==, log_likelihood[0]);
+  g_assert_cmpuint (ant_pace_passed (&pace), >=, N);
+  AntSpectrum *spectrum = ant_spectrum_new (&series, 6, &status);
+  options.stop = &stop;
+  ant_stop_ask (&stop);
+  g_assert_cmpint (ant_noise_log_likelihood (model, &series, log_likelihood), ==, ANT_STOPPED);
+  g_assert_cmpint (ant_noise_log_likelihoods (2, model, &series, log_likelihood), ==, ANT_STOPPED);
+  g_assert_null (ant_whitener_new_free_level (model, &series, &status));
+  g_assert_cmpint (status, ==, ANT_STOPPED);
+  g_assert_cmpint (ant_noise_fit (&model[1], &series, &options, NULL), ==, ANT_STOPPED);
+  g_assert_cmpint (ant_spectrum_whittle_fit (spectrum, &model[1]), ==, ANT_STOPPED);
+  g_assert_cmpmem (&model[0], sizeof model[0], &model[1], sizeof model[1]);
+  ant_spectrum_free (spectrum);
+}
+
+/* A pace's guess is passed now and then: what is left shrinks and never ends. */
+static void
+the_part_told_rises_and_stays_below_the_whole (void)
+{
+  double before = 0;
+  for (double passed = 1; passed < 1e6; passed *= 1.3)
+    {
+      double part = ant_pace_part (passed, 1000);
+      g_assert_cmpfloat (part, >, before);
+      g_assert_cmpfloat (part, <, 1);
+      before = part;
+    }
+  g_assert_cmpfloat (ant_pace_part (500, 1000), ==, 0.5);
+}
+
 int
 main (int argc, char **argv)
 {
@@ -196,6 +244,8 @@ main (int argc, char **argv)
   TEST ("bins-of-many-samples-weigh-more", bins_of_many_samples_weigh_more);
   TEST ("a-fit-never-ends-below-its-start-and-reports-its-height", a_fit_never_ends_below_its_start_and_reports_its_height);
   TEST ("what-only-the-prior-decides-is-told", what_only_the_prior_decides_is_told);
+  TEST ("a-wish-to-stop-ends-every-pass", a_wish_to_stop_ends_every_pass);
+  TEST ("the-part-told-rises-and-stays-below-the-whole", the_part_told_rises_and_stays_below_the_whole);
   TEST ("held-parameters-stay", held_parameters_stay);
   TEST ("the-minimiser-walks-a-curved-valley", the_minimiser_walks_a_curved_valley);
   TEST ("too-few-steps-leave-the-best-point-and-say-so", too_few_steps_leave_the_best_point_and_say_so);

@@ -231,6 +231,27 @@ a_record_too_bare_to_fit_is_refused (Fixture *f, gconstpointer data)
   g_assert_cmpint (ant_scan_stages ()->run_slice (f->scan, 0, 0), ==, ANT_NO_DATA);
 }
 
+/* Once the one slice of a stage has run, its own count says that about all is done, before anyone else can. */
+static void
+a_slice_tells_how_far_it_is (Fixture *f, gconstpointer data)
+{
+  AntStatus status;
+  const AntStages *stages = ant_scan_stages ();
+  lay (f, 'C', ANT_MASK_L1, 12, 300, 9110, 0, NULL);
+  f->scan = ant_scan_new (&f->series, &f->options, &status);
+  for (size_t stage = 0; stage < 2; stage++)
+    {
+      g_assert_cmpuint (stages->count (f->scan, stage), ==, 1);
+      g_assert_cmpfloat (stages->part (f->scan, stage), ==, 0);
+      g_assert_cmpint (stages->run_slice (f->scan, stage, 0), ==, ANT_OK);
+      double part = stages->part (f->scan, stage);
+      g_test_message ("stage %zu: %.2f", stage, part);
+      g_assert_cmpfloat (part, >, 0.2);
+      g_assert_cmpfloat (part, <, 0.95);
+      g_assert_cmpint (stages->finish (f->scan, stage), ==, ANT_OK);
+    }
+}
+
 /* A scan whose first stages alone were finished; NULL fails the test. */
 static AntScan *
 scan_up_to (const AntSeries *series, const AntScanOptions *options, size_t n_stages)
@@ -311,6 +332,7 @@ main (int argc, char **argv)
   TEST ("listed-dips-keep-their-distance", listed_dips_keep_their_distance);
   TEST ("fewer-false-alarms-a-year-ask-for-a-higher-threshold", fewer_false_alarms_a_year_ask_for_a_higher_threshold);
   TEST ("spikes-are-told-and-still-searched", spikes_are_told_and_still_searched);
+  TEST ("a-slice-tells-how-far-it-is", a_slice_tells_how_far_it_is);
   TEST ("a-record-too-bare-to-fit-is-refused", a_record_too_bare_to_fit_is_refused);
   TEST ("a-stopped-one-tells-what-its-finished-stages-found", a_stopped_scan_tells_what_its_finished_stages_found);
   TEST ("one-stopped-among-its-surrogates-keeps-the-built-in-law", a_scan_stopped_among_its_surrogates_keeps_the_built_in_law);
