@@ -5,7 +5,7 @@
 #include "search/repeat-work.h"
 
 #define FINE_BELOW_D 6.0     /* shared fold: four phases to a ramp below this period, two above */
-#define LONG_RECORD_D 1830.0 /* beyond, coarser trial periods */
+#define SHARED_DRIFT 4.0     /* phases, end to end, between its trial periods */
 #define WORST_MISFIT 0.08    /* of the pair fit; beyond, a tree for each duration */
 #define DURATION_RATIO 1.5  /* from one tree's duration to the next */
 #define STARTS_TO_A_BOX 6.0
@@ -115,7 +115,7 @@ init_shared (AntRepeats *repeats, AntRepeatSide *side)
   for (int i = 0; i < 2 && !status; i++)
     if (at[i + 1] > at[i])
       status = ant_repeat_shared_init (&side->shared[i], &side->edges, &repeats->pairs, step_d, i ? 2 : 4,
-                                       i && repeats->span_d < LONG_RECORD_D ? 2 : 4, longest_d, at[i + 1]);
+                                       SHARED_DRIFT, longest_d, at[i + 1]);
   return status;
 }
 

@@ -11,6 +11,7 @@
 #define CLIP_EVENT 5.0 /* sigma, of single events that are looked at one by one */
 #define TILE 2048
 #define LANES ANT_FOLD_LANES
+#define GROUP (4 * LANES) /* phases that are held against the bound at once */
 
 /* Scatter of (Z - its surroundings)/sqrt(A) where an edge is well observed. */
 static double
@@ -102,7 +103,8 @@ typedef struct
   int all;
   size_t narrow, wide;  /* durations at this leaf, steps */
   float scale_least;
-  float *z, *a, *z_least, *a_least; /* [ROOM_OF] folded, and least over the durations' reach */
+  float *z, *a, *z_least; /* [ROOM_OF] folded, and least over the durations' reach */
+  float *a_least, *work;  /* the same of A, by blocks of LANES */
 } Visit;
 
 static void
@@ -178,20 +180,53 @@ power_of (float z, float other_z, float a, float other_a, float scale, float lea
   return x > 0 && pair >= least ? x * x / (scale * pair) : 0;
 }
 
-/* Whether any of these phases may have more than `cut`. */
-static inline __attribute__ ((always_inline)) int
-may_exceed (const Visit *v, size_t t, float cut)
+/* least[k] = at most the least of value[t + narrow .. t + wide] for t in block k of LANES: whole blocks, since A is smooth and a
+ * bound is all that is asked. work: as many blocks as value has. */
+static inline __attribute__ ((always_inline)) void
+blocks_least (const float *value, size_t n, size_t narrow, size_t wide, float *restrict work, float *restrict least)
 {
-  const float *z = v->z + t, *z_least = v->z_least + t, *a = v->a + t, *a_least = v->a_least + t;
-  float least = v->least, price = cut * v->scale_least;
+  size_t first = narrow / LANES, n_blocks = n / LANES, reach = (wide + 2 * LANES - 1) / LANES;
+  for (size_t k = first; k < n_blocks + reach; k++)
+    {
+      float lowest[LANES];
+      memcpy (lowest, value + k * LANES, sizeof lowest);
+      for (size_t half = LANES / 2; half > 0; half /= 2)
+        for (size_t i = 0; i < half; i++)
+          lowest[i] = lesser (lowest[i], lowest[i + half]);
+      work[k] = lowest[0];
+    }
+  for (size_t k = 0; k < n_blocks; k++)
+    {
+      float all = work[k + first];
+      for (size_t j = k + first + 1; j < k + reach; j++)
+        all = lesser (all, work[j]);
+      least[k] = all;
+    }
+}
+
+/* Whether any of a group of phases may have more than `cut`. */
+static inline __attribute__ ((always_inline)) int
+may_exceed (const Visit *v, size_t t, size_t n, float cut)
+{
+  float least = v->least, price = cut * v->scale_least, over[LANES];
   int any = 0;
   for (size_t i = 0; i < LANES; i++)
+    over[i] = -1;
+  for (size_t at = t; at < t + n; at += LANES)
     {
-      float x = z[i] - z_least[i], pair = a[i] + a_least[i];
-      x = x > 0 ? x : 0;
-      pair = pair > least ? pair : least;
-      any |= x * x >= price * pair;
+      const float *z = v->z + at, *z_least = v->z_least + at, *a = v->a + at;
+      float a_least = v->a_least[at / LANES];
+      for (size_t i = 0; i < LANES; i++)
+        {
+          float x = z[i] - z_least[i], pair = a[i] + a_least;
+          x = x > 0 ? x : 0;
+          pair = pair > least ? pair : least;
+          float excess = x * x - price * pair;
+          over[i] = excess > over[i] ? excess : over[i];
+        }
     }
+  for (size_t i = 0; i < LANES; i++)
+    any |= over[i] >= 0;
   return any;
 }
 
@@ -259,9 +294,18 @@ settle (const Visit *v, const AntFoldLeaf *leaf, size_t phase, size_t width, Ant
 ANT_SIMD static size_t
 next_block (const Visit *v, size_t t, size_t phases, float cut, size_t *phase, size_t *width)
 {
-  for (; t < phases; t += LANES)
-    if ((v->all || may_exceed (v, t, cut * 0.99999f)) && best_at (v, t, phase, width) > cut)
-      return t;
+  while (t < phases)
+    {
+      size_t group = phases - t < GROUP - t % GROUP ? phases - t : GROUP - t % GROUP;
+      if (!v->all && !may_exceed (v, t, group, cut * 0.99999f))
+        {
+          t += group;
+          continue;
+        }
+      for (size_t end = t + group; t < end; t += LANES)
+        if ((v->all || may_exceed (v, t, LANES, cut * 0.99999f)) && best_at (v, t, phase, width) > cut)
+          return t;
+    }
   return phases;
 }
 
@@ -272,7 +316,7 @@ fold_leaf (const Visit *v, const AntFoldLeaf *leaf, size_t phases)
   add_up (leaf->n_rows, leaf->a, length, v->z);
   add_up (leaf->n_rows, leaf->b, length, v->a);
   sliding_least (v->z, phases, v->narrow, v->wide, v->z_least);
-  sliding_least (v->a, phases, v->narrow, v->wide, v->a_least);
+  blocks_least (v->a, phases, v->narrow, v->wide, v->work, v->a_least);
 }
 
 static void
@@ -298,12 +342,13 @@ ant_repeat_shared_search (const AntRepeatShared *shared, const AntRepeatGrid *gr
   AntFoldRange range = { .from = from_d / shared->step_d, .to = to_d / shared->step_d, .drift_top = shared->drift_top,
                          .drift_inner = shared->drift_inner, .reach = shared->n_widths, .tile = TILE, .stop = stop };
   size_t room = ROOM_OF (shared);
-  float *work = malloc (4 * room * sizeof *work);
+  float *work = malloc (5 * room * sizeof *work);
   if (!work)
     return ANT_NO_MEMORY;
   Visit v = { .shared = shared, .grid = grid, .bins = bins, .events = least_events,
               .least = (float) (least_events * (double) shared->typical), .all = all,
-              .z = work, .a = work + room, .z_least = work + 2 * room, .a_least = work + 3 * room };
+              .z = work, .a = work + room, .z_least = work + 2 * room, .a_least = work + 3 * room,
+              .work = work + 4 * room };
   AntStatus status = ant_fold_tree_run (&shared->arrays, &range, visit, &v);
   free (work);
   return status;

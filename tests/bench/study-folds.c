@@ -187,7 +187,7 @@ init_fitted (Study *study, char name)
   fail (ant_repeat_pairs_fit (&study->pairs));
   study->trees = study->pairs.misfit > WORST_MISFIT;
   for (int i = 0; i < 2; i++)
-    fail (ant_repeat_shared_init (&study->shared[i], &study->noise, &study->pairs, step_d, i ? 2 : 4, i ? 2 : 4, longest_d,
+    fail (ant_repeat_shared_init (&study->shared[i], &study->noise, &study->pairs, step_d, i ? 2 : 4, 4, longest_d,
                                   study->grid.period_max_d));
 }
 
