@@ -116,11 +116,36 @@ say (GPtrArray *said, const char *format, ...)
   va_end (arguments);
 }
 
-static void
-say_repeat (const AntRepeatResults *results, const AntSettings *settings, gsize i, GPtrArray *said)
+/* A stronger repeat with the same period, and how far into its cycle this one lies; NULL if there is none. */
+static const AntRepeat *
+same_cycle (const AntRepeatResults *results, gsize i, double *phase)
 {
   const AntRepeat *repeat = &results->repeat[i];
-  gsize listed = 0;
+  for (gsize k = 0; k < i; k++)
+    {
+      const AntRepeat *other = &results->repeat[k];
+      double sigma_d = hypot (repeat->period_sigma_d, other->period_sigma_d);
+      *phase = (repeat->epoch_d - other->epoch_d) / other->period_d;
+      *phase -= floor (*phase);
+      if (fabs (repeat->period_d - other->period_d) < 4 * sigma_d)
+        return other;
+    }
+  return NULL;
+}
+
+/* Events within the record, observed or not. */
+static gsize
+events_within (const AntRecord *record, const AntRepeat *repeat)
+{
+  return (gsize) ((double) record->series.n * record->series.step_d / repeat->period_d);
+}
+
+static void
+say_repeat (const AntRepeatResults *results, const AntRecord *record, const AntSettings *settings, gsize i, GPtrArray *said)
+{
+  const AntRepeat *repeat = &results->repeat[i], *other;
+  gsize listed = 0, within = events_within (record, repeat);
+  double phase;
   for (gsize e = 0; e < repeat->n_events; e++)
     listed += repeat->event[e].dip > 0;
   if (repeat->n_observed == 2)
@@ -134,6 +159,12 @@ say_repeat (const AntRepeatResults *results, const AntSettings *settings, gsize 
   if (repeat->odd_even > 3)
     say (said, _("Repeat %zu: odd and even events differ by %.1f sigma in depth; its true period may be %.6g d"), i + 1, repeat->odd_even,
          2 * repeat->period_d);
+  if (5 * repeat->n_observed < 3 * within)
+    say (said, _("Repeat %zu: of %zu events within the record only %zu were observed: suspect the gaps"), i + 1, within,
+         repeat->n_observed);
+  if ((other = same_cycle (results, i, &phase)))
+    say (said, _("Repeat %zu has the period of repeat %zu, at %.2f of its cycle: both may belong to one body"), i + 1,
+         (gsize) (other - results->repeat) + 1, phase);
   double orbit_d = settings->line_period_h / ANT_HOURS_PER_DAY;
   double orbits = orbit_d > 0 ? repeat->period_d / orbit_d : 0;
   if (orbit_d > 0 && fabs (orbits - floor (orbits + 0.5)) * orbit_d < repeat->period_sigma_d + 0.02 * orbit_d)
@@ -161,7 +192,7 @@ ant_repeat_results_say (const AntRepeatResults *results, const AntRecord *record
     say (said, _("The search for repeats was stopped after %.0f %% of its periods; what is listed was found until then"),
          100 * results->done);
   for (gsize i = 0; i < results->n; i++)
-    say_repeat (results, settings, i, said);
+    say_repeat (results, record, settings, i, said);
   if (results->n_mirrored)
     say (said, _("A brightening recurs at SNR %.1f, where noise alone would give %.2g: repeats of like SNR need a cause other than chance"),
          results->best_mirrored_snr, results->expected_at_threshold);

@@ -5,6 +5,17 @@
 
 #include "data/error.h"
 
+/* Before what was said of single pieces, of which a summary shows the first few. */
+static void
+say (AntScanResults *results)
+{
+  GPtrArray *said = g_ptr_array_new ();
+  ant_repeat_results_say (&results->repeats, results->record, &results->settings, said);
+  for (guint i = 0; i < said->len; i++)
+    g_ptr_array_insert (results->said, (int) i, g_ptr_array_index (said, i));
+  g_ptr_array_unref (said);
+}
+
 gboolean
 ant_repeat_job_run (AntScanResults *results, GCancellable *cancellable, AntProgressFunc progress, gpointer data, GError **error)
 {
@@ -26,6 +37,6 @@ ant_repeat_job_run (AntScanResults *results, GCancellable *cancellable, AntProgr
   /* A record too short, or too poor, is told in words. */
   gboolean good = !status || status == ANT_NO_DATA || status == ANT_STOPPED || ant_status_to_error (status, _("searching for repeats"), error);
   if (good)
-    ant_repeat_results_say (&results->repeats, results->record, settings, results->said);
+    say (results);
   return good;
 }
