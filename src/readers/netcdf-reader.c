@@ -91,8 +91,8 @@ start_columns (int file, const char *name, const AntNetcdfContents *contents, co
 
 /* unread: the source is still to be read for its SHA-256. */
 static gboolean
-read_file (int file, gboolean unread, AntByteSource *source, const AntReadingChoices *choices, GCancellable *cancellable,
-           AntRecord *record, GError **error)
+read_file (int file, gboolean unread, AntByteSource *source, const AntReadingChoices *choices, const AntSliceRunner *runner,
+           GCancellable *cancellable, AntRecord *record, GError **error)
 {
   struct stat status;
   gsize n;
@@ -116,7 +116,7 @@ read_file (int file, gboolean unread, AntByteSource *source, const AntReadingCho
   gboolean read = ant_netcdf_process_finish (process, record->path, cancellable, &output, hashed ? error : NULL);
   if (!hashed)
     g_propagate_error (error, g_steal_pointer (&failure));
-  return hashed && read && ant_netcdf_rows_fill (contents, columns, output.bytes, output.n, choices, record, error);
+  return hashed && read && ant_netcdf_rows_fill (contents, columns, output.bytes, output.n, choices, runner, record, error);
 }
 
 /* All of a packed file or a pipe, in memory. -1 with one sentence. */
@@ -152,7 +152,7 @@ ant_netcdf_reader_read (AntByteSource *source, const AntReadingChoices *choices,
         g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: cannot be opened: %s"), path, g_strerror (errno));
       return FALSE;
     }
-  gboolean done = read_file (file, path != NULL, source, choices, cancellable, record, error);
+  gboolean done = read_file (file, path != NULL, source, choices, runner, cancellable, record, error);
   close (file);
   return done;
 }

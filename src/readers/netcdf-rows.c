@@ -9,13 +9,13 @@
 #include "core/units.h"
 #include "data/error.h"
 #include "readers/cf-time.h"
-#include "readers/large-array.h"
 #include "readers/netcdf-values.h"
 #include "readers/table-record.h"
 #include "readers/text-names.h"
 #include "readers/time-columns.h"
 
-#define SAMPLE 4096      /* rows studied to tell what a column holds */
+#define SAMPLE 1024      /* rows studied to tell what a column holds */
+#define LEAST_SHARED 100000 /* rows that are worth threads */
 #define SAME_WIDTH 1e-6  /* relative: intervals of one length */
 #define AT_EDGE 0.01     /* of an interval */
 
@@ -190,62 +190,122 @@ read_times (const Work *work, AntCfTime *cf, AntTimeForm *form, AntTableRows *ro
     }
 }
 
-static double *
-read_values (Work *work, guint c)
+/* Doubles with no more than one fill value and nothing to be done to them: most large columns. */
+static gboolean
+is_plain (const AntNetcdfColumn *column, const AntNetcdfPacking *packing)
 {
-  gsize n = work->columns->n_rows;
-  double *values = ant_large_renew (double, NULL, n);
-  AntNetcdfTally tally = { 0 };
-  for (gsize i = 0; i < n; i++)
-    values[i] = ant_netcdf_unpack (&work->packing[c], ant_netcdf_column_real (&work->column[c], i), &tally);
-  work->tally[c] = tally;
-  return values;
+  return column->kind == ANT_WIRE_REAL && packing->n_fills <= 1 && packing->wrap == 0.0 && !packing->scales && packing->least == -INFINITY
+         && packing->greatest == INFINITY;
 }
 
-static float *
-read_further (const Work *work, guint c)
+static void
+read_values (Work *work, guint c, double *values)
 {
   gsize n = work->columns->n_rows;
-  float *values = ant_large_renew (float, NULL, n);
+  AntNetcdfTally tally = { 0 };
+  if (is_plain (&work->column[c], &work->packing[c]))
+    {
+      double fill = work->packing[c].n_fills ? work->packing[c].fill[0] : (double) NAN;
+      memcpy (values, work->column[c].at, n * sizeof *values);
+      for (gsize i = 0; i < n; i++)
+        if (values[i] == fill)
+          {
+            values[i] = (double) NAN;
+            tally.n_fill++;
+          }
+    }
+  else
+    for (gsize i = 0; i < n; i++)
+      values[i] = ant_netcdf_unpack (&work->packing[c], ant_netcdf_column_real (&work->column[c], i), &tally);
+  work->tally[c] = tally;
+}
+
+static void
+read_further (const Work *work, guint c, float *values)
+{
+  gsize n = work->columns->n_rows;
   for (gsize i = 0; i < n; i++)
     {
       double value = value_at (work, c, i);
       values[i] = fabs (value) <= (double) FLT_MAX ? (float) value : NAN;
     }
-  return values;
 }
 
-static gint64 *
+static void
 read_quality (const Work *work, guint c, AntTableRows *rows)
 {
   gsize n = work->columns->n_rows;
-  gint64 *quality = ant_large_renew (gint64, NULL, n);
   for (gsize i = 0; i < n; i++)
     {
       gboolean whole = work->column[c].kind == ANT_WIRE_INTEGER && !work->packing[c].scales;
       double value = value_at (work, c, i);
       gboolean bad = isnan (value) || value != floor (value) || fabs (value) > 9.2e18;
-      quality[i] = bad ? -1 : whole ? ant_netcdf_column_integer (&work->column[c], i) : (gint64) value;
+      rows->quality[i] = bad ? -1 : whole ? ant_netcdf_column_integer (&work->column[c], i) : (gint64) value;
       rows->n_no_quality += bad;
     }
-  return quality;
+}
+
+/* The columns side by side: first the time, then values, further ones, error and quality. */
+typedef struct
+{
+  Work *work;
+  const AntValueColumns *columns;
+  AntCfTime *cf;
+  AntTimeForm *form;
+  AntTableRows *rows;
+} Reading;
+
+static const char *
+title (void *data, size_t stage)
+{
+  return "reading rows";
+}
+
+static size_t
+count (void *data, size_t stage)
+{
+  const AntValueColumns *columns = ((const Reading *) data)->columns;
+  return 1 + columns->n_values + columns->n_further + (columns->error >= 0 ? 1 : 0) + (columns->quality >= 0 ? 1 : 0);
+}
+
+static AntStatus
+run_slice (void *data, size_t stage, size_t slice)
+{
+  const Reading *reading = data;
+  const AntValueColumns *columns = reading->columns;
+  AntTableRows *rows = reading->rows;
+  size_t value = slice - 1, further = value - columns->n_values, last = further - columns->n_further;
+  if (slice == 0)
+    read_times (reading->work, reading->cf, reading->form, rows);
+  else if (value < columns->n_values)
+    read_values (reading->work, columns->values[value], rows->values[value]);
+  else if (further < columns->n_further)
+    read_further (reading->work, columns->further[further], rows->further[further]);
+  else if (last == 0 && columns->error >= 0)
+    read_values (reading->work, (guint) columns->error, rows->error);
+  else
+    read_quality (reading->work, (guint) columns->quality, rows);
+  return ANT_OK;
+}
+
+static AntStatus
+finish (void *data, size_t stage)
+{
+  return ANT_OK;
 }
 
 static void
-read_rows (Work *work, const AntValueColumns *columns, AntCfTime *cf, AntTimeForm *form, AntTableRows *rows)
+read_rows (Reading *reading, const AntSliceRunner *runner)
 {
-  rows->n = rows->room = work->columns->n_rows;
-  rows->time_d = ant_large_renew (double, NULL, rows->n);
-  rows->line = ant_large_renew (guint32, NULL, rows->n);
-  read_times (work, cf, form, rows);
-  for (guint i = 0; i < columns->n_values; i++)
-    rows->values[i] = read_values (work, columns->values[i]);
-  for (guint i = 0; i < columns->n_further; i++)
-    rows->further[i] = read_further (work, columns->further[i]);
-  if (columns->error >= 0)
-    rows->error = read_values (work, (guint) columns->error);
-  if (columns->quality >= 0)
-    rows->quality = read_quality (work, (guint) columns->quality, rows);
+  static const AntStages stages = { .n_stages = 1, .title = title, .count = count, .run_slice = run_slice, .finish = finish };
+  AntTableRows *rows = reading->rows;
+  ant_table_rows_expect (rows, reading->columns, MAX (reading->work->columns->n_rows, 1));
+  rows->n = reading->work->columns->n_rows;
+  if (runner && rows->n >= LEAST_SHARED)
+    runner->run (&stages, reading, NULL, runner->data);
+  else
+    for (size_t slice = 0; slice < count (reading, 0); slice++)
+      run_slice (reading, 0, slice);
 }
 
 static void
@@ -364,7 +424,7 @@ take_cf (const Work *work, const AntCfTime *cf)
 }
 
 static gboolean
-fill (Work *work, const AntReadingChoices *choices, GError **error)
+fill (Work *work, const AntReadingChoices *choices, const AntSliceRunner *runner, GError **error)
 {
   AntCfTime cf = { 0 };
   AntTimeForm form;
@@ -378,7 +438,7 @@ fill (Work *work, const AntReadingChoices *choices, GError **error)
     work->record->time_name = g_strdup (work->layout->columns[form.columns[0]].label);
   else
     ant_table_record_say_time (work->layout, &form, work->record);
-  read_rows (work, &columns, &cf, &form, &rows);
+  read_rows (&(Reading){ work, &columns, &cf, &form, &rows }, runner);
   gboolean done = ant_table_record_fill (&rows, work->layout, &form, &columns, choices, work->record, error);
   ant_table_rows_clear (&rows);
   if (done && by_cf)
@@ -390,7 +450,7 @@ fill (Work *work, const AntReadingChoices *choices, GError **error)
 
 gboolean
 ant_netcdf_rows_fill (const AntNetcdfContents *contents, const AntNetcdfColumns *columns, const guint8 *bytes, gsize n,
-                      const AntReadingChoices *choices, AntRecord *record, GError **error)
+                      const AntReadingChoices *choices, const AntSliceRunner *runner, AntRecord *record, GError **error)
 {
   g_autofree Work *work = g_new0 (Work, 1);
   gsize counts[ANT_NETCDF_MOST_COLUMNS + 2];
@@ -409,7 +469,7 @@ ant_netcdf_rows_fill (const AntNetcdfContents *contents, const AntNetcdfColumns 
   ant_reading_choices_copy (choices ? choices : &none, &full);
   make_layout (work);
   complete_choices (work, &full);
-  gboolean done = fill (work, &full, error);
+  gboolean done = fill (work, &full, runner, error);
   ant_reading_choices_clear (&full);
   ant_table_layout_free (work->layout);
   return done;

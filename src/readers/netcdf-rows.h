@@ -3,8 +3,9 @@
 
 #include "data/record.h"
 #include "readers/netcdf-columns.h"
+#include "readers/reader.h"
 
-/* `bytes` are what the child wrote for the columns, and for the two edges of the bounds behind them if there are any. FALSE
- * with one sentence. */
+/* `bytes` are what the child wrote for the columns, and for the two edges of the bounds behind them if there are any. runner: takes
+ * the columns side by side, or NULL. FALSE with one sentence. */
 gboolean ant_netcdf_rows_fill (const AntNetcdfContents *contents, const AntNetcdfColumns *columns, const guint8 *bytes, gsize n,
-                               const AntReadingChoices *choices, AntRecord *record, GError **error);
+                               const AntReadingChoices *choices, const AntSliceRunner *runner, AntRecord *record, GError **error);

@@ -53,7 +53,7 @@ read_rows (const AntNetcdfContents *contents, const guint8 *bytes, gsize n)
   g_autoptr (AntRecord) record = ant_record_new ();
   record->path = g_strdup ("any");
   record->format = g_strdup ("NetCDF");
-  gboolean filled = ant_netcdf_rows_fill (contents, columns, bytes, n, NULL, record, &error);
+  gboolean filled = ant_netcdf_rows_fill (contents, columns, bytes, n, NULL, NULL, record, &error);
   promise (filled == (error == NULL));
   if (error)
     promise (error->domain == ANT_ERROR && !strchr (error->message, '\n') && g_utf8_validate (error->message, -1, NULL));
