@@ -11,7 +11,7 @@
 #define WILD_RATIO 1e6 /* a value this many times the median is no irradiance, and too large for float ppm */
 #define MOST_DARK 0.25 /* of the good rows; above it the median is not the record's usual level */
 #define DARK_WINDOW_D 5.0
-#define CHOSEN_D 1.0    /* within limits nearer than this, five days tell nothing, and the analyst has said what is to be looked at */
+#define SHORT_D 1.0     /* in less, a median of five days tells nothing of what is usual */
 #define OTHER_RATIO 100 /* a value so many times above or below the median is of another state: night beside day */
 #define DARK_JOIN_D 0.5 /* dark rows with no good row between them and no longer pause are one span */
 
@@ -126,12 +126,12 @@ refuse_level (const AntRecord *record, gsize n_off, gsize n_good, double dark_fr
                             ant_number_text (fraction, "%g", dark_fraction));
 }
 
-/* Limits that leave the daylight of one day, say, and in it the Sun's own arc: nothing is taken for dark. */
+/* Less than a day, by its limits or as a whole, and one state of affairs: the Sun's arc over a station, a transit, a flare. */
 static gboolean
-is_chosen (const AntRecord *record, const AntRowOrder *order, const AntGridOptions *options, gsize n_good)
+is_short (const AntRecord *record, const AntRowOrder *order, gsize n_good)
 {
   gsize n_other = 0;
-  if (!(options->to_d - options->from_d < CHOSEN_D))
+  if (!(order->time_d[order->n - 1] - order->time_d[0] < SHORT_D))
     return FALSE;
   for (gsize k = 0; k < order->n; k++)
     {
@@ -150,7 +150,7 @@ use_dark (AntRecord *record, gsize n_dark, gsize n_good)
   for (gsize i = 0; i < record->n_rows; i++)
     record->flags[i] &= (guint16) ~ANT_FLAG_DARK;
   ant_record_say (record,
-                  _("%s %% of the good values are far from their median, but less than a day was asked for: nothing is taken for dark or covered."),
+                  _("%s %% of the good values are far from their median; in less than a day that tells nothing, so nothing is taken for dark or covered."),
                   ant_number_text (percent, "%.0f", 100.0 * (double) n_dark / (double) n_good));
 }
 
@@ -194,7 +194,7 @@ set_dark_aside (AntRecord *record, const AntRowOrder *order, const AntGridOption
         }
     }
   gsize n_off = MAX (n_dark, n_flipped);
-  if ((double) n_off > MOST_DARK * (double) n_good && !is_chosen (record, order, options, n_good))
+  if ((double) n_off > MOST_DARK * (double) n_good && !is_short (record, order, n_good))
     return refuse_level (record, n_off, n_good, options->dark_fraction, error);
   if ((double) n_off > MOST_DARK * (double) n_good)
     use_dark (record, n_off, n_good);

@@ -50,7 +50,11 @@ run (AntRecord *record, const AntSettings *settings, gboolean keep_part, GCancel
   if (keep_part && status == ANT_STOPPED && ant_scan_reach (scan) > ANT_SCAN_NOTHING)
     status = ant_scan_conclude (scan);
   AntScanResults *results = NULL;
-  if (ant_status_to_error (status, _("searching for dips"), error))
+  if (status == ANT_NO_DATA)
+    g_set_error (error, ANT_ERROR, ANT_ERROR_NUMERIC,
+                 _("%s: a part of the record has too few samples left for a noise model once outliers are set aside: expected the level of a source with noise "
+                   "about it, not one that goes its own way (a flare, a night, steps)"), record->path);
+  else if (ant_status_to_error (status, _("searching for dips"), error))
     results = ant_scan_results_new (record, settings, scan);
   ant_scan_free (scan);
   if (results && results->reach == ANT_SCAN_COMPLETE && !go_on (results, keep_part, cancellable, &part, error))
