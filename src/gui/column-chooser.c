@@ -52,6 +52,7 @@ struct _AntColumnChooser
 
   /* Owned */
   AntDesk *desk;
+  AntChoosePurpose purpose;
   char *path, *kind; /* the kind once the file was looked at */
   AntReadingChoices first; /* what to begin with, until then */
   GCancellable *stop;
@@ -344,7 +345,10 @@ accept_cb (AntColumnChooser *self)
     return;
   if (self->kind && gtk_check_button_get_active (self->remember))
     ant_reading_memory_keep (self->kind, &choices);
-  ant_desk_open_as (self->desk, self->path, &choices);
+  if (self->purpose == ANT_CHOOSE_WITNESS)
+    ant_desk_open_witness_as (self->desk, self->path, &choices);
+  else
+    ant_desk_open_as (self->desk, self->path, &choices);
   ant_reading_choices_clear (&choices);
   gtk_window_close (GTK_WINDOW (self));
 }
@@ -398,11 +402,12 @@ ant_column_chooser_init (AntColumnChooser *self)
 }
 
 GtkWidget *
-ant_column_chooser_new (GtkWindow *parent, AntDesk *desk, const char *path, const AntReadingChoices *choices)
+ant_column_chooser_new (GtkWindow *parent, AntDesk *desk, const char *path, const AntReadingChoices *choices, AntChoosePurpose purpose)
 {
   AntColumnChooser *self = g_object_new (ANT_TYPE_COLUMN_CHOOSER, "transient-for", parent, NULL);
   self->desk = g_object_ref (desk);
   self->path = g_strdup (path);
+  self->purpose = purpose;
   g_autofree char *name = g_filename_display_basename (path);
   g_autofree char *title = g_strdup_printf (_("Columns and Times of %s"), name);
   gtk_window_set_title (GTK_WINDOW (self), title);

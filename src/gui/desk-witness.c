@@ -177,8 +177,6 @@ opened_cb (GObject *source, GAsyncResult *result, gpointer data)
       return;
     }
   held->problem = g_strdup (error->message);
-  if (held->fresh)
-    g_ptr_array_remove (self->witnesses, held);
   ant_desk_tell (self, ANT_DESK_WITNESS);
   ant_desk_fail (self, error->message);
 }
@@ -194,27 +192,37 @@ hold (AntDesk *self, const AntWitness *witness, const AntAnalysis *fresh)
 }
 
 void
-ant_desk_open_witness (AntDesk *self, const char *path)
+ant_desk_open_witness_as (AntDesk *self, const char *path, const AntReadingChoices *reading)
 {
+  g_autoptr (AntWitness) witness = ant_witness_new (path, NULL, reading);
   if (!self->layers)
     return;
+  for (guint i = self->witnesses->len; i-- > 0;)
+    if (g_str_equal (held_at (self, i)->witness->path, witness->path))
+      {
+        if (ant_witness_same_file (held_at (self, i)->witness, witness) && !held_at (self, i)->problem)
+          return;
+        ant_desk_close_witness (self, i);
+      }
   if (self->witnesses->len >= ANT_MOST_WITNESSES)
     {
       g_autofree char *sentence = g_strdup_printf (_("%d witnesses are open, more cannot be: close one first"), ANT_MOST_WITNESSES);
       ant_desk_fail (self, sentence);
       return;
     }
+  start (self, hold (self, witness, self->analysis));
+  ant_desk_tell (self, ANT_DESK_WITNESS);
+}
+
+void
+ant_desk_open_witness (AntDesk *self, const char *path)
+{
   g_autoptr (AntFileLook) look = g_file_test (path, G_FILE_TEST_IS_REGULAR) ? ant_file_look_new (path, NULL) : NULL;
   AntReadingChoices reading = { 0 };
   if (look)
     ant_reading_memory_recall (look->kind, &reading);
-  g_autoptr (AntWitness) witness = ant_witness_new (path, NULL, &reading);
+  ant_desk_open_witness_as (self, path, &reading);
   ant_reading_choices_clear (&reading);
-  for (guint i = 0; i < self->witnesses->len; i++)
-    if (ant_witness_same_file (held_at (self, i)->witness, witness))
-      return;
-  start (self, hold (self, witness, self->analysis));
-  ant_desk_tell (self, ANT_DESK_WITNESS);
 }
 
 void

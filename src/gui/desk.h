@@ -190,8 +190,10 @@ void ant_desk_select_sky (AntDesk *self, gsize index); /* brings it into view */
 gsize ant_desk_get_ticks (AntDesk *self, const double **tick_d);
 
 /* Witnesses: other instruments' records beside this one, kept in the analysis. What is opened joins it once it has been read; "failed"
- * if it cannot be. Numbered from 0; strips are NULL until they are made. Borrowed until the next change. */
+ * if it cannot be: then it stays here, with its problem, until it is read in another way or closed. Numbered from 0; strips are NULL until they are made. Borrowed until the next change. */
 void ant_desk_open_witness (AntDesk *self, const char *path);
+/* With these choices about reading; in the place of the same file read in another way. */
+void ant_desk_open_witness_as (AntDesk *self, const char *path, const AntReadingChoices *reading);
 void ant_desk_close_witness (AntDesk *self, guint i);
 guint ant_desk_count_witnesses (AntDesk *self);
 const AntWitness *ant_desk_get_witness (AntDesk *self, guint i); /* NULL: there are not so many */

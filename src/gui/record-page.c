@@ -4,6 +4,7 @@
 #include <glib/gi18n.h>
 
 #include "data/record-words.h"
+#include "gui/column-chooser.h"
 #include "gui/columns.h"
 #include "gui/fact-list.h"
 
@@ -97,23 +98,43 @@ close_witness_cb (GtkButton *button, AntRecordPage *self)
   ant_desk_close_witness (self->desk, GPOINTER_TO_UINT (g_object_get_data (G_OBJECT (button), "witness")));
 }
 
+static void
+choose_witness_cb (GtkButton *button, AntRecordPage *self)
+{
+  const AntWitness *witness = ant_desk_get_witness (self->desk, GPOINTER_TO_UINT (g_object_get_data (G_OBJECT (button), "witness")));
+  GtkRoot *root = gtk_widget_get_root (GTK_WIDGET (self));
+  if (witness)
+    gtk_window_present (GTK_WINDOW (ant_column_chooser_new (GTK_WINDOW (root), self->desk, witness->path, &witness->reading, ANT_CHOOSE_WITNESS)));
+}
+
+/* A flat button of the i-th witness, with a name of its own for those who do not see the row. */
+static GtkWidget *
+witness_button_new (AntRecordPage *self, const char *label, char *what, guint i, void (*clicked) (GtkButton *, AntRecordPage *))
+{
+  g_autofree char *name = what;
+  GtkWidget *button = gtk_button_new_with_label (label);
+  gtk_widget_add_css_class (button, "flat");
+  gtk_widget_add_css_class (button, "small");
+  gtk_accessible_update_property (GTK_ACCESSIBLE (button), GTK_ACCESSIBLE_PROPERTY_LABEL, name, -1);
+  g_object_set_data (G_OBJECT (button), "witness", GUINT_TO_POINTER (i));
+  g_signal_connect (button, "clicked", G_CALLBACK (clicked), self);
+  return button;
+}
+
 static GtkWidget *
 witness_new (AntRecordPage *self, guint i)
 {
   const AntWitnessStrips *strips = ant_desk_get_witness_strips (self->desk, i);
   const char *problem = ant_desk_get_witness_problem (self->desk, i);
   g_autofree char *name = ant_witness_name (ant_desk_get_witness (self->desk, i));
-  g_autofree char *title = g_strdup_printf ("%u · %s", i + 1, name), *what = g_strdup_printf (_("Close witness %s"), name);
+  g_autofree char *title = g_strdup_printf ("%u · %s", i + 1, name);
   GtkWidget *box = gtk_box_new (GTK_ORIENTATION_VERTICAL, 2), *line = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 6);
-  GtkWidget *label = sentence_new (title), *button = gtk_button_new_with_label (_("Close"));
+  GtkWidget *label = sentence_new (title);
   gtk_widget_set_hexpand (label, TRUE);
-  gtk_widget_add_css_class (button, "flat");
-  gtk_widget_add_css_class (button, "small");
-  gtk_accessible_update_property (GTK_ACCESSIBLE (button), GTK_ACCESSIBLE_PROPERTY_LABEL, what, -1);
-  g_object_set_data (G_OBJECT (button), "witness", GUINT_TO_POINTER (i));
-  g_signal_connect (button, "clicked", G_CALLBACK (close_witness_cb), self);
   gtk_box_append (GTK_BOX (line), label);
-  gtk_box_append (GTK_BOX (line), button);
+  gtk_box_append (GTK_BOX (line), witness_button_new (self, _("Choose…"), g_strdup_printf (_("Choose columns of witness %s"), name), i,
+                                                      choose_witness_cb));
+  gtk_box_append (GTK_BOX (line), witness_button_new (self, _("Close"), g_strdup_printf (_("Close witness %s"), name), i, close_witness_cb));
   gtk_box_append (GTK_BOX (box), line);
   g_autoptr (GPtrArray) words = strips ? ant_comparison_words (strips->comparison) : NULL;
   for (guint k = 0; words && k < words->len; k++)

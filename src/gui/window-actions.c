@@ -116,7 +116,7 @@ choose_columns (AntWindow *self, GVariant *parameter)
   const char *refused = ant_desk_get_refused (self->desk), *path = refused ? refused : ant_analysis_get_record_path (analysis);
   const AntReadingChoices none = { 0 };
   GtkWidget *chooser = ant_column_chooser_new (GTK_WINDOW (self), self->desk, path,
-                                               refused ? &none : &ant_analysis_get_treatment (analysis)->reading);
+                                               refused ? &none : &ant_analysis_get_treatment (analysis)->reading, ANT_CHOOSE_RECORD);
   gtk_window_present (GTK_WINDOW (chooser));
 }
 

@@ -52,7 +52,7 @@ a_choice_is_taken_and_kept_for_the_kind (void)
   AntWindow *window = test_gui_window ();
   AntDesk *desk = ant_window_get_desk (window);
   AntReadingChoices none = { 0 };
-  GtkWidget *chooser = ant_column_chooser_new (GTK_WINDOW (window), desk, path, &none);
+  GtkWidget *chooser = ant_column_chooser_new (GTK_WINDOW (window), desk, path, &none, ANT_CHOOSE_RECORD);
   gtk_window_present (GTK_WINDOW (chooser));
   test_gui_wait (can_accept, chooser, 20);
   gtk_drop_down_set_selected (field (chooser, 3, 0), 3); /* found by the reader, JD, tsi, temperature */
@@ -79,7 +79,7 @@ what_cannot_be_read_so_cannot_be_accepted (void)
   char *path = write_record ("third.csv", "JD,a,b\n", 0);
   AntWindow *window = test_gui_window ();
   AntReadingChoices none = { 0 };
-  GtkWidget *chooser = ant_column_chooser_new (GTK_WINDOW (window), ant_window_get_desk (window), path, &none);
+  GtkWidget *chooser = ant_column_chooser_new (GTK_WINDOW (window), ant_window_get_desk (window), path, &none, ANT_CHOOSE_RECORD);
   gtk_window_present (GTK_WINDOW (chooser));
   test_gui_wait (can_accept, chooser, 20);
   gtk_editable_set_text (field (chooser, 1, 0), "no such column");

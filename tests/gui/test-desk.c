@@ -135,6 +135,31 @@ several_witnesses_are_opened_and_undone_one_by_one (void)
   g_unlink (copy);
 }
 
+/* The same file read in another way takes its place. */
+static void
+a_witness_can_be_read_in_another_way (void)
+{
+  g_autoptr (AntDesk) desk = desk_with_record ();
+  g_autofree char *copy = copy_record ();
+  AntReadingChoices reading = { 0 };
+  ant_desk_open_witness (desk, copy);
+  test_gui_wait (has_no_witness_to_read, desk, 20);
+  g_assert_true (ant_reading_choices_parse_columns (&reading, "value=7", NULL)); /* there is none */
+  ant_desk_open_witness_as (desk, copy, &reading);
+  test_gui_wait (has_no_witness_to_read, desk, 20);
+  g_assert_cmpuint (ant_desk_count_witnesses (desk), ==, 1);
+  g_assert_nonnull (ant_desk_get_witness_problem (desk, 0));
+  g_clear_pointer (&reading.value_column, g_free);
+  g_assert_true (ant_reading_choices_parse_columns (&reading, "value=2", NULL));
+  ant_desk_open_witness_as (desk, copy, &reading);
+  test_gui_wait (has_no_witness_to_read, desk, 20);
+  g_assert_cmpuint (ant_desk_count_witnesses (desk), ==, 1);
+  g_assert_nonnull (ant_desk_get_witness_strips (desk, 0));
+  g_assert_cmpstr (ant_desk_get_witness (desk, 0)->reading.value_column, ==, "2");
+  ant_reading_choices_clear (&reading);
+  g_unlink (copy);
+}
+
 static gboolean
 is_saved (gpointer desk)
 {
@@ -197,8 +222,10 @@ what_is_no_witness_is_told (void)
   g_signal_connect (desk, "failed", G_CALLBACK (failed_cb), &said);
   ant_desk_open_witness (desk, "/nowhere/record.csv");
   test_gui_wait (has_no_witness_to_read, desk, 20);
-  g_assert_cmpuint (ant_desk_count_witnesses (desk), ==, 0);
+  g_assert_nonnull (ant_desk_get_witness_problem (desk, 0));
   g_assert_null (ant_analysis_undo_name (ant_desk_get_analysis (desk)));
+  ant_desk_close_witness (desk, 0);
+  g_assert_cmpuint (ant_desk_count_witnesses (desk), ==, 0);
   g_assert_nonnull (said);
   g_assert_nonnull (strstr (said, "the witness: "));
 }
@@ -347,6 +374,7 @@ add (void)
                    a_span_grows_by_keys_about_the_middle_of_the_view);
   g_test_add_func ("/gui/desk/a-witness-is-compared-until-it-is-closed", a_witness_is_compared_until_it_is_closed);
   g_test_add_func ("/gui/desk/several-witnesses-are-opened-and-undone-one-by-one", several_witnesses_are_opened_and_undone_one_by_one);
+  g_test_add_func ("/gui/desk/a-witness-can-be-read-in-another-way", a_witness_can_be_read_in_another_way);
   g_test_add_func ("/gui/desk/witnesses-come-back-with-the-analysis", witnesses_come_back_with_the_analysis);
   g_test_add_func ("/gui/desk/a-further-column-is-shown-while-there-is-one", a_further_column_is_shown_while_there_is_one);
   g_test_add_func ("/gui/desk/undoing-a-choice-reads-the-record-again", undoing_a_choice_reads_the_record_again);
