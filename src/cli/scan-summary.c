@@ -113,10 +113,21 @@ ant_scan_summary_print (const AntScanResults *results)
 }
 
 void
-ant_scan_summary_print_asked (const AntRecord *record, const AntDip *dip, double upper_limit_ppm)
+ant_scan_summary_print_asked (const AntRecord *record, const AntDip *dip, double upper_limit_ppm, const AntVerdict *verdict)
 {
   g_autofree char *middle = middle_text (record, dip->mid_d);
   g_print (_("Asked dip at %s, %.2f h: depth %.1f ± %.1f ppm, SNR %.2f; deeper than %.1f ppm is excluded at 95 %%; %.0f %% observed, edges seen: %s.\n"),
            middle, dip->duration_d * ANT_HOURS_PER_DAY, dip->depth_ppm, dip->depth_sigma_ppm, dip->snr, upper_limit_ppm,
            100 * dip->coverage, ant_edges_text (dip->edges));
+  g_autofree char *likely = ant_probability_words (ant_verdict_probability (verdict));
+  g_autofree char *shape = ant_probability_words (ant_verdict_shape_probability (verdict));
+  g_print (_("Taken for %s, %s; by shape alone %s, %s.\n"), ant_dip_class_title (ant_cause_class (verdict->cause)), likely,
+           ant_dip_class_title (ant_cause_class (verdict->shape)), shape);
+  g_autoptr (GPtrArray) lines = ant_verdict_lines (verdict);
+  for (guint i = 0; i < lines->len; i++)
+    {
+      const AntEvidenceLine *line = g_ptr_array_index (lines, i);
+      g_autofree char *weight = ant_weight_words (line->weight);
+      g_print ("%7s  %s\n", weight, line->text);
+    }
 }

@@ -4,4 +4,4 @@
 #include "data/scan-results.h"
 
 void ant_scan_summary_print (const AntScanResults *results);
-void ant_scan_summary_print_asked (const AntRecord *record, const AntDip *dip, double upper_limit_ppm);
+void ant_scan_summary_print_asked (const AntRecord *record, const AntDip *dip, double upper_limit_ppm, const AntVerdict *verdict);

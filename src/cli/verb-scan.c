@@ -153,19 +153,24 @@ search (const Options *options, AntAnalysis *analysis, AntRecord *record, const 
 static const char *const asked_names[] = { "dips.csv", NULL };
 
 static gboolean
-ask (const Options *options, AntRecord *record, const GPtrArray *witnesses, const AntSettings *settings, AntOutputDir *dir, GError **error)
+ask (const Options *options, const AntAnalysis *analysis, AntRecord *record, const GPtrArray *witnesses, const AntSettings *settings,
+     AntOutputDir *dir, GCancellable *stop, GError **error)
 {
+  const char *who = ant_analysis_get_treatment (analysis)->observer;
+  g_autoptr (AntObserverChoice) observer = who ? ant_observer_open (who, error) : NULL;
   AntDip dip;
+  AntVerdict verdict;
   double at_d, upper_limit_ppm;
-  if (!ant_time_reference_parse (&record->time, options->at, &at_d, error)
-      || !ant_scan_job_ask (record, settings, at_d, options->hours / 24, &dip, &upper_limit_ppm, error))
+  if ((who && !observer) || !ant_time_reference_parse (&record->time, options->at, &at_d, error)
+      || !ant_scan_job_ask (record, settings, at_d, options->hours / 24, &dip, &upper_limit_ppm, &verdict, error)
+      || !ant_outside_job_ask (record, settings, observer, witnesses, &dip, &verdict, stop, error))
     return FALSE;
-  AntDipList list = { .n = 1, .dip = &dip, .limb_u1 = settings->bank.limb_darkening.u1, .threshold_snr = NAN,
+  AntDipList list = { .n = 1, .dip = &dip, .verdict = &verdict, .limb_u1 = settings->bank.limb_darkening.u1, .threshold_snr = NAN,
                       .limb_u2 = settings->bank.limb_darkening.u2, .false_alarms = NAN, .upper_limit_ppm = &upper_limit_ppm };
   g_autoptr (GString) text = dir ? ant_dip_table_text (record, &list) : NULL;
   if (dir && !(ant_output_dir_add (dir, asked_names[0], text->str, text->len, error) && ant_output_dir_commit (dir, error)))
     return FALSE;
-  ant_scan_summary_print_asked (record, &dip, upper_limit_ppm);
+  ant_scan_summary_print_asked (record, &dip, upper_limit_ppm, &verdict);
   ant_witnesses_print_dip (witnesses, settings, &dip);
   return TRUE;
 }
@@ -196,7 +201,7 @@ run (const Options *options, const char *path)
   if (options->out)
     dir = ant_output_dir_open (options->out, (const char *const *) names, options->force, &error);
   gboolean good = (dir || !options->out) && try_save (options, &error)
-                  && (options->at ? ask (options, record, witnesses, &settings, dir, &error)
+                  && (options->at ? ask (options, analysis, record, witnesses, &settings, dir, stop, &error)
                                   : search (options, analysis, record, witnesses, &settings, dir, stop, &error));
   return good ? ANT_EXIT_DONE : ant_cli_fail (error);
 }

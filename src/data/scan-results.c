@@ -300,22 +300,28 @@ ant_scan_results_unref (AntScanResults *results)
 }
 
 AntVerdictInput
-ant_scan_results_verdict_input (const AntScanResults *results)
+ant_verdict_input_of (const AntRecord *record, const AntSettings *settings)
 {
-  const AntSettings *settings = &results->settings;
   return (AntVerdictInput) {
-    .series = &results->record->series,
-    .exposure_d = results->record->exposure_d,
+    .series = &record->series,
+    .exposure_d = record->exposure_d,
     .limb_darkening = settings->bank.limb_darkening,
-    .n_chunks = results->n_chunks,
-    .chunk = results->chunk,
-    .n_dips = results->n_dips,
-    .n_brightenings = results->n_brightenings,
-    .dip = results->dip,
-    .brightening = results->brightening,
     .line_period_d = settings->line_period_h / ANT_HOURS_PER_DAY,
     .options = { .target_star = settings->target == ANT_TARGET_STAR, .rates = settings->rates },
   };
+}
+
+AntVerdictInput
+ant_scan_results_verdict_input (const AntScanResults *results)
+{
+  AntVerdictInput input = ant_verdict_input_of (results->record, &results->settings);
+  input.n_chunks = results->n_chunks;
+  input.chunk = results->chunk;
+  input.n_dips = results->n_dips;
+  input.n_brightenings = results->n_brightenings;
+  input.dip = results->dip;
+  input.brightening = results->brightening;
+  return input;
 }
 
 void

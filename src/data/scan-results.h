@@ -52,6 +52,8 @@ G_DEFINE_AUTOPTR_CLEANUP_FUNC (AntScanResults, ant_scan_results_unref)
 
 /* Results that were read from a file get their record, once. FALSE if they do not fit it; they are as they were then. */
 gboolean ant_scan_results_join (AntScanResults *results, AntRecord *record);
+/* What verdicts on a record's events need to know besides these and their chunks; borrows from it. */
+AntVerdictInput ant_verdict_input_of (const AntRecord *record, const AntSettings *settings);
 /* What verdicts on these results need to know; borrows from them. */
 AntVerdictInput ant_scan_results_verdict_input (const AntScanResults *results);
 /* Copies the verdicts of a work that has run to its end: once, before the results are shared. */

@@ -211,6 +211,8 @@ sentence (const AntEvidence *evidence)
   switch (evidence->kind)
     {
     case ANT_EVIDENCE_CHANCE:
+      if (isnan (number[0])) /* asked about: there was no search that chance could have helped */
+        return NULL;
       {
         g_autofree char *expected = ant_chance_words (number[0]);
         return g_strdup_printf (_("Noise alone would show %s dips as strong in this record"), expected);

@@ -249,6 +249,7 @@ asked_cb (GObject *source, GAsyncResult *result, gpointer data)
     {
       g_autoptr (AntDipItem) item
           = ant_dip_item_new (ANT_KIND_ASKED, next_asked_number (self), &asked->dip, asked->upper_limit_ppm);
+      ant_dip_item_set_verdict (item, &asked->verdict);
       judge_item (self, item);
       g_list_store_append (self->items, item);
       self->shown = self->shown == ANT_KIND_PASSAGE ? ANT_KIND_DIP | ANT_KIND_ASKED : self->shown | ANT_KIND_ASKED;
@@ -268,7 +269,10 @@ ant_desk_ask (AntDesk *self, double from_d, double to_d)
   if (!self->layers || !(to_d > from_d))
     return;
   GCancellable *stop = ant_desk_begin (self, ANT_BUSY_ASKING);
-  ant_ask_task_async (self->layers, ant_desk_get_settings (self), (from_d + to_d) / 2, to_d - from_d, stop, asked_cb,
-                      g_object_ref (self));
+  g_autoptr (AntTreatment) treatment = ant_treatment_copy (ant_analysis_get_treatment (self->analysis));
+  g_autoptr (GPtrArray) comparisons = ant_desk_get_comparisons (self);
+  ant_desk_name_compared (self, treatment);
+  ant_ask_task_async (self->layers, &treatment->settings, treatment->observer ? self->observer : NULL, treatment->witnesses, comparisons,
+                      (from_d + to_d) / 2, to_d - from_d, stop, asked_cb, g_object_ref (self));
   ant_desk_tell (self, ANT_DESK_BUSY);
 }

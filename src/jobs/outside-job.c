@@ -74,20 +74,39 @@ add_witnesses (const GPtrArray *witnesses, const AntSettings *settings, const An
   ant_verdict_add (verdict, &evidence);
 }
 
-static void
-judge_again (AntScanResults *results, const Almanac *almanac, const GPtrArray *witnesses, gsize n, const AntDip *dip, AntVerdict *verdict)
+/* What is asked, and under which settings the answers count. */
+typedef struct
 {
-  AntVerdictInput input = ant_scan_results_verdict_input (results);
+  Almanac almanac;
+  const GPtrArray *witnesses; /* of AntComparison; NULL: none */
+  const AntSettings *settings;
+  AntVerdictOptions options;
+} Outside;
+
+static gboolean
+outside_init (Outside *outside, AntRecord *record, const AntSettings *settings, const AntObserverChoice *observer,
+              const GPtrArray *witnesses, GCancellable *cancellable, GError **error)
+{
   AntSurroundings around;
-  ant_surroundings_measure (input.series, &around);
-  input.options.observed_d = around.observed_d;
-  for (gsize i = 0; i < n; i++)
+  ant_surroundings_measure (&record->series, &around);
+  *outside = (Outside) { .almanac = { observer, NULL }, .witnesses = witnesses, .settings = settings,
+                         .options = ant_verdict_input_of (record, settings).options };
+  outside->options.observed_d = around.observed_d;
+  if (observer)
+    outside->almanac.sightings = ant_sky_job_sightings (record, observer, settings, cancellable, error);
+  return !observer || outside->almanac.sightings;
+}
+
+static void
+judge_again (const Outside *outside, gsize n, const AntDip *dip, AntVerdict *verdict)
+{
+  for (gsize i = 0; i < n && verdict; i++)
     {
-      if (almanac->sightings && !input.options.target_star && verdict[i].sign > 0)
-        add_predictions (almanac, &input.options.rates, &dip[i], &verdict[i]);
-      if (witnesses && witnesses->len)
-        add_witnesses (witnesses, &results->settings, &dip[i], &verdict[i]);
-      ant_verdict_decide (&verdict[i], &dip[i], &input.options);
+      if (outside->almanac.sightings && !outside->options.target_star && verdict[i].sign > 0)
+        add_predictions (&outside->almanac, &outside->options.rates, &dip[i], &verdict[i]);
+      if (outside->witnesses && outside->witnesses->len)
+        add_witnesses (outside->witnesses, outside->settings, &dip[i], &verdict[i]);
+      ant_verdict_decide (&verdict[i], &dip[i], &outside->options);
     }
 }
 
@@ -95,16 +114,25 @@ gboolean
 ant_outside_job_run (AntScanResults *results, const AntObserverChoice *observer, const GPtrArray *witnesses, GCancellable *cancellable,
                      GError **error)
 {
-  g_autoptr (GArray) sightings = NULL;
+  Outside outside;
   if (!results->dip_verdict && !results->brightening_verdict)
     return TRUE;
-  if (observer)
-    sightings = ant_sky_job_sightings (results->record, observer, &results->settings, cancellable, error);
-  if (observer && !sightings)
+  if (!outside_init (&outside, results->record, &results->settings, observer, witnesses, cancellable, error))
     return FALSE;
-  Almanac almanac = { observer, sightings };
-  judge_again (results, &almanac, witnesses, results->dip_verdict ? results->n_dips : 0, results->dip, results->dip_verdict);
-  judge_again (results, &almanac, witnesses, results->brightening_verdict ? results->n_brightenings : 0, results->brightening,
-               results->brightening_verdict);
+  judge_again (&outside, results->n_dips, results->dip, results->dip_verdict);
+  judge_again (&outside, results->n_brightenings, results->brightening, results->brightening_verdict);
+  g_clear_pointer (&outside.almanac.sightings, g_array_unref);
+  return TRUE;
+}
+
+gboolean
+ant_outside_job_ask (AntRecord *record, const AntSettings *settings, const AntObserverChoice *observer, const GPtrArray *witnesses,
+                     const AntDip *dip, AntVerdict *verdict, GCancellable *cancellable, GError **error)
+{
+  Outside outside;
+  if (!outside_init (&outside, record, settings, observer, witnesses, cancellable, error))
+    return FALSE;
+  judge_again (&outside, 1, dip, verdict);
+  g_clear_pointer (&outside.almanac.sightings, g_array_unref);
   return TRUE;
 }

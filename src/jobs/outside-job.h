@@ -12,3 +12,7 @@
  * a record whose times have no known origin among them. */
 gboolean ant_outside_job_run (AntScanResults *results, const AntObserverChoice *observer, const GPtrArray *witnesses,
                               GCancellable *cancellable, GError **error);
+/* The same of one dip of a record that was asked about. */
+gboolean ant_outside_job_ask (AntRecord *record, const AntSettings *settings, const AntObserverChoice *observer,
+                              const GPtrArray *witnesses, const AntDip *dip, AntVerdict *verdict, GCancellable *cancellable,
+                              GError **error);

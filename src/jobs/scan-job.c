@@ -95,12 +95,12 @@ tell_outside (const AntRecord *record, double mid_d, GError **error)
 
 gboolean
 ant_scan_job_ask (AntRecord *record, const AntSettings *settings, double mid_d, double duration_d, AntDip *dip,
-                  double *upper_limit_ppm, GError **error)
+                  double *upper_limit_ppm, AntVerdict *verdict, GError **error)
 {
   AntScanOptions options = ant_scan_results_options (record, settings);
-  AntStatus status = ant_scan_asked (&record->series, &options, mid_d - ant_record_slip (record, mid_d), duration_d, dip);
-  if (record->slip_d)
-    dip->mid_d = mid_d;
+  g_autofree AntAskedScene *scene = verdict ? g_new0 (AntAskedScene, 1) : NULL;
+  double grid_d = mid_d - ant_record_slip (record, mid_d); /* where the grid has what was stamped so */
+  AntStatus status = ant_scan_asked_scene (&record->series, &options, grid_d, duration_d, dip, scene);
   *upper_limit_ppm = fmax (0, dip->depth_ppm) + ONE_SIDED_95 * dip->depth_sigma_ppm;
   if (status == ANT_BAD_ARGUMENT && duration_d > 0)
     {
@@ -113,5 +113,9 @@ ant_scan_job_ask (AntRecord *record, const AntSettings *settings, double mid_d, 
                    _("the asked dip is not observed: less than %.0f %% of it has data"), 100 * options.least_coverage);
       return FALSE;
     }
-  return ant_status_to_error (status, _("measuring the asked dip"), error);
+  gboolean good = ant_status_to_error (status, _("measuring the asked dip"), error)
+                  && (!verdict || ant_verdict_job_ask (record, settings, dip, scene, verdict, error));
+  if (record->slip_d)
+    dip->mid_d = mid_d;
+  return good;
 }

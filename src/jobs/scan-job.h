@@ -16,6 +16,7 @@ AntScanResults *ant_scan_job_run (AntRecord *record, const AntSettings *settings
  * G_IO_ERROR_CANCELLED only if that is nothing. */
 AntScanResults *ant_scan_job_run_partly (AntRecord *record, const AntSettings *settings, GCancellable *cancellable,
                                          AntProgressFunc progress, gpointer data, GError **error);
-/* Measure one asked dip: middle and length. upper_limit_ppm: one-sided 95 % limit of its depth, never below 0. */
+/* Measure one asked dip: middle and length. upper_limit_ppm: one-sided 95 % limit of its depth, never below 0. verdict: what it
+ * is, target and rates as set; NULL: not judged. */
 gboolean ant_scan_job_ask (AntRecord *record, const AntSettings *settings, double mid_d, double duration_d, AntDip *dip,
-                           double *upper_limit_ppm, GError **error);
+                           double *upper_limit_ppm, AntVerdict *verdict, GError **error);

@@ -104,12 +104,10 @@ ref_comparison (gconstpointer comparison, gpointer unused)
   return ant_comparison_ref ((AntComparison *) (gsize) comparison);
 }
 
-void
-ant_scan_task_async (AntLayers *layers, const AntSettings *settings, AntObserverChoice *choice, const GPtrArray *witnesses,
-                     const GPtrArray *comparisons, GCancellable *cancellable, AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data)
+/* Who took the record, and what other instruments have of it. */
+static void
+take_outside (Order *order, AntObserverChoice *choice, const GPtrArray *witnesses, const GPtrArray *comparisons)
 {
-  GTask *task = g_task_new (NULL, cancellable, callback, data);
-  Order *order = order_new (layers, settings);
   order->choice = choice ? ant_observer_choice_ref (choice) : NULL;
   if (comparisons)
     {
@@ -118,6 +116,15 @@ ant_scan_task_async (AntLayers *layers, const AntSettings *settings, AntObserver
       order->comparisons = g_ptr_array_copy ((GPtrArray *) (gsize) comparisons, (GCopyFunc) ref_comparison, NULL);
       g_ptr_array_set_free_func (order->comparisons, (GDestroyNotify) ant_comparison_unref);
     }
+}
+
+void
+ant_scan_task_async (AntLayers *layers, const AntSettings *settings, AntObserverChoice *choice, const GPtrArray *witnesses,
+                     const GPtrArray *comparisons, GCancellable *cancellable, AntTaskProgressFunc progress, GAsyncReadyCallback callback, gpointer data)
+{
+  GTask *task = g_task_new (NULL, cancellable, callback, data);
+  Order *order = order_new (layers, settings);
+  take_outside (order, choice, witnesses, comparisons);
   g_task_set_source_tag (task, ant_scan_task_async);
   g_task_set_check_cancellable (task, FALSE); /* a stopped scan has results too */
   order->relay = ant_progress_relay_new (task, progress, data);
@@ -139,7 +146,10 @@ run_ask (gpointer data)
   GError *error = NULL;
   g_autofree AntAskedDip *asked = g_new0 (AntAskedDip, 1);
   if (ant_scan_job_ask (order->layers->record, &order->settings, order->mid_d, order->duration_d, &asked->dip,
-                        &asked->upper_limit_ppm, &error))
+                        &asked->upper_limit_ppm, &asked->verdict, &error)
+      && compare_anew (order, NULL, &error)
+      && ant_outside_job_ask (order->layers->record, &order->settings, order->choice, order->comparisons, &asked->dip, &asked->verdict,
+                              NULL, &error))
     g_task_return_pointer (task, g_steal_pointer (&asked), g_free);
   else
     g_task_return_error (task, error);
@@ -147,12 +157,13 @@ run_ask (gpointer data)
 }
 
 void
-ant_ask_task_async (AntLayers *layers, const AntSettings *settings, double mid_d, double duration_d,
-                    GCancellable *cancellable, GAsyncReadyCallback callback, gpointer data)
+ant_ask_task_async (AntLayers *layers, const AntSettings *settings, AntObserverChoice *choice, const GPtrArray *witnesses,
+                    const GPtrArray *comparisons, double mid_d, double duration_d, GCancellable *cancellable, GAsyncReadyCallback callback, gpointer data)
 {
   GTask *task = g_task_new (NULL, cancellable, callback, data);
   Order *order = order_new (layers, settings);
   g_task_set_source_tag (task, ant_ask_task_async);
+  take_outside (order, choice, witnesses, comparisons);
   order->mid_d = mid_d;
   order->duration_d = duration_d;
   g_task_set_task_data (task, order, order_free);

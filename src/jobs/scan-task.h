@@ -31,10 +31,12 @@ typedef struct
 {
   AntDip dip;
   double upper_limit_ppm; /* one-sided 95 % limit of its depth */
+  AntVerdict verdict;
 } AntAskedDip;
 
-/* Measure the dip that would stand at mid_d for duration_d, contact I to IV. */
-void ant_ask_task_async (AntLayers *layers, const AntSettings *settings, double mid_d, double duration_d,
+/* Measure the dip that would stand at mid_d for duration_d, contact I to IV, and judge it. The rest as for a scan. */
+void ant_ask_task_async (AntLayers *layers, const AntSettings *settings, AntObserverChoice *choice, const GPtrArray *witnesses,
+                         const GPtrArray *comparisons, double mid_d, double duration_d,
                          GCancellable *cancellable, GAsyncReadyCallback callback, gpointer data);
 /* NULL with one sentence; else the caller frees by g_free. */
 AntAskedDip *ant_ask_task_finish (GAsyncResult *result, GError **error);

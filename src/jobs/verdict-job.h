@@ -12,3 +12,6 @@
  * G_IO_ERROR_CANCELLED if stopped, the results then being as they were. */
 gboolean ant_verdict_job_run (AntScanResults *results, GCancellable *cancellable, AntProgressFunc progress, gpointer data,
                               GError **error);
+/* Judge one dip that was asked about, under what it was measured in. Blocks. FALSE with one sentence. */
+gboolean ant_verdict_job_ask (AntRecord *record, const AntSettings *settings, const AntDip *dip, const AntAskedScene *scene,
+                              AntVerdict *verdict, GError **error);

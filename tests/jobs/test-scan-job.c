@@ -204,13 +204,13 @@ an_asked_dip_has_a_limit_above_its_depth (Fixture *f, gconstpointer data)
   AntDip dip;
   double limit_ppm;
   g_autoptr (GError) error = NULL;
-  g_assert_true (ant_scan_job_ask (f->record, &f->settings, planted.mid_d, planted.t14_h / 24, &dip, &limit_ppm, &error));
+  g_assert_true (ant_scan_job_ask (f->record, &f->settings, planted.mid_d, planted.t14_h / 24, &dip, &limit_ppm, NULL, &error));
   g_assert_no_error (error);
   g_assert_cmpfloat_with_epsilon (dip.depth_ppm, planted.depth_ppm, 3 * dip.depth_sigma_ppm);
   g_assert_cmpfloat_with_epsilon ((limit_ppm - dip.depth_ppm) / dip.depth_sigma_ppm, 1.644854, 1e-6);
   /* Where a brightening is measured the limit is that of no dip at all. */
   for (double mid_d = 40; mid_d < 60; mid_d += 0.5)
-    if (ant_scan_job_ask (f->record, &f->settings, mid_d, 0.3, &dip, &limit_ppm, NULL) && dip.depth_ppm < 0)
+    if (ant_scan_job_ask (f->record, &f->settings, mid_d, 0.3, &dip, &limit_ppm, NULL, NULL) && dip.depth_ppm < 0)
       {
         g_assert_cmpfloat_with_epsilon (limit_ppm / dip.depth_sigma_ppm, 1.644854, 1e-6);
         return;
@@ -224,7 +224,7 @@ an_asked_dip_outside_the_data_is_refused (Fixture *f, gconstpointer data)
   AntDip dip;
   double limit_ppm;
   g_autoptr (GError) error = NULL;
-  g_assert_false (ant_scan_job_ask (f->record, &f->settings, DAYS + 10, 0.3, &dip, &limit_ppm, &error));
+  g_assert_false (ant_scan_job_ask (f->record, &f->settings, DAYS + 10, 0.3, &dip, &limit_ppm, NULL, &error));
   g_assert_nonnull (error);
 }
 
