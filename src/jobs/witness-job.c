@@ -6,7 +6,8 @@
 #include <string.h>
 
 #include "jobs/record-open.h"
-#include "jobs/scan-job.h"
+#include "data/scan-results.h"
+#include "search/crossing-shape.h"
 
 #define COLUMNS_MARK "::"
 
@@ -37,16 +38,41 @@ ant_witness_job_open (AntRecord *record, const AntWitness *witness, const AntSet
   return ant_comparison_new (record, read, settings->witness_drift_d, error);
 }
 
+/* The shape that was fitted to a dip, as the witness would average it: places of its series, from *first on. Caller frees. */
+static double *
+shape_for (const AntRecord *witness, const AntSettings *settings, const AntDip *dip, double mid_d, ptrdiff_t *first, gsize *n)
+{
+  AntCrossingShape shape;
+  double reach_d = 0.5 * (dip->duration_d + witness->exposure_d);
+  ant_crossing_shape_init (&shape, dip->duration_d, fmin (dip->edge_d, 0.5 * dip->duration_d), ANT_SHAPE_IMPACT, settings->bank.limb_darkening);
+  *first = (ptrdiff_t) ceil (ant_series_place (&witness->series, mid_d - reach_d));
+  ptrdiff_t last = (ptrdiff_t) floor (ant_series_place (&witness->series, mid_d + reach_d));
+  *n = last >= *first ? (gsize) (last - *first) + 1 : 0;
+  double *loss = g_new (double, *n + 1);
+  for (gsize i = 0; i < *n; i++)
+    loss[i] = ant_crossing_shape_mean (&shape, ant_series_time (&witness->series, (double) (*first + (ptrdiff_t) i)) - mid_d, witness->exposure_d);
+  return loss;
+}
+
 void
 ant_witness_job_fact (const AntComparison *comparison, const AntSettings *settings, const AntDip *dip, AntWitnessFact *fact)
 {
-  AntDip seen;
-  double limit_ppm, sigma;
+  const AntRecord *witness = comparison->witness;
+  AntScanOptions options = ant_scan_results_options (witness, settings);
+  AntAmplitude seen;
+  double sigma;
+  ptrdiff_t first;
+  gsize n;
+  g_autofree double *loss = shape_for (witness, settings, dip, dip->mid_d - comparison->shift_d, &first, &n);
   *fact = (AntWitnessFact){ .depth_ppm = (double) NAN, .sigma_ppm = (double) NAN };
   fact->correlation = ant_comparison_correlation (comparison, dip->duration_d, &sigma);
-  if (!ant_scan_job_ask (comparison->witness, settings, dip->mid_d - comparison->shift_d, dip->duration_d, &seen, &limit_ppm, NULL))
+  if (n == 0 || ant_scan_asked_shape (&witness->series, &options, first, n, loss, &seen))
     return;
   fact->looking = 1;
   fact->depth_ppm = seen.depth_ppm;
-  fact->sigma_ppm = seen.depth_sigma_ppm;
+  fact->sigma_ppm = seen.sigma_ppm;
+  /* What one of them did not see of the dip is no part of what they share. */
+  double less = fmin (seen.coverage, dip->coverage), more = fmax (seen.coverage, dip->coverage);
+  if (more > 0 && less >= 0)
+    fact->correlation *= sqrt (less / more);
 }

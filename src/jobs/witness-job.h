@@ -11,6 +11,6 @@ AntWitness *ant_witness_parse (const char *text, GError **error);
  * is not taken), compare. Seconds for a long one: off the main loop. NULL with one sentence. */
 AntComparison *ant_witness_job_open (AntRecord *record, const AntWitness *witness, const AntSettings *settings,
                                      GCancellable *cancellable, GError **error);
-/* What the witness shows at the time of a dip of the record, measured with the dip's length under the witness's own noise, and
+/* What the witness shows at the time of a dip of the record, measured with the dip's fitted shape under the witness's own noise, and
  * how much of the two noises is one. Not looking where less than the least coverage is observed. */
 void ant_witness_job_fact (const AntComparison *comparison, const AntSettings *settings, const AntDip *dip, AntWitnessFact *fact);

@@ -8,6 +8,7 @@
 #define NEVER (-40.0)
 #define ECLIPSE_TOLERANCE_D (1 / ANT_HOURS_PER_DAY)
 #define PREDICTED_SPREAD 0.05 /* of depth and length of a predicted crossing, in ln */
+#define DEPTH_SPREAD 0.1      /* of one event's depth in two instruments: shapes and noise models are fitted apart */
 #define BAND_SPREAD 1.0       /* of the ratio that an instrument's fault may have, in ln */
 #define SPOT_BAND_SPREAD 0.7
 #define COLUMN_SHARE 0.3      /* of the instrument's faults show in housekeeping */
@@ -106,9 +107,10 @@ ant_evidence_witness (const AntWitnessFact *fact, const AntDip *dip, AntEvidence
     return;
   double own = dip->depth_sigma_ppm, other = fact->sigma_ppm, rho = fmax (-0.99, fmin (fact->correlation, 0.99));
   double shared = rho * other / own * dip->depth_ppm; /* what a chance excursion of the Sun leaves in the witness */
-  double both = sqrt (fmax (own * own + other * other - 2 * rho * own * other, 1e-4 * other * other));
+  double spread = DEPTH_SPREAD * dip->depth_ppm;
+  double both = sqrt (fmax (own * own + other * other - 2 * rho * own * other, 1e-4 * other * other) + spread * spread);
   double seen = log_normal (fact->depth_ppm - dip->depth_ppm, both);
-  double chance = log_normal (fact->depth_ppm - shared, other * sqrt (1 - rho * rho));
+  double chance = log_normal (fact->depth_ppm - shared, hypot (other * sqrt (1 - rho * rho), spread));
   double alone = log_normal (fact->depth_ppm, other);
   evidence->number[0] = fact->depth_ppm;
   evidence->number[1] = other;
@@ -132,7 +134,7 @@ ant_evidence_bands (const AntBandFact *fact, double radius_ratio, double impact,
   evidence->number[0] = a / b;
   evidence->number[1] = a / b * relative;
   evidence->number[2] = expected;
-  double crossing = log_normal (off, hypot (relative, 0.01));
+  double crossing = log_normal (off, hypot (relative, 0.02));
   for (int cause = 0; cause < ANT_N_CAUSES; cause++)
     evidence->weight[cause] = log_normal (log (a / b), hypot (relative, BAND_SPREAD));
   evidence->weight[ANT_CAUSE_SPOT] = log_normal (log (a / b), hypot (relative, SPOT_BAND_SPREAD));
