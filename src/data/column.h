@@ -19,4 +19,8 @@ AntColumn *ant_column_new (const char *name, const char *unit, float *value, gsi
 char *ant_column_title (const AntColumn *column);
 /* "temperature, K, 120 of 4320 missing". Caller frees. */
 char *ant_column_words (const AntColumn *column, gsize n_rows);
+/* The wavelength that a name tells of a band ("irradiance 500 nm", "red_0.86um"), nm; NaN where it tells none. */
+double ant_column_wavelength_nm (const char *name);
+/* It names an error, a count, a flag or a time rather than a quantity that could move with an event. */
+gboolean ant_column_is_bookkeeping (const char *name);
 void ant_column_free (AntColumn *column); /* NULL is fine */
