@@ -88,6 +88,28 @@ scan_of (const AntSeries *part, const AntScanOptions *options, AntStatus *status
 AntStatus
 ant_scan_asked (const AntSeries *series, const AntScanOptions *options, double mid_d, double duration_d, AntDip *dip)
 {
+  return ant_scan_asked_scene (series, options, mid_d, duration_d, dip, NULL);
+}
+
+static void
+tell_scene (const AntScan *scan, const AntSeries *series, const AntSeries *part, AntAskedScene *scene)
+{
+  const AntChunkHarvest *harvest = &scan->harvest[0];
+  scene->chunk = scan->chunk[0];
+  scene->chunk.first = (size_t) lround (ant_series_place (series, part->start_d));
+  scene->chunk.frequency_cd = scene->chunk.power_unmasked = NULL; /* the scan's own */
+  scene->chunk.n_bins = 0;
+  scene->chunk.stop = NULL;
+  scene->n_others = 0;
+  for (size_t i = 0; i < harvest->n_events && scene->n_others < ANT_ASKED_OTHERS; i++)
+    if (harvest->event[i].strong)
+      ant_shape_fit_to_dip (&harvest->event[i].fit, &scan->refine, part->start_d, &scene->other[scene->n_others++]);
+}
+
+AntStatus
+ant_scan_asked_scene (const AntSeries *series, const AntScanOptions *options, double mid_d, double duration_d, AntDip *dip,
+                      AntAskedScene *scene)
+{
   AntStatus status;
   AntWhitener *whitener = NULL;
   AntSeries part = stretch (series, options, mid_d);
@@ -111,6 +133,8 @@ ant_scan_asked (const AntSeries *series, const AntScanOptions *options, double m
     ant_shape_fit_to_dip (&fit, &scan->refine, part.start_d, dip);
   dip->first_snr = dip->snr;
   dip->expected_false = NAN;
+  if (!status && scene)
+    tell_scene (scan, series, &part, scene);
   ant_whitener_free (whitener);
   free (z);
   ant_scan_free (scan);

@@ -82,6 +82,20 @@ const float *ant_scan_slow (const AntScan *scan);
 AntStatus ant_scan_asked (const AntSeries *series, const AntScanOptions *options, double mid_d, double duration_d,
                           AntDip *dip);
 
+#define ANT_ASKED_OTHERS 64
+
+/* Under what an asked dip was measured: the chunk centred on it (no spectrum, no floor), and the strong events around it that were taken
+ * out, of both signs. */
+typedef struct
+{
+  AntChunk chunk;
+  size_t n_others;
+  AntDip other[ANT_ASKED_OTHERS];
+} AntAskedScene;
+/* The same, telling that too; scene NULL: not. */
+AntStatus ant_scan_asked_scene (const AntSeries *series, const AntScanOptions *options, double mid_d, double duration_d,
+                                AntDip *dip, AntAskedScene *scene);
+
 typedef struct
 {
   double depth_ppm, sigma_ppm, snr;

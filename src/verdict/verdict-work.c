@@ -31,6 +31,15 @@ event_of (const AntVerdictWork *work, size_t i)
 
 static size_t n_events (const AntVerdictWork *work) { return work->input.n_dips + work->input.n_brightenings; }
 
+/* All that is known, judged or not: event_of's first. */
+static size_t n_known (const AntVerdictWork *work) { return n_events (work) + work->input.n_others; }
+
+static const AntDip *
+known (const AntVerdictWork *work, size_t i)
+{
+  return i < n_events (work) ? event_of (work, i) : &work->input.other[i - n_events (work)];
+}
+
 AntVerdictWork *
 ant_verdict_work_new (const AntVerdictInput *input, AntStatus *status)
 {
@@ -65,9 +74,9 @@ ant_verdict_work_free (AntVerdictWork *work)
 static void
 mask_events (const AntVerdictWork *work, size_t first, size_t n, uint8_t *spike)
 {
-  for (size_t i = 0; i < n_events (work); i++)
+  for (size_t i = 0; i < n_known (work); i++)
     {
-      const AntDip *dip = event_of (work, i);
+      const AntDip *dip = known (work, i);
       double half_d = (0.5 + MASK_MARGIN) * dip->duration_d;
       double from = ceil (ant_series_place (work->input.series, dip->mid_d - half_d)) - (double) first;
       double to = floor (ant_series_place (work->input.series, dip->mid_d + half_d)) - (double) first;
@@ -155,9 +164,9 @@ bench_lay (Bench *bench, const AntVerdictWork *work, size_t index)
   if (!bench->value || !bench->z || !bench->buffer || !bench->innovation)
     return ANT_NO_MEMORY;
   memcpy (bench->value, bench->window.value_ppm, n * sizeof *bench->value);
-  for (size_t i = 0; i < n_events (work); i++)
+  for (size_t i = 0; i < n_known (work); i++)
     {
-      const AntDip *other = event_of (work, i);
+      const AntDip *other = known (work, i);
       double apart_d = fabs (other->mid_d - dip->mid_d) - 0.5 * (other->duration_d + dip->duration_d);
       if (i != index && apart_d > LEAVE_D)
         subtract (in, other, &bench->window, bench->value);

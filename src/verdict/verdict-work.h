@@ -18,6 +18,8 @@ typedef struct
   const AntChunk *chunk;
   size_t n_dips, n_brightenings;
   const AntDip *dip, *brightening;
+  size_t n_others;           /* further events that are known and not judged: masked, and taken out where they are not near */
+  const AntDip *other;
   double line_period_d;      /* orbit that events may be locked to; 0: none known */
   int almanac;               /* crossings and eclipses over the whole record are known: those listed, and no others */
   size_t n_crossings, n_eclipses;
