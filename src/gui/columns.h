@@ -1,8 +1,8 @@
-/* columns.h - up to three children side by side as the width allows; those that do not fit wait behind the one in
- * front.
+/* columns.h - three children side by side as the width allows; those that do not fit wait behind the one in front, and
+ * a switch above brings them there.
  *
- * Wide: all. Narrower: the first, and the one in front. Narrow: the one in front alone. "changed" is emitted, on an
- * idle, when the number that is shown has changed. */
+ * Wide: all. Narrower: the first, and the one in front. Narrow: the one in front alone. The property "titles" names them
+ * for the switch: "List|Chart|Dip". */
 #pragma once
 
 #include <gtk/gtk.h>
@@ -12,5 +12,4 @@ G_DECLARE_FINAL_TYPE (AntColumns, ant_columns, ANT, COLUMNS, GtkWidget)
 
 /* Children come from the template, in order. */
 guint ant_columns_get_shown (AntColumns *self);
-guint ant_columns_get_front (AntColumns *self);
 void ant_columns_set_front (AntColumns *self, guint front);

@@ -7,12 +7,17 @@
 #include "gui/closeup-view.h"
 #include "gui/fact-list.h"
 
+#define CLOSEUP_PART 0.58
+#define LEAST_CLOSEUP 84
+#define MOST_CLOSEUP 280
+
 struct _AntDipInspector
 {
   GtkWidget parent_instance;
 
   /* From the template */
   GtkStack *stack;
+  GtkScrolledWindow *scroller;
   GtkLabel *title, *span;
   AntCloseupView *closeup;
   AntFactList *facts, *evidence;
@@ -22,6 +27,7 @@ struct _AntDipInspector
 
   /* Owned */
   AntDesk *desk;
+  guint idle;
   gboolean filling; /* the controls follow the desk, not the user */
 };
 
@@ -76,6 +82,24 @@ show (AntDipInspector *self)
   show_judgement (self, item);
 }
 
+/* The close-up first, at any height: it takes most of what is seen before anything is scrolled. */
+static void
+fit_closeup_cb (gpointer data)
+{
+  AntDipInspector *self = data;
+  double height = CLOSEUP_PART * gtk_adjustment_get_page_size (gtk_scrolled_window_get_vadjustment (self->scroller));
+  self->idle = 0;
+  gtk_widget_set_size_request (GTK_WIDGET (self->closeup), -1, (int) CLAMP (height, LEAST_CLOSEUP, MOST_CLOSEUP));
+}
+
+/* Not at once: sizes are being given out. */
+static void
+height_changed_cb (AntDipInspector *self)
+{
+  if (self->idle == 0)
+    self->idle = g_idle_add_once (fit_closeup_cb, self);
+}
+
 static void
 desk_changed_cb (AntDesk *desk, guint what, AntDipInspector *self)
 {
@@ -118,6 +142,7 @@ ant_dip_inspector_set_desk (AntDipInspector *self, AntDesk *desk)
 static void
 ant_dip_inspector_dispose (GObject *object)
 {
+  g_clear_handle_id (&ANT_DIP_INSPECTOR (object)->idle, g_source_remove);
   g_clear_object (&ANT_DIP_INSPECTOR (object)->desk);
   gtk_widget_dispose_template (GTK_WIDGET (object), ANT_TYPE_DIP_INSPECTOR);
   G_OBJECT_CLASS (ant_dip_inspector_parent_class)->dispose (object);
@@ -133,6 +158,7 @@ ant_dip_inspector_class_init (AntDipInspectorClass *klass)
   gtk_widget_class_set_template_from_resource (widget_class, "/org/antumbra/Antumbra/dip-inspector.ui");
   gtk_widget_class_set_layout_manager_type (widget_class, GTK_TYPE_BIN_LAYOUT);
   gtk_widget_class_bind_template_child (widget_class, AntDipInspector, stack);
+  gtk_widget_class_bind_template_child (widget_class, AntDipInspector, scroller);
   gtk_widget_class_bind_template_child (widget_class, AntDipInspector, title);
   gtk_widget_class_bind_template_child (widget_class, AntDipInspector, span);
   gtk_widget_class_bind_template_child (widget_class, AntDipInspector, closeup);
@@ -150,6 +176,8 @@ ant_dip_inspector_init (AntDipInspector *self)
 {
   self->filling = TRUE;
   gtk_widget_init_template (GTK_WIDGET (self));
+  g_signal_connect_object (gtk_scrolled_window_get_vadjustment (self->scroller), "notify::page-size",
+                           G_CALLBACK (height_changed_cb), self, G_CONNECT_SWAPPED);
   const char *titles[ANT_N_CLASSES + 1] = { NULL };
   for (guint i = 0; i < ANT_N_CLASSES; i++)
     titles[i] = ant_dip_class_title ((AntDipClass) i);

@@ -20,8 +20,6 @@ struct _AntDipsPage
   /* From the template */
   GtkStack *stack;
   AntColumns *columns;
-  GtkWidget *switcher;
-  GtkToggleButton *list_button, *chart_button, *dip_button;
   AntDipTable *table;
   AntFloorView *floor;
   AntDipInspector *inspector;
@@ -31,34 +29,6 @@ struct _AntDipsPage
 };
 
 G_DEFINE_FINAL_TYPE (AntDipsPage, ant_dips_page, GTK_TYPE_WIDGET)
-
-static void
-show_front (AntDipsPage *self, guint front)
-{
-  GtkToggleButton *const buttons[] = { self->list_button, self->chart_button, self->dip_button };
-  gtk_toggle_button_set_active (buttons[front], TRUE);
-  ant_columns_set_front (self->columns, front);
-}
-
-static void
-toggled_cb (AntDipsPage *self, GtkToggleButton *button)
-{
-  if (!gtk_toggle_button_get_active (button))
-    return;
-  guint front = button == self->list_button ? LIST : button == self->chart_button ? CHART : DIP;
-  ant_columns_set_front (self->columns, front);
-}
-
-/* The switch is there when something waits behind something else. */
-static void
-columns_changed_cb (AntDipsPage *self)
-{
-  guint shown = ant_columns_get_shown (self->columns);
-  gtk_widget_set_visible (self->switcher, shown < 3);
-  gtk_widget_set_visible (GTK_WIDGET (self->list_button), shown == 1);
-  if (shown == 2 && ant_columns_get_front (self->columns) == LIST)
-    show_front (self, DIP);
-}
 
 static void
 desk_changed_cb (AntDesk *desk, guint what, AntDipsPage *self)
@@ -81,7 +51,7 @@ ant_dips_page_set_desk (AntDipsPage *self, AntDesk *desk)
 void
 ant_dips_page_focus_note (AntDipsPage *self)
 {
-  show_front (self, DIP);
+  ant_columns_set_front (self->columns, DIP);
   ant_dip_inspector_focus_note (self->inspector);
 }
 
@@ -89,7 +59,7 @@ void
 ant_dips_page_focus_filter (AntDipsPage *self)
 {
   if (ant_columns_get_shown (self->columns) == 1)
-    show_front (self, LIST);
+    ant_columns_set_front (self->columns, LIST);
   ant_dip_table_focus_filter (self->table);
 }
 
@@ -114,19 +84,14 @@ ant_dips_page_class_init (AntDipsPageClass *klass)
   gtk_widget_class_set_layout_manager_type (widget_class, GTK_TYPE_BIN_LAYOUT);
   gtk_widget_class_bind_template_child (widget_class, AntDipsPage, stack);
   gtk_widget_class_bind_template_child (widget_class, AntDipsPage, columns);
-  gtk_widget_class_bind_template_child (widget_class, AntDipsPage, switcher);
-  gtk_widget_class_bind_template_child (widget_class, AntDipsPage, list_button);
-  gtk_widget_class_bind_template_child (widget_class, AntDipsPage, chart_button);
-  gtk_widget_class_bind_template_child (widget_class, AntDipsPage, dip_button);
   gtk_widget_class_bind_template_child (widget_class, AntDipsPage, table);
   gtk_widget_class_bind_template_child (widget_class, AntDipsPage, floor);
   gtk_widget_class_bind_template_child (widget_class, AntDipsPage, inspector);
-  gtk_widget_class_bind_template_callback (widget_class, toggled_cb);
-  gtk_widget_class_bind_template_callback (widget_class, columns_changed_cb);
 }
 
 static void
 ant_dips_page_init (AntDipsPage *self)
 {
   gtk_widget_init_template (GTK_WIDGET (self));
+  ant_columns_set_front (self->columns, DIP);
 }

@@ -32,7 +32,10 @@ ant_event_view_paint (AntPlotView *plot, cairo_t *cr, const AntBox *box, const A
 {
   AntEventView *self = ANT_EVENT_VIEW (plot);
   if (!self->closeup || self->closeup->closeup.n == 0)
-    return;
+    {
+      ant_pen_remark (cr, box, _("The record around the event is drawn here"), theme, scale);
+      return;
+    }
   AntView view;
   ant_dip_closeup_view (&self->closeup->closeup, &view);
   ant_dip_closeup_paint (cr, box, &self->closeup->closeup, &view, theme, scale);

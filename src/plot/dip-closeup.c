@@ -7,6 +7,7 @@
 #include "plot/axes.h"
 #include "plot/key.h"
 
+#define LEAST_FOR_BOTH 7 /* font sizes: a lower close-up shows no residual */
 #define RESIDUAL_PART 0.25 /* of the height */
 
 static void
@@ -223,9 +224,11 @@ ant_dip_closeup_paint (cairo_t *cr, const AntBox *box, const AntDipCloseup *clos
   AntTicks x, y;
   ant_pen_begin (&pen, cr, theme, scale);
   AntBox area = ant_axes_area (box, theme, TRUE), upper = area, lower = area;
+  gboolean both = area.height > LEAST_FOR_BOTH * theme->font_px;
   lower.height = round (RESIDUAL_PART * area.height);
   lower.y = area.y + area.height - lower.height;
-  upper.height = MAX (1, area.height - lower.height - round (1.8 * theme->font_px));
+  if (both)
+    upper.height = MAX (1, area.height - lower.height - round (1.8 * theme->font_px));
   AntRuler across = ant_axes_ruler_x (&pen, &area, theme->font_px, theme->font_px),
            up = ant_axes_ruler_y (&pen, &upper);
   ant_ticks_linear (view->from, view->to, &across, &x);
@@ -238,7 +241,8 @@ ant_dip_closeup_paint (cairo_t *cr, const AntBox *box, const AntDipCloseup *clos
   draw_points (&pen, &upper, view, closeup, closeup->ppm);
   draw_shapes (&pen, &upper, view, closeup);
   cairo_restore (cr);
-  draw_residual (&pen, &lower, view, closeup, &x);
+  if (both)
+    draw_residual (&pen, &lower, view, closeup, &x);
   ant_axes_bottom (&pen, &area, view, &x, TRUE);
   ant_axes_left (&pen, &upper, view, &y);
   const char *title = closeup->title ? closeup->title : _("Residual, ppm");

@@ -7,6 +7,7 @@
 #include "plot/axes.h"
 #include "plot/number-text.h"
 
+#define LEAST_ROWS 3 /* fewer names than these are no key */
 #define CURVE_PX 3 /* spectra of models are smooth */
 
 static const struct
@@ -242,13 +243,29 @@ draw_row (AntPen *pen, size_t r, size_t n_parts, const char *name, double x, dou
   ant_pen_text (pen, name, ANT_TEXT_SMALL, x, y, 0, 0.5);
 }
 
-/* Spectra of the Sun fall: the upper right corner is free for the names, the fit first. Rows that find no room below
- * the middle of the area are left out; in a small chart the times, then all, to keep its room for the curves. */
+/* How far down the corner right of x is free of the fit and of what was measured. */
+static double
+free_down_to (const AntBox *area, const AntSpectrumChart *chart, const AntView *view, double x)
+{
+  double foot = area->y + area->height;
+  for (double at = x; at <= area->x + area->width; at += 3)
+    {
+      double power = ant_noise_model_psd (chart->model, ant_view_at_x (view, area, at)) + chart->white_psd;
+      foot = MIN (foot, ant_view_y (view, area, power));
+    }
+  for (size_t i = 0; i < chart->n; i++)
+    if (!isnan (chart->power[i]) && ant_view_x (view, area, chart->frequency_cd[i]) >= x)
+      foot = MIN (foot, ant_view_y (view, area, chart->power[i]) - 3);
+  return foot;
+}
+
+/* Spectra of the Sun fall: the upper right corner is free for the names, the fit first. Rows that would reach the curve
+ * are left out; in a small chart the times, then all, to keep its room for the curves. */
 static void
-draw_key (AntPen *pen, const AntBox *area, const AntSpectrumChart *chart)
+draw_key (AntPen *pen, const AntBox *area, const AntSpectrumChart *chart, const AntView *view)
 {
   double font = pen->theme->font_px, row = round (1.35 * font), most = 0.45 * area->width, beside = 3.8 * font;
-  size_t n = chart->model->n_parts, rows = MIN (n + 2, (size_t) (0.62 * area->height / row));
+  size_t n = chart->model->n_parts, rows = n + 2;
   g_autofree Name *name = g_new (Name, n + 2);
   double widest = name_rows (pen, chart, TRUE, rows, name);
   if (widest + beside > most)
@@ -256,6 +273,11 @@ draw_key (AntPen *pen, const AntBox *area, const AntSpectrumChart *chart)
   if (widest + beside > most)
     return;
   double x = area->x + area->width - widest - 0.6 * font, top = area->y + 2.2 * font;
+  double room = free_down_to (area, chart, view, x - 3.2 * font) - top;
+  row = CLAMP (floor (room / (double) rows), round (1.1 * font), row);
+  rows = MIN (rows, (size_t) MAX (0, room / row));
+  if (rows < LEAST_ROWS)
+    return;
   AntColour ground = pen->theme->role[ANT_ROLE_PAPER];
   ground.alpha = 0.8;
   ant_pen_set (pen, ground);
@@ -281,7 +303,7 @@ ant_spectrum_chart_paint (cairo_t *cr, const AntBox *box, const AntSpectrumChart
   if (chart->model)
     {
       draw_model (&pen, &area, chart, view);
-      draw_key (&pen, &area, chart);
+      draw_key (&pen, &area, chart, view);
     }
   ant_frame_axes (&frame, &pen, view);
   ant_axes_titles (&pen, &area, _("Power, ppm² per cycle/day"), _("Frequency, cycles per day"));
