@@ -151,7 +151,7 @@ ant_desk_make_marks (AntDesk *self)
       AntDipItem *item = g_ptr_array_index (self->mark_items, i);
       const AntDip *dip = ant_dip_item_get_dip (item);
       AntDipMark mark = { dip->mid_d, dip->duration_d, dip->depth_ppm, ant_dip_item_get_number (item),
-                          ant_dip_item_look (item) };
+                          ant_dip_item_look (item), ant_dip_item_sign (item) };
       g_array_append_val (self->marks, mark);
     }
 }

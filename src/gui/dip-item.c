@@ -128,11 +128,16 @@ ant_dip_item_title (AntDipItem *self)
     }
 }
 
+const char *
+ant_dip_item_sign (AntDipItem *self)
+{
+  return self->kind == ANT_KIND_BRIGHTENING ? "+" : self->kind == ANT_KIND_ASKED ? "?" : "";
+}
+
 char *
 ant_dip_item_label (AntDipItem *self)
 {
-  const char *sign = self->kind == ANT_KIND_BRIGHTENING ? "+" : self->kind == ANT_KIND_ASKED ? "?" : "";
-  return g_strdup_printf ("%s%u", sign, self->number);
+  return g_strdup_printf ("%s%u", ant_dip_item_sign (self), self->number);
 }
 
 AntDipLook

@@ -43,4 +43,5 @@ GPtrArray *ant_dip_item_facts (AntDipItem *self, const AntRecord *record, AntDep
 char *ant_dip_item_title (AntDipItem *self);
 /* The same as short as a list has it: "3", "+1", "?2". Caller frees. */
 char *ant_dip_item_label (AntDipItem *self);
+const char *ant_dip_item_sign (AntDipItem *self); /* "", "+", "?" */
 AntDipLook ant_dip_item_look (AntDipItem *self);

@@ -1,5 +1,12 @@
 /* dip-mark.c - how a dip looks. */
 #include "plot/dip-mark.h"
+#include <stdio.h>
+
+void
+ant_dip_mark_label (const AntDipMark *mark, size_t size, char *text)
+{
+  snprintf (text, size, "%s%u", mark->sign ? mark->sign : "", mark->number);
+}
 
 AntDipLook
 ant_dip_look_of (AntDipClass class)

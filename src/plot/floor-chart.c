@@ -183,7 +183,7 @@ name_dip (Canvas *canvas, size_t d)
   if (!ant_box_holds (&canvas->area, x, y))
     return;
   char number[16];
-  g_snprintf (number, sizeof number, "%u", canvas->chart->dip[d].number);
+  ant_dip_mark_label (&canvas->chart->dip[d], sizeof number, number);
   AntAnchor anchor[] = { { x + off, y, 0, 0.5 }, { x - off, y, 1, 0.5 }, { x, y - off + 2, 0.5, 1 },
                          { x, y + off - 2, 0.5, 0 }, { x + off, y - up, 0, 0.5 }, { x + off, y + up, 0, 0.5 },
                          { x - off, y - up, 1, 0.5 }, { x - off, y + up, 1, 0.5 } };

@@ -113,7 +113,7 @@ mark_dip (AntPen *pen, const AntBox *area, const AntStrip *strip, const AntView 
     return;
   draw_bracket (pen, area, x0, x1, dip->look, d == strip->selected);
   char number[16];
-  g_snprintf (number, sizeof number, "%u", dip->number);
+  ant_dip_mark_label (dip, sizeof number, number);
   AntTextSize size = { ant_pen_measure (pen, number, ANT_TEXT_STRONG).width + 1.4 * font, 1.3 * font };
   double half = size.width / 2, middle = CLAMP ((MAX (x0, area->x) + MIN (x1, far)) / 2, area->x + half, far - half);
   double y = area->y - 0.1 * font;
