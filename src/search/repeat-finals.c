@@ -53,12 +53,29 @@ add_finalist (AntRepeats *repeats, const AntRepeatPeak *peak)
   return ANT_OK;
 }
 
+/* The folds cut strong events, which the climb does not: peaks stand in the spectrum as they were refined. */
+static void
+raise_spectrum (AntRepeats *repeats)
+{
+  for (size_t i = 0; i < repeats->n_peaks; i++)
+    {
+      const AntRepeatPeak *peak = &repeats->peak[i];
+      double period_d = peak->trial.period * repeats->series.step_d, power = peak->sums.snr * peak->sums.snr;
+      AntRepeatCell *cell = ant_repeat_bins_at (&repeats->spectrum, period_d);
+      if (power > cell->power)
+        *cell = (AntRepeatCell){ .power = power, .period_d = period_d, .mid_d = peak->trial.mid * repeats->series.step_d,
+                                 .duration_d = peak->trial.duration * repeats->series.step_d };
+    }
+}
+
 /* Brightenings have no threshold here: the best is told beside the dips. */
 AntStatus
 ant_repeats_choose (AntRepeats *repeats)
 {
   double least = repeats->now ? 0 : NEARLY * repeats->threshold;
   AntStatus status = ANT_OK;
+  if (repeats->round == 0)
+    raise_spectrum (repeats);
   qsort (repeats->peak, repeats->n_peaks, sizeof *repeats->peak, higher_snr);
   for (size_t i = 0; i < repeats->n_peaks && repeats->n_finalists < ANT_REPEAT_FINALISTS && !status; i++)
     if (repeats->peak[i].sums.snr >= least && is_sound (repeats, &repeats->peak[i].sums, NEARLY))

@@ -5,8 +5,9 @@
 #include "core/prefix-sums.h"
 
 #define BEAM 4
-#define MOST_PASSES 60
-#define LAST_STEP 0.0625
+#define MOST_PASSES 80
+#define LAST_STEP 0.0625 /* places */
+#define FINE 0.1         /* of what noise moves a strong train's epoch by, duration over SNR: the last step if that is less */
 
 void
 ant_repeat_train_range (const AntRepeatTrain *train, const AntTrainTrial *trial, long *first, long *end)
@@ -213,7 +214,7 @@ ant_repeat_train_climb (const AntRepeatTrain *train, AntTrainTrial *trial, doubl
     beam[i] = (Point){ .snr = -1 };
   beam[0] = start;
   double h = step, stretch = trial->duration / 6;
-  for (int pass = 0; pass < MOST_PASSES && h >= LAST_STEP; pass++)
+  for (int pass = 0; pass < MOST_PASSES && h >= fmin (LAST_STEP, FINE * beam[0].duration / fmax (beam[0].snr, 1)); pass++)
     {
       Point from[BEAM];
       memcpy (from, beam, sizeof from);

@@ -50,5 +50,5 @@ void ant_repeat_train_range (const AntRepeatTrain *train, const AntTrainTrial *t
 
 /* Climb to the greatest SNR near a trial, at real-valued period, epoch and duration: from steps of step places (of the
  * epoch, and of the slip end to end) and of a sixth of the duration, a beam of four over the 26 neighbours, halved
- * until a sixteenth of a place. Returns the SNR. */
+ * until a sixteenth of a place, or a tenth of the epoch's own error if that is less. Returns the SNR. */
 double ant_repeat_train_climb (const AntRepeatTrain *train, AntTrainTrial *trial, double step, size_t least_events);
