@@ -5,7 +5,6 @@
 #include <math.h>
 #include <string.h>
 
-#include "readers/large-array.h"
 #include "readers/line-source.h"
 #include "readers/text-cell.h"
 #include "readers/text-names.h"
@@ -58,16 +57,16 @@ static void
 set_room (AntTableRows *rows, const AntValueColumns *columns, gsize room)
 {
   rows->room = room;
-  rows->time_d = ant_large_renew (double, rows->time_d, room);
-  rows->line = ant_large_renew (guint32, rows->line, room);
+  rows->time_d = g_renew (double, rows->time_d, room);
+  rows->line = g_renew (guint32, rows->line, room);
   for (guint i = 0; i < columns->n_values; i++)
-    rows->values[i] = ant_large_renew (double, rows->values[i], room);
+    rows->values[i] = g_renew (double, rows->values[i], room);
   for (guint i = 0; i < columns->n_further; i++)
-    rows->further[i] = ant_large_renew (float, rows->further[i], room);
+    rows->further[i] = g_renew (float, rows->further[i], room);
   if (columns->error >= 0)
-    rows->error = ant_large_renew (double, rows->error, room);
+    rows->error = g_renew (double, rows->error, room);
   if (columns->quality >= 0)
-    rows->quality = ant_large_renew (gint64, rows->quality, room);
+    rows->quality = g_renew (gint64, rows->quality, room);
 }
 
 static void

@@ -5,7 +5,6 @@
 #include <string.h>
 
 #include "data/error.h"
-#include "readers/large-array.h"
 
 #define SLICE (512 * 1024)
 #define MOST_SLICES 16
@@ -169,7 +168,7 @@ go_on (Batch *batch, gsize used, const AntTableRows *rows, GError **error)
   if (!batch->at_end && batch->room < BATCH)
     {
       batch->room = BATCH;
-      batch->buffer = ant_large_renew (char, batch->buffer, batch->room + 1 + PADDING);
+      batch->buffer = g_renew (char, batch->buffer, batch->room + 1 + PADDING);
     }
   return TRUE;
 }
