@@ -9,6 +9,7 @@
 #define BLOCK 2880
 #define CARD 80
 #define MOST_FIELDS 999
+#define MOST_HDUS 1000
 #define MOST_AXES 999
 
 typedef struct
@@ -114,10 +115,11 @@ blocks (guint64 n)
 }
 
 gboolean
-ant_fits_headers_check (const char *name, const char *bytes, gsize n, GError **error)
+ant_fits_headers_check (const char *name, const char *bytes, gsize n, int *n_hdus, GError **error)
 {
   gsize at = 0;
-  for (int hdu = 0; n - at >= CARD; hdu++)
+  *n_hdus = 0;
+  for (int hdu = 0; n - at >= CARD && hdu < MOST_HDUS; hdu++)
     {
       Header header;
       guint64 data;
@@ -132,7 +134,8 @@ ant_fits_headers_check (const char *name, const char *bytes, gsize n, GError **e
           g_set_error (error, ANT_ERROR, ANT_ERROR_READ, _("%s: HDU %d: found a number in %s that no header has"), name, hdu, header.wrong);
           return FALSE;
         }
-      if (!cards || !data_size (&header, &data) || blocks (cards) > n - at || blocks (data) > n - at - blocks (cards))
+      *n_hdus += cards && (hdu == 0 || strncmp (bytes + at, "XTENSION", 8) == 0);
+      if (!cards || *n_hdus <= hdu || !data_size (&header, &data) || blocks (cards) > n - at || blocks (data) > n - at - blocks (cards))
         break;
       at += blocks (cards) + blocks (data);
     }

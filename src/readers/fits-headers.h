@@ -5,5 +5,6 @@
 #include <glib.h>
 
 /* FALSE with one sentence if a header's sizes are none (FITS 4.0, section 4.4.1: axes and counts below 0, more than 999 fields); the
- * rest is left to the library. `bytes`: the whole file. */
-gboolean ant_fits_headers_check (const char *name, const char *bytes, gsize n, GError **error);
+ * rest is left to the library. `bytes`: the whole file. *n_hdus: so many have a header that ends; what stands behind them must not be shown to
+ * the library. */
+gboolean ant_fits_headers_check (const char *name, const char *bytes, gsize n, int *n_hdus, GError **error);

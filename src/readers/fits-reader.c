@@ -14,7 +14,6 @@
 #include "readers/text-names.h"
 #include "readers/time-columns.h"
 
-#define MOST_HDUS 1000
 #define MOST_NAMED 8
 
 /* The file for CFITSIO: on the disk where it stands plain, not hashed yet; else in memory. */
@@ -23,6 +22,7 @@ typedef struct
   fitsfile *file;
   void *bytes; /* ours to free, or NULL */
   size_t n_bytes;
+  int n_hdus;  /* that are safe to look at */
 } Input;
 
 /* Rows are read and the file is hashed at the same time. */
@@ -48,7 +48,7 @@ input_open (Input *input, AntByteSource *source, GCancellable *cancellable, GErr
     {
       n = ant_byte_source_file_size (source);
       g_autoptr (GMappedFile) map = g_mapped_file_new (path, FALSE, error);
-      if (!map || !ant_fits_headers_check (name, g_mapped_file_get_contents (map), g_mapped_file_get_length (map), error))
+      if (!map || !ant_fits_headers_check (name, g_mapped_file_get_contents (map), g_mapped_file_get_length (map), &input->n_hdus, error))
         return FALSE;
       fits_open_diskfile (&input->file, path, READONLY, &status);
     }
@@ -56,7 +56,7 @@ input_open (Input *input, AntByteSource *source, GCancellable *cancellable, GErr
     {
       if (!(input->bytes = ant_byte_source_take (source, &n, cancellable, error)))
         return FALSE;
-      if (!ant_fits_headers_check (name, input->bytes, n, error))
+      if (!ant_fits_headers_check (name, input->bytes, n, &input->n_hdus, error))
         return FALSE;
       input->n_bytes = n;
       fits_open_memfile (&input->file, "memory", READONLY, &input->bytes, &input->n_bytes, 0, NULL, &status);
@@ -147,15 +147,14 @@ static AntFitsTable *
 choose_table (const Input *input, const char *path, const AntReadingChoices *choices, AntRecord *record, AntTimeForm *form,
               AntValueColumns *columns, GError **error)
 {
-  int n_hdus = 0, status = 0;
+  int status = 0;
   g_autoptr (GPtrArray) seen = g_ptr_array_new_with_free_func (g_free);
   g_autoptr (GError) first = NULL;
-  fits_get_num_hdus (input->file, &n_hdus, &status); /* as far as they are whole */
   gboolean is_asked = choices && choices->hdu;
-  int asked = is_asked ? asked_hdu (input->file, path, choices->hdu, n_hdus, error) : -1;
+  int asked = is_asked ? asked_hdu (input->file, path, choices->hdu, MAX (input->n_hdus, 1), error) : -1;
   if (is_asked && asked < 0)
     return NULL;
-  for (int hdu = is_asked ? asked : 0; hdu < (is_asked ? asked + 1 : MIN (MAX (n_hdus, 1), MOST_HDUS)); hdu++)
+  for (int hdu = is_asked ? asked : 0; hdu < (is_asked ? asked + 1 : MAX (input->n_hdus, 1)); hdu++)
     {
       int type = IMAGE_HDU;
       g_autoptr (GError) here = NULL;
