@@ -10,6 +10,7 @@
 #include "verdict/rival-start.h"
 
 #define CROSSING_SAMPLES 1024 /* what is quoted of a crossing rests on them */
+#define MOST_WIDER 1.5        /* the posterior than the likelihood's peak, or off it in its sigma */
 
 typedef struct
 {
@@ -203,12 +204,16 @@ tell_quantities (void *data, const double *u, double *quantity)
   return log (quantity[4]);
 }
 
-/* A crossing measured so well that its likelihood alone tells its numbers is quoted by that. */
+/* A crossing measured so well that its likelihood alone tells its numbers is quoted by that; not where the posterior of the impact has
+ * room elsewhere, for there the peak's curvature says too little. */
 static void
 quote_likeliest (const AntRivalBench *bench, AntRivalFit *fit)
 {
   double value[ANT_CROSSING_QUANTITIES], sigma[ANT_CROSSING_QUANTITIES];
   if (ant_crossing_fit (bench, fit->parameter, value, sigma))
+    return;
+  if (fit->sigma[2] > MOST_WIDER * sigma[ANT_CROSSING_IMPACT]
+      || fabs (fit->mean[2] - value[ANT_CROSSING_IMPACT]) > MOST_WIDER * sigma[ANT_CROSSING_IMPACT])
     return;
   for (size_t i = 0; i < ANT_RIVAL_PARAMETERS; i++)
     {
