@@ -19,7 +19,7 @@ ant_closeup_view_desk_changed (AntPlotView *plot, AntDeskChange what)
   AntCloseupView *self = ANT_CLOSEUP_VIEW (plot);
   AntDesk *desk = ant_plot_view_get_desk (plot);
   AntDipItem *item = ant_desk_get_selected (desk);
-  if (!(what & (ANT_DESK_SELECTION | ANT_DESK_RECORD | ANT_DESK_RESULTS)))
+  if (!(what & (ANT_DESK_SELECTION | ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_WITNESS)))
     return;
   g_clear_pointer (&self->data, ant_closeup_data_free);
   if (!item || !ant_desk_get_layers (desk))
@@ -27,9 +27,13 @@ ant_closeup_view_desk_changed (AntPlotView *plot, AntDeskChange what)
   if (ant_dip_item_get_kind (item) == ANT_KIND_PASSAGE)
     self->data = ant_closeup_data_new_passage (ant_desk_get_results (desk), ant_dip_item_get_dip (item));
   else
-    self->data =
-        ant_closeup_data_new (ant_desk_get_layers (desk), ant_desk_get_settings (desk), ant_dip_item_get_dip (item),
-                              ant_dip_item_get_verdict (item));
+    {
+      const AntWitnessStrips *witness = ant_desk_get_witness_strips (desk, 0);
+      self->data = ant_closeup_data_new (ant_desk_get_layers (desk), ant_desk_get_settings (desk), ant_dip_item_get_dip (item),
+                                         ant_dip_item_get_verdict (item));
+      if (witness)
+        ant_closeup_data_add_witness (self->data, witness->comparison, ant_dip_item_get_dip (item));
+    }
   g_autofree char *title = ant_dip_item_title (item);
   ant_plot_view_set_title (plot, title);
 }
@@ -57,7 +61,10 @@ ant_closeup_view_describe (AntPlotView *plot)
   if (ant_dip_item_get_kind (item) == ANT_KIND_PASSAGE)
     return g_strdup_printf (_("The passage's values with the slow part over them: %s, %s long at half depth"), depth,
                             length);
-  return g_strdup_printf (_("The dip's samples with the fitted crossing over them: %s, %s long"), depth, length);
+  return g_strdup_printf (ant_desk_get_witness_strips (desk, 0)
+                              ? _("The dip's samples with the fitted crossing and its rivals over them, what each leaves, and the witness: %s, %s long")
+                              : _("The dip's samples with the fitted crossing and its rivals over them, and what each leaves: %s, %s long"),
+                          depth, length);
 }
 
 static void
@@ -72,7 +79,7 @@ ant_closeup_view_class_init (AntCloseupViewClass *klass)
 {
   AntPlotViewClass *plot_class = ANT_PLOT_VIEW_CLASS (klass);
   G_OBJECT_CLASS (klass)->finalize = ant_closeup_view_finalize;
-  plot_class->watches = ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION;
+  plot_class->watches = ANT_DESK_RECORD | ANT_DESK_RESULTS | ANT_DESK_SELECTION | ANT_DESK_WITNESS;
   plot_class->paint = ant_closeup_view_paint;
   plot_class->describe = ant_closeup_view_describe;
   plot_class->desk_changed = ant_closeup_view_desk_changed;

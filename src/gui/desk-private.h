@@ -82,6 +82,7 @@ struct _AntDesk
   AntDepthUnit unit;
   int average;
   guint shown;
+  char *filter; /* owned; "": everything */
 };
 
 void ant_desk_tell (AntDesk *self, AntDeskChange what);

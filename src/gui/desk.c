@@ -142,7 +142,7 @@ ant_desk_make_marks (AntDesk *self)
   for (guint i = 0; i < n; i++)
     {
       g_autoptr (AntDipItem) item = g_list_model_get_item (G_LIST_MODEL (self->items), i);
-      if (ant_dip_item_get_kind (item) & self->shown)
+      if (ant_desk_keeps (self, item))
         g_ptr_array_add (self->mark_items, item);
     }
   g_ptr_array_sort (self->mark_items, by_time);
@@ -202,22 +202,6 @@ ant_desk_set_average (AntDesk *self, int average)
   ant_desk_tell (self, ANT_DESK_LOOK);
 }
 
-guint
-ant_desk_get_shown (AntDesk *self)
-{
-  return self->shown;
-}
-
-void
-ant_desk_set_shown (AntDesk *self, guint kinds)
-{
-  self->shown = kinds;
-  ant_desk_make_marks (self);
-  if (self->selected && !(ant_dip_item_get_kind (self->selected) & kinds))
-    g_clear_object (&self->selected);
-  ant_desk_tell (self, ANT_DESK_LOOK | ANT_DESK_SELECTION);
-}
-
 static void
 ant_desk_dispose (GObject *object)
 {
@@ -245,6 +229,7 @@ ant_desk_finalize (GObject *object)
   g_array_unref (self->ticks);
   g_ptr_array_unref (self->witnesses);
   g_ptr_array_unref (self->shown_columns);
+  g_free (self->filter);
   ant_observer_choice_unref (self->observer);
   g_ptr_array_unref (self->mark_items);
   g_array_unref (self->mask_spans);
@@ -291,6 +276,7 @@ ant_desk_init (AntDesk *self)
   self->number = ++number;
   self->analysis = ant_analysis_new ();
   self->shown = ANT_KIND_DIP | ANT_KIND_ASKED;
+  self->filter = g_strdup ("");
   self->pointer_d = NAN;
   self->snr_wanted_d = ANT_USUAL_SNR_D;
   self->witness_look = ANT_WITNESS_RATIO;

@@ -158,6 +158,10 @@ int ant_desk_get_average (AntDesk *self); /* index of ant_average_lengths_d, or 
 void ant_desk_set_average (AntDesk *self, int average);
 guint ant_desk_get_shown (AntDesk *self); /* AntDipKind bits */
 void ant_desk_set_shown (AntDesk *self, guint kinds);
+/* Of these, list, chart and strips show those that have the words in their class, shape, note, name or time. */
+const char *ant_desk_get_filter (AntDesk *self);
+void ant_desk_set_filter (AntDesk *self, const char *words); /* "": all */
+gboolean ant_desk_keeps (AntDesk *self, AntDipItem *item);
 
 /* The period that the record is folded on: a repeat's, or one that was chosen. NULL: none. */
 const AntFold *ant_desk_get_fold (AntDesk *self);

@@ -7,9 +7,9 @@
 #include "gui/closeup-view.h"
 #include "gui/fact-list.h"
 
-#define CLOSEUP_PART 0.58
+#define CLOSEUP_PART 0.7
 #define LEAST_CLOSEUP 84
-#define MOST_CLOSEUP 280
+#define MOST_CLOSEUP 340
 
 struct _AntDipInspector
 {

@@ -3,7 +3,6 @@
 
 #include <glib/gi18n.h>
 #include <math.h>
-#include <string.h>
 
 #include "data/verdict-words.h"
 #include "gui/look-icon.h"
@@ -218,27 +217,7 @@ static gboolean
 kept_cb (gpointer object, gpointer data)
 {
   AntDipTable *self = data;
-  AntDipItem *item = object;
-  if (!self->desk || !(ant_dip_item_get_kind (item) & ant_desk_get_shown (self->desk)))
-    return FALSE;
-  g_autofree char *wanted = g_utf8_casefold (gtk_editable_get_text (GTK_EDITABLE (self->search)), -1);
-  g_autofree char *title = ant_dip_item_title (item),
-                  *middle = ant_instant_words (ant_desk_get_record (self->desk), ant_dip_item_get_dip (item)->mid_d);
-  const AntVerdict *verdict = ant_dip_item_get_verdict (item);
-  AntRivalKind ranking[ANT_N_RIVALS];
-  const char *shape = verdict && ant_verdict_ranking (verdict, ranking) > 0 ? ant_rival_title (ranking[0]) : "";
-  g_autofree char *all = g_strjoin ("\n", title, middle, shape, ant_dip_class_title (ant_dip_item_get_shown_class (item)),
-                                    ant_dip_item_get_note (item), NULL);
-  g_autofree char *folded = g_utf8_casefold (all, -1);
-  return strstr (folded, wanted) != NULL;
-}
-
-static void
-refilter (AntDipTable *self)
-{
-  self->following = TRUE;
-  gtk_filter_changed (gtk_filter_list_model_get_filter (self->filtered), GTK_FILTER_CHANGE_DIFFERENT);
-  self->following = FALSE;
+  return self->desk && ant_desk_keeps (self->desk, object);
 }
 
 static void
@@ -310,9 +289,8 @@ kinds_chosen_cb (AntDipTable *self)
 static void
 search_changed_cb (AntDipTable *self)
 {
-  refilter (self);
-  show_emptiness (self);
-  follow_selection (self);
+  if (self->desk)
+    ant_desk_set_filter (self->desk, gtk_editable_get_text (GTK_EDITABLE (self->search)));
 }
 
 static void

@@ -101,6 +101,38 @@ ant_closeup_data_new (const AntLayers *layers, const AntSettings *settings, cons
   return data;
 }
 
+/* Less the straight line through what is farther from the middle than half the dip. */
+static void
+straighten (gsize n, const double *hours, double half_h, double *ppm)
+{
+  double m = 0, t = 0, tt = 0, v = 0, tv = 0;
+  for (gsize i = 0; i < n; i++)
+    if (isfinite (ppm[i]) && fabs (hours[i]) > half_h)
+      {
+        m++;
+        t += hours[i];
+        tt += hours[i] * hours[i];
+        v += ppm[i];
+        tv += hours[i] * ppm[i];
+      }
+  double spread = tt * m - t * t, slope = m > 1 && spread > 0 ? (tv * m - t * v) / spread : 0, middle = m > 0 ? (v - slope * t) / m : 0;
+  for (gsize i = 0; i < n; i++)
+    ppm[i] -= middle + slope * hours[i];
+}
+
+void
+ant_closeup_data_add_witness (AntCloseupData *data, const AntComparison *comparison, const AntDip *dip)
+{
+  g_free (data->other);
+  data->other = g_new (double, 3 * MOST_POINTS);
+  double *hours = data->other, *ppm = hours + MOST_POINTS, *error = ppm + MOST_POINTS;
+  gsize n = ant_dip_closeup_points (comparison->n, comparison->witness_ppm, comparison->start_d, comparison->step_d, dip->mid_d,
+                                    HALF_WIDTH * dip->duration_d, NAN, MOST_POINTS, hours, ppm, error);
+  straighten (n, hours, dip->duration_d / 2 * ANT_HOURS_PER_DAY, ppm);
+  data->witness = (struct AntDipCloseupWitness) { n, hours, ppm, error };
+  data->closeup.witness = &data->witness;
+}
+
 /* The slow part at even steps through the close-up, as far as the record goes. */
 static gsize
 draw_slow (AntCloseupData *data, const AntScanResults *results, const AntDip *passage)
@@ -144,5 +176,6 @@ ant_closeup_data_free (AntCloseupData *data)
     return;
   g_free (data->points);
   g_free (data->curve);
+  g_free (data->other);
   g_free (data);
 }

@@ -1,4 +1,4 @@
-/* dip-closeup.c - points, shapes, residual. */
+/* dip-closeup.c - points, shapes, residuals, witness. */
 #include "plot/dip-closeup.h"
 #include <glib.h>
 #include <glib/gi18n.h>
@@ -8,7 +8,10 @@
 #include "plot/key.h"
 
 #define LEAST_FOR_BOTH 7 /* font sizes: a lower close-up shows no residual */
-#define RESIDUAL_PART 0.25 /* of the height */
+#define RESIDUAL_PART 0.25 /* of the height, of one panel below; of several: */
+#define PANELS_PART 0.6
+#define PANEL_FONTS 3.6     /* least height of a panel, in heights of the font */
+#define MOST_PANELS 5
 
 static void
 add_bin (const float *value, size_t first, size_t last, double zero_h, double step_h, double sigma_ppm, size_t at,
@@ -189,17 +192,14 @@ draw_key (AntPen *pen, const AntBox *area, const AntDipCloseup *closeup, double 
   ant_key_paint (pen, area, closeup->n_shapes, style, keep_px);
 }
 
-/* What the fitted shape leaves, about zero, in a panel of its own. */
+/* A panel of its own below the dip: points about zero on a scale of their own, and lines over them if `shaped`. */
 static void
-draw_residual (AntPen *pen, const AntBox *area, const AntView *view, const AntDipCloseup *closeup, const AntTicks *x)
+draw_panel (AntPen *pen, const AntBox *area, const AntView *view, const AntDipCloseup *points, gboolean shaped, const AntTicks *x,
+            const char *title)
 {
-  g_autofree double *left = g_new (double, MAX (1, closeup->n));
   double most = 0;
-  for (size_t i = 0; i < closeup->n; i++)
-    {
-      left[i] = closeup->n_shapes > 0 ? closeup->ppm[i] - shape_at (&closeup->shape[0], closeup->hours[i]) : NAN;
-      most = isnan (left[i]) ? most : MAX (most, fabs (left[i]) + error_of (closeup, i));
-    }
+  for (size_t i = 0; i < points->n; i++)
+    most = isnan (points->ppm[i]) ? most : MAX (most, fabs (points->ppm[i]) + error_of (points, i));
   AntView below = { view->from, view->to, -1.15 * MAX (most, 1e-6), 1.15 * MAX (most, 1e-6), FALSE, FALSE };
   AntTicks y;
   AntRuler up = ant_axes_ruler_y (pen, area);
@@ -208,12 +208,53 @@ draw_residual (AntPen *pen, const AntBox *area, const AntView *view, const AntDi
   ant_pen_colour (pen, ANT_ROLE_FRAME);
   ant_pen_across (pen, area->x, area->x + area->width, ant_view_y (&below, area, 0));
   ant_pen_clip (pen, area);
-  draw_contacts (pen, area, &below, closeup);
-  draw_points (pen, area, &below, closeup, left);
+  draw_contacts (pen, area, &below, points);
+  draw_points (pen, area, &below, points, points->ppm);
+  if (shaped)
+    draw_shapes (pen, area, &below, points);
   cairo_restore (pen->cr);
   ant_axes_left (pen, area, &below, &y);
   ant_pen_colour (pen, ANT_ROLE_QUIET);
-  ant_pen_text (pen, _("After the fit, ppm"), ANT_TEXT_SMALL, area->x, area->y - 2, 0, 1);
+  ant_pen_text (pen, title, ANT_TEXT_SMALL, area->x, area->y - 2, 0, 1);
+}
+
+/* What a shape leaves. */
+static void
+draw_residual (AntPen *pen, const AntBox *area, const AntView *view, const AntDipCloseup *closeup, size_t s, const AntTicks *x)
+{
+  g_autofree double *left = g_new (double, MAX (1, closeup->n));
+  AntDipCloseup rest = *closeup;
+  for (size_t i = 0; i < closeup->n; i++)
+    left[i] = s < closeup->n_shapes ? closeup->ppm[i] - shape_at (&closeup->shape[s], closeup->hours[i]) : NAN;
+  rest.ppm = left;
+  const char *name = s < closeup->n_shapes ? closeup->shape[s].name : NULL;
+  g_autofree char *title = name && closeup->n_shapes > 1 ? g_strdup_printf (_("After the %s, ppm"), name) : g_strdup (_("After the fit, ppm"));
+  draw_panel (pen, area, view, &rest, FALSE, x, title);
+}
+
+/* The witness's points with the fitted shape over them. */
+static void
+draw_witness (AntPen *pen, const AntBox *area, const AntView *view, const AntDipCloseup *closeup, const AntTicks *x)
+{
+  AntDipCloseup other = *closeup;
+  other.n = closeup->witness->n;
+  other.hours = closeup->witness->hours;
+  other.ppm = closeup->witness->ppm;
+  other.error_ppm = closeup->witness->error_ppm;
+  other.n_shapes = MIN (1, closeup->n_shapes);
+  draw_panel (pen, area, view, &other, TRUE, x, _("Witness, ppm"));
+}
+
+/* How many panels fit below: the witness before what rivals leave, what the fit leaves before both. */
+static size_t
+count_panels (const AntDipCloseup *closeup, double height, double font_px, gboolean *witness)
+{
+  *witness = FALSE;
+  if (height <= LEAST_FOR_BOTH * font_px)
+    return 0;
+  size_t most = (size_t) CLAMP (PANELS_PART * height / (PANEL_FONTS * font_px), 1, MOST_PANELS);
+  *witness = closeup->witness && closeup->witness->n > 0 && most > 1;
+  return MIN (most, MAX (1, closeup->n_shapes) + *witness);
 }
 
 void
@@ -224,11 +265,11 @@ ant_dip_closeup_paint (cairo_t *cr, const AntBox *box, const AntDipCloseup *clos
   AntTicks x, y;
   ant_pen_begin (&pen, cr, theme, scale);
   AntBox area = ant_axes_area (box, theme, TRUE), upper = area, lower = area;
-  gboolean both = area.height > LEAST_FOR_BOTH * theme->font_px;
-  lower.height = round (RESIDUAL_PART * area.height);
-  lower.y = area.y + area.height - lower.height;
-  if (both)
-    upper.height = MAX (1, area.height - lower.height - round (1.8 * theme->font_px));
+  gboolean witness;
+  size_t n_panels = count_panels (closeup, area.height, theme->font_px, &witness);
+  double gap = round (1.8 * theme->font_px), share = n_panels > 1 ? PANELS_PART / (double) n_panels : RESIDUAL_PART;
+  lower.height = MAX (1, round (share * area.height - (n_panels > 1 ? gap : 0)));
+  upper.height = MAX (1, area.height - (double) n_panels * (lower.height + gap));
   AntRuler across = ant_axes_ruler_x (&pen, &area, theme->font_px, theme->font_px),
            up = ant_axes_ruler_y (&pen, &upper);
   ant_ticks_linear (view->from, view->to, &across, &x);
@@ -241,8 +282,14 @@ ant_dip_closeup_paint (cairo_t *cr, const AntBox *box, const AntDipCloseup *clos
   draw_points (&pen, &upper, view, closeup, closeup->ppm);
   draw_shapes (&pen, &upper, view, closeup);
   cairo_restore (cr);
-  if (both)
-    draw_residual (&pen, &lower, view, closeup, &x);
+  for (size_t p = 0; p < n_panels; p++)
+    {
+      lower.y = area.y + area.height - (double) (n_panels - p) * (lower.height + gap) + gap;
+      if (witness && p == 1)
+        draw_witness (&pen, &lower, view, closeup, &x);
+      else
+        draw_residual (&pen, &lower, view, closeup, p - (witness && p > 1), &x);
+    }
   ant_axes_bottom (&pen, &area, view, &x, TRUE);
   ant_axes_left (&pen, &upper, view, &y);
   const char *title = closeup->title ? closeup->title : _("Residual, ppm");

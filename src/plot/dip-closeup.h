@@ -1,5 +1,5 @@
-/* dip-closeup.h - one dip from near: its samples or their averages, the shapes that were tried on it, and what the
- * first of them leaves over. */
+/* dip-closeup.h - one dip from near: its samples or their averages, the shapes that were tried on it, what each of them leaves
+ * over, and what a witness shows at the time. */
 #pragma once
 
 #include "plot/pen.h"
@@ -12,6 +12,13 @@ typedef struct
   const double *ppm;    /* [n] */
 } AntShapeLine;
 
+/* Another record's values at the same time, about their own level beside the dip; the fitted shape is drawn over them. */
+struct AntDipCloseupWitness
+{
+  size_t n;
+  const double *hours, *ppm, *error_ppm; /* [n] as below */
+};
+
 typedef struct
 {
   size_t n;
@@ -19,9 +26,10 @@ typedef struct
   const double *ppm;       /* [n] NaN: not observed */
   const double *error_ppm; /* [n] 1 sigma, or NULL; 0 or NaN: none drawn */
   size_t n_shapes;
-  const AntShapeLine *shape; /* the first is the fitted one, drawn strongest; the residual is taken from it */
+  const AntShapeLine *shape; /* the first is the fitted one, drawn strongest; what each leaves over is drawn below, where there is room */
   double contact_h[2];     /* contacts I and IV, hours; NaN: not marked */
   const char *title;       /* of the values; NULL: "Residual, ppm" */
+  const struct AntDipCloseupWitness *witness; /* the same time in another record; NULL: none */
 } AntDipCloseup;
 
 /* x: hours from the middle, y: ppm; linear. Holds points and shapes. */
