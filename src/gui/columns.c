@@ -4,7 +4,7 @@
 #define GAP 10
 #define WIDE 1000 /* room for all */
 #define MIDDLE 700 /* room for two */
-#define FIRST_SHARE 1.55 /* the first is wider than each other by this */
+#define FIRST_SHARE 1.3 /* the first is wider than each other by this */
 #define MOST 3
 
 enum

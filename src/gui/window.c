@@ -125,6 +125,15 @@ show_record (AntWindow *self)
   show_recent (self);
 }
 
+static void
+append_time_left (GString *text, double seconds)
+{
+  if (seconds < 90)
+    g_string_append_printf (text, _(": %.0f s left"), ceil (seconds));
+  else
+    g_string_append_printf (text, _(": %.0f min left"), ceil (seconds / 60));
+}
+
 static char *
 progress_text (AntDesk *desk)
 {
@@ -144,7 +153,7 @@ progress_text (AntDesk *desk)
   g_string_printf (text, _("Stage %zu of %zu, %s"), progress->stage + 1, progress->n_stages,
                    _ (progress->title));
   if (!isnan (progress->stage_left_s))
-    g_string_append_printf (text, _(": %.0f s left"), ceil (progress->stage_left_s));
+    append_time_left (text, progress->stage_left_s);
   return g_string_free (text, FALSE);
 }
 
@@ -164,6 +173,7 @@ show_status (AntWindow *self)
                           : results                             ? ant_scan_headline (results)
                                                                 : g_strdup (_("Not scanned yet"));
   gtk_label_set_text (self->status, text);
+  gtk_widget_set_tooltip_text (GTK_WIDGET (self->status), busy == ANT_BUSY_NO ? text : NULL); /* all of it, where it is narrow */
   gtk_widget_set_visible (GTK_WIDGET (self->progress), busy != ANT_BUSY_NO);
   if (busy == ANT_BUSY_SCANNING)
     gtk_progress_bar_set_fraction (self->progress, ant_desk_get_progress (self->desk)->fraction);

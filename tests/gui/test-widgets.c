@@ -7,6 +7,7 @@
 #include "gui/columns.h"
 #include "gui/dip-inspector.h"
 #include "gui/dip-table.h"
+#include "gui/event-view.h"
 #include "gui/fold-events.h"
 #include "gui/floor-view.h"
 #include "gui/fold-view.h"
@@ -21,6 +22,7 @@
 #include "gui/settings-row.h"
 #include "gui/spectrum-view.h"
 #include "gui/strip-view.h"
+#include "gui/sun-view.h"
 #include "gui/tail-view.h"
 #include "gui/time-stack.h"
 #include "support.h"
@@ -45,7 +47,8 @@ static void
 every_plot_has_a_name_and_says_what_it_shows (void)
 {
   const GType types[] = { ANT_TYPE_STRIP_VIEW, ANT_TYPE_RIBBON_VIEW, ANT_TYPE_FLOOR_VIEW, ANT_TYPE_SPECTRUM_VIEW,
-                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_CLOSEUP_VIEW, ANT_TYPE_CLOCK_VIEW };
+                          ANT_TYPE_TAIL_VIEW, ANT_TYPE_CLOSEUP_VIEW, ANT_TYPE_CLOCK_VIEW, ANT_TYPE_PERIOD_VIEW,
+                          ANT_TYPE_FOLD_VIEW, ANT_TYPE_EVENT_VIEW, ANT_TYPE_SUN_VIEW };
   AntWindow *window = test_gui_window_scanned ();
   ant_desk_select_mark (ant_window_get_desk (window), 0);
   for (gsize i = 0; i < G_N_ELEMENTS (types); i++)
@@ -84,6 +87,52 @@ every_plot_is_saved_in_every_format (void)
   g_assert_false (ant_plot_view_save (test_gui_find (window, ANT_TYPE_STRIP_VIEW), nowhere, &error));
   g_rmdir (folder);
   test_gui_close (window);
+}
+
+/* Three labels that have some room; which of them are shown, as letters. */
+static char *
+shown_of (AntColumns *columns)
+{
+  GString *text = g_string_new (NULL);
+  for (GtkWidget *child = gtk_widget_get_first_child (GTK_WIDGET (columns)); child; child = gtk_widget_get_next_sibling (child))
+    if (GTK_IS_LABEL (child) && gtk_widget_get_child_visible (child))
+      g_string_append (text, gtk_label_get_text (GTK_LABEL (child)));
+  return g_string_free (text, FALSE);
+}
+
+static void
+expect_columns (int width, const char *const expected[3])
+{
+  const char *ui = "<interface><object class='AntColumns' id='columns'><property name='titles'>First|Second|Third</property>"
+                   "<child><object class='GtkLabel'><property name='label'>a</property></object></child>"
+                   "<child><object class='GtkLabel'><property name='label'>b</property></object></child>"
+                   "<child><object class='GtkLabel'><property name='label'>c</property></object></child></object></interface>";
+  g_autoptr (GtkBuilder) builder = gtk_builder_new_from_string (ui, -1);
+  AntColumns *columns = ANT_COLUMNS (gtk_builder_get_object (builder, "columns"));
+  GtkWindow *window = GTK_WINDOW (gtk_window_new ());
+  gtk_window_set_default_size (window, width, 300);
+  gtk_window_set_child (window, GTK_WIDGET (columns));
+  gtk_window_present (window);
+  test_gui_settle (300);
+  GtkWidget *button = gtk_widget_get_first_child (gtk_widget_get_first_child (GTK_WIDGET (columns)));
+  for (guint i = 0; i < 3; i++, button = gtk_widget_get_next_sibling (button))
+    {
+      if (gtk_widget_get_mapped (button))
+        gtk_toggle_button_set_active (GTK_TOGGLE_BUTTON (button), TRUE);
+      test_gui_settle (100);
+      g_autofree char *shown = shown_of (columns);
+      g_assert_cmpstr (shown, ==, expected[i]);
+    }
+  gtk_window_destroy (window);
+}
+
+static void
+what_waits_behind_is_brought_to_the_front (void)
+{
+  g_type_ensure (ANT_TYPE_COLUMNS);
+  expect_columns (620, (const char *const[]) { "a", "b", "c" });
+  expect_columns (850, (const char *const[]) { "ac", "ab", "ac" });
+  expect_columns (1200, (const char *const[]) { "abc", "abc", "abc" });
 }
 
 static void
@@ -233,6 +282,7 @@ add (void)
   g_test_add_func ("/gui/widgets/every-plot-has-a-name-and-says-what-it-shows",
                    every_plot_has_a_name_and_says_what_it_shows);
   g_test_add_func ("/gui/widgets/every-plot-is-saved-in-every-format", every_plot_is_saved_in_every_format);
+  g_test_add_func ("/gui/widgets/what-waits-behind-is-brought-to-the-front", what_waits_behind_is_brought_to_the_front);
   g_test_add_func ("/gui/widgets/the-list-is-filtered-by-words-and-follows-the-selection",
                    the_list_is_filtered_by_words_and_follows_the_selection);
   g_test_add_func ("/gui/widgets/choosing-a-row-selects-the-dip-everywhere", choosing_a_row_selects_the_dip_everywhere);
