@@ -7,7 +7,8 @@
 #define FINE_BELOW_D 6.0     /* shared fold: four phases to a ramp below this period, two above */
 #define SHARED_DRIFT 4.0     /* phases, end to end, between its trial periods */
 #define WORST_MISFIT 0.08    /* of the pair fit; beyond, a tree for each duration */
-#define DURATION_RATIO 1.5  /* from one tree's duration to the next */
+#define BOX_RATIO 1.5        /* from one tree's duration to the next, in white noise */
+#define TRAPEZOID_RATIO 1.25 /* the same under fitted noise */
 #define STARTS_TO_A_BOX 6.0
 #define BINS_FROM 0.6        /* of the threshold: less is left out of the bins */
 
@@ -124,11 +125,12 @@ static AntStatus
 init_trees (AntRepeats *repeats, AntRepeatSide *side, double *from_d, double *to_d)
 {
   const AntRepeatGrid *grid = &repeats->options.grid;
-  double half = sqrt (DURATION_RATIO), shortest_d, longest_d = ant_repeat_grid_longest (grid), unused, step_d = repeats->series.step_d;
+  double ratio = repeats->options.white ? BOX_RATIO : TRAPEZOID_RATIO, half = sqrt (ratio), shortest_d, unused;
+  double longest_d = ant_repeat_grid_longest (grid), step_d = repeats->series.step_d;
   AntStatus status = ANT_OK;
   ant_repeat_grid_durations (grid, grid->period_min_d, &shortest_d, &unused);
   for (double d = fmin (shortest_d * half, longest_d); d < longest_d * half && side->n_trees < ANT_REPEAT_TREES && !status;
-       d *= DURATION_RATIO)
+       d *= ratio)
     {
       size_t k = side->n_trees;
       ant_repeat_grid_periods (grid, d / half, &from_d[k], &unused);
@@ -139,7 +141,7 @@ init_trees (AntRepeats *repeats, AntRepeatSide *side, double *from_d, double *to
       status = repeats->options.white
                  ? ant_repeat_boxes_init (&side->tree[k], &side->box, d, STARTS_TO_A_BOX, to_d[k])
                  : ant_repeat_boxes_init_edges (&side->tree[k], &side->edges, &repeats->pairs, step_d, d,
-                                                fmin (0.5 * repeats->ramp * step_d, d / STARTS_TO_A_BOX), to_d[k]);
+                                                fmin (repeats->ramp * step_d, d / STARTS_TO_A_BOX), to_d[k]);
       side->n_trees++;
     }
   return status;

@@ -15,7 +15,8 @@
 
 #define SNR 7.0          /* small enough that no event of three is cut, large enough for the floor of the bins */
 #define RAMP_D (20 / ANT_MINUTES_PER_DAY)
-#define RATIO 1.5       /* of the durations of trees, as in the search */
+#define BOX_RATIO 1.5       /* of the durations of trees, as in the search */
+#define TRAPEZOID_RATIO 1.25
 #define FINE_BELOW_D 6.0
 #define WORST_MISFIT 0.08
 
@@ -111,14 +112,15 @@ static double
 trees_best (Study *study, const AntRepeatEdges *edges, const AntRepeatBox *box, const Train *train, double from_d, double to_d,
             AntRepeatBins *bins)
 {
-  double shortest_d, unused, step_d = study->series.step_d, duration_d = train->duration * step_d;
+  double ratio = study->white ? BOX_RATIO : TRAPEZOID_RATIO, shortest_d, unused;
+  double step_d = study->series.step_d, duration_d = train->duration * step_d;
   ant_repeat_grid_durations (&study->grid, study->grid.period_min_d, &shortest_d, &unused);
-  for (double d = shortest_d * sqrt (RATIO); d < 2 * duration_d; d *= RATIO)
+  for (double d = shortest_d * sqrt (ratio); d < 2 * duration_d; d *= ratio)
     if (d > 0.5 * duration_d && from_d > 3 * d)
       {
         AntRepeatBoxes boxes;
         fail (study->white ? ant_repeat_boxes_init (&boxes, box, d, 6, to_d)
-                           : ant_repeat_boxes_init_edges (&boxes, edges, &study->pairs, step_d, d, fmin (0.5 * RAMP_D, d / 6), to_d));
+                           : ant_repeat_boxes_init_edges (&boxes, edges, &study->pairs, step_d, d, fmin (RAMP_D, d / 6), to_d));
         fail (ant_repeat_boxes_search (&boxes, from_d, to_d, 3, NULL, bins));
         ant_repeat_boxes_clear (&boxes);
       }

@@ -12,7 +12,7 @@
 #include "core/units.h"
 #include "models.h"
 #include "search/crossing-shape.h"
-#include "search/repeats.h"
+#include "search/repeat-work.h"
 
 typedef struct
 {
@@ -26,6 +26,7 @@ typedef struct
 typedef struct
 {
   double period_d, mid_d, duration_d, depth_ppm, snr;
+  double at_truth, refined; /* the train's own SNR where it was planted, and the best that the climb from the folds reaches */
 } Planted;
 
 static double
@@ -120,8 +121,19 @@ plant (const Study *study, const AntSeries *series, const AntNoiseModel *model, 
   return planted;
 }
 
+/* After the climb of the first round. */
+static void
+compare (const AntRepeats *repeats, Planted *planted)
+{
+  double step_d = repeats->series.step_d;
+  AntTrainTrial truth = { .period = planted->period_d / step_d, .mid = planted->mid_d / step_d, .duration = planted->duration_d / step_d };
+  planted->at_truth = ant_repeat_train_snr (&repeats->side[0].train, &truth, repeats->options.least_events);
+  for (size_t i = 0; i < repeats->n_peaks; i++)
+    planted->refined = fmax (planted->refined, repeats->peak[i].sums.snr);
+}
+
 static AntRepeats *
-search (const Study *study, const AntSeries *series, const AntChunk *chunk)
+search (const Study *study, const AntSeries *series, const AntChunk *chunk, Planted *planted)
 {
   AntRepeatOptions options = { .grid = { .period_min_d = 0.5, .shortest_factor = 0.2, .longest_factor = 2, .shortest_d = 0.5 / 24 },
                                .least_events = 3, .false_alarms = study->rate, .white = study->model == 'W',
@@ -137,6 +149,8 @@ search (const Study *study, const AntSeries *series, const AntChunk *chunk)
       for (size_t i = 0; i < count && !status; i++)
         status = stages->run_slice (repeats, stage, i);
       double t1 = cpu_s ();
+      if (stage == 2 && !status)
+        compare (repeats, planted);
       status = status ? status : stages->finish (repeats, stage);
       if (getenv ("TELL_STAGES") && count)
         printf ("  %s: %zu slices, %.2f + %.2f s\n", stages->title (repeats, stage), count, t1 - t0, cpu_s () - t1);
@@ -156,7 +170,8 @@ tell (unsigned long seed, const AntRepeats *repeats, const Planted *planted, dou
   printf ("seed %lu: threshold %.3f, %zu listed, mirrored %zu (best %.3f), %.2f s", seed, ant_repeats_threshold (repeats), n,
           n_mirrored, mirrored, cost_s);
   if (planted)
-    printf (", planted P %.5f D %.2f h depth %.2f snr %.2f", planted->period_d, planted->duration_d * 24, planted->depth_ppm, planted->snr);
+    printf (", planted P %.5f D %.2f h depth %.2f snr %.2f, there %.3f, refined %.3f", planted->period_d, planted->duration_d * 24,
+            planted->depth_ppm, planted->snr, planted->at_truth, planted->refined);
   for (size_t i = 0; i < n; i++)
     printf ("; P %.6f +- %.6f D %.2f h depth %.2f +- %.2f snr %.3f (without largest %.2f) events %zu of %zu chi2 %.1f false %.3g",
             repeat[i].period_d, repeat[i].period_sigma_d, repeat[i].duration_d * 24, repeat[i].depth_ppm, repeat[i].depth_sigma_ppm,
@@ -171,6 +186,8 @@ tell (unsigned long seed, const AntRepeats *repeats, const Planted *planted, dou
 typedef struct
 {
   size_t records, listed, mirrored, right;
+  size_t strong, kept; /* realised SNR 8 and more where they were planted; refined to 0.995 of that */
+  double least_kept;
   double snr, depth, depth2; /* sums of ratios to the planted ones, where the period is right */
 } Totals;
 
@@ -183,6 +200,13 @@ count_record (const Study *study, const AntRepeats *repeats, const Planted *plan
   totals->records++;
   totals->listed += n > 0;
   totals->mirrored += ant_repeats_mirrored (repeats, &best);
+  if (planted->at_truth >= 8)
+    {
+      double kept = planted->refined / planted->at_truth;
+      totals->strong++;
+      totals->kept += kept >= 0.995;
+      totals->least_kept = totals->strong == 1 ? kept : fmin (totals->least_kept, kept);
+    }
   if (!(planted->snr > 0) || !n || fabs (repeat->period_d - planted->period_d) * events >= 0.5 * planted->duration_d)
     return;
   double depth = repeat->depth_ppm / planted->depth_ppm;
@@ -198,6 +222,9 @@ tell_totals (const Study *study, const Totals *totals)
   double records = (double) totals->records, right = (double) totals->right, share = (double) (totals->listed + totals->mirrored) / 2 / records;
   printf ("records %zu, with a repeat listed %zu, with a brightening %zu: %.3f +- %.3f of one sign", totals->records, totals->listed,
           totals->mirrored, -log (1 - share), sqrt (share / (1 - share) / 2 / records));
+  if (study->ideal_snr > 0 && !study->glitch)
+    printf (", of %zu with a realised SNR of 8 and more %zu refined to 0.995 of it, the worst to %.4f", totals->strong, totals->kept,
+            totals->least_kept);
   if (study->ideal_snr > 0 && !study->glitch)
     printf (", period right %zu, mean SNR ratio %.4f, mean depth ratio %.4f +- %.4f", totals->right, totals->snr / right, totals->depth / right,
             sqrt (fmax (totals->depth2 / right - pow (totals->depth / right, 2), 0) / right));
@@ -236,7 +263,7 @@ main (int argc, char **argv)
       chunk->own_from = -HUGE_VAL;
       chunk->own_to = HUGE_VAL;
       double t0 = cpu_s ();
-      AntRepeats *repeats = search (&study, &series, chunk);
+      AntRepeats *repeats = search (&study, &series, chunk, &planted);
       tell (seed, repeats, study.ideal_snr > 0 ? &planted : NULL, cpu_s () - t0);
       count_record (&study, repeats, &planted, &totals);
       ant_repeats_free (repeats);
