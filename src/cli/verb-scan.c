@@ -20,7 +20,6 @@
 #include "writers/output-dir.h"
 #include "writers/result-files.h"
 #include "writers/whole-file.h"
-#include "writers/witness-table.h"
 
 typedef struct
 {
@@ -57,25 +56,12 @@ append_names (char ***names, const char *const *more)
 static char **
 names_of (const Options *options, const GPtrArray *comparisons)
 {
-  char **names = ant_result_file_names (&options->choice);
-  g_auto (GStrv) witnesses = ant_witness_names (comparisons->len);
-  append_names (&names, (const char *const *) witnesses);
+  AntResultChoice choice = options->choice;
+  choice.witnesses = comparisons->len;
+  char **names = ant_result_file_names (&choice);
   if (!options->no_report)
     append_names (&names, (const char *const[]){ REPORT, NULL });
   return names;
-}
-
-static gboolean
-add_witnesses (AntOutputDir *dir, const GPtrArray *witnesses, GError **error)
-{
-  g_auto (GStrv) names = ant_witness_names (witnesses->len);
-  for (guint i = 0; i < witnesses->len; i++)
-    {
-      g_autoptr (GString) text = ant_witness_table_text (g_ptr_array_index (witnesses, i));
-      if (!ant_output_dir_add (dir, names[i], text->str, text->len, error))
-        return FALSE;
-    }
-  return TRUE;
 }
 
 /* The analysis as it will stand in the folder. */
@@ -93,13 +79,13 @@ write_all (const Options *options, AntOutputDir *dir, const AntAnalysis *analysi
   const AntScanResults *results = ant_analysis_get_results (analysis);
   const AntJudgements *judgements = ant_analysis_get_judgements (analysis);
   g_autofree char *text = text_for_folder (analysis, options->out);
-  AntFindings findings = { results, judgements, text };
+  AntFindings findings = { results, judgements, text, witnesses };
   gsize size = 0;
   g_autofree AntReportWord *word = ant_report_words (results, judgements);
   g_autoptr (GBytes) report = options->no_report ? NULL : ant_report_bytes (results, word, witnesses, (AntPaper) results->settings.paper, error);
   const char *pages = report ? g_bytes_get_data (report, &size) : NULL;
   return (report || options->no_report) && ant_result_files_add (dir, &findings, &options->choice, error)
-         && (!report || ant_output_dir_add (dir, REPORT, pages, size, error)) && add_witnesses (dir, witnesses, error)
+         && (!report || ant_output_dir_add (dir, REPORT, pages, size, error))
          && ant_output_dir_commit (dir, error);
 }
 

@@ -42,15 +42,6 @@ ant_witness_options_add_to (const AntWitnessOptions *options, GPtrArray *witness
   return TRUE;
 }
 
-char **
-ant_witness_names (guint n)
-{
-  char **names = g_new0 (char *, n + 1);
-  for (guint i = 0; i < n; i++)
-    names[i] = g_strdup_printf ("witness-%u.csv", i + 1);
-  return names;
-}
-
 GPtrArray *
 ant_witnesses_open (GPtrArray *witnesses, AntRecord *record, const AntSettings *settings, GCancellable *cancellable, GError **error)
 {

@@ -15,8 +15,6 @@ void ant_witness_options_add (GOptionContext *context, AntWitnessOptions *option
 void ant_witness_options_clear (AntWitnessOptions *options);
 /* Those that were asked for, onto an array of AntWitness. FALSE with one sentence: more than ANT_MOST_WITNESSES in all. */
 gboolean ant_witness_options_add_to (const AntWitnessOptions *options, GPtrArray *witnesses, GError **error);
-/* "witness-1.csv" ... for so many. Caller g_strfreevs. */
-char **ant_witness_names (guint n);
 /* An array of AntComparison of an array of AntWitness, which learn their sums; a file whose bytes are others than they were is told
  * on standard error. NULL with one sentence. */
 GPtrArray *ant_witnesses_open (GPtrArray *witnesses, AntRecord *record, const AntSettings *settings, GCancellable *cancellable,

@@ -79,7 +79,8 @@ ant_window_save_tables_into (AntWindow *self, const char *folder, gboolean repla
     return;
   if (g_application_get_default ()) /* it stays until the tables are whole, even if its windows are closed */
     g_application_hold (g_application_get_default ());
-  ant_tables_task_async (folder, ant_analysis_snapshot (analysis), replace, tables_cb, g_object_ref (self));
+  g_autoptr (GPtrArray) comparisons = ant_desk_get_comparisons (self->desk);
+  ant_tables_task_async (folder, ant_analysis_snapshot (analysis), comparisons, replace, tables_cb, g_object_ref (self));
 }
 
 static void
@@ -96,7 +97,8 @@ folder_cb (const char *folder, gpointer data)
   g_autoptr (AntWindow) self = data;
   if (!folder)
     return;
-  if (!ant_tables_would_replace (folder))
+  g_autoptr (GPtrArray) comparisons = ant_desk_get_comparisons (self->desk);
+  if (!ant_tables_would_replace (folder, comparisons->len))
     {
       ant_window_save_tables_into (self, folder, FALSE);
       return;

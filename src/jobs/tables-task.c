@@ -4,12 +4,11 @@
 #include "data/analysis-text.h"
 #include "writers/result-files.h"
 
-static const AntResultChoice usual = { 0 };
-
 typedef struct
 {
   char *folder;
   AntAnalysis *analysis;
+  GPtrArray *comparisons;
   gboolean replace;
 } Order;
 
@@ -19,18 +18,21 @@ order_free (gpointer data)
   Order *order = data;
   g_free (order->folder);
   ant_analysis_free (order->analysis);
+  g_ptr_array_unref (order->comparisons);
   g_free (order);
 }
 
 static gboolean
 write_all (const Order *order, GError **error)
 {
-  g_auto (GStrv) names = ant_result_file_names (&usual);
+  const AntResultChoice choice = { .witnesses = order->comparisons->len };
+  g_auto (GStrv) names = ant_result_file_names (&choice);
   g_autoptr (AntOutputDir) dir = ant_output_dir_open (order->folder, (const char *const *) names, order->replace, error);
   g_autofree char *path = g_build_filename (order->folder, ANT_ANALYSIS_FILE_NAME, NULL);
   g_autofree char *text = dir ? ant_analysis_to_text (order->analysis, path) : NULL;
-  AntFindings findings = { ant_analysis_get_results (order->analysis), ant_analysis_get_judgements (order->analysis), text };
-  return dir && ant_result_files_add (dir, &findings, &usual, error) && ant_output_dir_commit (dir, error);
+  AntFindings findings = { ant_analysis_get_results (order->analysis), ant_analysis_get_judgements (order->analysis), text,
+                           order->comparisons };
+  return dir && ant_result_files_add (dir, &findings, &choice, error) && ant_output_dir_commit (dir, error);
 }
 
 static gpointer
@@ -46,12 +48,12 @@ run (gpointer data)
 }
 
 void
-ant_tables_task_async (const char *folder, AntAnalysis *snapshot, gboolean replace, GAsyncReadyCallback callback,
-                       gpointer data)
+ant_tables_task_async (const char *folder, AntAnalysis *snapshot, GPtrArray *comparisons, gboolean replace,
+                       GAsyncReadyCallback callback, gpointer data)
 {
   GTask *task = g_task_new (NULL, NULL, callback, data);
   Order *order = g_new0 (Order, 1);
-  *order = (Order) { g_canonicalize_filename (folder, NULL), snapshot, replace };
+  *order = (Order) { g_canonicalize_filename (folder, NULL), snapshot, g_ptr_array_ref (comparisons), replace };
   g_task_set_source_tag (task, ant_tables_task_async);
   g_task_set_task_data (task, order, order_free);
   g_thread_unref (g_thread_new ("tables", run, task));
@@ -64,9 +66,10 @@ ant_tables_task_finish (GAsyncResult *result, GError **error)
 }
 
 gboolean
-ant_tables_would_replace (const char *folder)
+ant_tables_would_replace (const char *folder, guint n_witnesses)
 {
-  g_auto (GStrv) names = ant_result_file_names (&usual);
+  const AntResultChoice choice = { .witnesses = n_witnesses };
+  g_auto (GStrv) names = ant_result_file_names (&choice);
   for (char **name = names; *name; name++)
     {
       g_autofree char *path = g_build_filename (folder, *name, NULL);

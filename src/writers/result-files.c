@@ -11,6 +11,7 @@
 #include "writers/repeat-table.h"
 #include "writers/scan-tables.h"
 #include "writers/series-table.h"
+#include "writers/witness-table.h"
 
 static const struct
 {
@@ -71,6 +72,12 @@ file_name (AntResultTable which, AntTableFormat format)
   return g_strconcat (tables[which].stem, ant_table_ending (format), NULL);
 }
 
+static char *
+witness_name (guint i)
+{
+  return g_strdup_printf ("witness-%u.csv", i + 1);
+}
+
 char **
 ant_result_file_names (const AntResultChoice *choice)
 {
@@ -87,6 +94,11 @@ ant_result_file_names (const AntResultChoice *choice)
   g_strv_builder_add (names, "flags.csv");
   if (choice->fits)
     g_strv_builder_add (names, "flags.fits");
+  for (guint i = 0; i < choice->witnesses; i++)
+    {
+      g_autofree char *name = witness_name (i);
+      g_strv_builder_add (names, name);
+    }
   g_strv_builder_add (names, ANT_ANALYSIS_FILE_NAME);
   char **all = g_strv_builder_end (names);
   g_strv_builder_unref (names);
@@ -143,6 +155,18 @@ add_flags (AntOutputDir *dir, const AntScanResults *results, const AntResultChoi
   return !mask || add_table (dir, mask, ANT_TABLE_FITS, "flags.fits", error);
 }
 
+static gboolean
+add_witnesses (AntOutputDir *dir, const GPtrArray *comparisons, GError **error)
+{
+  for (guint i = 0; comparisons && i < comparisons->len; i++)
+    {
+      g_autofree char *name = witness_name (i);
+      if (!add_text (dir, ant_witness_table_text (g_ptr_array_index (comparisons, i)), name, error))
+        return FALSE;
+    }
+  return TRUE;
+}
+
 gboolean
 ant_result_files_add (AntOutputDir *dir, const AntFindings *findings, const AntResultChoice *choice, GError **error)
 {
@@ -163,6 +187,6 @@ ant_result_files_add (AntOutputDir *dir, const AntFindings *findings, const AntR
   for (gsize i = 0; i < G_N_ELEMENTS (texts); i++)
     if (!add_text (dir, texts[i].text (results), texts[i].name, error))
       return FALSE;
-  return add_flags (dir, results, choice, error)
+  return add_flags (dir, results, choice, error) && add_witnesses (dir, findings->comparisons, error)
          && (!analysis || ant_output_dir_add (dir, ANT_ANALYSIS_FILE_NAME, analysis, strlen (analysis), error));
 }

@@ -1,6 +1,7 @@
 /* result-files.h - the tables that a scan leaves in its folder: which there are, and in which formats. */
 #pragma once
 
+#include "data/comparison.h"
 #include "data/scan-results.h"
 #include "writers/output-dir.h"
 #include "writers/table.h"
@@ -10,6 +11,7 @@ typedef struct
 {
   gboolean fits, votable; /* the tables of dips, brightenings, passages and repeats so too; fits: those of periods and flags likewise */
   gboolean series;        /* the detrended series as well */
+  guint witnesses;        /* so many tables of comparisons */
 } AntResultChoice;
 
 /* "fits", "votable" or both with a comma between. FALSE with one sentence. */
@@ -20,6 +22,7 @@ typedef struct
   const AntScanResults *results;
   const AntJudgements *judgements; /* or NULL */
   const char *analysis;            /* the text of analysis.antumbra; NULL: it is not written */
+  const GPtrArray *comparisons;    /* of AntComparison, as many as were chosen, or NULL */
 } AntFindings;
 #define ANT_ANALYSIS_FILE_NAME "analysis.antumbra"
 
