@@ -5,8 +5,9 @@
 #include <math.h>
 #include <string.h>
 
-#include "jobs/record-open.h"
+#include "data/record-slip.h"
 #include "data/scan-results.h"
+#include "jobs/record-open.h"
 #include "search/crossing-shape.h"
 
 #define COLUMNS_MARK "::"
@@ -63,7 +64,8 @@ ant_witness_job_fact (const AntComparison *comparison, const AntSettings *settin
   double sigma;
   ptrdiff_t first;
   gsize n;
-  g_autofree double *loss = shape_for (witness, settings, dip, dip->mid_d - comparison->shift_d, &first, &n);
+  double mid_d = dip->mid_d - comparison->shift_d;
+  g_autofree double *loss = shape_for (witness, settings, dip, mid_d - ant_record_slip (witness, mid_d), &first, &n);
   *fact = (AntWitnessFact){ .depth_ppm = (double) NAN, .sigma_ppm = (double) NAN };
   fact->correlation = ant_comparison_correlation (comparison, dip->duration_d, &sigma);
   if (n == 0 || ant_scan_asked_shape (&witness->series, &options, first, n, loss, &seen))
