@@ -4,6 +4,7 @@
 #include <stdio.h>
 #include <string.h>
 
+#include "data/verdict-words.h"
 #include "support.h"
 
 static AntDesk *
@@ -314,6 +315,29 @@ an_asked_dip_is_measured_and_selected (void)
   g_assert_cmpint (ant_dip_item_get_kind (item), ==, ANT_KIND_ASKED);
   g_assert_cmpfloat_with_epsilon (ant_dip_item_get_dip (item)->depth_ppm, 900, 90);
   g_assert_cmpfloat (ant_dip_item_get_upper_limit_ppm (item), >, ant_dip_item_get_dip (item)->depth_ppm);
+  g_assert_nonnull (ant_dip_item_get_verdict (item));
+  g_assert_cmpint (ant_verdict_class (ant_dip_item_get_verdict (item)), ==, ANT_CLASS_PLANET_SHAPED);
+}
+
+/* By the class that is shown, the shape, and what the analyst wrote; the marks of chart and strips follow. */
+static void
+a_filter_holds_for_the_marks_too (void)
+{
+  g_autoptr (AntDesk) desk = desk_with_record ();
+  const AntDipMark *mark;
+  ant_desk_ask (desk, TEST_DIP_D - 3 / 24.0, TEST_DIP_D + 3 / 24.0);
+  test_gui_wait (has_item, desk, 60);
+  ant_desk_note (desk, "Seen by eye");
+  const char *const kept[] = { "", "PLANET-shaped", "crossing", "by eye" };
+  for (gsize i = 0; i < G_N_ELEMENTS (kept); i++)
+    {
+      ant_desk_set_filter (desk, kept[i]);
+      g_assert_cmpuint (ant_desk_get_marks (desk, &mark), ==, 1);
+      g_assert_nonnull (ant_desk_get_selected (desk));
+    }
+  ant_desk_set_filter (desk, "instrument");
+  g_assert_cmpuint (ant_desk_get_marks (desk, &mark), ==, 0);
+  g_assert_null (ant_desk_get_selected (desk));
 }
 
 static void
@@ -368,6 +392,7 @@ add (void)
   g_test_add_func ("/gui/desk/one-can-go-back-through-views", one_can_go_back_through_views);
   g_test_add_func ("/gui/desk/a-long-drag-is-one-step-back", a_long_drag_is_one_step_back);
   g_test_add_func ("/gui/desk/an-asked-dip-is-measured-and-selected", an_asked_dip_is_measured_and_selected);
+  g_test_add_func ("/gui/desk/a-filter-holds-for-the-marks-too", a_filter_holds_for_the_marks_too);
   g_test_add_func ("/gui/desk/selecting-brings-a-dip-into-view", selecting_brings_a_dip_into_view);
   g_test_add_func ("/gui/desk/the-readout-tells-time-value-and-residual", the_readout_tells_time_value_and_residual);
   g_test_add_func ("/gui/desk/a-span-grows-by-keys-about-the-middle-of-the-view",

@@ -225,6 +225,31 @@ the_closeup_shows_the_shape_lower_in_the_dip (void)
   ant_canvas_clear (&scene.canvas);
 }
 
+/* Fitted shape, witness with that shape over it, one rival: each below the other, in a picture high enough. */
+static void
+the_closeup_has_a_panel_for_the_witness (void)
+{
+  Scene scene;
+  AntView view;
+  double hours[] = { -4, -3, -2, -1, 0, 1, 2, 3, 4 }, ppm[] = { 0, 2, -1, -98, -101, -99, 1, 0, -2 };
+  double shape_h[] = { -4, -1.5, -1.5, 1.5, 1.5, 4 }, shape[] = { 0, 0, -100, -100, 0, 0 };
+  AntShapeLine line[2] = { { "fitted", 6, shape_h, shape }, { "rival", 6, shape_h, shape } };
+  struct AntDipCloseupWitness witness = { 9, hours, ppm, NULL };
+  AntDipCloseup closeup = { 9, hours, ppm, NULL, 2, line, { -1.5, 1.5 } };
+  int lines[2];
+  for (int with = 0; with < 2; with++)
+    {
+      scene_open (&scene);
+      closeup.witness = with ? &witness : NULL;
+      ant_dip_closeup_view (&closeup, &view);
+      ant_dip_closeup_paint (scene.canvas.cr, &box, &closeup, &view, &scene.theme, 1);
+      lines[with] = seen (&scene, scene.theme.role[ANT_ROLE_CURVE]);
+      ant_canvas_clear (&scene.canvas);
+    }
+  g_assert_cmpint (lines[0], >, 100);
+  g_assert_cmpint (lines[1], >, lines[0] + 50);
+}
+
 static void
 the_clock_chart_has_a_dot_for_every_bin_with_values (void)
 {
@@ -272,5 +297,6 @@ main (int argc, char **argv)
                    closeup_points_are_single_samples_where_there_is_room);
   g_test_add_func ("/plot/charts/the-closeup-shows-the-shape-lower-in-the-dip",
                    the_closeup_shows_the_shape_lower_in_the_dip);
+  g_test_add_func ("/plot/charts/the-closeup-has-a-panel-for-the-witness", the_closeup_has_a_panel_for_the_witness);
   return g_test_run ();
 }
