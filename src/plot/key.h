@@ -13,6 +13,6 @@ typedef struct
 
 /* Make the style the pen's: colour and dash. Width goes to ant_pen_polyline. */
 void ant_line_style_set (AntPen *pen, const AntLineStyle *style);
-/* Names from right to left, the first leftmost; those that would come nearer than `keep_px` to the left end are left
- * out. */
+/* Names side by side up to the right end, the first leftmost; where they would come nearer than `keep_px` to the left
+ * end the last are left out. */
 void ant_key_paint (AntPen *pen, const AntBox *area, size_t n, const AntLineStyle *style, double keep_px);
