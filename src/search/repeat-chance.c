@@ -12,8 +12,8 @@
 #define TAIL_STEPS 40
 
 /* The calibration: see docs/search.md. */
-#define YIELD 0.9
-#define WHITE_YIELD 0.08
+#define YIELD 0.78
+#define WHITE_YIELD 0.06
 
 enum { SHAPE, MOVED, LONGER, WITH_MOVED, WITH_LONGER };
 
